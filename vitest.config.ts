@@ -1,0 +1,25 @@
+import { defineConfig } from 'vitest/config';
+
+export default defineConfig({
+  test: {
+    projects: [
+      {
+        test: {
+          name: 'unit',
+          include: ['packages/*/src/**/*.test.ts', 'apps/*/src/**/*.test.ts', 'tests/architecture/**/*.test.ts'],
+        },
+        resolve: { alias: { '@': new URL('./apps/mobile/src', import.meta.url).pathname } },
+      },
+      { test: { name: 'reference', include: ['tests/reference/**/*.test.ts'] } },
+      {
+        test: {
+          name: 'api',
+          include: ['tests/api/**/*.test.ts'],
+          globalSetup: ['tests/support/postgres.ts'],
+          testTimeout: 20_000,
+          hookTimeout: 60_000,
+        },
+      },
+    ],
+  },
+});
