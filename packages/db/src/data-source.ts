@@ -1,0 +1,67 @@
+import 'reflect-metadata';
+import { DataSource } from 'typeorm';
+import { Account } from './entities/accounts/account';
+import { Session } from './entities/accounts/session';
+import { EmailToken } from './entities/accounts/email-token';
+import { Fishery } from './entities/fisheries/fishery';
+import { FisheryRole } from './entities/fisheries/fishery-role';
+import { Invitation } from './entities/fisheries/invitation';
+import { Lake } from './entities/lakes/lake';
+import { Peg } from './entities/lakes/peg';
+import { Mark } from './entities/lakes/mark';
+import { GaugeBoard } from './entities/lakes/gauge-board';
+import { LevelReading } from './entities/lakes/level-reading';
+import { Photo } from './entities/files/photo';
+import { Booking } from './entities/bookings/booking';
+import { SurveyVisit } from './entities/surveys/survey-visit';
+import { CastImport } from './entities/surveys/cast-import';
+import { SurveyCast } from './entities/surveys/survey-cast';
+import { ChartBuild } from './entities/charts/chart-build';
+import { Spot } from './entities/charts/spot';
+import { Chart } from './entities/charts/chart';
+import { AccountsAndFisheries1780000000000 } from './migrations/1780000000000-AccountsAndFisheries';
+import { LakesAndPegs1780000001000 } from './migrations/1780000001000-LakesAndPegs';
+import { SurveysAndCharts1780000002000 } from './migrations/1780000002000-SurveysAndCharts';
+
+const ENTITIES = [
+  Account,
+  Session,
+  EmailToken,
+  Fishery,
+  FisheryRole,
+  Invitation,
+  Lake,
+  Peg,
+  Mark,
+  GaugeBoard,
+  LevelReading,
+  Photo,
+  Booking,
+  SurveyVisit,
+  CastImport,
+  SurveyCast,
+  ChartBuild,
+  Spot,
+  Chart,
+];
+
+/** Every migration in the order it runs. A new one is added at the end, never edited once merged. */
+const MIGRATIONS = [
+  AccountsAndFisheries1780000000000,
+  LakesAndPegs1780000001000,
+  SurveysAndCharts1780000002000,
+];
+
+/** A pool of connections to one database, opened by the caller with `initialize()`. */
+export function makeDataSource(url: string, poolSize = 10): DataSource {
+  return new DataSource({
+    type: 'postgres',
+    url,
+    entities: ENTITIES,
+    migrations: MIGRATIONS,
+    migrationsTransactionMode: 'all',
+    synchronize: false,
+    logging: false,
+    extra: { max: poolSize },
+  });
+}
