@@ -1,0 +1,68 @@
+import { distanceBetweenM, type Point } from './plane';
+import { segmentCrossing, nearestOnSegment } from './shore-distance';
+
+type Side = { a: Point; b: Point; ring: number; index: number; sides: number; minXM: number; maxXM: number };
+
+/** Two sides that meet where they must not: which rings they belong to and where. */
+export type Crossing = { rings: readonly [number, number]; at: Point };
+
+/** Sides nearer than this to one another are taken to touch: far below what any survey or tracing can tell. */
+const TOUCH_M = 1e-6;
+
+/**
+ * The first places where rings cross or touch themselves or one another, at most one for each pair of rings.
+ * Rings are open, metres. Sides are swept from west to east, so a traced shore of n points costs about n·√n.
+ */
+export function ringCrossings(rings: readonly (readonly Point[])[]): Crossing[] {
+  const found = new Map<string, Crossing>();
+  const open: Side[] = [];
+  for (const side of sidesFromWest(rings)) {
+    let kept = 0;
+    for (const other of open) {
+      if (other.maxXM < side.minXM - TOUCH_M) continue;
+      open[kept++] = other;
+      const pair = `${other.ring}-${side.ring}`;
+      if (found.has(pair)) continue;
+      const at = meeting(other, side);
+      if (at) found.set(pair, { rings: [other.ring, side.ring], at });
+    }
+    open.length = kept;
+    open.push(side);
+  }
+  return [...found.values()];
+}
+
+function sidesFromWest(rings: readonly (readonly Point[])[]): Side[] {
+  const sides: Side[] = [];
+  rings.forEach((points, ring) => {
+    points.forEach((a, index) => {
+      const b = points[(index + 1) % points.length] ?? a;
+      const minXM = Math.min(a.xM, b.xM);
+      sides.push({ a, b, ring, index, sides: points.length, minXM, maxXM: Math.max(a.xM, b.xM) });
+    });
+  });
+  return sides.sort((p, q) => p.minXM - q.minXM);
+}
+
+function meeting(p: Side, q: Side): Point | null {
+  if (Math.max(p.a.yM, p.b.yM) < Math.min(q.a.yM, q.b.yM) - TOUCH_M) return null;
+  if (Math.max(q.a.yM, q.b.yM) < Math.min(p.a.yM, p.b.yM) - TOUCH_M) return null;
+  if (p.ring === q.ring) {
+    if ((p.index + 1) % p.sides === q.index) return foldBack(p, q);
+    if ((q.index + 1) % q.sides === p.index) return foldBack(q, p);
+  }
+  const share = segmentCrossing([p.a, p.b], [q.a, q.b]);
+  if (share !== null)
+    return { xM: p.a.xM + share * (p.b.xM - p.a.xM), yM: p.a.yM + share * (p.b.yM - p.a.yM) };
+  return [q.a, q.b].find((end) => near(end, p)) ?? [p.a, p.b].find((end) => near(end, q)) ?? null;
+}
+
+function near(point: Point, side: Side): boolean {
+  return distanceBetweenM(point, nearestOnSegment(point, side.a, side.b)) < TOUCH_M;
+}
+
+/** Neighbouring sides share a corner; they only clash when the second runs straight back over the first. */
+function foldBack(first: Side, second: Side): Point | null {
+  const back = near(second.b, first) || near(first.a, second);
+  return back && first.sides > 2 ? second.b : null;
+}
