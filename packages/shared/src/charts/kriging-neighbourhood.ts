@@ -1,0 +1,228 @@
+import { priorVarianceM2, requireDrift } from './kriging-setup';
+import type { KrigingSetup, Prediction } from './kriging-setup';
+import type { Targets } from './sample-points';
+import { indexSamples, NearestSearch } from './sample-index';
+import { covariancesInPlace } from './variogram';
+
+export type NeighbourhoodOptions = {
+  neighbours: number;
+  /** Leave sample t out when predicting target t; the targets are then the samples themselves. */
+  leaveOneOut?: boolean;
+};
+
+/**
+ * Kriging from the k nearest samples of each target. Because it uses a subset of the samples, its variance is never below
+ * that of the global solve with the same variogram. The factor of a neighbourhood is kept while the next target has the
+ * same neighbours, which is the common case along a row of a fine grid.
+ */
+export function krigeNeighbourhood(
+  setup: KrigingSetup,
+  targets: Targets,
+  options: NeighbourhoodOptions,
+): Prediction {
+  requireDrift(setup, targets);
+  const count = targets.xM.length;
+  const valuesM = new Float64Array(count);
+  const varianceM2 = new Float64Array(count);
+  const most = Math.min(options.neighbours, setup.samples.xM.length - (options.leaveOneOut === true ? 1 : 0));
+  if (most < 1) throw new RangeError('Kriging needs at least one neighbour.');
+  const search = new NearestSearch(indexSamples(setup.samples.xM, setup.samples.yM), most);
+  const local = new LocalSystem(setup, most);
+  for (let t = 0; t < count; t++) {
+    if (options.leaveOneOut === true) search.without = t;
+    search.find(targets.xM[t]!, targets.yM[t]!);
+    local.gather(search.ids, search.found);
+    local.predict(targets.xM[t]!, targets.yM[t]!, targets.driftM?.[t] ?? 0);
+    valuesM[t] = local.valueM;
+    varianceM2[t] = local.varianceM2;
+  }
+  return { valuesM, varianceM2 };
+}
+
+/** One neighbourhood's system: packed lower Cholesky factor and the solved vectors. All buffers are reused. */
+class LocalSystem {
+  valueM = 0;
+  varianceM2 = 0;
+  private order = 0;
+  private readonly ids: Int32Array;
+  private readonly sorted: Int32Array;
+  private readonly factor: Float64Array; // row i at i (i + 1) / 2; the diagonal holds reciprocals
+  private readonly solvedOnes: Float64Array;
+  private readonly solvedDrift: Float64Array;
+  private readonly residual: Float64Array; // L⁻¹ (z − F β)
+  private readonly row: Float64Array;
+  private trendInverse = [0, 0, 0];
+  private coefficients = [0, 0];
+  private readonly prior: number;
+  private readonly driftM: Float64Array | undefined;
+
+  constructor(
+    private readonly setup: KrigingSetup,
+    most: number,
+  ) {
+    this.ids = new Int32Array(most).fill(-1);
+    this.sorted = new Int32Array(most);
+    this.factor = new Float64Array((most * (most + 1)) / 2);
+    this.solvedOnes = new Float64Array(most);
+    this.solvedDrift = new Float64Array(most);
+    this.residual = new Float64Array(most);
+    this.row = new Float64Array(most);
+    this.prior = priorVarianceM2(setup);
+    this.driftM = setup.driftM;
+  }
+
+  /** Takes the neighbours, ascending, and factorises unless they are those already held. */
+  gather(found: Int32Array, count: number): void {
+    const { sorted, ids } = this;
+    for (let i = 0; i < count; i++) {
+      const id = found[i]!;
+      let slot = i;
+      while (slot > 0 && sorted[slot - 1]! > id) {
+        sorted[slot] = sorted[slot - 1]!;
+        slot--;
+      }
+      sorted[slot] = id;
+    }
+    let same = this.order === count;
+    for (let i = 0; same && i < count; i++) same = ids[i] === sorted[i];
+    if (same) return;
+    ids.set(sorted);
+    this.order = count;
+    this.fillCovariances();
+    let jitterM2 = 0;
+    while (!this.factorise()) {
+      jitterM2 = jitterM2 === 0 ? 1e-10 * this.prior : jitterM2 * 100;
+      if (!(jitterM2 <= this.prior))
+        throw new RangeError('Samples at one place with no error stated cannot be kriged.');
+      this.fillCovariances();
+      for (let i = 0; i < count; i++)
+        this.factor[(i * (i + 3)) / 2] = this.factor[(i * (i + 3)) / 2]! + jitterM2;
+    }
+    this.solveTrend();
+  }
+
+  private fillCovariances(): void {
+    const { factor, ids, order } = this;
+    const { xM, yM, errorVarianceM2 } = this.setup.samples;
+    let p = 0;
+    for (let i = 0; i < order; i++) {
+      const x = xM[ids[i]!]!;
+      const y = yM[ids[i]!]!;
+      for (let j = 0; j <= i; j++, p++) {
+        const dx = xM[ids[j]!]! - x;
+        const dy = yM[ids[j]!]! - y;
+        factor[p] = dx * dx + dy * dy;
+      }
+    }
+    covariancesInPlace(factor, p, this.setup.variogram);
+    const { nuggetM2 } = this.setup.variogram;
+    for (let i = 0; i < order; i++) {
+      const diagonal = (i * (i + 3)) / 2;
+      factor[diagonal] = factor[diagonal]! + nuggetM2 + errorVarianceM2[ids[i]!]!;
+    }
+  }
+
+  private factorise(): boolean {
+    const { factor, order } = this;
+    for (let i = 0, rowI = 0; i < order; rowI += ++i) {
+      for (let j = 0, rowJ = 0; j < i; rowJ += ++j) {
+        let sum = factor[rowI + j]!;
+        for (let k = 0; k < j; k++) sum -= factor[rowI + k]! * factor[rowJ + k]!;
+        factor[rowI + j] = sum * factor[rowJ + j]!;
+      }
+      let pivot = factor[rowI + i]!;
+      for (let k = 0; k < i; k++) pivot -= factor[rowI + k]! * factor[rowI + k]!;
+      if (!(pivot > 0)) return false;
+      factor[rowI + i] = 1 / Math.sqrt(pivot);
+    }
+    return true;
+  }
+
+  private forward(x: Float64Array): void {
+    const { factor, order } = this;
+    for (let i = 0, row = 0; i < order; row += ++i) {
+      let sum = x[i]!;
+      for (let k = 0; k < i; k++) sum -= factor[row + k]! * x[k]!;
+      x[i] = sum * factor[row + i]!;
+    }
+  }
+
+  private solveTrend(): void {
+    const { ids, order, solvedOnes, solvedDrift, residual } = this;
+    for (let i = 0; i < order; i++) {
+      solvedOnes[i] = 1;
+      solvedDrift[i] = this.driftM === undefined ? 0 : this.driftM[ids[i]!]!;
+      residual[i] = this.setup.samples.valueM[ids[i]!]!;
+    }
+    this.forward(solvedOnes);
+    this.forward(residual);
+    if (this.driftM !== undefined) this.forward(solvedDrift);
+    const oo = this.dotOf(solvedOnes, solvedOnes);
+    const od = this.dotOf(solvedOnes, solvedDrift);
+    const dd = this.dotOf(solvedDrift, solvedDrift);
+    const oz = this.dotOf(solvedOnes, residual);
+    const dz = this.dotOf(solvedDrift, residual);
+    const determinant = oo * dd - od * od;
+    // A drift that is level over this neighbourhood says nothing here: it falls back to ordinary kriging.
+    if (this.driftM === undefined || !(determinant > 1e-9 * oo * dd)) {
+      this.trendInverse = [1 / oo, 0, 0];
+      this.coefficients = [oz / oo, 0];
+    } else {
+      this.trendInverse = [dd / determinant, -od / determinant, oo / determinant];
+      this.coefficients = [(dd * oz - od * dz) / determinant, (oo * dz - od * oz) / determinant];
+    }
+    const [constant, slope] = [this.coefficients[0]!, this.coefficients[1]!];
+    for (let i = 0; i < order; i++) {
+      residual[i] = residual[i]! - constant * solvedOnes[i]! - slope * solvedDrift[i]!;
+    }
+  }
+
+  private dotOf(a: Float64Array, b: Float64Array): number {
+    let sum = 0;
+    for (let i = 0; i < this.order; i++) sum += a[i]! * b[i]!;
+    return sum;
+  }
+
+  predict(x: number, y: number, drift: number): void {
+    const { ids, order, row, factor, solvedOnes, solvedDrift, residual } = this;
+    const { xM, yM } = this.setup.samples;
+    let coincident = -1;
+    for (let i = 0; i < order; i++) {
+      const dx = xM[ids[i]!]! - x;
+      const dy = yM[ids[i]!]! - y;
+      const h2 = dx * dx + dy * dy;
+      row[i] = h2;
+      if (h2 === 0) coincident = i;
+    }
+    covariancesInPlace(row, order, this.setup.variogram);
+    if (coincident >= 0 && this.setup.nuggetIs === 'field') {
+      row[coincident] = row[coincident]! + this.setup.variogram.nuggetM2;
+    }
+    let known = 0;
+    let ones = 0;
+    let drifts = 0;
+    let value = 0;
+    for (let i = 0, start = 0; i < order; start += ++i) {
+      let sum = row[i]!;
+      for (let k = 0; k < i; k++) sum -= factor[start + k]! * row[k]!;
+      const u = sum * factor[start + i]!;
+      row[i] = u;
+      known += u * u;
+      ones += u * solvedOnes[i]!;
+      drifts += u * solvedDrift[i]!;
+      value += u * residual[i]!;
+    }
+    const shortOne = 1 - ones;
+    const shortDrift = drift - drifts;
+    const [a, b, c] = [this.trendInverse[0]!, this.trendInverse[1]!, this.trendInverse[2]!];
+    this.valueM = value + this.coefficients[0]! + this.coefficients[1]! * drift;
+    this.varianceM2 = Math.max(
+      0,
+      this.prior -
+        known +
+        a * shortOne * shortOne +
+        2 * b * shortOne * shortDrift +
+        c * shortDrift * shortDrift,
+    );
+  }
+}
