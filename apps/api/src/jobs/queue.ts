@@ -1,0 +1,27 @@
+import type { EntityManager } from 'typeorm';
+import PgBoss from 'pg-boss';
+import type { JobName, Jobs } from '../ctx';
+
+const QUEUES: Record<JobName, { retryLimit: number; retryDelay: number; expireInSeconds: number }> = {
+  'mail.send': { retryLimit: 8, retryDelay: 5, expireInSeconds: 60 },
+  'chart.build': { retryLimit: 2, retryDelay: 5, expireInSeconds: 900 },
+  'photo.resize': { retryLimit: 2, retryDelay: 5, expireInSeconds: 180 },
+};
+
+export async function openQueue(databaseUrl: string): Promise<PgBoss> {
+  const boss = new PgBoss({ connectionString: databaseUrl, max: 4 });
+  await boss.start();
+  for (const [name, policy] of Object.entries(QUEUES))
+    await boss.createQueue(name, { name, ...policy, retryBackoff: true });
+  return boss;
+}
+
+/** Jobs as rows of the deed's own transaction: rolled back with it, run only once it is committed. */
+export function jobsOn(boss: PgBoss): Jobs {
+  return {
+    async send(tx: EntityManager, name, payload) {
+      const executeSql = async (text: string, values: unknown[]) => ({ rows: await tx.query(text, values) });
+      await boss.send(name, payload, { ...QUEUES[name], retryBackoff: true, db: { executeSql } });
+    },
+  };
+}
