@@ -1,5 +1,8 @@
 import { z } from 'zod';
+import { PhotoView } from '../files/contract';
 import { Position } from '../fisheries/contract';
+
+export { AddPhoto, PhotoView } from '../files/contract';
 
 const words = (max: number) => z.string().trim().max(max);
 
@@ -107,10 +110,36 @@ export const RecordLevel = z.strictObject({
   note: words(300),
 });
 export type RecordLevel = z.infer<typeof RecordLevel>;
+
+/** What the reader of a fresh reading is told: an alarm of the board, a jump that may be a misread figure. */
+export const LevelWarning = z.object({
+  kind: z.enum(['alarm_high', 'alarm_low', 'outside_normal', 'jump', 'older_than_newest']),
+  words: z.string(),
+});
+export type LevelWarning = z.infer<typeof LevelWarning>;
+/** Answer of POST /api/boards/:boardId/readings. The reading is kept either way; DELETE /api/readings/:readingId takes a misread one back. */
+export const LevelRecorded = z.object({
+  reading: LevelReadingView,
+  warnings: z.array(LevelWarning),
+});
+export type LevelRecorded = z.infer<typeof LevelRecorded>;
+
+/**
+ * The newest reading of the datum board. `levelM` rises with the water whichever way the board is painted, so
+ * depth today = depth at datum + levelM − datumM; `boardReadsM` is what stands on the board.
+ */
+export const LevelNow = z.object({
+  levelM: z.number(),
+  at: z.iso.datetime(),
+  boardCode: z.string(),
+  boardReadsM: z.number(),
+});
+export type LevelNow = z.infer<typeof LevelNow>;
+
 export const GaugeBoardView = z.object({
   id: z.uuid(),
   details: GaugeBoardDetails,
-  readings: z.array(LevelReadingView), // newest first, at most 60
+  readings: z.array(LevelReadingView), // newest first, at most 60; `by` and `note` are empty unless the reader is staff
   version: z.int(),
 });
 export type GaugeBoardView = z.infer<typeof GaugeBoardView>;
@@ -128,19 +157,6 @@ export type MarkDetails = z.infer<typeof MarkDetails>;
 /** PUT /api/lakes/:lakeId/marks/:markId */
 export const PutMark = z.strictObject({ details: MarkDetails, version: z.int().nullable() });
 export type PutMark = z.infer<typeof PutMark>;
-
-export const PhotoView = z.object({
-  id: z.uuid(),
-  state: z.enum(['waiting', 'ready', 'refused']),
-  caption: z.string(),
-  takenOn: z.iso.date().nullable(),
-  smallUrl: z.string().nullable(),
-  largeUrl: z.string().nullable(),
-  widthPx: z.int().nullable(),
-  heightPx: z.int().nullable(),
-  refusal: z.string().nullable(),
-});
-export type PhotoView = z.infer<typeof PhotoView>;
 
 export const MarkView = z.object({
   id: z.uuid(),
@@ -199,7 +215,8 @@ export const PegDetails = z.strictObject({
     heightM: z.number().min(0).max(100).nullable(),
     operator: words(120),
     signFitted: z.boolean(),
-    fishing: z.enum(['ok', 'restricted', 'no_fishing']),
+    fishing: z.enum(['ok', 'restricted', 'no_fishing']), // within 30 m never 'ok'
+    document: words(200).optional(), // the risk assessment on file and its date; without one no ticket within 30 m
   }),
   hazards: z.array(words(120).min(1)).max(30),
   tackleLimits: words(400),
@@ -217,13 +234,17 @@ export const PegDetails = z.strictObject({
   }),
 });
 export type PegDetails = z.infer<typeof PegDetails>;
-/** POST /api/lakes/:lakeId/pegs, PUT /api/pegs/:pegId */
+/** POST /api/lakes/:lakeId/pegs (the new peg is last in walking order), PUT /api/pegs/:pegId */
 export const MakePeg = z.strictObject({ id: z.uuid(), details: PegDetails });
 export type MakePeg = z.infer<typeof MakePeg>;
 export const ChangePeg = z.strictObject({ details: PegDetails, version: z.int() });
 export type ChangePeg = z.infer<typeof ChangePeg>;
 
-/** Staff view of a peg: GET /api/pegs/:pegId/details */
+/** PUT /api/lakes/:lakeId/peg-order: every peg of the lake once, in the order they are walked. */
+export const OrderPegs = z.strictObject({ pegIds: z.array(z.uuid()).min(1).max(1000) });
+export type OrderPegs = z.infer<typeof OrderPegs>;
+
+/** GET /api/pegs/:pegId/details (open; what the reader may not see is empty) */
 export const PegView = z.object({
   id: z.uuid(),
   lakeId: z.uuid(),
@@ -256,14 +277,15 @@ export const LakeView = z.object({
   details: LakeDetails,
   origin: Position, // of the lake's local plane
   areaM2: z.number(),
-  levelNow: z.object({ levelM: z.number(), at: z.iso.datetime(), boardCode: z.string() }).nullable(),
+  levelNow: LevelNow.nullable(),
   pegs: z.array(PegListItem),
   marks: z.array(MarkView),
   boards: z.array(GaugeBoardView),
   publishedChart: z.object({ id: z.uuid(), version: z.string() }).nullable(),
   version: z.int(),
   may: z.object({
-    change: z.boolean(),
+    change: z.boolean(), // the lake itself
+    changePegs: z.boolean(), // pegs, marks, boards, photos
     recordLevel: z.boolean(),
     survey: z.boolean(),
     buildCharts: z.boolean(),
@@ -271,11 +293,3 @@ export const LakeView = z.object({
   }),
 });
 export type LakeView = z.infer<typeof LakeView>;
-
-/** POST /api/pegs/:pegId/photos and /api/marks/:markId/photos: multipart, field `photo`, with `id`, `caption`, `takenOn`. 202 PhotoView. */
-export const AddPhoto = z.strictObject({
-  id: z.uuid(),
-  caption: words(200),
-  takenOn: z.iso.date().nullable(),
-});
-export type AddPhoto = z.infer<typeof AddPhoto>;
