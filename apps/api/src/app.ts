@@ -3,6 +3,7 @@ import cookieParser from 'cookie-parser';
 import express, { Router, type Express } from 'express';
 import helmet from 'helmet';
 import type pino from 'pino';
+import { demoMail } from './demo/mail-page';
 import { health } from './http/health';
 import { limitAll } from './http/limits';
 import { logRequests } from './http/logging';
@@ -10,10 +11,11 @@ import { openapi } from './http/openapi';
 import { answerProblem, nothingHere } from './http/problem';
 import { standOn, type Server } from './http/server';
 import { serveWeb } from './http/web';
+import type { Capture } from './mail/capture';
 import { routes } from './routes';
 
-/** The whole server as one Express application; nothing listens yet. */
-export function makeApp(server: Server, logger: pino.Logger): Express {
+/** The whole server as one Express application; nothing listens yet. Caught mail is shown by the demo alone. */
+export function makeApp(server: Server, logger: pino.Logger, capture: Capture | null = null): Express {
   const app = express();
   standOn(app, server);
   app.set('trust proxy', server.config.trustProxy);
@@ -33,6 +35,7 @@ export function makeApp(server: Server, logger: pino.Logger): Express {
   );
   app.use(logRequests(logger));
   app.use('/api', apiRouter());
+  if (capture && server.config.demo) app.use('/demo', demoMail(capture));
   app.use(serveWeb(server.config.webDir), nothingHere, answerProblem);
   return app;
 }

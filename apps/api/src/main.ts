@@ -3,9 +3,11 @@ import { readFileSync } from 'node:fs';
 import { createServer } from 'node:http';
 import { makeApp } from './app';
 import { readConfig, type Config } from './config';
+import { handlers } from './handlers';
 import { makeLogger } from './http/logging';
 import { jobsOn, openQueue } from './jobs/queue';
 import { work } from './jobs/worker';
+import { openCapture } from './mail/capture';
 
 /** The instant of CLOCK_FILE when a test sets one, else the machine's. */
 function clockOf(config: Config): () => Date {
@@ -14,13 +16,16 @@ function clockOf(config: Config): () => Date {
 }
 
 async function main(): Promise<void> {
-  const config = readConfig(process.env);
-  const logger = makeLogger(config);
+  const settings = readConfig(process.env);
+  const logger = makeLogger(settings);
+  const capture = settings.smtpUrl ? null : await openCapture();
+  if (capture) logger.warn('SMTP_URL is not set: mail is caught here and reaches nobody');
+  const config = capture ? { ...settings, smtpUrl: capture.url } : settings;
   const source = await makeDataSource(config.databaseUrl).initialize();
   const boss = await openQueue(config.databaseUrl);
   const server = { config, source, jobs: jobsOn(boss), clock: clockOf(config) };
-  const worker = await work(boss, server, logger);
-  const http = createServer(makeApp(server, logger));
+  const worker = await work({ boss, server, logger, handlers });
+  const http = createServer(makeApp(server, logger, capture));
   http.listen(config.port, config.host, () => {
     logger.info({ port: config.port }, 'listening');
   });
@@ -33,6 +38,7 @@ async function main(): Promise<void> {
     await new Promise((done) => http.close(done)); // what is under way may finish
     await worker.stop();
     await boss.stop({ graceful: true, timeout: 10_000 });
+    await capture?.close();
     await source.destroy();
   };
   for (const signal of ['SIGTERM', 'SIGINT'] as const) process.on(signal, () => void close());

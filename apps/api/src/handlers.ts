@@ -1,0 +1,7 @@
+import type { Handlers } from './jobs/worker';
+import { sendMail } from './mail/jobs';
+
+/** What does each kind of queued job, word by word. */
+export const handlers: Handlers = {
+  'mail.send': sendMail,
+};

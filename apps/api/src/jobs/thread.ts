@@ -1,0 +1,24 @@
+import { createRequire } from 'node:module';
+import { fileURLToPath, pathToFileURL } from 'node:url';
+import { Worker } from 'node:worker_threads';
+
+/** The entries that run beside the server; each is `<name>.worker.ts` in the source and `<name>.worker.js` in the bundle. */
+export type ThreadName = 'charts/build' | 'files/resize';
+
+const source = import.meta.url.endsWith('.ts');
+
+/** Where a thread's entry lies: beside the bundle once built, in its word's folder before. */
+export function threadEntry(name: ThreadName): { url: URL; execArgv: string[] } {
+  if (!source) return { url: new URL(`./${name}.worker.js`, import.meta.url), execArgv: [] };
+  const loader = createRequire(fileURLToPath(import.meta.url)).resolve('tsx');
+  return {
+    url: new URL(`../${name}.worker.ts`, import.meta.url),
+    execArgv: ['--import', pathToFileURL(loader).href],
+  };
+}
+
+/** Starts a thread for heavy work. What it is given and answers must survive structured cloning. */
+export function openThread(name: ThreadName, workerData: unknown): Worker {
+  const { url, execArgv } = threadEntry(name);
+  return new Worker(url, { workerData, execArgv });
+}
