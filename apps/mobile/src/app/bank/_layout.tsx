@@ -1,0 +1,1 @@
+export { BankGate as default } from '@/features/accounts/place-gate';

@@ -1,0 +1,1 @@
+export { OfficeGate as default } from '@/features/accounts/place-gate';

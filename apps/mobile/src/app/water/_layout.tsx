@@ -1,0 +1,1 @@
+export { Slot as default } from 'expo-router';

@@ -1,0 +1,67 @@
+import type { ReactNode } from 'react';
+import { usePathname } from 'expo-router';
+import { ScrollView, View } from 'react-native';
+import { EmergencyLine } from '@/components/emergency-line';
+import { PageHead, type PageHeadProps } from '@/components/page-head';
+import { space } from '@/constants/layout';
+import { themed } from '@/hooks/themed';
+import { usePageTitle } from '@/hooks/use-page-title';
+
+const useStyles = themed((c) => ({
+  page: { flex: 1, minHeight: 0, minWidth: 0, backgroundColor: c.paper },
+  scroll: { flex: 1 },
+  inside: { flexGrow: 1, paddingHorizontal: space.page, width: '100%', alignSelf: 'center' },
+  content: { flexGrow: 1, gap: space.large, paddingBottom: space.large },
+  actions: {
+    flexDirection: 'row',
+    flexWrap: 'wrap',
+    gap: space.small,
+    paddingHorizontal: space.page,
+    paddingVertical: space.medium,
+    borderTopWidth: 1,
+    borderTopColor: c.rule,
+    backgroundColor: c.paper,
+  },
+}));
+
+const widths = { reading: 700, wide: 1440 } as const;
+
+type Props = Omit<PageHeadProps, 'path'> & {
+  /** `reading` keeps lines short; `wide` is for tables and things side by side. */
+  width?: keyof typeof widths | undefined;
+  /** The page does not scroll: its one child fills what is left, as a chart does. */
+  fill?: boolean | undefined;
+  /** Stand at the foot within reach of the thumb: the one main act last. Give each button `grow`. */
+  actions?: ReactNode;
+  children: ReactNode;
+};
+
+/** Every screen's frame: the main landmark, one level-1 heading, the way back, the main act, the emergency line. */
+export function Page({ width = 'reading', fill = false, actions, children, ...head }: Props) {
+  const styles = useStyles();
+  const path = usePathname();
+  usePageTitle(head.title);
+  return (
+    <View role="main" nativeID="main" tabIndex={-1} style={styles.page}>
+      {fill ? (
+        <>
+          <View style={{ paddingHorizontal: space.page }}>
+            <PageHead {...head} path={path} />
+          </View>
+          <View style={{ flex: 1, minHeight: 0 }}>{children}</View>
+        </>
+      ) : (
+        <ScrollView
+          key={path}
+          style={styles.scroll}
+          contentContainerStyle={[styles.inside, { maxWidth: widths[width] }]}
+        >
+          <PageHead {...head} path={path} />
+          <View style={styles.content}>{children}</View>
+          <EmergencyLine />
+        </ScrollView>
+      )}
+      {actions ? <View style={styles.actions}>{actions}</View> : null}
+    </View>
+  );
+}

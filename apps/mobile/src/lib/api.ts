@@ -1,0 +1,99 @@
+import { SignedIn } from '@mereward/shared/accounts/contract';
+import { Problem } from '@mereward/shared/problems/problem';
+import type { z } from 'zod';
+import { problemOf } from '@/lib/answer';
+import { oneAtATime } from '@/lib/one-at-a-time';
+import { sessionStore } from '@/lib/session-store';
+
+type Method = 'GET' | 'POST' | 'PUT' | 'PATCH' | 'DELETE';
+type Ask = { method: Method; body?: unknown; signal?: AbortSignal | undefined };
+
+/** On the web the program and its API share an address; a phone's build names it. */
+const ORIGIN = process.env.EXPO_PUBLIC_API_URL ?? '';
+
+/** The address of something under the API, for links and pictures: `apiUrl('/pegs/…/card.pdf')`. */
+export const apiUrl = (path: string): string => `${ORIGIN}/api${path}`;
+
+function send(path: string, { method, body, signal }: Ask): Promise<Response> {
+  const token = sessionStore.token(Date.now());
+  const form = typeof FormData !== 'undefined' && body instanceof FormData;
+  return fetch(apiUrl(path), {
+    method,
+    credentials: 'same-origin',
+    headers: {
+      Accept: 'application/json',
+      'X-Mereward': '1', // a page of another site cannot set this without asking first
+      ...(token ? { Authorization: `Bearer ${token}` } : {}),
+      ...(body === undefined || form ? {} : { 'Content-Type': 'application/json' }),
+    },
+    ...(body === undefined ? {} : { body: form ? body : JSON.stringify(body) }),
+    ...(signal ? { signal } : {}),
+  });
+}
+
+let refreshing: Promise<boolean> | null = null;
+
+async function askAnew(): Promise<boolean> {
+  const response = await send('/accounts/session/refresh', { method: 'POST' });
+  if (response.ok) {
+    sessionStore.enter(SignedIn.parse(await response.json()), Date.now());
+    return true;
+  }
+  const problem = await problemOf(response);
+  if (problem.kind !== 'not-signed-in') throw problem; // the server is in trouble: nobody is signed out for that
+  sessionStore.leave();
+  return false;
+}
+
+/** Gets a fresh access token from the cookie; false when there is no sign-in any more. Many callers, one request. */
+export function refreshSession(): Promise<boolean> {
+  refreshing ??= oneAtATime('mereward.refresh', askAnew).finally(() => {
+    refreshing = null;
+  });
+  return refreshing;
+}
+
+/** Sends a request with a good token where there is a sign-in, and once more when the token has just gone stale. */
+async function ask(path: string, request: Ask): Promise<Response> {
+  const known = sessionStore.get().account !== null;
+  if (known && sessionStore.token(Date.now()) === null) await refreshSession();
+  const response = await send(path, request);
+  if (response.status === 401 && known && sessionStore.get().account !== null) {
+    sessionStore.forgetToken();
+    if (await refreshSession()) return send(path, request);
+  }
+  return response;
+}
+
+async function answer<T>(path: string, schema: z.ZodType<T>, request: Ask): Promise<T> {
+  const response = await ask(path, request);
+  if (!response.ok) throw await problemOf(response);
+  const body: unknown = response.status === 204 ? undefined : await response.json();
+  const parsed = schema.safeParse(body);
+  if (parsed.success) return parsed.data;
+  throw new Problem('internal', 'The server’s answer could not be read', {
+    detail: 'This page may be older than the server. Load it again.',
+  });
+}
+
+/**
+ * The API, typed by its contracts: `api.get('/lakes', LakeList)`. Paths start below `/api`. A refusal is thrown as
+ * a `Problem`; no signal at all as the fetch's own TypeError. For an answer without content pass `z.undefined()`.
+ */
+export const api = {
+  get: <T>(path: string, schema: z.ZodType<T>, signal?: AbortSignal) =>
+    answer(path, schema, { method: 'GET', signal }),
+  post: <T>(path: string, body: unknown, schema: z.ZodType<T>) =>
+    answer(path, schema, { method: 'POST', body }),
+  put: <T>(path: string, body: unknown, schema: z.ZodType<T>) =>
+    answer(path, schema, { method: 'PUT', body }),
+  patch: <T>(path: string, body: unknown, schema: z.ZodType<T>) =>
+    answer(path, schema, { method: 'PATCH', body }),
+  del: <T>(path: string, schema: z.ZodType<T>) => answer(path, schema, { method: 'DELETE' }),
+  /** A file, such as a card or an export, which a plain link could not fetch without the token. */
+  file: async (path: string): Promise<Blob> => {
+    const response = await ask(path, { method: 'GET' });
+    if (!response.ok) throw await problemOf(response);
+    return response.blob();
+  },
+};
