@@ -266,7 +266,14 @@ export const VisitView = z.object({
 });
 export type VisitView = z.infer<typeof VisitView>;
 
-/** GET /api/visits/:visitId: the visit, its casts in order, and coverage by peg. */
+/** GET /api/lakes/:lakeId/visits: newest first. */
+export const VisitList = z.object({ visits: z.array(VisitView), may: z.object({ open: z.boolean() }) });
+export type VisitList = z.infer<typeof VisitList>;
+
+/**
+ * GET /api/visits/:visitId: the visit, its casts in order, and coverage by peg. GET …/casts.csv is the same as a
+ * table. DELETE …/casts/:castId takes the last one back.
+ */
 export const VisitWithCasts = z.object({
   visit: VisitView,
   casts: z.array(CastView),
