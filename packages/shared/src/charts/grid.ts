@@ -18,11 +18,11 @@ const CELL_STEPS_M = [0.5, 0.6, 0.75, 1, 1.25, 1.5, 2, 2.5, 3, 4, 5] as const;
 /** The one test of whether a grid's value was surveyed. */
 export const isSurveyed = (value: number): boolean => !Number.isNaN(value);
 
-/** Smallest cell of 0.5–5 m with which the points' bounding box fits 400 × 400 cells with a cell to spare all round. */
+/** Smallest cell of 0.5–5 m with which the points' bounding box fits 400 × 400 cells with two cells to spare all round. */
 export function chooseCellM(points: readonly Point[]): number {
   const { widthM, heightM } = boundsOf(points);
   const longestM = Math.max(widthM, heightM);
-  const cellM = CELL_STEPS_M.find((step) => longestM <= step * (MAX_CELLS_A_SIDE - 3));
+  const cellM = CELL_STEPS_M.find((step) => longestM <= step * (MAX_CELLS_A_SIDE - 6));
   if (cellM === undefined) {
     throw new RangeError(
       `A water ${Math.round(longestM)} m across does not fit one chart of ${MAX_CELLS_A_SIDE} cells of 5 m; draw it as two.`,
@@ -31,15 +31,15 @@ export function chooseCellM(points: readonly Point[]): number {
   return cellM;
 }
 
-/** Frame over the points' bounding box with one spare cell all round, its corner on a whole multiple of the cell. */
+/** Frame over the points' bounding box with two spare cells all round, its corner on a whole multiple of the cell. */
 export function frameOver(points: readonly Point[], cellM: number): GridFrame {
   const { westM, southM, widthM, heightM } = boundsOf(points);
   const originM = {
-    xM: (Math.floor(westM / cellM) - 1) * cellM,
-    yM: (Math.floor(southM / cellM) - 1) * cellM,
+    xM: (Math.floor(westM / cellM) - 2) * cellM,
+    yM: (Math.floor(southM / cellM) - 2) * cellM,
   };
-  const columns = Math.ceil((westM + widthM - originM.xM) / cellM) + 2;
-  const rows = Math.ceil((southM + heightM - originM.yM) / cellM) + 2;
+  const columns = Math.ceil((westM + widthM - originM.xM) / cellM) + 3;
+  const rows = Math.ceil((southM + heightM - originM.yM) / cellM) + 3;
   return { columns, rows, cellM, originM };
 }
 

@@ -101,7 +101,7 @@ function levelsReached(levels: Float64Array, value: number): number {
 /** A corner without a survey never joins two corners across a saddle. */
 function middleDeepIn({ values, columns }: Grid, levels: Float64Array): LevelField['middleDeep'] {
   return (node, k) =>
-    (values[node]! + values[node + 1]! + values[node + columns]! + values[node + columns + 1]!) / 4 >=
+    (values[node]! + values[node + 1]! + values[node + columns]! + values[node + columns + 1]!) / 4 >
     levels[k]!;
 }
 

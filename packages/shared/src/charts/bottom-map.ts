@@ -1,0 +1,131 @@
+import type { GridFrame } from './grid';
+import { indexSamples } from './sample-index';
+
+/** A cast's own answer about the bottom: a probability for each class, in the order of the class list, summing to 1. */
+export type BottomEvidence = { xM: number; yM: number; shares: readonly number[] };
+
+/** Most likely class of each cell (its place in the class list; 255 unknown) and how likely, 0–1 (0 where unknown). */
+export type ClassGrid = GridFrame & { classes: Uint8Array; confidence: Float64Array };
+
+export const UNKNOWN_CLASS = 255;
+/** Weight of the prior, in casts, spread evenly over the classes: half a cast that could be anything. */
+const PRIOR_CASTS = 0.5;
+/** A class less likely than this is not told: the place stays unknown. */
+export const LEAST_CONFIDENCE = 0.4;
+const BANDWIDTHS_M = [2, 3, 4, 5, 6, 8, 10, 13] as const;
+/** Used below ten casts, too few to score. Common practice, no published source. */
+export const USUAL_BANDWIDTH_M = 5;
+const FEWEST_TO_SCORE = 10;
+const REACH = 3; // bandwidths beyond which a cast's weight, under 1.2 %, is left out
+
+/** Every node unknown. */
+export function unknownBottom(frame: GridFrame): ClassGrid {
+  const count = frame.columns * frame.rows;
+  const { columns, rows, cellM, originM } = frame;
+  return {
+    columns,
+    rows,
+    cellM,
+    originM,
+    classes: new Uint8Array(count).fill(UNKNOWN_CLASS),
+    confidence: new Float64Array(count),
+  };
+}
+
+/**
+ * Kernel-weighted Dirichlet estimate at the given nodes: α_c = α₀ + Σ w p_c with w = e^(−d²/2b²) over the casts nearby, and
+ * P(c) = α_c / Σα, so confidence falls with distance and the unvisited stays unknown. Distances and b in metres.
+ */
+export function bottomMap(
+  evidence: readonly BottomEvidence[],
+  nodes: BottomNodes,
+  bandwidthM: number,
+): ClassGrid {
+  const map = unknownBottom(nodes.frame);
+  if (evidence.length === 0) return map;
+  const classes = evidence[0]!.shares.length;
+  const table = shareTable(evidence);
+  const xM = Float64Array.from(evidence, (e) => e.xM);
+  const yM = Float64Array.from(evidence, (e) => e.yM);
+  const index = indexSamples(xM, yM);
+  const reachM = REACH * bandwidthM;
+  const alpha = new Float64Array(classes);
+  for (let t = 0; t < nodes.nodes.length; t++) {
+    const x = nodes.xM[t]!;
+    const y = nodes.yM[t]!;
+    alpha.fill(PRIOR_CASTS / classes);
+    const west = Math.max(0, Math.floor((x - reachM - index.westM) / index.bucketM));
+    const east = Math.min(index.columns - 1, Math.floor((x + reachM - index.westM) / index.bucketM));
+    const south = Math.max(0, Math.floor((y - reachM - index.southM) / index.bucketM));
+    const north = Math.min(index.rows - 1, Math.floor((y + reachM - index.southM) / index.bucketM));
+    let total = PRIOR_CASTS;
+    for (let row = south; row <= north && west <= east; row++) {
+      const from = index.starts[row * index.columns + west]!;
+      const to = index.starts[row * index.columns + east + 1]!;
+      for (let m = from; m < to; m++) {
+        const id = index.members[m]!;
+        const d2 = (xM[id]! - x) ** 2 + (yM[id]! - y) ** 2;
+        if (d2 > reachM * reachM) continue;
+        const weight = Math.exp(-d2 / (2 * bandwidthM * bandwidthM));
+        total += weight;
+        for (let c = 0; c < classes; c++) alpha[c] = alpha[c]! + weight * table[id * classes + c]!;
+      }
+    }
+    let best = 0;
+    for (let c = 1; c < classes; c++) if (alpha[c]! > alpha[best]!) best = c;
+    const confidence = alpha[best]! / total;
+    if (confidence < LEAST_CONFIDENCE) continue;
+    map.classes[nodes.nodes[t]!] = best;
+    map.confidence[nodes.nodes[t]!] = confidence;
+  }
+  return map;
+}
+
+/** The nodes to estimate at: their numbers in the frame and their places, metres. */
+export type BottomNodes = { frame: GridFrame; nodes: Int32Array; xM: Float64Array; yM: Float64Array };
+
+/** The bandwidth with the best leave-one-out log score Σᵢ Σ_c p_ic ln P₋ᵢ(c); the usual one below ten casts. Metres. */
+export function chooseBandwidthM(evidence: readonly BottomEvidence[]): number {
+  if (evidence.length < FEWEST_TO_SCORE) return USUAL_BANDWIDTH_M;
+  let best: number = USUAL_BANDWIDTH_M;
+  let bestScore = -Infinity;
+  for (const bandwidthM of BANDWIDTHS_M) {
+    const score = logScore(evidence, bandwidthM);
+    if (score > bestScore) {
+      best = bandwidthM;
+      bestScore = score;
+    }
+  }
+  return best;
+}
+
+function logScore(evidence: readonly BottomEvidence[], bandwidthM: number): number {
+  const classes = evidence[0]!.shares.length;
+  const table = shareTable(evidence);
+  const alpha = new Float64Array(classes);
+  let score = 0;
+  for (let i = 0; i < evidence.length; i++) {
+    alpha.fill(PRIOR_CASTS / classes);
+    let total = PRIOR_CASTS;
+    for (let j = 0; j < evidence.length; j++) {
+      if (j === i) continue;
+      const d2 = (evidence[i]!.xM - evidence[j]!.xM) ** 2 + (evidence[i]!.yM - evidence[j]!.yM) ** 2;
+      const weight = Math.exp(-d2 / (2 * bandwidthM * bandwidthM));
+      total += weight;
+      for (let c = 0; c < classes; c++) alpha[c] = alpha[c]! + weight * table[j * classes + c]!;
+    }
+    for (let c = 0; c < classes; c++) score += table[i * classes + c]! * Math.log(alpha[c]! / total);
+  }
+  return score;
+}
+
+function shareTable(evidence: readonly BottomEvidence[]): Float64Array {
+  const classes = evidence[0]!.shares.length;
+  const table = new Float64Array(evidence.length * classes);
+  evidence.forEach(({ shares }, i) => {
+    if (shares.length !== classes)
+      throw new RangeError('Every cast must answer for the same classes of bottom.');
+    table.set(shares, i * classes);
+  });
+  return table;
+}

@@ -1,0 +1,190 @@
+import type { Outline } from '../geometry/polygon';
+import { outlineAreaM2, perimeterM } from '../geometry/polygon';
+import { Cover, Substrate } from '../surveys/contract';
+import type { CoverShares, SubstrateShares } from '../surveys/contract';
+import { bottomMap, chooseBandwidthM } from './bottom-map';
+import type { BottomNodes, ClassGrid } from './bottom-map';
+import type { QualityView } from './contract';
+import type { GridFrame, Grid } from './grid';
+import { chooseCellM, frameOver } from './grid';
+import { gridTriangles, hypsography, shorelineDevelopment } from './hypsography';
+import type { HypsographicStep } from './hypsography';
+import { deeperRegions, isobathLevels, isobaths } from './isobaths';
+import type { Isobath } from './isobaths';
+import { chartSamples, flagOutliers } from './samples';
+import type { ChartSamples } from './samples';
+import { sortSoundings } from './sounding-roles';
+import type { ChartSounding, LeftOut } from './sounding-roles';
+import { chooseSurface } from './surface-choice';
+import type { ChosenSurface } from './surface-choice';
+import { chartSurface } from './chart-surface';
+import type { ChartSurface } from './chart-surface';
+import { placesOf, shoreDistancesM } from './water-nodes';
+
+export type ChartInput = {
+  outline: Outline;
+  soundings: (ChartSounding & { substrate: SubstrateShares | null; cover: CoverShares | null })[];
+  contourStepM: number;
+  maxGapM: number; // widest gap between casts that is still drawn, 15 m at most
+  cellM?: number; // default: the smallest of 0.5–5 m that fits 400 × 400
+};
+
+export type ChartFigures = {
+  areaM2: number; // of the outline's water
+  surveyedAreaM2: number;
+  volumeM3: number; // of the surveyed water, at datum
+  meanDepthM: number; // of the surveyed water
+  greatestDepthM: number;
+  shorelineDevelopment: number;
+  surveyedShare: number;
+};
+
+export type BuiltChart = {
+  frame: GridFrame;
+  depth: Grid; // metres below datum
+  sigma: Grid; // metres, one σ of the depth at a place
+  isobaths: Isobath[];
+  tints: Isobath[]; // closed rings to paint in order; see deeperRegions
+  substrate: ClassGrid; // classes in the order of Substrate.options
+  cover: ClassGrid; // classes in the order of Cover.options
+  bottomBandwidthM: { substrate: number; cover: number };
+  hypsography: HypsographicStep[];
+  figures: ChartFigures;
+  quality: QualityView;
+  points: ChartSounding[]; // every sounding that may be shown: grades A, B and C, by id
+  leftOut: LeftOut[]; // and why
+};
+
+/**
+ * The whole chart from reduced soundings at datum: samples, variogram by leave-one-out, kriging, mask, isobaths, bottom,
+ * volumes, quality. Contours come from grades A and B alone; C is shown as points, D not at all. The same soundings give
+ * the same bytes whatever their order. `report` hears each step in words with the share of the work done, rising to 1.
+ * Throws RangeError with words for the surveyor when no chart can be made.
+ */
+export function buildChart(input: ChartInput, report: (step: string, share: number) => void): BuiltChart {
+  report('Laying out the samples', 0);
+  const roles = sortSoundings(input.soundings, input.outline);
+  const corners = [...input.outline.shore];
+  const frame = frameOver(corners, input.cellM ?? chooseCellM(corners));
+  const samples = chartSamples(roles.surface, input.outline);
+  const soundingCount = samples.soundingIds.length;
+  const shoreDistanceM = shoreDistancesM(input.outline, samples.points);
+  report('Choosing the variogram', 0.05);
+  const chosen = chooseSurface({ points: samples.points, soundingCount, shoreDistanceM }, (share) =>
+    report('Choosing the variogram', 0.05 + 0.4 * share),
+  );
+  report('Kriging the depths', 0.45);
+  const surface = chartSurface(
+    { outline: input.outline, frame, samples, chosen: chosen.best, maxGapM: input.maxGapM },
+    (share) => report('Kriging the depths', 0.45 + 0.4 * share),
+  );
+  report('Drawing the isobaths', 0.85);
+  const levels = isobathLevels(surface.depth, input.contourStepM);
+  const lines = isobaths(surface.withRim, levels);
+  const tints = deeperRegions(surface.withRim, levels);
+  report('Mapping the bottom', 0.9);
+  const bottoms = mapBottoms(input, surface, frame);
+  report('Measuring the water', 0.97);
+  const measured = measureWater(input, surface);
+  const quality = qualityOf(samples, chosen, measured.figures.surveyedShare);
+  report('Done', 1);
+  return {
+    frame,
+    depth: surface.depth,
+    sigma: surface.sigma,
+    isobaths: lines,
+    tints,
+    ...bottoms,
+    ...measured,
+    quality,
+    points: roles.shown,
+    leftOut: roles.leftOut,
+  };
+}
+
+function mapBottoms(input: ChartInput, surface: ChartSurface, frame: GridFrame) {
+  const nodes = { frame, ...placesOf(surface.surveyed, frame) };
+  const sorted = [...input.soundings]
+    .filter((s) => s.grade === 'A' || s.grade === 'B')
+    .sort((a, b) => (a.id < b.id ? -1 : 1));
+  const substrate = classMap(
+    sorted.flatMap(({ xM, yM, substrate: shares }) =>
+      shares === null ? [] : [{ xM, yM, shares: Substrate.options.map((kind) => shares[kind]) }],
+    ),
+    nodes,
+  );
+  const cover = classMap(
+    sorted.flatMap(({ xM, yM, cover: shares }) =>
+      shares === null ? [] : [{ xM, yM, shares: Cover.options.map((kind) => shares[kind]) }],
+    ),
+    nodes,
+  );
+  return {
+    substrate: substrate.map,
+    cover: cover.map,
+    bottomBandwidthM: { substrate: substrate.bandwidthM, cover: cover.bandwidthM },
+  };
+}
+
+function classMap(evidence: Parameters<typeof bottomMap>[0], nodes: BottomNodes) {
+  const bandwidthM = chooseBandwidthM(evidence);
+  return { bandwidthM, map: bottomMap(evidence, nodes, bandwidthM) };
+}
+
+function measureWater(
+  { outline, contourStepM }: ChartInput,
+  { depth, withRim, surveyed, water }: ChartSurface,
+) {
+  let greatestDepthM = 0;
+  for (const value of depth.values) if (value > greatestDepthM) greatestDepthM = value;
+  const steps = [0, ...isobathLevels(depth, contourStepM)];
+  const curve = hypsography(gridTriangles(withRim), steps);
+  const areaM2 = outlineAreaM2(outline);
+  const { areaM2: surveyedAreaM2, volumeM3 } = curve[0]!;
+  const count = (marks: Uint8Array) => marks.reduce((sum, mark) => sum + mark, 0);
+  const figures: ChartFigures = {
+    areaM2,
+    surveyedAreaM2: Math.min(surveyedAreaM2, areaM2),
+    volumeM3,
+    meanDepthM: surveyedAreaM2 > 0 ? volumeM3 / surveyedAreaM2 : 0,
+    greatestDepthM,
+    shorelineDevelopment: shorelineDevelopment(perimeterM(outline), areaM2),
+    surveyedShare: count(surveyed) / Math.max(1, count(water)),
+  };
+  return { hypsography: curve, figures };
+}
+
+function qualityOf(
+  samples: ChartSamples,
+  { best, candidates, words }: ChosenSurface,
+  surveyedShare: number,
+): QualityView {
+  const { validation, setup, residuals } = best;
+  const idOf = (row: number) => samples.soundingIds[row]![0]!;
+  return {
+    soundings: validation.count,
+    meanErrorM: validation.meanErrorM,
+    rmseM: validation.rmseM,
+    standardisedVariance: validation.standardisedVariance,
+    coverage95: validation.coverage95,
+    surveyedShare,
+    worst: validation.worst.map(({ sample, residualM, sigmas }) => ({
+      id: idOf(sample),
+      errorM: -residualM,
+      standardised: sigmas,
+    })),
+    flagged: flagOutliers(residuals, validation.count).flatMap((row) => samples.soundingIds[row]!),
+    variogram: {
+      model: setup.variogram.model,
+      nugget: setup.variogram.nuggetM2,
+      sill: setup.variogram.partialSillM2,
+      rangeM: setup.variogram.rangeM,
+    },
+    models: candidates.map((c) => ({
+      model: c.withShoreDistance ? `${c.model} with shore distance` : c.model,
+      rmseM: c.validation.rmseM,
+      standardisedVariance: c.validation.standardisedVariance,
+    })),
+    words,
+  };
+}
