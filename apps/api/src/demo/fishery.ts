@@ -129,8 +129,8 @@ function pegDetails(
     originMark: 'Painted dot on the peg board: left foot on the dot',
     originFixedBy: 'tape_or_plan',
     originMarked: true,
-    arcFromDeg: tenths(at.facingDeg - 45),
-    arcToDeg: tenths(at.facingDeg + 45),
+    arcFromDeg: tenths(at.facingDeg - 25),
+    arcToDeg: tenths(at.facingDeg + 25),
     waterWords: 'To half way, and to the line half way to each neighbour',
     longestCastM: null,
     platform: {
