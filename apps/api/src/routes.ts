@@ -1,4 +1,6 @@
+import { accountRoutes } from './accounts/routes';
 import type { Route } from './http/route';
+import { lakeRoutes } from './lakes/routes';
 
 /** Every route of the API, word by word. */
-export const routes: readonly Route[] = [];
+export const routes: readonly Route[] = [...accountRoutes, ...lakeRoutes];
