@@ -1,9 +1,15 @@
-/** Lets at most `places` in at once; the others wait their turn, first come first in. */
-export function gate(places: number): <T>(work: () => Promise<T>) => Promise<T> {
+/** Says that so many already wait that one more would only wait in vain. */
+export class GateFull extends Error {
+  override readonly name = 'GateFull';
+}
+
+/** Lets at most `places` in at once; up to `queue` others wait their turn, first come first in. */
+export function gate(places: number, queue: number): <T>(work: () => Promise<T>) => Promise<T> {
   let free = places;
   const waiting: (() => void)[] = [];
   const enter = async () => {
     if (free > 0) free -= 1;
+    else if (waiting.length >= queue) throw new GateFull();
     else await new Promise<void>((turn) => waiting.push(turn));
   };
   const leave = () => {

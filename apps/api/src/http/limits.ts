@@ -1,24 +1,53 @@
 import { Problem } from '@mereward/shared/problems/problem';
-import type { RequestHandler } from 'express';
+import type { Request, RequestHandler } from 'express';
 import { rateLimit } from 'express-rate-limit';
+import { createHash } from 'node:crypto';
+import { z } from 'zod';
 
-const refuse: RequestHandler = () => {
-  throw new Problem('too-many', 'Too many requests from here in a short time', {
-    detail: 'Wait a minute, then go on. Nothing was lost.',
-  });
-};
+type Limit = { windowS: number; most: number; onlyRefused?: boolean; key?: (req: Request) => string };
 
-const limit = (windowS: number, most: number): RequestHandler =>
-  rateLimit({
+/** Counts in this process; `onlyRefused` counts what was answered with a problem. */
+function limit({ windowS, most, onlyRefused = false, key }: Limit): RequestHandler {
+  return rateLimit({
     windowMs: windowS * 1000,
     limit: most,
     standardHeaders: 'draft-8',
     legacyHeaders: false,
-    handler: refuse,
+    skipSuccessfulRequests: onlyRefused,
+    ...(key ? { keyGenerator: key } : {}),
+    handler: (_req, _res, next) =>
+      next(
+        new Problem('too-many', 'Too many tries in a short time', {
+          detail: `Wait ${windowS > 60 ? 'a quarter of an hour' : 'a minute'}, then go on. Nothing was lost.`,
+        }),
+      ),
   });
+}
+
+const QUARTER_S = 15 * 60;
 
 /** For everything: far above what a person does, below what harms the rest. */
-export const limitAll = (): RequestHandler => limit(60, 1200);
+export const limitAll = (): RequestHandler => limit({ windowS: 60, most: 1200 });
 
-/** For what tries a secret or sends mail: sign-in, sign-up, reset, invitations. */
-export const limitSecrets = (): RequestHandler => limit(15 * 60, 100);
+/** For what mails a link, by network address: a lodge full of anglers shares one. */
+export const limitSecrets = (): RequestHandler => limit({ windowS: QUARTER_S, most: 100 });
+
+/** For what tries a secret, by network address: only wrong tries count. */
+export const limitWrongTries = (): RequestHandler =>
+  limit({ windowS: QUARTER_S, most: 100, onlyRefused: true });
+
+const Aimed = z.object({ email: z.string() });
+
+/** For sign-in, by the account aimed at, from wherever: only wrong tries count. */
+export const limitWrongTriesAtOne = (): RequestHandler =>
+  limit({
+    windowS: QUARTER_S,
+    most: 20,
+    onlyRefused: true,
+    key: (req) => {
+      const aimed = Aimed.safeParse(req.body);
+      return createHash('sha256')
+        .update(aimed.success ? aimed.data.email.trim().toLowerCase() : '')
+        .digest('base64');
+    },
+  });

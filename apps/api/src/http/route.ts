@@ -1,4 +1,4 @@
-import type { Request, Response, Router } from 'express';
+import type { Request, RequestHandler, Response, Router } from 'express';
 import { z } from 'zod';
 import type { Ctx } from '../ctx';
 import { parse } from './parse';
@@ -17,7 +17,11 @@ export type RouteSpec = {
   answer?: z.ZodType; // absent: no content, or another type of content
   answerType?: string; // default application/json
   status?: number;
+  /** Stand before the route, made anew for each application: limits, the header that shows a page of ours asks. */
+  guards?: readonly (() => RequestHandler)[];
 };
+
+const guarded = (spec: RouteSpec): RequestHandler[] => (spec.guards ?? []).map((guard) => guard());
 
 export type Route = RouteSpec & { attach: (router: Router) => void };
 
@@ -56,7 +60,7 @@ export function deed<const Spec extends RouteSpec>(
   return {
     ...spec,
     attach: (router) =>
-      router[spec.method](spec.path, async (req, res) => {
+      router[spec.method](spec.path, ...guarded(spec), async (req, res) => {
         const request = asked(spec, req);
         answer(spec, res, await inTransaction(req, (ctx) => run(ctx, request)));
       }),
@@ -71,7 +75,7 @@ export function read<const Spec extends RouteSpec>(
   return {
     ...spec,
     attach: (router) =>
-      router[spec.method](spec.path, async (req, res) => {
+      router[spec.method](spec.path, ...guarded(spec), async (req, res) => {
         const request = asked(spec, req);
         answer(spec, res, await reading(req, (ctx) => run(ctx, request)));
       }),
@@ -80,5 +84,5 @@ export function read<const Spec extends RouteSpec>(
 
 /** A route that answers by itself: cookies, files, streams, multipart. */
 export function raw(spec: RouteSpec, run: (req: Request, res: Response) => Promise<void>): Route {
-  return { ...spec, attach: (router) => router[spec.method](spec.path, run) };
+  return { ...spec, attach: (router) => router[spec.method](spec.path, ...guarded(spec), run) };
 }

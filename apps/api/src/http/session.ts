@@ -1,5 +1,4 @@
-import { FisheryRole } from '@mereward/db/entities/fisheries/fishery-role';
-import type { Role } from '@mereward/shared/accounts/contract';
+import { Role } from '@mereward/shared/accounts/contract';
 import { Problem } from '@mereward/shared/problems/problem';
 import type { Request } from 'express';
 import jwt from 'jsonwebtoken';
@@ -13,7 +12,7 @@ import { serverOf } from './server';
 /** How long an access token opens doors; the refresh cookie brings the next. */
 export const ACCESS_TOKEN_S = 600;
 
-const Claims = z.object({ sub: z.uuid() });
+const Claims = z.object({ sub: z.uuid(), iat: z.number() });
 const keys = new WeakMap<Config, KeyObject>();
 
 // A key object, made once: jsonwebtoken turns a string secret into one on every call, at thirty times the cost.
@@ -26,34 +25,50 @@ function keyOf(config: Config): KeyObject {
 }
 
 export function signAccessToken(config: Config, accountId: string, now: Date): string {
-  const issuedAt = Math.floor(now.getTime() / 1000);
+  const issuedAt = now.getTime() / 1000; // with its milliseconds: what ended just before stays told from what began just after
   return jwt.sign({ sub: accountId, iat: issuedAt, exp: issuedAt + ACCESS_TOKEN_S }, keyOf(config), {
     algorithm: 'HS256',
   });
 }
 
-function accountIn(req: Request): string | null {
+const runOut = () =>
+  new Problem('not-signed-in', 'Your sign-in has run out', { detail: 'Sign in again to go on.' });
+
+function claimsIn(req: Request): z.infer<typeof Claims> | null {
   const header = req.get('authorization');
   if (!header) return null;
   const { config, clock } = serverOf(req);
   try {
     const token = header.replace(/^Bearer /, '');
     const clockTimestamp = Math.floor(clock().getTime() / 1000);
-    return Claims.parse(jwt.verify(token, keyOf(config), { algorithms: ['HS256'], clockTimestamp })).sub;
+    return Claims.parse(jwt.verify(token, keyOf(config), { algorithms: ['HS256'], clockTimestamp }));
   } catch {
-    throw new Problem('not-signed-in', 'Your sign-in has run out', { detail: 'Sign in again to go on.' });
+    throw runOut();
   }
 }
 
-/** The actor of a request, with the roles as they stand now: a role taken away closes doors at once. */
+const Held = z.object({
+  tokens_from: z.date().nullable(),
+  fishery_id: z.string().nullable(),
+  role: Role.nullable(),
+});
+
+const HELD = `
+  SELECT account.tokens_from, held.fishery_id, held.role
+  FROM account LEFT JOIN fishery_role held ON held.account_id = account.id
+  WHERE account.id = $1`;
+
+/** The actor of a request, with the roles as they stand now: a role or a sign-in taken away closes doors at once. */
 export async function actorOf(req: Request, tx: EntityManager): Promise<Actor> {
-  const id = accountIn(req);
-  if (!id) return STRANGER;
-  const rows = await tx.find(FisheryRole, { where: { accountId: id } });
+  const claims = claimsIn(req);
+  if (!claims) return STRANGER;
+  const rows = z.array(Held).parse(await tx.query(HELD, [claims.sub]));
+  const from = rows[0]?.tokens_from;
+  if (rows.length === 0 || (from && claims.iat * 1000 < from.getTime())) throw runOut();
   const roles = new Map<string, Set<Role>>();
-  for (const { fisheryId, role } of rows) {
-    const held = roles.get(fisheryId) ?? new Set<Role>();
-    roles.set(fisheryId, held.add(role));
+  for (const { fishery_id: fisheryId, role } of rows) {
+    if (!fisheryId || !role) continue;
+    roles.set(fisheryId, (roles.get(fisheryId) ?? new Set<Role>()).add(role));
   }
-  return { kind: 'account', id, roles };
+  return { kind: 'account', id: claims.sub, roles };
 }

@@ -13,7 +13,8 @@ export class AccountsAndFisheries1780000000000 implements MigrationInterface {
         password_hash text NOT NULL,
         email_verified_at timestamptz,
         units jsonb NOT NULL,
-        created_at timestamptz NOT NULL
+        created_at timestamptz NOT NULL,
+        tokens_from timestamptz -- access tokens made before this open nothing
       )`);
     // One row per refresh token; a family is one sign-in on one device. A used token seen again ends its family.
     await q.query(`

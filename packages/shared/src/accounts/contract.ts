@@ -23,7 +23,14 @@ export const SignUp = z.strictObject({
 });
 export type SignUp = z.infer<typeof SignUp>;
 
-/** POST /api/accounts/verify */
+/**
+ * POST /api/accounts/verify-again → 202 always: mails the link once more to an address still to be confirmed.
+ * Signing in before that is answered `forbidden` (only to who knows the password): offer this then.
+ */
+export const AskVerifyAgain = z.strictObject({ email: EmailAddress });
+export type AskVerifyAgain = z.infer<typeof AskVerifyAgain>;
+
+/** POST /api/accounts/verify → 204; the same link twice is no fault. The mailed link is `/verify?token=…`. */
 export const VerifyEmail = z.strictObject({ token: z.string().min(20).max(200) });
 export type VerifyEmail = z.infer<typeof VerifyEmail>;
 
@@ -31,7 +38,7 @@ export type VerifyEmail = z.infer<typeof VerifyEmail>;
 export const AskReset = z.strictObject({ email: EmailAddress });
 export type AskReset = z.infer<typeof AskReset>;
 
-/** POST /api/accounts/reset: ends every open sign-in of the account. */
+/** POST /api/accounts/reset → 204: ends every open sign-in of the account. The mailed link is `/reset-password?token=…`. */
 export const ResetPassword = z.strictObject({ token: z.string().min(20).max(200), password: NewPassword });
 export type ResetPassword = z.infer<typeof ResetPassword>;
 

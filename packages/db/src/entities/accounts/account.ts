@@ -10,4 +10,6 @@ export class Account {
   @Column('timestamptz', { name: 'email_verified_at', nullable: true }) emailVerifiedAt!: Date | null;
   @Column('jsonb') units!: Units;
   @Column('timestamptz', { name: 'created_at' }) createdAt!: Date;
+  /** Access tokens made before this open nothing: set by “sign out everywhere” and by a new password. */
+  @Column('timestamptz', { name: 'tokens_from', nullable: true }) tokensFrom!: Date | null;
 }
