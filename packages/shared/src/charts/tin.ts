@@ -1,9 +1,11 @@
 import Delaunator from 'delaunator';
 import { emptyGrid } from './grid';
 import type { Grid, GridFrame } from './grid';
+import type { SurfaceTriangles } from './hypsography';
 import type { SamplePoints, Targets } from './sample-points';
+import type { Point } from '../geometry/plane';
 
-/** Delaunay triangulation of the samples: corners three by three, counter-clockwise triples reversed or not as built. */
+/** Delaunay triangulation of the samples: corners three by three, clockwise as seen with north up. */
 export type Tin = {
   samples: SamplePoints;
   corners: Uint32Array; // sample numbers, length 3 × triangles
@@ -75,6 +77,23 @@ function walkTo({ samples, corners, halfEdges }: Tin, from: number, { x, y }: Pl
     triangle = Math.floor(twin / 3);
   }
   return -1;
+}
+
+/** Triangles whose middle the test keeps, as corner depths and plane areas, for area and volume. */
+export function tinTriangles({ samples, corners }: Tin, keeps: (middle: Point) => boolean): SurfaceTriangles {
+  const { xM, yM, valueM } = samples;
+  const depths: number[] = [];
+  const areas: number[] = [];
+  for (let t = 0; t < corners.length; t += 3) {
+    const a = corners[t]!;
+    const b = corners[t + 1]!;
+    const c = corners[t + 2]!;
+    const middle = { xM: (xM[a]! + xM[b]! + xM[c]!) / 3, yM: (yM[a]! + yM[b]! + yM[c]!) / 3 };
+    if (!keeps(middle)) continue;
+    depths.push(valueM[a]!, valueM[b]!, valueM[c]!);
+    areas.push(Math.abs((xM[b]! - xM[a]!) * (yM[c]! - yM[a]!) - (xM[c]! - xM[a]!) * (yM[b]! - yM[a]!)) / 2);
+  }
+  return { depthsM: Float64Array.from(depths), areasM2: Float64Array.from(areas) };
 }
 
 /** Linear surface over a grid, triangle by triangle along the grid's rows; NaN outside the samples' hull. */
