@@ -5,12 +5,14 @@ import { EmergencyLine } from '@/components/emergency-line';
 import { PageHead, type PageHeadProps } from '@/components/page-head';
 import { space } from '@/constants/layout';
 import { themed } from '@/hooks/themed';
+import { useWide } from '@/hooks/use-wide';
 import { usePageTitle } from '@/hooks/use-page-title';
 
 const useStyles = themed((c) => ({
   page: { flex: 1, minHeight: 0, minWidth: 0, backgroundColor: c.paper },
   scroll: { flex: 1 },
-  inside: { flexGrow: 1, paddingHorizontal: space.page, width: '100%', alignSelf: 'center' },
+  inside: { flexGrow: 1, paddingHorizontal: space.page, width: '100%' },
+  wideInside: { paddingHorizontal: space.wide },
   content: { flexGrow: 1, gap: space.large, paddingBottom: space.large },
   actions: {
     flexDirection: 'row',
@@ -24,7 +26,7 @@ const useStyles = themed((c) => ({
   },
 }));
 
-const widths = { reading: 700, wide: 1440 } as const;
+const widths = { reading: 720, wide: 1440 } as const;
 
 type Props = Omit<PageHeadProps, 'path'> & {
   /** `reading` keeps lines short; `wide` is for tables and things side by side. */
@@ -39,6 +41,7 @@ type Props = Omit<PageHeadProps, 'path'> & {
 /** Every screen's frame: the main landmark, one level-1 heading, the way back, the main act, the emergency line. */
 export function Page({ width = 'reading', fill = false, actions, children, ...head }: Props) {
   const styles = useStyles();
+  const wide = useWide();
   const path = usePathname();
   usePageTitle(head.title);
   return (
@@ -54,14 +57,18 @@ export function Page({ width = 'reading', fill = false, actions, children, ...he
         <ScrollView
           key={path}
           style={styles.scroll}
-          contentContainerStyle={[styles.inside, { maxWidth: widths[width] }]}
+          contentContainerStyle={[styles.inside, wide && styles.wideInside, { maxWidth: widths[width] }]}
         >
           <PageHead {...head} path={path} />
           <View style={styles.content}>{children}</View>
           <EmergencyLine />
         </ScrollView>
       )}
-      {actions ? <View style={styles.actions}>{actions}</View> : null}
+      {actions ? (
+        <View style={[styles.actions, wide && styles.wideInside, { maxWidth: widths[width] }]}>
+          {actions}
+        </View>
+      ) : null}
     </View>
   );
 }

@@ -1,0 +1,1 @@
+export { CardTable as WideTable } from '@/components/card-table';
