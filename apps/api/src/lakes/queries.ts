@@ -35,14 +35,7 @@ const MOST_READINGS = 60;
 export async function lakeView({ tx, actor }: Ctx, lakeId: string): Promise<LakeView> {
   const lake = await findLake(tx, lakeId);
   const staff = isStaff(actor, lake.fisheryId);
-  const [fishery, pegs, marks, boards, now, chart] = await Promise.all([
-    tx.findOneByOrFail(Fishery, { id: lake.fisheryId }),
-    pegsOf(tx, lakeId),
-    marksOf(tx, lakeId, staff),
-    boardsOf(tx, lakeId, staff),
-    levelNow(tx, lakeId, lake.datumM),
-    publishedChart(tx, lakeId),
-  ]);
+  const fishery = await tx.findOneByOrFail(Fishery, { id: lake.fisheryId });
   return {
     id: lake.id,
     fisheryId: lake.fisheryId,
@@ -51,11 +44,11 @@ export async function lakeView({ tx, actor }: Ctx, lakeId: string): Promise<Lake
     details: lake.details,
     origin: [lake.originLon, lake.originLat],
     areaM2: lake.areaM2,
-    levelNow: now,
-    pegs,
-    marks,
-    boards,
-    publishedChart: chart,
+    levelNow: await levelNow(tx, lakeId, lake.datumM),
+    pegs: await pegsOf(tx, lakeId),
+    marks: await marksOf(tx, lakeId, staff),
+    boards: await boardsOf(tx, lakeId, staff),
+    publishedChart: await publishedChart(tx, lakeId),
     version: lake.version,
     may: mayAt(actor, lake),
   };
