@@ -34,14 +34,18 @@ export function signAccessToken(config: Config, accountId: string, now: Date): s
 const runOut = () =>
   new Problem('not-signed-in', 'Your sign-in has run out', { detail: 'Sign in again to go on.' });
 
+/** The claims of a compact JWS signed by this key with HS256 and not run out; throws for anything else. */
+export function verifiedClaims(key: KeyObject, token: string, now: Date): unknown {
+  const clockTimestamp = Math.floor(now.getTime() / 1000);
+  return jwt.verify(token, key, { algorithms: ['HS256'], clockTimestamp });
+}
+
 function claimsIn(req: Request): z.infer<typeof Claims> | null {
   const header = req.get('authorization');
   if (!header) return null;
   const { config, clock } = serverOf(req);
   try {
-    const token = header.replace(/^Bearer /, '');
-    const clockTimestamp = Math.floor(clock().getTime() / 1000);
-    return Claims.parse(jwt.verify(token, keyOf(config), { algorithms: ['HS256'], clockTimestamp }));
+    return Claims.parse(verifiedClaims(keyOf(config), header.replace(/^Bearer /, ''), clock()));
   } catch {
     throw runOut();
   }
