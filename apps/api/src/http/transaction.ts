@@ -1,13 +1,16 @@
 import type { Request } from 'express';
 import { STRANGER, type Ctx } from '../ctx';
+import { outOfDeadlock } from './deadlock';
 import { serverOf } from './server';
 import { actorOf } from './session';
 
 /** One deed, one transaction: all of it or none of it, jobs and mail rows included. */
 export async function inTransaction<T>(req: Request, deed: (ctx: Ctx) => Promise<T>): Promise<T> {
   const { source, jobs, clock, config } = serverOf(req);
-  return source.transaction(async (tx) =>
-    deed({ tx, actor: await actorOf(req, tx), now: clock(), jobs, publicUrl: config.publicUrl }),
+  return outOfDeadlock(() =>
+    source.transaction(async (tx) =>
+      deed({ tx, actor: await actorOf(req, tx), now: clock(), jobs, publicUrl: config.publicUrl }),
+    ),
   );
 }
 

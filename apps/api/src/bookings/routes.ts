@@ -1,0 +1,42 @@
+import { TicketList, TicketView, WriteTicket } from '@mereward/shared/bookings/contract';
+import { deed, read, type Route } from '../http/route';
+import { myTickets, ticketsOfPeg, ticketView } from './queries';
+import { cancelTicket, writeTicket } from './service';
+
+const signIn = 'needed';
+
+export const bookingRoutes: Route[] = [
+  deed(
+    {
+      method: 'post',
+      path: '/pegs/:pegId/bookings',
+      summary: 'Write a ticket at the lodge',
+      signIn,
+      body: WriteTicket,
+      answer: TicketView,
+      status: 201,
+    },
+    async (ctx, { id, body }) => {
+      await writeTicket(ctx, id('pegId'), body);
+      return ticketView(ctx, body.id);
+    },
+  ),
+  read(
+    {
+      method: 'get',
+      path: '/pegs/:pegId/bookings',
+      summary: 'Tickets of a peg, for staff',
+      signIn,
+      answer: TicketList,
+    },
+    (ctx, { id }) => ticketsOfPeg(ctx, id('pegId')),
+  ),
+  read(
+    { method: 'get', path: '/bookings/mine', summary: 'One’s own tickets', signIn, answer: TicketList },
+    (ctx) => myTickets(ctx),
+  ),
+  deed(
+    { method: 'delete', path: '/bookings/:bookingId', summary: 'Cancel a ticket', signIn },
+    (ctx, { id }) => cancelTicket(ctx, id('bookingId')),
+  ),
+];
