@@ -71,12 +71,12 @@ export function buildChart(input: ChartInput, report: (step: string, share: numb
   const shoreDistanceM = shoreDistancesM(input.outline, samples.points);
   report('Choosing the variogram', 0.05);
   const chosen = chooseSurface({ points: samples.points, soundingCount, shoreDistanceM }, (share) =>
-    report('Choosing the variogram', 0.05 + 0.4 * share),
+    report('Choosing the variogram', (5 + 40 * share) / 100),
   );
   report('Kriging the depths', 0.45);
   const surface = chartSurface(
     { outline: input.outline, frame, samples, chosen: chosen.best, maxGapM: input.maxGapM },
-    (share) => report('Kriging the depths', 0.45 + 0.4 * share),
+    (share) => report('Kriging the depths', (45 + 40 * share) / 100),
   );
   report('Drawing the isobaths', 0.85);
   const levels = isobathLevels(surface.depth, input.contourStepM);
