@@ -1,4 +1,5 @@
 import { useEffect } from 'react';
+import { plainWords } from '@mereward/shared/problems/plain-words';
 import { PersistQueryClientProvider } from '@tanstack/react-query-persist-client';
 import { Slot } from 'expo-router';
 import { View } from 'react-native';
@@ -15,7 +16,7 @@ import { resumeSession, useSession } from '@/lib/session';
 import { useStampedTheme } from '@/lib/stamp-theme';
 
 // Compiling schemas needs eval, which the page's content policy forbids; asking for it would only be refused.
-z.config({ jitless: true });
+z.config({ jitless: true, customError: plainWords });
 
 export { PageFault as ErrorBoundary } from '@/components/page-fault';
 

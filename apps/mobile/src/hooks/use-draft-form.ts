@@ -30,7 +30,7 @@ export type DraftForm<In extends FieldValues, Out> = UseFormReturn<In, unknown, 
 
 /**
  * A form whose values outlive a reload: kept on this device per form and per person while they are typed, cleared
- * once sent. A refusal's own field errors land on the fields they point at. Show it with `DraftFormFrame`.
+ * once sent. To use it again for another thing call `startAfresh`. A refusal's own field errors land on the fields they point at. Show it with `DraftFormFrame`.
  */
 export function useDraftForm<In extends FieldValues, Out, Answer>(
   terms: Terms<In, Out, Answer>,
@@ -52,7 +52,9 @@ export function useDraftForm<In extends FieldValues, Out, Answer>(
     setProblem(null);
     try {
       const answer = await send(value);
-      draft.finish();
+      const sent = form.getValues();
+      draft.settle({ ...start, ...sent });
+      form.reset(sent);
       onDone?.(answer);
     } catch (fault) {
       refused(fault);
@@ -66,7 +68,7 @@ export function useDraftForm<In extends FieldValues, Out, Answer>(
     problem,
     restored: draft.restored,
     startAfresh: () => {
-      draft.forget();
+      draft.settle(start);
       setProblem(null);
       form.reset(start);
     },

@@ -14,34 +14,32 @@ type KeptDraft<V extends FieldValues> = {
   restored: boolean;
   /** Keeps the form's values as they change. Called once, in the form's own hook. */
   useKeeping: (form: Pick<UseFormReturn<V>, 'subscribe' | 'getValues' | 'reset'>) => void;
-  forget: () => void;
-  /** Forgets, and keeps nothing more until begun afresh: the form has been sent. */
-  finish: () => void;
+  /** The form stands at these values now, sent or begun afresh: nothing of it is left to keep. */
+  settle: (values: DefaultValues<V>) => void;
 };
 
 /** One form's draft on this device: where its values come from at first, and where they go while typed. */
 export function useKeptDraft<V extends FieldValues>({ form: name, start, leaveOut }: Terms<V>): KeptDraft<V> {
   const [key] = useState(() => draftKey(sessionStore.get().account?.id ?? null, name));
   const [found, setFound] = useState(() => readDraft(storage.peek(key), start));
-  const finished = useRef(false);
+  const begun = useRef(start); // what counts as "nothing typed yet"
   const [firstValues] = useState<DefaultValues<V>>(() => ({ ...start, ...found }));
 
-  const forget = (): void => {
-    finished.current = false;
+  const settle = (values: DefaultValues<V>): void => {
+    begun.current = values;
     setFound(null);
     void storage.remove(key);
   };
 
   const useKeeping: KeptDraft<V>['useKeeping'] = (form) => {
     const { subscribe, getValues, reset } = form;
-    const begun = useRef(start);
     const left = useRef(leaveOut);
     useEffect(() => {
       let timer: ReturnType<typeof setTimeout> | undefined;
       let changed = false;
       const keep = (): void => {
         clearTimeout(timer);
-        if (finished.current || !changed) return;
+        if (!changed) return;
         changed = false;
         const text = writeDraft(getValues(), begun.current, left.current);
         void (text === null ? storage.remove(key) : storage.set(key, text));
@@ -76,10 +74,6 @@ export function useKeptDraft<V extends FieldValues>({ form: name, start, leaveOu
     firstValues,
     restored: found !== null,
     useKeeping,
-    forget,
-    finish: () => {
-      finished.current = true;
-      void storage.remove(key);
-    },
+    settle,
   };
 }

@@ -1,9 +1,12 @@
 import { SignedIn } from '@mereward/shared/accounts/contract';
 import { Problem } from '@mereward/shared/problems/problem';
-import type { z } from 'zod';
+import { z } from 'zod';
 import { problemOf } from '@/lib/answer';
 import { oneAtATime } from '@/lib/one-at-a-time';
 import { sessionStore } from '@/lib/session-store';
+
+/** The answer of a deed that answers nothing. */
+export const nothing = z.undefined();
 
 type Method = 'GET' | 'POST' | 'PUT' | 'PATCH' | 'DELETE';
 type Ask = { method: Method; body?: unknown; signal?: AbortSignal | undefined };
@@ -53,22 +56,26 @@ export function refreshSession(): Promise<boolean> {
   return refreshing;
 }
 
-/** Sends a request with a good token where there is a sign-in, and once more when the token has just gone stale. */
+/**
+ * Sends a request with a good token where there is a sign-in, and once more when the token turns out stale: with a
+ * fresh one, or as a stranger when the sign-in is over, for what is open to everybody stays open.
+ */
 async function ask(path: string, request: Ask): Promise<Response> {
   const known = sessionStore.get().account !== null;
   if (known && sessionStore.token(Date.now()) === null) await refreshSession();
+  const withToken = sessionStore.token(Date.now()) !== null;
   const response = await send(path, request);
-  if (response.status === 401 && known && sessionStore.get().account !== null) {
-    sessionStore.forgetToken();
-    if (await refreshSession()) return send(path, request);
-  }
-  return response;
+  if (response.status !== 401 || !withToken) return response;
+  sessionStore.forgetToken();
+  await refreshSession();
+  return send(path, request);
 }
 
 async function answer<T>(path: string, schema: z.ZodType<T>, request: Ask): Promise<T> {
   const response = await ask(path, request);
   if (!response.ok) throw await problemOf(response);
-  const body: unknown = response.status === 204 ? undefined : await response.json();
+  const text = await response.text();
+  const body: unknown = text === '' ? undefined : JSON.parse(text);
   const parsed = schema.safeParse(body);
   if (parsed.success) return parsed.data;
   throw new Problem('internal', 'The server’s answer could not be read', {
@@ -78,7 +85,7 @@ async function answer<T>(path: string, schema: z.ZodType<T>, request: Ask): Prom
 
 /**
  * The API, typed by its contracts: `api.get('/lakes', LakeList)`. Paths start below `/api`. A refusal is thrown as
- * a `Problem`; no signal at all as the fetch's own TypeError. For an answer without content pass `z.undefined()`.
+ * a `Problem`; no signal at all as the fetch's own TypeError. For an answer without content pass `nothing`.
  */
 export const api = {
   get: <T>(path: string, schema: z.ZodType<T>, signal?: AbortSignal) =>

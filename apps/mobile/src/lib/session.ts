@@ -1,11 +1,9 @@
 import { useSyncExternalStore } from 'react';
-import type { AccountView, Role } from '@mereward/shared/accounts/contract';
-import { api, refreshSession } from '@/lib/api';
+import { api, nothing, refreshSession } from '@/lib/api';
 import { forgetDrafts } from '@/lib/drafts';
 import { forgetEverythingRead } from '@/lib/queries';
 import { sessionStore, type Session } from '@/lib/session-store';
-import { SignedIn, type SignIn } from '@mereward/shared/accounts/contract';
-import { z } from 'zod';
+import { SignedIn, type AccountView, type Role, type SignIn } from '@mereward/shared/accounts/contract';
 
 export type CurrentSession = {
   state: Session['state'];
@@ -41,7 +39,7 @@ export async function signIn(input: SignIn): Promise<void> {
 /** Signs out here, or on every device. What was read is forgotten with it. */
 export async function signOut(where: 'here' | 'everywhere'): Promise<void> {
   const accountId = sessionStore.get().account?.id;
-  await api.del(where === 'here' ? '/accounts/session' : '/accounts/sessions', z.unknown());
+  await api.del(where === 'here' ? '/accounts/session' : '/accounts/sessions', nothing);
   sessionStore.leave();
   if (accountId !== undefined) await forgetDrafts(accountId);
   await forgetEverythingRead();

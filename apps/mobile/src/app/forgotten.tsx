@@ -1,0 +1,1 @@
+export { ForgottenScreen as default } from '@/features/accounts/forgotten-screen';

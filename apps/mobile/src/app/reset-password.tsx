@@ -1,0 +1,1 @@
+export { ResetPasswordScreen as default } from '@/features/accounts/reset-password-screen';
