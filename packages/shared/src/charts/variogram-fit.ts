@@ -53,7 +53,8 @@ type Fitter = (rangeM: number) => VariogramFit;
 
 function bestRange(fitting: Fitting, longestM: number): VariogramFit {
   const at: Fitter = (rangeM) => sillsAt(fitting, rangeM);
-  const lowest = Math.log(longestM / 50);
+  // Ranges well inside the first lag cannot be told from one another.
+  const lowest = Math.log(Math.max(longestM / 50, fitting.bins[0]!.lagM / 2));
   const step = (Math.log(longestM * 3) - lowest) / RANGE_TRIALS;
   let best = 0;
   let bestFit = at(Math.exp(lowest));
