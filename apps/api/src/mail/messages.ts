@@ -53,10 +53,10 @@ type InvitationWords = { email: string; fishery: string; role: string; invitedBy
 
 export const invitationMessage = (to: InvitationWords, url: string): Letter =>
   letter(to.email, {
-    subject: `${to.fishery}: you are invited as ${to.role}`,
+    subject: `${to.fishery} invites you`,
     lines: [
       'Hello,',
-      `${to.invitedBy} invites you to ${to.fishery} as ${to.role}.`,
+      `${to.invitedBy} invites you to ${to.fishery} with the role “${to.role}”.`,
       `Sign in with this address (${to.email}), or make an account with it, and take the invitation up.`,
     ],
     link: { label: 'See the invitation', url },

@@ -4,6 +4,15 @@ import { EmailAddress, Role } from '../accounts/contract';
 export const Jurisdiction = z.enum(['ENG', 'WAL', 'SCO', 'NIR', 'IRL', 'FRA', 'other']);
 export type Jurisdiction = z.infer<typeof Jurisdiction>;
 
+/** Whether a name is one of the IANA time zone database's, as far as this machine knows them. */
+export function isTimeZone(zone: string): boolean {
+  try {
+    return new Intl.DateTimeFormat('en-GB', { timeZone: zone }).format(0) !== '' && /^[A-Z]/.test(zone);
+  } catch {
+    return false;
+  }
+}
+
 const words = (max: number) => z.string().trim().max(max);
 export const Position = z.tuple([z.number().min(-180).max(180), z.number().min(-90).max(90)]); // lon, lat
 export type Position = z.infer<typeof Position>;
@@ -17,7 +26,7 @@ export const FisheryDetails = z.strictObject({
   gridReference: words(20),
   position: Position,
   jurisdiction: Jurisdiction,
-  zone: z.string().max(60), // IANA
+  zone: z.string().max(60).refine(isTimeZone, 'Not a time zone, like Europe/London'), // IANA
   vatStatus: z.enum(['registered', 'not_registered', 'exempt_body']),
   vatNumber: words(20),
   officeContact: words(200),
@@ -80,17 +89,27 @@ export const InvitationView = z.object({
   expiresAt: z.iso.datetime(),
 });
 export type InvitationView = z.infer<typeof InvitationView>;
-export const PeopleView = z.object({ people: z.array(PersonView), invitations: z.array(InvitationView) });
+export const PeopleView = z.object({
+  people: z.array(PersonView),
+  invitations: z.array(InvitationView),
+  mayGive: z.array(Role), // the roles this reader may give and take away
+});
 export type PeopleView = z.infer<typeof PeopleView>;
 
-/** POST /api/fisheries/:fisheryId/invitations; DELETE …/invitations/:id withdraws. */
+/** POST /api/fisheries/:fisheryId/invitations → 201 InvitationView; DELETE …/invitations/:id withdraws → 204. */
 export const Invite = z.strictObject({ email: EmailAddress, role: Role });
 export type Invite = z.infer<typeof Invite>;
-/** GET /api/invitations/:token shows; POST /api/invitations/accept takes it up for the signed-in account. */
+/**
+ * GET /api/invitations/:token shows; POST /api/invitations/accept takes it up for the signed-in account, whose address
+ * must be the invited one, and answers its AccountView with the new role. Inviting again sends a new link.
+ */
 export const InvitationShown = z.object({ fisheryName: z.string(), role: Role, email: z.string() });
 export type InvitationShown = z.infer<typeof InvitationShown>;
 export const AcceptInvitation = z.strictObject({ token: z.string().min(20).max(200) });
 export type AcceptInvitation = z.infer<typeof AcceptInvitation>;
-/** PUT /api/fisheries/:fisheryId/people/:accountId: the whole list of roles; never leaves a fishery without an owner. */
+/**
+ * PUT /api/fisheries/:fisheryId/people/:accountId → PeopleView: the whole list of roles; an empty one takes the person
+ * out. Never leaves a fishery without an owner.
+ */
 export const SetRoles = z.strictObject({ roles: z.array(Role).max(7) });
 export type SetRoles = z.infer<typeof SetRoles>;

@@ -1,0 +1,34 @@
+import { Fishery } from '@mereward/db/entities/fisheries/fishery';
+import { Problem } from '@mereward/shared/problems/problem';
+import type { EntityManager } from 'typeorm';
+import { accountOf, type Actor } from '../ctx';
+import { isOneOfThem } from './policy';
+
+const noSuch = () => new Problem('not-found', 'There is no such fishery');
+
+/** A fishery's public face. */
+export async function fisheryFound(tx: EntityManager, id: string): Promise<Fishery> {
+  const fishery = await tx.findOneBy(Fishery, { id });
+  if (!fishery) throw noSuch();
+  return fishery;
+}
+
+/**
+ * Lets in those it is for. Whoever has no part in the fishery is told that there is nothing there; its own people
+ * are told that it is not for them.
+ */
+export function admit(actor: Actor, fisheryId: string, allowed: boolean): void {
+  if (allowed) return;
+  accountOf(actor);
+  if (!isOneOfThem(actor, fisheryId)) throw noSuch();
+  throw new Problem('forbidden', 'Your roles at this fishery don’t allow this', {
+    detail: 'Ask its owner or manager to do it, or to give you the role.',
+  });
+}
+
+/** Holds a fishery's roles still: whoever changes them next waits, and sees what was done. */
+export async function lockRoles(tx: EntityManager, id: string): Promise<Fishery> {
+  const fishery = await tx.findOne(Fishery, { where: { id }, lock: { mode: 'pessimistic_write' } });
+  if (!fishery) throw noSuch();
+  return fishery;
+}
