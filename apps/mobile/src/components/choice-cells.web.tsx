@@ -51,9 +51,11 @@ export function ChoiceCells({ label, hint, error, kind, cells, columns = 3, bank
         {label}
       </legend>
       {hint ? (
-        <Text nativeID={`${id}-hint`} size="small" tone="inkSoft" style={{ marginBottom: space.small }}>
-          {hint}
-        </Text>
+        <div style={{ marginBottom: space.small }}>
+          <Text nativeID={`${id}-hint`} size="small" tone="inkSoft">
+            {hint}
+          </Text>
+        </div>
       ) : null}
       <div
         style={{

@@ -59,11 +59,16 @@ export function Places({ places, wide }: Props) {
   const styles = useStyles();
   const path = usePathname();
   const links = places.map((place) => (
-    <PlaceLink key={place.key} place={place} wide={wide} here={path.split('/')[1] === place.key} />
+    <PlaceLink
+      key={place.key}
+      place={place}
+      wide={wide}
+      here={place.holds.includes(path.split('/')[1] ?? '')}
+    />
   ));
   return wide ? (
     <View style={styles.rail}>
-      <View style={{ paddingHorizontal: space.page }}>
+      <View style={{ paddingLeft: space.page + 4 }}>
         <Wordmark />
       </View>
       <View role="navigation" aria-label="Places">

@@ -4,6 +4,8 @@ export type Place = {
   key: 'water' | 'tickets' | 'bank' | 'office' | 'me';
   label: string;
   href: `/${string}`;
+  /** First steps of the addresses that lie in it. */
+  holds: readonly string[];
 };
 
 const everywhere: readonly Role[] = [
@@ -19,11 +21,25 @@ const bankRoles: readonly Role[] = ['owner', 'manager', 'head_bailiff', 'bailiff
 const officeRoles: readonly Role[] = ['owner', 'manager', 'office'];
 
 const places: readonly (Place & { for: readonly Role[]; strangers: boolean })[] = [
-  { key: 'water', label: 'Water', href: '/water', for: everywhere, strangers: true },
-  { key: 'tickets', label: 'Tickets', href: '/tickets', for: everywhere, strangers: true },
-  { key: 'bank', label: 'Bank', href: '/bank', for: bankRoles, strangers: false },
-  { key: 'office', label: 'Office', href: '/office', for: officeRoles, strangers: false },
-  { key: 'me', label: 'Me', href: '/me', for: everywhere, strangers: true },
+  { key: 'water', label: 'Water', href: '/water', holds: ['water'], for: everywhere, strangers: true },
+  {
+    key: 'tickets',
+    label: 'Tickets',
+    href: '/tickets',
+    holds: ['tickets'],
+    for: everywhere,
+    strangers: true,
+  },
+  { key: 'bank', label: 'Bank', href: '/bank', holds: ['bank'], for: bankRoles, strangers: false },
+  { key: 'office', label: 'Office', href: '/office', holds: ['office'], for: officeRoles, strangers: false },
+  {
+    key: 'me',
+    label: 'Me',
+    href: '/me',
+    holds: ['me', 'sign-in', 'sign-up', 'verify', 'forgotten', 'reset-password', 'invitation'],
+    for: everywhere,
+    strangers: true,
+  },
 ];
 
 /** The places open to somebody holding these roles. A courtesy: the API decides what they may do there. */
