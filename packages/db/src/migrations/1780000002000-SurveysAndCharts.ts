@@ -127,6 +127,7 @@ export class SurveysAndCharts1780000002000 implements MigrationInterface {
         share double precision NOT NULL CHECK (share BETWEEN 0 AND 1),
         error text,
         cancel_asked_at timestamptz,
+        tries int NOT NULL DEFAULT 0,
         updated_at timestamptz NOT NULL
       )`);
     await q.query(`

@@ -1,6 +1,6 @@
 import { z } from 'zod';
 import { Position } from '../fisheries/contract';
-import { LakePolygon, PhotoView } from '../lakes/contract';
+import { LakePolygon, LevelNow, PhotoView } from '../lakes/contract';
 import { Bottom, Cover, Grade, Substrate } from '../surveys/contract';
 
 /** draft → submitted → approved by another → published; then superseded by the next, or withdrawn. */
@@ -129,7 +129,7 @@ export const ChartView = z.object({
   publishedAt: z.iso.datetime().nullable(),
   age: z.enum(['current', 'ageing', 'old', 'changed']),
   datumM: z.number(),
-  levelNow: z.object({ levelM: z.number(), at: z.iso.datetime(), boardCode: z.string() }).nullable(),
+  levelNow: LevelNow.nullable(), // against this chart's datum
   contourStepM: z.number(),
   origin: Position,
   outline: LakePolygon,
@@ -224,6 +224,11 @@ export const SpotView = z.object({
   depthSigmaM: z.number().nullable(),
   bottom: Bottom.nullable(),
   bottomConfidence: z.number().nullable(),
+  /** What depth and bottom are quoted from: a cast within the usable radius, else the charted surface. */
+  quotedFrom: z.enum(['cast', 'chart']).nullable(),
+  surveyLevelM: z.number().nullable(), // the board at that cast, as `levelNow`; null when quoted from the chart
+  depthAtSurveyM: z.number().nullable(), // below the water of that hour
+  words: z.string(), // all of it in a sentence, lengths in metres
   grade: Grade.nullable(),
   surveyedOn: z.iso.date().nullable(),
   section: z.array(SectionPoint).nullable(),
@@ -257,7 +262,7 @@ export const PegPageView = z.object({
       age: z.enum(['current', 'ageing', 'old', 'changed']),
     })
     .nullable(),
-  levelNow: z.object({ levelM: z.number(), at: z.iso.datetime(), boardCode: z.string() }).nullable(),
+  levelNow: LevelNow.nullable(), // against this chart's datum
   spots: z.array(SpotView).nullable(),
   extract: z // the piece of chart in front of the peg, on the lake's plane
     .object({

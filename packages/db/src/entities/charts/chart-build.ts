@@ -10,5 +10,6 @@ export class ChartBuild {
   @Column('double precision') share!: number;
   @Column('text', { nullable: true }) error!: string | null;
   @Column('timestamptz', { name: 'cancel_asked_at', nullable: true }) cancelAskedAt!: Date | null;
+  @Column('int', { default: 0 }) tries!: number; // runs begun since it was last asked for
   @Column('timestamptz', { name: 'updated_at' }) updatedAt!: Date;
 }
