@@ -103,10 +103,12 @@ describe('the refresh token', () => {
   });
 
   test('is not taken from a request that another site could have made', async () => {
-    const { browser } = await aSignIn();
+    const { browser, accessToken } = await aSignIn();
     const cookie = browser.cookie() ?? '';
     const bare = (method: 'post' | 'delete', path: string) =>
-      request(here.app)[method](`/api/accounts/${path}`).set('Cookie', cookie);
+      request(here.app)
+        [method](`/api/accounts/${path}`)
+        .set({ Cookie: cookie, authorization: `Bearer ${accessToken}` });
     for (const answer of [
       await bare('post', 'session/refresh'),
       await bare('delete', 'session'),

@@ -50,10 +50,10 @@ export async function aServer({ env = {}, logger }: Wishes = {}): Promise<TestSe
     ...env,
   });
   const source = await makeDataSource(config.databaseUrl).initialize();
-  const boss = await openQueue(config.databaseUrl);
+  const log = logger ?? makeLogger(config);
+  const boss = await openQueue(config.databaseUrl, (err) => log.error({ err }, 'queue'));
   let now = new Date(START);
   const server: Server = { config, source, jobs: jobsOn(boss), clock: () => now };
-  const log = logger ?? makeLogger(config);
   const ground = { boss, server, logger: log, handlers };
   const settle = () => workOff(ground);
   const running: { stop: () => Promise<void> }[] = [];

@@ -1,6 +1,6 @@
 import { makeDataSource } from '@mereward/db/data-source';
 import { readFileSync } from 'node:fs';
-import { createServer } from 'node:http';
+import { createServer, type Server } from 'node:http';
 import { makeApp } from './app';
 import { readConfig, type Config } from './config';
 import { handlers } from './handlers';
@@ -8,6 +8,8 @@ import { makeLogger } from './http/logging';
 import { jobsOn, openQueue } from './jobs/queue';
 import { work } from './jobs/worker';
 import { openCapture } from './mail/capture';
+
+const FINISH_WITHIN_MS = 10_000;
 
 /** The instant of CLOCK_FILE when a test sets one, else the machine's. */
 function clockOf(config: Config): () => Date {
@@ -22,26 +24,53 @@ async function main(): Promise<void> {
   if (capture) logger.warn('SMTP_URL is not set: mail is caught here and reaches nobody');
   const config = capture ? { ...settings, smtpUrl: capture.url } : settings;
   const source = await makeDataSource(config.databaseUrl).initialize();
-  const boss = await openQueue(config.databaseUrl);
+  const boss = await openQueue(config.databaseUrl, (err) => logger.error({ err }, 'queue'));
   const server = { config, source, jobs: jobsOn(boss), clock: clockOf(config) };
   const worker = await work({ boss, server, logger, handlers });
   const http = createServer(makeApp(server, logger, capture));
-  http.listen(config.port, config.host, () => {
-    logger.info({ port: config.port }, 'listening');
-  });
+  await listen(http, config);
+  logger.info({ port: config.port, url: config.publicUrl }, 'listening');
 
-  let closing = false;
   const close = async () => {
-    if (closing) return;
-    closing = true;
-    http.closeIdleConnections();
-    await new Promise((done) => http.close(done)); // what is under way may finish
+    await finish(http);
     await worker.stop();
-    await boss.stop({ graceful: true, timeout: 10_000 });
+    await boss.stop({ graceful: true, wait: true, timeout: FINISH_WITHIN_MS });
     await capture?.close();
     await source.destroy();
+    logger.info('stopped');
   };
-  for (const signal of ['SIGTERM', 'SIGINT'] as const) process.on(signal, () => void close());
+  let closing = false;
+  const stop = () => {
+    if (closing) process.exit(1); // asked a second time: at once
+    closing = true;
+    close().then(
+      () => process.exit(0),
+      (err: unknown) => {
+        logger.error({ err }, 'stopping failed');
+        process.exit(1);
+      },
+    );
+  };
+  for (const signal of ['SIGTERM', 'SIGINT'] as const) process.on(signal, stop);
+}
+
+function listen(http: Server, { port, host }: Config): Promise<void> {
+  return new Promise((listening, failed) => {
+    http.once('error', failed);
+    http.listen(port, host, () => {
+      http.off('error', failed);
+      listening();
+    });
+  });
+}
+
+/** Takes no new request, lets those under way finish, and breaks off only what outlasts its time. */
+async function finish(http: Server): Promise<void> {
+  const idle = setInterval(() => http.closeIdleConnections(), 100);
+  const broken = setTimeout(() => http.closeAllConnections(), FINISH_WITHIN_MS);
+  await new Promise((done) => http.close(done));
+  clearInterval(idle);
+  clearTimeout(broken);
 }
 
 await main();

@@ -2,8 +2,11 @@ import { randomUUID } from 'node:crypto';
 import pino from 'pino';
 import { pinoHttp } from 'pino-http';
 import type { Config } from '../config';
+import { plainError } from './plain-error';
 
-export const makeLogger = (config: Config) => pino({ level: config.logLevel });
+/** Lines of JSON to standard output, or to `into`. */
+export const makeLogger = (config: Config, into: pino.DestinationStream = pino.destination(1)) =>
+  pino({ level: config.logLevel, serializers: { err: plainError } }, into);
 
 /** One line a request: method, path without its query, status, time, id. No address, no name, no body. */
 export function logRequests(logger: pino.Logger) {
@@ -14,8 +17,14 @@ export function logRequests(logger: pino.Logger) {
       res.setHeader('X-Request-Id', id);
       return id;
     },
+    wrapSerializers: false, // the wrapped ones would add headers and addresses
     serializers: {
-      req: (req: { method: string; url: string }) => ({ method: req.method, path: withoutSecrets(req.url) }),
+      err: plainError,
+      req: (req: { id: string; method: string; url: string; originalUrl?: string }) => ({
+        id: req.id,
+        method: req.method,
+        path: withoutSecrets(req.originalUrl ?? req.url),
+      }),
       res: (res: { statusCode: number }) => ({ status: res.statusCode }),
     },
     customLogLevel: (_req, res, error) => (error || res.statusCode >= 500 ? 'error' : 'info'),

@@ -2,6 +2,7 @@ import type { Request, RequestHandler, Response, Router } from 'express';
 import { z } from 'zod';
 import type { Ctx } from '../ctx';
 import { parse } from './parse';
+import { signedInOnly } from './session';
 import { inTransaction, reading } from './transaction';
 
 type Method = 'get' | 'post' | 'put' | 'patch' | 'delete';
@@ -21,7 +22,10 @@ export type RouteSpec = {
   guards?: readonly (() => RequestHandler)[];
 };
 
-const guarded = (spec: RouteSpec): RequestHandler[] => (spec.guards ?? []).map((guard) => guard());
+const guarded = ({ signIn, guards = [] }: RouteSpec): RequestHandler[] => [
+  ...(signIn === 'needed' ? [signedInOnly] : []),
+  ...guards.map((guard) => guard()),
+];
 
 export type Route = RouteSpec & { attach: (router: Router) => void };
 

@@ -1,6 +1,6 @@
 import { Role } from '@mereward/shared/accounts/contract';
 import { Problem } from '@mereward/shared/problems/problem';
-import type { Request } from 'express';
+import type { Request, RequestHandler } from 'express';
 import jwt from 'jsonwebtoken';
 import { createSecretKey, type KeyObject } from 'node:crypto';
 import type { EntityManager } from 'typeorm';
@@ -50,6 +50,12 @@ function claimsIn(req: Request): z.infer<typeof Claims> | null {
     throw runOut();
   }
 }
+
+/** Before a route that nobody may use without a sign-in: turned away before a body is read. */
+export const signedInOnly: RequestHandler = (req, _res, next) => {
+  if (!claimsIn(req)) throw new Problem('not-signed-in', 'Sign in first');
+  next();
+};
 
 const Held = z.object({
   tokens_from: z.date().nullable(),

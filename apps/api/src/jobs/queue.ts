@@ -8,8 +8,10 @@ const QUEUES: Record<JobName, { retryLimit: number; retryDelay: number; expireIn
   'photo.resize': { retryLimit: 2, retryDelay: 5, expireInSeconds: 180 },
 };
 
-export async function openQueue(databaseUrl: string): Promise<PgBoss> {
+/** `failed` is told what goes wrong between jobs, the database being away above all; the queue goes on trying. */
+export async function openQueue(databaseUrl: string, failed: (error: Error) => void): Promise<PgBoss> {
   const boss = new PgBoss({ connectionString: databaseUrl, max: 4 });
+  boss.on('error', failed);
   await boss.start();
   for (const [name, policy] of Object.entries(QUEUES))
     await boss.createQueue(name, { name, ...policy, retryBackoff: true });

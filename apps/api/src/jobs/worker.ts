@@ -1,6 +1,7 @@
 import type PgBoss from 'pg-boss';
 import type pino from 'pino';
 import type { JobName } from '../ctx';
+import { plainError } from '../http/plain-error';
 import type { Server } from '../http/server';
 
 /** One job in hand. A payload is read with its own schema; `id` stays the same over every attempt. */
@@ -64,15 +65,9 @@ async function perform(ground: Work, name: JobName, job: PgBoss.JobWithMetadata<
   try {
     await handlers[name]?.({ id: job.id, payload: job.data, attempt }, server, logger);
   } catch (error) {
-    logger.error({ job: name, id: job.id, attempt, err: plain(error) }, 'a job failed');
-    throw new Error(plain(error).message, { cause: error });
+    logger.error({ job: name, id: job.id, attempt, err: error }, 'a job failed');
+    throw new Error(plainError(error).message); // the queue keeps what it is thrown
   }
   logger.info({ job: name, id: job.id, attempt }, 'a job is done');
   if (FORGOTTEN.has(name)) await boss.deleteJob(name, job.id);
-}
-
-/** What may be written down of a failure: an SMTP server's answer repeats the address it refused. */
-function plain(error: unknown): { type: string; message: string } {
-  if (!(error instanceof Error)) return { type: 'unknown', message: 'no error was given' };
-  return { type: error.name, message: error.message.replace(/[^\s<>"'(]+@[^\s<>"'),;]+/g, '…@…') };
 }
