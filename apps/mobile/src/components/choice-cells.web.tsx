@@ -20,6 +20,7 @@ const unseen: CSSProperties = {
 const cellLook = (c: Colours, chosen: boolean, minHeight: number): CSSProperties => ({
   ...cssType('body', chosen ? 'semibold' : 'regular'),
   position: 'relative',
+  cursor: 'pointer',
   boxSizing: 'border-box',
   minHeight,
   padding: space.small,

@@ -1,3 +1,4 @@
+import { usePathname } from 'expo-router';
 import { View } from 'react-native';
 import { Problem } from '@mereward/shared/problems/problem';
 import { Button } from '@/components/button';
@@ -15,6 +16,7 @@ type Props = {
 
 /** What went wrong, what was kept and what to do, said aloud as it appears. */
 export function ProblemNote({ problem, onRetry }: Props) {
+  const path = usePathname();
   if (problem === null || problem === undefined) return null;
   const { title, whatToDo } = problemWords(problem);
   const known = problem instanceof Problem ? problem : undefined;
@@ -26,14 +28,16 @@ export function ProblemNote({ problem, onRetry }: Props) {
           {error.detail}
         </Text>
       ))}
-      {known?.instance ? (
+      {known?.kind === 'internal' && known.instance ? (
         <Text size="small" tone="inkSoft">
           Reference {known.instance}
         </Text>
       ) : null}
       <View style={{ flexDirection: 'row', flexWrap: 'wrap', gap: space.small }}>
         {onRetry ? <Button label="Try again" onPress={onRetry} /> : null}
-        {known?.kind === 'not-signed-in' ? <LinkButton label="Sign in" href="/sign-in" /> : null}
+        {known?.kind === 'not-signed-in' && path !== '/sign-in' ? (
+          <LinkButton label="Sign in" href={`/sign-in?next=${encodeURIComponent(path)}`} />
+        ) : null}
       </View>
     </Note>
   );
