@@ -25,6 +25,8 @@ export type TestServer = {
   settle: () => Promise<number>;
   /** Starts the worker as the real server runs it, polling; `close` stops it. */
   startWorker: () => Promise<void>;
+  /** Where caught mail is sent to, for what stands between. */
+  captureUrl: string;
   /** Mail caught so far, newest last. */
   mails: readonly CapturedMail[];
   /** Does the queued jobs and answers the newest mail to that address; fails when there is none. */
@@ -64,6 +66,7 @@ export async function aServer({ env = {}, logger }: Wishes = {}): Promise<TestSe
     pass: (seconds) => void (now = new Date(now.getTime() + seconds * 1000)),
     settle,
     startWorker: async () => void running.push(await work(ground)),
+    captureUrl: capture.url,
     mails: capture.mails,
     mailTo: async (address) => {
       await settle();
