@@ -105,14 +105,15 @@ describe('the refresh token', () => {
   test('is not taken from a request that another site could have made', async () => {
     const { browser, accessToken } = await aSignIn();
     const cookie = browser.cookie() ?? '';
-    const bare = (method: 'post' | 'delete', path: string) =>
-      request(here.app)
-        [method](`/api/accounts/${path}`)
-        .set({ Cookie: cookie, authorization: `Bearer ${accessToken}` });
+    const headers = { Cookie: cookie, authorization: `Bearer ${accessToken}` };
+    const bare = (method: 'post' | 'delete', path: string) => {
+      const ask = request(here.app);
+      return (method === 'post' ? ask.post(path) : ask.delete(path)).set(headers);
+    };
     for (const answer of [
-      await bare('post', 'session/refresh'),
-      await bare('delete', 'session'),
-      await bare('delete', 'sessions'),
+      await bare('post', '/api/accounts/session/refresh'),
+      await bare('delete', '/api/accounts/session'),
+      await bare('delete', '/api/accounts/sessions'),
     ])
       expect([answer.status, answer.body.kind]).toEqual([403, 'forbidden']);
     expect((await browser.refresh()).status).toBe(200);

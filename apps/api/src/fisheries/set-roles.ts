@@ -13,7 +13,7 @@ type Whose = { fisheryId: string; accountId: string };
 /** Sets the whole list of one person's roles. An empty list takes them out; invite them to have them back. */
 export async function setRoles(ctx: Ctx, whose: Whose, input: SetRoles): Promise<PeopleView> {
   const { tx, now } = ctx;
-  const { fisheryId, accountId } = whose;
+  const { fisheryId } = whose;
   await lockRoles(tx, fisheryId);
   const actor = await asItStands(ctx, fisheryId);
   const givable = givableRoles(actor, fisheryId);
