@@ -30,7 +30,7 @@ export function useButtonLook(kind: ButtonKind, { grow, bank, disabled }: Terms)
     words: { color: ink, textAlign: 'center', flexShrink: 1 },
     box: (pressed) => ({
       minHeight: bank ? target.bank : target.plain,
-      minWidth: target.plain,
+      minWidth: bank ? target.bank : target.plain,
       paddingHorizontal: kind === 'quiet' ? space.small : space.page,
       paddingVertical: space.small,
       borderRadius: radius.control,

@@ -30,8 +30,13 @@ export function Overlay({ open, onClose, title, place, children }: OverlayProps)
   const wide = useWide();
   useEffect(() => {
     const box = dialog.current;
-    if (open && box && !box.open) box.showModal();
-    return () => box?.close();
+    if (!open || !box) return undefined;
+    const cameFrom = document.activeElement;
+    box.showModal();
+    return () => {
+      box.close();
+      if (cameFrom instanceof HTMLElement) cameFrom.focus(); // the box is gone by now and can't hand it back itself
+    };
   }, [open]);
   if (!open) return null;
   return (

@@ -67,13 +67,11 @@ export function Places({ places, wide }: Props) {
     />
   ));
   return wide ? (
-    <View style={styles.rail}>
+    <View role="navigation" aria-label="Places" style={styles.rail}>
       <View style={{ paddingLeft: space.page + 4 }}>
         <Wordmark />
       </View>
-      <View role="navigation" aria-label="Places">
-        {links}
-      </View>
+      <View>{links}</View>
     </View>
   ) : (
     <View role="navigation" aria-label="Places" style={styles.bar}>

@@ -20,8 +20,6 @@ export function Section({ title, note, end, bare = false, children }: Props) {
   const { colours } = useTheme();
   return (
     <View
-      role="region"
-      aria-label={title}
       style={{
         gap: space.medium,
         ...(bare ? {} : { borderTopWidth: 1, borderTopColor: colours.rule, paddingTop: space.page }),

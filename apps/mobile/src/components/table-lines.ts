@@ -26,15 +26,36 @@ export type TableLook = {
 
 const MANY_ROWS = 10; // fewer can be read faster than a filter can be typed
 
-function content(shown: ReactNode, size: SizeName): ReactNode {
+/** Decimals that a column's numbers need, two at most, so that they line up. */
+function decimalsOf(values: readonly CsvCell[]): number {
+  const places = values.map((value) =>
+    typeof value === 'number' ? (figure(value, 2).replace(/0+$/, '').split('.')[1] ?? '').length : 0,
+  );
+  return Math.max(0, ...places);
+}
+
+type Manner = { size: SizeName; decimals: number; names: boolean; leads: boolean };
+
+function content(shown: ReactNode, { size, decimals, names, leads }: Manner): ReactNode {
   if (isValidElement(shown)) return shown;
-  const words = typeof shown === 'number' ? figure(shown, Number.isInteger(shown) ? 0 : 2) : shown;
-  return createElement(Text, { size }, words);
+  const words = typeof shown === 'number' ? figure(shown, decimals) : shown;
+  return createElement(
+    Text,
+    { size, weight: names ? 'semibold' : 'regular', tone: leads ? 'water' : 'ink' },
+    words,
+  );
 }
 
 /** What a table shows, freed from what its rows are. */
 export function tableLook<Row>(props: TableProps<Row>, size: SizeName): TableLook {
   const { caption, columns, rows, rowKey, href, csvName, filter } = props;
+  const decimals = columns.map((column) => decimalsOf(rows.map((row) => column.value(row))));
+  const manner = (at: number): Manner => ({
+    size,
+    decimals: decimals[at] ?? 0,
+    names: at === 0,
+    leads: at === 0 && href !== undefined,
+  });
   return {
     caption,
     csvName,
@@ -44,7 +65,9 @@ export function tableLook<Row>(props: TableProps<Row>, size: SizeName): TableLoo
       key: rowKey(row),
       href: href ? href(row) : null,
       values: columns.map((column) => column.value(row)),
-      shown: columns.map((column) => content(column.show ? column.show(row) : column.value(row), size)),
+      shown: columns.map((column, at) =>
+        content(column.show ? column.show(row) : column.value(row), manner(at)),
+      ),
     })),
   };
 }

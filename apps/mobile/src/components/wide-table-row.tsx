@@ -1,7 +1,7 @@
 import { Link } from 'expo-router';
 import type { TableHead, TableLine } from '@/components/table-lines';
 import { cssType } from '@/constants/css-type';
-import { space } from '@/constants/layout';
+import { space, target } from '@/constants/layout';
 import { useTheme } from '@/hooks/use-theme';
 
 type Props = { heads: readonly TableHead[]; line: TableLine };
@@ -14,8 +14,8 @@ export function WideTableRow({ heads, line }: Props) {
       {heads.map(({ key, figures }, at) => {
         const style = {
           ...cssType('small'),
-          height: 44,
-          padding: `${String(space.hair)}px ${String(space.small)}px`,
+          height: target.plain,
+          padding: `0 ${String(space.small)}px`,
           textAlign: figures ? ('right' as const) : ('left' as const),
           borderBottom: `1px solid ${colours.rule}`,
           color: colours.ink,
@@ -35,7 +35,14 @@ export function WideTableRow({ heads, line }: Props) {
             ) : (
               <Link
                 href={line.href}
-                style={{ color: colours.water, textDecorationLine: 'underline', paddingVertical: 12 }}
+                style={{
+                  color: colours.water,
+                  textDecorationLine: 'underline',
+                  display: 'flex',
+                  alignItems: 'center',
+                  minHeight: target.plain,
+                  minWidth: target.plain,
+                }}
               >
                 {line.shown[0]}
               </Link>

@@ -1,11 +1,13 @@
 import { useState } from 'react';
 import { SignUp } from '@mereward/shared/accounts/contract';
+import { View } from 'react-native';
+import { Button } from '@/components/button';
 import { DraftFormFrame } from '@/components/draft-form-frame';
 import { FormField } from '@/components/form-field';
 import { Note } from '@/components/note';
 import { Page } from '@/components/page';
 import { Text } from '@/components/text';
-import { TextLink } from '@/components/text-link';
+import { space } from '@/constants/layout';
 import { signUp } from '@/features/accounts/api';
 import { useQueryText } from '@/features/accounts/next-page';
 import { SendAgain } from '@/features/accounts/send-again';
@@ -25,7 +27,7 @@ export function SignUpScreen() {
     },
     onDone: setMailedTo,
   });
-  if (mailedTo !== null) return <LookInYourMail email={mailedTo} />;
+  if (mailedTo !== null) return <LookInYourMail email={mailedTo} onWrong={() => setMailedTo(null)} />;
   return (
     <Page title="Make an account" back={{ label: 'Sign in', href: '/sign-in' }}>
       <DraftFormFrame form={form} label="Make an account" act="Make the account" busyLabel="Making it…">
@@ -50,17 +52,17 @@ export function SignUpScreen() {
   );
 }
 
-function LookInYourMail({ email }: { email: string }) {
+function LookInYourMail({ email, onWrong }: { email: string; onWrong: () => void }) {
   return (
     <Page title="Look in your mail" back={{ label: 'Sign in', href: '/sign-in' }}>
       <Note kind="fine" title={`A mail is on its way to ${email}`} live>
         Open the link in it to confirm that the address is yours; it works for 24 hours. Then you can sign in.
       </Note>
-      <Text>
-        Nothing there? Look among the unwanted mail first, or{' '}
-        <TextLink href="/sign-up">see that the address is right</TextLink>.
-      </Text>
-      <SendAgain email={email} />
+      <Text>Nothing there? Look among the unwanted mail first, and see that the address is right.</Text>
+      <View style={{ flexDirection: 'row', flexWrap: 'wrap', gap: space.small, alignItems: 'flex-start' }}>
+        <SendAgain email={email} />
+        <Button label="The address is wrong" kind="quiet" onPress={onWrong} />
+      </View>
     </Page>
   );
 }
