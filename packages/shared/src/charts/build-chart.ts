@@ -15,7 +15,7 @@ import { chartSamples, flagOutliers } from './samples';
 import type { ChartSamples } from './samples';
 import { sortSoundings } from './sounding-roles';
 import type { ChartSounding, LeftOut } from './sounding-roles';
-import { chooseSurface } from './surface-choice';
+import { chooseSurface, nameOf } from './surface-choice';
 import type { ChosenSurface } from './surface-choice';
 import { chartSurface } from './chart-surface';
 import type { ChartSurface } from './chart-surface';
@@ -70,12 +70,20 @@ export function buildChart(input: ChartInput, report: (step: string, share: numb
   const soundingCount = samples.soundingIds.length;
   const shoreDistanceM = shoreDistancesM(input.outline, samples.points);
   report('Choosing the variogram', 0.05);
-  const chosen = chooseSurface({ points: samples.points, soundingCount, shoreDistanceM }, (share) =>
-    report('Choosing the variogram', (5 + 40 * share) / 100),
+  const chosen = chooseSurface(
+    { ...samples, soundingCount, shoreDistanceM, maxGapM: input.maxGapM },
+    (share) => report('Choosing the variogram', (5 + 40 * share) / 100),
   );
   report('Kriging the depths', 0.45);
   const surface = chartSurface(
-    { outline: input.outline, frame, samples, chosen: chosen.best, maxGapM: input.maxGapM },
+    {
+      outline: input.outline,
+      frame,
+      samples,
+      chosen: chosen.best,
+      misses: chosen.misses,
+      maxGapM: input.maxGapM,
+    },
     (share) => report('Kriging the depths', (45 + 40 * share) / 100),
   );
   report('Drawing the isobaths', 0.85);
@@ -156,10 +164,10 @@ function measureWater(
 
 function qualityOf(
   samples: ChartSamples,
-  { best, candidates, words }: ChosenSurface,
+  { best, candidates, words, residuals, validation }: ChosenSurface,
   surveyedShare: number,
 ): QualityView {
-  const { validation, setup, residuals } = best;
+  const { setup } = best;
   const idOf = (row: number) => samples.soundingIds[row]![0]!;
   return {
     soundings: validation.count,
@@ -181,9 +189,9 @@ function qualityOf(
       rangeM: setup.variogram.rangeM,
     },
     models: candidates.map((c) => ({
-      model: c.withShoreDistance ? `${c.model} with shore distance` : c.model,
-      rmseM: c.validation.rmseM,
-      standardisedVariance: c.validation.standardisedVariance,
+      model: nameOf(c),
+      rmseM: c.rmseM,
+      standardisedVariance: c.standardisedVariance,
     })),
     words,
   };

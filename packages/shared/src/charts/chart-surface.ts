@@ -11,6 +11,9 @@ import { MOST_GAP_M, surveyedPlaces } from './mask';
 import type { Targets } from './sample-points';
 import { soundingDistancesM } from './samples';
 import type { ChartSamples } from './samples';
+import { shoreDrift } from './shore-drift';
+import { localSpread } from './local-spread';
+import type { Misses } from './local-spread';
 import type { Candidate } from './surface-choice';
 import { placesOf, rimNodes, shoreDistancesM, waterNodes } from './water-nodes';
 
@@ -19,6 +22,7 @@ export type SurfaceInput = {
   frame: GridFrame;
   samples: ChartSamples;
   chosen: Candidate;
+  misses: Misses;
   maxGapM: number;
 };
 
@@ -38,24 +42,26 @@ const CHUNK = 8192;
 /**
  * Depth and σ at every water node near enough to a sounding. Depths use all samples at once (nearest 24 above 800); σ uses
  * the nearest 16, which never understates the σ of all. σ holds the nugget: what the bed does between casts is part of
- * not knowing the depth at a place, while the drawn depth leaves it out.
+ * not knowing the depth at a place, while the drawn depth leaves it out; and it is widened or narrowed by how well the
+ * soundings round about were foretold.
  */
 export function chartSurface(input: SurfaceInput, report: (share: number) => void): ChartSurface {
-  const { outline, frame, samples, chosen, maxGapM } = input;
+  const { outline, frame, samples, chosen, misses, maxGapM } = input;
   const water = waterNodes(outline, frame);
   const near = nodesNear(input, water);
   const places = placesOf(near, frame);
   const shoreDistanceM = shoreDistancesM(outline, places);
-  const targets = chosen.withShoreDistance ? { ...places, driftM: shoreDistanceM } : places;
+  const targets = withDrift(chosen, places, shoreDistanceM);
   const variance = inChunks(
     targets,
     (part) => varianceAt(chosen.setup, part),
     (share) => report(0.3 * share),
   );
-  const sigmaM = variance.map((v) => Math.sqrt(v + chosen.setup.variogram.nuggetM2));
+  const spread = localSpread(misses, places, maxGapM);
+  const sigmaM = variance.map((v, t) => Math.sqrt((v + chosen.setup.variogram.nuggetM2) * spread[t]!));
   const soundingDistanceM = soundingDistancesM(samples, places);
   const spreadM = spreadOf(samples);
-  const kept = surveyedPlaces({ soundingDistanceM, shoreDistanceM, sigmaM, spreadM }, maxGapM);
+  const kept = surveyedPlaces({ soundingDistanceM, sigmaM, spreadM }, maxGapM);
   const surveyed = new Uint8Array(water.length);
   places.nodes.forEach((node, t) => (surveyed[node] = kept[t]!));
   const predict = predictorOf(chosen.setup);
@@ -79,13 +85,18 @@ function nodesNear({ frame, samples, maxGapM }: SurfaceInput, water: Uint8Array)
   const all = placesOf(water, frame);
   const distanceM = soundingDistancesM(samples, all);
   const near = new Uint8Array(water.length);
-  const limitM = 1.5 * Math.min(maxGapM, MOST_GAP_M);
+  const limitM = Math.min(maxGapM, MOST_GAP_M);
   all.nodes.forEach((node, t) => (near[node] = distanceM[t]! <= limitM ? 1 : 0));
   return near;
 }
 
 function varianceAt(setup: KrigingSetup, targets: Targets): Float64Array {
   return krigeNeighbourhood(setup, targets, { neighbours: SIGMA_NEIGHBOURS }).varianceM2;
+}
+
+function withDrift({ driftLengthM }: Candidate, places: Targets, shoreDistanceM: Float64Array): Targets {
+  const { xM, yM } = places;
+  return driftLengthM === null ? { xM, yM } : { xM, yM, driftM: shoreDrift(shoreDistanceM, driftLengthM) };
 }
 
 type Predict = (targets: Targets) => Float64Array;
@@ -145,8 +156,7 @@ function fillRim(
     xM: Float64Array.from(mirrored, (m) => m.image.xM),
     yM: Float64Array.from(mirrored, (m) => m.image.yM),
   };
-  const depths = predict(
-    chosen.withShoreDistance ? { ...part, driftM: Float64Array.from(mirrored, (m) => m.distanceM) } : part,
-  );
+  const distancesM = Float64Array.from(mirrored, (m) => m.distanceM);
+  const depths = predict(withDrift(chosen, part, distancesM));
   mirrored.forEach(({ node, wet }, t) => (withRim.values[node] = wet ? -Math.max(0, depths[t]!) : 0));
 }

@@ -10,7 +10,7 @@ export type ChartStatus = z.infer<typeof ChartStatus>;
 /** Isobath steps offered, in metres: 0.25, 0.5, 1 m and 1, 2, 5 ft. */
 export const CONTOUR_STEPS_M = [0.25, 0.5, 1, 0.3048, 0.6096, 1.524] as const;
 
-/** POST /api/lakes/:lakeId/charts: makes a draft and queues its building. */
+/** POST /api/lakes/:lakeId/charts: makes a draft and queues its building; answers 202 ChartReview. */
 export const DraftChart = z.strictObject({
   id: z.uuid(),
   title: z.string().trim().min(1).max(120),
@@ -89,7 +89,8 @@ export const ChartReview = z.object({
 export type ChartReview = z.infer<typeof ChartReview>;
 
 /**
- * POST /api/charts/:chartId/submit, /approve (publishes), /cancel-build, /rebuild, /withdraw; DELETE discards a draft.
+ * POST /api/charts/:chartId/submit, /approve (publishes), /cancel-build, /rebuild, /withdraw, each answered with
+ * ChartReview; DELETE discards a draft.
  */
 export const WithdrawChart = z.strictObject({ reason: z.string().trim().min(1).max(300) });
 export type WithdrawChart = z.infer<typeof WithdrawChart>;
@@ -201,9 +202,12 @@ export const SpotDetails = z.strictObject({
   note: z.string().trim().max(500),
 });
 export type SpotDetails = z.infer<typeof SpotDetails>;
-/** PUT /api/pegs/:pegId/spots/:spotId; DELETE takes it away. */
+/** PUT /api/pegs/:pegId/spots/:spotId answers SpotKept; DELETE takes it away. */
 export const PutSpot = z.strictObject({ details: SpotDetails, version: z.int().nullable() });
 export type PutSpot = z.infer<typeof PutSpot>;
+
+export const SpotKept = z.object({ version: z.int() });
+export type SpotKept = z.infer<typeof SpotKept>;
 
 /** A spot as reached from this peg with the survey's sticks. */
 export const SpotView = z.object({
@@ -213,6 +217,7 @@ export const SpotView = z.object({
   xM: z.number(),
   yM: z.number(),
   usableRadiusM: z.number(),
+  rangeM: z.number(), // over the water, from the peg's origin mark
   lineOutM: z.number(),
   wrapsWhole: z.int(),
   remainderM: z.number(),
@@ -274,6 +279,8 @@ export const PegPageView = z.object({
     .nullable(),
   layerNotes: LayerNotes,
   cautions: z.array(z.string()),
+  rigCaution: z.string(), // beside every piece of advice on presentation
+  emergencyWords: z.string(),
   cardUrl: z.string(), // GET /api/pegs/:pegId/card.pdf
   ticket: z.object({ from: z.iso.datetime(), until: z.iso.datetime() }).nullable(), // the reader's own, if any
 });

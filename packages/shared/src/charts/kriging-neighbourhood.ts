@@ -8,6 +8,8 @@ export type NeighbourhoodOptions = {
   neighbours: number;
   /** Leave sample t out when predicting target t; the targets are then the samples themselves. */
   leaveOneOut?: boolean;
+  /** With it, the first `count` samples nearer to the target than this many metres are left out as well. */
+  leaveNearOut?: { withinM: number; count: number };
 };
 
 /**
@@ -27,6 +29,10 @@ export function krigeNeighbourhood(
   const most = Math.min(options.neighbours, setup.samples.xM.length - (options.leaveOneOut === true ? 1 : 0));
   if (most < 1) throw new RangeError('Kriging needs at least one neighbour.');
   const search = new NearestSearch(indexSamples(setup.samples.xM, setup.samples.yM), most);
+  if (options.leaveNearOut !== undefined) {
+    search.apartM2 = options.leaveNearOut.withinM ** 2;
+    search.apartBelow = options.leaveNearOut.count;
+  }
   const local = new LocalSystem(setup, most);
   for (let t = 0; t < count; t++) {
     if (options.leaveOneOut === true) search.without = t;

@@ -62,6 +62,9 @@ export class NearestSearch {
   found = 0;
   /** Sample left out of the search; −1 for none. */
   without = -1;
+  /** Samples below this number and nearer than this are left out too; 0, 0 for none. */
+  apartBelow = 0;
+  apartM2 = 0;
 
   constructor(
     private readonly index: SampleIndex,
@@ -116,13 +119,14 @@ export class NearestSearch {
 
   private scanBucket(x: number, y: number, bucket: number): void {
     const { xM, yM, starts, members } = this.index;
-    const { ids, squaredM2, count } = this;
+    const { ids, squaredM2, count, apartM2, apartBelow } = this;
     for (let m = starts[bucket]!, end = starts[bucket + 1]!; m < end; m++) {
       const id = members[m]!;
       if (id === this.without) continue;
       const dx = xM[id]! - x;
       const dy = yM[id]! - y;
       const d2 = dx * dx + dy * dy;
+      if (d2 < apartM2 && id < apartBelow) continue;
       let slot = this.found;
       if (slot === count) {
         const worst = squaredM2[count - 1]!;

@@ -78,11 +78,10 @@ describe('the samples of a chart', () => {
 });
 
 describe('what counts as surveyed', () => {
-  const at = (distanceM: number, shoreM: number, sigmaM = 0.1) =>
+  const at = (distanceM: number, sigmaM = 0.1) =>
     surveyedPlaces(
       {
         soundingDistanceM: Float64Array.of(distanceM),
-        shoreDistanceM: Float64Array.of(shoreM),
         sigmaM: Float64Array.of(sigmaM),
         spreadM: 1,
       },
@@ -90,18 +89,18 @@ describe('what counts as surveyed', () => {
     )[0];
 
   test('within the gap of a cast it does, beyond it does not', () => {
-    expect(at(8, 50)).toBe(1);
-    expect(at(8.1, 50)).toBe(0);
-  });
-
-  test('the margin counts only beside a surveyed line', () => {
-    expect(at(11, 3)).toBe(1);
-    expect(at(13, 3)).toBe(0);
-    expect(at(13, 0.1)).toBe(0);
+    expect(at(8)).toBe(1);
+    expect(at(8.1)).toBe(0);
   });
 
   test('a place whose σ is over its share of the lake’s spread does not', () => {
-    expect(at(5, 50, 0.61)).toBe(0);
+    expect(at(5, 0.59)).toBe(1);
+    expect(at(5, 0.61)).toBe(0);
+  });
+
+  test('a limit over fifteen metres is refused', () => {
+    const none = { soundingDistanceM: Float64Array.of(1), sigmaM: Float64Array.of(0.1), spreadM: 1 };
+    expect(() => surveyedPlaces(none, 15.1)).toThrow('at most 15 m');
   });
 });
 

@@ -20,6 +20,7 @@ const MOST_SHORE_POINTS = 300;
 export type ChartSamples = {
   points: SamplePoints; // merged soundings first, then the shore at depth 0
   soundingIds: string[][]; // ids merged into each of the first rows
+  gapM: number; // mean distance from a sounding to its nearest other
   shoreSpacingM: number;
 };
 
@@ -30,7 +31,8 @@ export type ChartSamples = {
  */
 export function chartSamples(soundings: readonly Sounding[], outline: Outline): ChartSamples {
   const places = mergePlaces([...soundings].sort((a, b) => (a.id < b.id ? -1 : a.id > b.id ? 1 : 0)));
-  const shoreSpacingM = shoreSpacing(places, outline);
+  const gapM = places.length > 1 ? meanGapM(places) : SHORE_SPACING_LIMITS_M[1];
+  const shoreSpacingM = shoreSpacing(gapM, outline);
   const shore = ringsOf(outline).flatMap((ring) => alongRing(ring, shoreSpacingM));
   const column = (of: (place: Place) => number, shoreOf: (point: Point) => number) =>
     Float64Array.from([...places.map(of), ...shore.map(shoreOf)]);
@@ -54,6 +56,7 @@ export function chartSamples(soundings: readonly Sounding[], outline: Outline): 
       ),
     },
     soundingIds: places.map((place) => place.ids),
+    gapM,
     shoreSpacingM,
   };
 }
@@ -114,10 +117,9 @@ function mergeGroup(group: readonly Sounding[]): Place {
   };
 }
 
-function shoreSpacing(places: readonly Place[], outline: Outline): number {
+function shoreSpacing(gapM: number, outline: Outline): number {
   const lengthM = ringsOf(outline).reduce((sum, ring) => sum + ringLengthM(ring), 0);
   const [least, most] = SHORE_SPACING_LIMITS_M;
-  const gapM = places.length > 1 ? meanGapM(places) : most;
   return Math.max(Math.min(most, Math.max(least, gapM)), lengthM / MOST_SHORE_POINTS);
 }
 
