@@ -1,0 +1,132 @@
+import { pointAlong, type Point } from '../../geometry/plane';
+import type { Bottom, Grade } from '../../surveys/contract';
+import { ruled, stroked, text, type GlyphsMark, type Line, type Mark, type PathMark } from './mark';
+import type { Palette } from './palette';
+import type { View } from './view';
+
+/** A cast drawn on the chart. Bearings are the plane's, degrees clockwise from north. */
+export type DrawnCast = {
+  from: Point;
+  bearingDeg: number;
+  rangeM: number;
+  wrapRangesM: readonly number[]; // ground range of every whole wrap, the first first
+  ellipse: { semiMajorM: number; semiMinorM: number; bearingDeg: number } | null; // 95 %
+};
+
+const TICK_PX = 3.5;
+const LONG_TICK_PX = 6;
+const LONG_EVERY = 4;
+
+/** A fine line from the peg with a tick at every wrap, longer at every fourth; its end carries the 95 % ellipse. */
+export function castMarks(cast: DrawnCast, palette: Palette, view: View): Mark[] {
+  const end = pointAlong(cast.from, cast.bearingDeg, cast.rangeM);
+  const line: Line = [cast.from.xM, cast.from.yM, end.xM, end.yM];
+  const ticks = cast.wrapRangesM
+    .filter((rangeM) => rangeM < cast.rangeM - 0.5)
+    .map((rangeM) => {
+      const whole = cast.wrapRangesM.indexOf(rangeM) + 1;
+      return tickAt(cast, rangeM, (whole % LONG_EVERY === 0 ? LONG_TICK_PX : TICK_PX) / view.pxPerM);
+    });
+  const dot: GlyphsMark = {
+    kind: 'glyphs',
+    at: [end.xM, end.yM],
+    glyph: 'm-2.6 0a2.6 2.6 0 1 0 5.2 0a2.6 2.6 0 1 0 -5.2 0z',
+    fill: palette.selected,
+    stroke: null,
+  };
+  return [
+    stroked([line], ruled(palette.paper, 4.4)),
+    stroked(ticks, ruled(palette.paper, 3.6)),
+    stroked([line], ruled(palette.selected, 1.8)),
+    stroked(ticks, ruled(palette.selected, 1.6)),
+    ...(cast.ellipse ? [ellipseMark(end, cast.ellipse, palette)] : []),
+    dot,
+  ];
+}
+
+function tickAt(cast: DrawnCast, rangeM: number, halfM: number): Line {
+  const middle = pointAlong(cast.from, cast.bearingDeg, rangeM);
+  const left = pointAlong(middle, cast.bearingDeg - 90, halfM);
+  const right = pointAlong(middle, cast.bearingDeg + 90, halfM);
+  return [left.xM, left.yM, right.xM, right.yM];
+}
+
+const ELLIPSE_POINTS = 40;
+
+function ellipseMark(
+  centre: Point,
+  ellipse: { semiMajorM: number; semiMinorM: number; bearingDeg: number },
+  palette: Palette,
+): PathMark {
+  const turn = (ellipse.bearingDeg * Math.PI) / 180;
+  const ring = Array.from({ length: ELLIPSE_POINTS }, (_, i) => {
+    const angle = (2 * Math.PI * i) / ELLIPSE_POINTS;
+    const major = ellipse.semiMajorM * Math.cos(angle);
+    const minor = ellipse.semiMinorM * Math.sin(angle);
+    return [
+      centre.xM + major * Math.sin(turn) + minor * Math.cos(turn),
+      centre.yM + major * Math.cos(turn) - minor * Math.sin(turn),
+    ];
+  }).flat();
+  return {
+    kind: 'path',
+    lines: [ring],
+    closed: true,
+    curved: true,
+    fill: null,
+    stroke: ruled(palette.selected, 1.8),
+  };
+}
+
+export type DrawnSounding = Point & { depthM: number; bottom: Bottom; grade: Grade };
+
+const FIGURES_FROM_PX_PER_M = 3.2;
+
+/** Soundings as points: filled where the isobaths lean on them, hollow where they only stand as points. */
+export function soundingMarks(soundings: readonly DrawnSounding[], scene: SoundingScene): Mark[] {
+  const { palette, view, words } = scene;
+  const leantOn = soundings.filter(({ grade }) => grade === 'A' || grade === 'B');
+  const others = soundings.filter(({ grade }) => grade === 'C' || grade === 'D');
+  const marks: Mark[] = [dots(leantOn, palette, true), dots(others, palette, false)];
+  if (view.pxPerM < FIGURES_FROM_PX_PER_M) return marks;
+  const figures = soundings.map(({ xM, yM, depthM }) =>
+    text({
+      words: words(depthM),
+      x: xM,
+      y: yM,
+      dyPx: -9,
+      sizePx: 11,
+      colour: palette.labelDark,
+      halo: palette.labelLight,
+    }),
+  );
+  return [...marks, ...figures];
+}
+
+export type SoundingScene = { palette: Palette; view: View; words: (depthM: number) => string };
+
+function dots(soundings: readonly DrawnSounding[], palette: Palette, solid: boolean): GlyphsMark {
+  return {
+    kind: 'glyphs',
+    at: soundings.flatMap(({ xM, yM }) => [xM, yM]),
+    glyph: 'm-2.1 0a2.1 2.1 0 1 0 4.2 0a2.1 2.1 0 1 0 -4.2 0z',
+    fill: solid ? palette.labelDark : palette.labelLight,
+    stroke: ruled(solid ? palette.labelLight : palette.labelDark, solid ? 0.8 : 1.2),
+  };
+}
+
+export type DrawnSpot = Point & { id: string; name: string };
+
+/** Spots worth coming back to: a small diamond each, the chosen one float-coloured. */
+export function spotMarks(spots: readonly DrawnSpot[], palette: Palette, selectedId: string | null): Mark[] {
+  return spots.map((spot): GlyphsMark => {
+    const selected = spot.id === selectedId;
+    return {
+      kind: 'glyphs',
+      at: [spot.xM, spot.yM],
+      glyph: 'm0 -5.2l5.2 5.2l-5.2 5.2l-5.2 -5.2z',
+      fill: selected ? palette.selected : palette.labelLight,
+      stroke: ruled(selected ? palette.labelLight : palette.labelDark, 1.4),
+    };
+  });
+}

@@ -1,0 +1,108 @@
+import type { Ground } from './ground';
+import { filled, ruled, stroked, text, type Line, type Mark, type PathMark } from './mark';
+import type { Palette } from './palette';
+import { thinned } from './path-text';
+import { bandAt, bandsOf, lineInkOn } from './tint';
+import type { View } from './view';
+import { turnOf, widestPlace } from './widest-place';
+
+/** Every fifth isobath is drawn heavier. */
+export const HEAVY_EVERY = 5;
+const LEAST_STEP_PX = 3;
+
+export const isHeavy = (levelM: number, stepM: number): boolean =>
+  Math.round(levelM / stepM) % HEAVY_EVERY === 0;
+
+/** Points closer on the page than the eye can use are left out; nothing is moved. */
+export function thinnedFor(view: View, lines: readonly Line[], cellM: number): Line[] {
+  const leastM = Math.max(LEAST_STEP_PX / view.pxPerM, cellM * 0.55);
+  return lines.map((line) => thinned(line, leastM)).filter((line) => line.length >= 4);
+}
+
+/** Bands of tint from the surface down, the whole water first. */
+export function tintMarks(ground: Ground, palette: Palette, view: View): Mark[] {
+  const bands = bandsOf(ground.levelsM, palette.ramp);
+  const surface = bands[0];
+  if (!ground.depth || !surface) return [filled(ground.water, palette.paper)];
+  const cellM = ground.depth.cellM;
+  const deeper = ground.regions.map((region, i) =>
+    filled(thinnedFor(view, region.lines, cellM), bands[i + 1]?.tint ?? surface.tint, true),
+  );
+  return [filled(ground.water, surface.tint), ...deeper];
+}
+
+/** Isobaths as ink hairlines, each fifth heavier. */
+export function isobathMarks(ground: Ground, palette: Palette, view: View): Mark[] {
+  const cellM = ground.depth?.cellM ?? 1;
+  const bands = bandsOf(ground.levelsM, palette.ramp);
+  return ground.isobaths.map(({ levelM, lines }): PathMark => {
+    const widthPx = isHeavy(levelM, ground.stepM) ? 1.35 : 0.55;
+    const colour = lineInkOn(bandAt(bands, levelM).tint, palette);
+    const line = stroked(thinnedFor(view, lines, cellM), ruled(colour, widthPx));
+    return { ...line, curved: true };
+  });
+}
+
+const RULE_GAP_PX = 11;
+
+/** Bare paper with a soft diagonal rule and the words: nobody surveyed here. */
+export function unsurveyedMarks(ground: Ground, palette: Palette, view: View): Mark[] {
+  if (!ground.depth || ground.unsurveyed.length === 0) return [];
+  const areas = thinnedFor(view, ground.unsurveyed, ground.depth.cellM);
+  const edge: PathMark = {
+    ...filled(areas, palette.paper, true),
+    stroke: ruled(palette.inkSoft, 0.7, [1, 3]),
+  };
+  return [
+    edge,
+    { kind: 'clip', lines: areas, marks: [stroked(diagonals(areas, view), ruled(palette.rule, 1))] },
+    ...wordsIn(areas, { words: 'not surveyed', palette, view }),
+  ];
+}
+
+/** Bed that stands out of the water at this level. */
+export function dryMarks(ground: Ground, palette: Palette, view: View): Mark[] {
+  if (!ground.depth || ground.dry.length === 0) return [];
+  const areas = thinnedFor(view, ground.dry, ground.depth.cellM);
+  const edge: PathMark = { ...filled(areas, palette.bed, true), stroke: ruled(palette.ink, 0.9, [4, 2]) };
+  return [edge, ...wordsIn(areas, { words: 'dry bank', palette, view })];
+}
+
+/** Lines at 45° on the page over the areas' own box, a fixed number of px apart and fixed to the lake. */
+function diagonals(areas: readonly Line[], view: View): Line[] {
+  const gapM = (RULE_GAP_PX * Math.SQRT2) / view.pxPerM;
+  let [west, east, south, north] = [Infinity, -Infinity, Infinity, -Infinity];
+  for (const area of areas) {
+    for (let i = 0; i + 1 < area.length; i += 2) {
+      west = Math.min(west, area[i]!);
+      east = Math.max(east, area[i]!);
+      south = Math.min(south, area[i + 1]!);
+      north = Math.max(north, area[i + 1]!);
+    }
+  }
+  const lines: Line[] = [];
+  const span = north - south;
+  const first = Math.floor((west - north) / gapM) * gapM;
+  for (let offset = first; offset <= east - south; offset += gapM) {
+    lines.push([south + offset, south, south + offset + span, north]);
+  }
+  return lines;
+}
+
+function wordsIn(
+  areas: readonly Line[],
+  { words, palette, view }: { words: string; palette: Palette; view: View },
+): Mark[] {
+  const roomPx = 13;
+  const holes = areas.filter((area) => turnOf(area) < 0);
+  return areas.flatMap((area) => {
+    if (turnOf(area) <= 0) return [];
+    const place = widestPlace(area, holes);
+    if (!place || place.roomM * view.pxPerM < roomPx) return [];
+    const wide = place.acrossM * view.pxPerM > 92;
+    if (!wide) return [];
+    return [
+      text({ words, x: place.xM, y: place.yM, colour: palette.inkSoft, halo: palette.paper, slanted: true }),
+    ];
+  });
+}

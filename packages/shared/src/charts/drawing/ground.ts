@@ -1,0 +1,100 @@
+import { ringsOf, type Outline } from '../../geometry/polygon';
+import { isSurveyed, type Grid } from '../grid';
+import { deeperRegions, isobathLevels, isobaths, type Isobath } from '../isobaths';
+import type { Line } from './mark';
+import { softened, spreadInto, waterRaster } from './water-raster';
+
+/** How far depths are carried past the survey's edge so that tints reach the shore under the clip, cells. */
+const SPREAD_CELLS = 4;
+/** Share of "nobody surveyed here" from which paper is shown: under a half, so the paper never claims too little. */
+const PAPER_FROM = 0.4;
+
+/** A chart made ready for drawing: everything that doesn't depend on the scale of the view. Metres. */
+export type Ground = {
+  water: Line[]; // shore and islands, closed
+  depth: Grid | null; // depth of the water drawn, carried a little past the survey's edge; above water is negative
+  regions: Isobath[]; // filled one over the other
+  isobaths: Isobath[];
+  levelsM: number[];
+  stepM: number;
+  unsurveyed: Line[];
+  dry: Line[];
+  surveyedAt: Uint8Array | null;
+};
+
+export type GroundInput = {
+  outline: Outline;
+  depth: Grid | null; // below datum, NaN where nobody surveyed
+  isobaths: readonly { levelM: number; lines: readonly Line[] }[] | null; // as published, at datum
+  stepM: number;
+  raisedM: number; // water level above datum; 0 draws the chart as published
+};
+
+/** Readies a chart. At another level than datum the isobaths are run again through the same surface. */
+export function groundOf(input: GroundInput): Ground {
+  const water = ringsOf(input.outline).map((ring) => ring.flatMap(({ xM, yM }) => [xM, yM]));
+  if (!input.depth) return { ...NOTHING, water, stepM: input.stepM };
+  const { depth, raisedM, stepM, outline } = input;
+  const inWater = waterRaster(depth, outline);
+  const drawn = raised(depth, raisedM);
+  const levelsM = isobathLevels(drawn, stepM);
+  const filledIn = carriedOver(drawn, inWater);
+  return {
+    water,
+    depth: filledIn,
+    regions: deeperRegions(filledIn, levelsM).slice(1),
+    isobaths: linesOf(input, drawn, levelsM),
+    levelsM,
+    stepM,
+    unsurveyed: unsurveyedAreas(depth, inWater),
+    dry: raisedM < 0 ? dryAreas(drawn, inWater) : [],
+    surveyedAt: Uint8Array.from(depth.values, (value) => (isSurveyed(value) ? 1 : 0)),
+  };
+}
+
+const NOTHING: Omit<Ground, 'water' | 'stepM'> = {
+  depth: null,
+  regions: [],
+  isobaths: [],
+  levelsM: [],
+  unsurveyed: [],
+  dry: [],
+  surveyedAt: null,
+};
+
+function raised(depth: Grid, raisedM: number): Grid {
+  return raisedM === 0 ? depth : { ...depth, values: depth.values.map((value) => value + raisedM) };
+}
+
+/** Land stands at the water's surface, so that the shallowest tint runs out at the shore. */
+function carriedOver(depth: Grid, inWater: Uint8Array): Grid {
+  const values = depth.values.slice();
+  for (let i = 0; i < values.length; i++) if (!isSurveyed(values[i]!) && !inWater[i]) values[i] = 0;
+  spreadInto({ values, columns: depth.columns, rows: depth.rows }, SPREAD_CELLS);
+  for (let i = 0; i < values.length; i++) if (Number.isNaN(values[i]!)) values[i] = 0;
+  return { ...depth, values };
+}
+
+function linesOf(input: GroundInput, drawn: Grid, levelsM: readonly number[]): Isobath[] {
+  if (input.raisedM !== 0 || !input.isobaths) return isobaths(drawn, levelsM);
+  return input.isobaths.map(({ levelM, lines }) => ({
+    levelM,
+    lines: lines.map((line) => Float64Array.from(line)),
+  }));
+}
+
+/** Soft-edged areas of the water nobody surveyed; land takes its neighbours' part so that the shore makes no edge. */
+function unsurveyedAreas(depth: Grid, inWater: Uint8Array): Line[] {
+  const { columns, rows } = depth;
+  const values = depth.values.map((value, i) => (inWater[i] ? (isSurveyed(value) ? 0 : 1) : Number.NaN));
+  spreadInto({ values, columns, rows }, SPREAD_CELLS);
+  for (let i = 0; i < values.length; i++) if (Number.isNaN(values[i]!)) values[i] = 0;
+  const soft = softened({ values, columns, rows }, 2);
+  return deeperRegions({ ...depth, values: soft.values }, [PAPER_FROM])[1]?.lines ?? [];
+}
+
+/** Surveyed bed at or above the water's surface; land counts with it so that the shore makes no edge. */
+function dryAreas(drawn: Grid, inWater: Uint8Array): Line[] {
+  const height = drawn.values.map((value, i) => (isSurveyed(value) ? -value : inWater[i] ? Number.NaN : 0));
+  return deeperRegions({ ...drawn, values: height }, [0])[1]?.lines ?? [];
+}
