@@ -1,7 +1,11 @@
+import { buildChartJob } from './charts/jobs';
+import { resizePhoto } from './files/jobs';
 import type { Handlers } from './jobs/worker';
 import { sendMail } from './mail/jobs';
 
 /** What does each kind of queued job, word by word. */
 export const handlers: Handlers = {
   'mail.send': sendMail,
+  'chart.build': buildChartJob,
+  'photo.resize': resizePhoto,
 };

@@ -1,8 +1,21 @@
 import { accountRoutes } from './accounts/routes';
 import { bookingRoutes } from './bookings/routes';
+import { chartRoutes } from './charts/routes';
 import { fisheryRoutes } from './fisheries/routes';
+import { fileRoutes } from './files/routes';
 import type { Route } from './http/route';
+import { photoRoutes } from './lakes/photo-routes';
 import { lakeRoutes } from './lakes/routes';
+import { surveyRoutes } from './surveys/routes';
 
 /** Every route of the API, word by word. */
-export const routes: readonly Route[] = [...accountRoutes, ...fisheryRoutes, ...lakeRoutes, ...bookingRoutes];
+export const routes: readonly Route[] = [
+  ...accountRoutes,
+  ...fisheryRoutes,
+  ...lakeRoutes,
+  ...photoRoutes,
+  ...fileRoutes,
+  ...bookingRoutes,
+  ...surveyRoutes,
+  ...chartRoutes,
+];

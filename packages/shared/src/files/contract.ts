@@ -2,7 +2,7 @@ import { z } from 'zod';
 
 /** The largest file taken. A phone's picture is 3–6 MB; clients shrink before sending. */
 export const PHOTO_MOST_BYTES = 15 * 1024 * 1024;
-/** The most pixels taken: four bytes of memory each once decoded. */
+/** The most pixels of a JPEG taken (a PNG: 24 million). Clients shrink to 2,000 px before sending. */
 export const PHOTO_MOST_PIXELS = 40_000_000;
 
 /** Shown where a photo is picked, before it is sent (never behind a tooltip). */

@@ -1,0 +1,65 @@
+import { PhotoView } from '@mereward/shared/files/contract';
+import type { Request, Response } from 'express';
+import { notFound } from '../http/deny';
+import { raw, read, type Route } from '../http/route';
+import { serverOf } from '../http/server';
+import { inTransaction } from '../http/transaction';
+import { photoOf, removePhoto } from './service';
+import { fileStore, type PhotoPart } from './store';
+import { z } from 'zod';
+
+const Id = z.uuid();
+
+function photoId(req: Request): string {
+  const id = Id.safeParse(req.params['photoId']);
+  if (!id.success) throw notFound('photo');
+  return id.data;
+}
+
+/** A picture never changes under its address, so it may be kept for a year without asking again. */
+const serve = (part: PhotoPart) => async (req: Request, res: Response) => {
+  const path = fileStore(serverOf(req).config.filesDir).pathOf(photoId(req), part);
+  await new Promise<void>((resolve, reject) => {
+    const settings = { immutable: true, maxAge: '365d', dotfiles: 'allow', acceptRanges: false } as const;
+    res.type('image/jpeg').sendFile(path, settings, (error?: NodeJS.ErrnoException) => {
+      if (!error || res.headersSent) resolve();
+      else reject(error.code === 'ENOENT' ? notFound('photo') : error);
+    });
+  });
+};
+
+const picture = (part: 'small.jpg' | 'large.jpg'): Route =>
+  raw(
+    {
+      method: 'get',
+      path: `/photos/:photoId/${part}`,
+      summary: `A photo, ${part === 'small.jpg' ? 400 : 1600} px on its longer side`,
+      signIn: 'open',
+      answerType: 'image/jpeg',
+    },
+    serve(part),
+  );
+
+export const fileRoutes: Route[] = [
+  read(
+    {
+      method: 'get',
+      path: '/photos/:photoId',
+      summary: 'How a photo stands',
+      signIn: 'open',
+      answer: PhotoView,
+    },
+    (ctx, { id }) => photoOf(ctx, id('photoId')),
+  ),
+  raw(
+    { method: 'delete', path: '/photos/:photoId', summary: 'Take a photo away', signIn: 'needed' },
+    async (req, res) => {
+      const id = photoId(req);
+      await inTransaction(req, (ctx) => removePhoto(ctx, id));
+      await fileStore(serverOf(req).config.filesDir).removeAll(id);
+      res.status(204).end();
+    },
+  ),
+  picture('small.jpg'),
+  picture('large.jpg'),
+];
