@@ -2,6 +2,7 @@ import { makeDataSource } from '@mereward/db/data-source';
 import { readFileSync } from 'node:fs';
 import { createServer, type Server } from 'node:http';
 import { makeApp } from './app';
+import { watchBuilds } from './charts/jobs';
 import { readConfig, type Config } from './config';
 import { handlers } from './handlers';
 import { makeLogger } from './http/logging';
@@ -27,12 +28,14 @@ async function main(): Promise<void> {
   const boss = await openQueue(config.databaseUrl, (err) => logger.error({ err }, 'queue'));
   const server = { config, source, jobs: jobsOn(boss), clock: clockOf(config) };
   const worker = await work({ boss, server, logger, handlers });
+  const stopWatching = watchBuilds(server, (err) => logger.error({ err }, 'lost builds could not be taken up'));
   const http = createServer(makeApp(server, logger, capture));
   await listen(http, config);
   logger.info({ port: config.port, url: config.publicUrl }, 'listening');
 
   const close = async () => {
     await finish(http);
+    stopWatching();
     await worker.stop();
     await boss.stop({ graceful: true, wait: true, timeout: FINISH_WITHIN_MS });
     await capture?.close();

@@ -1,0 +1,104 @@
+import { Account } from '@mereward/db/entities/accounts/account';
+import type { Chart } from '@mereward/db/entities/charts/chart';
+import { Fishery } from '@mereward/db/entities/fisheries/fishery';
+import { Lake } from '@mereward/db/entities/lakes/lake';
+import { SurveyCast } from '@mereward/db/entities/surveys/survey-cast';
+import { SurveyVisit } from '@mereward/db/entities/surveys/survey-visit';
+import { civilDay } from '@mereward/shared/time/civil-day';
+import { createHash } from 'node:crypto';
+import { In, IsNull, type EntityManager } from 'typeorm';
+import type { ObservedCast, VisitSite } from '../surveys/reduce-visit';
+import { visitSite } from '../surveys/visit-site';
+
+export type SourceCast = ObservedCast & { seq: number; lineId: string; observedOn: string };
+export type SourceVisit = { site: VisitSite; surveyorName: string; day: string; casts: SourceCast[] };
+
+/** Everything a chart is made from, as it was observed. It survives structured cloning: a thread reads it. */
+export type BuildSource = {
+  lake: Lake;
+  zone: string;
+  contourStepM: number;
+  visits: SourceVisit[];
+};
+
+type Wanted = Pick<Chart, 'lakeId' | 'visitIds' | 'contourStepM'>;
+
+/** Loads what a chart is made from, in an order of its own: visits and casts by their ids. */
+export async function buildSource(tx: EntityManager, chart: Wanted): Promise<BuildSource> {
+  const lake = await tx.findOneByOrFail(Lake, { id: chart.lakeId });
+  const { zone } = await tx.findOneByOrFail(Fishery, { id: lake.fisheryId });
+  const visits = await tx.find(SurveyVisit, { where: { id: In(chart.visitIds) }, order: { id: 'ASC' } });
+  const casts = await tx.find(SurveyCast, {
+    where: { visitId: In(chart.visitIds), undoneAt: IsNull() },
+    order: { id: 'ASC' },
+  });
+  const people = await tx.findBy(Account, { id: In(visits.map((visit) => visit.surveyorId)) });
+  const sourced: SourceVisit[] = [];
+  for (const visit of visits)
+    sourced.push({
+      site: await visitSite(tx, { visit, lake }),
+      surveyorName: people.find((person) => person.id === visit.surveyorId)?.name ?? '',
+      day: civilDay(visit.startedAt, zone),
+      casts: casts
+        .filter((cast) => cast.visitId === visit.id)
+        .map(({ id, pegId, lineId, seq, observedAt, observation }) => ({
+          id,
+          pegId,
+          lineId,
+          seq,
+          observedAt,
+          observation,
+          observedOn: civilDay(observedAt, zone),
+        })),
+    });
+  return { lake, zone, contourStepM: chart.contourStepM, visits: sourced };
+}
+
+/**
+ * A digest of everything that decides how the chart comes out, and of nothing else: the same digest, the same chart.
+ * Names and notes are no part of it.
+ */
+export function sourceDigest({ lake, contourStepM, visits }: BuildSource): Buffer {
+  const decides = {
+    outline: lake.details.outline,
+    origin: [lake.originLon, lake.originLat],
+    maxGapM: lake.details.maxGapM,
+    contourStepM,
+    visits: visits.map(({ site, casts }) => ({
+      id: site.visit.id,
+      kit: site.visit.kit,
+      gauge: site.gauge,
+      pegs: [...new Set(casts.map((cast) => cast.pegId))].sort().map((id) => stanceOf(site, id)),
+      marks: [...new Set(casts.flatMap(markOf))]
+        .sort()
+        .map((id) => [id, site.marks.get(id)?.details ?? null]),
+      casts: casts.map(({ id, pegId, observedAt, observation }) => [
+        id,
+        pegId,
+        observedAt.toISOString(),
+        observation,
+      ]),
+    })),
+  };
+  return createHash('sha256')
+    .update(JSON.stringify(sorted(decides)))
+    .digest();
+}
+
+function stanceOf({ pegs }: VisitSite, id: string): unknown {
+  const details = pegs.get(id)?.details;
+  return [id, details?.origin ?? null, details?.originFixedBy ?? null, details?.originMarked ?? null];
+}
+
+const markOf = ({ observation: { aim } }: SourceCast): string[] => (aim.by === 'mark' ? [aim.markId] : []);
+
+/** The same value with the keys of every object in order, so that equal things are equal text. */
+function sorted(value: unknown): unknown {
+  if (Array.isArray(value)) return value.map(sorted);
+  if (value === null || typeof value !== 'object') return value;
+  const entries = Object.entries(value).map(([key, each]: [string, unknown]): [string, unknown] => [
+    key,
+    sorted(each),
+  ]);
+  return Object.fromEntries(entries.sort(([a], [b]) => (a < b ? -1 : 1)));
+}

@@ -1,0 +1,67 @@
+import { QualityView } from '@mereward/shared/charts/contract';
+import { Position } from '@mereward/shared/fisheries/contract';
+import { LakePolygon } from '@mereward/shared/lakes/contract';
+import { Bottom, Grade, Kit } from '@mereward/shared/surveys/contract';
+import { z } from 'zod';
+
+/** A reduced cast as a chart keeps it: with what an angler needs to throw it again, in the survey's own sticks. */
+export const BuiltSounding = z.object({
+  id: z.uuid(), // of the cast
+  visitId: z.uuid(),
+  pegId: z.uuid(),
+  seq: z.int(),
+  observedOn: z.iso.date(), // civil day at the lake
+  xM: z.number(),
+  yM: z.number(),
+  ellipse: z.object({ semiMajorM: z.number(), semiMinorM: z.number(), bearingDeg: z.number() }),
+  depthM: z.number(), // below datum
+  depthAsReadM: z.number(), // below the water of that hour
+  sigmaM: z.number(),
+  grade: Grade,
+  bottom: Bottom,
+  bottomShare: z.number().nullable(), // how sure of it: the greatest probability of its kind
+  wrapsWhole: z.int(),
+  remainderM: z.number(),
+  lineOutM: z.number(),
+  bearingDeg: z.number(),
+  markId: z.uuid().nullable(),
+  markOffsetDeg: z.number(),
+});
+export type BuiltSounding = z.infer<typeof BuiltSounding>;
+
+/** What each visit was made with, frozen with the chart. */
+export const BuiltVisit = z.object({
+  id: z.uuid(),
+  title: z.string(),
+  surveyorId: z.uuid(),
+  surveyorName: z.string(),
+  day: z.iso.date(),
+  kit: Kit,
+  gaugeStartM: z.number(), // as the board reads
+  gaugeEndM: z.number().nullable(),
+});
+export type BuiltVisit = z.infer<typeof BuiltVisit>;
+
+const Lines = z.array(z.object({ levelM: z.number(), lines: z.array(z.array(z.number())) }));
+
+/** The `built` column of a chart: everything of it that is not a grid. */
+export const Built = z.object({
+  origin: Position,
+  outline: LakePolygon,
+  maxGapM: z.number(),
+  visits: z.array(BuiltVisit),
+  soundings: z.array(BuiltSounding), // every grade; D is left out of every view but the staff's
+  leftOut: z.array(z.object({ id: z.string(), why: z.string() })),
+  isobaths: Lines, // x, y, x, y … metres on the lake's plane, to 0.01
+  hypsography: z.array(z.object({ depthM: z.number(), areaM2: z.number(), volumeM3: z.number() })),
+  figures: z.object({
+    areaM2: z.number(),
+    volumeM3: z.number(),
+    meanDepthM: z.number(),
+    greatestDepthM: z.number(),
+    shorelineDevelopment: z.number(),
+    surveyedShare: z.number(),
+  }),
+  quality: QualityView,
+});
+export type Built = z.infer<typeof Built>;

@@ -1,0 +1,86 @@
+import { Spot } from '@mereward/db/entities/charts/spot';
+import { AGE_WORDS } from '@mereward/shared/charts/chart-age';
+import { chartCaution, EMERGENCY, overheadCaution } from '@mereward/shared/charts/cautions';
+import type { LayerNotes, PegPageView, SpotView } from '@mereward/shared/charts/contract';
+import { RIG_CAUTION } from '@mereward/shared/charts/presentation';
+import type { EntityManager } from 'typeorm';
+import type { Ctx } from '../ctx';
+import { photosOf } from '../files/queries';
+import { pegDetailsFor } from '../lakes/queries';
+import { layersOf } from './chart-layers';
+import { pegGround, type PegGround } from './peg-chart';
+import { pegExtract } from './peg-extract';
+import { spotView } from './spot-view';
+
+/** A page stays light enough for one bar of signal: spots past this many are left to the chart. */
+const MOST_SPOTS = 12;
+
+/** What an angler reads of a peg before coming, within what this reader may see. The card is printed from the same. */
+export async function pegPage(ctx: Ctx, pegId: string): Promise<PegPageView> {
+  const ground = await pegGround(ctx, pegId);
+  const { peg, lake, fishery, chart, sight, ticket } = ground;
+  const photos = await photosOf(ctx.tx, { kind: 'peg', ids: [pegId], staff: sight.staff });
+  const { id, version, surveyedFrom, surveyedTo, datumM, age } = chart ?? {};
+  return {
+    id: peg.id,
+    number: peg.number,
+    name: peg.details.name,
+    fishery: {
+      id: fishery.id,
+      name: fishery.name,
+      zone: fishery.zone,
+      dutyPhone: fishery.details.dutyPhone,
+      meetingPoint: fishery.details.meetingPoint,
+    },
+    lake: {
+      id: lake.id,
+      name: lake.name,
+      emergencyAccess: lake.details.emergencyAccess,
+      phoneSignal: lake.details.phoneSignal,
+    },
+    details: pegDetailsFor(ctx.actor, lake.fisheryId, peg.details),
+    photos: photos.get(pegId) ?? [],
+    chart:
+      id && version && surveyedFrom && surveyedTo && datumM !== undefined && age
+        ? { id, version, surveyedFrom, surveyedTo, datumM, age }
+        : null,
+    levelNow: ground.levelNow,
+    spots: sight.sees.spots ? await spotsOf(ctx.tx, ground) : null,
+    extract: pegExtract(ground),
+    layerNotes: notesOf(ground),
+    cautions: cautionsOf(ground),
+    rigCaution: RIG_CAUTION,
+    emergencyWords: EMERGENCY,
+    cardUrl: `/api/pegs/${peg.id}/card.pdf`,
+    ticket: ticket && { from: ticket.from.toISOString(), until: ticket.until.toISOString() },
+  };
+}
+
+async function spotsOf(tx: EntityManager, ground: PegGround): Promise<SpotView[]> {
+  const { chart, peg } = ground;
+  const spots = await tx.find(Spot, {
+    where: { pegId: peg.id },
+    order: { createdAt: 'ASC', id: 'ASC' },
+    take: MOST_SPOTS,
+  });
+  const open = chart && { chart, layers: layersOf(chart.content) };
+  return spots.map((spot) => spotView(ground, open, spot)).filter((view) => view !== null);
+}
+
+const NO_CHART = 'No chart of this water is published yet.';
+
+function notesOf({ chart, sight: { notes } }: PegGround): LayerNotes {
+  if (chart) return notes;
+  return {
+    ...notes,
+    depth: notes.depth ?? NO_CHART,
+    bottom: notes.bottom ?? NO_CHART,
+    soundings: notes.soundings ?? NO_CHART,
+  };
+}
+
+function cautionsOf({ peg, chart }: PegGround): string[] {
+  const overhead = overheadCaution(peg.details);
+  const changed = chart && (chart.age === 'changed' || chart.age === 'old') ? AGE_WORDS[chart.age] : null;
+  return [overhead, changed && `${changed}.`, chart && chartCaution(chart)].filter((words) => words !== null);
+}

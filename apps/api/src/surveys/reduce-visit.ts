@@ -1,0 +1,74 @@
+import type { Lake } from '@mereward/db/entities/lakes/lake';
+import type { Mark } from '@mereward/db/entities/lakes/mark';
+import type { Peg } from '@mereward/db/entities/lakes/peg';
+import type { SurveyVisit } from '@mereward/db/entities/surveys/survey-visit';
+import type { LonLat } from '@mereward/shared/geometry/plane';
+import type { Outline } from '@mereward/shared/geometry/polygon';
+import { reduceCast } from '@mereward/shared/surveys/cast-reduction';
+import type { CastSite, VisitGauge } from '@mereward/shared/surveys/cast-site';
+import type { CastObservation, Reduced } from '@mereward/shared/surveys/contract';
+import { stanceSigmaM } from '@mereward/shared/surveys/error-budget';
+
+/** What the casts of one visit are reduced against, loaded once. */
+export type VisitSite = {
+  visit: SurveyVisit;
+  lake: Lake;
+  origin: LonLat;
+  outline: Outline;
+  gauge: VisitGauge;
+  pegs: ReadonlyMap<string, Peg>;
+  marks: ReadonlyMap<string, Mark>;
+};
+
+export type ObservedCast = { id: string; pegId: string; observedAt: Date; observation: CastObservation };
+
+/** Reduces one cast; `others` are the peg's other casts of the visit. */
+export function reduceAt(site: VisitSite, cast: ObservedCast, others: readonly CastObservation[]): Reduced {
+  const peg = site.pegs.get(cast.pegId);
+  if (!peg)
+    return { ok: false, reason: 'The peg of this cast is gone', remedy: 'Ask the manager', steps: [] };
+  const { aim } = cast.observation;
+  const mark = aim.by === 'mark' ? site.marks.get(aim.markId) : undefined;
+  const castSite: CastSite = {
+    origin: site.origin,
+    outline: site.outline,
+    stance: {
+      place: peg.details.origin,
+      sigmaM: stanceSigmaM(peg.details.originFixedBy),
+      originMarked: peg.details.originMarked,
+    },
+    mark: mark
+      ? {
+          name: mark.details.name,
+          place: mark.details.position,
+          sigmaM: mark.details.sigmaM,
+          permanence: mark.details.permanence,
+          ofThisLake: true, // only this lake's marks are looked in
+        }
+      : null,
+    gauge: site.gauge,
+    observedAt: cast.observedAt.toISOString(),
+    lead: null, // a lead's own rate of fall is not kept yet; counted falls are shown and never plotted
+    earlier: others,
+  };
+  return reduceCast(cast.observation, site.visit.kit, castSite);
+}
+
+/** Reduces every cast of a visit, each beside its peg's others. */
+export function reduceAll(site: VisitSite, casts: readonly ObservedCast[]): Map<string, Reduced> {
+  const byPeg = new Map<string, ObservedCast[]>();
+  for (const cast of casts) byPeg.set(cast.pegId, [...(byPeg.get(cast.pegId) ?? []), cast]);
+  const reduced = new Map<string, Reduced>();
+  for (const cast of casts) {
+    const others = (byPeg.get(cast.pegId) ?? []).filter((each) => each.id !== cast.id);
+    reduced.set(
+      cast.id,
+      reduceAt(
+        site,
+        cast,
+        others.map((each) => each.observation),
+      ),
+    );
+  }
+  return reduced;
+}

@@ -1,0 +1,32 @@
+import { GaugeBoard } from '@mereward/db/entities/lakes/gauge-board';
+import { Mark } from '@mereward/db/entities/lakes/mark';
+import { Peg } from '@mereward/db/entities/lakes/peg';
+import { outlineInPlane } from '@mereward/shared/geometry/outline';
+import type { EntityManager } from 'typeorm';
+import { originOfLake } from '../lakes/found';
+import type { VisitFound } from './find-visit';
+import type { VisitSite } from './reduce-visit';
+
+/** Loads what the casts of a visit are reduced against. */
+export async function visitSite(tx: EntityManager, { visit, lake }: VisitFound): Promise<VisitSite> {
+  const pegs = await tx.findBy(Peg, { lakeId: lake.id });
+  const marks = await tx.findBy(Mark, { lakeId: lake.id });
+  const board = await tx.findOneByOrFail(GaugeBoard, { id: visit.boardId });
+  const origin = originOfLake(lake);
+  return {
+    visit,
+    lake,
+    origin,
+    outline: outlineInPlane(origin, lake.details.outline),
+    gauge: {
+      startAt: visit.startedAt.toISOString(),
+      startM: visit.gaugeStartM,
+      endAt: visit.endedAt?.toISOString() ?? null,
+      endM: visit.gaugeEndM,
+      datumM: lake.datumM,
+      higherNumberHigherWater: board.details.higherNumberHigherWater,
+    },
+    pegs: new Map(pegs.map((peg) => [peg.id, peg])),
+    marks: new Map(marks.map((mark) => [mark.id, mark])),
+  };
+}
