@@ -1,1 +1,1 @@
-export { InvitationScreen as default } from '@/features/accounts/invitation-screen';
+export { InvitationScreen as default } from '@/features/fisheries/invitation-screen';

@@ -9,7 +9,7 @@ import { Page } from '@/components/page';
 import { ProblemNote } from '@/components/problem-note';
 import { Text } from '@/components/text';
 import { space } from '@/constants/layout';
-import { useAcceptInvitation, useInvitation } from '@/features/accounts/api';
+import { useAcceptInvitation, useInvitation } from '@/features/fisheries/invitation-api';
 import { useQueryText } from '@/features/accounts/next-page';
 import { roleWord } from '@/features/accounts/role-words';
 import { useSession } from '@/lib/session';
