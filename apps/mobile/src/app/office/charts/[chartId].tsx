@@ -1,0 +1,1 @@
+export { ChartReviewScreen as default } from '@/features/charts/chart-review-screen';

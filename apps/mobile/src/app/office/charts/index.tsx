@@ -1,0 +1,1 @@
+export { OfficeChartsScreen as default } from '@/features/charts/office-charts-screen';

@@ -1,0 +1,1 @@
+export { DraftChartScreen as default } from '@/features/charts/draft-chart-screen';

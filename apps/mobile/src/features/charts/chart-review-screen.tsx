@@ -1,0 +1,71 @@
+import { useLocalSearchParams } from 'expo-router';
+import type { ChartReview } from '@mereward/shared/charts/contract';
+import { Facts } from '@/components/facts';
+import { LinkButton } from '@/components/link-button';
+import { Loaded } from '@/components/loaded';
+import { Note } from '@/components/note';
+import { Page } from '@/components/page';
+import { Section } from '@/components/section';
+import { BuildSection } from '@/features/charts/build-section';
+import { ChartStatusShape } from '@/features/charts/chart-status';
+import { chartName, surveyedWords } from '@/features/charts/chart-words';
+import { CheckList } from '@/features/charts/check-list';
+import { QualityReport } from '@/features/charts/quality-report';
+import { ReviewActions } from '@/features/charts/review-actions';
+import { useChartReview } from '@/features/charts/review-api';
+
+/** One chart before the staff: how it was built, what the checks say, how good it is, and the next deed. */
+export function ChartReviewScreen() {
+  const { chartId } = useLocalSearchParams<{ chartId: string }>();
+  const review = useChartReview(chartId);
+  const chart = review.data?.chart;
+  return (
+    <Page
+      title={chart ? chartName(chart) : 'Chart'}
+      {...(review.data ? { over: review.data.lakeName } : {})}
+      back={{ label: 'Charts', href: '/office/charts' }}
+      {...(chart ? { end: <ChartStatusShape status={chart.status} /> } : {})}
+    >
+      <Loaded query={review} waiting="Reading the chart…">
+        {(value) => <Review review={value} />}
+      </Loaded>
+    </Page>
+  );
+}
+
+function Review({ review }: { review: ChartReview }) {
+  const { chart, checks, quality } = review;
+  const built = chart.build?.state === 'done';
+  return (
+    <>
+      <Facts
+        facts={[
+          { term: 'Surveyed', fact: surveyedWords(chart) },
+          { term: 'Submitted by', fact: chart.submittedBy ?? '' },
+          { term: 'Approved by', fact: chart.approvedBy ?? '' },
+        ]}
+      />
+      <BuildSection review={review} />
+      {built ? <LinkButton label="Look at the chart" href={`/water/charts/${chart.id}`} /> : null}
+      {checks.length > 0 ? (
+        <Section
+          title="Checks before publishing"
+          note="What a failed check names is put right in the survey; then build again."
+        >
+          <CheckList checks={checks} />
+        </Section>
+      ) : null}
+      {quality ? (
+        <Section title="How good it is" note={quality.words}>
+          <QualityReport quality={quality} />
+        </Section>
+      ) : null}
+      {review.may.approveWhyNot ? (
+        <Note kind="caution" title="Not yours to approve">
+          {review.may.approveWhyNot}
+        </Note>
+      ) : null}
+      <ReviewActions review={review} />
+    </>
+  );
+}

@@ -1,0 +1,78 @@
+import type { QualityView } from '@mereward/shared/charts/contract';
+import { Disclosure } from '@/components/disclosure';
+import { Facts } from '@/components/facts';
+import { Table } from '@/components/table';
+import { useUnits } from '@/hooks/use-units';
+import { figure, length, percent } from '@/lib/format';
+
+/** The surface held against each sounding left out in turn, and what the figures mean. */
+export function QualityReport({ quality }: { quality: QualityView }) {
+  const units = useUnits();
+  const m = (valueM: number) => length(valueM, units, 2);
+  return (
+    <>
+      <Facts
+        facts={[
+          { term: 'Soundings used', fact: figure(quality.soundings) },
+          { term: 'Mean error', fact: `${m(quality.meanErrorM)} (near nothing: no lean to deep or shallow)` },
+          { term: 'Root mean square error', fact: m(quality.rmseM) },
+          {
+            term: 'Standardised variance',
+            fact: `${figure(quality.standardisedVariance, 2)} (near 1: the stated ± is honest; below: it is cautious)`,
+          },
+          { term: 'Inside their own 95 % band', fact: percent(quality.coverage95, 1) },
+          { term: 'Share of the water surveyed', fact: percent(quality.surveyedShare) },
+          { term: 'Out of line with their neighbours', fact: `${quality.flagged.length} soundings` },
+        ]}
+      />
+      <Disclosure title="Which model of the bed, and why">
+        <Table
+          caption="Models tried"
+          rows={quality.models}
+          rowKey={({ model }) => model}
+          columns={[
+            { key: 'model', head: 'Model', value: ({ model }) => model },
+            {
+              key: 'rmse',
+              head: 'RMSE',
+              value: ({ rmseM }) => rmseM,
+              show: ({ rmseM }) => m(rmseM),
+              figures: true,
+            },
+            {
+              key: 'variance',
+              head: 'Standardised variance',
+              value: (row) => row.standardisedVariance,
+              show: (row) => figure(row.standardisedVariance, 2),
+              figures: true,
+            },
+          ]}
+        />
+      </Disclosure>
+      <Disclosure title="The ten soundings that fit worst">
+        <Table
+          caption="Soundings that fit worst"
+          rows={quality.worst}
+          rowKey={({ id }) => id}
+          columns={[
+            { key: 'sounding', head: 'Sounding', value: ({ id }) => id.slice(0, 8) },
+            {
+              key: 'error',
+              head: 'Out by',
+              value: ({ errorM }) => errorM,
+              show: ({ errorM }) => m(errorM),
+              figures: true,
+            },
+            {
+              key: 'share',
+              head: 'In its own σ',
+              value: ({ standardised }) => standardised,
+              show: ({ standardised }) => figure(standardised, 1),
+              figures: true,
+            },
+          ]}
+        />
+      </Disclosure>
+    </>
+  );
+}
