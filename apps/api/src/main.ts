@@ -28,7 +28,9 @@ async function main(): Promise<void> {
   const boss = await openQueue(config.databaseUrl, (err) => logger.error({ err }, 'queue'));
   const server = { config, source, jobs: jobsOn(boss), clock: clockOf(config) };
   const worker = await work({ boss, server, logger, handlers });
-  const stopWatching = watchBuilds(server, (err) => logger.error({ err }, 'lost builds could not be taken up'));
+  const stopWatching = watchBuilds(server, (err) =>
+    logger.error({ err }, 'lost builds could not be taken up'),
+  );
   const http = createServer(makeApp(server, logger, capture));
   await listen(http, config);
   logger.info({ port: config.port, url: config.publicUrl }, 'listening');
