@@ -21,6 +21,7 @@ test('it says that it is up and ready, without counting the askers', async () =>
 
 test('with its database gone it is up, not ready, and answers a problem instead of falling over', async () => {
   const person = await aPerson(here);
+  await here.startWorker(); // holds a connection of its own
   const name = new URL(here.server.config.databaseUrl).pathname.slice(1);
   const client = new Client({ connectionString: inject('clusterUrl') });
   await client.connect();

@@ -16,6 +16,7 @@ export function demoMail(capture: Capture): Router {
 
 const page = (mails: readonly CapturedMail[]): string => `<!doctype html>
 <html lang="en-GB"><head><meta charset="utf-8"><meta name="viewport" content="width=device-width,initial-scale=1">
+<link rel="icon" href="data:,">
 <title>Mail caught by the demo</title>
 <style>
 :root{color-scheme:light dark;--paper:#FAF7F0;--sheet:#FFF;--rule:#DAD3C4;--ink:#1B2423;--soft:#55605D;--water:#1F5661}

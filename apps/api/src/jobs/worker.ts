@@ -3,6 +3,7 @@ import type pino from 'pino';
 import type { JobName } from '../ctx';
 import { plainError } from '../http/plain-error';
 import type { Server } from '../http/server';
+import { takeUpOrphans } from './orphans';
 
 /** One job in hand. A payload is read with its own schema; `id` stays the same over every attempt. */
 export type Job = { id: string; payload: unknown; attempt: number };
@@ -23,6 +24,7 @@ const FORGOTTEN: ReadonlySet<JobName> = new Set<JobName>(['mail.send']);
 export async function work(ground: Work): Promise<{ stop: () => Promise<void> }> {
   const { boss } = ground;
   const names = doable(ground);
+  const leave = await takeUpOrphans(ground.server.source, names);
   for (const name of names)
     await boss.work(name, { pollingIntervalSeconds: 0.5, includeMetadata: true }, async (jobs) => {
       for (const job of jobs) await perform(ground, name, job);
@@ -30,6 +32,7 @@ export async function work(ground: Work): Promise<{ stop: () => Promise<void> }>
   return {
     async stop() {
       for (const name of names) await boss.offWork(name);
+      await leave();
     },
   };
 }
