@@ -68,6 +68,21 @@ describe('GPX files', () => {
     },
   );
 
+  test('numbered characters are read, and anything else with an ampersand stays as written', () => {
+    const name = (text: string) =>
+      readGpx(`<gpx version="1.1"><wpt lat="1" lon="2"><name>${text}</name></wpt></gpx>`).waypoints[0]?.name;
+    expect(name('P&#233;rigord &#x41;&amp;amp;')).toBe('Périgord A&amp;');
+    expect(name('&nbsp;&#0;&#9999999;')).toBe('&nbsp;&#0;&#9999999;');
+  });
+
+  test('a file of more points than can be read is refused by their number', () => {
+    const point = '<trkpt lat="1" lon="2"/>';
+    const gpx = `<gpx version="1.1"><trk><trkseg>${point.repeat(20_001)}</trkseg></trk></gpx>`;
+    expect(readGpx(gpx).findings.map(({ words }) => words)).toEqual([
+      expect.stringMatching(/20001 points; at most 20000/),
+    ]);
+  });
+
   test('none of them walks round a water, and each says so or why it is refused', () => {
     for (const { file } of files) {
       const { outline, areaM2, findings } = outlineFromGpx(textOf(file));

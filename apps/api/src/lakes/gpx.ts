@@ -36,6 +36,9 @@ const Gpx = z.looseObject({
   ),
 });
 
+/** A morning’s walk at a point a second is about ten thousand. */
+const MOST_POINTS = 20_000;
+
 const LISTS = new Set(['wpt', 'trk', 'trkseg', 'trkpt', 'rte', 'rtept']);
 
 const parser = new XMLParser({
@@ -44,9 +47,20 @@ const parser = new XMLParser({
   parseTagValue: false,
   parseAttributeValue: false,
   removeNSPrefix: true,
-  htmlEntities: true, // the five of XML and numbered characters; a file's own were refused before
+  processEntities: false, // only names need them, and looking for them everywhere takes most of the time
   isArray: (name) => LISTS.has(name),
 });
+
+const NAMED: Record<string, string> = { amp: '&', lt: '<', gt: '>', quot: '"', apos: "'" };
+
+/** The five entities that XML has by itself, and numbered characters. */
+function unescaped(text: string): string {
+  return text.replace(/&(#x[0-9a-f]{1,6}|#\d{1,7}|amp|lt|gt|quot|apos);/gi, (whole, name: string) => {
+    if (!name.startsWith('#')) return NAMED[name] ?? whole;
+    const code = /^#x/i.test(name) ? parseInt(name.slice(2), 16) : Number(name.slice(1));
+    return code > 0 && code <= 0x10ffff ? String.fromCodePoint(code) : whole;
+  });
+}
 
 const say = (kind: OutlineFinding['kind'], words: string): OutlineFinding => ({ kind, words, at: null });
 const nothing = (words: string): GpxRead => ({
@@ -61,6 +75,11 @@ export function readGpx(text: string): GpxRead {
   if (/<!\s*(DOCTYPE|ENTITY)/i.test(text))
     return nothing(
       'The file declares a document type or entities, which a GPX file has no need of and which can be used to read other files. It was not opened; export it again.',
+    );
+  const points = text.match(/<(trk|rte|w)pt\b/g)?.length ?? 0;
+  if (points > MOST_POINTS)
+    return nothing(
+      `The file holds ${points} points; at most ${MOST_POINTS} can be read. Record fewer, or simplify the track first.`,
     );
   const wellFormed = XMLValidator.validate(text);
   if (wellFormed !== true) {
@@ -86,7 +105,7 @@ function contents(gpx: z.infer<typeof Gpx>['gpx']): GpxRead {
   const places = (points: Point[]): LonLat[] => points.map(place).filter((at) => at !== null);
   const waypoints = gpx.wpt.flatMap((point) => {
     const at = place(point);
-    return at ? [{ position: at, name: typeof point.name === 'string' ? point.name : '' }] : [];
+    return at ? [{ position: at, name: typeof point.name === 'string' ? unescaped(point.name) : '' }] : [];
   });
   const segments = gpx.trk.flatMap(({ trkseg }) => trkseg.map(({ trkpt }) => places(trkpt)));
   const routes = gpx.rte.map(({ rtept }) => places(rtept));
