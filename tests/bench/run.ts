@@ -1,0 +1,20 @@
+// pnpm bench [--peers]: one line a figure, ours beside a peer, run turn by turn on the same input with a fixed seed.
+import { benchAuth } from './auth';
+import { chartComparison, previewComparison } from './chart.bench';
+import { isobathComparison } from './isobaths.bench';
+import { krigingComparison } from './kriging.bench';
+import { comparisonLine } from './measure';
+import { tinComparison } from './tin.bench';
+
+const withPeers = process.argv.includes('--peers');
+const say = (line: string) => process.stdout.write(`${line}\n`);
+
+say(await comparisonLine(isobathComparison()));
+for (const start of [tinComparison, krigingComparison]) {
+  const comparison = start(withPeers);
+  say(await comparisonLine(comparison));
+  comparison.stop();
+}
+say(await comparisonLine(chartComparison()));
+say(await comparisonLine(previewComparison()));
+for (const line of await benchAuth()) say(line);
