@@ -46,7 +46,7 @@ test('somebody signs up by mail, signs in, stays signed in over a reload and sig
   await page.goto(await mailedPath(page, email, 'verify'));
   await expect(page.getByText('Your address is confirmed')).toBeVisible();
   await signIn(page, email, PASSWORD);
-  await expect(page).toHaveURL(/\/me$/);
+  await expect(page).toHaveURL(({ pathname }) => pathname === '/me');
   await expect(page.getByText(email)).toBeVisible();
 
   await page.reload();
@@ -81,7 +81,7 @@ test('a forgotten password is replaced by a mailed link, and the old one opens n
   await signIn(page, email, PASSWORD);
   await expect(page.getByRole('alert')).toContainText('don’t go together');
   await signIn(page, email, 'another four words here');
-  await expect(page).toHaveURL(/\/me$/);
+  await expect(page).toHaveURL(({ pathname }) => pathname === '/me');
 });
 
 test('what was typed outlives a reload, but a password is never kept', async ({ page }) => {
@@ -111,6 +111,30 @@ test('a keyboard reaches the page past the places, and a wrong field takes the f
   await page.keyboard.press('Enter');
   await expect(page.getByLabel('E-mail')).toBeFocused();
   await expect(page.getByLabel('E-mail')).toHaveAccessibleDescription(/Fill this in/);
+});
+
+test('two windows opened at once stay signed in, and signing out in one signs out the other', async ({
+  page,
+  context,
+}, { project }) => {
+  const email = `twice.${project.name}@example.org`;
+  await signUp(page, email);
+  await page.goto(await mailedPath(page, email, 'verify'));
+  await expect(page.getByText('Your address is confirmed')).toBeVisible();
+  await signIn(page, email, PASSWORD);
+  await expect(page).toHaveURL(({ pathname }) => pathname === '/me');
+
+  const other = await context.newPage();
+  let renewals = 0;
+  for (const window of [page, other])
+    window.on('request', (request) => (renewals += request.url().endsWith('/session/refresh') ? 1 : 0));
+  await Promise.all([page.reload(), other.goto('/me')]);
+  for (const window of [page, other]) await expect(window.getByLabel('Name')).toHaveValue('Nell Ashe');
+  await expect.poll(() => renewals).toBe(2);
+
+  await page.getByRole('button', { name: 'Sign out', exact: true }).click();
+  await expect(page.getByText('Nobody is signed in here')).toBeVisible();
+  await expect(other.getByText('Nobody is signed in here')).toBeVisible();
 });
 
 test('a sign-in leads on only to a page of this site', async ({ page }, { project }) => {

@@ -24,12 +24,15 @@ function adviceFor(kind: ProblemKind): string {
   }
 }
 
-/** Words for anything that went wrong. Without a signal there is no `Problem`, only a failed fetch. */
+/** Words for anything that went wrong. Without a signal there is no `Problem`, only a fetch that failed (a TypeError). */
 export function problemWords(fault: unknown): ProblemWords {
   if (fault instanceof Problem)
     return { title: fault.title, whatToDo: fault.detail ?? adviceFor(fault.kind) };
-  return {
-    title: 'No answer from the server',
-    whatToDo: 'There may be no signal here. What you typed is kept on this device; try again when there is.',
-  };
+  if (fault instanceof TypeError)
+    return {
+      title: 'No answer from the server',
+      whatToDo:
+        'There may be no signal here. What you typed is kept on this device; try again when there is.',
+    };
+  return { title: 'Something in this page failed', whatToDo: adviceFor('internal') };
 }

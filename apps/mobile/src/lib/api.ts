@@ -71,15 +71,23 @@ async function ask(path: string, request: Ask): Promise<Response> {
   return send(path, request);
 }
 
+/** An answer's content. What is no JSON at all, such as a hotel's sign-in page, is left for the schema to refuse. */
+function contentOf(text: string): unknown {
+  if (text === '') return undefined;
+  try {
+    return JSON.parse(text);
+  } catch {
+    return text;
+  }
+}
+
 async function answer<T>(path: string, schema: z.ZodType<T>, request: Ask): Promise<T> {
   const response = await ask(path, request);
   if (!response.ok) throw await problemOf(response);
-  const text = await response.text();
-  const body: unknown = text === '' ? undefined : JSON.parse(text);
-  const parsed = schema.safeParse(body);
+  const parsed = schema.safeParse(contentOf(await response.text()));
   if (parsed.success) return parsed.data;
   throw new Problem('internal', 'The server’s answer could not be read', {
-    detail: 'This page may be older than the server. Load it again.',
+    detail: 'This page may be older than the server, or something stands between. Load the page again.',
   });
 }
 

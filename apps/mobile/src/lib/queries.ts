@@ -34,8 +34,8 @@ export const persistence: Omit<PersistQueryClientOptions, 'queryClient'> = {
   },
 };
 
-/** Forgets all that was read: at sign-in and sign-out, so nobody sees what another read on this device. */
+/** Forgets all that was read, on the device too; what is on the screen now is read anew. */
 export async function forgetEverythingRead(): Promise<void> {
-  queryClient.clear();
-  await persister.removeClient();
+  queryClient.removeQueries({ type: 'inactive' });
+  await Promise.all([persister.removeClient(), queryClient.resetQueries()]);
 }

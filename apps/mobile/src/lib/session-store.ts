@@ -61,3 +61,11 @@ export const sessionStore = {
     return account !== null;
   },
 };
+
+// Signed out in one window is signed out in all: nobody else at this device should read on in another.
+storage.watch(ACCOUNT_KEY, (text) => {
+  const other = remembered(text);
+  if (other?.id === session.account?.id) return;
+  access = null;
+  become(other ? { state: 'unknown', account: other } : { state: 'stranger', account: null });
+});

@@ -5,6 +5,15 @@ import { forgetEverythingRead } from '@/lib/queries';
 import { sessionStore, type Session } from '@/lib/session-store';
 import { SignedIn, type AccountView, type Role, type SignIn } from '@mereward/shared/accounts/contract';
 
+// What one person read is not the next one's, however the change came about: here, in another window, by running out.
+let reader = sessionStore.get().account?.id;
+sessionStore.subscribe(() => {
+  const now = sessionStore.get().account?.id;
+  if (now === reader) return;
+  reader = now;
+  void forgetEverythingRead();
+});
+
 export type CurrentSession = {
   state: Session['state'];
   account: AccountView | null;
@@ -32,15 +41,13 @@ export async function resumeSession(): Promise<void> {
 
 export async function signIn(input: SignIn): Promise<void> {
   const signedIn = await api.post('/accounts/session', input, SignedIn);
-  await forgetEverythingRead(); // what a stranger or somebody else read here is not this person's
   sessionStore.enter(signedIn, Date.now());
 }
 
-/** Signs out here, or on every device. What was read is forgotten with it. */
+/** Signs out here, or on every device. What was read and begun here is forgotten with it. */
 export async function signOut(where: 'here' | 'everywhere'): Promise<void> {
   const accountId = sessionStore.get().account?.id;
   await api.del(where === 'here' ? '/accounts/session' : '/accounts/sessions', nothing);
   sessionStore.leave();
   if (accountId !== undefined) await forgetDrafts(accountId);
-  await forgetEverythingRead();
 }

@@ -8,4 +8,6 @@ export const storage = {
   keys: async (): Promise<readonly string[]> => AsyncStorage.getAllKeys(),
   /** What can be had without waiting; a phone's own store can only be waited for. */
   peek: (_key: string): string | null => null,
+  /** A phone's own program has one window: nobody else changes what it keeps. */
+  watch: (_key: string, _changed: (value: string | null) => void): void => {},
 };

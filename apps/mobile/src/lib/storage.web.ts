@@ -18,4 +18,10 @@ export const storage = {
   keys: async (): Promise<readonly string[]> => attempt(() => Object.keys(localStorage), []),
   /** What can be had without waiting. */
   peek,
+  /** Calls back when another window of this browser changes what is kept under a key. */
+  watch: (key: string, changed: (value: string | null) => void): void => {
+    window.addEventListener('storage', (event) => {
+      if (event.key === key || event.key === null) changed(peek(key));
+    });
+  },
 };
