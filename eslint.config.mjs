@@ -80,7 +80,10 @@ export default tseslint.config(
       'no-unused-vars': ['error', { argsIgnorePattern: '^_', varsIgnorePattern: '^_' }],
     },
   },
-  { files: ['**/*.test.ts', '**/*.test.tsx', 'tests/**'], rules: { 'max-params': 'off' } },
+  {
+    files: ['**/*.test.ts', '**/*.test.tsx', 'tests/**'],
+    rules: { 'max-params': 'off', 'no-empty-pattern': ['error', { allowObjectPatternsAsParameters: true }] },
+  },
   // Express knows an error handler by its four parameters; Metro reads its settings as CommonJS.
   { files: ['apps/api/src/http/problem.ts'], rules: { 'max-params': ['error', 4] } },
   { files: ['apps/mobile/*.config.js'], rules: { '@typescript-eslint/no-require-imports': 'off' } },

@@ -6,10 +6,11 @@ export default defineConfig({
       {
         test: {
           name: 'unit',
-          include: ['packages/*/src/**/*.test.ts', 'apps/*/src/**/*.test.ts', 'tests/architecture/**/*.test.ts'],
+          include: ['packages/*/src/**/*.test.ts', 'apps/*/src/**/*.test.ts', 'scripts/**/*.test.ts'],
         },
         resolve: { alias: { '@': new URL('./apps/mobile/src', import.meta.url).pathname } },
       },
+      { test: { name: 'architecture', include: ['tests/architecture/**/*.test.ts'] } },
       { test: { name: 'reference', include: ['tests/reference/**/*.test.ts'] } },
       {
         test: {
