@@ -1,0 +1,88 @@
+import type { CastFlag, Grade } from './contract';
+
+/** One-σ limits of a grade: along and across the line, and of the depth, metres. Common practice, no published source. */
+const LIMITS = [
+  { grade: 'A', positionM: 1, depthM: 0.15 },
+  { grade: 'B', positionM: 2, depthM: 0.3 },
+  { grade: 'C', positionM: 4, depthM: 0.6 },
+] as const;
+
+/** What the grade of a sounding rests on. */
+export type GradeFacts = {
+  radialSigmaM: number;
+  lateralSigmaM: number;
+  depthSigmaM: number | null; // null: no depth was read
+  originMarked: boolean;
+  mark: 'permanent' | 'tree' | 'pole' | 'temporary' | null; // null: aimed by compass
+  braid: boolean;
+  level: 'known' | 'far' | 'unknown'; // far: no reading within a fortnight
+  remainderStated: boolean;
+  depthRepeated: boolean;
+  depthByFall: boolean;
+  floatSight: 'good' | 'poor' | null;
+  flags: readonly CastFlag[];
+  bottomDisagrees: boolean;
+};
+
+/**
+ * Grade A–D with every reason that held it down. Figures first (A ≤ 1 m both ways and ± 0.15 m, B ≤ 2 m and ± 0.3 m,
+ * C ≤ 4 m, D more), then caps.
+ *
+ * A also asks for a marked origin, a permanent mark, braid, a known level and a repeated reading. A reading counts
+ * as repeated when the float was read twice within a pull, or when the cast itself can be wound and thrown again to
+ * the same place: its remainder was measured, it was thrown from a marked origin over a permanent mark. A bare count
+ * of whole wraps can't be repeated closer than a quarter wrap, and so is not A.
+ */
+export function gradeOf(facts: GradeFacts): { grade: Grade; reasons: string[] } {
+  const caps = [...figureCaps(facts), ...conditionCaps(facts)];
+  const grade = caps.reduce<Grade>((worst, cap) => (cap.grade > worst ? cap.grade : worst), 'A');
+  const reasons = caps
+    .filter((cap) => cap.grade !== 'A')
+    .map((cap) => `${cap.reason} (no better than ${cap.grade})`);
+  return {
+    grade,
+    reasons:
+      reasons.length > 0 ? reasons : ['Marked origin, permanent mark, braid, level known, repeatable count'],
+  };
+}
+
+type Cap = { grade: Grade; reason: string };
+
+function figureCaps({ radialSigmaM, lateralSigmaM, depthSigmaM }: GradeFacts): Cap[] {
+  const position = (sigmaM: number): Grade =>
+    LIMITS.find(({ positionM }) => sigmaM <= positionM)?.grade ?? 'D';
+  const depth = (sigmaM: number): Grade => LIMITS.find(({ depthM }) => sigmaM <= depthM)?.grade ?? 'D';
+  const caps: Cap[] = [
+    { grade: position(radialSigmaM), reason: `Along the line ± ${radialSigmaM.toFixed(2)} m` },
+    { grade: position(lateralSigmaM), reason: `Across the line ± ${lateralSigmaM.toFixed(2)} m` },
+  ];
+  if (depthSigmaM !== null)
+    caps.push({ grade: depth(depthSigmaM), reason: `Depth ± ${depthSigmaM.toFixed(2)} m` });
+  return caps;
+}
+
+function conditionCaps(facts: GradeFacts): Cap[] {
+  const caps: Cap[] = [];
+  const cap = (when: boolean, grade: Grade, reason: string): void => {
+    if (when) caps.push({ grade, reason });
+  };
+  cap(!facts.originMarked, 'B', 'The peg has no marked origin to stand on');
+  cap(facts.mark === null, 'B', 'Aimed by compass, not over a mark');
+  cap(facts.mark !== null && facts.mark !== 'permanent', 'B', 'The far-bank mark is not permanent');
+  cap(!facts.braid, 'B', 'The line stretches');
+  cap(
+    !facts.remainderStated && !facts.depthRepeated,
+    'B',
+    'The remainder was not measured and the reading not repeated',
+  );
+  cap(facts.level === 'far', 'C', 'The gauge board was not read within a fortnight');
+  cap(facts.level === 'unknown', 'D', 'The water level of the visit is not known');
+  cap(facts.depthSigmaM === null, 'C', 'No depth was read: this cast tells of the bottom only');
+  cap(facts.depthByFall, 'C', 'Depth by a counted fall');
+  cap(facts.floatSight === 'poor', 'C', 'The float was seen poorly');
+  cap(facts.flags.includes('crosswind'), 'C', 'Crosswind bellied the line');
+  cap(facts.flags.includes('slack_line'), 'C', 'The line was slack');
+  cap(facts.flags.includes('hit_another_line'), 'C', 'The cast met another line');
+  cap(facts.bottomDisagrees, 'C', 'Landing, drag and what came back disagree');
+  return caps;
+}
