@@ -1,0 +1,59 @@
+import { ChartList, ChartView, PegPageView, SectionView } from '@mereward/shared/charts/contract';
+import { useQuery } from '@tanstack/react-query';
+import { api } from '@/lib/api';
+
+export const chartKeys = {
+  all: ['charts'] as const,
+  one: (chartId: string) => ['charts', 'one', chartId] as const,
+  ofLake: (lakeId: string) => ['charts', 'lake', lakeId] as const,
+  pegPage: (pegId: string) => ['charts', 'peg', pegId] as const,
+  section: (pegId: string, bearingDeg: number, toM: number) =>
+    ['charts', 'section', pegId, bearingDeg, toM] as const,
+};
+
+/** One chart with all its layers this reader may see. Too large to keep on the device beside the rest. */
+export function useChart(chartId: string | null) {
+  return useQuery({
+    queryKey: chartKeys.one(chartId ?? ''),
+    queryFn: ({ signal }) => api.get(`/charts/${chartId ?? ''}`, ChartView, signal),
+    enabled: chartId !== null,
+    meta: { keep: false },
+    gcTime: 10 * 60_000,
+  });
+}
+
+/** The versions of a lake's chart. */
+export function useChartsOf(lakeId: string | null) {
+  return useQuery({
+    queryKey: chartKeys.ofLake(lakeId ?? ''),
+    queryFn: ({ signal }) => api.get(`/lakes/${lakeId ?? ''}/charts`, ChartList, signal),
+    enabled: lakeId !== null,
+  });
+}
+
+/** What an angler reads of a peg before coming; kept for when there's no signal. */
+export function usePegPage(pegId: string | null) {
+  return useQuery({
+    queryKey: chartKeys.pegPage(pegId ?? ''),
+    queryFn: ({ signal }) => api.get(`/pegs/${pegId ?? ''}/page`, PegPageView, signal),
+    enabled: pegId !== null,
+  });
+}
+
+export type AskedSection = { pegId: string; bearingDeg: number; toM: number };
+
+/** Depth and bottom along a bearing from a peg. */
+export function useSection(asked: AskedSection | null) {
+  const { pegId, bearingDeg, toM } = asked ?? { pegId: '', bearingDeg: 0, toM: 0 };
+  return useQuery({
+    queryKey: chartKeys.section(pegId, bearingDeg, toM),
+    queryFn: ({ signal }) =>
+      api.get(
+        `/pegs/${pegId}/section?bearingDeg=${String(bearingDeg)}&toM=${String(toM)}`,
+        SectionView,
+        signal,
+      ),
+    enabled: asked !== null,
+    staleTime: 10 * 60_000,
+  });
+}

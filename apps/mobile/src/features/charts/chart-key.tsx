@@ -1,0 +1,70 @@
+import { useMemo } from 'react';
+import { BOTTOM_GLYPHS, type Patterned } from '@mereward/shared/charts/drawing/bottom-glyphs';
+import type { BottomArea } from '@mereward/shared/charts/drawing/bottom-areas';
+import type { Ground } from '@mereward/shared/charts/drawing/ground';
+import { palettes, type Palette } from '@mereward/shared/charts/drawing/palette';
+import { swatchSvg } from '@mereward/shared/charts/drawing/swatch';
+import { bandsOf } from '@mereward/shared/charts/drawing/tint';
+import { View } from 'react-native';
+import { Text } from '@/components/text';
+import { space } from '@/constants/layout';
+import { useTheme } from '@/hooks/use-theme';
+import { useUnits } from '@/hooks/use-units';
+import { isobathFigure } from './depth-format';
+import { SvgPicture } from './svg-picture';
+
+/** The tints and the depths they begin at. */
+function Tints({ ground, palette }: { ground: Ground; palette: Palette }) {
+  const { length } = useUnits();
+  const { colours } = useTheme();
+  const bands = bandsOf(ground.levelsM, palette.ramp);
+  const every = Math.max(1, Math.ceil(bands.length / 6));
+  return (
+    <View aria-hidden style={{ flexDirection: 'row', maxWidth: 420 }}>
+      {bands.map(({ fromM, tint }, i) => (
+        <View key={fromM} style={{ flex: 1 }}>
+          <View
+            style={{ height: 14, backgroundColor: tint, borderColor: colours.rule, borderBottomWidth: 1 }}
+          />
+          <Text size="tiny" tone="inkSoft">
+            {i % every === 0 ? isobathFigure(fromM, ground.stepM, length) : ''}
+          </Text>
+        </View>
+      ))}
+      <Text size="tiny" tone="inkSoft" style={{ alignSelf: 'flex-end', paddingLeft: space.hair }}>
+        {length}
+      </Text>
+    </View>
+  );
+}
+
+function Swatch({ kind, palette }: { kind: Patterned; palette: Palette }) {
+  const { words, abbreviation } = BOTTOM_GLYPHS[kind];
+  const svg = useMemo(() => swatchSvg(kind, palette), [kind, palette]);
+  return (
+    <View style={{ flexDirection: 'row', alignItems: 'center', gap: space.hair }}>
+      <SvgPicture svg={svg} />
+      <Text size="small">{abbreviation === words ? words : `${words} (${abbreviation})`}</Text>
+    </View>
+  );
+}
+
+type Props = { ground: Ground; bottom: readonly BottomArea[] };
+
+/** How to read the chart: depth tints, and the pattern of every bottom that is on it. */
+export function ChartKey({ ground, bottom }: Props) {
+  const { name } = useTheme();
+  const palette = palettes[name];
+  return (
+    <View style={{ gap: space.small }}>
+      {ground.depth ? <Tints ground={ground} palette={palette} /> : null}
+      {bottom.length ? (
+        <View style={{ flexDirection: 'row', flexWrap: 'wrap', columnGap: space.page, rowGap: space.hair }}>
+          {bottom.map(({ kind }) => (
+            <Swatch key={kind} kind={kind} palette={palette} />
+          ))}
+        </View>
+      ) : null}
+    </View>
+  );
+}
