@@ -5,8 +5,6 @@ const frame = { columns: 60, rows: 1, cellM: 1, originM: { xM: 0, yM: 0 } };
 const nodes = {
   frame,
   nodes: Int32Array.from({ length: 60 }, (_, i) => i),
-  xM: Float64Array.from({ length: 60 }, (_, i) => i),
-  yM: new Float64Array(60),
 };
 const cast = (xM: number, shares: number[]) => ({ xM, yM: 0, shares });
 

@@ -1,5 +1,4 @@
 import type { GridFrame } from './grid';
-import { indexSamples } from './sample-index';
 
 /** A cast's own answer about the bottom: a probability for each class, in the order of the class list, summing to 1. */
 export type BottomEvidence = { xM: number; yM: number; shares: readonly number[] };
@@ -44,45 +43,65 @@ export function bottomMap(
   const map = unknownBottom(nodes.frame);
   if (evidence.length === 0) return map;
   const classes = evidence[0]!.shares.length;
+  const alpha = new Float64Array(nodes.frame.columns * nodes.frame.rows * classes).fill(
+    PRIOR_CASTS / classes,
+  );
   const table = shareTable(evidence);
-  const xM = Float64Array.from(evidence, (e) => e.xM);
-  const yM = Float64Array.from(evidence, (e) => e.yM);
-  const index = indexSamples(xM, yM);
-  const reachM = REACH * bandwidthM;
-  const alpha = new Float64Array(classes);
-  for (let t = 0; t < nodes.nodes.length; t++) {
-    const x = nodes.xM[t]!;
-    const y = nodes.yM[t]!;
-    alpha.fill(PRIOR_CASTS / classes);
-    const west = Math.max(0, Math.floor((x - reachM - index.westM) / index.bucketM));
-    const east = Math.min(index.columns - 1, Math.floor((x + reachM - index.westM) / index.bucketM));
-    const south = Math.max(0, Math.floor((y - reachM - index.southM) / index.bucketM));
-    const north = Math.min(index.rows - 1, Math.floor((y + reachM - index.southM) / index.bucketM));
-    let total = PRIOR_CASTS;
-    for (let row = south; row <= north && west <= east; row++) {
-      const from = index.starts[row * index.columns + west]!;
-      const to = index.starts[row * index.columns + east + 1]!;
-      for (let m = from; m < to; m++) {
-        const id = index.members[m]!;
-        const d2 = (xM[id]! - x) ** 2 + (yM[id]! - y) ** 2;
-        if (d2 > reachM * reachM) continue;
-        const weight = Math.exp(-d2 / (2 * bandwidthM * bandwidthM));
-        total += weight;
-        for (let c = 0; c < classes; c++) alpha[c] = alpha[c]! + weight * table[id * classes + c]!;
-      }
+  evidence.forEach((cast, i) =>
+    spreadCast(alpha, nodes.frame, {
+      ...cast,
+      bandwidthM,
+      shares: table.subarray(i * classes, (i + 1) * classes),
+    }),
+  );
+  for (const node of nodes.nodes) {
+    const from = node * classes;
+    let best = from;
+    let total = alpha[from]!;
+    for (let c = from + 1; c < from + classes; c++) {
+      total += alpha[c]!;
+      if (alpha[c]! > alpha[best]!) best = c;
     }
-    let best = 0;
-    for (let c = 1; c < classes; c++) if (alpha[c]! > alpha[best]!) best = c;
     const confidence = alpha[best]! / total;
     if (confidence < LEAST_CONFIDENCE) continue;
-    map.classes[nodes.nodes[t]!] = best;
-    map.confidence[nodes.nodes[t]!] = confidence;
+    map.classes[node] = best - from;
+    map.confidence[node] = confidence;
   }
   return map;
 }
 
-/** The nodes to estimate at: their numbers in the frame and their places, metres. */
-export type BottomNodes = { frame: GridFrame; nodes: Int32Array; xM: Float64Array; yM: Float64Array };
+type SpreadingCast = { xM: number; yM: number; shares: Float64Array; bandwidthM: number };
+
+/** Adds one cast's weighted shares to every node within its reach; the weight is a product of one factor a column and a row. */
+function spreadCast(
+  alpha: Float64Array,
+  frame: GridFrame,
+  { xM, yM, shares, bandwidthM }: SpreadingCast,
+): void {
+  const { columns, rows, cellM, originM } = frame;
+  const reachM = REACH * bandwidthM;
+  const perWidth2 = 1 / (2 * bandwidthM * bandwidthM);
+  const across = Float64Array.from({ length: columns }, (_, column) =>
+    Math.exp(-((originM.xM + column * cellM - xM) ** 2) * perWidth2),
+  );
+  const south = Math.max(0, Math.ceil((yM - reachM - originM.yM) / cellM));
+  const north = Math.min(rows - 1, Math.floor((yM + reachM - originM.yM) / cellM));
+  for (let row = south; row <= north; row++) {
+    const dy = originM.yM + row * cellM - yM;
+    const halfM = Math.sqrt(Math.max(0, reachM * reachM - dy * dy));
+    const west = Math.max(0, Math.ceil((xM - halfM - originM.xM) / cellM));
+    const east = Math.min(columns - 1, Math.floor((xM + halfM - originM.xM) / cellM));
+    const down = Math.exp(-dy * dy * perWidth2);
+    let p = (row * columns + west) * shares.length;
+    for (let column = west; column <= east; column++) {
+      const weight = down * across[column]!;
+      for (let c = 0; c < shares.length; c++, p++) alpha[p] = alpha[p]! + weight * shares[c]!;
+    }
+  }
+}
+
+/** The nodes to estimate at, by their numbers in the frame. */
+export type BottomNodes = { frame: GridFrame; nodes: Int32Array };
 
 /** The bandwidth with the best leave-one-out log score Σᵢ Σ_c p_ic ln P₋ᵢ(c); the usual one below ten casts. Metres. */
 export function chooseBandwidthM(evidence: readonly BottomEvidence[]): number {
@@ -103,6 +122,7 @@ function logScore(evidence: readonly BottomEvidence[], bandwidthM: number): numb
   const classes = evidence[0]!.shares.length;
   const table = shareTable(evidence);
   const alpha = new Float64Array(classes);
+  const reach2 = (REACH * bandwidthM) ** 2;
   let score = 0;
   for (let i = 0; i < evidence.length; i++) {
     alpha.fill(PRIOR_CASTS / classes);
@@ -110,6 +130,7 @@ function logScore(evidence: readonly BottomEvidence[], bandwidthM: number): numb
     for (let j = 0; j < evidence.length; j++) {
       if (j === i) continue;
       const d2 = (evidence[i]!.xM - evidence[j]!.xM) ** 2 + (evidence[i]!.yM - evidence[j]!.yM) ** 2;
+      if (d2 > reach2) continue;
       const weight = Math.exp(-d2 / (2 * bandwidthM * bandwidthM));
       total += weight;
       for (let c = 0; c < classes; c++) alpha[c] = alpha[c]! + weight * table[j * classes + c]!;

@@ -111,7 +111,7 @@ export function buildChart(input: ChartInput, report: (step: string, share: numb
 }
 
 function mapBottoms(input: ChartInput, surface: ChartSurface, frame: GridFrame) {
-  const nodes = { frame, ...placesOf(surface.surveyed, frame) };
+  const nodes = { frame, nodes: placesOf(surface.surveyed, frame).nodes };
   const sorted = [...input.soundings]
     .filter((s) => s.grade === 'A' || s.grade === 'B')
     .sort((a, b) => (a.id < b.id ? -1 : 1));

@@ -3,7 +3,8 @@ import { insideOutline } from '../geometry/polygon';
 import { nearestShore } from '../geometry/shore-distance';
 import { columnXM, emptyGrid, rowYM } from './grid';
 import type { Grid, GridFrame } from './grid';
-import { predictValues, solveGlobal } from './kriging-global';
+import { solveGlobal } from './kriging-global';
+import { predictByTable } from './kriging-table';
 import { DEFAULT_NEIGHBOURS, GLOBAL_LIMIT } from './kriging';
 import { krigeNeighbourhood } from './kriging-neighbourhood';
 import type { KrigingSetup } from './kriging-setup';
@@ -104,7 +105,7 @@ type Predict = (targets: Targets) => Float64Array;
 function predictorOf(setup: KrigingSetup): Predict {
   if (setup.samples.xM.length <= GLOBAL_LIMIT) {
     const model = solveGlobal(setup);
-    return (targets) => predictValues(model, targets);
+    return (targets) => predictByTable(model, targets);
   }
   return (targets) => krigeNeighbourhood(setup, targets, { neighbours: DEFAULT_NEIGHBOURS }).valuesM;
 }

@@ -4,6 +4,7 @@ import { leaveOneOut } from './cross-validation';
 import { krige } from './kriging';
 import { predictGlobal, predictValues, solveGlobal } from './kriging-global';
 import { krigeNeighbourhood } from './kriging-neighbourhood';
+import { predictByTable } from './kriging-table';
 import type { KrigingSetup } from './kriging-setup';
 import { samplePoints } from './sample-points';
 import { VARIOGRAM_MODELS } from './variogram';
@@ -64,7 +65,7 @@ describe('kriging', () => {
     );
   });
 
-  test('a neighbourhood of every sample is the global solve, with and without drift', () => {
+  test('a neighbourhood of every sample is the global solve, with and without drift; the table is near it', () => {
     fc.assert(
       fc.property(samples, variogram, fc.boolean(), (rows, model, withDrift) => {
         const points = samplePoints(rows);
@@ -75,7 +76,11 @@ describe('kriging', () => {
         const near = krigeNeighbourhood(setup, places, { neighbours: rows.length });
         all.valuesM.forEach((value, t) => expect(Math.abs(near.valuesM[t]! - value)).toBeLessThan(1e-6));
         all.varianceM2.forEach((v, t) => expect(Math.abs(near.varianceM2[t]! - v)).toBeLessThan(1e-6));
-        expect([...predictValues(solveGlobal(setup), places)]).toEqual([...all.valuesM]);
+        const solved = solveGlobal(setup);
+        expect([...predictValues(solved, places)]).toEqual([...all.valuesM]);
+        predictByTable(solved, places).forEach((v, t) =>
+          expect(Math.abs(v - all.valuesM[t]!)).toBeLessThan(1e-4),
+        );
       }),
     );
   });
