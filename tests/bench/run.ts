@@ -4,6 +4,7 @@ import { chartComparison, previewComparison } from './chart.bench';
 import { isobathComparison } from './isobaths.bench';
 import { krigingComparison } from './kriging.bench';
 import { comparisonLine } from './measure';
+import { benchPhotos } from './photos';
 import { tinComparison } from './tin.bench';
 
 const withPeers = process.argv.includes('--peers');
@@ -18,3 +19,4 @@ for (const start of [tinComparison, krigingComparison]) {
 say(await comparisonLine(chartComparison()));
 say(await comparisonLine(previewComparison()));
 for (const line of await benchAuth()) say(line);
+for (const line of await benchPhotos()) say(line);
