@@ -128,28 +128,77 @@ class LocalSystem {
     }
   }
 
+  /** Two rows at a time, so that each row above is read once for both. */
   private factorise(): boolean {
     const { factor, order } = this;
-    for (let i = 0, rowI = 0; i < order; rowI += ++i) {
+    let i = 0;
+    for (; i + 1 < order; i += 2) {
+      const first = (i * (i + 1)) / 2;
+      const second = first + i + 1;
       for (let j = 0, rowJ = 0; j < i; rowJ += ++j) {
-        let sum = factor[rowI + j]!;
-        for (let k = 0; k < j; k++) sum -= factor[rowI + k]! * factor[rowJ + k]!;
-        factor[rowI + j] = sum * factor[rowJ + j]!;
+        let a = factor[first + j]!;
+        let b = factor[second + j]!;
+        for (let k = 0; k < j; k++) {
+          const above = factor[rowJ + k]!;
+          a -= factor[first + k]! * above;
+          b -= factor[second + k]! * above;
+        }
+        const scale = factor[rowJ + j]!;
+        factor[first + j] = a * scale;
+        factor[second + j] = b * scale;
       }
-      let pivot = factor[rowI + i]!;
-      for (let k = 0; k < i; k++) pivot -= factor[rowI + k]! * factor[rowI + k]!;
-      if (!(pivot > 0)) return false;
-      factor[rowI + i] = 1 / Math.sqrt(pivot);
+      let pivotA = factor[first + i]!;
+      let cross = factor[second + i]!;
+      let pivotB = factor[second + i + 1]!;
+      for (let k = 0; k < i; k++) {
+        const a = factor[first + k]!;
+        const b = factor[second + k]!;
+        pivotA -= a * a;
+        cross -= a * b;
+        pivotB -= b * b;
+      }
+      if (!(pivotA > 0)) return false;
+      const scale = 1 / Math.sqrt(pivotA);
+      cross *= scale;
+      pivotB -= cross * cross;
+      if (!(pivotB > 0)) return false;
+      factor[first + i] = scale;
+      factor[second + i] = cross;
+      factor[second + i + 1] = 1 / Math.sqrt(pivotB);
     }
+    return i === order || this.factoriseLast(i);
+  }
+
+  private factoriseLast(i: number): boolean {
+    const { factor } = this;
+    const row = (i * (i + 1)) / 2;
+    let pivot = factor[row + i]!;
+    for (let j = 0, rowJ = 0; j < i; rowJ += ++j) {
+      let sum = factor[row + j]!;
+      for (let k = 0; k < j; k++) sum -= factor[row + k]! * factor[rowJ + k]!;
+      sum *= factor[rowJ + j]!;
+      factor[row + j] = sum;
+      pivot -= sum * sum;
+    }
+    if (!(pivot > 0)) return false;
+    factor[row + i] = 1 / Math.sqrt(pivot);
     return true;
   }
 
-  private forward(x: Float64Array): void {
+  /** Solves L x = x for two vectors in one pass over L. */
+  private forwardPair(x: Float64Array, y: Float64Array): void {
     const { factor, order } = this;
     for (let i = 0, row = 0; i < order; row += ++i) {
-      let sum = x[i]!;
-      for (let k = 0; k < i; k++) sum -= factor[row + k]! * x[k]!;
-      x[i] = sum * factor[row + i]!;
+      let a = x[i]!;
+      let b = y[i]!;
+      for (let k = 0; k < i; k++) {
+        const l = factor[row + k]!;
+        a -= l * x[k]!;
+        b -= l * y[k]!;
+      }
+      const scale = factor[row + i]!;
+      x[i] = a * scale;
+      y[i] = b * scale;
     }
   }
 
@@ -160,9 +209,8 @@ class LocalSystem {
       solvedDrift[i] = this.driftM === undefined ? 0 : this.driftM[ids[i]!]!;
       residual[i] = this.setup.samples.valueM[ids[i]!]!;
     }
-    this.forward(solvedOnes);
-    this.forward(residual);
-    if (this.driftM !== undefined) this.forward(solvedDrift);
+    this.forwardPair(solvedOnes, residual);
+    if (this.driftM !== undefined) this.forwardPair(solvedDrift, this.row); // the row is free to be overwritten
     const oo = this.dotOf(solvedOnes, solvedOnes);
     const od = this.dotOf(solvedOnes, solvedDrift);
     const dd = this.dotOf(solvedDrift, solvedDrift);
