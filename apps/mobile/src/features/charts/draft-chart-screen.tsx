@@ -10,8 +10,9 @@ import { FormField } from '@/components/form-field';
 import { LinkButton } from '@/components/link-button';
 import { Loaded } from '@/components/loaded';
 import { Page } from '@/components/page';
-import { draftChart, useVisitsOf } from '@/features/charts/review-api';
+import { draftChart } from '@/features/charts/review-api';
 import { useLake } from '@/features/lakes/api';
+import { useVisits } from '@/features/surveys/api';
 import { useDraftForm } from '@/hooks/use-draft-form';
 import { newId } from '@/lib/new-id';
 
@@ -34,7 +35,7 @@ const Wanted = z.object({
 export function DraftChartScreen() {
   const { lakeId } = useLocalSearchParams<{ lakeId: string }>();
   const lake = useLake(lakeId);
-  const visits = useVisitsOf(lakeId);
+  const visits = useVisits(lakeId);
   return (
     <Page
       title="Draft a chart"

@@ -5,7 +5,6 @@ import {
   type DraftChart,
   type WithdrawChart,
 } from '@mereward/shared/charts/contract';
-import { VisitList } from '@mereward/shared/surveys/contract';
 import { useMutation, useQuery, useQueryClient } from '@tanstack/react-query';
 import { api, nothing } from '@/lib/api';
 
@@ -33,13 +32,6 @@ export const useChartReview = (chartId: string) =>
     queryKey: reviewKeys.one(chartId),
     queryFn: ({ signal }) => api.get(`/charts/${chartId}/review`, ChartReview, signal),
     refetchInterval: ({ state }) => (isBuilding(state.data?.chart.build) ? EVERY_MS : false),
-  });
-
-/** The visits a chart can be made from. */
-export const useVisitsOf = (lakeId: string) =>
-  useQuery({
-    queryKey: ['surveys', 'lake', lakeId],
-    queryFn: ({ signal }) => api.get(`/lakes/${lakeId}/visits`, VisitList, signal),
   });
 
 export const draftChart = (lakeId: string, draft: DraftChart) =>

@@ -1,0 +1,90 @@
+import { PegView, LevelRecorded, type RecordLevel } from '@mereward/shared/lakes/contract';
+import {
+  CastView,
+  ImportDone,
+  ImportPreview,
+  VisitList,
+  VisitView,
+  VisitWithCasts,
+  type CloseVisit,
+  type CorrectKit,
+  type ImportCasts,
+  type KeepCast,
+  type OpenVisit,
+} from '@mereward/shared/surveys/contract';
+import { useMutation, useQuery, useQueryClient } from '@tanstack/react-query';
+import { lakeKeys } from '@/features/lakes/api';
+import { api, nothing } from '@/lib/api';
+
+export const surveyKeys = {
+  ofLake: (lakeId: string) => ['surveys', 'lake', lakeId] as const,
+  one: (visitId: string) => ['surveys', 'visit', visitId] as const,
+  peg: (pegId: string) => ['surveys', 'peg', pegId] as const,
+};
+
+/** The visits of a lake, newest first. */
+export const useVisits = (lakeId: string) =>
+  useQuery({
+    queryKey: surveyKeys.ofLake(lakeId),
+    queryFn: ({ signal }) => api.get(`/lakes/${lakeId}/visits`, VisitList, signal),
+  });
+
+/** A visit, its casts in order, and how much of each peg's arc they cover. */
+export const useVisit = (visitId: string) =>
+  useQuery({
+    queryKey: surveyKeys.one(visitId),
+    queryFn: ({ signal }) => api.get(`/visits/${visitId}`, VisitWithCasts, signal),
+  });
+
+/** The peg stood on: its origin mark and arc are what a cast is reduced from. */
+export const useStance = (pegId: string | null) =>
+  useQuery({
+    queryKey: surveyKeys.peg(pegId ?? ''),
+    queryFn: ({ signal }) => api.get(`/pegs/${pegId ?? ''}/details`, PegView, signal),
+    enabled: pegId !== null,
+  });
+
+export const openVisit = (lakeId: string, visit: OpenVisit) =>
+  api.post(`/lakes/${lakeId}/visits`, visit, VisitView);
+
+/** Keeps a cast. The id is made here, so sending it again after a lost answer keeps it once. */
+export function useKeepCast(visitId: string) {
+  const queries = useQueryClient();
+  return useMutation({
+    mutationFn: (cast: KeepCast) => api.post(`/visits/${visitId}/casts`, cast, CastView),
+    onSuccess: () => queries.invalidateQueries({ queryKey: surveyKeys.one(visitId) }),
+  });
+}
+
+export function useUndoCast(visitId: string) {
+  const queries = useQueryClient();
+  return useMutation({
+    mutationFn: (castId: string) => api.del(`/visits/${visitId}/casts/${castId}`, nothing),
+    onSuccess: () => queries.invalidateQueries({ queryKey: surveyKeys.one(visitId) }),
+  });
+}
+
+export const correctKit = (visitId: string, input: CorrectKit) =>
+  api.patch(`/visits/${visitId}/kit`, input, VisitView);
+
+export const closeVisit = (visitId: string, input: CloseVisit) =>
+  api.post(`/visits/${visitId}/close`, input, VisitView);
+
+export const previewImport = (visitId: string, input: ImportCasts) =>
+  api.post(`/visits/${visitId}/imports/preview`, input, ImportPreview);
+
+export function useImportCasts(visitId: string) {
+  const queries = useQueryClient();
+  return useMutation({
+    mutationFn: (input: ImportCasts) => api.post(`/visits/${visitId}/imports`, input, ImportDone),
+    onSuccess: () => queries.invalidateQueries({ queryKey: surveyKeys.one(visitId) }),
+  });
+}
+
+export function useRecordLevel({ boardId, lakeId }: { boardId: string; lakeId: string }) {
+  const queries = useQueryClient();
+  return useMutation({
+    mutationFn: (input: RecordLevel) => api.post(`/boards/${boardId}/readings`, input, LevelRecorded),
+    onSuccess: () => queries.invalidateQueries({ queryKey: lakeKeys.one(lakeId) }),
+  });
+}
