@@ -18,7 +18,7 @@ import { dirname, join } from 'node:path';
 import { Halt } from './halt.mjs';
 import { freePort } from './port.mjs';
 import { postgresBinaries, serverUser } from './postgres-binaries.mjs';
-import { exited, launch, pause, run, signalGroup } from './run.mjs';
+import { exited, launchApart, pause, run, signalGroup } from './run.mjs';
 
 /**
  * @typedef {object} Cluster
@@ -158,7 +158,7 @@ async function serve({ folder, binaries, settings, litter }) {
     ...settings,
   ];
   const command = [join(binaries, 'postgres'), '-D', folder, ...options.flatMap((option) => ['-c', option])];
-  const child = launch('/bin/sh', ['-c', keeper, 'sh', litter, ...command], {
+  const child = launchApart('/bin/sh', ['-c', keeper, 'sh', litter, ...command], {
     ...serverUser(),
     cwd: '/',
     stdio: ['pipe', log, log],

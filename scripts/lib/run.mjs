@@ -17,12 +17,19 @@ export function signalGroup(child, signal) {
 }
 
 /**
+ * Starts a program that its starter stops by itself, after everything that leans on it.
+ * @param {string} command @param {string[]} args @param {import('node:child_process').SpawnOptions} [options]
+ */
+export const launchApart = (command, args, options) =>
+  spawn(command, args, { cwd: root, detached: true, ...options });
+
+/**
  * Starts a program in a process group of its own, so that Ctrl-C reaches this script alone and the
  * script decides the order in which things stop.
  * @param {string} command @param {string[]} args @param {import('node:child_process').SpawnOptions} [options]
  */
 export function launch(command, args, options) {
-  const child = spawn(command, args, { cwd: root, detached: true, ...options });
+  const child = launchApart(command, args, options);
   running.add(child);
   child.once('exit', () => running.delete(child));
   child.once('error', () => running.delete(child));
