@@ -60,7 +60,7 @@ export async function aServer({ env = {}, logger }: Wishes = {}): Promise<TestSe
   const settle = () => workOff(ground);
   const running: { stop: () => Promise<void> }[] = [];
   return {
-    app: makeApp(server, log, capture),
+    app: makeApp(server, log, { capture }),
     server,
     setNow: (instant) => void (now = new Date(instant)),
     pass: (seconds) => void (now = new Date(now.getTime() + seconds * 1000)),

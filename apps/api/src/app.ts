@@ -1,6 +1,6 @@
 import compression from 'compression';
 import cookieParser from 'cookie-parser';
-import express, { Router, type Express } from 'express';
+import express, { Router, type Express, type RequestHandler } from 'express';
 import helmet from 'helmet';
 import type pino from 'pino';
 import { demoMail } from './demo/mail-page';
@@ -9,13 +9,18 @@ import { limitAll } from './http/limits';
 import { logRequests } from './http/logging';
 import { openapi } from './http/openapi';
 import { answerProblem, nothingHere } from './http/problem';
+import type { Route } from './http/route';
 import { standOn, type Server } from './http/server';
 import { serveWeb } from './http/web';
 import type { Capture } from './mail/capture';
-import { routes } from './routes';
+import { routes as ourRoutes } from './routes';
 
-/** The whole server as one Express application; nothing listens yet. Caught mail is shown by the demo alone. */
-export function makeApp(server: Server, logger: pino.Logger, capture: Capture | null = null): Express {
+/** What an application may be made with: mail it caught, which the demo alone shows; other routes, for a measurement. */
+type With = { capture?: Capture | null; routes?: readonly Route[] };
+
+/** The whole server as one Express application; nothing listens yet. */
+export function makeApp(server: Server, logger: pino.Logger, made: With = {}): Express {
+  const { capture, routes = ourRoutes } = made;
   const app = express();
   standOn(app, server);
   app.set('trust proxy', server.config.trustProxy);
@@ -34,19 +39,35 @@ export function makeApp(server: Server, logger: pino.Logger, capture: Capture | 
     }),
   );
   app.use(logRequests(logger));
-  app.use('/api', apiRouter());
+  app.use('/api', apiRouter(routes));
   if (capture && server.config.demo) app.use('/demo', demoMail(capture));
   app.use(serveWeb(server.config.webDir), nothingHere, answerProblem);
   return app;
 }
 
-function apiRouter(): Router {
+function apiRouter(routes: readonly Route[]): Router {
   const api = Router();
   const document = JSON.stringify(openapi(routes));
   api.use(health());
   api.use(limitAll(), compression(), cookieParser(), express.json({ limit: '6mb' }));
   api.get('/openapi.json', (_req, res) => void res.type('application/json').send(document));
-  for (const route of routes) route.attach(api);
+  api.use(byFirstWord(routes));
   api.use(nothingHere, answerProblem);
   return api;
+}
+
+/** Express tries its routes one by one: only those that begin with the same word need to be tried. */
+function byFirstWord(routes: readonly Route[]): RequestHandler {
+  const routers = new Map<string, Router>();
+  for (const route of routes) {
+    const word = route.path.split('/')[1] ?? '';
+    const router = routers.get(word) ?? Router();
+    routers.set(word, router);
+    route.attach(router);
+  }
+  return (req, res, next) => {
+    const router = routers.get(req.path.split('/')[1] ?? '');
+    if (router) router(req, res, next);
+    else next();
+  };
 }

@@ -31,7 +31,7 @@ async function main(): Promise<void> {
   const stopWatching = watchBuilds(server, (err) =>
     logger.error({ err }, 'lost builds could not be taken up'),
   );
-  const http = createServer(makeApp(server, logger, capture));
+  const http = createServer(makeApp(server, logger, { capture }));
   await listen(http, config);
   logger.info({ port: config.port, url: config.publicUrl }, 'listening');
 
