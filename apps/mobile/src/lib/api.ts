@@ -5,8 +5,8 @@ import { problemOf } from '@/lib/answer';
 import { oneAtATime } from '@/lib/one-at-a-time';
 import { sessionStore } from '@/lib/session-store';
 
-/** The answer of a deed that answers nothing. */
-export const nothing = z.undefined();
+/** The answer of a deed whose answer does not matter; a newer server may say more than nothing. */
+export const nothing = z.unknown();
 
 type Method = 'GET' | 'POST' | 'PUT' | 'PATCH' | 'DELETE';
 type Ask = { method: Method; body?: unknown; signal?: AbortSignal | undefined };

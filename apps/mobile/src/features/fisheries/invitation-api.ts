@@ -1,7 +1,8 @@
+import { AccountView } from '@mereward/shared/accounts/contract';
 import { InvitationShown } from '@mereward/shared/fisheries/contract';
-import { useMutation, useQuery } from '@tanstack/react-query';
-import { api, nothing, refreshSession } from '@/lib/api';
-import { forgetEverythingRead } from '@/lib/queries';
+import { useMutation, useQuery, useQueryClient } from '@tanstack/react-query';
+import { api } from '@/lib/api';
+import { sessionStore } from '@/lib/session-store';
 
 /** What a mailed invitation is to. Its token is a secret, so the answer is not kept on the device. */
 export const useInvitation = (token: string) =>
@@ -12,12 +13,13 @@ export const useInvitation = (token: string) =>
     meta: { keep: false },
   });
 
-/** Takes an invitation up; the new role is in force at once, so what was read without it is read anew. */
-export const useAcceptInvitation = () =>
-  useMutation({
+/** Takes an invitation up; the new role is in force at once, so all that was read without it is out of date. */
+export function useAcceptInvitation() {
+  const queries = useQueryClient();
+  return useMutation({
     mutationFn: async (token: string) => {
-      await api.post('/invitations/accept', { token }, nothing);
-      await refreshSession();
-      await forgetEverythingRead();
+      sessionStore.update(await api.post('/invitations/accept', { token }, AccountView));
     },
+    onSuccess: () => queries.invalidateQueries({ refetchType: 'none' }),
   });
+}
