@@ -88,7 +88,7 @@ describe('the chart built from the measured casts', () => {
     const samples = chartSamples(soundings, outline);
     const { model, nugget, sill, rangeM } = chart.quality.variogram;
     const variogram = { model: VariogramModel.parse(model), nuggetM2: nugget, partialSillM2: sill, rangeM };
-    const depths = krige({ samples: samples.points, variogram, nuggetIs: 'noise' }, places).valuesM;
+    const depths = krige({ samples: samples.points, variogram, nuggetIs: 'noise' }, places, 24).valuesM;
     const volumeM3 = depths.reduce((sum, depth) => sum + Math.max(0, depth), 0) * chart.frame.cellM ** 2;
     expect(Math.abs(volumeM3 / expected.exact_volume_m3 - 1)).toBeLessThan(0.06);
     expect(Math.abs(chart.figures.areaM2 / expected.exact_area_m2 - 1)).toBeLessThan(0.01);

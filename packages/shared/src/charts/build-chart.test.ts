@@ -139,6 +139,33 @@ describe('a chart of a bowl with an island', () => {
   });
 });
 
+test('moving the lake moves the chart and changes no depth', () => {
+  const by = { xM: 1240.5, yM: -380 }; // whole cells, so that the cells lie on the same water
+  const moved = <P extends { xM: number; yM: number }>(p: P): P => ({
+    ...p,
+    xM: p.xM + by.xM,
+    yM: p.yM + by.yM,
+  });
+  const there = buildChart(
+    {
+      ...input,
+      outline: {
+        shore: input.outline.shore.map(moved),
+        islands: input.outline.islands.map((i) => i.map(moved)),
+      },
+      soundings: input.soundings.map(moved),
+    },
+    () => undefined,
+  );
+  expect(there.frame).toEqual({ ...chart.frame, originM: moved(chart.frame.originM) });
+  there.depth.values.forEach((depth, i) => {
+    const here = chart.depth.values[i]!;
+    if (isSurveyed(depth) && isSurveyed(here)) expect(Math.abs(depth - here)).toBeLessThan(1e-4);
+  });
+  const surveyed = (built: typeof chart) => built.depth.values.filter(isSurveyed).length;
+  expect(Math.abs(surveyed(there) - surveyed(chart))).toBeLessThan(10);
+});
+
 describe('what the soundings may do', () => {
   test('the order they come in changes no byte', () => {
     const turned = { ...input, soundings: [...input.soundings].reverse() };

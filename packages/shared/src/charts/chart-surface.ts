@@ -5,7 +5,7 @@ import { columnXM, emptyGrid, rowYM } from './grid';
 import type { Grid, GridFrame } from './grid';
 import { solveGlobal } from './kriging-global';
 import { predictByTable } from './kriging-table';
-import { DEFAULT_NEIGHBOURS, GLOBAL_LIMIT } from './kriging';
+import { DEFAULT_NEIGHBOURS } from './kriging';
 import { krigeNeighbourhood } from './kriging-neighbourhood';
 import type { KrigingSetup } from './kriging-setup';
 import { MOST_GAP_M, surveyedPlaces } from './mask';
@@ -39,9 +39,14 @@ export type ChartSurface = {
 /** Neighbours used for σ. More change it by under 1 %; fewer than all never understate it. */
 const SIGMA_NEIGHBOURS = 16;
 const CHUNK = 8192;
+/**
+ * A moving neighbourhood leaves small steps where its members change, and isobaths show them as jags; so the drawn depth uses
+ * all samples at once further than `krige` does, while memory (8 n² bytes) and time (n³/3) stay small.
+ */
+const AT_ONCE_LIMIT = 2000;
 
 /**
- * Depth and σ at every water node near enough to a sounding. Depths use all samples at once (nearest 24 above 800); σ uses
+ * Depth and σ at every water node near enough to a sounding. Depths use all samples at once (nearest 24 above 2000); σ uses
  * the nearest 16, which never understates the σ of all. σ holds the nugget: what the bed does between casts is part of
  * not knowing the depth at a place, while the drawn depth leaves it out; and it is widened or narrowed by how well the
  * soundings round about were foretold.
@@ -103,7 +108,7 @@ function withDrift({ driftLengthM }: Candidate, places: Targets, shoreDistanceM:
 type Predict = (targets: Targets) => Float64Array;
 
 function predictorOf(setup: KrigingSetup): Predict {
-  if (setup.samples.xM.length <= GLOBAL_LIMIT) {
+  if (setup.samples.xM.length <= AT_ONCE_LIMIT) {
     const model = solveGlobal(setup);
     return (targets) => predictByTable(model, targets);
   }
