@@ -3,10 +3,11 @@ import { sectionAlong } from '@mereward/shared/charts/section';
 import { geodesicAlong } from '@mereward/shared/geometry/geodesic';
 import { planeBearingDeg, toPlane } from '@mereward/shared/geometry/plane';
 import { Problem } from '@mereward/shared/problems/problem';
+import { windFor, type SpotKit } from '@mereward/shared/surveys/same-spot';
 import type { Ctx } from '../ctx';
 import { layersOf } from './chart-layers';
 import { pegGround, type PegGround } from './peg-chart';
-import { kitOf, windFor } from './spot-reach';
+import { kitOf } from './spot-reach';
 import type { OpenChart } from './spot-view';
 
 const MOST_POINTS = 250;
@@ -28,11 +29,17 @@ export function sectionPoints(
   const kit = kitOf(visits.find((visit) => visit.id === here) ?? visits[0] ?? null);
   return sectionAlong(layers, stance, along).map(({ rangeM, depthM, sigmaM, bottom }) => ({
     rangeM: cm(rangeM),
-    lineOutM: cm(windFor({ rangeM, kit, depthM: depthM ?? 0 })?.lineOutM ?? rangeM),
+    lineOutM: cm(lineTo(rangeM, kit, depthM ?? 0)),
     depthM: sees.depth && depthM !== null ? cm(depthM) : null,
     sigmaM: sees.depth && sigmaM !== null ? cm(sigmaM) : null,
     bottom: sees.bottom ? bottom : null,
   }));
+}
+
+/** Line that reaches a range; right under the rod there is none to wind, and the range itself stands in. */
+function lineTo(rangeM: number, kit: SpotKit, depthM: number): number {
+  const wound = windFor(rangeM, kit, depthM);
+  return wound.ok ? wound.lineOutM : rangeM;
 }
 
 const cm = (lengthM: number): number => Math.round(lengthM * 100) / 100;

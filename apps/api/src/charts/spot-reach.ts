@@ -1,28 +1,12 @@
 import type { Spot } from '@mereward/db/entities/charts/spot';
 import type { Mark } from '@mereward/db/entities/lakes/mark';
 import type { SpotView } from '@mereward/shared/charts/contract';
-import { bearingDifferenceDeg, geodesicBetween, type LonLat } from '@mereward/shared/geometry/geodesic';
+import { geodesicBetween, type LonLat } from '@mereward/shared/geometry/geodesic';
 import type { Point } from '@mereward/shared/geometry/plane';
-import type { Kit } from '@mereward/shared/surveys/contract';
-import { lineForRange } from '@mereward/shared/surveys/ground-range';
-import { lineAWrapM, stretchOf } from '@mereward/shared/surveys/line-out';
-import { metresToWraps, USUAL_SPACING_M } from '@mereward/shared/units/wraps';
+import { marksBeside, windFor, type SpotKit } from '@mereward/shared/surveys/same-spot';
+import { USUAL_SPACING_M } from '@mereward/shared/units/wraps';
 import type { BuiltSounding, BuiltVisit } from './built';
 import type { PegGround } from './peg-chart';
-
-export type SpotKit = Pick<
-  Kit,
-  | 'stickSpacingM'
-  | 'stickMeasured'
-  | 'stickDiameterM'
-  | 'wrapReference'
-  | 'lineAlongRodM'
-  | 'reelHeightM'
-  | 'rodElevationDeg'
-  | 'lineType'
-  | 'stretchShare'
-  | 'stretchSigmaShare'
->;
 
 /** Taken where nothing was surveyed yet: twelve-foot sticks read to the rod tip, rod level. Common practice. */
 const USUAL_KIT: SpotKit = {
@@ -40,8 +24,6 @@ const USUAL_KIT: SpotKit = {
 
 /** A spot no farther from a cast of this same peg than this is that cast's own: its count is quoted as it was wound. */
 const SAME_PLACE_M = 0.25;
-/** A mark farther to the side than this is no help in aiming. */
-const WIDEST_OFFSET_DEG = 30;
 
 export type Reach = Pick<
   SpotView,
@@ -72,7 +54,7 @@ export function reachOf({ ground, spot, place, cast, visit, depthM }: Asked): Re
   const { distanceM: rangeM, bearingDeg } = geodesicBetween(ground.peg.details.origin, spot.details.position);
   const own =
     cast?.pegId === ground.peg.id && Math.hypot(cast.xM - place.xM, cast.yM - place.yM) <= SAME_PLACE_M;
-  const line = own ? ownLine(cast) : windFor({ rangeM, kit, depthM: depthM ?? 0 });
+  const line = own ? ownLine(cast) : lineFor(rangeM, kit, depthM ?? 0);
   if (!line) return null;
   return {
     ...line,
@@ -96,35 +78,26 @@ const ownLine = ({ lineOutM, wrapsWhole, remainderM }: BuiltSounding): Line => (
   remainderM,
 });
 
-/** The count that reaches a range, metres, over a bottom `depthM` deep. */
-export function windFor({
-  rangeM,
-  kit,
-  depthM,
-}: {
-  rangeM: number;
-  kit: SpotKit;
-  depthM: number;
-}): Line | null {
-  const answer = lineForRange(rangeM, { ...kit, reference: kit.wrapReference, depthM });
-  if (!answer.ok) return null;
-  const wraps = metresToWraps(answer.lineOutM / (1 + stretchOf(kit).share), lineAWrapM(kit));
-  return { lineOutM: answer.lineOutM, wrapsWhole: wraps.whole, remainderM: wraps.remainderM };
+function lineFor(rangeM: number, kit: SpotKit, depthM: number): Line | null {
+  const wound = windFor(rangeM, kit, depthM);
+  return wound.ok
+    ? { lineOutM: wound.lineOutM, wrapsWhole: wound.wraps.whole, remainderM: wound.wraps.remainderM }
+    : null;
 }
 
 type Aimed = { from: LonLat; bearingDeg: number; aimedAt: string | null };
 
 /** The mark the cast was aimed at, else the one nearest to the line. */
 function markFor(marks: readonly Mark[], { from, bearingDeg, aimedAt }: Aimed): Reach['mark'] {
-  const seen = marks.map(({ id, code, details }) => {
-    const offsetDeg = bearingDifferenceDeg(geodesicBetween(from, details.position).bearingDeg, bearingDeg);
-    return { id, code, name: details.name, offsetDeg };
-  });
-  const nearest = seen
-    .filter(({ offsetDeg }) => Math.abs(offsetDeg) <= WIDEST_OFFSET_DEG)
-    .sort((a, b) => Math.abs(a.offsetDeg) - Math.abs(b.offsetDeg) || (a.code < b.code ? -1 : 1));
-  const mark = seen.find(({ id }) => id === aimedAt) ?? nearest[0];
-  return mark
-    ? { code: mark.code, name: mark.name, offsetDeg: Math.round(mark.offsetDeg * 10) / 10 + 0 }
+  const catalogued = marks.map(({ id, code, details }) => ({
+    id,
+    code,
+    name: details.name,
+    place: details.position,
+  }));
+  const beside = marksBeside(catalogued, { stance: from, bearingDeg });
+  const seen = beside.find(({ mark }) => mark.id === aimedAt) ?? beside[0];
+  return seen
+    ? { code: seen.mark.code, name: seen.mark.name, offsetDeg: Math.round(seen.offsetDeg * 10) / 10 + 0 }
     : null;
 }

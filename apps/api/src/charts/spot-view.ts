@@ -30,7 +30,7 @@ export function spotView(ground: PegGround, open: OpenChart | null, spot: Spot):
     place,
     cast,
     visit,
-    depthM: cast?.depthM ?? reading?.depthM ?? null,
+    depthM: cast?.depthAsReadM ?? reading?.depthM ?? null,
   });
   if (!reach) return null;
   const shown = within(ground, quoted({ chart: open?.chart ?? null, cast, reading }));
