@@ -27,7 +27,7 @@ export function EmergencyLine() {
       aria-label="Emergency"
       style={{ paddingVertical: space.page, borderTopWidth: 1, borderTopColor: colours.rule }}
     >
-      <Text size="small" tone="inkSoft">
+      <Text size="small" tone="inkSoft" style={{ maxWidth: 430 }}>
         In an emergency ring <Ring number="999" /> or <Ring number="112" /> and say which lake and peg. Reach
         or throw, don’t go in.
       </Text>

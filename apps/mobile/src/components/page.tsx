@@ -3,7 +3,7 @@ import { usePathname } from 'expo-router';
 import { ScrollView, View } from 'react-native';
 import { EmergencyLine } from '@/components/emergency-line';
 import { PageHead, type PageHeadProps } from '@/components/page-head';
-import { space } from '@/constants/layout';
+import { MEASURE_PX, space } from '@/constants/layout';
 import { themed } from '@/hooks/themed';
 import { useWide } from '@/hooks/use-wide';
 import { usePageTitle } from '@/hooks/use-page-title';
@@ -26,7 +26,7 @@ const useStyles = themed((c) => ({
   },
 }));
 
-const widths = { reading: 720, wide: 1440 } as const;
+const widths = { reading: MEASURE_PX + 2 * space.wide, wide: 1440 } as const;
 
 type Props = Omit<PageHeadProps, 'path'> & {
   /** `reading` keeps lines short; `wide` is for tables and things side by side. */

@@ -11,7 +11,7 @@ export const WIDE_FROM_PX = 768;
 export const THREE_COLUMNS_FROM_PX = 1120;
 
 /** A line of body text holds about 68 characters at this width, px. */
-export const MEASURE_PX = 600;
+export const MEASURE_PX = 490;
 
 export const radius = { small: 4, control: 8, sheet: 14 } as const;
 
