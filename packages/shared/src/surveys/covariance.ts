@@ -1,8 +1,9 @@
 const RADIANS = Math.PI / 180;
 
-/** √(−2 ln 0.05): half-axes of a two-dimensional normal's 95 % ellipse, in σ. */
-export const ELLIPSE_95 = Math.sqrt(-2 * Math.log(0.05));
-export const BAND_95 = 1.959963984540054; // 97.5 % point of the normal
+/** Half-axes of a two-dimensional normal's 95 % ellipse, in σ: √(−2 ln 0.05), rounded as surveys round it. */
+export const ELLIPSE_95 = 2.4477;
+/** Half-width of a normal's 95 % band, in σ, rounded as surveys round it. */
+export const BAND_95 = 1.96;
 
 /** East-east, east-north and north-north parts, m². */
 export type Covariance = { xx: number; xy: number; yy: number };
