@@ -64,4 +64,5 @@ test('pages and answers carry what keeps a browser from harm', async () => {
   expect(answer.get('Strict-Transport-Security')).toBeTruthy();
   expect(answer.get('X-Powered-By')).toBeUndefined();
   expect(answer.get('Access-Control-Allow-Origin')).toBeUndefined();
+  expect((await ask('/api/fisheries')).get('Cache-Control')).toBe('private, no-cache');
 });

@@ -94,7 +94,7 @@ async function longestFileWaitMs(): Promise<{ waitMs: number; hashMs: number }> 
 }
 
 const line = (parts: readonly (string | number)[]): string =>
-  parts.map((part) => (typeof part === 'number' ? part.toFixed(2) : part)).join('  ');
+  parts.map((part) => (typeof part === 'number' ? part.toFixed(2) : part)).join(' | ');
 
 /** The lines of sign-in: what a request costs with all that stands before it, and what proving who asks adds. */
 export async function benchAuth(): Promise<string[]> {

@@ -49,6 +49,10 @@ function apiRouter(routes: readonly Route[]): Router {
   const api = Router();
   const document = JSON.stringify(openapi(routes));
   api.use(health());
+  api.use((_req, res, next) => {
+    res.set('Cache-Control', 'private, no-cache'); // what one reader may see is nobody else's; a route may say otherwise
+    next();
+  });
   api.use(limitAll(), compression(), cookieParser(), express.json({ limit: '6mb' }));
   api.get('/openapi.json', (_req, res) => void res.type('application/json').send(document));
   api.use(byFirstWord(routes));

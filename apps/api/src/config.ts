@@ -40,12 +40,17 @@ export type Config = {
   clockFile: string | null;
 };
 
+/** Says which of the environment's settings can't be used. */
+export class SettingsFault extends Error {
+  override readonly name = 'SettingsFault';
+}
+
 /** Reads the settings from the environment; throws with every wrong one named. */
 export function readConfig(env: NodeJS.ProcessEnv): Config {
   const parsed = Environment.safeParse(env);
   if (!parsed.success) {
     const wrong = parsed.error.issues.map((issue) => `${issue.path.join('.')}: ${issue.message}`);
-    throw new Error(`The environment's settings can't be used.\n${wrong.join('\n')}`);
+    throw new SettingsFault(`The environment's settings can't be used.\n${wrong.join('\n')}`);
   }
   const e = parsed.data;
   return {

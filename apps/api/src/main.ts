@@ -3,9 +3,10 @@ import { readFileSync } from 'node:fs';
 import { createServer, type Server } from 'node:http';
 import { makeApp } from './app';
 import { watchBuilds } from './charts/jobs';
-import { readConfig, type Config } from './config';
+import { readConfig, SettingsFault, type Config } from './config';
 import { handlers } from './handlers';
 import { makeLogger } from './http/logging';
+import { plainError } from './http/plain-error';
 import { jobsOn, openQueue } from './jobs/queue';
 import { work } from './jobs/worker';
 import { openCapture } from './mail/capture';
@@ -78,4 +79,12 @@ async function finish(http: Server): Promise<void> {
   clearTimeout(broken);
 }
 
-await main();
+/** The last word of a process that can't go on: what was wrong, without what a row or a request held. */
+function lastWord(error: unknown): never {
+  const words = error instanceof SettingsFault ? error.message : JSON.stringify(plainError(error));
+  process.stderr.write(`${words}\n`);
+  process.exit(1);
+}
+
+process.on('uncaughtException', lastWord);
+await main().catch(lastWord);

@@ -1,7 +1,7 @@
 import { EmailToken } from '@mereward/db/entities/accounts/email-token';
 import { Problem } from '@mereward/shared/problems/problem';
 import { randomUUID } from 'node:crypto';
-import { MoreThan } from 'typeorm';
+import { LessThan, MoreThan } from 'typeorm';
 import type { Ctx } from '../ctx';
 import { newSecret, secretHash } from './secret-token';
 
@@ -10,6 +10,7 @@ type Purpose = EmailToken['purpose'];
 const WORKS_FOR_S: Record<Purpose, number> = { verify: 24 * 3600, reset: 3600 };
 const QUIET_S = 15 * 60;
 const MOST_IN_QUIET = 5;
+const FORGOTTEN_S = 24 * 3600; // after it ran out, nothing of a link is kept
 
 /** A new link's token, or null when that account was mailed enough for now: nobody's post is to be flooded. */
 export async function newEmailToken(
@@ -20,6 +21,10 @@ export async function newEmailToken(
   const recently = new Date(now.getTime() - QUIET_S * 1000);
   const recent = await tx.countBy(EmailToken, { accountId, createdAt: MoreThan(recently) });
   if (recent >= MOST_IN_QUIET) return null;
+  await tx.delete(EmailToken, {
+    accountId,
+    expiresAt: LessThan(new Date(now.getTime() - FORGOTTEN_S * 1000)),
+  });
   const { token, hash } = newSecret();
   await tx.insert(EmailToken, {
     id: randomUUID(),

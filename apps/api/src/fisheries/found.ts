@@ -1,7 +1,9 @@
 import { Fishery } from '@mereward/db/entities/fisheries/fishery';
+import { FisheryRole } from '@mereward/db/entities/fisheries/fishery-role';
+import type { Role } from '@mereward/shared/accounts/contract';
 import { Problem } from '@mereward/shared/problems/problem';
 import type { EntityManager } from 'typeorm';
-import { accountOf, type Actor } from '../ctx';
+import { accountOf, type Actor, type Ctx } from '../ctx';
 import { isOneOfThem } from './policy';
 
 const noSuch = () => new Problem('not-found', 'There is no such fishery');
@@ -31,4 +33,18 @@ export async function lockRoles(tx: EntityManager, id: string): Promise<Fishery>
   const fishery = await tx.findOne(Fishery, { where: { id }, lock: { mode: 'pessimistic_write' } });
   if (!fishery) throw noSuch();
   return fishery;
+}
+
+export type RoleHolder = { fisheryId: string; accountId: string };
+
+export async function heldBy(tx: EntityManager, whose: RoleHolder): Promise<Set<Role>> {
+  const rows = await tx.findBy(FisheryRole, whose);
+  return new Set(rows.map(({ role }) => role));
+}
+
+/** The actor by the roles of this moment, to be read under the lock: another deed may just have taken one away. */
+export async function actorNow({ tx, actor }: Ctx, fisheryId: string): Promise<Actor> {
+  if (actor.kind === 'stranger') return actor;
+  const held = await heldBy(tx, { fisheryId, accountId: actor.id });
+  return { ...actor, roles: new Map([...actor.roles, [fisheryId, held]]) };
 }

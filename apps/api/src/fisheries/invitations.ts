@@ -14,15 +14,16 @@ import { newSecret, secretHash } from '../accounts/secret-token';
 import { accountOf, type Ctx } from '../ctx';
 import { invitationMessage } from '../mail/messages';
 import { post } from '../mail/send';
-import { admit, lockRoles } from './found';
+import { actorNow, admit, lockRoles } from './found';
 import { givableRoles } from './policy';
 
 const OPEN_DAYS = 14;
 
 /** Invites an address to a role by mail. Inviting it to the same again ends the earlier link and sends a new one. */
 export async function invite(ctx: Ctx, fisheryId: string, input: Invite): Promise<InvitationView> {
-  const { tx, actor, now, publicUrl } = ctx;
+  const { tx, now, publicUrl } = ctx;
   const fishery = await lockRoles(tx, fisheryId);
+  const actor = await actorNow(ctx, fisheryId);
   admit(actor, fisheryId, givableRoles(actor, fisheryId).includes(input.role));
   const invitedBy = accountOf(actor);
   await refuseHeld(ctx, fisheryId, input);
@@ -65,8 +66,9 @@ async function refuseHeld({ tx }: Ctx, fisheryId: string, { email, role }: Invit
 
 /** Withdraws an invitation that nobody has taken up; its link opens nothing any more. */
 export async function withdrawInvitation(ctx: Ctx, fisheryId: string, id: string): Promise<void> {
-  const { tx, actor, now } = ctx;
+  const { tx, now } = ctx;
   await lockRoles(tx, fisheryId);
+  const actor = await actorNow(ctx, fisheryId);
   const row = await tx.findOneBy(Invitation, { id, fisheryId });
   admit(actor, fisheryId, givableRoles(actor, fisheryId).length > 0);
   if (!row) throw new Problem('not-found', 'There is no such invitation');

@@ -4,7 +4,7 @@ import type { ChangeFishery, FisheryView, MakeFishery } from '@mereward/shared/f
 import { Problem } from '@mereward/shared/problems/problem';
 import { accountOf, type Actor, type Ctx } from '../ctx';
 import { insertOnce, mustRepeat, staleVersion } from '../repeat';
-import { admit, fisheryFound } from './found';
+import { actorNow, admit, fisheryFound } from './found';
 import { givableRoles, mayAddLakes, mayChangeFishery, maySeeGateCode, maySeePeople } from './policy';
 
 /** Makes a fishery; whoever makes it is its first owner. */
@@ -21,18 +21,12 @@ export async function makeFishery(ctx: Ctx, { id, details }: MakeFishery): Promi
       givenBy: null,
       givenAt: now,
     });
-    return fisheryView(asOwner(actor, id), row);
+    return fisheryView(await actorNow(ctx, id), row);
   }
   const kept = await fisheryFound(tx, id);
   if (kept.createdBy !== createdBy) throw new Problem('not-found', 'There is no such fishery');
   mustRepeat({ by: createdBy, content: details }, { by: kept.createdBy, content: kept.details });
-  return fisheryView(actor, kept);
-}
-
-// The role was given in this very deed, after the actor was read.
-function asOwner(actor: Actor, fisheryId: string): Actor {
-  if (actor.kind === 'stranger') return actor;
-  return { ...actor, roles: new Map([...actor.roles, [fisheryId, new Set(['owner'] as const)]]) };
+  return fisheryView(await actorNow(ctx, id), kept);
 }
 
 export async function changeFishery(ctx: Ctx, id: string, input: ChangeFishery): Promise<FisheryView> {

@@ -3,22 +3,20 @@ import type { Role } from '@mereward/shared/accounts/contract';
 import { ROLE_WORDS } from '@mereward/shared/accounts/role-words';
 import type { PeopleView, SetRoles } from '@mereward/shared/fisheries/contract';
 import { Problem } from '@mereward/shared/problems/problem';
-import { accountOf, type Actor, type Ctx } from '../ctx';
-import { admit, lockRoles } from './found';
+import { accountOf, type Ctx } from '../ctx';
+import { actorNow, admit, heldBy, lockRoles, type RoleHolder } from './found';
 import { givableRoles } from './policy';
 import { peopleView } from './queries';
 
-type Whose = { fisheryId: string; accountId: string };
-
 /** Sets the whole list of one person's roles. An empty list takes them out; invite them to have them back. */
-export async function setRoles(ctx: Ctx, whose: Whose, input: SetRoles): Promise<PeopleView> {
+export async function setRoles(ctx: Ctx, whose: RoleHolder, input: SetRoles): Promise<PeopleView> {
   const { tx, now } = ctx;
   const { fisheryId } = whose;
   await lockRoles(tx, fisheryId);
-  const actor = await asItStands(ctx, fisheryId);
+  const actor = await actorNow(ctx, fisheryId);
   const givable = givableRoles(actor, fisheryId);
   admit(actor, fisheryId, givable.length > 0);
-  const before = await heldBy(ctx, whose);
+  const before = await heldBy(tx, whose);
   if (before.size === 0)
     throw new Problem('not-found', 'This person holds no role here', {
       detail: 'Invite them by mail first.',
@@ -31,22 +29,9 @@ export async function setRoles(ctx: Ctx, whose: Whose, input: SetRoles): Promise
   const givenBy = accountOf(actor);
   for (const role of added) await tx.insert(FisheryRole, { ...whose, role, givenBy, givenAt: now });
   await keepAnOwner(ctx, fisheryId);
-  const after = await asItStands(ctx, fisheryId);
+  const after = await actorNow(ctx, fisheryId);
   if (givableRoles(after, fisheryId).length > 0) return peopleView({ ...ctx, actor: after }, fisheryId);
   return { people: [], invitations: [], mayGive: [] }; // they took their own right to see the others
-}
-
-async function heldBy({ tx }: Ctx, whose: Whose): Promise<Set<Role>> {
-  const rows = await tx.findBy(FisheryRole, whose);
-  return new Set(rows.map(({ role }) => role));
-}
-
-/** The actor by the roles of this moment, read under the lock: another deed may just have taken one away. */
-async function asItStands(ctx: Ctx, fisheryId: string): Promise<Actor> {
-  const { actor } = ctx;
-  if (actor.kind === 'stranger') return actor;
-  const held = await heldBy(ctx, { fisheryId, accountId: actor.id });
-  return { ...actor, roles: new Map([...actor.roles, [fisheryId, held]]) };
 }
 
 function refuseBeyond(changed: readonly Role[], givable: readonly Role[]): void {
