@@ -1,3 +1,5 @@
+import { readFileSync } from 'node:fs';
+
 const repeatAfterMs = 1_000;
 
 /**
@@ -26,13 +28,24 @@ export function whenAskedToStop() {
   return { asked: answer, isAsked: () => asked };
 }
 
-/** @param {() => void} gone */
+/** npm starts a shell that starts this script: either of them gone is npm gone. @param {() => void} gone */
 function watchParent(gone) {
-  const parent = process.ppid;
+  const before = forebears();
   const timer = setInterval(() => {
-    if (process.ppid === parent) return;
+    if (forebears() === before) return;
     clearInterval(timer);
     gone();
   }, 500);
   timer.unref();
+}
+
+/** The numbers of the process that started this one and of the one that started that. */
+function forebears() {
+  const parent = process.ppid;
+  try {
+    const [, afterName = ''] = readFileSync(`/proc/${parent}/stat`, 'utf8').split(/\)(?=[^)]*$)/);
+    return `${parent} ${afterName.trim().split(' ')[1]}`;
+  } catch {
+    return `${parent}`;
+  }
 }
