@@ -306,6 +306,9 @@ describe('no export shows more than the screen', () => {
         const page = await pageFor(person);
         expect(page.spots !== null).toBe(sees.spots);
         expect((page.extract?.isobaths.length ?? 0) > 0).toBe(sees.depth);
+        const grid = page.extract?.grid ?? null;
+        expect((grid?.depth ?? null) !== null).toBe(sees.depth);
+        expect((grid?.substrate ?? null) !== null && (grid?.cover ?? null) !== null).toBe(sees.bottom);
         for (const spot of page.spots ?? []) {
           expect(spot.depthM !== null && spot.section !== null).toBe(sees.depth);
           expect(spot.bottom !== null && spot.presentation !== null).toBe(sees.bottom);

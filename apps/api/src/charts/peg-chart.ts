@@ -22,6 +22,7 @@ export type PegChart = {
   surveyedFrom: string;
   surveyedTo: string;
   datumM: number;
+  contourStepM: number;
   age: ChartAge;
   content: ChartContent;
 };
@@ -58,11 +59,15 @@ export async function pegGround(ctx: Ctx, pegId: string): Promise<PegGround> {
   };
 }
 
-type Published = Pick<Chart, 'id' | 'datumM'> & { version: string; surveyedFrom: string; surveyedTo: string };
+type Published = Pick<Chart, 'id' | 'datumM' | 'contourStepM'> & {
+  version: string;
+  surveyedFrom: string;
+  surveyedTo: string;
+};
 
 async function publishedRow(tx: EntityManager, lakeId: string): Promise<Published | null> {
   const [row] = await tx.query<Published[]>(
-    `SELECT id, version, datum_m AS "datumM", surveyed_from::text AS "surveyedFrom", surveyed_to::text AS "surveyedTo"
+    `SELECT id, version, datum_m AS "datumM", contour_step_m AS "contourStepM", surveyed_from::text AS "surveyedFrom", surveyed_to::text AS "surveyedTo"
        FROM chart WHERE lake_id = $1 AND status = 'published'`,
     [lakeId],
   );

@@ -4,6 +4,9 @@ import { toPlane, type Point } from '@mereward/shared/geometry/plane';
 import { ringsOf } from '@mereward/shared/geometry/polygon';
 import { facingDeg } from '@mereward/shared/lakes/peg-rules';
 import { clipLine, thinLine, type Box } from '@mereward/shared/charts/line-thinning';
+import { clipRing } from '@mereward/shared/charts/ring-clip';
+import { layersOf } from './chart-layers';
+import { extractGrid } from './extract-grid';
 import type { PegGround } from './peg-chart';
 
 const BEHIND_M = 12;
@@ -23,6 +26,10 @@ export function pegExtract({ peg, lake, chart, origin, sight }: PegGround): PegP
   const outline = outlineInPlane(origin, chart.content.built.outline);
   const rings = ringsOf(outline).map((ring) => closed(ring).flatMap(({ xM, yM }) => [xM, yM]));
   const isobaths = sight.sees.depth ? chart.content.built.isobaths : [];
+  const water = rings
+    .map((ring) => clipRing(thinLine(ring, FINEST_M).slice(0, -2), box))
+    .filter((ring) => ring.length > 0);
+  const grid = extractGrid(layersOf(chart.content), box, sight.sees);
   for (let toleranceM = FINEST_M; ; toleranceM *= 1.6) {
     const cut = (line: readonly number[]) => clipLine(line, box).map((piece) => thinLine(piece, toleranceM));
     const shore = rings.flatMap(cut);
@@ -38,6 +45,9 @@ export function pegExtract({ peg, lake, chart, origin, sight }: PegGround): PegP
         originM: { xM: tenth(originM.xM), yM: tenth(originM.yM) },
         facingDeg: Math.round(facing),
         shore: shore.map(tenths),
+        water: water.map(tenths),
+        contourStepM: chart.contourStepM,
+        grid,
         isobaths: drawn.map(({ levelM, lines }) => ({ levelM, lines: lines.map(tenths) })),
       };
   }

@@ -242,6 +242,15 @@ export const SpotView = z.object({
 });
 export type SpotView = z.infer<typeof SpotView>;
 
+/** The chart before a peg on a coarse grid; bytes as in ChartView, a layer that isn't this reader's is null. */
+export const ExtractGrid = z.object({
+  frame: GridFrame,
+  depth: z.string().nullable(),
+  substrate: z.string().nullable(),
+  cover: z.string().nullable(),
+});
+export type ExtractGrid = z.infer<typeof ExtractGrid>;
+
 /** GET /api/pegs/:pegId/page (no sign-in): what an angler reads before coming. ≤ 60 kB without photos. */
 export const PegPageView = z.object({
   id: z.uuid(),
@@ -274,6 +283,9 @@ export const PegPageView = z.object({
       originM: z.object({ xM: z.number(), yM: z.number() }), // the peg's origin mark
       facingDeg: z.number(),
       shore: z.array(z.array(z.number())), // x, y, x, y … metres
+      water: z.array(z.array(z.number())), // rings, shore first, cut off at the extract's own box
+      contourStepM: z.number(),
+      grid: ExtractGrid.nullable(),
       isobaths: z.array(z.object({ levelM: z.number(), lines: z.array(z.array(z.number())) })),
     })
     .nullable(),
