@@ -21,6 +21,7 @@ const serve = (part: PhotoPart) => async (req: Request, res: Response) => {
   const path = fileStore(serverOf(req).config.filesDir).pathOf(photoId(req), part);
   await new Promise<void>((resolve, reject) => {
     const settings = { immutable: true, maxAge: '365d', dotfiles: 'allow', acceptRanges: false } as const;
+    res.removeHeader('Cache-Control'); // the answers' own gives way to the picture's
     res.type('image/jpeg').sendFile(path, settings, (error?: NodeJS.ErrnoException) => {
       if (!error || res.headersSent) resolve();
       else reject(error.code === 'ENOENT' ? notFound('photo') : error);
