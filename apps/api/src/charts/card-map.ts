@@ -102,7 +102,6 @@ const SCALES_M = [5, 10, 20, 25, 50, 100];
 function drawNorthAndScale(doc: Doc, ptPerM: number, { x, y, width, height }: Frame): void {
   const lengthM = SCALES_M.findLast((each) => each * ptPerM <= width / 3) ?? 5;
   const [left, base] = [x + 6, y + height - 7];
-  doc.rect(left - 3, base - 12, lengthM * ptPerM + 6, 16).fill('#ffffff');
   doc
     .lineWidth(1)
     .strokeColor(INK)

@@ -6,6 +6,8 @@ import {
   emergencyLines,
   factLines,
   levelLine,
+  markLine,
+  missingLine,
   SPOT_HEADING,
   spotCells,
   stickLine,
@@ -15,11 +17,12 @@ import {
 type Doc = PDFKit.PDFDocument;
 export type Card = { page: PegPageView; printedOn: string; printedAt: Date; url: string };
 
-const MARGIN = 26;
+const MARGIN = 24;
 const WIDTH = 419.53 - 2 * MARGIN; // A5
 const BOTTOM = 595.28 - 22;
 const QR = 74;
-const MAP_HEIGHT = 168;
+const MAP_WIDTH = 236;
+const MAP_HEIGHT = 150;
 const INK = '#111111';
 
 const fontPath = (name: string): string =>
@@ -79,37 +82,41 @@ function drawHead(doc: Doc, { page, url }: Card): void {
     .text(`${page.fishery.name} · ${page.lake.name}`, MARGIN, MARGIN, { width });
   doc.font('bold').fontSize(30).text(`Peg ${page.number}`, { width, lineGap: -4 });
   if (page.name !== '') doc.font('regular').fontSize(13).text(page.name, { width });
-  doc.font('regular').fontSize(7.5).text(`This peg today: ${url}`, { width });
+  doc.font('regular').fontSize(7).text(`This peg today: ${url}`, { width });
   doc.y = Math.max(doc.y, MARGIN + QR) + 6;
 }
 
+/** The map with what its figures mean beside it, then the spots. Without depths the words take the whole width. */
 function drawChartPart(doc: Doc, page: PegPageView): void {
-  const { chart, spots, extract, layerNotes } = page;
-  if (extract && extract.isobaths.length > 0) {
-    drawCardMap(doc, page, { x: MARGIN, y: doc.y, width: WIDTH, height: MAP_HEIGHT });
-    doc.y += MAP_HEIGHT + 6;
-  }
+  const { extract, spots } = page;
+  const top = doc.y;
+  const mapped = extract !== null && extract.isobaths.length > 0;
+  if (mapped) drawCardMap(doc, page, { x: MARGIN, y: top, width: MAP_WIDTH, height: MAP_HEIGHT });
+  const left = mapped ? MARGIN + MAP_WIDTH + 10 : MARGIN;
+  doc.y = top;
+  for (const words of [spots && stickLine(spots), levelLine(page), missingLine(page)])
+    if (words)
+      doc
+        .fillColor(INK)
+        .font('regular')
+        .fontSize(8)
+        .text(words, left, doc.y, { width: MARGIN + WIDTH - left })
+        .moveDown(0.4);
   doc.x = MARGIN;
-  if (spots && spots.length > 0) {
-    drawSpots(
-      doc,
-      spots.map((spot, i) => spotCells(spot, i + 1)),
-    );
-    small(doc, stickLine(spots));
-  }
-  if (chart && (layerNotes.depth === null || layerNotes.spots === null)) small(doc, levelLine(page));
-  const notes = [
-    ...new Set([layerNotes.depth, layerNotes.bottom, layerNotes.spots].filter((note) => note !== null)),
-  ];
-  if (notes.length > 0) small(doc, `Not on this card: depths, bottom or spots. ${notes.join(' ')}`);
-  doc.moveDown(0.3);
+  doc.y = Math.max(doc.y, mapped ? top + MAP_HEIGHT : 0) + 6;
+  if (!spots || spots.length === 0) return;
+  drawSpots(
+    doc,
+    spots.map((spot, i) => spotCells(spot, i + 1)),
+  );
+  doc.font('regular').fontSize(8).text(markLine(spots), MARGIN, doc.y, { width: WIDTH }).moveDown(0.4);
 }
 
-const COLUMN_SHARES = [0.04, 0.16, 0.27, 0.11, 0.08, 0.16, 0.06, 0.12];
+const COLUMN_SHARES = [0.04, 0.24, 0.2, 0.11, 0.09, 0.14, 0.07, 0.11];
 
 function drawSpots(doc: Doc, rows: readonly string[][]): void {
   const draw = (cells: readonly string[], font: 'bold' | 'regular'): void => {
-    doc.font(font).fontSize(8);
+    doc.font(font).fontSize(7.8);
     const widths = COLUMN_SHARES.map((share) => share * WIDTH - 4);
     const height = Math.max(
       ...cells.map((cell, i) => doc.heightOfString(cell || ' ', { width: widths[i] ?? 0 })),
@@ -135,11 +142,6 @@ function drawSpots(doc: Doc, rows: readonly string[][]): void {
   doc.x = MARGIN;
 }
 
-function small(doc: Doc, words: string): void {
-  if (words !== '')
-    doc.fillColor(INK).font('regular').fontSize(8).text(words, MARGIN, doc.y, { width: WIDTH });
-}
-
 function drawLines(doc: Doc, lines: readonly CardLine[]): void {
   for (const { label, words } of lines) {
     doc
@@ -153,21 +155,20 @@ function drawLines(doc: Doc, lines: readonly CardLine[]): void {
 }
 
 function drawEmergency(doc: Doc, page: PegPageView): void {
-  const lines = emergencyLines(page);
-  const text = lines.map(({ label, words }) => `${label}: ${words}`).join('\n');
-  doc.font('regular').fontSize(9);
-  const height = doc.heightOfString(text, { width: WIDTH - 16 }) + 30;
+  const text = emergencyLines(page)
+    .map(({ label, words }) => `${label}: ${words}`)
+    .join('\n');
+  const width = WIDTH - 16;
+  const headHeight = doc.font('bold').fontSize(9).heightOfString(page.emergencyWords, { width });
+  const height = headHeight + doc.font('regular').fontSize(8.5).heightOfString(text, { width }) + 9;
   if (doc.y + height > BOTTOM) doc.addPage();
   const top = doc.y;
   doc.lineWidth(1.4).strokeColor(INK).rect(MARGIN, top, WIDTH, height).stroke();
   doc
     .font('bold')
     .fontSize(9.5)
-    .text(page.emergencyWords, MARGIN + 8, top + 5, { width: WIDTH - 16 });
-  doc
-    .font('regular')
-    .fontSize(9)
-    .text(text, { width: WIDTH - 16 });
+    .text(page.emergencyWords, MARGIN + 8, top + 5, { width });
+  doc.font('regular').fontSize(8.5).text(text, { width });
   doc.x = MARGIN;
   doc.y = top + height + 6;
 }

@@ -83,17 +83,38 @@ export function spotCells(spot: SpotView, number: number): string[] {
 }
 
 function aimWords({ mark, bearingDeg }: SpotView): string {
-  const bearing = `${Math.round(bearingDeg)}°`;
+  const bearing = `${Math.round(bearingDeg) % 360}°`;
   if (!mark) return bearing;
   const side =
     Math.abs(mark.offsetDeg) < 0.05
       ? ''
       : ` ${Math.abs(mark.offsetDeg)}° ${mark.offsetDeg > 0 ? 'right' : 'left'}`;
-  return `${mark.code} ${mark.name}${side} (${bearing})`;
+  return `${mark.code}${side} (${bearing})`;
+}
+
+/** What the marks' codes in the table stand for. */
+export function markLine(spots: readonly SpotView[]): string {
+  const names = new Map(spots.flatMap(({ mark }) => (mark ? [[mark.code, mark.name] as const] : [])));
+  const aims = [...names].map(([code, name]) => `${code} is the ${name}.`);
+  return [...aims, 'Bearings are true. Depths are below the level stated, to a tenth of a metre.'].join(' ');
+}
+
+/** Which layers this card leaves out, and why. */
+export function missingLine({ layerNotes: { depth, bottom, spots } }: PegPageView): string {
+  const missing = [
+    { layer: 'depths', why: depth },
+    { layer: 'bottom', why: bottom },
+    { layer: 'spots', why: spots },
+  ].filter(({ why }) => why !== null);
+  const reasons = [...new Set(missing.map(({ why }) => why))];
+  return missing.length === 0
+    ? ''
+    : `Not on this card: ${missing.map(({ layer }) => layer).join(', ')}. ${reasons.join(' ')}`;
 }
 
 /** Which sticks and which end the wraps of the table mean. */
 export function stickLine(spots: readonly SpotView[]): string {
+  if (spots.length === 0) return '';
   const kinds = new Map(
     spots.map((spot) => [`${stickWords(spot.stickSpacingM)}, ${REFERENCE[spot.wrapReference]}`, spot]),
   );
@@ -106,8 +127,8 @@ export function stickLine(spots: readonly SpotView[]): string {
 const REFERENCE = { lead_to_rod_tip: 'lead to rod tip', lead_to_clip: 'lead to reel clip' } as const;
 
 /** The level that depths stand at, and how to have today's. */
-export function levelLine({ chart, levelNow }: PegPageView): string {
-  if (!chart) return '';
+export function levelLine({ chart, levelNow, layerNotes }: PegPageView): string {
+  if (!chart || layerNotes.depth !== null) return '';
   const at = `Depths are at level ${chart.datumM.toFixed(2)} m on the lake’s board.`;
   if (!levelNow)
     return `${at} Read the board: as much as it stands higher or lower, the water is deeper or shallower.`;
