@@ -208,6 +208,19 @@ describe('what the soundings may do', () => {
     expect(built.points).toHaveLength(input.soundings.length);
   });
 
+  test('a bed as flat as a floor is charted as one', () => {
+    const soundings = input.soundings.map((s) => ({ ...s, depthM: 2 }));
+    const built = buildChart({ ...input, soundings }, () => undefined);
+    // The shore drops straight to the floor here, so the surface rings a little beside it.
+    expect(Math.abs(readChart(built, { xM: 20, yM: 3 }).depthM! - 2)).toBeLessThan(0.2);
+    expect(built.figures.surveyedShare).toBeGreaterThan(0.7);
+  });
+
+  test('casts on one spot are not enough places', () => {
+    const soundings = input.soundings.map((s) => ({ ...s, xM: 20, yM: 3 }));
+    expect(() => buildChart({ ...input, soundings }, () => undefined)).toThrow('lie at only 1 places');
+  });
+
   test('too few casts, a sounding that is no number and too wide a gap are refused in words', () => {
     const build = (change: Partial<ChartInput>) => () => buildChart({ ...input, ...change }, () => undefined);
     expect(build({ soundings: input.soundings.slice(0, 5) })).toThrow('Only 5 casts of grade A or B');

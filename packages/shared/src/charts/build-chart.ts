@@ -13,7 +13,7 @@ import { deeperRegions, isobathLevels, isobaths } from './isobaths';
 import type { Isobath } from './isobaths';
 import { chartSamples, flagOutliers } from './samples';
 import type { ChartSamples } from './samples';
-import { sortSoundings } from './sounding-roles';
+import { requirePlaces, sortSoundings } from './sounding-roles';
 import type { ChartSounding, LeftOut } from './sounding-roles';
 import { chooseSurface, nameOf } from './surface-choice';
 import type { ChosenSurface } from './surface-choice';
@@ -68,6 +68,7 @@ export function buildChart(input: ChartInput, report: (step: string, share: numb
   const frame = frameOver(corners, input.cellM ?? chooseCellM(corners));
   const samples = chartSamples(roles.surface, input.outline);
   const soundingCount = samples.soundingIds.length;
+  requirePlaces(soundingCount);
   const shoreDistanceM = shoreDistancesM(input.outline, samples.points);
   report('Choosing the variogram', 0.05);
   const chosen = chooseSurface(

@@ -135,9 +135,9 @@ function pick(targets: Targets, kept: Uint8Array): Targets {
   return targets.driftM ? { ...part, driftM: targets.driftM.filter((_, t) => kept[t] === 1) } : part;
 }
 
-/** Standard deviation of the soundings' depths, metres. */
-function spreadOf({ points, soundingIds }: ChartSamples): number {
-  const depths = points.valueM.subarray(0, soundingIds.length);
+/** Standard deviation of all samples' depths, the shore's noughts among them, metres. */
+function spreadOf({ points }: ChartSamples): number {
+  const depths = points.valueM;
   const mean = depths.reduce((sum, d) => sum + d, 0) / depths.length;
   return Math.sqrt(depths.reduce((sum, d) => sum + (d - mean) ** 2, 0) / depths.length);
 }

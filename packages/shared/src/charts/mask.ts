@@ -2,12 +2,11 @@
 export const MOST_GAP_M = 15;
 export const USUAL_GAP_M = 8;
 /** A place is not surveyed where its σ is above this share of the lake's own spread of depth. */
-export const MOST_SIGMA_SHARE = 0.6;
-
+export const MOST_SIGMA_SHARE = 0.4;
 export type SurveyEvidence = {
   soundingDistanceM: Float64Array; // from each place to the nearest sounding
   sigmaM: Float64Array;
-  spreadM: number; // standard deviation of the soundings' depths
+  spreadM: number; // standard deviation of the samples' depths, the shore's noughts among them
 };
 
 /**

@@ -94,8 +94,8 @@ describe('what counts as surveyed', () => {
   });
 
   test('a place whose σ is over its share of the lake’s spread does not', () => {
-    expect(at(5, 0.59)).toBe(1);
-    expect(at(5, 0.61)).toBe(0);
+    expect(at(5, 0.39)).toBe(1);
+    expect(at(5, 0.41)).toBe(0);
   });
 
   test('a limit over fifteen metres is refused', () => {

@@ -42,6 +42,14 @@ export function sortSoundings(soundings: readonly ChartSounding[], outline: Outl
   return roles;
 }
 
+/** Casts on one spot are one place; throws RangeError, in words, when they leave too few. */
+export function requirePlaces(count: number): void {
+  if (count >= FEWEST_SOUNDINGS) return;
+  throw new RangeError(
+    `The casts of grade A or B lie at only ${count} places; a chart needs at least ${FEWEST_SOUNDINGS}. Cast elsewhere too.`,
+  );
+}
+
 function requireFinite({ id, xM, yM, depthM, sigmaM }: ChartSounding): void {
   if (![xM, yM, depthM, sigmaM].every(Number.isFinite) || sigmaM < 0) {
     throw new RangeError(
