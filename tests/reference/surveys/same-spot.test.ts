@@ -33,7 +33,7 @@ const kits: fc.Arbitrary<Kit> = fc
     lineType: fc.constantFrom('braid', 'mono'),
     stretchShare: fc.double({ min: 0, max: 0.1, noNaN: true }),
   })
-  .map((wishes) => aKit(wishes as Partial<Kit>));
+  .map((wishes) => aKit(wishes));
 
 const pulls = fc.integer({ min: 1, max: 30 });
 const lineM = fc.double({ min: 20, max: 100, noNaN: true });
