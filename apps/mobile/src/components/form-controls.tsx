@@ -7,37 +7,38 @@ import { Select } from '@/components/select';
 import type { SelectProps } from '@/components/select-props';
 import { Stepper } from '@/components/stepper';
 
-type Bound<V extends FieldValues> = { control: Control<V>; name: FieldPath<V> };
+/** `Out` is what the form's schema makes of `V`; a control of either kind will do. */
+type Bound<V extends FieldValues, Out> = { control: Control<V, unknown, Out>; name: FieldPath<V> };
 type Free<P> = Omit<P, 'value' | 'onChange' | 'error'>;
 
 /** A `ChoiceGrid` bound to a form's value by name. */
-export function FormChoice<V extends FieldValues, K extends string>({
+export function FormChoice<V extends FieldValues, Out, K extends string>({
   control,
   name,
   ...rest
-}: Bound<V> & Free<ChoiceGridProps<K>>) {
+}: Bound<V, Out> & Free<ChoiceGridProps<K>>) {
   const { field, fieldState } = useController({ control, name });
   const value = rest.choices.find(({ key }) => key === field.value)?.key ?? null;
   return <ChoiceGrid {...rest} value={value} onChange={field.onChange} error={fieldState.error?.message} />;
 }
 
 /** A `Select` bound to a form's value by name. */
-export function FormSelect<V extends FieldValues, K extends string>({
+export function FormSelect<V extends FieldValues, Out, K extends string>({
   control,
   name,
   ...rest
-}: Bound<V> & Free<SelectProps<K>>) {
+}: Bound<V, Out> & Free<SelectProps<K>>) {
   const { field, fieldState } = useController({ control, name });
   const value = rest.choices.find(({ key }) => key === field.value)?.key ?? null;
   return <Select {...rest} value={value} onChange={field.onChange} error={fieldState.error?.message} />;
 }
 
 /** A `Stepper` bound to a form's number by name. */
-export function FormStepper<V extends FieldValues>({
+export function FormStepper<V extends FieldValues, Out>({
   control,
   name,
   ...rest
-}: Bound<V> & Free<ComponentProps<typeof Stepper>>) {
+}: Bound<V, Out> & Free<ComponentProps<typeof Stepper>>) {
   const { field, fieldState } = useController({ control, name });
   const value: unknown = field.value;
   return (
@@ -51,7 +52,11 @@ export function FormStepper<V extends FieldValues>({
 }
 
 /** A `Checkbox` bound to a form's yes or no by name. */
-export function FormCheckbox<V extends FieldValues>({ control, name, label }: Bound<V> & { label: string }) {
+export function FormCheckbox<V extends FieldValues, Out>({
+  control,
+  name,
+  label,
+}: Bound<V, Out> & { label: string }) {
   const { field } = useController({ control, name });
   return <Checkbox label={label} checked={field.value === true} onChange={field.onChange} />;
 }

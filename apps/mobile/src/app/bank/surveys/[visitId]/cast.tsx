@@ -1,0 +1,1 @@
+export { CastScreen as default } from '@/features/surveys/cast-screen';
