@@ -1,0 +1,128 @@
+import { makeDataSource } from '@mereward/db/data-source';
+import { Account } from '@mereward/db/entities/accounts/account';
+import { Fishery } from '@mereward/db/entities/fisheries/fishery';
+import { FisheryRole } from '@mereward/db/entities/fisheries/fishery-role';
+import { LevelReading } from '@mereward/db/entities/lakes/level-reading';
+import type { DataSource } from 'typeorm';
+import { passwordHash } from '../accounts/password';
+import type { Ctx } from '../ctx';
+import { putBoard } from '../lakes/boards';
+import { makeLake } from '../lakes/make-lake';
+import { putMark } from '../lakes/marks';
+import { makePeg } from '../lakes/pegs';
+import { seedCharts } from './seed-charts';
+import { seedSurvey } from './seed-survey';
+import { demoSurveys } from './surveys';
+import { demoCtx } from './demo-ctx';
+import { DEMO_LAKES, OSTLEMERE, OSTLEMERE_ID, type DemoLake } from './fishery';
+import { DEMO_PASSWORD, DEMO_PEOPLE, MARIAN, PRIYA, SOFIA, TOM } from './people';
+import { demoId } from './random';
+import { demoDays, demoLevelM, type DemoDays } from './survey-days';
+import { writeTicket } from '../bookings/service';
+
+const DAY_MS = 86_400_000;
+
+/** Fills an empty database with the demo; one that holds it already is left as it is. Answers the sign-ins to print. */
+export async function seed(databaseUrl: string, now: Date = new Date()): Promise<string[]> {
+  const source = await makeDataSource(databaseUrl).initialize();
+  const days = demoDays(now);
+  try {
+    if (!(await source.manager.existsBy(Fishery, { id: OSTLEMERE_ID }))) await fill(source, days, now);
+    await seedCharts(source, days);
+  } finally {
+    await source.destroy();
+  }
+  return [
+    `Sign in to the demo with the password “${DEMO_PASSWORD}” as`,
+    ...DEMO_PEOPLE.map(({ email, can }) => `  ${email.padEnd(26)} ${can}`),
+  ];
+}
+
+/** Everything but the charts, in one transaction. */
+async function fill(source: DataSource, days: DemoDays, now: Date): Promise<void> {
+  const made = new Date(days.farOstleFirst.getTime() - 60 * DAY_MS);
+  await source.transaction(async (tx) => {
+    await seedPeople(demoCtx(tx, MARIAN, made));
+    for (const lake of DEMO_LAKES) await seedLake(demoCtx(tx, MARIAN, made), lake);
+    for (const lake of DEMO_LAKES) await seedLevels(demoCtx(tx, TOM, now), lake);
+    for (const survey of demoSurveys(days))
+      await seedSurvey(demoCtx(tx, survey.surveyor, new Date(survey.day.getTime() + DAY_MS)), survey);
+    await seedTicket(demoCtx(tx, PRIYA, now));
+  });
+}
+
+async function seedPeople({ tx, now }: Ctx): Promise<void> {
+  const hash = await passwordHash(DEMO_PASSWORD);
+  const accounts = DEMO_PEOPLE.map(({ id, email, name }) => ({
+    id,
+    email,
+    name,
+    passwordHash: hash,
+    emailVerifiedAt: now,
+    units: { length: 'm' as const, stickSpacingM: 3.6576 },
+    createdAt: now,
+  }));
+  await tx.insert(Account, accounts);
+  const { name, zone } = OSTLEMERE;
+  await tx.insert(Fishery, {
+    id: OSTLEMERE_ID,
+    name,
+    zone,
+    details: OSTLEMERE,
+    version: 1,
+    createdBy: MARIAN.id,
+    createdAt: now,
+  });
+  const roles = DEMO_PEOPLE.flatMap(({ id, roles: held }) =>
+    held.map((role) => ({ fisheryId: OSTLEMERE_ID, accountId: id, role, givenBy: MARIAN.id, givenAt: now })),
+  );
+  await tx.insert(FisheryRole, roles);
+}
+
+async function seedLake(ctx: Ctx, lake: DemoLake): Promise<void> {
+  await makeLake(ctx, OSTLEMERE_ID, { id: lake.id, details: lake.details });
+  await putBoard(
+    ctx,
+    { lakeId: lake.id, boardId: lake.board.id },
+    { details: lake.board.details, version: null },
+  );
+  for (const mark of lake.marks)
+    await putMark(ctx, { lakeId: lake.id, markId: mark.id }, { details: mark.details, version: null });
+  for (const peg of lake.pegs) await makePeg(ctx, lake.id, { id: peg.id, details: peg.details });
+}
+
+/** A reading every Saturday of the last year, and one this morning. */
+async function seedLevels({ tx, now }: Ctx, lake: DemoLake): Promise<void> {
+  const today = new Date(Date.UTC(now.getUTCFullYear(), now.getUTCMonth(), now.getUTCDate(), 6, 30));
+  const newest = today.getTime() <= now.getTime() ? today : new Date(today.getTime() - DAY_MS);
+  const times = [0, ...Array.from({ length: 52 }, (_, week) => (week + 1) * 7)].map(
+    (daysAgo) => new Date(newest.getTime() - daysAgo * DAY_MS),
+  );
+  const readings = times.map((at) => {
+    const levelM = demoLevelM(lake.details.datumM, at);
+    return {
+      id: demoId(`reading ${lake.prefix} ${at.toISOString()}`),
+      boardId: lake.board.id,
+      at,
+      levelM,
+      levelText: `${levelM.toFixed(2)} m`,
+      note: '',
+      recordedBy: TOM.id,
+      receivedAt: at,
+    };
+  });
+  await tx.insert(LevelReading, readings);
+}
+
+/** Sofia's day on FO7: today until tomorrow's sunrise hour. */
+async function seedTicket(ctx: Ctx): Promise<void> {
+  const { now } = ctx;
+  const from = new Date(Date.UTC(now.getUTCFullYear(), now.getUTCMonth(), now.getUTCDate(), 0));
+  const until = new Date(from.getTime() + DAY_MS);
+  await writeTicket(ctx, demoId('peg FO7'), {
+    id: demoId('ticket FO7'),
+    email: SOFIA.email,
+    from: from.toISOString(),
+    until: until.toISOString(),
+  });
+}
