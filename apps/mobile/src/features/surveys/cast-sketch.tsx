@@ -9,7 +9,7 @@ import { lineAWrapM } from '@mereward/shared/surveys/line-out';
 import { arcCells } from '@mereward/shared/surveys/peg-arc';
 import { Section } from '@/components/section';
 import { Text } from '@/components/text';
-import { SvgPicture } from '@/features/charts/svg-picture';
+import { SvgPicture } from '@/components/svg-picture';
 import { arcSketchSvg } from '@/features/surveys/arc-sketch';
 import type { Surroundings } from '@/features/surveys/cast-site-of';
 import { useTheme } from '@/hooks/use-theme';
