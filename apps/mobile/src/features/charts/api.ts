@@ -1,11 +1,9 @@
-import { ChartList, ChartView, PegPageView, SectionView } from '@mereward/shared/charts/contract';
+import { ChartView, PegPageView, SectionView } from '@mereward/shared/charts/contract';
 import { useQuery } from '@tanstack/react-query';
 import { api } from '@/lib/api';
 
 export const chartKeys = {
-  all: ['charts'] as const,
   one: (chartId: string) => ['charts', 'one', chartId] as const,
-  ofLake: (lakeId: string) => ['charts', 'lake', lakeId] as const,
   pegPage: (pegId: string) => ['charts', 'peg', pegId] as const,
   section: (pegId: string, bearingDeg: number, toM: number) =>
     ['charts', 'section', pegId, bearingDeg, toM] as const,
@@ -19,15 +17,6 @@ export function useChart(chartId: string | null) {
     enabled: chartId !== null,
     meta: { keep: false },
     gcTime: 10 * 60_000,
-  });
-}
-
-/** The versions of a lake's chart. */
-export function useChartsOf(lakeId: string | null) {
-  return useQuery({
-    queryKey: chartKeys.ofLake(lakeId ?? ''),
-    queryFn: ({ signal }) => api.get(`/lakes/${lakeId ?? ''}/charts`, ChartList, signal),
-    enabled: lakeId !== null,
   });
 }
 

@@ -11,7 +11,7 @@ import { space } from '@/constants/layout';
 import { useTheme } from '@/hooks/use-theme';
 import { useUnits } from '@/hooks/use-units';
 import { isobathFigure } from './depth-format';
-import { SvgPicture } from './svg-picture';
+import { SvgPicture } from '@/components/svg-picture';
 
 /** The tints and the depths they begin at. */
 function Tints({ ground, palette }: { ground: Ground; palette: Palette }) {

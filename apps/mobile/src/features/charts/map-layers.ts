@@ -34,7 +34,8 @@ export type MapChosen = { pegId: string | null; spotId: string | null; cast: Dra
 
 export type Pen = { view: View; palette: Palette; unit: 'm' | 'ft' };
 
-function svgOf(view: View, marks: readonly Mark[], idPrefix: string): string {
+/** Marks of the lake's plane as they look in a view. */
+export function svgOf(view: View, marks: readonly Mark[], idPrefix: string): string {
   const { widthPx, heightPx } = view;
   return toSvg(
     { widthPx, heightPx, ground: null, layers: [{ view, atPx: { x: 0, y: 0 }, marks }] },

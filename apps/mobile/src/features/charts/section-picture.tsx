@@ -7,7 +7,7 @@ import { fromMetres } from '@mereward/shared/units/length';
 import { View } from 'react-native';
 import { useTheme } from '@/hooks/use-theme';
 import { useUnits } from '@/hooks/use-units';
-import { SvgPicture } from './svg-picture';
+import { SvgPicture } from '@/components/svg-picture';
 
 const HEIGHT_PX = 190;
 

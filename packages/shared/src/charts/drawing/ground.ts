@@ -11,7 +11,8 @@ const PAPER_FROM = 0.4;
 
 /** A chart made ready for drawing: everything that doesn't depend on the scale of the view. Metres. */
 export type Ground = {
-  water: Line[]; // shore and islands, closed
+  water: Line[]; // shore and islands as areas
+  shore: Line[]; // their lines; a closed one ends where it began
   depth: Grid | null; // depth of the water drawn, carried a little past the survey's edge; above water is negative
   regions: Isobath[]; // filled one over the other
   isobaths: Isobath[];
@@ -33,7 +34,8 @@ export type GroundInput = {
 /** Readies a chart. At another level than datum the isobaths are run again through the same surface. */
 export function groundOf(input: GroundInput): Ground {
   const water = ringsOf(input.outline).map((ring) => ring.flatMap(({ xM, yM }) => [xM, yM]));
-  if (!input.depth) return { ...NOTHING, water, stepM: input.stepM };
+  const shore = water.map((ring) => [...ring, ...ring.slice(0, 2)]);
+  if (!input.depth) return { ...NOTHING, water, shore, stepM: input.stepM };
   const { depth, raisedM, stepM, outline } = input;
   const inWater = waterRaster(depth, outline);
   const drawn = raised(depth, raisedM);
@@ -41,6 +43,7 @@ export function groundOf(input: GroundInput): Ground {
   const filledIn = carriedOver(drawn, inWater);
   return {
     water,
+    shore,
     depth: filledIn,
     regions: deeperRegions(filledIn, levelsM).slice(1),
     isobaths: linesOf(input, drawn, levelsM),
@@ -52,7 +55,7 @@ export function groundOf(input: GroundInput): Ground {
   };
 }
 
-const NOTHING: Omit<Ground, 'water' | 'stepM'> = {
+const NOTHING: Omit<Ground, 'water' | 'shore' | 'stepM'> = {
   depth: null,
   regions: [],
   isobaths: [],

@@ -7,8 +7,7 @@ import { toPage, type View } from './view';
 
 /** Shore and islands in ink; islands are land, so they're paper. */
 export function shoreMarks(ground: Ground, palette: Palette): Mark[] {
-  const line = stroked(ground.water, ruled(palette.ink, 1.9));
-  return [{ ...line, closed: true }];
+  return [stroked(ground.shore, ruled(palette.ink, 1.9))];
 }
 
 export type DrawnPeg = Point & {

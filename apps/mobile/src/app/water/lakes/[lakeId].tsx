@@ -1,0 +1,1 @@
+export { LakeScreen as default } from '@/features/charts/lake-screen';

@@ -1,0 +1,1 @@
+export { PegScreen as default } from '@/features/charts/peg-screen';

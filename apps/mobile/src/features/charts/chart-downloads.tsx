@@ -1,0 +1,48 @@
+import { useState } from 'react';
+import type { ChartView } from '@mereward/shared/charts/contract';
+import { Button } from '@/components/button';
+import { ProblemNote } from '@/components/problem-note';
+import { Section } from '@/components/section';
+import { useUnits } from '@/hooks/use-units';
+import { chartFile, type ChartFileKind } from './chart-file';
+import { shownLayers } from './chart-layers';
+
+const kinds: readonly { kind: ChartFileKind; label: string; bw: boolean }[] = [
+  { kind: 'png', label: 'Picture (PNG)', bw: false },
+  { kind: 'svg', label: 'Drawing (SVG)', bw: false },
+  { kind: 'svg', label: 'Drawing for black-and-white print', bw: true },
+  { kind: 'geojson', label: 'Layers (GeoJSON)', bw: false },
+];
+
+/** The chart to take away: only what this reader may see is in the files. */
+export function ChartDownloads({ chart }: { chart: ChartView }) {
+  const units = useUnits();
+  const shown = shownLayers.use();
+  const [busy, setBusy] = useState<string | null>(null);
+  const [problem, setProblem] = useState<unknown>(null);
+  const save = async (kind: ChartFileKind, bw: boolean): Promise<void> => {
+    setBusy(`${kind}${String(bw)}`);
+    setProblem(null);
+    try {
+      await chartFile({ chart, kind, units, shown, blackAndWhite: bw });
+    } catch (fault) {
+      setProblem(fault);
+    } finally {
+      setBusy(null);
+    }
+  };
+  return (
+    <Section title="Take the chart away" note="As a sheet with scale, datum, dates and cautions on it.">
+      {kinds.map(({ kind, label, bw }) => (
+        <Button
+          key={label}
+          label={label}
+          busy={busy === `${kind}${String(bw)}`}
+          busyLabel="Drawing it…"
+          onPress={() => void save(kind, bw)}
+        />
+      ))}
+      <ProblemNote problem={problem} />
+    </Section>
+  );
+}

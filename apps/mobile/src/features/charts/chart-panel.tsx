@@ -1,0 +1,78 @@
+import { useMemo, useState } from 'react';
+import type { ChartView } from '@mereward/shared/charts/contract';
+import type { DrawnCast } from '@mereward/shared/charts/drawing/cast-marks';
+import type { Point } from '@mereward/shared/geometry/plane';
+import { useWindowDimensions, View } from 'react-native';
+import { Text } from '@/components/text';
+import { space } from '@/constants/layout';
+import { useWide } from '@/hooks/use-wide';
+import { ChartCaption } from './chart-caption';
+import { ChartKey } from './chart-key';
+import { shownLayers } from './chart-layers';
+import { ChartMap } from './chart-map';
+import { LayerReasons, LayerToggles, useLevelWords } from './layer-toggles';
+import type { MapContent } from './map-layers';
+import { PlaceReading } from './place-reading';
+import { useChartContent } from './use-chart-content';
+
+const PHONE_SHARE = 0.56; // of the screen's height
+const WIDE_LEAST_PX = 320;
+
+type Props = {
+  chart: ChartView;
+  pegId: string | null;
+  onPeg: (pegId: string) => void;
+  spots?: MapContent['spots'] | undefined;
+  spotId?: string | null | undefined;
+  cast?: DrawnCast | null | undefined;
+  onAim?: ((place: Point, done: boolean) => void) | undefined;
+};
+
+/** A chart as a sheet: layers to choose above, the map, and below it key, version, dates, datum and cautions. */
+export function ChartPanel({ chart, pegId, onPeg, spots, spotId = null, cast = null, onAim }: Props) {
+  const wide = useWide();
+  const { height } = useWindowDimensions();
+  const shown = shownLayers.use();
+  const { content, layers, raisedM, isToday } = useChartContent(chart, shown, spots);
+  const [place, setPlace] = useState<Point | null>(null);
+  const chosen = useMemo(() => ({ pegId, spotId, cast }), [pegId, spotId, cast]);
+  const levelWords = useLevelWords(chart, isToday);
+  const map = (
+    <ChartMap
+      label={`Chart of ${chart.lakeName}`}
+      content={content}
+      chosen={chosen}
+      onPeg={onPeg}
+      onPlace={setPlace}
+      onAim={onAim}
+    />
+  );
+  const padded = { paddingHorizontal: space.page, gap: space.small } as const;
+  return (
+    <View style={{ flexGrow: 1, flexShrink: 1, minHeight: 0, gap: space.small }}>
+      <View style={padded}>
+        <LayerToggles chart={chart} />
+      </View>
+      <View style={wide ? { flex: 1, minHeight: WIDE_LEAST_PX } : { height: height * PHONE_SHARE }}>
+        {map}
+      </View>
+      <View style={[padded, { paddingBottom: space.medium }]}>
+        {place ? (
+          <PlaceReading
+            layers={layers}
+            place={place}
+            raisedM={raisedM}
+            when={isToday ? 'today' : 'at datum'}
+          />
+        ) : (
+          <Text size="small" tone="inkSoft">
+            {layers ? 'Touch the water to read it; touch a peg to choose it.' : 'Touch a peg to choose it.'}
+          </Text>
+        )}
+        <ChartKey ground={content.ground} bottom={content.bottom} />
+        <LayerReasons notes={chart.layerNotes} />
+        <ChartCaption chart={chart} shownAt={levelWords} />
+      </View>
+    </View>
+  );
+}

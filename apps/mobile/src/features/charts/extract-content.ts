@@ -1,0 +1,69 @@
+import type { PegPageView } from '@mereward/shared/charts/contract';
+import { groundOf } from '@mereward/shared/charts/drawing/ground';
+import type { Line } from '@mereward/shared/charts/drawing/mark';
+import type { View } from '@mereward/shared/charts/drawing/view';
+import { pointAlong, type Point } from '@mereward/shared/geometry/plane';
+import type { Outline } from '@mereward/shared/geometry/polygon';
+import type { MapContent } from './map-layers';
+import { bottomOf, layersOf } from './readied-chart';
+
+type Extract = NonNullable<PegPageView['extract']>;
+
+/** The piece of chart before a peg, made ready for a map; as much of it as came. */
+export function extractContent(page: PegPageView, extract: Extract): MapContent {
+  const part = extract.grid && { ...extract.grid, sigma: null };
+  const layers = part && layersOf(part);
+  const ground = groundOf({
+    outline: outlineOf(extract.water),
+    depth: part?.depth && layers ? layers.depth : null,
+    isobaths: extract.isobaths,
+    stepM: extract.contourStepM,
+    raisedM: 0,
+  });
+  return {
+    ground: { ...ground, shore: extract.shore },
+    bottom: part ? bottomOf(part, layers) : [],
+    soundings: [],
+    marks: [],
+    spots: page.spots ?? [],
+    pegs: [
+      {
+        ...extract.originM,
+        id: page.id,
+        number: page.number,
+        facingDeg: extract.facingDeg,
+        status: 'open',
+      },
+    ],
+  };
+}
+
+function outlineOf(rings: readonly Line[]): Outline {
+  const points = rings.map((ring) => {
+    const places: Point[] = [];
+    for (let i = 0; i + 1 < ring.length; i += 2) places.push({ xM: ring[i] ?? 0, yM: ring[i + 1] ?? 0 });
+    return places;
+  });
+  const [shore = [], ...islands] = points;
+  return { shore, islands };
+}
+
+type Page = { widthPx: number; heightPx: number };
+
+/** An extract is this wide at least; no more of it may show. */
+const EXTRACT_ACROSS_M = 116;
+
+/** Looking out from the peg: it stands at the foot of the picture, its water above it. */
+export function outlookView(extract: Extract, reachM: number, { widthPx, heightPx }: Page): View {
+  const pxPerM = Math.max(
+    Math.min(heightPx / (reachM + 22), widthPx / (reachM * 0.9)),
+    widthPx / EXTRACT_ACROSS_M,
+  );
+  return {
+    widthPx,
+    heightPx,
+    pxPerM,
+    centre: pointAlong(extract.originM, extract.facingDeg, heightPx / 2 / pxPerM - 12),
+    turnDeg: -extract.facingDeg,
+  };
+}

@@ -1,0 +1,75 @@
+import { useMemo, useState } from 'react';
+import type { PegPageView, SpotView } from '@mereward/shared/charts/contract';
+import { castMarks, spotMarks } from '@mereward/shared/charts/drawing/cast-marks';
+import { drawMap } from '@mereward/shared/charts/drawing/draw-map';
+import { northMarks, scaleBarMarks } from '@mereward/shared/charts/drawing/furniture';
+import { palettes } from '@mereward/shared/charts/drawing/palette';
+import { PLAIN_SVG, toSvg } from '@mereward/shared/charts/drawing/to-svg';
+import { stickWords } from '@mereward/shared/charts/spot-words';
+import { View } from 'react-native';
+import { useTheme } from '@/hooks/use-theme';
+import { useUnits } from '@/hooks/use-units';
+import { isobathFigure } from './depth-format';
+import { extractContent, outlookView } from './extract-content';
+import { spotCast } from './spot-cast';
+import { SvgPicture } from '@/components/svg-picture';
+
+const HEIGHT_PX = 360;
+const LEAST_REACH_M = 45;
+const PAST_SPOT_M = 14;
+
+type Props = { page: PegPageView; spot: SpotView | null; label: string };
+
+/** The water before a peg, seen from the peg: it stands at the foot and its casts go up the page. */
+export function ExtractMap({ page, spot, label }: Props) {
+  const { extract } = page;
+  const { name } = useTheme();
+  const units = useUnits();
+  const [widthPx, setWidthPx] = useState(0);
+  const content = useMemo(() => (extract ? extractContent(page, extract) : null), [page, extract]);
+  const svg = useMemo(() => {
+    if (!extract || !content || widthPx === 0) return '';
+    const palette = palettes[name];
+    const farthestM = Math.max(
+      0,
+      ...(page.spots ?? []).map(({ xM, yM }) => Math.hypot(xM - extract.originM.xM, yM - extract.originM.yM)),
+    );
+    const size = { widthPx, heightPx: HEIGHT_PX };
+    const view = outlookView(extract, Math.max(LEAST_REACH_M, farthestM + PAST_SPOT_M), size);
+    const cast = spot ? spotCast(extract.originM, spot, units.stickSpacingM) : null;
+    const marks = drawMap(
+      { ...content, cast: null },
+      {
+        palette,
+        view,
+        depthWords: (depthM) => isobathFigure(depthM, extract.contourStepM, units.length),
+        selectedPegId: page.id,
+        selectedSpotId: null,
+      },
+    );
+    const chosen =
+      spot && cast ? [...castMarks(cast, palette, view), ...spotMarks([spot], palette, spot.id)] : [];
+    const bar = {
+      x: 14,
+      y: HEIGHT_PX - 20,
+      mostPx: widthPx * 0.28,
+      stickSpacingM: units.stickSpacingM,
+      sticks: stickWords(units.stickSpacingM),
+    };
+    const round = [
+      ...scaleBarMarks(view, bar, palette),
+      ...northMarks(view, { x: widthPx - 30, y: 38 }, palette),
+    ];
+    const layers = [{ view, atPx: { x: 0, y: 0 }, marks: [...marks, ...chosen] }, { marks: round }];
+    return toSvg({ ...size, ground: palette.paper, layers }, { ...PLAIN_SVG, idPrefix: 'extract' });
+  }, [content, extract, name, page, spot, units, widthPx]);
+  if (!extract) return null;
+  return (
+    <View
+      style={{ minHeight: HEIGHT_PX, overflow: 'hidden' }}
+      onLayout={({ nativeEvent }) => setWidthPx(Math.round(nativeEvent.layout.width))}
+    >
+      {svg ? <SvgPicture svg={svg} label={label} /> : null}
+    </View>
+  );
+}

@@ -1,0 +1,134 @@
+import { useState } from 'react';
+import { useLocalSearchParams } from 'expo-router';
+import type { PegPageView } from '@mereward/shared/charts/contract';
+import { View } from 'react-native';
+import { Empty } from '@/components/empty';
+import { LinkButton } from '@/components/link-button';
+import { Loaded } from '@/components/loaded';
+import { Note } from '@/components/note';
+import { Page } from '@/components/page';
+import { Section } from '@/components/section';
+import { StatusShape } from '@/components/status-shape';
+import { Text } from '@/components/text';
+import { MEASURE_PX, space } from '@/constants/layout';
+import { dayAndTime, dayName } from '@/lib/format-time';
+import { usePegPage } from './api';
+import { CardButton } from './card-button';
+import { ChartCaption } from './chart-caption';
+import { CountConverter } from './count-converter';
+import { ExtractMap } from './extract-map';
+import { pegDetailsOf } from './peg-details';
+import { PegEmergency } from './peg-emergency';
+import { GettingThere, ThePeg } from './peg-facts';
+import { OverheadNote, PegHazards } from './peg-hazards';
+import { PegPhotos } from './peg-photos';
+import { PEG_STATUS, pegTitle } from './peg-words';
+import { SpotDetail } from './spot-detail';
+import { SpotsTable } from './spots-table';
+
+function InFront({ page }: { page: PegPageView }) {
+  const [spotId, setSpotId] = useState<string | null>(null);
+  const spots = page.spots ?? [];
+  const spot = spots.find(({ id }) => id === spotId) ?? spots[0] ?? null;
+  const water = { levelM: page.levelNow?.levelM ?? null, datumM: page.chart?.datumM ?? 0 };
+  const reasons = [...new Set(Object.values(page.layerNotes))].filter((words) => words !== null);
+  return (
+    <View style={{ gap: space.page }}>
+      <View style={{ marginHorizontal: -space.page }}>
+        <ExtractMap
+          page={page}
+          spot={spot}
+          label={`The chart before ${pegTitle(page)}, looking out from it. The spots are listed below.`}
+        />
+      </View>
+      {spot ? <SpotDetail spot={spot} page={page} /> : null}
+      {spots.length ? (
+        <Section title="Spots from this peg" bare>
+          <SpotsTable spots={spots} spotId={spot?.id ?? null} onSpot={setSpotId} water={water} />
+        </Section>
+      ) : page.spots ? (
+        <Empty title="No spots written up yet">The chart above is all there is for this peg so far.</Empty>
+      ) : null}
+      {reasons.length ? (
+        <Note title="Not shown to you here">
+          <>
+            {reasons.map((words) => (
+              <Text key={words}>{words}</Text>
+            ))}
+          </>
+        </Note>
+      ) : null}
+      {page.chart ? <ChartCaption chart={page.chart} shownAt={levelLine(page)} /> : null}
+      {page.chart ? (
+        <LinkButton label="The whole chart" href={`/water/charts/${page.chart.id}?peg=${page.id}`} />
+      ) : null}
+    </View>
+  );
+}
+
+function levelLine({ levelNow, fishery }: PegPageView): string {
+  if (!levelNow) return 'no level read yet, so depths are at datum';
+  return `level ${levelNow.boardReadsM.toFixed(2)} m on ${levelNow.boardCode}, read ${dayAndTime(levelNow.at, fishery.zone)}`;
+}
+
+function PegSheet({ page }: { page: PegPageView }) {
+  const details = pegDetailsOf(page);
+  const closed = details && details.status !== 'open' ? details : null;
+  return (
+    <>
+      {closed ? (
+        <Note kind={closed.status === 'closed' ? 'danger' : 'caution'} title={`This peg is ${closed.status}`}>
+          {[closed.statusReason, closed.statusUntil && `Until ${dayName(closed.statusUntil)}.`]
+            .filter(Boolean)
+            .join(' ') || 'Ask the fishery.'}
+        </Note>
+      ) : null}
+      {details ? <OverheadNote details={details} /> : null}
+      <InFront page={page} />
+      <PegPhotos photos={page.photos} title={pegTitle(page)} />
+      {details ? (
+        <>
+          <PegHazards details={details} />
+          <GettingThere details={details} />
+          <ThePeg details={details} />
+        </>
+      ) : (
+        <Note kind="caution">This page is older than the server: load it again to read the peg’s facts.</Note>
+      )}
+      {[details?.notesPublic, details?.notesMembers, details?.notesStaff].filter(Boolean).map((words) => (
+        <Text key={words} style={{ maxWidth: MEASURE_PX }}>
+          {words}
+        </Text>
+      ))}
+      <PegEmergency page={page} details={details} />
+      <Section title="A count on your own sticks">
+        <CountConverter />
+      </Section>
+    </>
+  );
+}
+
+/** A peg's own page: what an angler reads the night before and at the water. */
+export function PegScreen() {
+  const { pegId } = useLocalSearchParams<{ pegId: string }>();
+  const page = usePegPage(pegId);
+  const { lake, fishery } = page.data ?? {};
+  const details = page.data ? pegDetailsOf(page.data) : null;
+  return (
+    <Page
+      title={page.data ? pegTitle(page.data) : 'Peg'}
+      over={lake && fishery ? `${lake.name} · ${fishery.name}` : undefined}
+      back={
+        lake
+          ? { label: lake.name, href: `/water/lakes/${lake.id}?peg=${pegId}` }
+          : { label: 'Water', href: '/water' }
+      }
+      end={details ? <StatusShape {...PEG_STATUS[details.status]} /> : undefined}
+      actions={page.data ? <CardButton pegId={pegId} number={page.data.number} grow /> : undefined}
+    >
+      <Loaded query={page} waiting="Reading the peg…">
+        {(value) => <PegSheet page={value} />}
+      </Loaded>
+    </Page>
+  );
+}

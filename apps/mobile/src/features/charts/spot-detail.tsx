@@ -1,0 +1,97 @@
+import { BOTTOM_WORDS } from '@mereward/shared/charts/bottom-words';
+import type { PegPageView, SpotView } from '@mereward/shared/charts/contract';
+import { View } from 'react-native';
+import { Figure } from '@/components/figure';
+import { Heading } from '@/components/heading';
+import { Note } from '@/components/note';
+import { Text } from '@/components/text';
+import { MEASURE_PX, space } from '@/constants/layout';
+import { useUnits } from '@/hooks/use-units';
+import { length, percent } from '@/lib/format';
+import { dayName } from '@/lib/format-time';
+import { depthNow, depthShown } from './depth-format';
+import { SectionList } from './section-list';
+import { SectionPicture } from './section-picture';
+import { aimWords, countedWords, ownCountWords } from './spot-words';
+
+type Props = { spot: SpotView; page: Pick<PegPageView, 'chart' | 'levelNow' | 'rigCaution'> };
+
+const capital = (words: string): string => words.charAt(0).toUpperCase() + words.slice(1);
+
+/** One spot in large figures: how to reach it, how deep today, what bottom, how sure, and the bed on the way. */
+export function SpotDetail({ spot, page }: Props) {
+  const units = useUnits();
+  const datumM = page.chart?.datumM ?? 0;
+  const water = { levelM: page.levelNow?.levelM ?? null, datumM };
+  const shown = spot.depthM === null ? null : depthShown(spot.depthM, water);
+  const raisedM = water.levelM === null ? 0 : water.levelM - datumM;
+  return (
+    <View style={{ gap: space.medium }}>
+      <Heading level={2}>{`${ownCountWords(spot, units)}, ${aimWords(spot)}`}</Heading>
+      <View style={{ flexDirection: 'row', flexWrap: 'wrap', columnGap: space.wide, rowGap: space.medium }}>
+        {shown ? (
+          <Figure
+            figure={depthNow(shown.depthM, units.length)}
+            caption={spread(spot, shown.when, (m) => length(m, units))}
+          />
+        ) : null}
+        {spot.bottom ? <Figure figure={capital(BOTTOM_WORDS[spot.bottom])} caption={sureness(spot)} /> : null}
+      </View>
+      <Text size="small" tone="inkSoft" style={{ maxWidth: MEASURE_PX }}>
+        {provenance(spot, page.chart?.version ?? null)}
+      </Text>
+      {spot.note ? <Text style={{ maxWidth: MEASURE_PX }}>{spot.note}</Text> : null}
+      {spot.section?.length ? (
+        <>
+          <SectionPicture
+            points={spot.section}
+            raisedM={raisedM}
+            markLineOutM={spot.lineOutM}
+            label={`The bed on the way to ${spot.name}; the list below says the same.`}
+          />
+          <Text size="small" tone="inkSoft">
+            {levelWords(raisedM, water.levelM !== null, (m) => length(m, units, 2))}
+          </Text>
+          <SectionList points={spot.section} raisedM={raisedM} />
+        </>
+      ) : null}
+      {spot.presentation ? (
+        <Note title="What suits this bottom">
+          <Text>{spot.presentation}</Text>
+          <Text weight="semibold">{page.rigCaution}</Text>
+        </Note>
+      ) : null}
+    </View>
+  );
+}
+
+function spread({ depthSigmaM }: SpotView, when: string, words: (lengthM: number) => string): string {
+  return depthSigmaM === null
+    ? `deep ${when}`
+    : `deep ${when}, ± ${words(Math.max(0.1, 1.96 * depthSigmaM))}`;
+}
+
+function sureness({ grade, bottomConfidence }: SpotView): string {
+  const parts = [grade && `grade ${grade}`, bottomConfidence !== null && `${percent(bottomConfidence)} sure`];
+  return parts.filter(Boolean).join(', ') || 'bottom';
+}
+
+function provenance(spot: SpotView, version: string | null): string {
+  const parts = [
+    spot.quotedFrom === 'cast'
+      ? 'From a cast that landed here'
+      : spot.quotedFrom === 'chart'
+        ? 'Read off the chart'
+        : null,
+    spot.surveyedOn && `surveyed ${dayName(spot.surveyedOn)}`,
+    version && `chart ${version}`,
+    countedWords(spot),
+  ];
+  return `${parts.filter(Boolean).join(', ')}.`;
+}
+
+function levelWords(raisedM: number, known: boolean, words: (lengthM: number) => string): string {
+  if (!known) return 'The bed along this cast, in wraps, at chart datum.';
+  if (Math.abs(raisedM) < 0.005) return 'The bed along this cast, in wraps. The water stands at chart datum.';
+  return `The bed along this cast, in wraps. The water stands ${words(Math.abs(raisedM))} ${raisedM < 0 ? 'below' : 'above'} chart datum.`;
+}

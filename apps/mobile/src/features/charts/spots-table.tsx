@@ -1,0 +1,93 @@
+import type { SpotView } from '@mereward/shared/charts/contract';
+import { BOTTOM_WORDS } from '@mereward/shared/charts/bottom-words';
+import { stickWords } from '@mereward/shared/charts/spot-words';
+import { Pressable, View } from 'react-native';
+import { Text } from '@/components/text';
+import { space, target } from '@/constants/layout';
+import { themed } from '@/hooks/themed';
+import { useUnits } from '@/hooks/use-units';
+import { depthNow, depthShown } from './depth-format';
+import { aimWords, ownCount } from './spot-words';
+
+const useStyles = themed((c) => ({
+  head: {
+    flexDirection: 'row',
+    gap: space.small,
+    paddingBottom: space.hair,
+    borderBottomWidth: 1,
+    borderBottomColor: c.rule,
+  },
+  row: {
+    minHeight: target.plain,
+    flexDirection: 'row',
+    alignItems: 'center',
+    gap: space.small,
+    paddingVertical: space.small,
+    borderBottomWidth: 1,
+    borderBottomColor: c.rule,
+  },
+  chosen: { backgroundColor: c.floatTint },
+  name: { flex: 2, minWidth: 0 },
+  figure: { flex: 1, textAlign: 'right' },
+}));
+
+type Props = {
+  spots: readonly SpotView[];
+  spotId: string | null;
+  onSpot: (spotId: string) => void;
+  water: { levelM: number | null; datumM: number };
+};
+
+/** The spots that can be reached from a peg, each by count and aim, with depth and bottom. A press chooses one. */
+export function SpotsTable({ spots, spotId, onSpot, water }: Props) {
+  const styles = useStyles();
+  const units = useUnits();
+  const depth = (spot: SpotView): string =>
+    spot.depthM === null ? '' : depthNow(depthShown(spot.depthM, water).depthM, units.length);
+  return (
+    <View>
+      <View style={styles.head} aria-hidden>
+        <Text size="small" tone="inkSoft" style={styles.name}>
+          Spot
+        </Text>
+        <Text size="small" tone="inkSoft" style={styles.figure}>
+          {`wraps of ${stickWords(units.stickSpacingM)}`}
+        </Text>
+        <Text size="small" tone="inkSoft" style={styles.figure}>
+          {water.levelM === null ? 'at datum' : 'today'}
+        </Text>
+        <Text size="small" tone="inkSoft" style={styles.figure}>
+          bottom
+        </Text>
+      </View>
+      <View role="radiogroup" aria-label="Spots from this peg">
+        {spots.map((spot) => {
+          const bottom = spot.bottom === null ? '' : BOTTOM_WORDS[spot.bottom];
+          const chosen = spot.id === spotId;
+          return (
+            <Pressable
+              key={spot.id}
+              role="radio"
+              aria-checked={chosen}
+              aria-label={[spot.name, `${ownCount(spot, units)} wraps`, aimWords(spot), depth(spot), bottom]
+                .filter(Boolean)
+                .join(', ')}
+              onPress={() => onSpot(spot.id)}
+              style={[styles.row, chosen && styles.chosen]}
+            >
+              <View style={styles.name}>
+                <Text weight={chosen ? 'semibold' : 'regular'}>{spot.name}</Text>
+                <Text size="small" tone="inkSoft">
+                  {aimWords(spot)}
+                </Text>
+              </View>
+              <Text style={styles.figure}>{ownCount(spot, units)}</Text>
+              <Text style={styles.figure}>{depth(spot)}</Text>
+              <Text style={styles.figure}>{bottom}</Text>
+            </Pressable>
+          );
+        })}
+      </View>
+    </View>
+  );
+}

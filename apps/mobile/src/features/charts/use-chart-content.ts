@@ -1,0 +1,53 @@
+import { useMemo } from 'react';
+import type { ChartLayers } from '@mereward/shared/charts/chart-reading';
+import type { ChartView } from '@mereward/shared/charts/contract';
+import type { BottomArea } from '@mereward/shared/charts/drawing/bottom-areas';
+import { useUnits } from '@/hooks/use-units';
+import type { ShownLayers } from './chart-layers';
+import { stepFor } from './depth-format';
+import type { MapContent } from './map-layers';
+import { bottomOf, groundOfChart, layersOf, raisedNowM } from './readied-chart';
+
+export type ChartContent = {
+  content: MapContent;
+  layers: ChartLayers | null;
+  raisedM: number; // the level depths are shown for, above datum
+  isToday: boolean;
+};
+
+const NO_AREAS: BottomArea[] = [];
+const NO_SPOTS: MapContent['spots'] = [];
+
+/** A chart made ready for its map. Each part is made again only when what it stands on changes. */
+export function useChartContent(
+  chart: ChartView,
+  shown: ShownLayers,
+  spots: MapContent['spots'] = NO_SPOTS,
+): ChartContent {
+  const units = useUnits();
+  const layers = useMemo(() => layersOf(chart), [chart]);
+  const nowM = raisedNowM(chart);
+  const isToday = shown.today && nowM !== null;
+  const raisedM = isToday ? nowM : 0;
+  const stepM = stepFor(chart.contourStepM, units.length);
+  const ground = useMemo(
+    () => groundOfChart(chart, layers, { raisedM, stepM, showDepth: shown.depth }),
+    [chart, layers, raisedM, stepM, shown.depth],
+  );
+  const allBottom = useMemo(
+    () => (shown.bottom ? bottomOf(chart, layers) : NO_AREAS),
+    [chart, layers, shown.bottom],
+  );
+  const content = useMemo(
+    (): MapContent => ({
+      ground,
+      bottom: allBottom,
+      soundings: shown.soundings ? (chart.soundings ?? []) : [],
+      pegs: chart.pegs,
+      marks: chart.marks,
+      spots,
+    }),
+    [ground, allBottom, shown.soundings, chart, spots],
+  );
+  return { content, layers, raisedM, isToday };
+}
