@@ -52,6 +52,7 @@ function refineRow<Feel extends string>(
   worthCasts: number,
 ): Record<Feel, number> {
   const refined: Record<Feel, number> = { ...usual };
+  if (seen.length === 0) return refined;
   for (const feel in refined) {
     const times = seen.filter((other) => other === feel).length;
     refined[feel] = (worthCasts * usual[feel] + times) / (worthCasts + seen.length);

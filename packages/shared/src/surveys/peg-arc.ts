@@ -1,4 +1,4 @@
-import { normaliseBearing } from '../geometry/geodesic';
+import { bearingDifferenceDeg, normaliseBearing } from '../geometry/geodesic';
 import { arcWidthDeg } from '../lakes/peg-rules';
 
 /** Lines every ten degrees, casts every two wraps: common practice, no published source. */
@@ -77,13 +77,17 @@ function countByCell(
 export function arcCoverage(arc: PegArc, casts: readonly Landed[]): { share: number; repeatsShare: number } {
   const cells = arcCells(arc, casts);
   const reached = cells.filter((cell) => cell.casts > 0).length;
-  const repeats = casts.filter((cast, i) =>
-    casts.slice(0, i).some((other) => other.lineId !== cast.lineId && apartM(cast, other) <= REPEAT_WITHIN_M),
-  );
+  const repeats = casts.filter((cast, i) => casts.slice(0, i).some((other) => isRepeat(cast, other)));
   return {
     share: cells.length === 0 ? 0 : reached / cells.length,
     repeatsShare: casts.length === 0 ? 0 : repeats.length / casts.length,
   };
+}
+
+/** Near in, neighbouring lines lie within two metres of one another too: a repeat is thrown on the same line as well. */
+function isRepeat(cast: Landed, other: Landed): boolean {
+  if (other.lineId === cast.lineId || apartM(cast, other) > REPEAT_WITHIN_M) return false;
+  return Math.abs(bearingDifferenceDeg(cast.bearingDeg, other.bearingDeg)) < SECTOR_DEG / 2;
 }
 
 function apartM(a: Polar, b: Polar): number {
