@@ -16,8 +16,9 @@ export function spotPlace(
 ): { ok: true; warnings: string[] } | Refusal {
   const rangeM = Math.hypot(spot.xM - stance.xM, spot.yM - stance.yM);
   const bearingDeg = planeBearingDeg(stance, spot);
-  const run = waterRunM(outline, stance, { bearingDeg, limitM: Math.max(rangeM, 1) });
+  const ray = { bearingDeg, limitM: Math.max(rangeM, 1) };
   if (insideOutline(outline, spot)) {
+    const run = waterRunM(outline, stance, ray);
     const overLand = run === null || run.leavesAtM < rangeM - 1e-6;
     const words = 'The line crosses land before it reaches the spot: is the mark or bearing right?';
     return { ok: true, warnings: overLand ? [words] : [] };
@@ -26,6 +27,7 @@ export function spotPlace(
   if (outline.islands.some((island) => insideRing(island, spot))) {
     return refuse(`The spot falls on an island, ${offM.toFixed(1)} m from its edge`, REMEDY);
   }
+  const run = waterRunM({ shore: outline.shore, islands: [] }, stance, ray);
   if (run && run.leavesAtM < rangeM) {
     const words = `The spot falls beyond the far bank: the line meets it at ${run.leavesAtM.toFixed(1)} m and the spot lies ${offM.toFixed(1)} m outside the water`;
     return refuse(words, REMEDY);
