@@ -6,15 +6,8 @@ import { randomUUID } from 'node:crypto';
 import { afterAll, beforeAll, describe, expect, test } from 'vitest';
 import { aPerson, aStranger, type Person } from '../support/people';
 import { aServer, type TestServer } from '../support/server';
-import {
-  aFishery,
-  aLake,
-  aPeg,
-  pegDetails,
-  type TestFishery,
-  type TestLake,
-  type TestPeg,
-} from '../support/waters';
+import { pegDetails } from '../support/water-details';
+import { aFishery, aLake, aPeg, type TestFishery, type TestLake, type TestPeg } from '../support/waters';
 
 let server: TestServer;
 let here: TestFishery;

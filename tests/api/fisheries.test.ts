@@ -4,7 +4,8 @@ import { randomUUID } from 'node:crypto';
 import { afterAll, beforeAll, describe, expect, test } from 'vitest';
 import { aPerson, aStranger, signedIn, type Asker } from '../support/people';
 import { aServer, type TestServer } from '../support/server';
-import { aFishery, aLake, aPeg, fisheryDetails, type TestFishery } from '../support/waters';
+import { fisheryDetails } from '../support/water-details';
+import { aFishery, aLake, aPeg, type TestFishery } from '../support/waters';
 
 let here: TestServer;
 let ours: TestFishery;

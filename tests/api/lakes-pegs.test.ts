@@ -4,18 +4,8 @@ import { randomUUID } from 'node:crypto';
 import { afterAll, beforeAll, describe, expect, test } from 'vitest';
 import { aStranger } from '../support/people';
 import { aServer, type TestServer } from '../support/server';
-import {
-  aBoard,
-  aFishery,
-  aLake,
-  aMark,
-  aPeg,
-  boardDetails,
-  markDetails,
-  pegDetails,
-  type TestFishery,
-  type TestLake,
-} from '../support/waters';
+import { boardDetails, markDetails, pegDetails } from '../support/water-details';
+import { aBoard, aFishery, aLake, aMark, aPeg, type TestFishery, type TestLake } from '../support/waters';
 
 let server: TestServer;
 let here: TestFishery;

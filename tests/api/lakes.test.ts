@@ -4,14 +4,8 @@ import { randomUUID } from 'node:crypto';
 import { afterAll, beforeAll, describe, expect, test } from 'vitest';
 import { aStranger } from '../support/people';
 import { aServer, type TestServer } from '../support/server';
-import {
-  aFishery,
-  aLake,
-  lakeDetails,
-  lakeOutline,
-  type TestFishery,
-  type TestLake,
-} from '../support/waters';
+import { lakeDetails, lakeOutline } from '../support/water-details';
+import { aFishery, aLake, type TestFishery, type TestLake } from '../support/waters';
 
 let server: TestServer;
 let here: TestFishery;
