@@ -1,3 +1,4 @@
+import fc from 'fast-check';
 import { describe, expect, test } from 'vitest';
 import type { LonLat } from './geodesic';
 import {
@@ -200,5 +201,34 @@ describe('the lake’s plane', () => {
     const [x, y] = fromPlane(ORIGIN, { xM: 50, yM: 50 });
     expect(Math.abs(lon - x)).toBeLessThan(1e-7);
     expect(Math.abs(lat - y)).toBeLessThan(1e-7);
+  });
+});
+
+describe('whatever is brought', () => {
+  test('is answered with an outline or a reason, and never thrown at', () => {
+    const loose = fc.oneof(
+      fc.anything(),
+      fc.json().map((text): unknown => JSON.parse(text)),
+    );
+    const coordinates = fc.oneof(loose, fc.array(fc.array(fc.array(fc.double(), { maxLength: 3 }))));
+    const values = fc.oneof(
+      loose,
+      fc.record({
+        type: fc.constantFrom('Polygon', 'MultiPolygon', 'LineString', 'Point', 'MultiPoint'),
+        coordinates,
+      }),
+    );
+    fc.assert(
+      fc.property(values, (value) => {
+        const { outline, findings } = outlineFromGeoJson(value);
+        expect(outline === null).toBe(findings.some(({ kind }) => kind === 'refused'));
+      }),
+      { numRuns: 500 },
+    );
+    fc.assert(
+      fc.property(fc.string(), (text) => {
+        expect(outlineFromText(text).outline).toBeNull();
+      }),
+    );
   });
 });

@@ -91,7 +91,7 @@ describe('two answers by probability', () => {
 
 describe('calling the bottom', () => {
   const soft = { drop: 'soft_slow', drag: 'smooth_slow_heavy' } as const;
-  test.each([
+  test.each<[string, Partial<Feels>]>([
     ['gravel', { drop: 'sharp_crack', drag: 'fine_rattle', cameBack: ['none'] }],
     ['clay', { drop: 'sharp_crack', drag: 'smooth_skim', cameBack: ['grey_clay'] }],
     ['sand', { drop: 'firm_thud', drag: 'fine_rattle', cameBack: ['sand'] }],
@@ -114,7 +114,7 @@ describe('calling the bottom', () => {
     ['silt_deep', { drop: 'soft_slow', cameBack: ['black_silt'] }],
     ['silt_firm', { drop: 'dull', cameBack: ['black_silt'] }],
     ['weed_low', { cameBack: ['weed'] }],
-  ] as [string, Partial<Feels>][])('%s from %j', (bottom, feels) => expect(judge(feels).bottom).toBe(bottom));
+  ])('%s from %j', (bottom, feels) => expect(judge(feels).bottom).toBe(bottom));
 
   test('a snag takes two solid stops at the same wraps over the same mark', () => {
     const stop = { ...NOTHING, drag: 'solid_stop' } as const;
@@ -135,14 +135,14 @@ describe('calling the bottom', () => {
 });
 
 describe('feels that disagree', () => {
-  test.each([
+  test.each<[number, Partial<Feels>]>([
     [0, { drop: 'sharp_crack', drag: 'fine_rattle', cameBack: ['none'] }],
     [1, { drop: 'sharp_crack', drag: 'stick_free_stick', cameBack: ['none'] }],
     [1, { drop: 'soft_slow', drag: 'fine_rattle' }],
     [2, { drop: 'sharp_crack', drag: 'fine_rattle', cameBack: ['black_silt'] }],
     [3, { drop: 'soft_slow', drag: 'fine_rattle', cameBack: ['weed'] }],
     [0, { drop: 'soft_slow', drag: 'unsure', cameBack: null }],
-  ] as [number, Partial<Feels>][])('%i pairs clash in %j', (count, feels) => {
+  ])('%i pairs clash in %j', (count, feels) => {
     expect(disagreements({ ...NOTHING, ...feels })).toHaveLength(count);
     expect(judge(feels).askAgain).toBe(count > 0);
   });

@@ -90,7 +90,7 @@ const sounding = (changes: Changes) => {
 };
 
 describe('casts that can’t be reduced', () => {
-  test.each([
+  test.each<[string, Changes, RegExp]>([
     ['a line too short for the depth', { cast: { wrapsWhole: 1 } }, /too short.*at least 6\.74 m is needed/],
     ['no line out at all', { cast: { wrapsWhole: 0 } }, /too short/],
     ['a spot on an island', { cast: { wrapsWhole: 27 } }, /on an island, \d+\.\d m from its edge/],
@@ -120,7 +120,7 @@ describe('casts that can’t be reduced', () => {
       /stance/,
     ],
     ['a time that is none', { site: { observedAt: 'teatime' } }, /time of the cast/],
-  ] as [string, Changes, RegExp][])('%s', (_, changes, words) => {
+  ])('%s', (_, changes, words) => {
     const reduced = reduce(changes);
     expect(reduced.ok ? '' : reduced.reason).toMatch(words);
     expect(reduced.ok ? '' : reduced.remedy).not.toBe('');
@@ -214,7 +214,7 @@ describe('the error of a cast', () => {
     expect(sounding({ cast: { flags: [flag] } }).grade).toBe(grade);
   });
 
-  test.each([
+  test.each<[string, Changes, string, RegExp]>([
     [
       'no marked origin',
       { site: { stance: { ...site.stance, originMarked: false } } },
@@ -223,7 +223,7 @@ describe('the error of a cast', () => {
     ],
     ['a tree for a mark', { site: { mark: { ...mark, permanence: 'tree' as const } } }, 'B', /not permanent/],
     ['a float seen poorly', { cast: { floatSight: 'poor' as const } }, 'C', /seen poorly/],
-  ] as [string, Changes, string, RegExp][])('%s is told among the reasons', (_, changes, grade, words) => {
+  ])('%s is told among the reasons', (_, changes, grade, words) => {
     const answer = sounding(changes);
     expect(answer.grade).toBe(grade);
     expect(answer.gradeReasons.join('; ')).toMatch(words);

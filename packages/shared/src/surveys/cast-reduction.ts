@@ -7,7 +7,7 @@ import { ellipse95 } from './covariance';
 import { UNREAD_DEPTH } from './error-budget';
 import { gradeOf } from './grade';
 import { thu95M, tvu95M, yardstickWords } from './hydrographic-yardstick';
-import { lineOut } from './line-out';
+import { lineOutM } from './line-out';
 import { metres, step } from './reduction-step';
 import { spotPlace } from './spot-place';
 import { levelAt, levelStep, type LevelAt } from './water-level';
@@ -135,18 +135,16 @@ function warningsOf(
   return warnings;
 }
 
+/** Only the peg's other solid stops can change a call: two at one place are a snag. */
 function bottomOf(
   cast: CastObservation,
   [kit, site]: readonly [Kit, CastSite],
-  { lineOutM }: CastPosition,
+  position: CastPosition,
 ): BottomEvidence {
-  const thrown = (other: CastObservation) => ({
-    aim: other.aim,
-    drag: other.drag,
-    lineOutM: lineOut(other, kit).lineOutM,
-  });
-  const here = { aim: cast.aim, drag: cast.drag, lineOutM };
-  return bottomEvidence(cast, { here, earlier: site.earlier.map(thrown) });
+  const stops = site.earlier.filter(({ drag }) => cast.drag === 'solid_stop' && drag === 'solid_stop');
+  const earlier = stops.map((stop) => ({ aim: stop.aim, drag: stop.drag, lineOutM: lineOutM(stop, kit) }));
+  const here = { aim: cast.aim, drag: cast.drag, lineOutM: position.lineOutM };
+  return bottomEvidence(cast, { here, earlier });
 }
 
 /** A number that is not one can only come from a broken import; it is named rather than spread. */

@@ -1,7 +1,7 @@
 import { metresToWraps, wrapsToMetres } from '../units/wraps';
 import { refuse, type Refusal } from './cast-site';
-import type { CastObservation, Kit } from './contract';
-import { lineAWrapM } from './line-out';
+import type { CastObservation } from './contract';
+import { lineAWrapM, type Sticks } from './line-out';
 
 /** Line wound in between two readings of one throw: so many turns of the reel, or so many wraps round the sticks. */
 export type WoundIn =
@@ -16,8 +16,12 @@ export type StillOut = Pick<CastObservation, 'wrapsWhole' | 'remainderM' | 'rema
  * The count of the next reading closer in on the same throw: a sounding of its own, on the same bearing. Winding in as
  * much line as was out, or more, is refused in words.
  */
-export function closerIn(before: StillOut, wound: WoundIn, kit: Kit): { ok: true; out: StillOut } | Refusal {
-  const wrapM = lineAWrapM(kit);
+export function closerIn(
+  before: StillOut,
+  wound: WoundIn,
+  sticks: Sticks,
+): { ok: true; out: StillOut } | Refusal {
+  const wrapM = lineAWrapM(sticks);
   const outM = wrapsToMetres({ whole: before.wrapsWhole, remainderM: before.remainderM }, wrapM);
   const inM = lengthIn(wound, wrapM);
   if (!(inM > 0))

@@ -3,7 +3,8 @@ import type { CastObservation, Kit, ReductionStep } from './contract';
 import { SIGMA } from './error-budget';
 import { metres, plusMinus, step } from './reduction-step';
 
-type Sticks = Pick<Kit, 'stickSpacingM' | 'stickMeasured' | 'stickDiameterM'>;
+/** The sticks a count was wound on. */
+export type Sticks = Pick<Kit, 'stickSpacingM' | 'stickMeasured' | 'stickDiameterM'>;
 type Stretchy = Pick<Kit, 'lineType' | 'stretchShare' | 'stretchSigmaShare'>;
 type Count = Pick<CastObservation, 'wrapsWhole' | 'remainderM' | 'remainderStated'>;
 
@@ -33,6 +34,12 @@ export function stretchOf({ lineType, stretchShare, stretchSigmaShare }: Stretch
 export function countSigmaM(count: Count, kit: Kit): number {
   const carelessM = kit.wrapSigmaShare * lineAWrapM(kit);
   return count.remainderStated ? Math.min(SIGMA.markedRemainderM, carelessM) : carelessM;
+}
+
+/** Line out, metres, from the lead to the rod tip or the clip, stretched as under a cast's pull. */
+export function lineOutM(count: Pick<Count, 'wrapsWhole' | 'remainderM'>, kit: Kit): number {
+  const woundM = wrapsToMetres({ whole: count.wrapsWhole, remainderM: count.remainderM }, lineAWrapM(kit));
+  return woundM * (1 + stretchOf(kit).share);
 }
 
 /**
