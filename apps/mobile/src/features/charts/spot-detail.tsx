@@ -8,7 +8,6 @@ import { Text } from '@/components/text';
 import { MEASURE_PX, space } from '@/constants/layout';
 import { useUnits } from '@/hooks/use-units';
 import { length, percent } from '@/lib/format';
-import { dayName } from '@/lib/format-time';
 import { depthNow, depthShown } from './depth-format';
 import { SectionList } from './section-list';
 import { SectionPicture } from './section-picture';
@@ -37,8 +36,9 @@ export function SpotDetail({ spot, page }: Props) {
         ) : null}
         {spot.bottom ? <Figure figure={capital(BOTTOM_WORDS[spot.bottom])} caption={sureness(spot)} /> : null}
       </View>
+      <Text style={{ maxWidth: MEASURE_PX }}>{`${spot.words}.`}</Text>
       <Text size="small" tone="inkSoft" style={{ maxWidth: MEASURE_PX }}>
-        {provenance(spot, page.chart?.version ?? null)}
+        {provenance(spot)}
       </Text>
       {spot.note ? <Text style={{ maxWidth: MEASURE_PX }}>{spot.note}</Text> : null}
       {spot.section?.length ? (
@@ -76,15 +76,13 @@ function sureness({ grade, bottomConfidence }: SpotView): string {
   return parts.filter(Boolean).join(', ') || 'bottom';
 }
 
-function provenance(spot: SpotView, version: string | null): string {
+function provenance(spot: SpotView): string {
   const parts = [
     spot.quotedFrom === 'cast'
       ? 'From a cast that landed here'
       : spot.quotedFrom === 'chart'
         ? 'Read off the chart'
         : null,
-    spot.surveyedOn && `surveyed ${dayName(spot.surveyedOn)}`,
-    version && `chart ${version}`,
     countedWords(spot),
   ];
   return `${parts.filter(Boolean).join(', ')}.`;
