@@ -6,6 +6,7 @@ import { enterable, startCluster } from './cluster.mjs';
 import { Halt } from './halt.mjs';
 import { tryLock } from './lock.mjs';
 import { ownFolder, root } from './paths.mjs';
+import { postgresBinaries } from './postgres-binaries.mjs';
 import { run } from './run.mjs';
 
 /**
@@ -37,6 +38,7 @@ export async function openDatabase(place, note) {
     return { url: given, lost: undefined, stop: async () => undefined };
   }
   const name = `mereward-${createHash('sha256').update(place.folder).digest('hex').slice(0, 12)}`;
+  await postgresBinaries({ note }); // root's server user comes with them
   const cluster = await startCluster(clusterFolder(place.folder, join('/var/tmp', name)), note);
   const address = join(place.folder, 'database-url');
   const url = cluster.url('mereward');
