@@ -1,3 +1,4 @@
+import { Mark } from '@mereward/db/entities/lakes/mark';
 import { SurveyCast } from '@mereward/db/entities/surveys/survey-cast';
 import { ProblemBody } from '@mereward/shared/problems/problem';
 import {
@@ -271,6 +272,45 @@ describe('a corrected constant', () => {
     expect((await here.people.owner.patch(`/visits/${visitId}/kit`).send(good)).status).toBe(403);
     expect((await elsewhere.people.manager.patch(`/visits/${visitId}/kit`).send(good)).status).toBe(404);
     expect((await aStranger(server).patch(`/visits/${visitId}/kit`).send(good)).status).toBe(401);
+  });
+});
+
+describe('a mark put right after the casts', () => {
+  test('moves them on every page at once, and no observation changes', async () => {
+    const visitId = await openedVisit(joan, water);
+    const kept = await keptCast({ person: joan, water, visitId }, {});
+    const { details } = await server.server.source.manager.findOneByOrFail(Mark, { id: water.mark.id });
+    const moved = {
+      ...details,
+      position: [details.position[0] + 0.0005, details.position[1]] as [number, number],
+    };
+    await server.server.source.manager.update(Mark, { id: water.mark.id }, { details: moved });
+    const bearing = async () => {
+      const [cast] = (await visitOf(visitId)).casts;
+      expect(cast?.observation).toEqual(kept.observation);
+      return cast?.reduced.ok === true ? cast.reduced.sounding.bearingDeg : NaN;
+    };
+    const before = kept.reduced.ok ? kept.reduced.sounding.bearingDeg : NaN;
+    expect(Math.abs((((await bearing()) - before + 540) % 360) - 180)).toBeGreaterThan(5);
+    await keptCast({ person: joan, water, visitId }, {});
+    await server.server.source.manager.update(Mark, { id: water.mark.id }, { details });
+    expect(await bearing()).toBeCloseTo(before, 9);
+  });
+});
+
+describe('a snag', () => {
+  const jolt = { drag: 'solid_stop', drop: 'unsure', cameBack: null } as const;
+
+  test('is called by two solid stops at one place, the first of them too, until one is taken back', async () => {
+    const visitId = await openedVisit(joan, water);
+    const bottoms = async () =>
+      (await visitOf(visitId)).casts.map(({ reduced }) => reduced.ok && reduced.sounding.bottom);
+    await keptCast({ person: joan, water, visitId }, jolt);
+    expect(await bottoms()).toEqual(['unknown']);
+    const second = await keptCast({ person: joan, water, visitId }, jolt);
+    expect(await bottoms()).toEqual(['snag', 'snag']);
+    await joan.delete(`/visits/${visitId}/casts/${second.id}`);
+    expect(await bottoms()).toEqual(['unknown']);
   });
 });
 

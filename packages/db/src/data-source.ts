@@ -22,6 +22,7 @@ import { Chart } from './entities/charts/chart';
 import { AccountsAndFisheries1780000000000 } from './migrations/1780000000000-AccountsAndFisheries';
 import { LakesAndPegs1780000001000 } from './migrations/1780000001000-LakesAndPegs';
 import { SurveysAndCharts1780000002000 } from './migrations/1780000002000-SurveysAndCharts';
+import { ReducedWith1780000003000 } from './migrations/1780000003000-ReducedWith';
 
 const ENTITIES = [
   Account,
@@ -50,6 +51,7 @@ const MIGRATIONS = [
   AccountsAndFisheries1780000000000,
   LakesAndPegs1780000001000,
   SurveysAndCharts1780000002000,
+  ReducedWith1780000003000,
 ];
 
 /** A pool of connections to one database, opened by the caller with `initialize()`. */

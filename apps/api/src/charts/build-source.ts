@@ -5,8 +5,8 @@ import { Lake } from '@mereward/db/entities/lakes/lake';
 import { SurveyCast } from '@mereward/db/entities/surveys/survey-cast';
 import { SurveyVisit } from '@mereward/db/entities/surveys/survey-visit';
 import { civilDay } from '@mereward/shared/time/civil-day';
-import { createHash } from 'node:crypto';
 import { In, IsNull, type EntityManager } from 'typeorm';
+import { digestOf } from '../digest';
 import type { ObservedCast, VisitSite } from '../surveys/reduce-visit';
 import { visitSite } from '../surveys/visit-site';
 
@@ -80,9 +80,7 @@ export function sourceDigest({ lake, contourStepM, visits }: BuildSource): Buffe
       ]),
     })),
   };
-  return createHash('sha256')
-    .update(JSON.stringify(sorted(decides)))
-    .digest();
+  return digestOf(decides);
 }
 
 function stanceOf({ pegs }: VisitSite, id: string): unknown {
@@ -91,14 +89,3 @@ function stanceOf({ pegs }: VisitSite, id: string): unknown {
 }
 
 const markOf = ({ observation: { aim } }: SourceCast): string[] => (aim.by === 'mark' ? [aim.markId] : []);
-
-/** The same value with the keys of every object in order, so that equal things are equal text. */
-function sorted(value: unknown): unknown {
-  if (Array.isArray(value)) return value.map(sorted);
-  if (value === null || typeof value !== 'object') return value;
-  const entries = Object.entries(value).map(([key, each]: [string, unknown]): [string, unknown] => [
-    key,
-    sorted(each),
-  ]);
-  return Object.fromEntries(entries.sort(([a], [b]) => (a < b ? -1 : 1)));
-}

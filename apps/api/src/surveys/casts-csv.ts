@@ -1,10 +1,11 @@
 import { Account } from '@mereward/db/entities/accounts/account';
-import { SurveyCast } from '@mereward/db/entities/surveys/survey-cast';
+import type { SurveyCast } from '@mereward/db/entities/surveys/survey-cast';
 import type { SurveyVisit } from '@mereward/db/entities/surveys/survey-visit';
 import { csvText } from '@mereward/shared/surveys/csv-cells';
-import { In, IsNull } from 'typeorm';
+import { In } from 'typeorm';
 import type { Ctx } from '../ctx';
 import { visitToRead } from './find-visit';
+import { castsToday } from './reduce-again';
 import type { VisitSite } from './reduce-visit';
 import { visitSite } from './visit-site';
 
@@ -58,10 +59,7 @@ const to = (value: number, digits: number): number => Number(value.toFixed(digit
 export async function castsCsv(ctx: Ctx, visitId: string): Promise<{ filename: string; text: string }> {
   const found = await visitToRead(ctx, visitId);
   const site = await visitSite(ctx.tx, found);
-  const casts = await ctx.tx.find(SurveyCast, {
-    where: { visitId, undoneAt: IsNull() },
-    order: { seq: 'ASC' },
-  });
+  const casts = await castsToday(ctx.tx, site);
   const keepers = await ctx.tx.findBy(Account, { id: In(casts.map((cast) => cast.keptBy)) });
   const names = new Map(keepers.map((person) => [person.id, person.name]));
   const rows = casts.map((cast) => {

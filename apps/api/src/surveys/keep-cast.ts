@@ -3,13 +3,14 @@ import { SurveyVisit } from '@mereward/db/entities/surveys/survey-visit';
 import { Problem } from '@mereward/shared/problems/problem';
 import type { CastView, KeepCast } from '@mereward/shared/surveys/contract';
 import { isDeepStrictEqual } from 'node:util';
-import { IsNull, type EntityManager } from 'typeorm';
+import type { EntityManager } from 'typeorm';
 import { orConflict } from '../conflict';
 import { accountOf, type Ctx } from '../ctx';
 import { castView } from './cast-view';
 import { visitToKeep, type VisitFound } from './find-visit';
+import { castsOf, reduceVisitAgain } from './reduce-again';
 import { reduceAt } from './reduce-visit';
-import { visitSite } from './visit-site';
+import { isReducedWith, visitSite } from './visit-site';
 
 /**
  * Keeps one cast exactly as it was observed and answers with its reduction. A cast that can't be reduced is kept
@@ -26,8 +27,11 @@ export async function keepCast(ctx: Ctx, visitId: string, input: KeepCast): Prom
     throw new Problem('invalid', 'That peg is not on this lake', {
       errors: [{ pointer: '/pegId', detail: 'Choose one of the pegs of this lake.' }],
     });
-  const others = await tx.find(SurveyCast, { where: { visitId, pegId: input.pegId, undoneAt: IsNull() } });
   const observed = { ...input, observedAt: new Date(input.observedAt) };
+  const stops = (await castsOf(tx, visitId)).filter(
+    ({ pegId, observation }) => pegId === input.pegId && observation.drag === 'solid_stop',
+  );
+  const seen = stops.map((each) => each.observation);
   const cast = tx.create(SurveyCast, {
     ...observed,
     visitId,
@@ -36,17 +40,15 @@ export async function keepCast(ctx: Ctx, visitId: string, input: KeepCast): Prom
     receivedAt: now,
     keptBy: accountOf(actor),
     undoneAt: null,
-    reduced: reduceAt(
-      site,
-      observed,
-      others.map((each) => each.observation),
-    ),
+    reduced: reduceAt(site, observed, seen),
   });
   await orConflict(
     tx.insert(SurveyCast, cast),
     'survey_cast_pkey',
     'A cast with this id was kept at another visit',
   );
+  const bearsOnOthers = input.observation.drag === 'solid_stop' && stops.length > 0;
+  if (bearsOnOthers || !isReducedWith(site)) await reduceVisitAgain(tx, found);
   return castView(cast);
 }
 

@@ -21,6 +21,7 @@ export async function openVisit(ctx: Ctx, lakeId: string, input: OpenVisit): Pro
     startedAt: new Date(input.startedAt),
     endedAt: null,
     gaugeEndM: null,
+    reducedWith: null,
     version: 1,
     receivedAt: now,
   });

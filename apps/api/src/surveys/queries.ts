@@ -1,13 +1,13 @@
 import { Account } from '@mereward/db/entities/accounts/account';
-import { SurveyCast } from '@mereward/db/entities/surveys/survey-cast';
 import { SurveyVisit } from '@mereward/db/entities/surveys/survey-visit';
 import type { VisitList, VisitWithCasts } from '@mereward/shared/surveys/contract';
-import { In, IsNull } from 'typeorm';
+import { In } from 'typeorm';
 import type { Ctx } from '../ctx';
 import { castView } from './cast-view';
 import { coverageOf } from './coverage';
 import { lakeFor, visitToRead } from './find-visit';
 import { mayKeepCasts } from './policy';
+import { castsToday } from './reduce-again';
 import { visitSite } from './visit-site';
 import { shapeVisit, visitView } from './visit-view';
 
@@ -43,11 +43,8 @@ export async function listVisits(ctx: Ctx, lakeId: string): Promise<VisitList> {
 /** A visit, its casts in the order they were made, and how much of each peg's arc they cover. */
 export async function readVisit(ctx: Ctx, visitId: string): Promise<VisitWithCasts> {
   const found = await visitToRead(ctx, visitId);
-  const casts = await ctx.tx.find(SurveyCast, {
-    where: { visitId, undoneAt: IsNull() },
-    order: { seq: 'ASC' },
-  });
   const site = await visitSite(ctx.tx, found);
+  const casts = await castsToday(ctx.tx, site);
   return {
     visit: await visitView(ctx, found),
     casts: casts.map(castView),

@@ -54,21 +54,14 @@ export function reduceAt(site: VisitSite, cast: ObservedCast, others: readonly C
   return reduceCast(cast.observation, site.visit.kit, castSite);
 }
 
-/** Reduces every cast of a visit, each beside its peg's others. */
+/** Reduces every cast of a visit, each beside its peg's others: of those only solid stops bear on one another. */
 export function reduceAll(site: VisitSite, casts: readonly ObservedCast[]): Map<string, Reduced> {
-  const byPeg = new Map<string, ObservedCast[]>();
-  for (const cast of casts) byPeg.set(cast.pegId, [...(byPeg.get(cast.pegId) ?? []), cast]);
+  const stops = casts.filter((cast) => cast.observation.drag === 'solid_stop');
   const reduced = new Map<string, Reduced>();
   for (const cast of casts) {
-    const others = (byPeg.get(cast.pegId) ?? []).filter((each) => each.id !== cast.id);
-    reduced.set(
-      cast.id,
-      reduceAt(
-        site,
-        cast,
-        others.map((each) => each.observation),
-      ),
-    );
+    const others = stops.filter((each) => each.pegId === cast.pegId && each.id !== cast.id);
+    const seen = others.map((each) => each.observation);
+    reduced.set(cast.id, reduceAt(site, cast, seen));
   }
   return reduced;
 }

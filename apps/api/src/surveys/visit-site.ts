@@ -3,6 +3,7 @@ import { Mark } from '@mereward/db/entities/lakes/mark';
 import { Peg } from '@mereward/db/entities/lakes/peg';
 import { outlineInPlane } from '@mereward/shared/geometry/outline';
 import type { EntityManager } from 'typeorm';
+import { digestOf } from '../digest';
 import { originOfLake } from '../lakes/found';
 import type { VisitFound } from './find-visit';
 import type { VisitSite } from './reduce-visit';
@@ -30,3 +31,22 @@ export async function visitSite(tx: EntityManager, { visit, lake }: VisitFound):
     marks: new Map(marks.map((mark) => [mark.id, mark])),
   };
 }
+
+/** A digest of all that a visit's casts are reduced with: when it differs, they have to be reduced again. */
+export function siteDigest({ visit, lake, gauge, origin, pegs, marks }: VisitSite): Buffer {
+  return digestOf({
+    kit: visit.kit,
+    gauge,
+    origin,
+    outline: lake.details.outline,
+    pegs: [...pegs.values()]
+      .map(({ id, details }) => [id, details.origin, details.originFixedBy, details.originMarked])
+      .sort(),
+    marks: [...marks.values()]
+      .map(({ id, details }) => [id, details.name, details.position, details.sigmaM, details.permanence])
+      .sort(),
+  });
+}
+
+export const isReducedWith = (site: VisitSite): boolean =>
+  site.visit.reducedWith?.equals(siteDigest(site)) === true;

@@ -18,6 +18,7 @@ export class SurveyVisit {
   @Column('text', { name: 'weed_state' }) weedState!: string;
   @Column('jsonb') kit!: Kit;
   @Column('boolean', { name: 'consent_to_publish' }) consentToPublish!: boolean;
+  @Column('bytea', { name: 'reduced_with', nullable: true }) reducedWith!: Buffer | null;
   @Column('int') version!: number;
   @Column('timestamptz', { name: 'received_at' }) receivedAt!: Date;
 }
