@@ -114,7 +114,7 @@ describe('a draft', () => {
   });
 
   test('is seen by staff alone', async () => {
-    const id = await drafting();
+    const id = await drafting({ settle: false });
     for (const at of [`/charts/${id}`, `/charts/${id}/geojson`]) {
       expect((await here.people.bailiff.get(at)).status).toBe(200);
       for (const reader of [
@@ -135,10 +135,11 @@ describe('a draft', () => {
       false,
       false,
     ]);
+    await joan.delete(`/charts/${id}`);
   });
 
   test('is discarded by its builders and leaves its visits', async () => {
-    const id = await drafting();
+    const id = await drafting({ settle: false });
     expect((await here.people.bailiff.delete(`/charts/${id}`)).status).toBe(403);
     expect((await elsewhere.people.manager.delete(`/charts/${id}`)).status).toBe(404);
     expect((await joan.delete(`/charts/${id}`)).status).toBe(204);
@@ -222,12 +223,13 @@ describe('a build', () => {
   });
 
   test('is asked for and cancelled by builders only', async () => {
-    const id = await drafting();
+    const id = await drafting({ settle: false });
     for (const deed of ['rebuild', 'cancel-build', 'submit']) {
       expect((await here.people.owner.post(`/charts/${id}/${deed}`)).status).toBe(403);
       expect((await elsewhere.people.manager.post(`/charts/${id}/${deed}`)).status).toBe(404);
       expect((await aStranger(server).post(`/charts/${id}/${deed}`)).status).toBe(401);
     }
+    await joan.delete(`/charts/${id}`);
   });
 });
 
@@ -409,7 +411,7 @@ describe('a published chart', () => {
     });
     expect(seen.layerNotes.depth).toBe('This chart was withdrawn.');
     expect(ChartView.parse((await joan.get(`/charts/${id}`)).body).depth).not.toBeNull();
-    const draft = await drafting();
+    const draft = await drafting({ settle: false });
     expect((await idris.post(`/charts/${draft}/withdraw`).send({ reason: 'x' })).status).toBe(409);
   });
 });

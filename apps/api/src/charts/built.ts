@@ -1,4 +1,4 @@
-import { QualityView } from '@mereward/shared/charts/contract';
+import { CheckView, QualityView } from '@mereward/shared/charts/contract';
 import { Position } from '@mereward/shared/fisheries/contract';
 import { LakePolygon } from '@mereward/shared/lakes/contract';
 import { Bottom, Grade, Kit } from '@mereward/shared/surveys/contract';
@@ -63,5 +63,6 @@ export const Built = z.object({
     surveyedShare: z.number(),
   }),
   quality: QualityView,
+  checks: z.array(CheckView).default([]), // of what it was made from
 });
 export type Built = z.infer<typeof Built>;

@@ -127,6 +127,7 @@ async function fail(db: DataSource, { chartId, id }: Run, words: string): Promis
 
 /** A run that has said nothing for this long was lost with the process that had it. */
 const LOST_AFTER_S = 15;
+const LOOK_EVERY_S = 5;
 /** A build that takes the process down with it is not tried for ever. */
 const MOST_TRIES = 3;
 
@@ -186,7 +187,7 @@ export function watchBuilds(
 ): () => void {
   const look = () => void takeUpLostBuilds(server).catch(onError);
   look();
-  const timer = setInterval(look, LOST_AFTER_S * 1000);
+  const timer = setInterval(look, LOOK_EVERY_S * 1000);
   timer.unref();
   return () => clearInterval(timer);
 }

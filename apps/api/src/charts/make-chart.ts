@@ -5,6 +5,7 @@ import type { SoundingView } from '@mereward/shared/surveys/contract';
 import { reduceAll } from '../surveys/reduce-visit';
 import type { BuildSource, SourceCast, SourceVisit } from './build-source';
 import type { Built, BuiltSounding } from './built';
+import { sourceChecks, type Reductions } from './source-checks';
 
 /** A chart as its row keeps it. */
 export type MadeChart = {
@@ -25,7 +26,8 @@ export type MadeChart = {
 export function makeChart(source: BuildSource, report: (step: string, share: number) => void): MadeChart {
   const leftOut: Built['leftOut'] = [];
   report('Reducing the casts', 0);
-  const reduced = source.visits.flatMap((visit) => reducedCasts(visit, leftOut));
+  const answers = new Map(source.visits.flatMap(({ site, casts }) => [...reduceAll(site, casts)]));
+  const reduced = source.visits.flatMap((visit) => reducedCasts([visit, answers], leftOut));
   const { lake } = source;
   const outline = source.visits[0]?.site.outline;
   if (!outline) throw new RangeError('The visits of this chart are gone. Make a new draft.');
@@ -54,6 +56,7 @@ export function makeChart(source: BuildSource, report: (step: string, share: num
       hypsography: chart.hypsography,
       figures: shownFigures(chart.figures),
       quality: chart.quality,
+      checks: sourceChecks(source, answers),
     },
     surveyedFrom: days[0] ?? '',
     surveyedTo: days.at(-1) ?? '',
@@ -62,8 +65,10 @@ export function makeChart(source: BuildSource, report: (step: string, share: num
 
 type ReducedCast = { view: SoundingView; built: BuiltSounding };
 
-function reducedCasts(visit: SourceVisit, leftOut: Built['leftOut']): ReducedCast[] {
-  const answers = reduceAll(visit.site, visit.casts);
+function reducedCasts(
+  [visit, answers]: readonly [SourceVisit, Reductions],
+  leftOut: Built['leftOut'],
+): ReducedCast[] {
   return visit.casts.flatMap((cast) => {
     const answer = answers.get(cast.id);
     if (!answer?.ok) {

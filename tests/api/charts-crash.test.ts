@@ -1,0 +1,80 @@
+import { ChartBuild } from '@mereward/db/entities/charts/chart-build';
+import { spawn, type ChildProcess } from 'node:child_process';
+import { once } from 'node:events';
+import { createRequire } from 'node:module';
+import { fileURLToPath, pathToFileURL } from 'node:url';
+import { afterAll, beforeAll, expect, test } from 'vitest';
+import { draftedChart } from '../support/charts';
+import { aServer, type TestServer } from '../support/server';
+import { aLongWater, aSurvey } from '../support/surveys';
+import { aFishery } from '../support/waters';
+
+let server: TestServer;
+const running: ChildProcess[] = [];
+
+beforeAll(async () => {
+  server = await aServer();
+  server.setNow('2027-04-03T12:00:00Z');
+});
+afterAll(async () => {
+  for (const each of running) await killed(each);
+  await server.close();
+});
+
+const entry = fileURLToPath(new URL('../../apps/api/src/main.ts', import.meta.url));
+const loader = pathToFileURL(createRequire(import.meta.url).resolve('tsx')).href;
+
+/** The real server in a process of its own, on the test's database. */
+function aProcess(): ChildProcess {
+  const { databaseUrl, smtpUrl, filesDir } = server.server.config;
+  const child = spawn(process.execPath, ['--import', loader, entry], {
+    env: {
+      ...process.env,
+      DATABASE_URL: databaseUrl,
+      SMTP_URL: smtpUrl ?? '',
+      FILES_DIR: filesDir,
+      WEB_DIR: filesDir,
+      PORT: '0',
+      LOG_LEVEL: 'silent',
+    },
+    stdio: 'ignore',
+  });
+  running.push(child);
+  return child;
+}
+
+async function killed(child: ChildProcess): Promise<void> {
+  if (child.exitCode !== null || child.signalCode !== null) return;
+  const gone = once(child, 'exit');
+  child.kill('SIGKILL');
+  await gone;
+}
+
+async function until(holds: () => Promise<boolean>): Promise<void> {
+  while (!(await holds())) await new Promise((again) => setTimeout(again, 20));
+}
+
+test('a chart whose server is killed outright while it builds is built by the next', async () => {
+  const fishery = await aFishery(server);
+  const water = await aLongWater(server, fishery);
+  const visitId = await aSurvey(fishery.people.head_bailiff, water);
+  const id = await draftedChart(server, {
+    person: fishery.people.head_bailiff,
+    lakeId: water.lake.id,
+    visitIds: [visitId],
+    settle: false,
+  });
+  const build = () => server.server.source.manager.findOneByOrFail(ChartBuild, { chartId: id });
+
+  const first = aProcess();
+  await until(async () => (await build()).state === 'running');
+  await killed(first);
+  const left = await build();
+  expect(left.state).toBe('running');
+
+  aProcess();
+  await until(async () => (await build()).state === 'done');
+  const done = await build();
+  expect(done.attempt).not.toBe(left.attempt);
+  expect(done.tries).toBe(2);
+}, 120_000);
