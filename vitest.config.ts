@@ -1,3 +1,4 @@
+import { fileURLToPath } from 'node:url';
 import { defineConfig } from 'vitest/config';
 
 export default defineConfig({
@@ -8,7 +9,7 @@ export default defineConfig({
           name: 'unit',
           include: ['packages/*/src/**/*.test.ts', 'apps/*/src/**/*.test.ts', 'scripts/**/*.test.ts'],
         },
-        resolve: { alias: { '@': new URL('./apps/mobile/src', import.meta.url).pathname } },
+        resolve: { alias: { '@': fileURLToPath(new URL('./apps/mobile/src', import.meta.url)) } },
       },
       { test: { name: 'architecture', include: ['tests/architecture/**/*.test.ts'] } },
       { test: { name: 'reference', include: ['tests/reference/**/*.test.ts'] } },

@@ -54,14 +54,15 @@ function find(major) {
 /** Debian's package makes and starts a server of its own unless it is told not to; it is asked to for this install only. */
 async function installServer() {
   const setting = '/etc/postgresql-common/createcluster.conf';
-  const kept = join(mkdtempSync(join(tmpdir(), 'createcluster-')), 'createcluster.conf');
+  const keep = mkdtempSync(join(tmpdir(), 'createcluster-'));
+  const kept = join(keep, 'createcluster.conf');
   await installPackages(['postgresql-common'], missing, run);
   asInstaller(`cp '${setting}' '${kept}' && echo 'create_main_cluster = false' >> '${setting}'`);
   try {
     await installPackages(['postgresql'], missing, run);
   } finally {
     asInstaller(`cp '${kept}' '${setting}'`);
-    rmSync(kept, { force: true });
+    rmSync(keep, { recursive: true, force: true });
   }
 }
 
