@@ -18,7 +18,7 @@ const everywhere: readonly Role[] = [
   'angler',
 ];
 const bankRoles: readonly Role[] = ['owner', 'manager', 'head_bailiff', 'bailiff'];
-const officeRoles: readonly Role[] = ['owner', 'manager', 'office'];
+const officeRoles: readonly Role[] = ['owner', 'manager', 'head_bailiff', 'office']; // a head bailiff drafts charts
 
 const places: readonly (Place & { for: readonly Role[]; strangers: boolean })[] = [
   { key: 'water', label: 'Water', href: '/water', holds: ['water'], for: everywhere, strangers: true },
