@@ -11,6 +11,8 @@ import { readGround } from './ground';
 export interface Site {
   url: string;
   databaseUrl: string;
+  /** Moves a clock that is held still (`test.use({ now })`) to another instant. */
+  setNow: (now: string) => void;
   stop: () => Promise<void>;
 }
 
@@ -44,6 +46,10 @@ async function openSite({ name, now }: Wish): Promise<Site> {
   return {
     url: server.url,
     databaseUrl: database.url,
+    setNow(instant) {
+      if (!now) throw new Error('This site keeps the machine’s time: give its file a `now` first.');
+      writeFileSync(clockFile, instant);
+    },
     async stop() {
       await server.stop();
       await database.drop();

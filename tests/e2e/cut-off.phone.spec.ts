@@ -1,0 +1,117 @@
+import type { Page } from '@playwright/test';
+import { VisitWithCasts } from '@mereward/shared/surveys/contract';
+import { keepCast, typeCast } from './support/cast-form';
+import { Asking, aPageOf } from './support/people';
+import { expect, test, type Site } from './support/site';
+import { anOpenVisit, aStoryWater, type StoryWater } from './support/story-water';
+
+const NOW = '2027-04-03T08:30:00Z';
+test.use({ now: NOW });
+
+const CAST = {
+  wraps: '14',
+  landed: 'sharp crack',
+  drags: 'fine rattle',
+  back: 'nothing',
+  pulls: '8',
+};
+
+async function atTheFirstCast(page: Page, site: Site): Promise<{ joan: Asking; visitId: string }> {
+  const water: StoryWater = await aStoryWater(await Asking.as('marian', site));
+  const joan = await Asking.as('joan', site);
+  const visitId = await anOpenVisit(joan, water);
+  await page.goto(`/bank/surveys/${visitId}/cast`);
+  await expect(page.getByRole('heading', { level: 1 })).toHaveText('Cast 1');
+  return { joan, visitId };
+}
+
+const castsOf = async (joan: Asking, visitId: string) =>
+  (await joan.get(`/visits/${visitId}`, VisitWithCasts)).casts;
+
+test('a cast sent without a signal stays typed, says what to do, and is kept once there is one', async ({
+  browser,
+  site,
+}) => {
+  const page = await aPageOf(browser, { who: 'joan', now: NOW });
+  const { joan, visitId } = await atTheFirstCast(page, site);
+  await typeCast(page, CAST);
+  await page.context().setOffline(true);
+  await page.getByRole('button', { name: 'Keep cast 1' }).click();
+  const alert = page.getByRole('alert').filter({ hasText: 'No answer from the server' });
+  await expect(alert).toContainText('What you typed is kept on this device; try again when there is');
+  await expect(page.getByLabel('Float, pulls of 1 ft')).toHaveValue('8');
+  await expect(page.getByRole('radio', { name: 'fine rattle' })).toBeChecked();
+  await page.context().setOffline(false);
+  await keepCast(page, 1);
+  expect(await castsOf(joan, visitId)).toHaveLength(1);
+});
+
+test('a cast whose answer was lost is kept once, sent again or found after a reload', async ({
+  browser,
+  site,
+}) => {
+  const page = await aPageOf(browser, { who: 'joan', now: NOW });
+  const { joan, visitId } = await atTheFirstCast(page, site);
+  let lost = 0;
+  const loseOneAnswer = () =>
+    page.route(
+      '**/api/visits/*/casts',
+      async (route) => {
+        await route.fetch();
+        lost += 1;
+        await route.abort('connectionreset');
+      },
+      { times: 1 },
+    );
+
+  await loseOneAnswer();
+  await typeCast(page, CAST);
+  await page.getByRole('button', { name: 'Keep cast 1' }).click();
+  await expect(page.getByRole('alert').filter({ hasText: 'No answer from the server' })).toBeVisible();
+  await expect.poll(async () => (await castsOf(joan, visitId)).length).toBe(1);
+  await keepCast(page, 1);
+  await expect(page.getByRole('heading', { level: 1 })).toHaveText('Cast 2');
+  expect(await castsOf(joan, visitId)).toHaveLength(1);
+
+  await loseOneAnswer();
+  await typeCast(page, { ...CAST, wraps: '12' });
+  await page.getByRole('button', { name: 'Keep cast 2' }).click();
+  await expect(page.getByRole('alert').filter({ hasText: 'No answer from the server' })).toBeVisible();
+  await page.reload();
+  await expect(page.getByRole('heading', { level: 1 })).toHaveText('Cast 3');
+  await expect(page.getByLabel('Float, pulls of 1 ft')).toHaveValue('');
+  expect(await castsOf(joan, visitId)).toHaveLength(2);
+  expect(lost).toBe(2);
+});
+
+test('a half-typed cast is there again after a reload', async ({ browser, site }) => {
+  const page = await aPageOf(browser, { who: 'joan', now: NOW });
+  await atTheFirstCast(page, site);
+  await typeCast(page, { ...CAST, wraps: '13' });
+  await page.reload();
+  await expect(page.getByLabel('Wraps of 12 ft', { exact: true })).toHaveValue('13');
+  await expect(page.getByRole('radio', { name: 'sharp crack' })).toBeChecked();
+  await expect(page.getByLabel('Float, pulls of 1 ft')).toHaveValue('8');
+});
+
+test('a form sent without a signal keeps every word, over a reload too', async ({ browser, site }) => {
+  const water = await aStoryWater(await Asking.as('marian', site));
+  const page = await aPageOf(browser, { who: 'marian', now: NOW });
+  await page.goto(`/office/lakes/${water.lakeId}/details`);
+  await page.getByLabel('Name', { exact: true }).fill('Wordy Water');
+  await page.getByRole('button', { name: 'Surroundings and emergency' }).click();
+  const wayIn = page.getByLabel('Way in for an ambulance, and boat slip');
+  await wayIn.fill('By the lower gate, over the weir');
+  await page.context().setOffline(true);
+  await page.getByRole('button', { name: 'Keep the details' }).click();
+  await expect(page.getByRole('alert').filter({ hasText: 'No answer from the server' })).toBeVisible();
+  await expect(wayIn).toHaveValue('By the lower gate, over the weir');
+  await page.context().setOffline(false);
+  await page.reload();
+  await expect(page.getByText('What you typed earlier is here again.')).toBeVisible();
+  await expect(page.getByLabel('Name', { exact: true })).toHaveValue('Wordy Water');
+  await page.getByRole('button', { name: 'Keep the details' }).click();
+  await expect(page).toHaveURL(({ pathname }) => pathname === `/office/lakes/${water.lakeId}`);
+  await page.goto(`/office/lakes/${water.lakeId}/details`);
+  await expect(page.getByLabel('Name', { exact: true })).toHaveValue('Wordy Water');
+});
