@@ -11,4 +11,5 @@ export const useLake = (lakeId: string) =>
   useQuery({
     queryKey: lakeKeys.one(lakeId),
     queryFn: ({ signal }) => api.get(`/lakes/${lakeId}`, LakeView, signal),
+    enabled: lakeId !== '', // not known yet
   });

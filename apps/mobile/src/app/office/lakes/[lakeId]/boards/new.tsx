@@ -1,0 +1,1 @@
+export { NewBoardScreen as default } from '@/features/charts/board-form-screen';

@@ -1,0 +1,1 @@
+export { LakeDetailsScreen as default } from '@/features/lakes/lake-details-screen';

@@ -1,0 +1,1 @@
+export { OfficeLakeScreen as default } from '@/features/charts/office-lake-screen';

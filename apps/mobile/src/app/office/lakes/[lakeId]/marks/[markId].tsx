@@ -1,0 +1,1 @@
+export { MarkScreen as default } from '@/features/charts/mark-screen';

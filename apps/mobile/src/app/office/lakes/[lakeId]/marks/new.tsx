@@ -1,0 +1,1 @@
+export { NewMarkScreen as default } from '@/features/charts/mark-screen';

@@ -1,0 +1,1 @@
+export { LakeOutlineScreen as default } from '@/features/charts/lake-outline-screen';

@@ -1,0 +1,1 @@
+export { OfficePegScreen as default } from '@/features/charts/office-peg-screen';

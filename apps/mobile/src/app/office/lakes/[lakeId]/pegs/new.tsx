@@ -1,0 +1,1 @@
+export { NewPegScreen as default } from '@/features/charts/new-peg-screen';

@@ -1,0 +1,1 @@
+export { LakesScreen as default } from '@/features/lakes/lakes-screen';

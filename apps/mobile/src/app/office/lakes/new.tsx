@@ -1,0 +1,1 @@
+export { MakeLakeScreen as default } from '@/features/charts/make-lake-screen';

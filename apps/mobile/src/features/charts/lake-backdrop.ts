@@ -1,0 +1,38 @@
+import { farMarks } from '@mereward/shared/charts/drawing/draw-map';
+import { filled, ruled, stroked } from '@mereward/shared/charts/drawing/mark';
+import { pegMarks } from '@mereward/shared/charts/drawing/shore-marks';
+import { toPlane } from '@mereward/shared/geometry/plane';
+import type { LakeView } from '@mereward/shared/lakes/contract';
+import type { Draw } from '@/features/charts/lake-canvas';
+import { lineOf } from '@/features/charts/outline-drawing';
+import { planeOutline } from '@/features/charts/readied-chart';
+
+type Parts = { water: boolean; exceptPegId?: string | undefined; exceptMarkId?: string | undefined };
+
+/** Shore and islands as lines of the lake's plane. */
+export function waterLines({ details, origin }: Pick<LakeView, 'details' | 'origin'>) {
+  const { shore, islands } = planeOutline(details.outline, origin);
+  return [shore, ...islands].map(lineOf);
+}
+
+/** What stands on a lake already, for a canvas to draw something more on. */
+export function lakeBackdrop(lake: LakeView, { water, exceptPegId, exceptMarkId }: Parts): Draw {
+  const at = (position: LakeView['origin']) => toPlane(lake.origin, position);
+  const lines = waterLines(lake);
+  const pegs = lake.pegs
+    .filter(({ id }) => id !== exceptPegId)
+    .map((peg) => ({ ...peg, ...at(peg.position) }));
+  const marks = lake.marks
+    .filter(({ id }) => id !== exceptMarkId)
+    .map(({ details }) => ({ code: details.code, ...at(details.position) }));
+  return ({ palette, view }) => [
+    ...(water
+      ? [filled(lines, palette.band), { ...stroked(lines, ruled(palette.ink, 1.9)), closed: true }]
+      : []),
+    ...pegMarks(pegs, { palette, view, selectedId: null, taken: [] }),
+    ...farMarks(marks, palette),
+  ];
+}
+
+/** Nothing drawn. */
+export const NO_BACKDROP: Draw = () => [];

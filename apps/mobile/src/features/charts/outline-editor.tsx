@@ -1,0 +1,144 @@
+import { useCallback, useDeferredValue, useMemo, useState } from 'react';
+import { toPlane, type LonLat, type Point } from '@mereward/shared/geometry/plane';
+import { View } from 'react-native';
+import { Button } from '@/components/button';
+import { FieldError } from '@/components/field-frame';
+import { space } from '@/constants/layout';
+import { LakeCanvas, type Draw } from '@/features/charts/lake-canvas';
+import { OutlineFound } from '@/features/charts/outline-found';
+import { OutlineImport } from '@/features/charts/outline-import';
+import { OutlinePoints } from '@/features/charts/outline-points';
+import {
+  frameOf,
+  placeOf,
+  planeSketch,
+  pointsFromPxPerM,
+  sideNear,
+  sketchMarks,
+} from '@/features/charts/outline-drawing';
+import { useSketch } from '@/features/charts/use-sketch';
+import {
+  addPlace,
+  closeRing,
+  insertPlace,
+  mayClose,
+  movePlace,
+  openRingOf,
+  readSketch,
+  removePlace,
+  removeRing,
+  ringName,
+  startIsland,
+  type Sketch,
+} from '@/features/lakes/outline-sketch';
+
+type Props = {
+  sketch: Sketch;
+  onChange: (sketch: Sketch) => void;
+  /** The middle of the sheet drawn on. */
+  origin: LonLat;
+  /** Pegs and marks that stand already. */
+  under: Draw;
+  error?: string | undefined;
+};
+
+const idOf = (ring: number, index: number): string => `${String(ring)}.${String(index)}`;
+const spotOf = (id: string) => {
+  const [ring = 0, index = 0] = id.split('.').map(Number);
+  return { ring, index };
+};
+
+/** Draws a lake's shore and islands: by tapping, by typing each point, or from a file. */
+export function OutlineEditor({ sketch, onChange, origin, under, error }: Props) {
+  const deed = useSketch(sketch, onChange);
+  const { chosen } = deed;
+  const rings = useMemo(() => planeSketch(sketch, origin), [sketch, origin]);
+  const [frame, setFrame] = useState(() => frameOf(rings));
+  const settled = useDeferredValue(sketch);
+  const reading = useMemo(() => readSketch(settled), [settled]);
+  const faults = useMemo(
+    () =>
+      (reading?.findings ?? []).flatMap(({ at, kind }) =>
+        at && kind === 'refused' ? [toPlane(origin, at)] : [],
+      ),
+    [reading, origin],
+  );
+  const fromPxPerM = useMemo(() => pointsFromPxPerM(rings), [rings]);
+  const over = useCallback<Draw>(
+    ({ palette, view }) =>
+      sketchMarks(rings, { palette, chosen, faults, showPoints: view.pxPerM >= fromPxPerM }),
+    [rings, chosen, faults, fromPxPerM],
+  );
+  const handles = rings.flatMap(({ points }, ring) =>
+    points.map((point, index) => ({ ...point, id: idOf(ring, index) })),
+  );
+  const open = openRingOf(sketch);
+
+  const tap = (point: Point, reachM: number): void => {
+    if (sketch.rings.length === 0 || open !== null) {
+      deed.change(addPlace(sketch, placeOf(origin, point)));
+      return;
+    }
+    const side = sideNear(rings, point, reachM);
+    if (!side) deed.setChosen(null);
+    else
+      deed.change(insertPlace(sketch, side, placeOf(origin, side.at)), {
+        ring: side.ring,
+        index: side.index + 1,
+      });
+  };
+  const pick = (id: string): void => {
+    const spot = spotOf(id);
+    if (spot.ring === open && spot.index === 0 && mayClose(sketch)) deed.change(closeRing(sketch));
+    else deed.setChosen(spot);
+  };
+  const replace = (next: Sketch): void => {
+    deed.change(next);
+    setFrame(frameOf(planeSketch(next, origin)));
+  };
+  return (
+    <View style={{ gap: space.medium }}>
+      <OutlineImport onRead={replace} replaces={sketch.rings.length > 0} />
+      <LakeCanvas
+        label="Outline of the lake, to draw on"
+        frame={frame}
+        under={under}
+        over={over}
+        handles={handles}
+        handlesFromPxPerM={fromPxPerM}
+        onTap={tap}
+        onPick={pick}
+        onMove={(id, point, begins) =>
+          deed.drag(movePlace(sketch, spotOf(id), placeOf(origin, point)), begins)
+        }
+        onFit={() => setFrame(frameOf(rings))}
+      />
+      <View style={{ flexDirection: 'row', flexWrap: 'wrap', gap: space.small }}>
+        <Button label="Undo" disabled={!deed.mayUndo} onPress={deed.undo} />
+        {open !== null ? (
+          <Button
+            label="Close the ring"
+            disabled={!mayClose(sketch)}
+            onPress={() => deed.change(closeRing(sketch))}
+          />
+        ) : null}
+        {open === null && sketch.rings.length > 0 ? (
+          <Button label="Add an island" onPress={() => deed.change(startIsland(sketch))} />
+        ) : null}
+        {chosen ? (
+          <Button label="Take this point out" onPress={() => deed.change(removePlace(sketch, chosen))} />
+        ) : null}
+        {chosen && chosen.ring > 0 ? (
+          <Button
+            label={`Take ${ringName(chosen.ring)} away`}
+            kind="danger"
+            onPress={() => deed.change(removeRing(sketch, chosen.ring))}
+          />
+        ) : null}
+      </View>
+      <OutlineFound sketch={settled} reading={reading} />
+      {error ? <FieldError id="outline" words={error} /> : null}
+      <OutlinePoints sketch={sketch} onChange={deed.change} chosen={chosen} />
+    </View>
+  );
+}
