@@ -7,7 +7,7 @@ import { Halt } from './halt.mjs';
 import { run } from './run.mjs';
 
 const debianFolder = '/usr/lib/postgresql';
-const oldestMajor = 14;
+export const oldestMajor = 15;
 
 const missing =
   'PostgreSQL is not installed and can’t be installed from here: install the server (on Debian or Ubuntu: sudo apt-get install postgresql), or set PG_BIN to the folder of its programs, or DATABASE_URL to a database of your own, and start again.';
