@@ -6,8 +6,8 @@ import { ChartList, ChartReview, ChartView } from '@mereward/shared/charts/contr
 import { ProblemBody } from '@mereward/shared/problems/problem';
 import { randomUUID } from 'node:crypto';
 import { afterAll, beforeAll, describe, expect, test } from 'vitest';
-import { draftedChart, publishedChart } from '../support/charts';
-import { aPerson, aStranger, type Person } from '../support/people';
+import { draftedChart } from '../support/charts';
+import { aStranger, type Person } from '../support/people';
 import { aServer, type TestServer } from '../support/server';
 import {
   aCastBody,
@@ -26,7 +26,6 @@ let elsewhere: TestFishery;
 let water: TestWater;
 let surveyVisit: string;
 let joan: Person;
-let idris: Person;
 
 beforeAll(async () => {
   server = await aServer();
@@ -35,7 +34,6 @@ beforeAll(async () => {
   elsewhere = await aFishery(server, { name: 'Upper Sallow' });
   water = await aLongWater(server, here);
   joan = here.people.head_bailiff;
-  idris = here.people.manager;
   surveyVisit = await aSurvey(joan, water);
 });
 afterAll(() => server.close());
@@ -269,149 +267,5 @@ describe('the checks', () => {
     await joan.post(`/visits/${kept}/casts`).send(aCastBody(water));
     expect(await failed()).toEqual(['built', 'consent', 'levels_read']);
     expect((await joan.post(`/charts/${id}/submit`)).status).toBe(409);
-  });
-});
-
-describe('publishing', () => {
-  test('is asked for by mail of those who may approve, and refused to its surveyor and its submitter', async () => {
-    const surveying = await aPerson(server, {
-      name: 'Bea Lund',
-      roles: [
-        { fisheryId: here.id, role: 'bailiff' },
-        { fisheryId: here.id, role: 'manager' },
-      ],
-    });
-    const visitId = await aSurvey(surveying, water);
-    const id = await drafting({ visitIds: [visitId], person: idris });
-    expect((await idris.post(`/charts/${id}/submit`)).status).toBe(200);
-    const mail = await server.mailTo(here.people.owner.email);
-    expect(mail.subject).toContain('Far Ostle: a chart waits for approval');
-    expect(server.mails.filter(({ to }) => to === surveying.email || to === idris.email)).toEqual([]);
-    const own = await surveying.post(`/charts/${id}/approve`);
-    expect(own.status).toBe(403);
-    expect(problem(own.body).title).toMatch(/You surveyed this chart/);
-    expect((await review(id, surveying)).may).toMatchObject({
-      approve: false,
-      approveWhyNot: expect.stringMatching(/surveyed/),
-    });
-    expect(problem((await idris.post(`/charts/${id}/approve`)).body).title).toMatch(
-      /You submitted this chart/,
-    );
-    for (const person of [joan, here.people.office])
-      expect((await person.post(`/charts/${id}/approve`)).status).toBe(403);
-    expect((await elsewhere.people.owner.post(`/charts/${id}/approve`)).status).toBe(404);
-    const answer = await here.people.owner.post(`/charts/${id}/approve`);
-    expect(ChartReview.parse(answer.body).chart).toMatchObject({
-      status: 'published',
-      version: '2027.1',
-      approvedBy: 'The owner',
-    });
-    expect((await server.mailTo(surveying.email)).subject).toContain('chart 2027.1 is published');
-  });
-
-  test('of one chart by two at once is done once; of two charts each gets its number', async () => {
-    const [one, two] = [await drafting(), await drafting()];
-    for (const id of [one, two]) expect((await joan.post(`/charts/${id}/submit`)).status).toBe(200);
-    const both = await Promise.all(
-      [idris, here.people.owner].map((person) => person.post(`/charts/${one}/approve`)),
-    );
-    expect(both.map(({ status }) => status).sort()).toEqual([200, 409]);
-    const three = await drafting();
-    await joan.post(`/charts/${three}/submit`);
-    const pair = await Promise.all([two, three].map((id) => idris.post(`/charts/${id}/approve`)));
-    expect(pair.map(({ status }) => status)).toEqual([200, 200]);
-    const rows = [await rowOf(one), await rowOf(two), await rowOf(three)];
-    expect(rows.map(({ version }) => version)).toEqual([
-      '2027.2',
-      expect.stringMatching(/^2027\.[34]$/),
-      expect.stringMatching(/^2027\.[34]$/),
-    ]);
-    expect(new Set(rows.map(({ version }) => version)).size).toBe(3);
-    expect(rows.filter(({ status }) => status === 'published')).toHaveLength(1);
-    expect(rows[0]).toMatchObject({ status: 'superseded', supersededBy: expect.any(String) });
-  });
-
-  test('needs a submitted chart', async () => {
-    const id = await drafting();
-    expect((await idris.post(`/charts/${id}/approve`)).status).toBe(409);
-    await joan.post(`/charts/${id}/submit`);
-    expect((await joan.post(`/charts/${id}/submit`)).status).toBe(409);
-    await joan.post(`/charts/${id}/rebuild`);
-    expect((await rowOf(id)).status).toBe('draft');
-  });
-
-  test('counts each year anew', async () => {
-    server.setNow('2028-01-01T00:30:00Z');
-    const id = await publishedChart(server, {
-      person: joan,
-      approver: idris,
-      lakeId: water.lake.id,
-      visitIds: [surveyVisit],
-    });
-    server.setNow('2027-04-03T12:00:00Z');
-    expect((await rowOf(id)).version).toBe('2028.1');
-  });
-});
-
-describe('a published chart', () => {
-  let id: string;
-  beforeAll(async () => {
-    id = await publishedChart(server, {
-      person: joan,
-      approver: idris,
-      lakeId: water.lake.id,
-      visitIds: [surveyVisit],
-    });
-  });
-
-  test.each([
-    ['its depths', `UPDATE chart SET depth = '\\x00' WHERE id = $1`],
-    ['its content', `UPDATE chart SET built = '{}' WHERE id = $1`],
-    ['its title', `UPDATE chart SET title = 'x' WHERE id = $1`],
-    ['its version', `UPDATE chart SET version = '2027.99' WHERE id = $1`],
-    ['its datum', `UPDATE chart SET datum_m = 0 WHERE id = $1`],
-    ['its approver', `UPDATE chart SET approved_by = NULL WHERE id = $1`],
-    ['its status back to draft', `UPDATE chart SET status = 'draft' WHERE id = $1`],
-    ['it at all', `DELETE FROM chart WHERE id = $1`],
-  ])('does not let even the database change %s', async (_, sql) => {
-    const before = await digestOf(id);
-    await expect(server.server.source.query(sql, [id])).rejects.toThrow(/published chart/);
-    expect(await digestOf(id)).toBe(before);
-  });
-
-  test('is not touched by a constant corrected later, a rebuild or a discard', async () => {
-    const before = await digestOf(id);
-    const { version, kit } = (await joan.get(`/visits/${surveyVisit}`)).body.visit;
-    expect(
-      (await joan.patch(`/visits/${surveyVisit}/kit`).send({ kit: { ...kit, floatOffsetM: 0.4 }, version }))
-        .status,
-    ).toBe(200);
-    await joan.patch(`/visits/${surveyVisit}/kit`).send({ kit, version: version + 1 });
-    expect((await joan.post(`/charts/${id}/rebuild`)).status).toBe(409);
-    expect((await joan.delete(`/charts/${id}`)).status).toBe(409);
-    await server.settle();
-    expect(await digestOf(id)).toBe(before);
-  });
-
-  test('is withdrawn with a reason by those who approve, and then only says so', async () => {
-    const withdraw = (person: Pick<Person, 'post'>, reason: string) =>
-      person.post(`/charts/${id}/withdraw`).send({ reason });
-    expect((await withdraw(idris, '')).status).toBe(400);
-    expect((await withdraw(joan, 'Board moved')).status).toBe(403);
-    expect((await withdraw(elsewhere.people.owner, 'Board moved')).status).toBe(404);
-    expect((await withdraw(aStranger(server), 'Board moved')).status).toBe(401);
-    expect((await withdraw(idris, 'The gauge board had moved')).status).toBe(200);
-    expect((await withdraw(idris, 'Again')).status).toBe(409);
-    const seen = ChartView.parse((await aStranger(server).get(`/charts/${id}`)).body);
-    expect(seen).toMatchObject({
-      status: 'withdrawn',
-      withdrawnReason: 'The gauge board had moved',
-      depth: null,
-      isobaths: null,
-    });
-    expect(seen.layerNotes.depth).toBe('This chart was withdrawn.');
-    expect(ChartView.parse((await joan.get(`/charts/${id}`)).body).depth).not.toBeNull();
-    const draft = await drafting({ settle: false });
-    expect((await idris.post(`/charts/${draft}/withdraw`).send({ reason: 'x' })).status).toBe(409);
   });
 });
