@@ -26,6 +26,8 @@ export type DraftForm<In extends FieldValues, Out> = UseFormReturn<In, unknown, 
   /** True when the values came from an earlier, unfinished visit. */
   restored: boolean;
   startAfresh: () => void;
+  /** What was refused has since come about by another way: nothing is wrong any more. */
+  settled: () => void;
 };
 
 /**
@@ -67,6 +69,7 @@ export function useDraftForm<In extends FieldValues, Out, Answer>(
     busy: form.formState.isSubmitting,
     problem,
     restored: draft.restored,
+    settled: () => setProblem(null),
     startAfresh: () => {
       draft.settle(start);
       setProblem(null);
