@@ -4,7 +4,7 @@ import { aFan } from '../support/long-water';
 import { keepCast, typeCast } from './support/cast-form';
 import { Asking, aPageOf, signIn } from './support/people';
 import { expect, test } from './support/site';
-import { anOpenVisit, aStoryWater, castMeanwhile, type StoryWater } from './support/story-water';
+import { aStoryWater, castMeanwhile, type StoryWater } from './support/story-water';
 
 /**
  * A peg surveyed on a phone, its chart published by another, and read in July at another level. Expected figures are
@@ -27,11 +27,21 @@ const fan = aFan().filter(
 test('Joan casts from FO7 on her phone and sees each call while she types it', async ({ browser, site }) => {
   water = await aStoryWater(await Asking.as('marian', site));
   const joanAsks = await Asking.as('joan', site);
-  visitId = await anOpenVisit(joanAsks, water);
-  await castMeanwhile(joanAsks, visitId, fan.slice(0, 16));
-
   const page = await aPageOf(browser, { now: SURVEY_DAY });
-  await signIn(page, 'joan', `/bank/surveys/${visitId}/cast`);
+  await signIn(page, 'joan', `/bank/surveys/new?lakeId=${water.lakeId}`);
+  await page.getByLabel('Gauge board FO-G1 reads, m').fill('0.62');
+  await page.getByLabel('Name of the visit').fill('Spring survey');
+  await page.getByRole('radio', { name: 'lead', exact: true }).check();
+  await page.getByRole('radio', { name: /^lead to clip/ }).check();
+  await expect(page.getByRole('radio', { name: '12 ft', exact: true })).toBeChecked();
+  await page.getByLabel('Last checked by tape on').fill('2027-04-03');
+  await expect(page.getByLabel('Float and link above the ring, metres')).toHaveValue('0.25');
+  await page.getByRole('button', { name: 'Open the visit' }).click();
+  await expect(page.getByRole('heading', { level: 1 })).toHaveText('Cast 1');
+  visitId = /surveys\/([^/]+)\/cast/.exec(page.url())?.[1] ?? '';
+
+  await castMeanwhile(joanAsks, visitId, fan.slice(0, 16));
+  await page.reload();
   await expect(page.getByRole('heading', { level: 1 })).toHaveText('Cast 17');
   await expect(page.getByText('Take the marker out before you fish.')).toBeVisible();
   await expect(page.getByRole('button', { name: /^Aim, from peg FO7 pump-house chimney/ })).toBeVisible();
@@ -104,12 +114,12 @@ test('Joan drafts the chart and watches it being built, and may not approve her 
   site,
 }) => {
   site.setNow('2027-04-03T10:40:00Z');
-  const joanAsks = await Asking.as('joan', site);
-  await joanAsks.do('POST', `/visits/${visitId}/close`, {
-    endedAt: '2027-04-03T10:40:00.000Z',
-    gaugeEndM: 0.62,
-  });
   const page = await aPageOf(browser, { who: 'joan', now: '2027-04-03T10:40:00Z' });
+  await page.goto(`/bank/surveys/${visitId}`);
+  await page.getByRole('link', { name: 'Close the visit' }).click();
+  await page.getByLabel('Gauge board FO-G1 reads now, m').fill('0.62');
+  await page.getByRole('button', { name: 'Close the visit' }).click();
+  await expect(page.getByText('closed', { exact: true })).toBeVisible();
   await page.goto(`/office/charts/new?lakeId=${water.lakeId}`);
   await page.getByLabel('Title').fill('Spring survey of FO7');
   await expect(page.getByRole('checkbox', { name: /Spring survey/ })).toBeChecked();
@@ -123,7 +133,7 @@ test('Joan drafts the chart and watches it being built, and may not approve her 
   await expect(page.getByText('waits for approval')).toBeVisible();
   await expect(page.getByText('Stands against publishing')).toHaveCount(0);
   await expect(page.getByText('Not yours to approve')).toBeVisible();
-  await expect(page.getByText(/someone else approves/)).toBeVisible();
+  await expect(page.getByText('The owner or a manager approves charts.')).toBeVisible();
   await expect(page.getByRole('button', { name: 'Approve and publish' })).toHaveCount(0);
 });
 

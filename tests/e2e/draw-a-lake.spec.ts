@@ -1,0 +1,156 @@
+import type { Locator, Page } from '@playwright/test';
+import { FisheryList } from '@mereward/shared/fisheries/contract';
+import { LakeView } from '@mereward/shared/lakes/contract';
+import { join } from 'node:path';
+import { aPhoto } from '../support/pictures';
+import { Asking, aPageOf } from './support/people';
+import { expect, test } from './support/site';
+
+const FILES = join(__dirname, '../reference/fixtures/09_formats/geojson');
+
+async function choose(page: Page, button: string, file: Parameters<Locator['setInputFiles']>[0]) {
+  const chooser = page.waitForEvent('filechooser');
+  await page.getByRole('button', { name: button }).click();
+  await (await chooser).setFiles(file);
+}
+
+type Place = readonly [across: number, down: number];
+
+/** Taps the canvas at shares of its width and height. */
+async function tap(page: Page, canvas: Locator, places: readonly Place[]): Promise<void> {
+  await canvas.scrollIntoViewIfNeeded();
+  const box = await canvas.boundingBox();
+  if (!box) throw new Error('The canvas is not on the screen');
+  const byTouch = await page.evaluate(() => navigator.maxTouchPoints > 0);
+  for (const [across, down] of places) {
+    const [x, y] = [box.x + across * box.width, box.y + down * box.height];
+    if (byTouch) await page.touchscreen.tap(x, y);
+    else await page.mouse.click(x, y);
+  }
+}
+
+async function lakeAt(owner: Asking, page: Page): Promise<LakeView> {
+  const id = /office\/lakes\/([0-9a-f-]{36})/.exec(page.url())?.[1] ?? '';
+  return owner.get(`/lakes/${id}`, LakeView);
+}
+
+test('a shore is read from a file: a fault is refused with its place, a wrong order is mended', async ({
+  browser,
+  site,
+}) => {
+  const page = await aPageOf(browser, { who: 'marian' });
+  await page.goto('/office/lakes/new');
+  await choose(page, 'Read it from a file', join(FILES, 'bowtie.geojson'));
+  await expect(page.getByText('bowtie.geojson can’t be used as it is')).toBeVisible();
+  await expect(page.getByRole('list', { name: 'Found in the file' })).toContainText(
+    'crosses or touches itself',
+  );
+  await expect(page.getByText('Tap along the shore')).toBeVisible();
+
+  await choose(page, 'Read it from a file', join(FILES, 'outer_cw.geojson'));
+  await expect(page.getByText('outer_cw.geojson is read: 8 points')).toBeVisible();
+  await expect(page.getByRole('list', { name: 'Found in the file' }).getByText('mended')).toHaveCount(2);
+  await expect(page.getByRole('status').filter({ hasText: 'Water:' })).toContainText(/2\.9\sha/);
+
+  await page.getByLabel('Name', { exact: true }).fill('Filed Water');
+  await page.getByLabel('Chart datum, metres').fill('0.5');
+  await page.getByRole('button', { name: 'Keep the lake' }).click();
+  await expect(page.getByRole('heading', { level: 1 })).toHaveText('Filed Water');
+  const { areaM2, details } = await lakeAt(await Asking.as('marian', site), page);
+  expect(Math.abs(areaM2 - 29105.7)).toBeLessThan(1);
+  expect(details.outline.coordinates).toHaveLength(2);
+});
+
+test('an owner draws a lake by tapping and gives it a mark, a board, a reading and a peg with a photo', async ({
+  browser,
+  site,
+}) => {
+  test.setTimeout(120_000);
+  const marian = await Asking.as('marian', site);
+  const page = await aPageOf(browser, { who: 'marian' });
+  await page.goto('/office/lakes');
+  await page.getByRole('link', { name: 'Draw a lake' }).click();
+  const sheet = page.getByLabel('Outline of the lake, to draw on');
+  await tap(page, sheet, [
+    [0.15, 0.3],
+    [0.4, 0.15],
+    [0.75, 0.35],
+  ]);
+  await expect(page.getByText('3 points of the shore')).toBeVisible();
+  await page.getByLabel('Name', { exact: true }).fill('Tapped Water');
+  await page.reload();
+  await expect(page.getByText('What you typed earlier is here again.')).toBeVisible();
+  await expect(page.getByText('3 points of the shore')).toBeVisible();
+  await expect(page.getByLabel('Name', { exact: true })).toHaveValue('Tapped Water');
+
+  await page.getByRole('button', { name: 'Keep the lake' }).click();
+  await expect(page.getByText('Close the shore first').first()).toBeVisible();
+  await page.getByRole('button', { name: 'Close the ring' }).click();
+  await expect(page.getByText('Drag a point to move it')).toBeVisible();
+  await page.getByRole('button', { name: 'Undo' }).click();
+  await tap(page, sheet, [[0.2, 0.1]]);
+  await expect(page.getByText(/crosses or touches itself/).first()).toBeVisible();
+  await page.getByRole('button', { name: 'Undo' }).click();
+  await expect(page.getByText(/crosses or touches itself/)).toHaveCount(0);
+  await page.getByRole('button', { name: 'Close the ring' }).click();
+  await expect(page.getByRole('status').filter({ hasText: 'Water:' })).not.toContainText('if it were closed');
+  await page.getByLabel('Chart datum, metres').fill('0.62');
+  await page.getByRole('button', { name: 'Keep the lake' }).click();
+  await expect(page.getByRole('heading', { level: 1 })).toHaveText('Tapped Water');
+  const lake = await lakeAt(marian, page);
+  expect(lake.details.outline.coordinates[0]).toHaveLength(4);
+  const office = `/office/lakes/${lake.id}`;
+
+  await page.getByRole('link', { name: 'Add a mark' }).click();
+  await page.getByLabel('Code').fill('M1');
+  await page.getByLabel('What it is').fill('red barn');
+  await tap(
+    page,
+    page
+      .getByRole('main')
+      .getByLabel(/Tapped Water|M1/)
+      .first(),
+    [[0.3, 0.6]],
+  );
+  await expect(page.getByLabel('Latitude, longitude')).not.toHaveValue('');
+  await page.getByRole('button', { name: 'Keep the mark' }).click();
+  await expect(page).toHaveURL(({ pathname }) => pathname === office);
+  await expect(page.getByText('red barn').first()).toBeVisible();
+
+  await page.getByRole('link', { name: 'Add a board' }).click();
+  await page.getByLabel('Code').fill('TW-G1');
+  const [lon, lat] = lake.details.outline.coordinates[0]?.[0] ?? [0, 0];
+  await page.getByLabel('Latitude, longitude').fill(`${String(lat)}, ${String(lon)}`);
+  await page.getByRole('button', { name: 'Keep the board' }).click();
+  await expect(page.getByRole('heading', { level: 1 })).toHaveText('Gauge board TW-G1');
+  await page.getByLabel('The board reads, metres').fill('0.58');
+  await page.getByRole('button', { name: 'Keep the reading' }).click();
+  await expect(page.getByText(/0\.58\sm is kept/)).toBeVisible();
+
+  await page.goto(`${office}/pegs/new`);
+  await page.getByLabel('Number').fill('TW1');
+  const places = page.getByLabel('Tapped Water: the peg’s place and its water');
+  await tap(page, places, [[0.35, 0.3]]);
+  await expect(page.getByLabel('Origin mark: latitude, longitude')).not.toHaveValue('');
+  await page.getByLabel('Water’s edge: latitude, longitude').fill(`${String(lat)}, ${String(lon)}`);
+  await page.getByLabel('Origin mark: latitude, longitude').fill(`${String(lat)}, ${String(lon)}`);
+  await page.getByRole('button', { name: 'Keep the peg' }).click();
+  await expect(page.getByRole('heading', { level: 1 })).toHaveText('Peg TW1');
+  const photo = { name: 'from-the-dot.jpg', mimeType: 'image/jpeg', buffer: await aPhoto() };
+  await choose(page, 'Choose a photo', photo);
+  await page.getByLabel('Caption').fill('From the dot towards M1');
+  await page.getByRole('button', { name: 'Send the photo' }).click();
+  await expect(page.getByRole('img', { name: 'From the dot towards M1' })).toBeVisible({ timeout: 30_000 });
+  await choose(page, 'Choose a photo', { ...photo, buffer: Buffer.from('no picture at all') });
+  await page.getByRole('button', { name: 'Send the photo' }).click();
+  await expect(page.getByRole('form', { name: 'Add a photo' }).getByRole('alert')).toContainText(
+    /picture|photo/i,
+  );
+
+  const stranger = await aPageOf(browser, {});
+  const { fisheries } = await marian.get('/fisheries', FisheryList);
+  expect(fisheries[0]?.lakes.find(({ name }) => name === 'Tapped Water')).toMatchObject({ pegs: 1 });
+  await stranger.goto(`/water/lakes/${lake.id}`);
+  await expect(stranger.getByText('TW1').first()).toBeVisible();
+  await expect(stranger.getByText(/TW-G1 reads 0\.58/)).toBeVisible();
+});
