@@ -9,22 +9,22 @@ import { Waiting } from '@/components/waiting';
 import { space } from '@/constants/layout';
 import { useUnits } from '@/hooks/use-units';
 import { length } from '@/lib/format';
+import { capital } from './peg-words';
 import { depthNow } from './depth-format';
 import { SectionList } from './section-list';
 import { SectionPicture } from './section-picture';
 import { pointAtLineOut } from './section-words';
-import { SECTION_TO_M } from './use-cast';
 
 type Props = { tool: ReturnType<typeof useCast>; raisedM: number; when: string };
 
 /** The drawn cast in figures: where to, how much line, what lies under its end, and the bed on the way. */
 export function CastPanel({ tool, raisedM, when }: Props) {
   const units = useUnits();
-  const { settled, section, points, aim } = tool;
+  const { settled, mostM, section, points, aim } = tool;
   if (!settled) return null;
   const wraps = settled.lineOutM / units.stickSpacingM;
   const end = pointAtLineOut(points, settled.lineOutM);
-  const mostWraps = Math.floor(SECTION_TO_M / units.stickSpacingM);
+  const mostWraps = Math.max(1, Math.floor(mostM / units.stickSpacingM));
   return (
     <View style={{ gap: space.medium }}>
       <Stepper
@@ -62,7 +62,7 @@ export function CastPanel({ tool, raisedM, when }: Props) {
             />
             {end.bottom ? (
               <Figure
-                figure={end.bottom === 'clear' ? 'clear' : BOTTOM_GLYPHS[end.bottom].words}
+                figure={capital(end.bottom === 'clear' ? 'clear' : BOTTOM_GLYPHS[end.bottom].words)}
                 caption="bottom there"
               />
             ) : null}

@@ -2,7 +2,7 @@ import { useMemo, useState } from 'react';
 import type { ChartView } from '@mereward/shared/charts/contract';
 import type { DrawnCast } from '@mereward/shared/charts/drawing/cast-marks';
 import type { Point } from '@mereward/shared/geometry/plane';
-import { useWindowDimensions, View } from 'react-native';
+import { ScrollView, useWindowDimensions, View } from 'react-native';
 import { Text } from '@/components/text';
 import { space } from '@/constants/layout';
 import { useWide } from '@/hooks/use-wide';
@@ -12,11 +12,12 @@ import { shownLayers } from './chart-layers';
 import { ChartMap } from './chart-map';
 import { LayerReasons, LayerToggles, useLevelWords } from './layer-toggles';
 import type { MapContent } from './map-layers';
+import { sharedLetters } from './peg-words';
 import { PlaceReading } from './place-reading';
 import { useChartContent } from './use-chart-content';
 
 const PHONE_SHARE = 0.56; // of the screen's height
-const WIDE_LEAST_PX = 320;
+const WIDE_LEAST_PX = 430;
 
 type Props = {
   chart: ChartView;
@@ -48,12 +49,12 @@ export function ChartPanel({ chart, pegId, onPeg, spots, spotId = null, cast = n
     />
   );
   const padded = { paddingHorizontal: space.page, gap: space.small } as const;
-  return (
-    <View style={{ flexGrow: 1, flexShrink: 1, minHeight: 0, gap: space.small }}>
+  const sheet = (
+    <View style={{ flexGrow: 1, gap: space.small }}>
       <View style={padded}>
         <LayerToggles chart={chart} />
       </View>
-      <View style={wide ? { flex: 1, minHeight: WIDE_LEAST_PX } : { height: height * PHONE_SHARE }}>
+      <View style={wide ? { flexGrow: 1, minHeight: WIDE_LEAST_PX } : { height: height * PHONE_SHARE }}>
         {map}
       </View>
       <View style={[padded, { paddingBottom: space.medium }]}>
@@ -66,7 +67,7 @@ export function ChartPanel({ chart, pegId, onPeg, spots, spotId = null, cast = n
           />
         ) : (
           <Text size="small" tone="inkSoft">
-            {layers ? 'Touch the water to read it; touch a peg to choose it.' : 'Touch a peg to choose it.'}
+            {hint(layers !== null, sharedLetters(chart.pegs.map(({ number }) => number)))}
           </Text>
         )}
         <ChartKey ground={content.ground} bottom={content.bottom} />
@@ -75,4 +76,17 @@ export function ChartPanel({ chart, pegId, onPeg, spots, spotId = null, cast = n
       </View>
     </View>
   );
+  if (!wide) return sheet;
+  return (
+    <ScrollView style={{ flex: 1 }} contentContainerStyle={{ flexGrow: 1 }}>
+      {sheet}
+    </ScrollView>
+  );
+}
+
+function hint(hasLayers: boolean, letters: string): string {
+  const touch = hasLayers
+    ? 'Touch the water to read it; touch a peg to choose it.'
+    : 'Touch a peg to choose it.';
+  return letters ? `${touch} Pegs stand here without their letters ${letters}.` : touch;
 }

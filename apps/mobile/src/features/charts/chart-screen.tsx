@@ -23,7 +23,7 @@ function ChartSheet({ chart, pegId }: { chart: ChartView; pegId: string | null }
   const versions = useLakeCharts(chart.lakeId);
   const { today } = shownLayers.use();
   const peg = useMemo(() => chart.pegs.find(({ id }) => id === pegId) ?? null, [chart, pegId]);
-  const tool = useCast(chart.depth ? peg : null);
+  const tool = useCast(chart, chart.depth ? peg : null);
   const nowM = raisedNowM(chart);
   const isToday = today && nowM !== null;
   const choose = (peg: string): void => router.setParams({ peg });

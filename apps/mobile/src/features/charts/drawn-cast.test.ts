@@ -1,5 +1,5 @@
 import { expect, test } from 'vitest';
-import { aimedAt, drawnCast, lineOutAt } from './drawn-cast';
+import { aimedAt, drawnCast, lineOutAt, openWaterM } from './drawn-cast';
 
 const from = { xM: 0, yM: 0 };
 const points = Array.from({ length: 21 }, (_, i) => ({
@@ -29,4 +29,20 @@ test('before the section is here the cast has no ticks', () => {
     rangeM: 30,
     wrapRangesM: [],
   });
+});
+
+const square = (from: number, to: number) => [
+  { xM: from, yM: from },
+  { xM: to, yM: from },
+  { xM: to, yM: to },
+  { xM: from, yM: to },
+];
+
+test('a cast ends where its line meets land: an island, the far bank, or the bank it points at', () => {
+  const lake = { shore: square(0, 60), islands: [[...square(25, 35)].reverse()] };
+  const stance = { xM: -1, yM: 30 };
+  expect(openWaterM(lake, stance, { bearingDeg: 90, mostM: 100 })).toBe(26);
+  expect(openWaterM(lake, { xM: -1, yM: 10 }, { bearingDeg: 90, mostM: 100 })).toBe(61);
+  expect(openWaterM(lake, { xM: -1, yM: 10 }, { bearingDeg: 90, mostM: 40 })).toBe(40);
+  expect(openWaterM(lake, stance, { bearingDeg: 270, mostM: 100 })).toBe(5);
 });

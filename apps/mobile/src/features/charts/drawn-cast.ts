@@ -1,7 +1,8 @@
 import type { SectionPoint } from '@mereward/shared/charts/contract';
 import type { DrawnCast } from '@mereward/shared/charts/drawing/cast-marks';
 import { recastEllipse } from '@mereward/shared/charts/recast-ellipse';
-import { distanceBetweenM, planeBearingDeg, type Point } from '@mereward/shared/geometry/plane';
+import { distanceBetweenM, planeBearingDeg, pointAlong, type Point } from '@mereward/shared/geometry/plane';
+import { insideOutline, type Outline } from '@mereward/shared/geometry/polygon';
 import { pointAtLineOut, wrapRangesM } from './section-words';
 
 /** A cast the reader draws: where to, and how much line. Bearing in whole and half degrees, so that it can be said. */
@@ -41,4 +42,23 @@ export function drawnCast(
     wrapRangesM: wrapRangesM(points, stickSpacingM),
     ellipse: recastEllipse(aimed.bearingDeg, rangeM),
   };
+}
+
+const LOOK_STEP_M = 0.5;
+const STANCE_M = 8; // a stance may lie this far back from the water
+
+/** How far a cast on a bearing goes before it meets land again, metres; `mostM` on open water. */
+export function openWaterM(
+  outline: Outline,
+  from: Point,
+  { bearingDeg, mostM }: { bearingDeg: number; mostM: number },
+): number {
+  let wet = false;
+  for (let rangeM = 0; rangeM <= mostM; rangeM += LOOK_STEP_M) {
+    const onWater = insideOutline(outline, pointAlong(from, bearingDeg, rangeM));
+    if (wet && !onWater) return Math.max(LEAST_M, Math.ceil(rangeM));
+    if (!wet && rangeM > STANCE_M && !onWater) return LEAST_M; // it points at the bank
+    wet = onWater;
+  }
+  return mostM;
 }

@@ -53,17 +53,20 @@ type Page = { widthPx: number; heightPx: number };
 /** An extract is this wide at least; no more of it may show. */
 const EXTRACT_ACROSS_M = 116;
 
+/** Below the peg there's room for its number and the scale. */
+const FOOT_PX = 74;
+
 /** Looking out from the peg: it stands at the foot of the picture, its water above it. */
 export function outlookView(extract: Extract, reachM: number, { widthPx, heightPx }: Page): View {
   const pxPerM = Math.max(
-    Math.min(heightPx / (reachM + 22), widthPx / (reachM * 0.9)),
+    Math.min((heightPx - FOOT_PX) / reachM, widthPx / (reachM * 0.9)),
     widthPx / EXTRACT_ACROSS_M,
   );
   return {
     widthPx,
     heightPx,
     pxPerM,
-    centre: pointAlong(extract.originM, extract.facingDeg, heightPx / 2 / pxPerM - 12),
+    centre: pointAlong(extract.originM, extract.facingDeg, (heightPx / 2 - FOOT_PX) / pxPerM),
     turnDeg: -extract.facingDeg,
   };
 }

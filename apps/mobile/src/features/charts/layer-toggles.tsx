@@ -28,11 +28,24 @@ export function LayerToggles({ chart }: { chart: ChartView }) {
   );
 }
 
+const LAYER_NAMES = { depth: 'Depth', bottom: 'Bottom', spots: 'Spots', soundings: 'Soundings' } as const;
+
+/** "Spots, soundings: shown to this fishery's members." – each reason once, with the layers it is about. */
+export function layerReasons(notes: ChartView['layerNotes']): string[] {
+  const byWords = new Map<string, string[]>();
+  for (const layer of ['depth', 'bottom', 'spots', 'soundings'] as const) {
+    const words = notes[layer];
+    if (words === null) continue;
+    byWords.set(words, [...(byWords.get(words) ?? []), LAYER_NAMES[layer]]);
+  }
+  return [...byWords].map(
+    ([words, names]) => `${names.join(', ')}: ${words.charAt(0).toLowerCase()}${words.slice(1)}`,
+  );
+}
+
 /** Why something is missing from the chart for this reader. */
 export function LayerReasons({ notes }: { notes: ChartView['layerNotes'] }) {
-  const reasons = [...new Set([notes.depth, notes.bottom, notes.soundings])].filter(
-    (words) => words !== null,
-  );
+  const reasons = layerReasons(notes);
   if (reasons.length === 0) return null;
   return (
     <View style={{ gap: space.hair }}>

@@ -13,8 +13,9 @@ import type { Mark } from '@mereward/shared/charts/drawing/mark';
 import type { Palette } from '@mereward/shared/charts/drawing/palette';
 import { pegMarks, type DrawnPeg } from '@mereward/shared/charts/drawing/shore-marks';
 import { PLAIN_SVG, toSvg } from '@mereward/shared/charts/drawing/to-svg';
-import type { View } from '@mereward/shared/charts/drawing/view';
+import { toPage, type View } from '@mereward/shared/charts/drawing/view';
 import { grownView } from '@mereward/shared/charts/drawing/view-moves';
+import { distanceBetweenM } from '@mereward/shared/geometry/plane';
 import { stickWords } from '@mereward/shared/charts/spot-words';
 import { isobathFigure } from './depth-format';
 import { OVERSCAN } from './map-surface-props';
@@ -55,7 +56,21 @@ export function baseLayer(content: MapContent, { view, palette, unit }: Pen): st
       selectedSpotId: null,
     },
   );
-  return svgOf(grown, [...marks, ...farMarks(content.marks, palette)], 'base');
+  return svgOf(grown, [...marks, ...farMarks(freeMarks(content, view), palette)], 'base');
+}
+
+const CROWDED_PX = 34;
+
+/** Far-bank marks that stand neither on a peg's number nor under the scale bar. */
+function freeMarks({ marks, pegs }: MapContent, view: View): MapContent['marks'] {
+  const crowdedM = CROWDED_PX / view.pxPerM;
+  const underScale = ({ xM, yM }: { xM: number; yM: number }): boolean => {
+    const { x, y } = toPage(view, xM, yM);
+    return y > view.heightPx - 2 * CROWDED_PX && x < view.widthPx * 0.7;
+  };
+  return marks.filter(
+    (mark) => !underScale(mark) && pegs.every((peg) => distanceBetweenM(peg, mark) > crowdedM),
+  );
 }
 
 export function chosenLayer(content: MapContent, chosen: MapChosen, { view, palette }: Pen): string {

@@ -17,6 +17,7 @@ import { CardButton } from './card-button';
 import { ChartCaption } from './chart-caption';
 import { CountConverter } from './count-converter';
 import { ExtractMap } from './extract-map';
+import { layerReasons } from './layer-toggles';
 import { pegDetailsOf } from './peg-details';
 import { PegEmergency } from './peg-emergency';
 import { GettingThere, ThePeg } from './peg-facts';
@@ -31,7 +32,7 @@ function InFront({ page }: { page: PegPageView }) {
   const spots = page.spots ?? [];
   const spot = spots.find(({ id }) => id === spotId) ?? spots[0] ?? null;
   const water = { levelM: page.levelNow?.levelM ?? null, datumM: page.chart?.datumM ?? 0 };
-  const reasons = [...new Set(Object.values(page.layerNotes))].filter((words) => words !== null);
+  const reasons = layerReasons(page.layerNotes);
   return (
     <View style={{ gap: space.page }}>
       <View style={{ marginHorizontal: -space.page }}>

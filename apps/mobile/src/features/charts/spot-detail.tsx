@@ -9,13 +9,12 @@ import { MEASURE_PX, space } from '@/constants/layout';
 import { useUnits } from '@/hooks/use-units';
 import { length, percent } from '@/lib/format';
 import { depthNow, depthShown } from './depth-format';
+import { capital } from './peg-words';
 import { SectionList } from './section-list';
 import { SectionPicture } from './section-picture';
 import { aimWords, countedWords, ownCountWords } from './spot-words';
 
 type Props = { spot: SpotView; page: Pick<PegPageView, 'chart' | 'levelNow' | 'rigCaution'> };
-
-const capital = (words: string): string => words.charAt(0).toUpperCase() + words.slice(1);
 
 /** One spot in large figures: how to reach it, how deep today, what bottom, how sure, and the bed on the way. */
 export function SpotDetail({ spot, page }: Props) {
@@ -72,9 +71,15 @@ function spread({ depthSigmaM }: SpotView, when: string, words: (lengthM: number
 }
 
 function sureness({ grade, bottomConfidence }: SpotView): string {
-  const parts = [grade && `grade ${grade}`, bottomConfidence !== null && `${percent(bottomConfidence)} sure`];
+  const parts = [
+    grade && `grade ${grade}`,
+    bottomConfidence !== null && `${sureWords(bottomConfidence)} sure`,
+  ];
   return parts.filter(Boolean).join(', ') || 'bottom';
 }
+
+/** Nothing on a lake bed is wholly sure. */
+const sureWords = (share: number): string => (share > 0.99 ? `over ${percent(0.99)}` : percent(share));
 
 function provenance(spot: SpotView): string {
   const parts = [

@@ -19,16 +19,16 @@ const useStyles = themed((c) => ({
   },
   row: {
     minHeight: target.plain,
-    flexDirection: 'row',
-    alignItems: 'center',
-    gap: space.small,
+    justifyContent: 'center',
     paddingVertical: space.small,
     borderBottomWidth: 1,
     borderBottomColor: c.rule,
   },
+  line: { flexDirection: 'row', alignItems: 'baseline', gap: space.small },
   chosen: { backgroundColor: c.floatTint },
-  name: { flex: 2, minWidth: 0 },
-  figure: { flex: 1, textAlign: 'right' },
+  name: { flex: 1, minWidth: 0 },
+  figure: { width: 76, textAlign: 'right' },
+  bottom: { textAlign: 'right' },
 }));
 
 type Props = {
@@ -56,34 +56,36 @@ export function SpotsTable({ spots, spotId, onSpot, water }: Props) {
         <Text size="small" tone="inkSoft" style={styles.figure}>
           {water.levelM === null ? 'at datum' : 'today'}
         </Text>
-        <Text size="small" tone="inkSoft" style={styles.figure}>
-          bottom
-        </Text>
       </View>
       <View role="radiogroup" aria-label="Spots from this peg">
         {spots.map((spot) => {
           const bottom = spot.bottom === null ? '' : BOTTOM_WORDS[spot.bottom];
           const chosen = spot.id === spotId;
+          const said = [spot.name, `${ownCount(spot, units)} wraps`, aimWords(spot), depth(spot), bottom];
           return (
             <Pressable
               key={spot.id}
               role="radio"
               aria-checked={chosen}
-              aria-label={[spot.name, `${ownCount(spot, units)} wraps`, aimWords(spot), depth(spot), bottom]
-                .filter(Boolean)
-                .join(', ')}
+              aria-label={said.filter(Boolean).join(', ')}
               onPress={() => onSpot(spot.id)}
               style={[styles.row, chosen && styles.chosen]}
             >
-              <View style={styles.name}>
-                <Text weight={chosen ? 'semibold' : 'regular'}>{spot.name}</Text>
-                <Text size="small" tone="inkSoft">
+              <View style={styles.line}>
+                <Text weight={chosen ? 'semibold' : 'regular'} style={styles.name}>
+                  {spot.name}
+                </Text>
+                <Text style={styles.figure}>{ownCount(spot, units)}</Text>
+                <Text style={styles.figure}>{depth(spot)}</Text>
+              </View>
+              <View style={styles.line}>
+                <Text size="small" tone="inkSoft" style={styles.name}>
                   {aimWords(spot)}
                 </Text>
+                <Text size="small" tone="inkSoft" style={styles.bottom}>
+                  {bottom}
+                </Text>
               </View>
-              <Text style={styles.figure}>{ownCount(spot, units)}</Text>
-              <Text style={styles.figure}>{depth(spot)}</Text>
-              <Text style={styles.figure}>{bottom}</Text>
             </Pressable>
           );
         })}

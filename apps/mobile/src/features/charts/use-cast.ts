@@ -3,29 +3,35 @@ import type { ChartView, SectionPoint } from '@mereward/shared/charts/contract';
 import type { Point } from '@mereward/shared/geometry/plane';
 import { useUnits } from '@/hooks/use-units';
 import { useSection } from './api';
-import { aimedAt, drawnCast, lineOutAt, type AimedCast } from './drawn-cast';
+import { aimedAt, drawnCast, lineOutAt, openWaterM, type AimedCast } from './drawn-cast';
+import { planeOutline } from './readied-chart';
 
 const USUAL_WRAPS = 10;
 /** How far a section is read, metres: the longest cast a fishery may allow is a good deal less. */
-export const SECTION_TO_M = 100;
+const SECTION_TO_M = 100;
 const NO_POINTS: readonly SectionPoint[] = [];
 
 type Peg = ChartView['pegs'][number];
 
-/** A cast drawn from the chosen peg: by a drag on the map, or by choosing bearing and wraps. */
-export function useCast(peg: Peg | null) {
+/** A cast drawn from the chosen peg, as far as land: by a drag on the map, or by choosing bearing and wraps. */
+export function useCast(chart: ChartView, peg: Peg | null) {
   const { stickSpacingM } = useUnits();
+  const outline = useMemo(() => planeOutline(chart.outline, chart.origin), [chart]);
   const [aims, setAims] = useState<Record<string, AimedCast>>({});
   const [dragged, setDragged] = useState<AimedCast | null>(null);
   const own = peg ? aims[peg.id] : undefined;
+  const bearingDeg = own?.bearingDeg ?? Math.round(peg?.facingDeg ?? 0) % 360;
+  const toM = useMemo(
+    () => (peg ? openWaterM(outline, peg, { bearingDeg, mostM: SECTION_TO_M }) : 0),
+    [outline, peg, bearingDeg],
+  );
+  const section = useSection(peg ? { pegId: peg.id, bearingDeg, toM } : null);
+  const points = section.data?.points ?? NO_POINTS;
   const settled = useMemo((): AimedCast | null => {
     if (!peg) return null;
-    return own ?? { bearingDeg: Math.round(peg.facingDeg) % 360, lineOutM: USUAL_WRAPS * stickSpacingM };
-  }, [peg, own, stickSpacingM]);
-  const section = useSection(
-    peg && settled ? { pegId: peg.id, bearingDeg: settled.bearingDeg, toM: SECTION_TO_M } : null,
-  );
-  const points = section.data?.points ?? NO_POINTS;
+    const mostM = points.at(-1)?.lineOutM ?? toM;
+    return { bearingDeg, lineOutM: Math.min(own?.lineOutM ?? USUAL_WRAPS * stickSpacingM, mostM) };
+  }, [peg, own, bearingDeg, points, toM, stickSpacingM]);
   const cast = useMemo(() => {
     const aimed = dragged ?? settled;
     if (!peg || !aimed) return null;
@@ -40,5 +46,5 @@ export function useCast(peg: Peg | null) {
     setDragged(done ? null : aimed);
     if (done) aim({ ...aimed, lineOutM: points.length ? lineOutAt(points, aimed.lineOutM) : aimed.lineOutM });
   };
-  return { settled, cast, section, points, aim, drag };
+  return { settled, mostM: points.at(-1)?.lineOutM ?? toM, cast, section, points, aim, drag };
 }

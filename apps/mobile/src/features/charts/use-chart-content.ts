@@ -6,7 +6,14 @@ import { useUnits } from '@/hooks/use-units';
 import type { ShownLayers } from './chart-layers';
 import { stepFor } from './depth-format';
 import type { MapContent } from './map-layers';
+import { sharedLetters } from './peg-words';
 import { bottomOf, groundOfChart, layersOf, raisedNowM } from './readied-chart';
+
+/** Pegs as a map numbers them. */
+export function pegsForMap<P extends { number: string }>(pegs: readonly P[]): P[] {
+  const letters = sharedLetters(pegs.map(({ number }) => number));
+  return pegs.map((peg) => ({ ...peg, number: peg.number.slice(letters.length) }));
+}
 
 export type ChartContent = {
   content: MapContent;
@@ -43,7 +50,7 @@ export function useChartContent(
       ground,
       bottom: allBottom,
       soundings: shown.soundings ? (chart.soundings ?? []) : [],
-      pegs: chart.pegs,
+      pegs: pegsForMap(chart.pegs),
       marks: chart.marks,
       spots,
     }),

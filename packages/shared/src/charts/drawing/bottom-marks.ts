@@ -11,8 +11,8 @@ import { fromPage, toPage, type PagePoint, type View } from './view';
 import { valueAt } from './water-raster';
 
 /** Below this the chart is guessing more than telling: the pattern thins out to a hint. */
-export const SPARSE_BELOW = 0.6;
-const SPARSE_KEPT = 0.3;
+export const SPARSE_BELOW = 0.55;
+const SPARSE_KEPT = 0.4;
 
 /** Places of the lattice in view, spaced so that zooming keeps them where they are: the gap is a power of two metres. */
 function* latticeIn(view: View, gapPx: number, shape: { jitter: number; rows: boolean }) {

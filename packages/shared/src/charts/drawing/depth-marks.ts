@@ -68,23 +68,26 @@ export function dryMarks(ground: Ground, palette: Palette, view: View): Mark[] {
   return [edge, ...wordsIn(areas, { words: 'dry bank', palette, view })];
 }
 
-/** Lines at 45° on the page over the areas' own box, a fixed number of px apart and fixed to the lake. */
+/** Lines at 45° on the page, however the map is turned, over the areas' own box; fixed to the lake. */
 function diagonals(areas: readonly Line[], view: View): Line[] {
-  const gapM = (RULE_GAP_PX * Math.SQRT2) / view.pxPerM;
-  let [west, east, south, north] = [Infinity, -Infinity, Infinity, -Infinity];
+  const gapM = RULE_GAP_PX / view.pxPerM;
+  const turn = ((45 + view.turnDeg) * Math.PI) / 180; // of the lines, counter-clockwise from the plane's east
+  const [cos, sin] = [Math.cos(turn), Math.sin(turn)];
+  let [fromAlong, toAlong, fromAcross, toAcross] = [Infinity, -Infinity, Infinity, -Infinity];
   for (const area of areas) {
     for (let i = 0; i + 1 < area.length; i += 2) {
-      west = Math.min(west, area[i]!);
-      east = Math.max(east, area[i]!);
-      south = Math.min(south, area[i + 1]!);
-      north = Math.max(north, area[i + 1]!);
+      const along = area[i]! * cos + area[i + 1]! * sin;
+      const across = area[i + 1]! * cos - area[i]! * sin;
+      fromAlong = Math.min(fromAlong, along);
+      toAlong = Math.max(toAlong, along);
+      fromAcross = Math.min(fromAcross, across);
+      toAcross = Math.max(toAcross, across);
     }
   }
+  const at = (along: number, across: number) => [along * cos - across * sin, along * sin + across * cos];
   const lines: Line[] = [];
-  const span = north - south;
-  const first = Math.floor((west - north) / gapM) * gapM;
-  for (let offset = first; offset <= east - south; offset += gapM) {
-    lines.push([south + offset, south, south + offset + span, north]);
+  for (let across = Math.ceil(fromAcross / gapM) * gapM; across <= toAcross; across += gapM) {
+    lines.push([...at(fromAlong, across), ...at(toAlong, across)]);
   }
   return lines;
 }

@@ -66,6 +66,7 @@ describe('a chart made ready', () => {
     expect(low.levelsM).toEqual([0.5, 1]);
     const dry = (xM: number, yM: number) => low.dry.filter((ring) => inside(ring, xM, yM)).length % 2 === 1;
     expect(dry(20, 3)).toBe(true); // 0.3 m at datum
+    expect(dry(36, 36)).toBe(false); // nobody surveyed it
     expect(dry(20, 20)).toBe(false);
     expect(groundAt(0).dry).toEqual([]);
   });

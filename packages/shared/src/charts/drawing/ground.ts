@@ -96,8 +96,15 @@ function unsurveyedAreas(depth: Grid, inWater: Uint8Array): Line[] {
   return deeperRegions({ ...depth, values: soft.values }, [PAPER_FROM])[1]?.lines ?? [];
 }
 
-/** Surveyed bed at or above the water's surface; land counts with it so that the shore makes no edge. */
+/** Land carried on from a dry margin, so that the shore makes no edge, cells. */
+const DRY_SPREAD_CELLS = 2;
+
+/** Surveyed bed at or above the water's surface, and a little of the land beside it, which the clip takes away. */
 function dryAreas(drawn: Grid, inWater: Uint8Array): Line[] {
-  const height = drawn.values.map((value, i) => (isSurveyed(value) ? -value : inWater[i] ? Number.NaN : 0));
-  return deeperRegions({ ...drawn, values: height }, [0])[1]?.lines ?? [];
+  const { columns, rows } = drawn;
+  const height = drawn.values.map((value) => -value);
+  const spread = height.slice();
+  spreadInto({ values: spread, columns, rows }, DRY_SPREAD_CELLS);
+  const values = height.map((own, i) => (inWater[i] ? own : spread[i]!));
+  return deeperRegions({ ...drawn, values }, [0])[1]?.lines ?? [];
 }

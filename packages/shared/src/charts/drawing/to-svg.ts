@@ -72,7 +72,7 @@ function textElement(step: TextStep): string {
   const weight = step.bold ? ' font-weight="600"' : '';
   const slant = step.slanted ? ' font-style="italic"' : '';
   const halo = step.halo
-    ? ` stroke="${step.halo}" stroke-width="${figure(sizePx * 0.28)}" paint-order="stroke"`
+    ? ` stroke="${step.halo}" stroke-width="${figure(sizePx * 0.42)}" paint-order="stroke"`
     : '';
   const turn = turnDeg ? ` transform="rotate(${figure(turnDeg)} ${figure(x)} ${figure(y)})"` : '';
   return (

@@ -63,7 +63,7 @@ export function fitView(lines: readonly Line[], page: PageSize, turnDeg: number)
   return { widthPx: page.widthPx, heightPx: page.heightPx, pxPerM, centre, turnDeg };
 }
 
-const WORTH_TURNING = 1.3;
+const WORTH_TURNING = 1.2;
 
 /** North up, unless a quarter turn shows the water a good deal larger. */
 export function bestFit(lines: readonly Line[], page: PageSize): View {
