@@ -4,8 +4,8 @@ import { Disclosure } from '@/components/disclosure';
 import { space } from '@/constants/layout';
 import { View } from 'react-native';
 
-type Props<V extends FieldValues> = {
-  control: Control<V>;
+type Props<V extends FieldValues, Out> = {
+  control: Control<V, unknown, Out>;
   title: string;
   /** The fields in it, or what they lie in: a fault of one opens the part. */
   names: readonly FieldPath<V>[];
@@ -14,7 +14,13 @@ type Props<V extends FieldValues> = {
 };
 
 /** A part of a long form that is folded away until it is wanted, or until something in it is wrong. */
-export function FormPart<V extends FieldValues>({ control, title, names, open, children }: Props<V>) {
+export function FormPart<V extends FieldValues, Out>({
+  control,
+  title,
+  names,
+  open,
+  children,
+}: Props<V, Out>) {
   const { errors } = useFormState({ control });
   const faulty = names.some((name) => get(errors, name) !== undefined);
   const [wasFaulty, setWasFaulty] = useState(false);

@@ -12,7 +12,7 @@ import {
   type KeepCast,
   type OpenVisit,
 } from '@mereward/shared/surveys/contract';
-import { useMutation, useQuery, useQueryClient } from '@tanstack/react-query';
+import { queryOptions, useMutation, useQuery, useQueryClient } from '@tanstack/react-query';
 import { lakeKeys } from '@/features/lakes/api';
 import { api, nothing } from '@/lib/api';
 
@@ -22,12 +22,15 @@ export const surveyKeys = {
   peg: (pegId: string) => ['surveys', 'peg', pegId] as const,
 };
 
-/** The visits of a lake, newest first. */
-export const useVisits = (lakeId: string) =>
-  useQuery({
+export const visitsQuery = (lakeId: string) =>
+  queryOptions({
     queryKey: surveyKeys.ofLake(lakeId),
     queryFn: ({ signal }) => api.get(`/lakes/${lakeId}/visits`, VisitList, signal),
+    enabled: lakeId !== '', // no lake chosen yet
   });
+
+/** The visits of a lake, newest first. */
+export const useVisits = (lakeId: string) => useQuery(visitsQuery(lakeId));
 
 /** A visit, its casts in order, and how much of each peg's arc they cover. */
 export const useVisit = (visitId: string) =>
@@ -52,7 +55,14 @@ export function useKeepCast(visitId: string) {
   const queries = useQueryClient();
   return useMutation({
     mutationFn: (cast: KeepCast) => api.post(`/visits/${visitId}/casts`, cast, CastView),
-    onSuccess: () => queries.invalidateQueries({ queryKey: surveyKeys.one(visitId) }),
+    onSuccess: (cast) =>
+      queries.setQueryData<VisitWithCasts>(surveyKeys.one(visitId), (known) =>
+        known && !known.casts.some(({ id }) => id === cast.id)
+          ? { ...known, casts: [...known.casts, cast] }
+          : known,
+      ),
+    // Coverage follows by itself; one bar of signal need not wait for it before the next cast.
+    onSettled: () => void queries.invalidateQueries({ queryKey: surveyKeys.one(visitId) }),
   });
 }
 
@@ -70,6 +80,23 @@ export const correctKit = (visitId: string, input: CorrectKit) =>
 export const closeVisit = (visitId: string, input: CloseVisit) =>
   api.post(`/visits/${visitId}/close`, input, VisitView);
 
+/** The casts of a visit as CSV, with the mark that tells spreadsheets it is UTF-8: reading a file takes it off. */
+export const castsText = async (visitId: string): Promise<string> =>
+  `\uFEFF${await (await api.file(`/visits/${visitId}/casts.csv`)).text()}`;
+
+/** Reads a visit and its lake's list anew after anything that touches every cast. */
+export function useReadVisitAnew({ visitId, lakeId }: { visitId: string; lakeId: string }) {
+  const queries = useQueryClient();
+  return async (): Promise<VisitWithCasts> => {
+    void queries.invalidateQueries({ queryKey: surveyKeys.ofLake(lakeId) });
+    await queries.invalidateQueries({ queryKey: surveyKeys.one(visitId), refetchType: 'none' });
+    return queries.fetchQuery({
+      queryKey: surveyKeys.one(visitId),
+      queryFn: ({ signal }) => api.get(`/visits/${visitId}`, VisitWithCasts, signal),
+    });
+  };
+}
+
 export const previewImport = (visitId: string, input: ImportCasts) =>
   api.post(`/visits/${visitId}/imports/preview`, input, ImportPreview);
 
@@ -81,10 +108,14 @@ export function useImportCasts(visitId: string) {
   });
 }
 
-export function useRecordLevel({ boardId, lakeId }: { boardId: string; lakeId: string }) {
+export const recordLevel = (boardId: string, input: RecordLevel) =>
+  api.post(`/boards/${boardId}/readings`, input, LevelRecorded);
+
+/** Takes a misread reading back. */
+export function useTakeBackLevel(lakeId: string) {
   const queries = useQueryClient();
   return useMutation({
-    mutationFn: (input: RecordLevel) => api.post(`/boards/${boardId}/readings`, input, LevelRecorded),
+    mutationFn: (readingId: string) => api.del(`/readings/${readingId}`, nothing),
     onSuccess: () => queries.invalidateQueries({ queryKey: lakeKeys.one(lakeId) }),
   });
 }

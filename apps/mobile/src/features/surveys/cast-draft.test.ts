@@ -4,6 +4,7 @@ import {
   closerIn,
   EMPTY_CAST,
   incomplete,
+  isBegun,
   nextThrow,
   observationOf,
   typedAgain,
@@ -39,9 +40,8 @@ test('nothing typed beside the wraps is a remainder nobody stated', () => {
 });
 
 test('a decimal comma is read as a decimal point', () => {
-  expect(observationOf(CastDraft.parse({ ...typed, remainder: '0,5', remainderUnit: 'm' }))?.remainderM).toBe(
-    0.5,
-  );
+  const read = CastDraft.parse({ ...typed, remainder: '6,5', remainderUnit: 'in' });
+  expect(observationOf(read)?.remainderM).toBeCloseTo(0.1651, 12);
 });
 
 test('the next throw keeps where one stands and aims, and forgets what was felt', () => {
@@ -73,4 +73,29 @@ test('a kept cast comes back into the form as it was typed', () => {
     wrapsWhole: 14,
     remainder: '3',
   });
+});
+
+test('more left over than any sticks stand apart is refused: the unit is wrong', () => {
+  expect(CastDraft.safeParse({ ...typed, remainder: '300', remainderUnit: 'mm' }).success).toBe(true);
+  expect(CastDraft.safeParse({ ...typed, remainder: '300', remainderUnit: 'ft' }).success).toBe(false);
+});
+
+test('a kept cast comes back in the unit it was typed in', () => {
+  const observation = observationOf(CastDraft.parse({ ...typed, remainder: '900', remainderUnit: 'mm' }));
+  expect(observation).not.toBeNull();
+  if (observation)
+    expect(typedAgain({ pegId: 'peg', observation })).toMatchObject({
+      remainder: '900',
+      remainderUnit: 'mm',
+    });
+});
+
+test('a cast is begun by what is felt or counted, not by what was carried forward', () => {
+  expect(isBegun(nextThrow({ ...typed, castId: 'kept', sentAt: 'then' }))).toBe(false);
+  expect(isBegun({ ...nextThrow(typed), cameBack: ['sand'] })).toBe(true);
+  expect(isBegun({ ...nextThrow(typed), pulls: '8' })).toBe(true);
+});
+
+test('the next throw is another cast: it goes under an id of its own', () => {
+  expect(nextThrow({ ...typed, castId: 'kept', sentAt: 'then' })).toMatchObject({ castId: '', sentAt: '' });
 });

@@ -6,7 +6,7 @@ import {
   type Aim,
   type CastObservation,
 } from '@mereward/shared/surveys/contract';
-import { FOOT_M } from '@mereward/shared/units/length';
+import { fromMetres, toMetres } from '@mereward/shared/units/length';
 import { z } from 'zod';
 import { typedNumberOrNothing } from '@/lib/typed-schemas';
 
@@ -15,35 +15,47 @@ export const BY_COMPASS = 'compass';
 
 const METHODS = ['compass_phone', 'compass_sighting', 'estimated'] as const;
 
+/** In what the line left over beside whole wraps is measured, in the order the form turns through them. */
+export const REMAINDER_UNITS = ['ft', 'in', 'mm'] as const;
+export type RemainderUnit = (typeof REMAINDER_UNITS)[number];
+const MOST_LEFT_OVER_M = 10; // no sticks stand farther apart
+
 /** What is typed for one reading of one throw. Numbers are as typed; nothing typed means nothing known. */
-export const CastDraft = z.object({
-  pegId: z.string().min(1, 'Choose the peg you stand on.'),
-  aim: z.string().min(1, 'Choose what you aim over.'),
-  offsetDeg: z.number().min(-90).max(90).nullable(),
-  compassDeg: typedNumberOrNothing({ min: 0, max: 359.9, unit: '°', what: 'The bearing' }),
-  compassMethod: z.enum(METHODS),
-  sidestepM: typedNumberOrNothing({ min: -10, max: 10, unit: 'm', what: 'The side-step' }),
-  wrapsWhole: z
-    .int('Wraps are whole; what is left over goes beside them.')
-    .min(0)
-    .max(120, 'More than 120 wraps is no cast.')
-    .nullable(),
-  remainder: typedNumberOrNothing({ min: 0, max: 12, what: 'What is left over' }),
-  remainderUnit: z.enum(['ft', 'm']),
-  rod: z.enum(['0', '45', '80']),
-  drop: Drop.nullable(),
-  dropCountS: typedNumberOrNothing({ min: 0, max: 60, unit: 'seconds', what: 'The count' }),
-  drag: Drag.nullable(),
-  dragLengthM: typedNumberOrNothing({ min: 0, max: 20, unit: 'm', what: 'The drag' }),
-  cameBack: z.array(CameBack), // nothing chosen: nobody looked
-  smell: z.enum(['none', 'bad_eggs']).nullable(),
-  pulls: typedNumberOrNothing({ min: 0.5, max: 200, what: 'Pulls' }),
-  pullsAgain: typedNumberOrNothing({ min: 0.5, max: 200, what: 'Pulls' }),
-  floatSight: z.enum(['good', 'poor']).nullable(),
-  flags: z.array(CastFlag),
-  note: z.string().max(500, 'At most 500 letters.'),
-  lineId: z.string(), // '': a new throw; else the throw this reading is closer in on
-});
+export const CastDraft = z
+  .object({
+    pegId: z.string().min(1, 'Choose the peg you stand on.'),
+    aim: z.string().min(1, 'Choose what you aim over.'),
+    offsetDeg: z.number().min(-90).max(90).nullable(),
+    compassDeg: typedNumberOrNothing({ min: 0, max: 359.9, unit: '°', what: 'The bearing' }),
+    compassMethod: z.enum(METHODS),
+    sidestepM: typedNumberOrNothing({ min: -10, max: 10, unit: 'm', what: 'The side-step' }),
+    wrapsWhole: z
+      .int('Wraps are whole; what is left over goes beside them.')
+      .min(0)
+      .max(120, 'More than 120 wraps is no cast.')
+      .nullable(),
+    remainder: typedNumberOrNothing({ min: 0, max: 10_000, what: 'What is left over' }),
+    remainderUnit: z.enum(REMAINDER_UNITS),
+    rod: z.enum(['0', '45', '80']),
+    drop: Drop.nullable(),
+    dropCountS: typedNumberOrNothing({ min: 0, max: 60, unit: 'seconds', what: 'The count' }),
+    drag: Drag.nullable(),
+    dragLengthM: typedNumberOrNothing({ min: 0, max: 20, unit: 'm', what: 'The drag' }),
+    cameBack: z.array(CameBack), // nothing chosen: nobody looked
+    smell: z.enum(['none', 'bad_eggs']).nullable(),
+    pulls: typedNumberOrNothing({ min: 0.5, max: 200, what: 'Pulls' }),
+    pullsAgain: typedNumberOrNothing({ min: 0.5, max: 200, what: 'Pulls' }),
+    floatSight: z.enum(['good', 'poor']).nullable(),
+    flags: z.array(CastFlag),
+    note: z.string().max(500, 'At most 500 letters.'),
+    lineId: z.string(), // '': a new throw; else the throw this reading is closer in on
+    castId: z.string(), // '' until it is first sent: a second try goes under the same id
+    sentAt: z.string(), // and at the same time
+  })
+  .refine(({ remainder, remainderUnit }) => toMetres(remainder ?? 0, remainderUnit) <= MOST_LEFT_OVER_M, {
+    path: ['remainder'],
+    message: 'More is left over than any sticks stand apart. Is the unit right?',
+  });
 export type CastTyped = z.input<typeof CastDraft>;
 export type CastRead = z.output<typeof CastDraft>;
 
@@ -70,6 +82,8 @@ export const EMPTY_CAST: CastTyped = {
   flags: [],
   note: '',
   lineId: '',
+  castId: '',
+  sentAt: '',
 };
 
 /** What was felt and counted belongs to one reading; where one stands and aims carries forward. */
@@ -85,7 +99,17 @@ const UNFELT = {
   floatSight: null,
   flags: [],
   note: '',
+  castId: '',
+  sentAt: '',
 } satisfies Partial<CastTyped>;
+
+const FELT = ['drop', 'dropCountS', 'drag', 'dragLengthM', 'smell', 'pulls', 'pullsAgain', 'note'] as const;
+
+/** Has anything of this reading been typed yet, beyond what was carried forward? */
+export const isBegun = (typed: CastTyped): boolean =>
+  FELT.some((field) => typed[field] !== null && typed[field] !== '') ||
+  typed.cameBack.length > 0 ||
+  typed.flags.length > 0;
 
 /** The next throw: same peg, same aim, same wraps, nothing felt yet. */
 export const nextThrow = (typed: CastTyped): CastTyped => ({ ...typed, ...UNFELT, lineId: '' });
@@ -107,6 +131,7 @@ const rodOf = (elevationDeg: number): CastTyped['rod'] =>
 /** A kept cast back in the form, to go on from. */
 export function typedAgain(cast: { pegId: string; observation: CastObservation }): CastTyped {
   const { aim, wrapsWhole, remainderM, remainderStated, rodElevationDeg } = cast.observation;
+  const unit = unitOf(cast.observation.lineText);
   return {
     ...EMPTY_CAST,
     pegId: cast.pegId,
@@ -115,10 +140,15 @@ export function typedAgain(cast: { pegId: string; observation: CastObservation }
     compassDeg: aim.by === 'compass' ? String(aim.bearingDeg) : '',
     compassMethod: aim.by === 'compass' ? aim.method : 'compass_phone',
     wrapsWhole,
-    remainder: remainderStated ? String(Number((remainderM / FOOT_M).toFixed(2))) : '',
+    remainder: remainderStated ? String(Number(fromMetres(remainderM, unit).toFixed(2))) : '',
+    remainderUnit: unit,
     rod: rodOf(rodElevationDeg),
   };
 }
+
+/** The unit a count was typed in, as its text tells. */
+const unitOf = (lineText: string): RemainderUnit =>
+  REMAINDER_UNITS.find((unit) => lineText.endsWith(` ${unit}`)) ?? 'ft';
 
 export type Incomplete = { field: keyof CastTyped; words: string };
 
@@ -139,7 +169,7 @@ export function observationOf(read: CastRead): CastObservation | null {
     aim: aimOf(read),
     sidestepM: read.sidestepM ?? 0,
     wrapsWhole,
-    remainderM: (remainder ?? 0) * (remainderUnit === 'ft' ? FOOT_M : 1),
+    remainderM: toMetres(remainder ?? 0, remainderUnit),
     remainderStated: remainder !== null,
     lineText: remainder === null ? `${wrapsWhole}` : `${wrapsWhole} + ${remainder} ${remainderUnit}`,
     rodElevationDeg: ROD_DEG[read.rod],

@@ -6,88 +6,136 @@ import { Button } from '@/components/button';
 import { Form } from '@/components/form';
 import { Kept } from '@/components/kept';
 import { Note } from '@/components/note';
+import { Page } from '@/components/page';
 import { ProblemNote } from '@/components/problem-note';
+import { Text } from '@/components/text';
 import { space } from '@/constants/layout';
 import { useKeepCast, useUndoCast } from '@/features/surveys/api';
 import { AimPart } from '@/features/surveys/aim-part';
 import { CastCautions } from '@/features/surveys/cast-cautions';
+import { closerIn, nextThrow, typedAgain } from '@/features/surveys/cast-draft';
 import { CastSketch } from '@/features/surveys/cast-sketch';
-import { closerIn, nextThrow, type CastTyped } from '@/features/surveys/cast-draft';
 import { FeelPart } from '@/features/surveys/feel-part';
 import { FloatPart } from '@/features/surveys/float-part';
 import { LinePart } from '@/features/surveys/line-part';
 import { LiveCall } from '@/features/surveys/live-call';
 import { MorePart } from '@/features/surveys/more-part';
+import { bringIntoSight } from '@/lib/bring-into-sight';
 import { useCastForm } from '@/features/surveys/use-cast-form';
+import { visitGauge } from '@/features/surveys/visit-words';
 
 type Props = { lake: LakeView; visit: VisitView; casts: readonly CastView[] };
 
-/** Aim, wraps, feel, float: one screen, the last cast carried forward, what it comes out as always in sight. */
+/** Aim, wraps, feel, float: one screen, the last cast carried forward, the call and the two acts under the thumb. */
 export function CastForm({ lake, visit, casts }: Props) {
   const keep = useKeepCast(visit.id);
   const undo = useUndoCast(visit.id);
-  const [kept, setKept] = useState<CastView | null>(null);
+  const [said, setSaid] = useState<string | null>(null);
   const cast = useCastForm({
     lake,
     visit,
     casts,
     send: (input) => keep.mutateAsync(input),
-    onKept: setKept,
+    onKept: ({ seq: kept }) => {
+      setSaid(`Cast ${kept} is kept.`);
+      bringIntoSight('main-cast');
+    },
   });
   const { form } = cast;
-  const lineId = form.watch('lineId');
-  const goOn = (next: (typed: CastTyped) => CastTyped) => form.reset(next(form.getValues()));
   const last = casts.at(-1);
-  const takeBack = () => {
-    if (!last) return;
-    undo.mutate(last.id, { onSuccess: () => setKept(null) });
+  const seq = (last?.seq ?? 0) + 1;
+  const closer = form.watch('lineId') !== '';
+  const goCloserIn = () => {
+    if (cast.begun) cast.keepThenCloserIn();
+    else if (last) {
+      form.reset(closerIn(typedAgain(last), last.lineId));
+      bringIntoSight('main-cast');
+    }
   };
+  const takeBack = ({ id, seq: taken }: CastView) =>
+    undo.mutate(id, { onSuccess: () => setSaid(`Cast ${taken} is taken back.`) });
   return (
-    <Form label="Cast" onSubmit={form.submit}>
-      <CastCautions visitId={visit.id} />
-      {lineId === '' ? null : (
-        <Note title="Same line, closer in">
-          Wind in to where the lead now lies and read again: this belongs to the throw before.
-          <Button label="A new throw instead" kind="quiet" onPress={() => goOn(nextThrow)} />
-        </Note>
-      )}
-      <AimPart form={form} lake={lake} />
-      <LinePart form={form} visit={visit} />
-      <FeelPart form={form} />
-      <FloatPart form={form} visit={visit} />
-      <LiveCall reduced={cast.reduced} />
-      <CastSketch lake={lake} casts={casts} surroundings={cast.surroundings} now={cast.reduced} />
-      <MorePart form={form} />
-      <ProblemNote problem={form.problem} />
-      <ProblemNote problem={undo.error} />
-      <Kept words={kept ? `Cast ${kept.seq} is kept.` : null} />
-      <View style={{ flexDirection: 'row', flexWrap: 'wrap', gap: space.small }}>
-        <Button
-          label={`Keep cast ${(last?.seq ?? 0) + 1}`}
-          kind="main"
-          bank
-          grow
-          busy={form.busy}
-          onPress={form.submit}
-        />
-        {last ? (
+    <Page
+      title={`Cast ${seq}`}
+      over={visitGauge(lake, visit)}
+      back={{ label: visit.title, href: `/bank/surveys/${visit.id}` }}
+      actions={
+        <>
+          <LiveCall reduced={cast.reduced} />
+          {last || cast.begun ? (
+            <View style={{ flexGrow: 1 }}>
+              <Button
+                label={cast.begun ? 'Keep, closer in' : 'Same line, closer in'}
+                bank
+                disabled={form.busy}
+                onPress={goCloserIn}
+              />
+            </View>
+          ) : null}
           <Button
-            label="Same line, closer in"
+            label={`Keep cast ${seq}`}
+            kind="main"
             bank
             grow
-            onPress={() => goOn((typed) => closerIn(typed, last.lineId))}
+            busy={form.busy}
+            busyLabel="Keeping…"
+            onPress={cast.keep}
           />
+        </>
+      }
+    >
+      <Form label="Cast" onSubmit={cast.keep}>
+        <CastCautions visitId={visit.id} />
+        <ProblemNote problem={form.problem} />
+        <ProblemNote problem={undo.error} />
+        {said ? <Kept words={said} /> : null}
+        {closer ? (
+          <View style={{ flexDirection: 'row', alignItems: 'center', gap: space.small }}>
+            <Text size="small" style={{ flex: 1 }}>
+              Same line, closer in: wind in to these wraps and read again.
+            </Text>
+            <Button
+              label="New throw"
+              kind="quiet"
+              bank
+              onPress={() => form.reset(nextThrow(form.getValues()))}
+            />
+          </View>
         ) : null}
-      </View>
-      {last ? (
-        <Button
-          label={`Take back cast ${last.seq}`}
-          kind="quiet"
-          bank
-          busy={undo.isPending}
-          onPress={takeBack}
-        />
-      ) : null}
-    </Form>
+        <View nativeID="main-cast">
+          <AimPart form={form} lake={lake} />
+          <LinePart form={form} visit={visit} />
+          <FeelPart form={form} />
+          <FloatPart form={form} visit={visit} />
+          <MorePart form={form} />
+        </View>
+        <Warnings reduced={cast.reduced} />
+        <CastSketch lake={lake} casts={casts} surroundings={cast.surroundings} now={cast.reduced} />
+        {last ? (
+          <View style={{ alignItems: 'flex-start', gap: space.small }}>
+            <Button
+              label={`Take back cast ${last.seq}`}
+              bank
+              busy={undo.isPending}
+              busyLabel="Taking back…"
+              onPress={() => takeBack(last)}
+            />
+          </View>
+        ) : null}
+      </Form>
+    </Page>
+  );
+}
+
+function Warnings({ reduced }: { reduced: ReturnType<typeof useCastForm>['reduced'] }) {
+  if (!reduced?.ok || reduced.sounding.warnings.length === 0) return null;
+  return (
+    <Note kind="caution" title="About this cast">
+      {reduced.sounding.warnings.map((words) => (
+        <Text key={words} size="small">
+          {words}
+        </Text>
+      ))}
+    </Note>
   );
 }

@@ -3,8 +3,9 @@ import { View } from 'react-native';
 import { FormChoice } from '@/components/form-controls';
 import { FormField } from '@/components/form-field';
 import { space } from '@/constants/layout';
+import { CastPart } from '@/features/surveys/cast-part';
+import { spacingWords } from '@/features/surveys/spacing-words';
 import type { CastFormState } from '@/features/surveys/use-cast-form';
-import { sticks } from '@/lib/format';
 
 const SIGHT = [
   { key: 'good', label: 'seen well' },
@@ -13,32 +14,26 @@ const SIGHT = [
 
 /** Depth by float: pulls as counted, and a second reading. */
 export function FloatPart({ form, visit }: { form: CastFormState; visit: VisitView }) {
+  const counted = form.watch('pulls').trim() !== '';
   return (
-    <>
-      <View style={{ flexDirection: 'row', flexWrap: 'wrap', gap: space.medium }}>
-        <View style={{ flexGrow: 1, minWidth: 150 }}>
+    <CastPart>
+      <View style={{ flexDirection: 'row', gap: space.medium }}>
+        <View style={{ flex: 1 }}>
           <FormField
             control={form.control}
             name="pulls"
-            label={`Float, pulls of ${sticks(visit.kit.pullM)}`}
-            hint="As counted"
+            label={`Float, pulls of ${spacingWords(visit.kit.pullM)}`}
             keypad="decimal"
             bank
           />
         </View>
-        <View style={{ flexGrow: 1, minWidth: 150 }}>
-          <FormField
-            control={form.control}
-            name="pullsAgain"
-            label="Pulls, read again"
-            hint="Of the same float"
-            keypad="decimal"
-            optional
-            bank
-          />
+        <View style={{ flex: 1 }}>
+          <FormField control={form.control} name="pullsAgain" label="Read again" keypad="decimal" bank />
         </View>
       </View>
-      <FormChoice control={form.control} name="floatSight" label="The float" choices={SIGHT} columns={2} />
-    </>
+      {counted ? (
+        <FormChoice control={form.control} name="floatSight" label="The float" choices={SIGHT} columns={2} />
+      ) : null}
+    </CastPart>
   );
 }

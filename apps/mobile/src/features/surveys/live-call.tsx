@@ -1,13 +1,22 @@
 import type { Reduced } from '@mereward/shared/surveys/contract';
 import { View } from 'react-native';
-import { Note } from '@/components/note';
+import { Shape } from '@/components/shape';
 import { Text } from '@/components/text';
 import { space } from '@/constants/layout';
 import { callWords, depthWords } from '@/features/surveys/call-words';
+import { useTheme } from '@/hooks/use-theme';
 import { useUnits } from '@/hooks/use-units';
 
 /** What the cast comes out as while it is typed: the bottom and how sure, the depth and its spread, the grade. */
 export function LiveCall({ reduced }: { reduced: Reduced | null }) {
+  return (
+    <View role="status" style={{ width: '100%', gap: space.hair }}>
+      <Call reduced={reduced} />
+    </View>
+  );
+}
+
+function Call({ reduced }: { reduced: Reduced | null }) {
   const units = useUnits();
   if (reduced === null)
     return (
@@ -17,27 +26,39 @@ export function LiveCall({ reduced }: { reduced: Reduced | null }) {
     );
   if (!reduced.ok)
     return (
-      <Note kind="caution" title={reduced.reason} live>
-        {reduced.remedy}
-      </Note>
+      <>
+        <Warned words={reduced.reason} />
+        <Text size="small">{reduced.remedy}</Text>
+      </>
     );
   const { sounding } = reduced;
   return (
-    <View role="status" style={{ gap: space.hair }}>
-      <Text size="title" weight="semibold">
-        {callWords(sounding)}
-      </Text>
-      <Text tone="inkSoft">{`${depthWords(sounding, units)} · grade ${sounding.grade}`}</Text>
-      {sounding.askAgain ? (
-        <Note kind="caution" title="Landing, drag and what came back don’t agree">
-          Cast again 1–2 m away. Until then this cast is no better than grade C.
-        </Note>
-      ) : null}
-      {sounding.warnings.map((words) => (
-        <Text key={words} size="small" tone="amber">
-          {words}
+    <>
+      <View
+        style={{ flexDirection: 'row', flexWrap: 'wrap', alignItems: 'baseline', columnGap: space.medium }}
+      >
+        <Text size="lead" weight="semibold">
+          {callWords(sounding)}
         </Text>
-      ))}
+        <Text size="small" tone="inkSoft">
+          {`${depthWords(sounding, units)} · grade ${sounding.grade}`}
+        </Text>
+      </View>
+      {sounding.askAgain ? (
+        <Warned words="What was felt doesn’t agree. Cast again 1–2 m away; until then no better than grade C." />
+      ) : null}
+    </>
+  );
+}
+
+function Warned({ words }: { words: string }) {
+  const { colours } = useTheme();
+  return (
+    <View style={{ flexDirection: 'row', alignItems: 'center', gap: space.hair }}>
+      <Shape name="diamond" colour={colours.amber} />
+      <Text size="small" weight="semibold" tone="amber" style={{ flex: 1 }}>
+        {words}
+      </Text>
     </View>
   );
 }

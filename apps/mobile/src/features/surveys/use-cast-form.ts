@@ -1,12 +1,14 @@
-import { useState } from 'react';
+import { useEffect, useRef } from 'react';
 import type { LakeView } from '@mereward/shared/lakes/contract';
-import type { CastView, KeepCast, VisitView } from '@mereward/shared/surveys/contract';
 import { Problem } from '@mereward/shared/problems/problem';
+import type { CastView, KeepCast, VisitView } from '@mereward/shared/surveys/contract';
 import { useStance } from '@/features/surveys/api';
 import {
   CastDraft,
+  closerIn,
   EMPTY_CAST,
   incomplete,
+  isBegun,
   nextThrow,
   observationOf,
   typedAgain,
@@ -29,7 +31,7 @@ type Terms = {
 
 /** The form of one cast after another: carried forward, kept over a reload, reduced while it is typed. */
 export function useCastForm({ lake, visit, casts, send, onKept }: Terms) {
-  const [ids, setIds] = useState(freshIds);
+  const goesCloserIn = useRef(false);
   const last = casts.at(-1);
   const form: CastFormState = useDraftForm({
     form: `cast:${visit.id}`,
@@ -37,35 +39,88 @@ export function useCastForm({ lake, visit, casts, send, onKept }: Terms) {
     start: last
       ? typedAgain(last)
       : { ...EMPTY_CAST, pegId: lake.pegs[0]?.id ?? '', aim: lake.marks[0]?.id ?? '' },
-    send: (read) => send(keepCast(read, ids)),
+    send: (read) => sendOnce(form, keepCast(read), send),
     onDone: (cast) => {
-      setIds(freshIds());
-      form.reset(nextThrow(form.getValues()));
+      const typed = form.getValues();
+      form.reset(goesCloserIn.current ? closerIn(typedAgain(cast), cast.lineId) : nextThrow(typed));
       onKept(cast);
     },
   });
-  const read = CastDraft.safeParse(form.watch());
-  const peg = useStance(form.watch('pegId') || null);
+  useKeptMeanwhile(form, casts, onKept);
+  const typed = form.watch();
+  const read = CastDraft.safeParse(typed);
+  const peg = useStance(typed.pegId || null);
   const surroundings = peg.data ? { lake, peg: peg.data, visit } : null;
   const observation = read.success ? observationOf(read.data) : null;
-  return { form, surroundings, reduced: useCastReduction(surroundings, observation, casts) };
+  const keep = (): void => {
+    goesCloserIn.current = false;
+    form.submit();
+  };
+  const keepThenCloserIn = (): void => {
+    goesCloserIn.current = true;
+    form.submit();
+  };
+  return {
+    form,
+    begun: isBegun(typed),
+    keep,
+    keepThenCloserIn,
+    surroundings,
+    reduced: useCastReduction(surroundings, observation, casts),
+  };
 }
 
-type Ids = { castId: string; lineId: string };
-const freshIds = (): Ids => ({ castId: newId(), lineId: newId() });
+/** A cast whose answer was lost is known by its id once the visit is read again: the form goes on to the next. */
+function useKeptMeanwhile(form: CastFormState, casts: readonly CastView[], onKept: Terms['onKept']): void {
+  const { busy, reset, getValues, settled } = form;
+  useEffect(() => {
+    const typed = getValues();
+    const kept = typed.castId === '' ? undefined : casts.find(({ id }) => id === typed.castId);
+    if (busy || !kept) return;
+    reset(nextThrow(typed));
+    settled();
+    onKept(kept);
+  }, [busy, casts, getValues, reset, settled, onKept]);
+}
 
-/** The ids stay the same until the cast is kept, so that a second try after a lost answer keeps it once. */
-function keepCast(read: CastRead, { castId, lineId }: Ids): KeepCast {
+type Send = Terms['send'];
+
+/**
+ * Sends under the id and time of the first try, which are kept with the draft: a second try after a lost answer
+ * keeps the cast once. A refusal says that nothing was kept under them, so the next try is a cast of its own.
+ */
+async function sendOnce(form: CastFormState, cast: CastToKeep, send: Send): Promise<CastView> {
+  const { castId, sentAt } = idsOf(form);
+  try {
+    return await send({ ...cast, id: castId, lineId: cast.lineId || castId, observedAt: sentAt });
+  } catch (fault) {
+    if (fault instanceof Problem && (fault.kind === 'invalid' || fault.kind === 'conflict'))
+      setIds(form, { castId: '', sentAt: '' });
+    throw fault;
+  }
+}
+
+type Ids = { castId: string; sentAt: string };
+
+function idsOf(form: CastFormState): Ids {
+  const { castId, sentAt } = form.getValues();
+  if (castId !== '') return { castId, sentAt };
+  return setIds(form, { castId: newId(), sentAt: new Date().toISOString() });
+}
+
+function setIds(form: CastFormState, ids: Ids): Ids {
+  form.setValue('castId', ids.castId);
+  form.setValue('sentAt', ids.sentAt);
+  return ids;
+}
+
+type CastToKeep = Omit<KeepCast, 'id' | 'observedAt'>;
+
+function keepCast(read: CastRead): CastToKeep {
   const observation = observationOf(read);
   if (observation === null)
     throw new Problem('invalid', 'Something is still missing', {
       errors: incomplete(read).map(({ field, words }) => ({ pointer: `/${field}`, detail: words })),
     });
-  return {
-    id: castId,
-    pegId: read.pegId,
-    lineId: read.lineId === '' ? lineId : read.lineId,
-    observedAt: new Date().toISOString(),
-    observation,
-  };
+  return { pegId: read.pegId, lineId: read.lineId, observation };
 }

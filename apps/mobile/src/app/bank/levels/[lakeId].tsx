@@ -1,0 +1,1 @@
+export { LevelScreen as default } from '@/features/surveys/level-screen';

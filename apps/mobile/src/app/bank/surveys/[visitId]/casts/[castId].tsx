@@ -1,0 +1,1 @@
+export { CastStepsScreen as default } from '@/features/surveys/cast-steps-screen';

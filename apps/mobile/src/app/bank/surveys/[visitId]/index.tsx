@@ -1,0 +1,1 @@
+export { VisitScreen as default } from '@/features/surveys/visit-screen';

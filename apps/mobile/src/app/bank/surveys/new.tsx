@@ -1,0 +1,1 @@
+export { NewVisitScreen as default } from '@/features/surveys/new-visit-screen';

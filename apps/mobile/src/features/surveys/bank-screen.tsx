@@ -1,0 +1,39 @@
+import { Empty } from '@/components/empty';
+import { LinkButton } from '@/components/link-button';
+import { Loaded } from '@/components/loaded';
+import { Page } from '@/components/page';
+import { useMyLakes } from '@/features/fisheries/use-my-lakes';
+import { BankLake } from '@/features/surveys/bank-lake';
+import { OpenVisits } from '@/features/surveys/open-visits';
+
+const ON_THE_BANK = ['owner', 'manager', 'head_bailiff', 'bailiff'] as const;
+
+/** The lakes one works on: visits not closed yet first, then each lake's level and surveys. */
+export function BankScreen() {
+  const { fisheries, lakes } = useMyLakes(ON_THE_BANK);
+  return (
+    <Page title="Bank" under="Surveys and water levels">
+      <Loaded
+        query={fisheries}
+        waiting="Reading the lakes…"
+        empty={{
+          when: () => lakes.length === 0,
+          show: (
+            <Empty title="No lake here yet" action={<LinkButton label="To the office" href="/office" bank />}>
+              Survey visits and water levels appear here once a lake is drawn and has pegs.
+            </Empty>
+          ),
+        }}
+      >
+        {() => (
+          <>
+            <OpenVisits lakeIds={lakes.map(({ id }) => id)} />
+            {lakes.map(({ id, name }) => (
+              <BankLake key={id} lakeId={id} name={name} />
+            ))}
+          </>
+        )}
+      </Loaded>
+    </Page>
+  );
+}

@@ -1,0 +1,127 @@
+import { useRouter } from 'expo-router';
+import type { GaugeBoardView, LakeView } from '@mereward/shared/lakes/contract';
+import type { VisitView } from '@mereward/shared/surveys/contract';
+import { useQueryClient } from '@tanstack/react-query';
+import { FormProvider } from 'react-hook-form';
+import { Button } from '@/components/button';
+import { Form } from '@/components/form';
+import { FormCheckbox, FormChoice } from '@/components/form-controls';
+import { FormField } from '@/components/form-field';
+import { Note } from '@/components/note';
+import { Page } from '@/components/page';
+import { ProblemNote } from '@/components/problem-note';
+import { Section } from '@/components/section';
+import { openVisit, surveyKeys } from '@/features/surveys/api';
+import { KitPart } from '@/features/surveys/kit-part';
+import {
+  VisitDraft,
+  visitOf,
+  visitToStartFrom,
+  type VisitRead,
+  type VisitTyped,
+} from '@/features/surveys/visit-draft';
+import { dayAt } from '@/features/surveys/visit-words';
+import { WeatherPart } from '@/features/surveys/weather-part';
+import { useDraftForm, type DraftForm } from '@/hooks/use-draft-form';
+import { newId } from '@/lib/new-id';
+
+const COMPETENCES = [
+  { key: 'trainee', label: 'trainee' },
+  { key: 'competent', label: 'competent' },
+  { key: 'lead', label: 'lead' },
+] as const;
+
+type Props = { lake: LakeView; board: GaugeBoardView; last: VisitView | null };
+
+/** Opens a visit: the board's reading first, then what the casts will be made with. */
+export function NewVisitForm({ lake, board, last }: Props) {
+  const router = useRouter();
+  const queries = useQueryClient();
+  const form: DraftForm<VisitTyped, VisitRead> = useDraftForm({
+    form: `visit:${lake.id}`,
+    schema: VisitDraft,
+    start: visitToStartFrom(lake, last),
+    send: (read) => openVisit(lake.id, visitOf(read, { board, ...idsOf() })),
+    onDone: (visit) => {
+      void queries.invalidateQueries({ queryKey: surveyKeys.ofLake(lake.id) });
+      form.startAfresh();
+      router.replace(`/bank/surveys/${visit.id}/cast`);
+    },
+  });
+  const idsOf = () => {
+    const { id, startedAt } = form.getValues();
+    if (id !== '') return { id, startedAt };
+    const fresh = { id: newId(), startedAt: new Date().toISOString() };
+    form.setValue('id', fresh.id);
+    form.setValue('startedAt', fresh.startedAt);
+    return fresh;
+  };
+  const { control } = form;
+  return (
+    <Page
+      title="Open a visit"
+      over={lake.details.name}
+      back={{ label: 'Bank', href: '/bank' }}
+      actions={
+        <Button
+          label="Open the visit"
+          kind="main"
+          bank
+          grow
+          busy={form.busy}
+          busyLabel="Opening…"
+          onPress={form.submit}
+        />
+      }
+    >
+      <Form label="Visit" onSubmit={form.submit}>
+        <ProblemNote problem={form.problem} />
+        {form.restored ? (
+          <Note title="What you typed earlier is here again">
+            <Button label="Start afresh" kind="quiet" bank onPress={form.startAfresh} />
+          </Note>
+        ) : null}
+        <FormField
+          control={control}
+          name="gauge"
+          label={`Gauge board ${board.details.code} reads, ${board.details.unit}`}
+          hint="Read it now. Every depth of the visit hangs on it."
+          keypad="decimal"
+          bank
+        />
+        <FormField
+          control={control}
+          name="title"
+          label="Name of the visit"
+          hint="Such as the pegs to be cast."
+          bank
+        />
+        <FormChoice
+          control={control}
+          name="competence"
+          label="The surveyor is"
+          choices={COMPETENCES}
+          columns={3}
+        />
+        <Section
+          title="Kit"
+          note={
+            last
+              ? `Carried over from ${last.title}, ${dayAt(last.startedAt, lake.zone)}. Change what differs today.`
+              : 'The usual kit to begin with. Change what differs today.'
+          }
+        >
+          <FormProvider {...form}>
+            <KitPart />
+          </FormProvider>
+        </Section>
+        <WeatherPart control={control} />
+        <FormCheckbox
+          control={control}
+          name="consentToPublish"
+          label="My casts may go into a published chart, with my name beside the date"
+        />
+      </Form>
+    </Page>
+  );
+}

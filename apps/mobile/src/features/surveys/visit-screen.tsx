@@ -1,0 +1,101 @@
+import { useLocalSearchParams } from 'expo-router';
+import type { LakeView } from '@mereward/shared/lakes/contract';
+import type { VisitWithCasts } from '@mereward/shared/surveys/contract';
+import { View } from 'react-native';
+import { Empty } from '@/components/empty';
+import { LinkButton } from '@/components/link-button';
+import { Loaded } from '@/components/loaded';
+import { Page } from '@/components/page';
+import { Section } from '@/components/section';
+import { StatusShape } from '@/components/status-shape';
+import { space } from '@/constants/layout';
+import { useLake } from '@/features/lakes/api';
+import { useVisit } from '@/features/surveys/api';
+import { CastsSection } from '@/features/surveys/casts-section';
+import { CoverageSection } from '@/features/surveys/coverage-section';
+import { VisitFacts } from '@/features/surveys/visit-facts';
+import { useThreeColumns } from '@/hooks/use-wide';
+
+/** One survey visit: what it was made with, how well it covers each peg, its casts. */
+export function VisitScreen() {
+  const { visitId } = useLocalSearchParams<{ visitId: string }>();
+  const visit = useVisit(visitId);
+  const lake = useLake(visit.data?.visit.lakeId ?? '');
+  const it = visit.data?.visit;
+  return (
+    <Page
+      title={it?.title ?? 'Survey visit'}
+      over={it?.lakeName}
+      back={{ label: 'Bank', href: '/bank' }}
+      width="wide"
+      end={
+        it ? (
+          it.status === 'open' ? (
+            <StatusShape shape="ring" tone="water" word="open" />
+          ) : (
+            <StatusShape shape="square" tone="inkSoft" word="closed" />
+          )
+        ) : null
+      }
+      actions={
+        it?.may.addCasts ? (
+          <>
+            <LinkButton label="Close the visit" href={`/bank/surveys/${visitId}/close`} bank grow />
+            <LinkButton label="Next cast" href={`/bank/surveys/${visitId}/cast`} kind="main" bank grow />
+          </>
+        ) : null
+      }
+    >
+      <Loaded query={visit} waiting="Reading the visit…">
+        {(value) => (
+          <Loaded query={lake} waiting="Reading the lake…">
+            {(its) => <Visit value={value} lake={its} />}
+          </Loaded>
+        )}
+      </Loaded>
+    </Page>
+  );
+}
+
+function Visit({ value, lake }: { value: VisitWithCasts; lake: LakeView }) {
+  const { visit, casts } = value;
+  const beside = useThreeColumns();
+  return (
+    <>
+      <View style={{ flexDirection: beside ? 'row' : 'column', gap: beside ? space.huge : space.large }}>
+        <View style={beside ? { flex: 1, minWidth: 0 } : undefined}>
+          <VisitFacts visit={visit} lake={lake} />
+        </View>
+        {casts.length > 0 ? (
+          <View style={beside ? { flex: 1, minWidth: 0 } : undefined}>
+            <CoverageSection value={value} lake={lake} bare={beside} />
+          </View>
+        ) : null}
+      </View>
+      {casts.length > 0 ? (
+        <CastsSection value={value} lake={lake} />
+      ) : (
+        <Section title="Casts">
+          <NoCasts value={value} />
+        </Section>
+      )}
+    </>
+  );
+}
+
+function NoCasts({ value: { visit } }: { value: VisitWithCasts }) {
+  return (
+    <Empty
+      title="No casts yet"
+      action={
+        visit.may.addCasts ? (
+          <LinkButton label="Bring casts from a file" href={`/bank/surveys/${visit.id}/import`} bank />
+        ) : null
+      }
+    >
+      {visit.may.addCasts
+        ? 'Make the first cast, or bring a file of casts written down elsewhere.'
+        : 'Nothing was cast on this visit.'}
+    </Empty>
+  );
+}
