@@ -2,11 +2,12 @@ import type { Locator, Page } from '@playwright/test';
 import { FisheryList } from '@mereward/shared/fisheries/contract';
 import { LakeView } from '@mereward/shared/lakes/contract';
 import { join } from 'node:path';
+import { fileURLToPath } from 'node:url';
 import { aPhoto } from '../support/pictures';
 import { Asking, aPageOf } from './support/people';
 import { expect, test } from './support/site';
 
-const FILES = join(__dirname, '../reference/fixtures/09_formats/geojson');
+const FILES = fileURLToPath(new URL('../reference/fixtures/09_formats/geojson', import.meta.url));
 
 async function choose(page: Page, button: string, file: Parameters<Locator['setInputFiles']>[0]) {
   const chooser = page.waitForEvent('filechooser');

@@ -29,7 +29,7 @@ export async function aStoryWater(owner: Asking, wishes: Partial<LakeDetails> = 
 /** Opens a visit at board 0.62 as from `startedAt`. */
 export async function anOpenVisit(
   surveyor: Asking,
-  { lakeId, boardId }: StoryWater,
+  { lakeId, boardId }: Pick<StoryWater, 'lakeId' | 'boardId'>,
   wishes: Partial<OpenVisit> = {},
 ): Promise<string> {
   const visit: OpenVisit = {

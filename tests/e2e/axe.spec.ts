@@ -1,0 +1,59 @@
+import type { Page } from '@playwright/test';
+import { expectNoAxeFaults } from './support/axe';
+import { aPageOf, type Somebody } from './support/people';
+import { addressOf, demoIds, routes, type Ids } from './support/screens';
+import { expect, test } from './support/site';
+
+/** Who looks at which screens; `undefined` is a stranger. Each screen is in one place at least. */
+const LOOKS: readonly { place: string; who: Somebody | undefined; sees: RegExp }[] = [
+  { place: 'the water', who: undefined, sees: /^\/(water|tickets)/ },
+  {
+    place: 'the doors',
+    who: undefined,
+    sees: /^\/(sign-in|sign-up|forgotten|reset-password|verify|invitation|me)$/,
+  },
+  { place: 'the bank', who: 'joan', sees: /^\/bank/ },
+  { place: 'the office', who: 'idris', sees: /^\/office/ },
+  {
+    place: 'the tickets and the pegs they are written for',
+    who: 'priya',
+    sees: /^\/(tickets|me|office\/lakes\/\[lakeId\]\/pegs\/\[pegId\]|water\/pegs)/,
+  },
+];
+
+let ids: Ids;
+test.beforeAll(async ({ sites }, { project, file }) => {
+  test.setTimeout(60_000);
+  ids = await demoIds(
+    await sites.siteFor({ name: `${project.name}-${file.split('/').at(-1) ?? ''}`, now: undefined }),
+  );
+});
+
+/** Opens what is folded away, so that it is looked at too. */
+async function unfold(page: Page): Promise<void> {
+  const folded = page.getByRole('main').getByRole('button', { expanded: false });
+  for (let left = await folded.count(); left > 0; left = Math.min(left - 1, await folded.count()))
+    await folded.first().click();
+}
+
+test('every screen of the client is looked at by somebody', () => {
+  const unseen = routes().filter((route) => !LOOKS.some(({ sees }) => sees.test(route)));
+  expect(unseen).toEqual([]);
+});
+
+for (const { place, who, sees } of LOOKS)
+  test(`${place} as ${who ?? 'a stranger'}: axe finds no fault by light or at dusk`, async ({ browser }) => {
+    test.setTimeout(240_000);
+    const page = await aPageOf(browser, who === undefined ? {} : { who });
+    for (const route of routes().filter((each) => sees.test(each)))
+      await test.step(route, async () => {
+        await page.emulateMedia({ colorScheme: 'light' });
+        await page.goto(addressOf(route, ids), { waitUntil: 'networkidle' });
+        await expect(page.getByRole('heading', { level: 1 })).toBeVisible();
+        await expect(page.getByText('Something in this page failed')).toHaveCount(0);
+        await unfold(page);
+        await expectNoAxeFaults(page);
+        await page.emulateMedia({ colorScheme: 'dark' });
+        await expectNoAxeFaults(page, 'colours');
+      });
+  });
