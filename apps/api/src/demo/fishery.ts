@@ -186,7 +186,7 @@ function pegDetails(
     tackleLimits:
       'Barbless hooks. Leads that come off if the line breaks. No braid as main line when fishing.',
     notesPublic:
-      number === 'FO7' ? 'Looks across the lake to the barn end. Windy in a south-westerly.' : '',
+      number === 'FO7' ? 'Looks across the lake to the tall poplar. Windy in a south-westerly.' : '',
     notesMembers: '',
     notesStaff: number === 'FO7' ? 'Origin dot repainted in spring.' : '',
     status: number === 'FO20' || number === 'FO24' ? 'closed' : 'open',

@@ -11,23 +11,32 @@ import { makeLake } from '../lakes/make-lake';
 import { putMark } from '../lakes/marks';
 import { makePeg } from '../lakes/pegs';
 import { seedCharts } from './seed-charts';
+import { seedPhotos } from './seed-photos';
 import { seedSurvey } from './seed-survey';
 import { demoSurveys } from './surveys';
 import { demoCtx } from './demo-ctx';
 import { DEMO_LAKES, OSTLEMERE, OSTLEMERE_ID, type DemoLake } from './fishery';
-import { DEMO_PASSWORD, DEMO_PEOPLE, MARIAN, PRIYA, SOFIA, TOM } from './people';
+import { DEMO_PASSWORD, DEMO_PEOPLE, JOAN, MARIAN, PRIYA, SOFIA, TOM } from './people';
 import { demoId } from './random';
 import { demoDays, demoLevelM, type DemoDays } from './survey-days';
 import { writeTicket } from '../bookings/service';
 
 const DAY_MS = 86_400_000;
 
-/** Fills an empty database with the demo; one that holds it already is left as it is. Answers the sign-ins to print. */
-export async function seed(databaseUrl: string, now: Date = new Date()): Promise<string[]> {
+/**
+ * Fills an empty database with the demo; one that holds it already is left as it is. Answers the sign-ins to
+ * print. Without a folder for files the pegs have no pictures.
+ */
+export async function seed(
+  databaseUrl: string,
+  now: Date = new Date(),
+  filesDir: string | null = process.env.FILES_DIR ?? null,
+): Promise<string[]> {
   const source = await makeDataSource(databaseUrl).initialize();
   const days = demoDays(now);
   try {
-    if (!(await source.manager.existsBy(Fishery, { id: OSTLEMERE_ID }))) await fill(source, days, now);
+    if (!(await source.manager.existsBy(Fishery, { id: OSTLEMERE_ID })))
+      await fill(source, { days, now, filesDir });
     await seedCharts(source, days);
   } finally {
     await source.destroy();
@@ -38,8 +47,10 @@ export async function seed(databaseUrl: string, now: Date = new Date()): Promise
   ];
 }
 
+type Filling = { days: DemoDays; now: Date; filesDir: string | null };
+
 /** Everything but the charts, in one transaction. */
-async function fill(source: DataSource, days: DemoDays, now: Date): Promise<void> {
+async function fill(source: DataSource, { days, now, filesDir }: Filling): Promise<void> {
   const made = new Date(days.farOstleFirst.getTime() - 60 * DAY_MS);
   await source.transaction(async (tx) => {
     await seedPeople(demoCtx(tx, MARIAN, made));
@@ -48,6 +59,7 @@ async function fill(source: DataSource, days: DemoDays, now: Date): Promise<void
     for (const survey of demoSurveys(days))
       await seedSurvey(demoCtx(tx, survey.surveyor, new Date(survey.day.getTime() + DAY_MS)), survey);
     await seedTicket(demoCtx(tx, PRIYA, now));
+    if (filesDir !== null) await seedPhotos(demoCtx(tx, JOAN, days.farOstleFirst), filesDir);
   });
 }
 
