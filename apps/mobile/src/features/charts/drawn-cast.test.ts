@@ -41,8 +41,8 @@ const square = (from: number, to: number) => [
 test('a cast ends where its line meets land: an island, the far bank, or the bank it points at', () => {
   const lake = { shore: square(0, 60), islands: [[...square(25, 35)].reverse()] };
   const stance = { xM: -1, yM: 30 };
-  expect(openWaterM(lake, stance, { bearingDeg: 90, mostM: 100 })).toBe(26);
-  expect(openWaterM(lake, { xM: -1, yM: 10 }, { bearingDeg: 90, mostM: 100 })).toBe(61);
+  expect(openWaterM(lake, stance, { bearingDeg: 90, mostM: 100 })).toBe(25.5);
+  expect(openWaterM(lake, { xM: -1, yM: 10 }, { bearingDeg: 90, mostM: 100 })).toBe(60.5);
   expect(openWaterM(lake, { xM: -1, yM: 10 }, { bearingDeg: 90, mostM: 40 })).toBe(40);
   expect(openWaterM(lake, stance, { bearingDeg: 270, mostM: 100 })).toBe(5);
 });

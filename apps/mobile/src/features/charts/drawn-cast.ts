@@ -56,7 +56,7 @@ export function openWaterM(
   let wet = false;
   for (let rangeM = 0; rangeM <= mostM; rangeM += LOOK_STEP_M) {
     const onWater = insideOutline(outline, pointAlong(from, bearingDeg, rangeM));
-    if (wet && !onWater) return Math.max(LEAST_M, Math.ceil(rangeM));
+    if (wet && !onWater) return Math.max(LEAST_M, rangeM - LOOK_STEP_M);
     if (!wet && rangeM > STANCE_M && !onWater) return LEAST_M; // it points at the bank
     wet = onWater;
   }

@@ -6,7 +6,7 @@ import type { Layer, Page } from './page';
 import type { Palette } from './palette';
 import { swatchPage } from './swatch';
 import { bandsOf } from './tint';
-import { bestFit } from './view';
+import { bestFit, toPage, type View } from './view';
 
 /** What is written round a chart on its sheet. Lines come ready in words. */
 export type SheetWords = {
@@ -32,7 +32,7 @@ export type SheetSize = { widthPx: number; heightPx: number };
 
 const EDGE_PX = 40;
 const HEAD_PX = 92;
-const FOOT_PX = 172;
+const FOOT_PX = 198;
 
 /** A lake's chart as a sheet to keep or print: title, map, key, scale in metres and wraps, north, datum, cautions. */
 export function drawSheet(input: SheetInput, { widthPx, heightPx }: SheetSize, palette: Palette): Page {
@@ -48,7 +48,7 @@ export function drawSheet(input: SheetInput, { widthPx, heightPx }: SheetSize, p
   const map: Layer = {
     view,
     atPx: { x: EDGE_PX, y: HEAD_PX },
-    marks: [...drawMap(input.parts, choice), ...farMarks(input.marks, palette)],
+    marks: [...drawMap(input.parts, choice), ...farMarks(marksInView(input, view), palette)],
   };
   const bar = {
     x: EDGE_PX,
@@ -66,6 +66,17 @@ export function drawSheet(input: SheetInput, { widthPx, heightPx }: SheetSize, p
   ];
   const key = bottomKey(input, { x: EDGE_PX, y: heightPx - FOOT_PX + 84 }, palette);
   return { widthPx, heightPx, ground: palette.paper, layers: [map, { marks: [...round, ...key] }] };
+}
+
+const MARK_ROOM_PX = 24;
+
+/** Far-bank marks that stand on the sheet with their code. */
+function marksInView({ marks }: SheetInput, view: View): SheetInput['marks'] {
+  return marks.filter(({ xM, yM }) => {
+    const { x, y } = toPage(view, xM, yM);
+    const across = x > MARK_ROOM_PX && x < view.widthPx - MARK_ROOM_PX;
+    return across && y > MARK_ROOM_PX && y < view.heightPx - MARK_ROOM_PX;
+  });
 }
 
 function headMarks(words: SheetWords, widthPx: number, palette: Palette): Mark[] {

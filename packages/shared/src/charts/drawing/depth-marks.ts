@@ -3,8 +3,8 @@ import { filled, ruled, stroked, text, type Line, type Mark, type PathMark } fro
 import type { Palette } from './palette';
 import { thinned } from './path-text';
 import { bandAt, bandsOf, lineInkOn } from './tint';
-import type { View } from './view';
-import { turnOf, widestPlace } from './widest-place';
+import { fromPage, toPage, type View } from './view';
+import { isInside, turnOf, widestPlace } from './widest-place';
 
 /** Every fifth isobath is drawn heavier. */
 export const HEAVY_EVERY = 5;
@@ -56,7 +56,7 @@ export function unsurveyedMarks(ground: Ground, palette: Palette, view: View): M
   return [
     edge,
     { kind: 'clip', lines: areas, marks: [stroked(diagonals(areas, view), ruled(palette.rule, 1))] },
-    ...wordsIn(areas, { words: 'not surveyed', palette, view }),
+    ...wordsIn(areas, { words: 'not surveyed', palette, view, water: ground.water }),
   ];
 }
 
@@ -65,7 +65,7 @@ export function dryMarks(ground: Ground, palette: Palette, view: View): Mark[] {
   if (!ground.depth || ground.dry.length === 0) return [];
   const areas = thinnedFor(view, ground.dry, ground.depth.cellM);
   const edge: PathMark = { ...filled(areas, palette.bed, true), stroke: ruled(palette.ink, 0.9, [4, 2]) };
-  return [edge, ...wordsIn(areas, { words: 'dry bank', palette, view })];
+  return [edge, ...wordsIn(areas, { words: 'dry bank', palette, view, water: ground.water })];
 }
 
 /** Lines at 45° on the page, however the map is turned, over the areas' own box; fixed to the lake. */
@@ -92,20 +92,33 @@ function diagonals(areas: readonly Line[], view: View): Line[] {
   return lines;
 }
 
-function wordsIn(
-  areas: readonly Line[],
-  { words, palette, view }: { words: string; palette: Palette; view: View },
-): Mark[] {
-  const roomPx = 13;
-  const holes = areas.filter((area) => turnOf(area) < 0);
-  return areas.flatMap((area) => {
+type WordsScene = { words: string; palette: Palette; view: View; water: readonly Line[] };
+
+const WORDS_ACROSS_PX = 92;
+const WORDS_ROOM_PX = 13;
+
+/** The words in every area with room for them, level on the page however the map is turned, and never on land. */
+function wordsIn(areas: readonly Line[], { words, palette, view, water }: WordsScene): Mark[] {
+  const onPage = areas.map((area) => pageLine(area, view));
+  const shores = water.map((ring) => pageLine(ring, view));
+  const holes = onPage.filter((area) => turnOf(area) < 0);
+  return onPage.flatMap((area) => {
     if (turnOf(area) <= 0) return [];
     const place = widestPlace(area, holes);
-    if (!place || place.roomM * view.pxPerM < roomPx) return [];
-    const wide = place.acrossM * view.pxPerM > 92;
-    if (!wide) return [];
-    return [
-      text({ words, x: place.xM, y: place.yM, colour: palette.inkSoft, halo: palette.paper, slanted: true }),
-    ];
+    if (!place || place.roomM < WORDS_ROOM_PX || place.acrossM < WORDS_ACROSS_PX) return [];
+    const ends = [-0.45, 0, 0.45].map((share) => place.xM + share * WORDS_ACROSS_PX);
+    if (!ends.every((x) => isInside(shores, x, place.yM))) return [];
+    const { xM, yM } = fromPage(view, place.xM, -place.yM);
+    return [text({ words, x: xM, y: yM, colour: palette.inkSoft, halo: palette.paper, slanted: true })];
   });
+}
+
+/** A line in px right and up of the page, so that rings keep their sense of turning. */
+function pageLine(line: Line, view: View): number[] {
+  const out: number[] = [];
+  for (let i = 0; i + 1 < line.length; i += 2) {
+    const { x, y } = toPage(view, line[i]!, line[i + 1]!);
+    out.push(x, -y);
+  }
+  return out;
 }

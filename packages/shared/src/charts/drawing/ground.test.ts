@@ -7,7 +7,7 @@ import { groundOf, type Ground } from './ground';
 import type { Mark } from './mark';
 import { palettes } from './palette';
 import { fitView } from './view';
-import { turnOf, widestPlace } from './widest-place';
+import { isInside, turnOf, widestPlace } from './widest-place';
 
 const SIDE = 41;
 const square = [
@@ -106,6 +106,14 @@ describe('a map', () => {
     expect(words.find((mark) => mark.words === '7')?.x).toBeLessThan(0);
   });
 
+  test('keeps its words on the water and level when the map is turned', () => {
+    const turned = fitView(ground.water, { widthPx: 600, heightPx: 600, marginPx: 20 }, 90);
+    const mark = flat(drawMap(parts, { ...choice, view: turned })).find(
+      (each) => each.kind === 'text' && each.words === 'not surveyed',
+    );
+    expect(mark?.kind === 'text' && mark.x > 28 && mark.x < 40 && mark.y > 28 && mark.y < 40).toBe(true);
+  });
+
   test('keeps every figure upright', () => {
     for (const { turnDeg } of words) expect(Math.abs(turnDeg)).toBeLessThanOrEqual(90);
   });
@@ -167,6 +175,8 @@ test('words stand in the widest part of an area and out of its holes', () => {
   expect(turnOf(ring)).toBeGreaterThan(0);
   expect(turnOf(hole)).toBeLessThan(0);
   expect(widestPlace(ring, [])?.xM).toBeCloseTo(20, 6);
+  expect(isInside([ring, hole], 20, 10)).toBe(false);
+  expect(isInside([ring, hole], 5, 10)).toBe(true);
   const beside = widestPlace(ring, [hole]);
   expect(beside && beside.xM > 10 && beside.xM < 38 && beside.yM > 2 && beside.yM < 18).toBe(false);
 });

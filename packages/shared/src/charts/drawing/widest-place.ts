@@ -48,6 +48,11 @@ export function turnOf(ring: Line): number {
   return twice;
 }
 
+/** Is a place inside the rings, by the even-odd rule? */
+export function isInside(rings: readonly Line[], x: number, y: number): boolean {
+  return rings.flatMap((ring) => crossingsOf(ring, y)).filter((at) => at < x).length % 2 === 1;
+}
+
 function longestRun(rings: readonly Line[], yM: number): readonly [number, number] | null {
   const crossings = rings.flatMap((ring) => crossingsOf(ring, yM)).sort((a, b) => a - b);
   let best: readonly [number, number] | null = null;
