@@ -35,6 +35,25 @@ async function lakeAt(owner: Asking, page: Page): Promise<LakeView> {
   return owner.get(`/lakes/${id}`, LakeView);
 }
 
+test('somebody with a water makes their fishery and is its owner at once', async ({ browser }) => {
+  const page = await aPageOf(browser, { who: 'colin' });
+  await page.goto('/me');
+  await expect(page.getByRole('navigation').getByRole('link', { name: 'Office' })).toHaveCount(0);
+  await page.goto('/me/fishery');
+  await page.getByLabel('Name of the fishery').fill('Frayne’s Ponds');
+  await page.getByRole('button', { name: 'Make the fishery' }).click();
+  await expect(page.getByLabel('Latitude, longitude')).toBeFocused();
+  await page.reload();
+  await expect(page.getByLabel('Name of the fishery')).toHaveValue('Frayne’s Ponds');
+  await page.getByLabel('Latitude, longitude').fill('53.6001, 1.6202');
+  await page.getByRole('button', { name: 'Make the fishery' }).click();
+  await expect(page).toHaveURL(({ pathname }) => pathname === '/office');
+  await expect(page.getByRole('navigation').getByRole('link', { name: 'Office' })).toBeVisible();
+  await page.goto('/office/lakes');
+  await expect(page.getByText('Frayne’s Ponds').first()).toBeVisible();
+  await expect(page.getByRole('link', { name: 'Draw a lake' })).toBeVisible();
+});
+
 test('a shore is read from a file: a fault is refused with its place, a wrong order is mended', async ({
   browser,
   site,
@@ -78,6 +97,10 @@ test('an owner draws a lake by tapping and gives it a mark, a board, a reading a
     [0.75, 0.35],
   ]);
   await expect(page.getByText('3 points of the shore')).toBeVisible();
+  await tap(page, sheet, [[0.2, 0.1]]);
+  await expect(page.getByText(/crosses or touches itself/).first()).toBeVisible();
+  await page.getByRole('button', { name: 'Undo' }).click();
+  await expect(page.getByText(/crosses or touches itself/)).toHaveCount(0);
   await page.getByLabel('Name', { exact: true }).fill('Tapped Water');
   await page.reload();
   await expect(page.getByText('What you typed earlier is here again.')).toBeVisible();
@@ -89,10 +112,6 @@ test('an owner draws a lake by tapping and gives it a mark, a board, a reading a
   await page.getByRole('button', { name: 'Close the ring' }).click();
   await expect(page.getByText('Drag a point to move it')).toBeVisible();
   await page.getByRole('button', { name: 'Undo' }).click();
-  await tap(page, sheet, [[0.2, 0.1]]);
-  await expect(page.getByText(/crosses or touches itself/).first()).toBeVisible();
-  await page.getByRole('button', { name: 'Undo' }).click();
-  await expect(page.getByText(/crosses or touches itself/)).toHaveCount(0);
   await page.getByRole('button', { name: 'Close the ring' }).click();
   await expect(page.getByRole('status').filter({ hasText: 'Water:' })).not.toContainText('if it were closed');
   await page.getByLabel('Chart datum, metres').fill('0.62');

@@ -52,7 +52,7 @@ test('casts come in from a table: columns mapped, faults named and taken away, w
   await wraps.selectOption('turns of line');
   await expect(page.getByText(/2 rows, every one can be read/)).toBeVisible();
   const read = page.getByRole('list', { name: 'Rows' });
-  await expect(read).toContainText('peg FO7, over M3, 14 wraps');
+  await expect(read).toContainText('peg FO7, over pump-house chimney, 14 wraps');
   await expect(read).toContainText('8 pulls');
   await page.getByRole('button', { name: 'Bring in 2 casts' }).click();
   await expect(page.getByText('2 casts were added and reduced')).toBeVisible();

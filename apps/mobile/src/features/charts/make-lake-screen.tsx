@@ -1,5 +1,6 @@
 import { useState } from 'react';
 import { useLocalSearchParams, useRouter } from 'expo-router';
+import { View } from 'react-native';
 import { FormProvider, useController } from 'react-hook-form';
 import type { FisheryListItem } from '@mereward/shared/fisheries/contract';
 import { geodesicBetween } from '@mereward/shared/geometry/geodesic';
@@ -18,10 +19,11 @@ import { NEW_LAKE, TypedLake } from '@/features/lakes/lake-fields';
 import { LakeForm } from '@/features/lakes/lake-form';
 import { makeLake } from '@/features/lakes/office-api';
 import { EMPTY_SKETCH, FinishedSketch, type Sketch } from '@/features/lakes/outline-sketch';
-import { positionText, readPosition } from '@/features/lakes/position-text';
+import { positionText, readPosition } from '@/lib/position-text';
 import { useDraftForm } from '@/hooks/use-draft-form';
 import { newId } from '@/lib/new-id';
 
+const READING_PX = 720; // a form's lines stay short on a wide sheet
 const FAR_M = 5000;
 
 const Wanted = z.object({ start: z.string(), sketch: FinishedSketch, details: TypedLake });
@@ -34,6 +36,7 @@ export function MakeLakeScreen() {
   return (
     <Page
       title="A new lake"
+      width="wide"
       {...(fishery ? { over: fishery.name } : {})}
       back={{ label: 'Lakes', href: '/office/lakes' }}
     >
@@ -99,7 +102,6 @@ function MakeLakeForm({ fishery }: { fishery: FisheryListItem }) {
           />
         )}
         <OutlineEditor
-          key={positionText(origin)}
           sketch={sketch.field.value}
           onChange={draw}
           origin={origin}
@@ -108,11 +110,13 @@ function MakeLakeForm({ fishery }: { fishery: FisheryListItem }) {
         />
       </Section>
       <Section title="The lake">
-        <FormProvider {...form}>
-          <DraftFormFrame form={form} label="A new lake" act="Keep the lake" busyLabel="Keeping…">
-            <LakeForm />
-          </DraftFormFrame>
-        </FormProvider>
+        <View style={{ maxWidth: READING_PX }}>
+          <FormProvider {...form}>
+            <DraftFormFrame form={form} label="A new lake" act="Keep the lake" busyLabel="Keeping…">
+              <LakeForm />
+            </DraftFormFrame>
+          </FormProvider>
+        </View>
       </Section>
     </>
   );

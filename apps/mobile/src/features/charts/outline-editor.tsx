@@ -4,6 +4,7 @@ import { View } from 'react-native';
 import { Button } from '@/components/button';
 import { FieldError } from '@/components/field-frame';
 import { space } from '@/constants/layout';
+import { waterTint } from '@/features/charts/lake-backdrop';
 import { LakeCanvas, type Draw } from '@/features/charts/lake-canvas';
 import { OutlineFound } from '@/features/charts/outline-found';
 import { OutlineImport } from '@/features/charts/outline-import';
@@ -14,7 +15,8 @@ import {
   planeSketch,
   pointsFromPxPerM,
   sideNear,
-  sketchMarks,
+  workMarks,
+  closedMarks,
 } from '@/features/charts/outline-drawing';
 import { useSketch } from '@/features/charts/use-sketch';
 import {
@@ -31,6 +33,8 @@ import {
   startIsland,
   type Sketch,
 } from '@/features/lakes/outline-sketch';
+import { positionText } from '@/features/lakes/position-text';
+import { useWide } from '@/hooks/use-wide';
 
 type Props = {
   sketch: Sketch;
@@ -50,10 +54,14 @@ const spotOf = (id: string) => {
 
 /** Draws a lake's shore and islands: by tapping, by typing each point, or from a file. */
 export function OutlineEditor({ sketch, onChange, origin, under, error }: Props) {
+  const wide = useWide();
   const deed = useSketch(sketch, onChange);
   const { chosen } = deed;
   const rings = useMemo(() => planeSketch(sketch, origin), [sketch, origin]);
-  const [frame, setFrame] = useState(() => frameOf(rings));
+  const sheet = positionText(origin);
+  const [{ on, frame }, setFramed] = useState(() => ({ on: sheet, frame: frameOf(rings) }));
+  if (on !== sheet) setFramed({ on: sheet, frame: frameOf(rings) }); // the sheet was moved: show all of it again
+  const setFrame = (next: typeof frame): void => setFramed({ on: sheet, frame: next });
   const settled = useDeferredValue(sketch);
   const reading = useMemo(() => readSketch(settled), [settled]);
   const faults = useMemo(
@@ -66,8 +74,12 @@ export function OutlineEditor({ sketch, onChange, origin, under, error }: Props)
   const fromPxPerM = useMemo(() => pointsFromPxPerM(rings), [rings]);
   const over = useCallback<Draw>(
     ({ palette, view }) =>
-      sketchMarks(rings, { palette, chosen, faults, showPoints: view.pxPerM >= fromPxPerM }),
+      workMarks(rings, { palette, chosen, faults, showPoints: view.pxPerM >= fromPxPerM }),
     [rings, chosen, faults, fromPxPerM],
+  );
+  const water = useCallback<Draw>(
+    (pen) => [...closedMarks(rings, pen.palette, waterTint(pen.palette)), ...under(pen)],
+    [rings, under],
   );
   const handles = rings.flatMap(({ points }, ring) =>
     points.map((point, index) => ({ ...point, id: idOf(ring, index) })),
@@ -97,48 +109,64 @@ export function OutlineEditor({ sketch, onChange, origin, under, error }: Props)
     setFrame(frameOf(planeSketch(next, origin)));
   };
   return (
-    <View style={{ gap: space.medium }}>
-      <OutlineImport onRead={replace} replaces={sketch.rings.length > 0} />
-      <LakeCanvas
-        label="Outline of the lake, to draw on"
-        frame={frame}
-        under={under}
-        over={over}
-        handles={handles}
-        handlesFromPxPerM={fromPxPerM}
-        onTap={tap}
-        onPick={pick}
-        onMove={(id, point, begins) =>
-          deed.drag(movePlace(sketch, spotOf(id), placeOf(origin, point)), begins)
-        }
-        onFit={() => setFrame(frameOf(rings))}
-      />
-      <View style={{ flexDirection: 'row', flexWrap: 'wrap', gap: space.small }}>
-        <Button label="Undo" disabled={!deed.mayUndo} onPress={deed.undo} />
-        {open !== null ? (
-          <Button
-            label="Close the ring"
-            disabled={!mayClose(sketch)}
-            onPress={() => deed.change(closeRing(sketch))}
-          />
-        ) : null}
-        {open === null && sketch.rings.length > 0 ? (
-          <Button label="Add an island" onPress={() => deed.change(startIsland(sketch))} />
-        ) : null}
-        {chosen ? (
-          <Button label="Take this point out" onPress={() => deed.change(removePlace(sketch, chosen))} />
-        ) : null}
-        {chosen && chosen.ring > 0 ? (
-          <Button
-            label={`Take ${ringName(chosen.ring)} away`}
-            kind="danger"
-            onPress={() => deed.change(removeRing(sketch, chosen.ring))}
-          />
-        ) : null}
+    <View style={{ flexDirection: 'row', flexWrap: 'wrap', gap: space.large }}>
+      <View style={{ flexGrow: 3, flexBasis: 340, minWidth: 0, maxWidth: '100%' }}>
+        <LakeCanvas
+          key={sheet}
+          label="Outline of the lake, to draw on"
+          frame={frame}
+          under={water}
+          over={over}
+          handles={handles}
+          handlesFromPxPerM={fromPxPerM}
+          onTap={tap}
+          onPick={pick}
+          onMove={(id, point, begins) =>
+            deed.drag(movePlace(sketch, spotOf(id), placeOf(origin, point)), begins)
+          }
+          onFit={() => setFrame(frameOf(rings))}
+          heightPx={wide ? 560 : 420}
+        />
       </View>
-      <OutlineFound sketch={settled} reading={reading} />
-      {error ? <FieldError id="outline" words={error} /> : null}
-      <OutlinePoints sketch={sketch} onChange={deed.change} chosen={chosen} />
+      <View style={{ flexGrow: 1, flexBasis: 320, gap: space.medium, minWidth: 0 }}>
+        <SketchButtons sketch={sketch} deed={deed} />
+        <OutlineFound sketch={settled} reading={reading} />
+        {error ? <FieldError id="outline" words={error} /> : null}
+        <OutlineImport onRead={replace} replaces={sketch.rings.length > 0} />
+        <OutlinePoints sketch={sketch} onChange={deed.change} chosen={chosen} />
+      </View>
+    </View>
+  );
+}
+
+type ButtonsProps = { sketch: Sketch; deed: ReturnType<typeof useSketch> };
+
+function SketchButtons({ sketch, deed }: ButtonsProps) {
+  const { chosen } = deed;
+  const open = openRingOf(sketch);
+  return (
+    <View style={{ flexDirection: 'row', flexWrap: 'wrap', gap: space.small }}>
+      <Button label="Undo" disabled={!deed.mayUndo} onPress={deed.undo} />
+      {open !== null ? (
+        <Button
+          label="Close the ring"
+          disabled={!mayClose(sketch)}
+          onPress={() => deed.change(closeRing(sketch))}
+        />
+      ) : null}
+      {open === null && sketch.rings.length > 0 ? (
+        <Button label="Add an island" onPress={() => deed.change(startIsland(sketch))} />
+      ) : null}
+      {chosen ? (
+        <Button label="Take this point out" onPress={() => deed.change(removePlace(sketch, chosen))} />
+      ) : null}
+      {chosen && chosen.ring > 0 ? (
+        <Button
+          label={`Take ${ringName(chosen.ring)} away`}
+          kind="danger"
+          onPress={() => deed.change(removeRing(sketch, chosen.ring))}
+        />
+      ) : null}
     </View>
   );
 }
