@@ -19,10 +19,10 @@ export type Card = { page: PegPageView; printedOn: string; printedAt: Date; url:
 
 const MARGIN = 24;
 const WIDTH = 419.53 - 2 * MARGIN; // A5
-const BOTTOM = 595.28 - 22;
+const BOTTOM = 594 - MARGIN;
 const QR = 74;
-const MAP_WIDTH = 236;
-const MAP_HEIGHT = 150;
+const MAP_WIDTH = 226;
+const MAP_HEIGHT = 128;
 const INK = '#111111';
 
 const fontPath = (name: string): string =>
@@ -53,6 +53,7 @@ export async function drawCard(card: Card): Promise<Buffer> {
   doc.registerFont('bold', fontPath('600SemiBold/SourceSans3_600SemiBold'));
   drawQr(doc, qrcode.create(card.url, { errorCorrectionLevel: 'M' }).modules);
   drawHead(doc, card);
+  doc.lineGap(-1); // the face's own lines stand wide for so small a sheet
   drawChartPart(doc, page);
   drawLines(doc, factLines(page));
   drawEmergency(doc, page);
@@ -146,7 +147,7 @@ function drawLines(doc: Doc, lines: readonly CardLine[]): void {
   for (const { label, words } of lines) {
     doc
       .font('bold')
-      .fontSize(8.5)
+      .fontSize(8)
       .fillColor(INK)
       .text(`${label}: `, MARGIN, doc.y, { width: WIDTH, continued: true });
     doc.font('regular').text(words);
@@ -160,15 +161,15 @@ function drawEmergency(doc: Doc, page: PegPageView): void {
     .join('\n');
   const width = WIDTH - 16;
   const headHeight = doc.font('bold').fontSize(9).heightOfString(page.emergencyWords, { width });
-  const height = headHeight + doc.font('regular').fontSize(8.5).heightOfString(text, { width }) + 9;
+  const height = headHeight + doc.font('regular').fontSize(8).heightOfString(text, { width }) + 9;
   if (doc.y + height > BOTTOM) doc.addPage();
   const top = doc.y;
   doc.lineWidth(1.4).strokeColor(INK).rect(MARGIN, top, WIDTH, height).stroke();
   doc
     .font('bold')
-    .fontSize(9.5)
+    .fontSize(9)
     .text(page.emergencyWords, MARGIN + 8, top + 5, { width });
-  doc.font('regular').fontSize(8.5).text(text, { width });
+  doc.font('regular').fontSize(8).text(text, { width });
   doc.x = MARGIN;
   doc.y = top + height + 6;
 }
@@ -180,8 +181,9 @@ function drawFoot(doc: Doc, { page, printedOn }: Card): void {
     ' ',
   );
   doc.font('regular').fontSize(8);
-  const height = doc.heightOfString(words, { width: WIDTH }) + 14;
+  const height = doc.font('bold').heightOfString(words, { width: WIDTH }) + 13;
   if (doc.y + height > BOTTOM) doc.addPage();
+  doc.y = BOTTOM - height;
   doc.font('bold').fontSize(8).fillColor(INK).text(words, MARGIN, doc.y, { width: WIDTH });
   doc
     .font('regular')

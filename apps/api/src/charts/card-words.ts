@@ -46,7 +46,7 @@ const STEP_FREE = {
   not_suitable: 'not suitable for a wheelchair',
 } as const;
 
-const joined = (parts: readonly string[]): string => parts.filter(Boolean).join(', ');
+const joined = (parts: readonly string[]): string => parts.filter(Boolean).join('; ');
 const many = (count: number, one: string, more: string): string => `${count} ${count === 1 ? one : more}`;
 const steps = (count: number | null): string =>
   count === null ? '' : count === 0 ? 'no steps' : many(count, 'step', 'steps');

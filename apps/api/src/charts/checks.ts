@@ -2,18 +2,19 @@ import { Chart } from '@mereward/db/entities/charts/chart';
 import type { CheckView } from '@mereward/shared/charts/contract';
 import type { EntityManager } from 'typeorm';
 import { buildSource, sourceDigest, type BuildSource } from './build-source';
-import { Built, type BuiltSounding } from './built';
+import type { BuiltSounding } from './built';
+import { chartContent } from './chart-layers';
 import type { ChartFound } from './find-chart';
 
 /**
  * Everything checked before a chart may be published. What hangs on the casts was checked when it was built, and
- * stands as long as the digest of what it was built from is the same. A published chart was checked on its day.
+ * stands as long as the digest of what it was built from is the same. Of a published chart that part alone is told, as
+ * it stood on its day.
  */
 export async function checksOf(tx: EntityManager, { chart, lake }: ChartFound): Promise<CheckView[]> {
-  if (chart.status !== 'draft' && chart.status !== 'submitted') return [];
+  const built = (await chartContent(tx, chart.id))?.built ?? null;
+  if (chart.status !== 'draft' && chart.status !== 'submitted') return built?.checks ?? [];
   const source = await buildSource(tx, chart);
-  const row = await tx.findOneOrFail(Chart, { where: { id: chart.id }, select: { id: true, built: true } });
-  const built = row.built === null ? null : Built.parse(row.built);
   const fresh = built !== null && chart.inputSha256?.equals(sourceDigest(source)) === true;
   return [
     builtFresh(built !== null, fresh),
@@ -51,12 +52,9 @@ function consented({ visits }: BuildSource): CheckView {
 const SNAG_WITHIN_M = 3;
 
 async function publishedSnags(tx: EntityManager, lakeId: string): Promise<BuiltSounding[]> {
-  const row = await tx.findOne(Chart, {
-    where: { lakeId, status: 'published' },
-    select: { id: true, built: true },
-  });
-  if (!row || row.built === null) return [];
-  return Built.parse(row.built).soundings.filter((sounding) => sounding.bottom === 'snag');
+  const row = await tx.findOne(Chart, { where: { lakeId, status: 'published' }, select: { id: true } });
+  const content = row && (await chartContent(tx, row.id));
+  return content?.built.soundings.filter((sounding) => sounding.bottom === 'snag') ?? [];
 }
 
 function snagsCarried(snags: readonly BuiltSounding[], seen: readonly BuiltSounding[]): CheckView {

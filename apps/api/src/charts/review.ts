@@ -8,7 +8,7 @@ import { holdsAny, type Ctx } from '../ctx';
 import { notFound } from '../http/deny';
 import { CHART_APPROVERS, isStaff, mayBuildCharts, STAFF } from '../lakes/policy';
 import { checksOf } from './checks';
-import { Built } from './built';
+import { chartContent } from './chart-layers';
 import { chartForStaff, LIGHT, type LightChart } from './find-chart';
 import { whyNotApprove } from './policy';
 import { surveyorsOf } from './surveyors';
@@ -69,7 +69,7 @@ export async function chartReview(ctx: Ctx, chartId: string): Promise<ChartRevie
   const { chart, lake } = found;
   const [item] = await listItems(tx, [chart]);
   if (!item) throw notFound('chart');
-  const row = await tx.findOneOrFail(Chart, { where: { id: chartId }, select: { id: true, built: true } });
+  const content = await chartContent(tx, chartId);
   const checks = await checksOf(tx, found);
   const blocked = checks.some((check) => check.state === 'failed' && check.blocks);
   const surveyors = await surveyorsOf(tx, chart.visitIds);
@@ -83,7 +83,7 @@ export async function chartReview(ctx: Ctx, chartId: string): Promise<ChartRevie
     lakeId: lake.id,
     lakeName: lake.name,
     checks,
-    quality: row.built === null ? null : Built.parse(row.built).quality,
+    quality: content?.built.quality ?? null,
     may: {
       submit: builder && chart.status === 'draft' && !building && !blocked,
       approve: chart.status === 'submitted' && why === null && !blocked,

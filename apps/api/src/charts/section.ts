@@ -29,7 +29,7 @@ export function sectionPoints(
   const kit = kitOf(visits.find((visit) => visit.id === here) ?? visits[0] ?? null);
   return sectionAlong(layers, stance, along).map(({ rangeM, depthM, sigmaM, bottom }) => ({
     rangeM: cm(rangeM),
-    lineOutM: cm(lineTo(rangeM, kit, depthM ?? 0)),
+    lineOutM: cm(lineTo(rangeM, kit, sees.depth ? (depthM ?? 0) : 0)), // line goes down too: it would tell the depth
     depthM: sees.depth && depthM !== null ? cm(depthM) : null,
     sigmaM: sees.depth && sigmaM !== null ? cm(sigmaM) : null,
     bottom: sees.bottom ? bottom : null,

@@ -39,16 +39,25 @@ export function spotView(ground: PegGround, open: OpenChart | null, spot: Spot):
     id: spot.id,
     name: spot.details.name,
     note: spot.details.note,
-    xM: place.xM,
-    yM: place.yM,
     usableRadiusM: spot.details.usableRadiusM,
     ...reach,
+    ...whereabouts(ground, place, reach),
     ...shown,
     words: wordsOf(ground, reach, shown),
     section: open && sees.depth ? sectionOf(ground, open, reach) : null,
     presentation: shown.bottom === null ? null : PRESENTATION[shown.bottom],
     version: spot.version,
   };
+}
+
+/** Wraps go down as well as out: beside an exact range they would tell a depth that this reader may not see. */
+function whereabouts(
+  { sight: { sees } }: PegGround,
+  { xM, yM }: Point,
+  { rangeM }: Reach,
+): Pick<SpotView, 'xM' | 'yM' | 'rangeM'> {
+  if (sees.depth) return { xM, yM, rangeM };
+  return { xM: Math.round(xM), yM: Math.round(yM), rangeM: Math.round(rangeM) };
 }
 
 /**
