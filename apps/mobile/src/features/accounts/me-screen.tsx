@@ -1,3 +1,4 @@
+import { View } from 'react-native';
 import { Facts } from '@/components/facts';
 import { LinkButton } from '@/components/link-button';
 import { Page } from '@/components/page';
@@ -47,6 +48,16 @@ export function MeScreen() {
         />
         {account === null ? <DeviceUnits /> : null}
       </Section>
+      {account === null ? null : (
+        <Section
+          title="Do you run a water?"
+          note="Whoever owns or runs one makes its fishery here, draws its lakes and invites the others."
+        >
+          <View style={{ alignItems: 'flex-start' }}>
+            <LinkButton label="Make a fishery" href="/me/fishery" />
+          </View>
+        </Section>
+      )}
       {account === null ? null : <SignOutSection />}
     </Page>
   );

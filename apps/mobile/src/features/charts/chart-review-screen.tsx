@@ -1,7 +1,8 @@
 import { useLocalSearchParams } from 'expo-router';
+import { View } from 'react-native';
+import { space } from '@/constants/layout';
 import type { ChartReview } from '@mereward/shared/charts/contract';
 import { Facts } from '@/components/facts';
-import { LinkButton } from '@/components/link-button';
 import { Loaded } from '@/components/loaded';
 import { Note } from '@/components/note';
 import { Page } from '@/components/page';
@@ -12,7 +13,10 @@ import { chartName, surveyedWords } from '@/features/charts/chart-words';
 import { CheckList } from '@/features/charts/check-list';
 import { QualityReport } from '@/features/charts/quality-report';
 import { ReviewActions } from '@/features/charts/review-actions';
+import { ReviewMap } from '@/features/charts/review-map';
 import { useChartReview } from '@/features/charts/review-api';
+
+const READING_PX = 720; // a report's lines stay short on a wide sheet
 
 /** One chart before the staff: how it was built, what the checks say, how good it is, and the next deed. */
 export function ChartReviewScreen() {
@@ -22,6 +26,7 @@ export function ChartReviewScreen() {
   return (
     <Page
       title={chart ? chartName(chart) : 'Chart'}
+      width="wide"
       {...(review.data ? { over: review.data.lakeName } : {})}
       back={{ label: 'Charts', href: '/office/charts' }}
       {...(chart ? { end: <ChartStatusShape status={chart.status} /> } : {})}
@@ -37,35 +42,41 @@ function Review({ review }: { review: ChartReview }) {
   const { chart, checks, quality } = review;
   const built = chart.build?.state === 'done';
   return (
-    <>
-      <Facts
-        facts={[
-          { term: 'Surveyed', fact: surveyedWords(chart) },
-          { term: 'Submitted by', fact: chart.submittedBy ?? '' },
-          { term: 'Approved by', fact: chart.approvedBy ?? '' },
-        ]}
-      />
-      <BuildSection review={review} />
-      {built ? <LinkButton label="Look at the chart" href={`/water/charts/${chart.id}`} /> : null}
-      {checks.length > 0 ? (
-        <Section
-          title="Checks before publishing"
-          note="What a failed check names is put right in the survey; then build again."
-        >
-          <CheckList checks={checks} />
-        </Section>
+    <View style={{ flexDirection: 'row', flexWrap: 'wrap', gap: space.large }}>
+      <View style={{ flexGrow: 1, flexBasis: 340, minWidth: 0, maxWidth: READING_PX, gap: space.large }}>
+        <Facts
+          facts={[
+            { term: 'Surveyed', fact: surveyedWords(chart) },
+            { term: 'Submitted by', fact: chart.submittedBy ?? '' },
+            { term: 'Approved by', fact: chart.approvedBy ?? '' },
+          ]}
+        />
+        <BuildSection review={review} />
+        {checks.length > 0 ? (
+          <Section
+            title="Checks before publishing"
+            note="What a failed check names is put right in the survey; then build again."
+          >
+            <CheckList checks={checks} />
+          </Section>
+        ) : null}
+        {quality ? (
+          <Section title="How good it is" note={quality.words}>
+            <QualityReport quality={quality} />
+          </Section>
+        ) : null}
+        {review.may.approveWhyNot ? (
+          <Note kind="caution" title="Not yours to approve">
+            {review.may.approveWhyNot}
+          </Note>
+        ) : null}
+        <ReviewActions review={review} />
+      </View>
+      {built ? (
+        <View style={{ flexGrow: 2, flexBasis: 340, minWidth: 0 }}>
+          <ReviewMap chartId={chart.id} />
+        </View>
       ) : null}
-      {quality ? (
-        <Section title="How good it is" note={quality.words}>
-          <QualityReport quality={quality} />
-        </Section>
-      ) : null}
-      {review.may.approveWhyNot ? (
-        <Note kind="caution" title="Not yours to approve">
-          {review.may.approveWhyNot}
-        </Note>
-      ) : null}
-      <ReviewActions review={review} />
-    </>
+    </View>
   );
 }

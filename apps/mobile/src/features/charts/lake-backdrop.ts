@@ -1,5 +1,7 @@
+import { mixed } from '@mereward/shared/charts/drawing/colour';
 import { farMarks } from '@mereward/shared/charts/drawing/draw-map';
 import { filled, ruled, stroked } from '@mereward/shared/charts/drawing/mark';
+import type { Palette } from '@mereward/shared/charts/drawing/palette';
 import { pegMarks } from '@mereward/shared/charts/drawing/shore-marks';
 import { toPlane } from '@mereward/shared/geometry/plane';
 import type { LakeView } from '@mereward/shared/lakes/contract';
@@ -27,12 +29,17 @@ export function lakeBackdrop(lake: LakeView, { water, exceptPegId, exceptMarkId 
     .map(({ details }) => ({ code: details.code, ...at(details.position) }));
   return ({ palette, view }) => [
     ...(water
-      ? [filled(lines, palette.band), { ...stroked(lines, ruled(palette.ink, 1.9)), closed: true }]
+      ? [filled(lines, waterTint(palette)), { ...stroked(lines, ruled(palette.ink, 1.9)), closed: true }]
       : []),
     ...pegMarks(pegs, { palette, view, selectedId: null, taken: [] }),
     ...farMarks(marks, palette),
   ];
 }
+
+const WATER_SHARE = 0.2;
+
+/** Water that no depth is told of: none of the depth tints, so that it is not read as one. */
+export const waterTint = ({ paper, waterLine }: Palette): string => mixed(paper, waterLine, WATER_SHARE);
 
 /** Nothing drawn. */
 export const NO_BACKDROP: Draw = () => [];

@@ -26,6 +26,7 @@ export function LakeOutlineScreen() {
   return (
     <Page
       title="Outline"
+      width="wide"
       {...(lake.data ? { over: lake.data.details.name } : {})}
       back={{ label: lake.data?.details.name ?? 'The lake', href: `/office/lakes/${lakeId}` }}
     >

@@ -8,10 +8,12 @@ import { Loaded } from '@/components/loaded';
 import { NewerNote } from '@/components/newer-note';
 import { Note } from '@/components/note';
 import { Page } from '@/components/page';
+import { Section } from '@/components/section';
 import { StatusShape } from '@/components/status-shape';
 import { space } from '@/constants/layout';
 import { PegFieldsForm } from '@/features/charts/peg-fields-form';
 import { PEG_STATUS, pegTitle } from '@/features/charts/peg-words';
+import { SpotsSection } from '@/features/charts/spots-section';
 import { Photos } from '@/features/files/photos';
 import { useLake } from '@/features/lakes/api';
 import { pegKeys, usePeg } from '@/features/lakes/office-api';
@@ -47,8 +49,10 @@ function Peg({ lake, now }: { lake: LakeView; now: PegView }) {
   return (
     <>
       <View style={{ flexDirection: 'row', flexWrap: 'wrap', gap: space.small }}>
+        <LinkButton label="Its tickets" href={`/office/lakes/${lake.id}/pegs/${now.id}/tickets`} />
         <LinkButton label="As visitors see it" href={`/water/pegs/${now.id}`} />
       </View>
+      {lake.may.buildCharts ? <SpotsSection lakeId={lake.id} pegId={now.id} /> : null}
       {now.may.addPhotos ? (
         <Photos
           subject={{ kind: 'pegs', id: now.id }}
@@ -59,16 +63,18 @@ function Peg({ lake, now }: { lake: LakeView; now: PegView }) {
       ) : null}
       {newer ? <NewerNote what="this peg" onTake={() => hold(newer)} /> : null}
       {now.may.change ? (
-        <PegFieldsForm
-          key={held.version}
-          lake={lake}
-          peg={held}
-          onDone={(peg) => {
-            hold(peg);
-            setKept(true);
-          }}
-          beside={<Kept words={kept ? 'The peg is kept.' : null} />}
-        />
+        <Section title="The peg">
+          <PegFieldsForm
+            key={held.version}
+            lake={lake}
+            peg={held}
+            onDone={(peg) => {
+              hold(peg);
+              setKept(true);
+            }}
+            beside={<Kept words={kept ? 'The peg is kept.' : null} />}
+          />
+        </Section>
       ) : (
         <Note title="Not yours to change">The owner, a manager or the head bailiff changes a peg.</Note>
       )}

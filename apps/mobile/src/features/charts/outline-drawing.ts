@@ -65,13 +65,16 @@ const CROSS = 'm-8 -8l16 16m0 -16l-16 16';
 
 type Scene = { palette: Palette; showPoints: boolean; chosen: Chosen; faults: readonly Point[] };
 
-/** The sketch: water, shore and islands, the open ring with its closing side dashed, points, and where it is wrong. */
-export function sketchMarks(rings: readonly PlaneRing[], scene: Scene): Mark[] {
-  const { palette, faults } = scene;
+/** The sketch's closed rings: water, shore and islands. */
+export function closedMarks(rings: readonly PlaneRing[], palette: Palette, water: string): Mark[] {
   const closed = rings.filter((ring) => ring.closed).map(({ points }) => lineOf(points));
+  return [filled(closed, water), { ...stroked(closed, ruled(palette.ink, 2)), closed: true }];
+}
+
+/** What is worked on: the open ring with its closing side dashed, points, and where it is wrong. */
+export function workMarks(rings: readonly PlaneRing[], scene: Scene): Mark[] {
+  const { palette, faults } = scene;
   return [
-    filled(closed, palette.band),
-    { ...stroked(closed, ruled(palette.ink, 2)), closed: true },
     ...rings.flatMap((ring) => (ring.closed ? [] : openMarks(ring, palette))),
     ...(scene.showPoints ? rings.flatMap((ring, at) => pointMarks(ring, at, scene)) : []),
     ...faults.flatMap((fault): Mark[] => [

@@ -33,7 +33,7 @@ import {
   startIsland,
   type Sketch,
 } from '@/features/lakes/outline-sketch';
-import { positionText } from '@/features/lakes/position-text';
+import { positionText } from '@/lib/position-text';
 import { useWide } from '@/hooks/use-wide';
 
 type Props = {

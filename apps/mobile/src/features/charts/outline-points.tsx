@@ -19,7 +19,7 @@ import {
   type Sketch,
   type SketchRing,
 } from '@/features/lakes/outline-sketch';
-import { positionText, readPosition } from '@/features/lakes/position-text';
+import { positionText, readPosition } from '@/lib/position-text';
 
 const PAGE = 20;
 const NOT_READ = 'Type latitude, then longitude, in degrees, such as 52.36610, -1.14170';

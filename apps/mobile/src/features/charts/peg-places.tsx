@@ -14,7 +14,7 @@ import { placeOf } from '@/features/charts/outline-drawing';
 import { HANDLE_M, offeredStance, stanceMarks, type Stance } from '@/features/charts/peg-arc';
 import { planeOutline } from '@/features/charts/readied-chart';
 import type { HoldsPeg } from '@/features/lakes/peg-fields';
-import { positionText, readPosition } from '@/features/lakes/position-text';
+import { positionText, readPosition } from '@/lib/position-text';
 
 const STEPS = [
   { key: 'edge', label: 'Water’s edge' },

@@ -4,7 +4,7 @@ import { useController, useFormContext } from 'react-hook-form';
 import { Field } from '@/components/field';
 import { space } from '@/constants/layout';
 import { PlaceCanvas } from '@/features/charts/place-canvas';
-import { positionText, readPosition } from '@/features/lakes/position-text';
+import { positionText, readPosition } from '@/lib/position-text';
 
 type Props = {
   lake: LakeView;

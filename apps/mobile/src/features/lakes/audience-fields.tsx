@@ -20,7 +20,7 @@ export function AudienceFields({ control }: { control: Control<{ details: TypedL
           label={label}
           hint={hint}
           choices={AUDIENCES}
-          columns={4}
+          columns={2}
           bank={false}
         />
       ))}

@@ -2,14 +2,14 @@ import { GaugeBoardDetails } from '@mereward/shared/lakes/contract';
 import { z } from 'zod';
 import type { Choice } from '@/components/choice-props';
 import { typedNumberOrNothing } from '@/lib/typed-schemas';
-import { positionText, typedPosition } from '@/features/lakes/position-text';
+import { positionText, typedPosition } from '@/lib/position-text';
 
 const levelOrNothing = (what: string) => typedNumberOrNothing({ what, min: -100, max: 9000, unit: 'm' });
 
 /** A gauge board as it is typed. Limits are metres, as the board reads. */
 export const TypedBoard = GaugeBoardDetails.extend({
   code: z.string().trim().min(1, 'Give the board a short code, such as GB1.').max(30, 'At most 30 letters.'),
-  position: typedPosition('the board'),
+  position: typedPosition('Tap the board on the lake, or type its latitude and longitude'),
   normalLowM: levelOrNothing('The usual low level'),
   normalHighM: levelOrNothing('The usual high level'),
   alarmLowM: levelOrNothing('The low alarm'),

@@ -2,7 +2,7 @@ import { MarkDetails } from '@mereward/shared/lakes/contract';
 import { z } from 'zod';
 import type { Choice } from '@/components/choice-props';
 import { typedNumber } from '@/lib/typed-schemas';
-import { positionText, typedPosition } from '@/features/lakes/position-text';
+import { positionText, typedPosition } from '@/lib/position-text';
 
 /** A far-bank mark as it is typed. */
 export const TypedMark = MarkDetails.extend({
@@ -12,7 +12,7 @@ export const TypedMark = MarkDetails.extend({
     .trim()
     .min(1, 'Say what it is, so that anybody finds it: “pump-house chimney”.')
     .max(120, 'At most 120 letters.'),
-  position: typedPosition('the mark'),
+  position: typedPosition('Tap the mark on the lake, or type its latitude and longitude'),
   sigmaM: typedNumber({ what: 'How sure the place is', min: 0.05, max: 50, unit: 'm' }),
 });
 export type TypedMark = z.input<typeof TypedMark>;

@@ -27,7 +27,7 @@ export function MarkForm() {
         name="details.permanence"
         label="How lasting"
         choices={PERMANENCES}
-        columns={4}
+        columns={2}
         bank={false}
       />
       <FormChoice
@@ -35,7 +35,7 @@ export function MarkForm() {
         name="details.fixedBy"
         label="Where its place comes from"
         choices={MARK_FIXES}
-        columns={4}
+        columns={2}
         bank={false}
       />
       <FormField

@@ -1,7 +1,7 @@
 import type { LonLat } from '@mereward/shared/geometry/plane';
 import { PegDetails } from '@mereward/shared/lakes/contract';
 import { z } from 'zod';
-import { positionText, typedPosition } from '@/features/lakes/position-text';
+import { positionText, typedPosition } from '@/lib/position-text';
 import { typedNumber, typedNumberOrNothing } from '@/lib/typed-schemas';
 
 const shape = PegDetails.shape;
@@ -23,8 +23,8 @@ const dayOrNothing = z.string().transform((day, context): string | null => {
 /** A peg as it is typed: figures as text, places as latitude and longitude, hazards one a line. */
 export const TypedPeg = PegDetails.extend({
   number: z.string().trim().min(1, 'Give the peg its number.').max(12, 'At most 12 letters.'),
-  position: typedPosition('the peg at the water’s edge'),
-  origin: typedPosition('the origin mark'),
+  position: typedPosition('Tap the peg at the water’s edge on the lake, or type its latitude and longitude'),
+  origin: typedPosition('Tap the origin mark on the lake, or type its latitude and longitude'),
   arcFromDeg: bearing('The left limit'),
   arcToDeg: bearing('The right limit'),
   longestCastM: metres('The longest cast', 5, 250),

@@ -17,8 +17,8 @@ const STATUS = {
   closed: { shape: 'cross', tone: 'brick', word: 'closed' },
 } as const;
 
-const LINE_WORDS: Readonly<Record<PegListItem['overheadFishing'], string>> = {
-  ok: 'fishing',
+const LINE_WORDS: Readonly<Record<PegListItem['overheadFishing'], string | null>> = {
+  ok: null,
   restricted: 'restricted, or not looked at',
   no_fishing: 'no fishing: overhead line',
 };
@@ -81,13 +81,6 @@ export function PegsSection({ lake }: { lake: LakeView }) {
               key: 'line',
               head: 'Overhead line',
               value: ({ overheadFishing }) => LINE_WORDS[overheadFishing],
-            },
-            {
-              key: 'facing',
-              head: 'Faces',
-              value: ({ facingDeg }) => Math.round(facingDeg),
-              show: ({ facingDeg }) => `${figure(facingDeg)}°`,
-              figures: true,
             },
             {
               key: 'parking',

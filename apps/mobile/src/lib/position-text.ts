@@ -23,15 +23,13 @@ export function readPosition(text: string): [number, number] | null {
   return Position.safeParse(place).success ? place : null;
 }
 
-/** A place typed as text, for a form's schema. */
-export const typedPosition = (what: string) =>
+const HOW = 'Type latitude, then longitude, in degrees, such as 52.36610, -1.14170';
+
+/** A place typed as text, for a form's schema; `whenEmpty` says what to do when nothing is there yet. */
+export const typedPosition = (whenEmpty: string) =>
   z.string().transform((text, context): [number, number] => {
     const place = readPosition(text);
     if (place) return place;
-    const message =
-      text.trim() === ''
-        ? `Tap ${what} on the lake, or type its latitude and longitude`
-        : 'Type latitude, then longitude, in degrees, such as 52.36610, -1.14170';
-    context.issues.push({ code: 'custom', message, input: text });
+    context.issues.push({ code: 'custom', message: text.trim() === '' ? whenEmpty : HOW, input: text });
     return z.NEVER;
   });

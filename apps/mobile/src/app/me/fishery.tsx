@@ -1,0 +1,1 @@
+export { MakeFisheryScreen as default } from '@/features/fisheries/make-fishery-screen';

@@ -1,0 +1,1 @@
+export { FisheryScreen as default } from '@/features/fisheries/fishery-screen';

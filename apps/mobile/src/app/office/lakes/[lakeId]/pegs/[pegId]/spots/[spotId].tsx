@@ -1,0 +1,1 @@
+export { SpotFormScreen as default } from '@/features/charts/spot-form-screen';

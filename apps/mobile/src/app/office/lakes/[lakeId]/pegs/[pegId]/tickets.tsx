@@ -1,0 +1,1 @@
+export { PegTicketsScreen as default } from '@/features/bookings/peg-tickets-screen';

@@ -1,0 +1,135 @@
+import { useState } from 'react';
+import { useLocalSearchParams, useRouter } from 'expo-router';
+import type { FisheryView } from '@mereward/shared/fisheries/contract';
+import { FormProvider } from 'react-hook-form';
+import { z } from 'zod';
+import { DraftFormFrame } from '@/components/draft-form-frame';
+import { Empty } from '@/components/empty';
+import { Facts } from '@/components/facts';
+import { Kept } from '@/components/kept';
+import { Loaded } from '@/components/loaded';
+import { NewerNote } from '@/components/newer-note';
+import { Page } from '@/components/page';
+import { Section } from '@/components/section';
+import { Select } from '@/components/select';
+import { TypedFishery, typedFishery } from '@/features/fisheries/fishery-fields';
+import { FisheryForm } from '@/features/fisheries/fishery-form';
+import { changeFishery, useFishery } from '@/features/fisheries/office-api';
+import { PeopleSections } from '@/features/fisheries/people-sections';
+import { OFFICE_ROLES, useMyFisheries } from '@/features/fisheries/use-my-fisheries';
+import { useDraftForm } from '@/hooks/use-draft-form';
+import { useHeld } from '@/hooks/use-held';
+
+/** A fishery's people and what it tells about itself. */
+export function FisheryScreen() {
+  const router = useRouter();
+  const { fisheryId } = useLocalSearchParams<{ fisheryId?: string }>();
+  const { all, mine } = useMyFisheries([...OFFICE_ROLES, 'head_bailiff']);
+  const chosen = mine.find(({ id }) => id === fisheryId) ?? mine[0];
+  return (
+    <Page
+      title={chosen?.name ?? 'Fishery'}
+      over="Fishery and people"
+      back={{ label: 'Office', href: '/office' }}
+    >
+      <Loaded
+        query={all}
+        waiting="Reading the fishery…"
+        empty={{
+          when: () => chosen === undefined,
+          show: <Empty title="No fishery">You keep no fishery. Its owner can give you a role.</Empty>,
+        }}
+      >
+        {() => (
+          <>
+            {mine.length > 1 ? (
+              <Select
+                label="Which fishery"
+                choices={mine.map(({ id, name }) => ({ key: id, label: name }))}
+                value={chosen?.id ?? null}
+                onChange={(id) => router.setParams({ fisheryId: id })}
+              />
+            ) : null}
+            {chosen ? <Fishery key={chosen.id} fisheryId={chosen.id} /> : null}
+          </>
+        )}
+      </Loaded>
+    </Page>
+  );
+}
+
+function Fishery({ fisheryId }: { fisheryId: string }) {
+  const fishery = useFishery(fisheryId);
+  return (
+    <Loaded query={fishery} waiting="Reading the fishery…">
+      {(value) => (
+        <>
+          {value.may.seePeople ? <PeopleSections fisheryId={fisheryId} /> : null}
+          {value.may.change ? <Details now={value} /> : <ReadDetails fishery={value} />}
+        </>
+      )}
+    </Loaded>
+  );
+}
+
+function Details({ now }: { now: FisheryView }) {
+  const { held, hold, newer } = useHeld(now);
+  const [kept, setKept] = useState(false);
+  return (
+    <Section title="Details">
+      {newer ? <NewerNote what="these details" onTake={() => hold(newer)} /> : null}
+      <DetailsForm
+        key={held.version}
+        fishery={held}
+        kept={kept}
+        onKept={(fishery) => {
+          hold(fishery);
+          setKept(true);
+        }}
+      />
+    </Section>
+  );
+}
+
+type FormProps = { fishery: FisheryView; kept: boolean; onKept: (fishery: FisheryView) => void };
+
+function DetailsForm({ fishery, kept, onKept }: FormProps) {
+  const { id, version, details } = fishery;
+  const form = useDraftForm({
+    form: `fishery:${id}:${String(version)}`,
+    schema: z.object({ details: TypedFishery }),
+    start: { details: typedFishery(details) },
+    send: ({ details: typed }) => changeFishery(id, { details: typed, version }),
+    onDone: onKept,
+  });
+  return (
+    <FormProvider {...form}>
+      <DraftFormFrame
+        form={form}
+        label="Details of the fishery"
+        act="Keep the details"
+        busyLabel="Keeping…"
+        beside={<Kept words={kept && !form.formState.isDirty ? 'The details are kept.' : null} />}
+      >
+        <FisheryForm />
+      </DraftFormFrame>
+    </FormProvider>
+  );
+}
+
+function ReadDetails({ fishery: { details } }: { fishery: FisheryView }) {
+  return (
+    <Section title="Details" note="The owner or a manager changes these.">
+      <Facts
+        facts={[
+          { term: 'Address', fact: details.address },
+          { term: 'Duty phone', fact: details.dutyPhone },
+          { term: 'Ambulance is met', fact: details.meetingPoint },
+          { term: 'Office', fact: details.officeContact },
+          { term: 'Opening', fact: details.opening },
+          { term: 'Gate code', fact: details.gateCode },
+        ]}
+      />
+    </Section>
+  );
+}
