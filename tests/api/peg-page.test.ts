@@ -321,6 +321,26 @@ describe('no export shows more than the screen', () => {
     await setAudiences(water.lake.details.audiences);
   }, 120_000);
 
+  test('and nothing tells a hidden depth by the line that goes down to it', async () => {
+    const public_ = { depth: 'public', bottom: 'public', spots: 'public', soundings: 'staff' } as const;
+    server.setNow('2027-07-19T09:00:00Z');
+    await setAudiences(public_);
+    const at = `/pegs/${water.peg.id}/section?bearingDeg=0&toM=60`;
+    const deep = SectionView.parse((await aStranger(server).get(at)).body).points;
+    await setAudiences({ ...public_, depth: 'staff' });
+    const hidden = SectionView.parse((await aStranger(server).get(at)).body).points;
+    expect(deep.some(({ depthM }) => depthM !== null && depthM > 1)).toBe(true);
+    expect(hidden.some(({ bottom }) => bottom !== null)).toBe(true);
+    // As if the bottom lay at the water's face: the same line at a range whatever is under it.
+    const near = deep.findIndex(({ depthM, rangeM }) => depthM !== null && depthM > 1 && rangeM < 30);
+    expect(hidden[near]?.lineOutM).toBeLessThan(deep[near]?.lineOutM ?? 0);
+    const [spot] = (await pageFor(aStranger(server))).spots ?? [];
+    expect(spot?.depthM).toBeNull();
+    for (const lengthM of [spot?.rangeM, spot?.xM, spot?.yM]) expect(Number.isInteger(lengthM)).toBe(true);
+    await setAudiences(public_);
+    expect(Number.isInteger((await pageFor(aStranger(server))).spots?.[0]?.rangeM)).toBe(false);
+  });
+
   test('and a sounding graded D is kept from all but staff', async () => {
     const content = await chartContent(server.server.source.manager, chartId);
     const [first, ...rest] = content?.built.soundings ?? [];

@@ -2,17 +2,27 @@ import { Problem, type ProblemBody } from '@mereward/shared/problems/problem';
 import type { ErrorRequestHandler, RequestHandler } from 'express';
 import { z } from 'zod';
 
-const BodyParserError = z.object({ type: z.string(), status: z.number() });
+/** A request that could not even be read, as the body's reader and the router tell it. */
+const Unreadable = z.object({ type: z.string().optional(), status: z.int().min(400).max(499) });
 
 function asProblem(error: unknown): Problem | null {
   if (error instanceof Problem) return error;
-  const parsed = BodyParserError.safeParse(error);
+  const parsed = Unreadable.safeParse(error);
   if (!parsed.success) return null;
-  if (parsed.data.type === 'entity.too.large')
+  const { type, status } = parsed.data;
+  if (error instanceof URIError)
+    return new Problem('invalid', 'This address can’t be read', {
+      detail: 'A sign in it is broken. Go back and follow the link again, or type the address anew.',
+    });
+  if (type === 'entity.too.large')
     return new Problem('too-large', 'That is more than one request may hold', {
       detail: 'Send it in smaller parts.',
     });
-  if (parsed.data.status === 400)
+  if (status === 415)
+    return new Problem('invalid', 'The request came in a form that can’t be read here', {
+      detail: 'Send JSON in UTF-8, as it is or packed with gzip, deflate or br.',
+    });
+  if (status === 400)
     return new Problem('invalid', 'The request could not be read as JSON', {
       detail: 'Nothing was kept. Send it again; if it keeps happening, reload the page.',
     });

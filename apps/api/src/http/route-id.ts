@@ -1,8 +1,12 @@
+import { Problem } from '@mereward/shared/problems/problem';
 import type { Request } from 'express';
 import { z } from 'zod';
 
-const Id = z.uuid();
-const NOWHERE = '00000000-0000-0000-0000-000000000000';
+const Id = z.uuid().toLowerCase(); // RFC 9562 reads either case; rows hold the lower
 
-/** A path parameter that must be an id, for routes that answer by themselves; anything else finds nothing. */
-export const idIn = (req: Request, name: string): string => Id.safeParse(req.params[name]).data ?? NOWHERE;
+/** A path parameter that must be an id; anything else finds nothing. */
+export function idIn(req: Request, name: string): string {
+  const id = Id.safeParse(req.params[name]);
+  if (!id.success) throw new Problem('not-found', 'There is nothing at this address');
+  return id.data;
+}

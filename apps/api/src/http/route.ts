@@ -1,7 +1,8 @@
 import type { Request, RequestHandler, Response, Router } from 'express';
-import { z } from 'zod';
+import type { z } from 'zod';
 import type { Ctx } from '../ctx';
 import { parse } from './parse';
+import { idIn } from './route-id';
 import { signedInOnly } from './session';
 import { inTransaction, reading } from './transaction';
 
@@ -39,14 +40,11 @@ export type Asked<Spec extends RouteSpec> = {
   req: Request;
 };
 
-const Id = z.uuid();
-const NOWHERE = '00000000-0000-0000-0000-000000000000';
-
 function asked<Spec extends RouteSpec>(spec: Spec, req: Request): Asked<Spec> {
   return {
     body: (spec.body ? parse(spec.body, req.body) : undefined) as Output<Spec['body']>,
     query: (spec.query ? parse(spec.query, req.query) : undefined) as Output<Spec['query']>,
-    id: (name) => Id.safeParse(req.params[name]).data ?? NOWHERE,
+    id: (name) => idIn(req, name),
     req,
   };
 }

@@ -25,12 +25,11 @@ const statics = (root: string): RequestHandler =>
   });
 
 function compressedSibling(root: string): RequestHandler {
-  const known = new Map<string, boolean>();
+  const known = new Set<string>(); // only what is there: addresses anybody makes up are not remembered
   const there = (path: string) => {
-    const seen = known.get(path);
-    if (seen !== undefined) return seen;
+    if (known.has(path)) return true;
     const found = existsSync(join(root, path));
-    known.set(path, found);
+    if (found) known.add(path);
     return found;
   };
   return (req, res, next) => {

@@ -39,6 +39,9 @@ const Gpx = z.looseObject({
 /** A morning’s walk at a point a second is about ten thousand. */
 const MOST_POINTS = 20_000;
 
+/** No tag of a GPX file comes near; one of a hundred thousand attributes would hold up everybody for seconds. */
+const LONGEST_TAG = /<[a-z_:][^<>]{4000}/i;
+
 const LISTS = new Set(['wpt', 'trk', 'trkseg', 'trkpt', 'rte', 'rtept']);
 
 const parser = new XMLParser({
@@ -81,6 +84,8 @@ export function readGpx(text: string): GpxRead {
     return nothing(
       `The file holds ${points} points; at most ${MOST_POINTS} can be read. Record fewer, or simplify the track first.`,
     );
+  if (LONGEST_TAG.test(text))
+    return nothing('The file holds a tag of thousands of letters, which no GPX file does. Export it again.');
   const wellFormed = XMLValidator.validate(text);
   if (wellFormed !== true) {
     const { line, msg } = wellFormed.err;

@@ -7,11 +7,9 @@ import { Not, type EntityManager } from 'typeorm';
 import { accountOf, holdsAny, type Ctx } from '../ctx';
 import { allowOnly, notFound } from '../http/deny';
 import { insertOnce, mustRepeat } from '../repeat';
+import { refuseWrongClock } from '../wrong-clock';
 import { findBoard } from './found';
 import { LAKE_CHANGERS, LEVEL_RECORDERS } from './policy';
-
-/** A phone's clock may run a little fast. */
-const CLOCK_SLACK_MS = 10 * 60_000;
 
 /** Keeps a reading of a gauge board and says what is unusual about it. */
 export async function recordLevel(ctx: Ctx, boardId: string, input: RecordLevel): Promise<LevelRecorded> {
@@ -19,11 +17,7 @@ export async function recordLevel(ctx: Ctx, boardId: string, input: RecordLevel)
   const { board, lake } = await findBoard(tx, boardId);
   allowOnly(actor, { fisheryId: lake.fisheryId, what: 'gauge board' }, LEVEL_RECORDERS);
   const at = new Date(input.at);
-  if (at.getTime() > now.getTime() + CLOCK_SLACK_MS)
-    throw new Problem('invalid', 'This reading lies in the future', {
-      detail: 'Look at the date and the time, and send it again.',
-      errors: [{ pointer: '/at', detail: 'Later than now.' }],
-    });
+  refuseWrongClock({ at, now, pointer: '/at', what: 'reading' });
   const recordedBy = accountOf(actor);
   const { id, levelM, levelText, note } = input;
   const before = await newest(tx, boardId, id);

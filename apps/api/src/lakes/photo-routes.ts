@@ -1,16 +1,15 @@
 import { AddPhoto, PHOTO_MOST_BYTES, PhotoView } from '@mereward/shared/files/contract';
 import type { Request, Response } from 'express';
-import { z } from 'zod';
 import type { Ctx } from '../ctx';
 import { allowPhotos, keepPhoto, type PhotoSubject } from '../files/service';
 import { fileStore } from '../files/store';
 import { parse } from '../http/parse';
 import { raw, type Route } from '../http/route';
+import { idIn } from '../http/route-id';
 import { serverOf } from '../http/server';
 import { inTransaction, reading } from '../http/transaction';
 import { receiveFile } from '../http/upload';
 import { findMark, findPeg } from './found';
-import { notFound } from '../http/deny';
 
 type FindSubject = (ctx: Ctx, id: string) => Promise<PhotoSubject>;
 
@@ -25,15 +24,14 @@ const ofMark: FindSubject = async ({ tx }, markId) => {
 
 /** Asks who may before the file comes in, and once more when it is kept. */
 const add = (find: FindSubject, name: 'peg' | 'mark') => async (req: Request, res: Response) => {
-  const id = z.uuid().safeParse(req.params[`${name}Id`]);
-  if (!id.success) throw notFound(name);
-  await reading(req, async (ctx) => allowPhotos(ctx, await find(ctx, id.data)));
+  const id = idIn(req, `${name}Id`);
+  await reading(req, async (ctx) => allowPhotos(ctx, await find(ctx, id)));
   const { bytes, fields } = await receiveFile(req, res, { field: 'photo', mostBytes: PHOTO_MOST_BYTES });
   const takenOn = fields['takenOn'] || null; // a form has no null
   const input = parse(AddPhoto, { caption: '', ...fields, takenOn });
   const store = fileStore(serverOf(req).config.filesDir);
   const view = await inTransaction(req, async (ctx) =>
-    keepPhoto(ctx, { input, bytes, subject: await find(ctx, id.data) }, store),
+    keepPhoto(ctx, { input, bytes, subject: await find(ctx, id) }, store),
   );
   res.status(202).json(view);
 };

@@ -1,5 +1,5 @@
 import { z } from 'zod';
-import { Position } from '../fisheries/contract';
+import { Position, Version } from '../fisheries/contract';
 import { LakePolygon, LevelNow, PhotoView } from '../lakes/contract';
 import { Bottom, Cover, Grade, Substrate } from '../surveys/contract';
 
@@ -203,7 +203,7 @@ export const SpotDetails = z.strictObject({
 });
 export type SpotDetails = z.infer<typeof SpotDetails>;
 /** PUT /api/pegs/:pegId/spots/:spotId answers SpotKept; DELETE takes it away. */
-export const PutSpot = z.strictObject({ details: SpotDetails, version: z.int().nullable() });
+export const PutSpot = z.strictObject({ details: SpotDetails, version: Version.nullable() });
 export type PutSpot = z.infer<typeof PutSpot>;
 
 export const SpotKept = z.object({ version: z.int() });
@@ -217,7 +217,7 @@ export const SpotView = z.object({
   xM: z.number(),
   yM: z.number(),
   usableRadiusM: z.number(),
-  rangeM: z.number(), // over the water, from the peg's origin mark
+  rangeM: z.number(), // over the water, from the peg's origin mark; with xM, yM to the metre when depths aren't shown
   lineOutM: z.number(),
   wrapsWhole: z.int(),
   remainderM: z.number(),

@@ -13,6 +13,8 @@ export function isTimeZone(zone: string): boolean {
   }
 }
 
+/** The version of what was looked at before a change, sent back with it. */
+export const Version = z.int().min(1).max(2_000_000_000);
 const words = (max: number) => z.string().trim().max(max);
 export const Position = z.tuple([z.number().min(-180).max(180), z.number().min(-90).max(90)]); // lon, lat
 export type Position = z.infer<typeof Position>;
@@ -42,7 +44,7 @@ export type FisheryDetails = z.infer<typeof FisheryDetails>;
 /** POST /api/fisheries makes one (its maker becomes owner); PUT /api/fisheries/:fisheryId changes it. */
 export const MakeFishery = z.strictObject({ id: z.uuid(), details: FisheryDetails });
 export type MakeFishery = z.infer<typeof MakeFishery>;
-export const ChangeFishery = z.strictObject({ details: FisheryDetails, version: z.int() });
+export const ChangeFishery = z.strictObject({ details: FisheryDetails, version: Version });
 export type ChangeFishery = z.infer<typeof ChangeFishery>;
 
 /** GET /api/fisheries/:fisheryId (public; `gateCode` is empty unless the reader is staff there). */

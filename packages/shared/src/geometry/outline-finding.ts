@@ -17,6 +17,7 @@ export type OutlineFindingCode =
   | 'unclosed'
   | 'too-few'
   | 'too-many'
+  | 'too-winding'
   | 'repeated'
   | 'turned'
   | 'self-crossing'

@@ -96,8 +96,13 @@ function closedTurned(ring: readonly LonLat[], index: number, findings: OutlineF
 }
 
 function shapeFindings(plane: readonly Point[][], origin: LonLat): OutlineFinding[] {
-  const crossings = ringCrossings(plane).map((crossing) => crossingFinding(crossing, origin));
-  if (crossings.length > 0) return crossings;
+  const crossings = ringCrossings(plane);
+  if (!crossings) {
+    const words =
+      'The outline runs to and fro so often that it can’t be checked for crossings; draw it along the shore, or simplify it first';
+    return [finding(['refused', 'too-winding'], words)];
+  }
+  if (crossings.length > 0) return crossings.map((crossing) => crossingFinding(crossing, origin));
   const findings: OutlineFinding[] = [];
   const [shore = [], ...islands] = plane;
   plane.forEach((ring, index) => {

@@ -10,14 +10,24 @@ export type Crossing = { rings: readonly [number, number]; at: Point };
 const TOUCH_M = 1e-6;
 
 /**
- * The first places where rings cross or touch themselves or one another, at most one for each pair of rings.
- * Rings are open, metres. Sides are swept from west to east, so a traced shore of n points costs about n·√n.
+ * Pairs of sides looked at before giving up. A traced shore of the most positions needs about three million; a line
+ * that runs to and fro needs as many as its positions squared, and would hold up everybody else for a minute.
  */
-export function ringCrossings(rings: readonly (readonly Point[])[]): Crossing[] {
+const MOST_PAIRS = 6e6;
+
+/**
+ * The first places where rings cross or touch themselves or one another, at most one for each pair of rings.
+ * Rings are open, metres. Sides are swept from west to east, so a traced shore of n points costs about n·√n. Null when
+ * the rings run to and fro so much that finding out would take too long.
+ */
+export function ringCrossings(rings: readonly (readonly Point[])[]): Crossing[] | null {
   const found = new Map<string, Crossing>();
   const open: Side[] = [];
+  let pairs = 0;
   for (const side of sidesFromWest(rings)) {
     let kept = 0;
+    pairs += open.length;
+    if (pairs > MOST_PAIRS) return null;
     for (const other of open) {
       if (other.maxXM < side.minXM - TOUCH_M) continue;
       open[kept++] = other;

@@ -1,6 +1,6 @@
 import { z } from 'zod';
 import { PhotoView } from '../files/contract';
-import { Position } from '../fisheries/contract';
+import { Position, Version } from '../fisheries/contract';
 
 export { AddPhoto, PhotoView } from '../files/contract';
 
@@ -9,7 +9,7 @@ const words = (max: number) => z.string().trim().max(max);
 /** GeoJSON Polygon (RFC 7946): one shore, then islands. Closed rings of [lon, lat]. */
 export const LakePolygon = z.strictObject({
   type: z.literal('Polygon'),
-  coordinates: z.array(z.array(Position)).min(1).max(60),
+  coordinates: z.array(z.array(Position).max(20_001)).min(1).max(60), // more positions are told of in words
 });
 export type LakePolygon = z.infer<typeof LakePolygon>;
 
@@ -56,7 +56,7 @@ export type LakeDetails = z.infer<typeof LakeDetails>;
 /** POST /api/fisheries/:fisheryId/lakes, PUT /api/lakes/:lakeId */
 export const MakeLake = z.strictObject({ id: z.uuid(), details: LakeDetails });
 export type MakeLake = z.infer<typeof MakeLake>;
-export const ChangeLake = z.strictObject({ details: LakeDetails, version: z.int() });
+export const ChangeLake = z.strictObject({ details: LakeDetails, version: Version });
 export type ChangeLake = z.infer<typeof ChangeLake>;
 
 /** POST /api/outlines/read: a file's text to an outline, with what was found wrong and whether it was mended. */
@@ -90,7 +90,7 @@ export const GaugeBoardDetails = z.strictObject({
 });
 export type GaugeBoardDetails = z.infer<typeof GaugeBoardDetails>;
 /** PUT /api/lakes/:lakeId/boards/:boardId makes or changes. */
-export const PutBoard = z.strictObject({ details: GaugeBoardDetails, version: z.int().nullable() });
+export const PutBoard = z.strictObject({ details: GaugeBoardDetails, version: Version.nullable() });
 export type PutBoard = z.infer<typeof PutBoard>;
 
 export const LevelReadingView = z.object({
@@ -155,7 +155,7 @@ export const MarkDetails = z.strictObject({
 });
 export type MarkDetails = z.infer<typeof MarkDetails>;
 /** PUT /api/lakes/:lakeId/marks/:markId */
-export const PutMark = z.strictObject({ details: MarkDetails, version: z.int().nullable() });
+export const PutMark = z.strictObject({ details: MarkDetails, version: Version.nullable() });
 export type PutMark = z.infer<typeof PutMark>;
 
 export const MarkView = z.object({
@@ -237,7 +237,7 @@ export type PegDetails = z.infer<typeof PegDetails>;
 /** POST /api/lakes/:lakeId/pegs (the new peg is last in walking order), PUT /api/pegs/:pegId */
 export const MakePeg = z.strictObject({ id: z.uuid(), details: PegDetails });
 export type MakePeg = z.infer<typeof MakePeg>;
-export const ChangePeg = z.strictObject({ details: PegDetails, version: z.int() });
+export const ChangePeg = z.strictObject({ details: PegDetails, version: Version });
 export type ChangePeg = z.infer<typeof ChangePeg>;
 
 /** PUT /api/lakes/:lakeId/peg-order: every peg of the lake once, in the order they are walked. */

@@ -1,4 +1,5 @@
 import { z } from 'zod';
+import { Version } from '../fisheries/contract';
 
 /**
  * A survey visit and its casts, exactly as they were observed. Nothing here is reduced: the reduction reads these
@@ -201,7 +202,7 @@ export const OpenVisit = z.strictObject({
 export type OpenVisit = z.infer<typeof OpenVisit>;
 
 /** PATCH /api/visits/:visitId/kit: a corrected constant; every cast of the visit is reduced again. */
-export const CorrectKit = z.strictObject({ kit: Kit, version: z.int() });
+export const CorrectKit = z.strictObject({ kit: Kit, version: Version });
 export type CorrectKit = z.infer<typeof CorrectKit>;
 
 /** POST /api/visits/:visitId/close */
