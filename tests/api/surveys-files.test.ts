@@ -109,6 +109,27 @@ describe('a casts file', () => {
     }
   });
 
+  test('with days that are none, or long before or after the visit, is refused row by row', async () => {
+    const visitId = await openedVisit(joan, water);
+    const at = [
+      '2027-02-30T09:00:00Z',
+      '1970-01-01T00:00:00Z',
+      '2031-04-03T09:00:00Z',
+      '2027-04-03T09:30:00Z',
+    ];
+    const text = `peg,mark,wraps,at_utc\n${at.map((each) => `FO7,M3,14,${each}`).join('\n')}\n`;
+    const answer = await joan.post(`/visits/${visitId}/imports`).send(file(text));
+    const rows = problem(answer.body).errors?.map(({ pointer }) => pointer);
+    expect(rows?.sort()).toEqual(['/rows/2/at_utc', '/rows/3/at_utc', '/rows/4/at_utc']);
+  });
+
+  test('whose note holds letters that can’t be kept is refused in its row', async () => {
+    const visitId = await openedVisit(joan, water);
+    const text = 'peg,mark,wraps,note\nFO7,M3,14,gravel \u202Ebar\n';
+    const answer = await joan.post(`/visits/${visitId}/imports`).send(file(text));
+    expect(problem(answer.body).errors?.[0]?.pointer).toBe('/rows/2/note');
+  });
+
   test('is for those who keep casts', async () => {
     const visitId = await openedVisit(joan, water);
     for (const at of [`/visits/${visitId}/imports`, `/visits/${visitId}/imports/preview`]) {

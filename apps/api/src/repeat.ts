@@ -34,7 +34,8 @@ export function mustRepeat(asked: Kept, kept: Kept): void {
   });
 }
 
-const plain = (content: unknown): unknown => JSON.parse(JSON.stringify(content));
+/** As it travels and as rows keep it: a nought with a sign is a nought. */
+export const plain = (content: unknown): unknown => JSON.parse(JSON.stringify(content));
 
 /** What to say when the version sent is not the row's. */
 export const staleVersion = (): Problem =>

@@ -3,6 +3,8 @@ import { Problem } from '@mereward/shared/problems/problem';
 import type { CloseVisit, VisitView } from '@mereward/shared/surveys/contract';
 import type { EntityManager } from 'typeorm';
 import type { Ctx } from '../ctx';
+import { refuseWrongClock } from '../wrong-clock';
+import { CLOCK_OUT_MS } from './cast-time';
 import { visitToKeep } from './find-visit';
 import { reduceVisitAgain } from './reduce-again';
 import { visitView } from './visit-view';
@@ -19,6 +21,7 @@ export async function closeVisit(ctx: Ctx, visitId: string, input: CloseVisit): 
       detail: 'Its last reading stays as it was kept.',
     });
   }
+  refuseWrongClock({ at: endedAt, now: ctx.now, pointer: '/endedAt', what: 'end', fastMs: CLOCK_OUT_MS });
   await refuseWrongEnd(tx, visit, endedAt);
   const closed = Object.assign(visit, { endedAt, gaugeEndM: input.gaugeEndM, version: visit.version + 1 });
   await tx.update(

@@ -6,6 +6,7 @@ import { readCasts, type CastRow, type CastsRead } from '@mereward/shared/survey
 import type { ImportCasts, ImportDone, ImportPreview } from '@mereward/shared/surveys/contract';
 import { createHash, randomUUID } from 'node:crypto';
 import { accountOf, type Ctx } from '../ctx';
+import { castTimeFault } from './cast-time';
 import { readCastsText, type CastsText } from './casts-table';
 import { visitToKeep, type VisitFound } from './find-visit';
 import { nextSeq, refuseAfterClosing } from './keep-cast';
@@ -22,7 +23,7 @@ export async function previewCasts(ctx: Ctx, visitId: string, input: ImportCasts
   const found = await visitToKeep(ctx, visitId);
   const file = readCastsText(input.text);
   const site = await visitSite(ctx.tx, found);
-  const read = readFor(site, file, input);
+  const read = readFor({ site, now: ctx.now }, file, input);
   const byRow = new Map(read.casts.map((cast) => [cast.row, cast]));
   return {
     heading: file.table.heading,
@@ -42,7 +43,7 @@ export async function importCasts(ctx: Ctx, visitId: string, input: ImportCasts)
   const found = await visitToKeep(ctx, visitId); // holds the visit: the same file twice at once is taken once
   if (await isImported(ctx, visitId, input.text)) return { added: 0, alreadyImported: true };
   const site = await visitSite(ctx.tx, found);
-  const { casts, errors } = readFor(site, readCastsText(input.text), input);
+  const { casts, errors } = readFor({ site, now: ctx.now }, readCastsText(input.text), input);
   if (errors.length > 0)
     throw new Problem(
       'invalid',
@@ -60,7 +61,7 @@ export async function importCasts(ctx: Ctx, visitId: string, input: ImportCasts)
 }
 
 function readFor(
-  { pegs, marks, visit }: VisitSite,
+  { site: { pegs, marks, visit }, now }: { site: VisitSite; now: Date },
   { table }: CastsText,
   { mapping }: ImportCasts,
 ): CastsRead {
@@ -70,15 +71,13 @@ function readFor(
     kit: visit.kit,
     startedAt: visit.startedAt.toISOString(),
   });
-  if (visit.endedAt === null) return read;
-  const endedAt = visit.endedAt;
-  const late = read.casts.filter((cast) => Date.parse(cast.observedAt) > endedAt.getTime());
-  const errors = late.map(({ row, observedAt }) => ({
-    row,
-    column: 'at_utc',
-    value: observedAt,
-    detail: 'This cast was made after the visit was closed.',
-  }));
+  const { endedAt } = visit;
+  const errors = read.casts.flatMap(({ row, observedAt }) => {
+    const at = new Date(observedAt);
+    const late = endedAt !== null && at.getTime() > endedAt.getTime();
+    const detail = late ? 'This cast was made after the visit was closed.' : castTimeFault(visit, at, now);
+    return detail === null ? [] : [{ row, column: 'at_utc', value: observedAt, detail }];
+  });
   return { ...read, errors: [...read.errors, ...errors] };
 }
 

@@ -6,6 +6,8 @@ import { isDeepStrictEqual } from 'node:util';
 import type { EntityManager } from 'typeorm';
 import { orConflict } from '../conflict';
 import { accountOf, type Ctx } from '../ctx';
+import { plain } from '../repeat';
+import { castTimeFault } from './cast-time';
 import { castView } from './cast-view';
 import { visitToKeep, type VisitFound } from './find-visit';
 import { castsOf, reduceVisitAgain } from './reduce-again';
@@ -22,6 +24,7 @@ export async function keepCast(ctx: Ctx, visitId: string, input: KeepCast): Prom
   const known = await tx.findOneBy(SurveyCast, { id: input.id });
   if (known) return castView(await sameCast(tx, { known, visitId }, input));
   refuseAfterClosing(found.visit, new Date(input.observedAt));
+  refuseWrongTime(ctx, found, input);
   const site = await visitSite(tx, found);
   if (!site.pegs.has(input.pegId))
     throw new Problem('invalid', 'That peg is not on this lake', {
@@ -69,6 +72,15 @@ export function refuseAfterClosing({ endedAt }: VisitFound['visit'], observedAt:
   });
 }
 
+function refuseWrongTime({ now }: Ctx, { visit }: VisitFound, { observedAt }: KeepCast): void {
+  const fault = castTimeFault(visit, new Date(observedAt), now);
+  if (fault)
+    throw new Problem('invalid', 'This cast can’t have been made then', {
+      detail: 'Put the time right and keep it again.',
+      errors: [{ pointer: '/observedAt', detail: fault }],
+    });
+}
+
 async function sameCast(
   tx: EntityManager,
   { known, visitId }: { known: SurveyCast; visitId: string },
@@ -91,7 +103,7 @@ async function sameCast(
     throw new Problem('conflict', 'This cast was taken back', {
       detail: 'Keep it again as a new cast if it counts.',
     });
-  if (known.visitId === visitId && isDeepStrictEqual(asKept, asSent)) return known;
+  if (known.visitId === visitId && isDeepStrictEqual(plain(asKept), plain(asSent))) return known;
   throw new Problem('conflict', 'Another cast was kept under this id', {
     detail: 'A kept cast never changes. Take it back and keep a new one.',
   });

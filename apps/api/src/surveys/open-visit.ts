@@ -5,10 +5,11 @@ import type { OpenVisit, VisitView } from '@mereward/shared/surveys/contract';
 import { isDeepStrictEqual } from 'node:util';
 import { orConflict } from '../conflict';
 import { accountOf, type Ctx } from '../ctx';
+import { plain } from '../repeat';
+import { refuseWrongClock } from '../wrong-clock';
+import { CLOCK_OUT_MS } from './cast-time';
 import { lakeFor } from './find-visit';
 import { visitView } from './visit-view';
-
-const DAY_MS = 86_400_000;
 
 /** Opens a survey visit. Sent twice, it is opened once. */
 export async function openVisit(ctx: Ctx, lakeId: string, input: OpenVisit): Promise<VisitView> {
@@ -27,10 +28,8 @@ export async function openVisit(ctx: Ctx, lakeId: string, input: OpenVisit): Pro
   });
   const known = await tx.findOneBy(SurveyVisit, { id: input.id });
   if (known) return visitView(ctx, { visit: sameVisit(known, visit), lake });
-  if (visit.startedAt.getTime() > now.getTime() + DAY_MS)
-    throw new Problem('invalid', 'This visit begins in the future', {
-      errors: [{ pointer: '/startedAt', detail: 'Give the time at which the first cast was made.' }],
-    });
+  const { startedAt: at } = visit;
+  refuseWrongClock({ at, now, pointer: '/startedAt', what: 'visit', fastMs: CLOCK_OUT_MS });
   const board = await tx.findOneBy(GaugeBoard, { id: input.boardId });
   if (board?.lakeId !== lakeId)
     throw wrongBoard('That gauge board is not on this lake. Choose one of its boards.');
@@ -58,7 +57,7 @@ function opening(visit: SurveyVisit): unknown[] {
 function sameVisit(known: SurveyVisit, sent: SurveyVisit): SurveyVisit {
   if (known.lakeId !== sent.lakeId)
     throw new Problem('not-found', 'There is no such survey visit on this lake');
-  if (isDeepStrictEqual(opening(known), opening(sent))) return known;
+  if (isDeepStrictEqual(plain(opening(known)), plain(opening(sent)))) return known;
   throw new Problem('conflict', 'A visit with this id was opened with other words', {
     detail: 'Nothing was changed. Open the visit that is there, or begin a new one.',
   });

@@ -1,3 +1,5 @@
+import { lettersFault } from '../problems/letters';
+import { plainWords } from '../problems/plain-words';
 import { readWraps, type Wraps } from '../units/wraps';
 import type { CastsGround } from './casts-file';
 import {
@@ -117,7 +119,8 @@ function instantOf(row: RowReader, startedAt: string): string | null {
   const iso = /^\d{4}-\d\d-\d\d[T ]\d\d:\d\d(:\d\d(\.\d+)?)?Z$/.test(text)
     ? new Date(text.replace(' ', 'T'))
     : null;
-  if (iso && !Number.isNaN(iso.getTime())) return iso.toISOString();
+  // A day that its month doesn't have is read as one of the next.
+  if (iso && iso.getUTCDate() === Number(text.slice(8, 10))) return iso.toISOString();
   return row.fault('at_utc', 'Give the time in UTC like 2027-04-03T09:40:00Z.');
 }
 
@@ -159,7 +162,9 @@ export function readObservation(
     note: row.text('note'),
   };
   if (pegId === null || aim === null || line === null || observedAt === null) return null;
-  const parsed = CastObservation.safeParse({
+  const strange = lettersFault(rest.note);
+  if (strange) row.fault('note', `${strange}.`);
+  const seen = {
     aim,
     sidestepM: 0,
     wrapsWhole: line.wraps.whole,
@@ -169,7 +174,8 @@ export function readObservation(
     dropCountS: null,
     smell: null,
     ...rest,
-  });
+  };
+  const parsed = CastObservation.safeParse(seen, { error: plainWords });
   if (parsed.success) return { pegId, observedAt, observation: parsed.data };
   for (const issue of parsed.error.issues)
     row.fault(COLUMN_OF[String(issue.path[0])] ?? 'note', `${issue.message}.`);
