@@ -17,6 +17,7 @@ import { toolEnvironment } from './machine.mjs';
 import { at, ownFolder } from './paths.mjs';
 import { run } from './run.mjs';
 import { contentHash } from './sources.mjs';
+import { splitExported } from './split-common.mjs';
 
 export const webFolder = at('apps', 'mobile', 'dist');
 export const apiFolder = at('apps', 'api', 'dist');
@@ -27,7 +28,7 @@ const shared = [
   'pnpm-lock.yaml',
   'scripts/lib/build.mjs',
 ];
-const webSources = ['apps/mobile', 'fonts', ...shared];
+const webSources = ['apps/mobile', 'fonts', 'scripts/lib/split-common.mjs', ...shared];
 const apiSources = [
   'apps/api/src',
   'apps/api/package.json',
@@ -143,6 +144,7 @@ export function buildWeb(note) {
       // The export keeps the face as a link to where this clone stands now; the file itself outlives a move.
       rmSync(join(next, 'fonts'), { recursive: true, force: true });
       cpSync(at('fonts'), join(next, 'fonts'), { recursive: true });
+      if (splitExported(next) === 0) note('the script all screens share was left whole');
       note('compressing');
       await compressBeside(next);
       rmSync(webFolder, { recursive: true, force: true });
