@@ -82,13 +82,14 @@ describe('meuse, log zinc', () => {
   });
 });
 
+const FIELD: Omit<KrigingSetup, 'samples'> = {
+  variogram: { model: 'spherical', nuggetM2: 1, partialSillM2: 1500, rangeM: 900 },
+  nuggetIs: 'field',
+};
+
 describe.each(['v150', 'v400', 'v1500'] as const)('volcano %s', (name) => {
-  const { samples, targets, checks, loo } = volcano(name);
-  const setup: KrigingSetup = {
-    samples,
-    variogram: { model: 'spherical', nuggetM2: 1, partialSillM2: 1500, rangeM: 900 },
-    nuggetIs: 'field',
-  };
+  const { samples, targets, checks } = volcano(name);
+  const setup: KrigingSetup = { samples, ...FIELD };
 
   test('predictions and variances from all points agree with gstat', () => {
     const got = predictGlobal(solveGlobal(setup), targets);
@@ -115,9 +116,15 @@ describe.each(['v150', 'v400', 'v1500'] as const)('volcano %s', (name) => {
       ),
     ).toBeLessThan(TOLERANCE);
   });
+});
 
-  test.runIf(loo)('leave-one-out predictions and variances agree with gstat', () => {
-    const got = leaveOneOut(setup);
+/** The reference left one out on the two smaller sets; of fifteen hundred points it holds the predictions alone. */
+describe.each(['v150', 'v400'] as const)('volcano %s', (name) => {
+  const { samples, loo } = volcano(name);
+
+  test('leave-one-out predictions and variances agree with gstat', () => {
+    expect(loo).toHaveLength(samples.valueM.length);
+    const got = leaveOneOut({ samples, ...FIELD });
     const predicted = samples.valueM.map((value, i) => value - got.residualM[i]!);
     expect(
       greatestDifference(
