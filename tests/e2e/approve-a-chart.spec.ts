@@ -1,12 +1,12 @@
 import { expectNoAxeFaults } from './support/axe';
-import { aPageOf } from './support/people';
-import { expect, test } from './support/site';
+import { test } from './support/people';
+import { expect } from './support/site';
 
 test('the draft of Ostle Pool is looked over, approved by another, published and withdrawn', async ({
-  browser,
+  pageOf,
 }) => {
   test.setTimeout(150_000);
-  const joan = await aPageOf(browser, { who: 'joan' });
+  const joan = await pageOf({ who: 'joan' });
   await joan.goto('/office/charts');
   await joan.getByRole('link', { name: /First look/ }).click();
   await expect(joan.getByRole('heading', { level: 1 })).toHaveText('First look');
@@ -20,14 +20,14 @@ test('the draft of Ostle Pool is looked over, approved by another, published and
   await expect(joan.getByText('waits for approval')).toBeVisible();
   await expect(joan.getByRole('button', { name: 'Approve and publish' })).toHaveCount(0);
 
-  const stranger = await aPageOf(browser, {});
+  const stranger = await pageOf();
   await stranger.goto('/water');
   await stranger.getByRole('link', { name: /Ostle Pool/ }).click();
   await expect(stranger.getByRole('heading', { level: 1 })).toHaveText('Ostle Pool');
   const lakePath = new URL(stranger.url()).pathname;
   await expect(stranger.getByText('No chart of this lake is published yet')).toBeVisible();
 
-  const idris = await aPageOf(browser, { who: 'idris' });
+  const idris = await pageOf({ who: 'idris' });
   await idris.goto('/office/charts');
   await idris.getByRole('link', { name: /First look/ }).click();
   await idris.getByRole('button', { name: 'Approve and publish' }).click();
@@ -39,7 +39,7 @@ test('the draft of Ostle Pool is looked over, approved by another, published and
   const chartPath = new URL(idris.url()).pathname;
   await idris.goBack();
 
-  const reader = await aPageOf(browser, {});
+  const reader = await pageOf();
   await reader.goto('/water');
   await expect(reader.getByRole('link', { name: /Ostle Pool/ })).toContainText(/chart \d{4}\.1/);
   await reader.goto(lakePath);
@@ -53,7 +53,7 @@ test('the draft of Ostle Pool is looked over, approved by another, published and
   await expect(idris.getByText('withdrawn', { exact: true })).toBeVisible();
   await expect(idris.getByRole('button', { name: 'Withdraw the chart' })).toHaveCount(0);
 
-  const late = await aPageOf(browser, {});
+  const late = await pageOf();
   await late.goto(chartPath);
   await expect(late.getByText(/The west shelf was dredged/).first()).toBeVisible();
   await late.goto(lakePath);

@@ -1,8 +1,8 @@
 import type { Page } from '@playwright/test';
 import { expectNoAxeFaults } from './support/axe';
-import { aPageOf, type Somebody } from './support/people';
+import { type Somebody, test } from './support/people';
 import { addressOf, demoIds, routes, type Ids } from './support/screens';
-import { expect, test } from './support/site';
+import { expect } from './support/site';
 
 /** Who looks at which screens; `undefined` is a stranger. Each screen is in one place at least. */
 const LOOKS: readonly { place: string; who: Somebody | undefined; sees: RegExp }[] = [
@@ -42,9 +42,9 @@ test('every screen of the client is looked at by somebody', () => {
 });
 
 for (const { place, who, sees } of LOOKS)
-  test(`${place} as ${who ?? 'a stranger'}: axe finds no fault by light or at dusk`, async ({ browser }) => {
+  test(`${place} as ${who ?? 'a stranger'}: axe finds no fault by light or at dusk`, async ({ pageOf }) => {
     test.setTimeout(240_000);
-    const page = await aPageOf(browser, who === undefined ? {} : { who });
+    const page = await pageOf(who === undefined ? {} : { who });
     for (const route of routes().filter((each) => sees.test(each)))
       await test.step(route, async () => {
         await page.emulateMedia({ colorScheme: 'light' });

@@ -1,8 +1,8 @@
 import type { Page } from '@playwright/test';
 import { VisitWithCasts } from '@mereward/shared/surveys/contract';
 import { keepCast, typeCast } from './support/cast-form';
-import { Asking, aPageOf } from './support/people';
-import { expect, test, type Site } from './support/site';
+import { Asking, test } from './support/people';
+import { expect, type Site } from './support/site';
 import { anOpenVisit, aStoryWater, type StoryWater } from './support/story-water';
 
 const NOW = '2027-04-03T08:30:00Z';
@@ -29,10 +29,10 @@ const castsOf = async (joan: Asking, visitId: string) =>
   (await joan.get(`/visits/${visitId}`, VisitWithCasts)).casts;
 
 test('a cast sent without a signal stays typed, says what to do, and is kept once there is one', async ({
-  browser,
+  pageOf,
   site,
 }) => {
-  const page = await aPageOf(browser, { who: 'joan', now: NOW });
+  const page = await pageOf({ who: 'joan', now: NOW });
   const { joan, visitId } = await atTheFirstCast(page, site);
   await typeCast(page, CAST);
   await page.context().setOffline(true);
@@ -47,10 +47,10 @@ test('a cast sent without a signal stays typed, says what to do, and is kept onc
 });
 
 test('a cast whose answer was lost is kept once: sent again, or found when the visit is read anew', async ({
-  browser,
+  pageOf,
   site,
 }) => {
-  const page = await aPageOf(browser, { who: 'joan', now: NOW });
+  const page = await pageOf({ who: 'joan', now: NOW });
   const { joan, visitId } = await atTheFirstCast(page, site);
   let cut = false;
   await page.route('**/api/visits/**', async (route) => {
@@ -90,8 +90,8 @@ test('a cast whose answer was lost is kept once: sent again, or found when the v
   expect(await castsOf(joan, visitId)).toHaveLength(2);
 });
 
-test('a half-typed cast is there again after a reload', async ({ browser, site }) => {
-  const page = await aPageOf(browser, { who: 'joan', now: NOW });
+test('a half-typed cast is there again after a reload', async ({ pageOf, site }) => {
+  const page = await pageOf({ who: 'joan', now: NOW });
   await atTheFirstCast(page, site);
   await typeCast(page, { ...CAST, wraps: '13' });
   await page.reload();
@@ -100,9 +100,9 @@ test('a half-typed cast is there again after a reload', async ({ browser, site }
   await expect(page.getByLabel('Float, pulls of 1 ft')).toHaveValue('8');
 });
 
-test('a form sent without a signal keeps every word, over a reload too', async ({ browser, site }) => {
+test('a form sent without a signal keeps every word, over a reload too', async ({ pageOf, site }) => {
   const water = await aStoryWater(await Asking.as('marian', site));
-  const page = await aPageOf(browser, { who: 'marian', now: NOW });
+  const page = await pageOf({ who: 'marian', now: NOW });
   await page.goto(`/office/lakes/${water.lakeId}/details`);
   await page.getByLabel('Name', { exact: true }).fill('Wordy Water');
   await page.getByRole('button', { name: 'Surroundings and emergency' }).click();

@@ -4,8 +4,8 @@ import { LakeView } from '@mereward/shared/lakes/contract';
 import { join } from 'node:path';
 import { fileURLToPath } from 'node:url';
 import { aPhoto } from '../support/pictures';
-import { Asking, aPageOf } from './support/people';
-import { expect, test } from './support/site';
+import { Asking, test } from './support/people';
+import { expect } from './support/site';
 
 const FILES = fileURLToPath(new URL('../reference/fixtures/09_formats/geojson', import.meta.url));
 
@@ -35,8 +35,8 @@ async function lakeAt(owner: Asking, page: Page): Promise<LakeView> {
   return owner.get(`/lakes/${id}`, LakeView);
 }
 
-test('somebody with a water makes their fishery and is its owner at once', async ({ browser }) => {
-  const page = await aPageOf(browser, { who: 'colin' });
+test('somebody with a water makes their fishery and is its owner at once', async ({ pageOf }) => {
+  const page = await pageOf({ who: 'colin' });
   await page.goto('/me');
   await expect(page.getByRole('navigation').getByRole('link', { name: 'Office' })).toHaveCount(0);
   await page.goto('/me/fishery');
@@ -55,10 +55,10 @@ test('somebody with a water makes their fishery and is its owner at once', async
 });
 
 test('a shore is read from a file: a fault is refused with its place, a wrong order is mended', async ({
-  browser,
+  pageOf,
   site,
 }) => {
-  const page = await aPageOf(browser, { who: 'marian' });
+  const page = await pageOf({ who: 'marian' });
   await page.goto('/office/lakes/new');
   await choose(page, 'Read it from a file', join(FILES, 'bowtie.geojson'));
   await expect(page.getByText('bowtie.geojson can’t be used as it is')).toBeVisible();
@@ -82,12 +82,12 @@ test('a shore is read from a file: a fault is refused with its place, a wrong or
 });
 
 test('an owner draws a lake by tapping and gives it a mark, a board, a reading and a peg with a photo', async ({
-  browser,
+  pageOf,
   site,
 }) => {
   test.setTimeout(120_000);
   const marian = await Asking.as('marian', site);
-  const page = await aPageOf(browser, { who: 'marian' });
+  const page = await pageOf({ who: 'marian' });
   await page.goto('/office/lakes');
   await page.getByRole('link', { name: 'Draw a lake' }).click();
   const sheet = page.getByLabel('Outline of the lake, to draw on');
@@ -167,7 +167,7 @@ test('an owner draws a lake by tapping and gives it a mark, a board, a reading a
     /picture|photo/i,
   );
 
-  const stranger = await aPageOf(browser, {});
+  const stranger = await pageOf();
   const { fisheries } = await marian.get('/fisheries', FisheryList);
   expect(fisheries[0]?.lakes.find(({ name }) => name === 'Tapped Water')).toMatchObject({ pegs: 1 });
   await stranger.goto(`/water/lakes/${lake.id}`);

@@ -1,8 +1,8 @@
 import type { Page } from '@playwright/test';
 import { VisitWithCasts } from '@mereward/shared/surveys/contract';
 import { readFile } from 'node:fs/promises';
-import { Asking, aPageOf } from './support/people';
-import { expect, test } from './support/site';
+import { Asking, test } from './support/people';
+import { expect } from './support/site';
 import { anOpenVisit, aStoryWater } from './support/story-water';
 
 const NOW = '2027-04-03T08:30:00Z';
@@ -20,14 +20,14 @@ async function choose(page: Page, button: string, name: string, rows: readonly s
 }
 
 test('casts come in from a table: columns mapped, faults named and taken away, whole or not at all, and once', async ({
-  browser,
+  pageOf,
   site,
 }) => {
   const water = await aStoryWater(await Asking.as('marian', site));
   const joan = await Asking.as('joan', site);
   const visitId = await anOpenVisit(joan, water);
   const casts = async () => (await joan.get(`/visits/${visitId}`, VisitWithCasts)).casts;
-  const page = await aPageOf(browser, { who: 'joan', now: NOW });
+  const page = await pageOf({ who: 'joan', now: NOW });
   await page.goto(`/bank/surveys/${visitId}`);
   await page.getByRole('link', { name: 'Bring casts from a file' }).click();
   const wraps = page.getByRole('combobox', { name: 'Whole wraps' });

@@ -52,7 +52,10 @@ test('a keyboard alone signs in, reads a chart and a peg, and keeps a cast', asy
   test.setTimeout(120_000);
   const water = await aStoryWater(await Asking.as('marian', site), { name: 'Keyboard Water' });
   const joan = await Asking.as('joan', site);
-  const visitId = await anOpenVisit(joan, water, { title: 'By keyboard' });
+  const visitId = await anOpenVisit(joan, water, {
+    title: 'By keyboard',
+    startedAt: new Date(Date.now() - 60_000).toISOString(),
+  });
   const nav = page.getByRole('navigation', { name: 'Places' });
   const title = page.getByRole('heading', { level: 1 });
 

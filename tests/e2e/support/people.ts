@@ -1,7 +1,7 @@
-import { request, type APIRequestContext, type Browser, type Page } from '@playwright/test';
+import { request, type APIRequestContext, type BrowserContext, type Page } from '@playwright/test';
 import { SignedIn } from '@mereward/shared/accounts/contract';
 import type { z } from 'zod';
-import { expect, type Site } from './site';
+import { expect, test as siteTest, type Site } from './site';
 
 /** The demo's people by first name, and their password. */
 export type Somebody = 'marian' | 'idris' | 'joan' | 'tom' | 'priya' | 'colin' | 'sofia';
@@ -38,7 +38,7 @@ export class Asking {
 }
 
 /** Signs in on a page the quick way: the cookie by the API, then the page finds it as after a reload. */
-export async function enter(page: Page, who: Somebody): Promise<void> {
+async function enter(page: Page, who: Somebody): Promise<void> {
   const answer = await page.request.post('/api/accounts/session', { data: signInOf(who) });
   const { account } = SignedIn.parse(await answer.json());
   await page.addInitScript((kept) => {
@@ -50,13 +50,21 @@ export async function enter(page: Page, who: Somebody): Promise<void> {
 
 type Wishes = { who?: Somebody; now?: string };
 
-/** A browser of somebody's own, signed in unless a stranger; its clock stands at `now` when one is given. */
-export async function aPageOf(browser: Browser, { who, now }: Wishes): Promise<Page> {
-  const page = await (await browser.newContext()).newPage();
-  if (now !== undefined) await page.clock.setFixedTime(now);
-  if (who !== undefined) await enter(page, who);
-  return page;
-}
+/** `pageOf`: a browser of somebody's own, signed in unless a stranger; its clock stands at `now` when one is given. */
+export const test = siteTest.extend<{ pageOf: (wishes?: Wishes) => Promise<Page> }>({
+  pageOf: async ({ browser }, use) => {
+    const opened: BrowserContext[] = [];
+    await use(async ({ who, now } = {}) => {
+      const context = await browser.newContext();
+      opened.push(context);
+      const page = await context.newPage();
+      if (now !== undefined) await page.clock.setFixedTime(now);
+      if (who !== undefined) await enter(page, who);
+      return page;
+    });
+    await Promise.all(opened.map((context) => context.close()));
+  },
+});
 
 /** Signs in as people do, by the form. */
 export async function signIn(page: Page, who: Somebody, next: string): Promise<void> {
