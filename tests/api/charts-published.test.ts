@@ -2,6 +2,7 @@ import { Chart } from '@mereward/db/entities/charts/chart';
 import { LIGHT } from '@mereward/api/charts/find-chart';
 import { ChartReview, ChartView } from '@mereward/shared/charts/contract';
 import { ProblemBody } from '@mereward/shared/problems/problem';
+import fc from 'fast-check';
 import { afterAll, beforeAll, describe, expect, test } from 'vitest';
 import { draftedChart, publishedChart } from '../support/charts';
 import { aPerson, aStranger, type Person } from '../support/people';
@@ -137,19 +138,69 @@ describe('a published chart', () => {
     });
   });
 
-  test.each([
-    ['its depths', `UPDATE chart SET depth = '\\x00' WHERE id = $1`],
-    ['its content', `UPDATE chart SET built = '{}' WHERE id = $1`],
-    ['its title', `UPDATE chart SET title = 'x' WHERE id = $1`],
-    ['its version', `UPDATE chart SET version = '2027.99' WHERE id = $1`],
-    ['its datum', `UPDATE chart SET datum_m = 0 WHERE id = $1`],
-    ['its approver', `UPDATE chart SET approved_by = NULL WHERE id = $1`],
-    ['its status back to draft', `UPDATE chart SET status = 'draft' WHERE id = $1`],
-    ['it at all', `DELETE FROM chart WHERE id = $1`],
-  ])('does not let even the database change %s', async (_, sql) => {
+  const MAY_CHANGE = ['status', 'superseded_by', 'withdrawn_reason', 'withdrawn_at'];
+  const columnsOf = async (): Promise<string[]> => {
+    const rows: { name: string }[] = await server.server.source.query(
+      `SELECT column_name AS name FROM information_schema.columns WHERE table_name = 'chart' ORDER BY ordinal_position`,
+    );
+    return rows.map(({ name }) => name).filter((name) => !MAY_CHANGE.includes(name));
+  };
+
+  test('does not let even the database change any column of it, or delete it', async () => {
+    const columns = await columnsOf();
+    expect(columns).toEqual(
+      expect.arrayContaining(['depth', 'built', 'version', 'datum_m', 'approved_by', 'title']),
+    );
+    const draft = await drafting();
     const before = await digestOf(id);
-    await expect(server.server.source.query(sql, [id])).rejects.toThrow(/published chart/);
+    const other = `(SELECT %s FROM chart WHERE id = $2)`;
+    for (const column of columns) {
+      const same = await server.server.source.query(
+        `SELECT (c.${column} IS NOT DISTINCT FROM d.${column}) AS same FROM chart c, chart d WHERE c.id = $1 AND d.id = $2`,
+        [id, draft],
+      );
+      const value = same[0].same ? 'NULL' : other.replace('%s', column);
+      const values = same[0].same ? [id] : [id, draft];
+      const change = server.server.source.query(
+        `UPDATE chart SET ${column} = ${value} WHERE id = $1`,
+        values,
+      );
+      await expect(change, column).rejects.toThrow(/published chart never changes/);
+    }
+    await expect(server.server.source.query('DELETE FROM chart WHERE id = $1', [id])).rejects.toThrow(
+      /is kept/,
+    );
     expect(await digestOf(id)).toBe(before);
+    await joan.delete(`/charts/${draft}`);
+  });
+
+  test('never goes back, whatever is tried in whatever order', async () => {
+    const rank = { published: 0, superseded: 1, withdrawn: 2 };
+    const states = fc.array(fc.constantFrom('draft', 'submitted', 'published', 'superseded', 'withdrawn'), {
+      maxLength: 4,
+    });
+    const runner = server.server.source.createQueryRunner();
+    await fc.assert(
+      fc.asyncProperty(states, async (tried) => {
+        await runner.startTransaction();
+        let reached = 0;
+        for (const status of tried) {
+          await runner.query('SAVEPOINT before_it');
+          const done = await runner
+            .query(`UPDATE chart SET status = $2 WHERE id = $1`, [id, status])
+            .then(() => true)
+            .catch(() => false);
+          if (!done) await runner.query('ROLLBACK TO SAVEPOINT before_it');
+          const at =
+            status === 'published' || status === 'superseded' || status === 'withdrawn' ? rank[status] : -1;
+          expect(done && at < reached).toBe(false);
+          if (done) reached = at;
+        }
+        await runner.rollbackTransaction();
+      }),
+      { numRuns: 30 },
+    );
+    await runner.release();
   });
 
   test('is not touched by a constant corrected later, a rebuild or a discard', async () => {

@@ -1,7 +1,9 @@
 import { Chart } from '@mereward/db/entities/charts/chart';
 import { ChartBuild } from '@mereward/db/entities/charts/chart-build';
+import { buildSource } from '@mereward/api/charts/build-source';
 import { LIGHT } from '@mereward/api/charts/find-chart';
 import { takeUpLostBuilds } from '@mereward/api/charts/jobs';
+import { makeChart } from '@mereward/api/charts/make-chart';
 import { ChartList, ChartReview, ChartView } from '@mereward/shared/charts/contract';
 import { ProblemBody } from '@mereward/shared/problems/problem';
 import { randomUUID } from 'node:crypto';
@@ -147,6 +149,18 @@ describe('a draft', () => {
 });
 
 describe('a build', () => {
+  test('tells each step in words and a share that only rises, to the end', async () => {
+    const chart = { lakeId: water.lake.id, visitIds: [surveyVisit], contourStepM: 0.5 };
+    const told: { step: string; share: number }[] = [];
+    makeChart(await buildSource(server.server.source.manager, chart), (step, share) =>
+      told.push({ step, share }),
+    );
+    const shares = told.map(({ share }) => share);
+    expect(shares).toEqual([...shares].sort((a, b) => a - b));
+    expect(shares.at(-1)).toBe(1);
+    expect(new Set(told.map(({ step }) => step)).size).toBeGreaterThan(4);
+  });
+
   test('of the same casts gives the same chart to the byte', async () => {
     const [one, other] = [await drafting(), await drafting()];
     const made = 'c.input_sha256, c.frame, c.depth, c.sigma, c.substrate, c.cover, c.built';

@@ -11,6 +11,7 @@ import {
   WithdrawChart,
 } from '@mereward/shared/charts/contract';
 import type { Ctx } from '../ctx';
+import { limitDrawings } from '../http/limits';
 import { deed, raw, read, type Route } from '../http/route';
 import { idIn } from '../http/route-id';
 import { reading } from '../http/transaction';
@@ -145,6 +146,7 @@ const pegRouteList: Route[] = [
       summary: 'A peg’s card, to print',
       signIn: 'open',
       answerType: 'application/pdf',
+      guards: [limitDrawings],
     },
     async (req, res) => {
       const { filename, pdf } = await reading(req, (ctx) => pegCard(ctx, idIn(req, 'pegId')));
