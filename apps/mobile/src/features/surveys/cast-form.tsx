@@ -72,15 +72,16 @@ export function CastForm({ lake, visit, casts }: Props) {
               />
             </View>
           ) : null}
-          <Button
-            label={`Keep cast ${seq}`}
-            kind="main"
-            bank
-            grow
-            busy={form.busy}
-            busyLabel="Keeping…"
-            onPress={cast.keep}
-          />
+          <View style={{ flexGrow: 1 }}>
+            <Button
+              label={`Keep cast ${seq}`}
+              kind="main"
+              bank
+              busy={form.busy}
+              busyLabel="Keeping…"
+              onPress={cast.keep}
+            />
+          </View>
         </>
       }
     >

@@ -35,6 +35,23 @@ export function ImportPreviewPart({ name, preview, reading, onMap }: Props) {
           Look whether the rows below say what was meant. Nothing is kept yet.
         </Note>
       )}
+      <Section title="How the first rows are read">
+        <List label="Rows">
+          {preview.sample.map(({ row, words, cells }) => (
+            <Row
+              key={row}
+              title={words === '' ? 'Cannot be read' : words}
+              note={`Row ${row}: ${cells.join(' | ')}`}
+            />
+          ))}
+        </List>
+        {rows > preview.sample.length ? (
+          <Text
+            size="small"
+            tone="inkSoft"
+          >{`and ${countWords(rows - preview.sample.length, 'row')} more`}</Text>
+        ) : null}
+      </Section>
       <Section title="Which column is which" {...(reading ? { note: 'Reading again…' } : {})}>
         <View style={{ flexDirection: 'row', flexWrap: 'wrap', gap: space.medium }}>
           {CAST_COLUMNS.map((column) => (
@@ -57,23 +74,6 @@ export function ImportPreviewPart({ name, preview, reading, onMap }: Props) {
             </View>
           ))}
         </View>
-      </Section>
-      <Section title="How the first rows are read">
-        <List label="Rows">
-          {preview.sample.map(({ row, words, cells }) => (
-            <Row
-              key={row}
-              title={words === '' ? 'Cannot be read' : words}
-              note={`Row ${row}: ${cells.join(' | ')}`}
-            />
-          ))}
-        </List>
-        {rows > preview.sample.length ? (
-          <Text
-            size="small"
-            tone="inkSoft"
-          >{`and ${countWords(rows - preview.sample.length, 'row')} more`}</Text>
-        ) : null}
       </Section>
     </>
   );

@@ -78,7 +78,7 @@ function UnitTurner({ form }: Pick<Props, 'form'>) {
       label={field.value}
       kind="quiet"
       bank
-      spoken={`Left over in ${UNIT_NAMES[field.value]}: change to ${UNIT_NAMES[next]}`}
+      spoken={`${field.value}, left over in ${UNIT_NAMES[field.value]}: change to ${UNIT_NAMES[next]}`}
       onPress={() => field.onChange(next)}
     />
   );

@@ -1,10 +1,8 @@
 import type { LakeView } from '@mereward/shared/lakes/contract';
 import type { Kit, VisitView } from '@mereward/shared/surveys/contract';
-import { View } from 'react-native';
 import { Facts } from '@/components/facts';
 import { LinkButton } from '@/components/link-button';
 import { Section } from '@/components/section';
-import { space } from '@/constants/layout';
 import { spacingWords } from '@/features/surveys/spacing-words';
 import { boardReads } from '@/features/surveys/visit-words';
 import { figure } from '@/lib/format';
@@ -12,36 +10,37 @@ import { clockTime, dayAndTime, dayName } from '@/lib/format-time';
 
 type Props = { visit: VisitView; lake: LakeView };
 
-/** When, who, at what water, with what. */
+/** When, who, at what water. */
 export function VisitFacts({ visit, lake }: Props) {
   return (
-    <View style={{ gap: space.large }}>
-      <Facts
-        facts={[
-          { term: 'When', fact: whenWords(visit, lake.zone) },
-          { term: 'Surveyor', fact: `${visit.surveyor.name}, ${visit.competence}` },
-          { term: 'Gauge board', fact: gaugeWords(visit, lake) },
-          { term: 'Wind', fact: windWords(visit) },
-          { term: 'Weather', fact: visit.weather.note },
-          { term: 'Water', fact: visit.clarity },
-          { term: 'Weed', fact: visit.weedState },
-          {
-            term: 'For the chart',
-            fact: visit.consentToPublish ? 'may be published' : 'not to be published',
-          },
-        ]}
-      />
-      <Section
-        title="Kit"
-        end={
-          visit.may.correct ? (
-            <LinkButton label="Correct the kit" href={`/bank/surveys/${visit.id}/kit`} bank />
-          ) : null
-        }
-      >
-        <Facts facts={kitFacts(visit.kit)} />
-      </Section>
-    </View>
+    <Facts
+      facts={[
+        { term: 'When', fact: whenWords(visit, lake.zone) },
+        { term: 'Surveyor', fact: `${visit.surveyor.name}, ${visit.competence}` },
+        { term: 'Gauge board', fact: gaugeWords(visit, lake) },
+        { term: 'Wind', fact: windWords(visit) },
+        { term: 'Weather', fact: visit.weather.note },
+        { term: 'Water', fact: visit.clarity },
+        { term: 'Weed', fact: visit.weedState },
+        { term: 'For the chart', fact: visit.consentToPublish ? 'may be published' : 'not to be published' },
+      ]}
+    />
+  );
+}
+
+/** With what the casts were made, and the way to put it right. */
+export function VisitKit({ visit }: Pick<Props, 'visit'>) {
+  return (
+    <Section
+      title="Kit"
+      end={
+        visit.may.correct ? (
+          <LinkButton label="Correct the kit" href={`/bank/surveys/${visit.id}/kit`} bank />
+        ) : null
+      }
+    >
+      <Facts facts={kitFacts(visit.kit)} />
+    </Section>
   );
 }
 

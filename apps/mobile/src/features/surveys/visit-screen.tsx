@@ -13,7 +13,7 @@ import { useLake } from '@/features/lakes/api';
 import { useVisit } from '@/features/surveys/api';
 import { CastsSection } from '@/features/surveys/casts-section';
 import { CoverageSection } from '@/features/surveys/coverage-section';
-import { VisitFacts } from '@/features/surveys/visit-facts';
+import { VisitFacts, VisitKit } from '@/features/surveys/visit-facts';
 import { useThreeColumns } from '@/hooks/use-wide';
 
 /** One survey visit: what it was made with, how well it covers each peg, its casts. */
@@ -60,25 +60,36 @@ export function VisitScreen() {
 function Visit({ value, lake }: { value: VisitWithCasts; lake: LakeView }) {
   const { visit, casts } = value;
   const beside = useThreeColumns();
+  const facts = <VisitFacts visit={visit} lake={lake} />;
+  const kit = <VisitKit visit={visit} />;
+  const made =
+    casts.length > 0 ? (
+      <CastsSection value={value} lake={lake} />
+    ) : (
+      <Section title="Casts">
+        <NoCasts value={value} />
+      </Section>
+    );
+  const coverage = casts.length > 0 ? <CoverageSection value={value} lake={lake} bare={beside} /> : null;
+  if (!beside)
+    return (
+      <>
+        {facts}
+        {coverage}
+        {kit}
+        {made}
+      </>
+    );
   return (
     <>
-      <View style={{ flexDirection: beside ? 'row' : 'column', gap: beside ? space.huge : space.large }}>
-        <View style={beside ? { flex: 1, minWidth: 0 } : undefined}>
-          <VisitFacts visit={visit} lake={lake} />
+      <View style={{ flexDirection: 'row', gap: space.huge }}>
+        <View style={{ flex: 1, minWidth: 0, gap: space.large }}>
+          {facts}
+          {kit}
         </View>
-        {casts.length > 0 ? (
-          <View style={beside ? { flex: 1, minWidth: 0 } : undefined}>
-            <CoverageSection value={value} lake={lake} bare={beside} />
-          </View>
-        ) : null}
+        <View style={{ flex: 1, minWidth: 0 }}>{coverage}</View>
       </View>
-      {casts.length > 0 ? (
-        <CastsSection value={value} lake={lake} />
-      ) : (
-        <Section title="Casts">
-          <NoCasts value={value} />
-        </Section>
-      )}
+      {made}
     </>
   );
 }
