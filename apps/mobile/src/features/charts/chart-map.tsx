@@ -1,7 +1,7 @@
 import { useMemo, useState } from 'react';
 import { palettes } from '@mereward/shared/charts/drawing/palette';
 import { zoomedView } from '@mereward/shared/charts/drawing/view-moves';
-import { distanceBetweenM, type Point } from '@mereward/shared/geometry/plane';
+import { distanceBetweenM, type Point } from '@mereward/shared/geometry/point';
 import { View, type LayoutChangeEvent } from 'react-native';
 import { Button } from '@/components/button';
 import { space } from '@/constants/layout';

@@ -7,7 +7,8 @@ import { length } from '@/lib/format';
 import { dayAndTime, dayRange } from '@/lib/format-time';
 import type { ChartFileTerms } from './chart-file-terms';
 import { isobathFigure, stepFor } from './depth-format';
-import { bottomOf, groundOfChart, layersOf, raisedNowM } from './readied-chart';
+import { bottomOf, layersOf } from './chart-part';
+import { groundOfChart, raisedNowM } from './readied-chart';
 
 /** Landscape, in the proportion of A paper. */
 export const SHEET_PX = { widthPx: 1600, heightPx: 1131 } as const;

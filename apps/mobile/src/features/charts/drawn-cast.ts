@@ -1,7 +1,7 @@
 import type { SectionPoint } from '@mereward/shared/charts/contract';
 import type { DrawnCast } from '@mereward/shared/charts/drawing/cast-marks';
 import { recastEllipse } from '@mereward/shared/charts/recast-ellipse';
-import { distanceBetweenM, planeBearingDeg, pointAlong, type Point } from '@mereward/shared/geometry/plane';
+import { distanceBetweenM, planeBearingDeg, pointAlong, type Point } from '@mereward/shared/geometry/point';
 import { insideOutline, type Outline } from '@mereward/shared/geometry/polygon';
 import { pointAtLineOut, wrapRangesM } from './section-words';
 

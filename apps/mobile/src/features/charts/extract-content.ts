@@ -2,10 +2,10 @@ import type { PegPageView } from '@mereward/shared/charts/contract';
 import { groundOf } from '@mereward/shared/charts/drawing/ground';
 import type { Line } from '@mereward/shared/charts/drawing/mark';
 import type { View } from '@mereward/shared/charts/drawing/view';
-import { pointAlong, type Point } from '@mereward/shared/geometry/plane';
+import { pointAlong, type Point } from '@mereward/shared/geometry/point';
 import type { Outline } from '@mereward/shared/geometry/polygon';
 import type { MapContent } from './map-layers';
-import { bottomOf, layersOf } from './readied-chart';
+import { bottomOf, layersOf } from './chart-part';
 
 type Extract = NonNullable<PegPageView['extract']>;
 
@@ -48,22 +48,19 @@ function outlineOf(rings: readonly Line[]): Outline {
   return { shore, islands };
 }
 
-type Page = { widthPx: number; heightPx: number };
-
 /** An extract is this wide at least; no more of it may show. */
 const EXTRACT_ACROSS_M = 116;
 
 /** Below the peg there's room for its number and the scale. */
 const FOOT_PX = 74;
 
-/** Looking out from the peg: it stands at the foot of the picture, its water above it. */
+type Page = { widthPx: number; heightPx: number };
+
+/** Looking out from the peg: it stands at the foot of the picture, its water above it. No wider than the extract. */
 export function outlookView(extract: Extract, reachM: number, { widthPx, heightPx }: Page): View {
-  const pxPerM = Math.max(
-    Math.min((heightPx - FOOT_PX) / reachM, widthPx / (reachM * 0.9)),
-    widthPx / EXTRACT_ACROSS_M,
-  );
+  const pxPerM = Math.min((heightPx - FOOT_PX) / reachM, widthPx / (reachM * 0.9));
   return {
-    widthPx,
+    widthPx: Math.min(widthPx, Math.floor(EXTRACT_ACROSS_M * pxPerM)),
     heightPx,
     pxPerM,
     centre: pointAlong(extract.originM, extract.facingDeg, (heightPx / 2 - FOOT_PX) / pxPerM),

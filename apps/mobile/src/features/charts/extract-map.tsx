@@ -8,13 +8,15 @@ import { PLAIN_SVG, toSvg } from '@mereward/shared/charts/drawing/to-svg';
 import { stickWords } from '@mereward/shared/charts/spot-words';
 import { View } from 'react-native';
 import { useTheme } from '@/hooks/use-theme';
+import { useThreeColumns } from '@/hooks/use-wide';
 import { useUnits } from '@/hooks/use-units';
 import { isobathFigure } from './depth-format';
 import { extractContent, outlookView } from './extract-content';
 import { spotCast } from './spot-cast';
 import { SvgPicture } from '@/components/svg-picture';
 
-const HEIGHT_PX = 360;
+const PHONE_HEIGHT_PX = 390;
+const WIDE_HEIGHT_PX = 500;
 const LEAST_REACH_M = 45;
 const PAST_SPOT_M = 14;
 
@@ -25,6 +27,7 @@ export function ExtractMap({ page, spot, label }: Props) {
   const { extract } = page;
   const { name } = useTheme();
   const units = useUnits();
+  const heightPx = useThreeColumns() ? WIDE_HEIGHT_PX : PHONE_HEIGHT_PX;
   const [widthPx, setWidthPx] = useState(0);
   const content = useMemo(() => (extract ? extractContent(page, extract) : null), [page, extract]);
   const svg = useMemo(() => {
@@ -34,8 +37,10 @@ export function ExtractMap({ page, spot, label }: Props) {
       0,
       ...(page.spots ?? []).map(({ xM, yM }) => Math.hypot(xM - extract.originM.xM, yM - extract.originM.yM)),
     );
-    const size = { widthPx, heightPx: HEIGHT_PX };
-    const view = outlookView(extract, Math.max(LEAST_REACH_M, farthestM + PAST_SPOT_M), size);
+    const view = outlookView(extract, Math.max(LEAST_REACH_M, farthestM + PAST_SPOT_M), {
+      widthPx,
+      heightPx,
+    });
     const cast = spot ? spotCast(extract.originM, spot, units.stickSpacingM) : null;
     const marks = drawMap(
       { ...content, cast: null },
@@ -51,22 +56,25 @@ export function ExtractMap({ page, spot, label }: Props) {
       spot && cast ? [...castMarks(cast, palette, view), ...spotMarks([spot], palette, spot.id)] : [];
     const bar = {
       x: 14,
-      y: HEIGHT_PX - 20,
-      mostPx: widthPx * 0.28,
+      y: heightPx - 20,
+      mostPx: view.widthPx * 0.28,
       stickSpacingM: units.stickSpacingM,
       sticks: stickWords(units.stickSpacingM),
     };
     const round = [
       ...scaleBarMarks(view, bar, palette),
-      ...northMarks(view, { x: widthPx - 30, y: 38 }, palette),
+      ...northMarks(view, { x: view.widthPx - 42, y: 42 }, palette),
     ];
     const layers = [{ view, atPx: { x: 0, y: 0 }, marks: [...marks, ...chosen] }, { marks: round }];
-    return toSvg({ ...size, ground: palette.paper, layers }, { ...PLAIN_SVG, idPrefix: 'extract' });
-  }, [content, extract, name, page, spot, units, widthPx]);
+    return toSvg(
+      { widthPx: view.widthPx, heightPx, ground: palette.paper, layers },
+      { ...PLAIN_SVG, idPrefix: 'extract' },
+    );
+  }, [content, extract, name, page, spot, units, widthPx, heightPx]);
   if (!extract) return null;
   return (
     <View
-      style={{ minHeight: HEIGHT_PX, overflow: 'hidden' }}
+      style={{ minHeight: heightPx, overflow: 'hidden' }}
       onLayout={({ nativeEvent }) => setWidthPx(Math.round(nativeEvent.layout.width))}
     >
       {svg ? <SvgPicture svg={svg} label={label} /> : null}

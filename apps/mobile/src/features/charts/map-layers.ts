@@ -15,7 +15,7 @@ import { pegMarks, type DrawnPeg } from '@mereward/shared/charts/drawing/shore-m
 import { PLAIN_SVG, toSvg } from '@mereward/shared/charts/drawing/to-svg';
 import { toPage, type View } from '@mereward/shared/charts/drawing/view';
 import { grownView } from '@mereward/shared/charts/drawing/view-moves';
-import { distanceBetweenM } from '@mereward/shared/geometry/plane';
+import { distanceBetweenM } from '@mereward/shared/geometry/point';
 import { stickWords } from '@mereward/shared/charts/spot-words';
 import { isobathFigure } from './depth-format';
 import { OVERSCAN } from './map-surface-props';
@@ -100,6 +100,6 @@ export function fixedLayer({ view, palette }: Pen, stickSpacingM: number): strin
     stickSpacingM,
     sticks: stickWords(stickSpacingM),
   };
-  const marks = [...scaleBarMarks(view, bar, palette), ...northMarks(view, { x: 26, y: 42 }, palette)];
+  const marks = [...scaleBarMarks(view, bar, palette), ...northMarks(view, { x: 40, y: 42 }, palette)];
   return toSvg({ widthPx, heightPx, ground: null, layers: [{ marks }] }, { ...PLAIN_SVG, idPrefix: 'fixed' });
 }

@@ -11,7 +11,7 @@ import { useUnits } from '@/hooks/use-units';
 import { depthNow } from './depth-format';
 import { pegOutlook } from './peg-outlook';
 import { PEG_STATUS } from './peg-words';
-import { layersOf } from './readied-chart';
+import { layersOf } from './chart-part';
 
 const OUTLOOK_WRAPS = 10;
 

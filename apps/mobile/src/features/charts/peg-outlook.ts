@@ -1,7 +1,7 @@
 import type { ChartLayers } from '@mereward/shared/charts/chart-reading';
 import { readChart } from '@mereward/shared/charts/chart-reading';
 import { BOTTOM_GLYPHS } from '@mereward/shared/charts/drawing/bottom-glyphs';
-import { pointAlong, type Point } from '@mereward/shared/geometry/plane';
+import { pointAlong, type Point } from '@mereward/shared/geometry/point';
 
 /** What lies straight out from a peg at one range. */
 export type PegOutlook = { depthM: number | null; bottom: string | null };

@@ -1,6 +1,7 @@
 import { useState } from 'react';
 import { useLocalSearchParams } from 'expo-router';
 import type { PegPageView } from '@mereward/shared/charts/contract';
+import type { PegDetails } from '@mereward/shared/lakes/contract';
 import { View } from 'react-native';
 import { Empty } from '@/components/empty';
 import { LinkButton } from '@/components/link-button';
@@ -11,6 +12,7 @@ import { Section } from '@/components/section';
 import { StatusShape } from '@/components/status-shape';
 import { Text } from '@/components/text';
 import { MEASURE_PX, space } from '@/constants/layout';
+import { useThreeColumns, useWide } from '@/hooks/use-wide';
 import { dayAndTime, dayName } from '@/lib/format-time';
 import { usePegPage } from './api';
 import { CardButton } from './card-button';
@@ -29,13 +31,14 @@ import { SpotsTable } from './spots-table';
 
 function InFront({ page }: { page: PegPageView }) {
   const [spotId, setSpotId] = useState<string | null>(null);
+  const beside = useThreeColumns();
   const spots = page.spots ?? [];
   const spot = spots.find(({ id }) => id === spotId) ?? spots[0] ?? null;
   const water = { levelM: page.levelNow?.levelM ?? null, datumM: page.chart?.datumM ?? 0 };
   const reasons = layerReasons(page.layerNotes);
   return (
     <View style={{ gap: space.page }}>
-      <View style={{ marginHorizontal: -space.page }}>
+      <View style={{ marginHorizontal: beside ? 0 : -space.page }}>
         <ExtractMap
           page={page}
           spot={spot}
@@ -69,24 +72,34 @@ function InFront({ page }: { page: PegPageView }) {
 
 function levelLine({ levelNow, fishery }: PegPageView): string {
   if (!levelNow) return 'no level read yet, so depths are at datum';
-  return `level ${levelNow.boardReadsM.toFixed(2)} m on ${levelNow.boardCode}, read ${dayAndTime(levelNow.at, fishery.zone)}`;
+  return `the chart’s depths are at datum; the water stands at ${levelNow.boardReadsM.toFixed(2)} m on ${levelNow.boardCode}, read ${dayAndTime(levelNow.at, fishery.zone)}`;
 }
 
-function PegSheet({ page }: { page: PegPageView }) {
-  const details = pegDetailsOf(page);
-  const closed = details && details.status !== 'open' ? details : null;
+function Warnings({ details }: { details: PegDetails }) {
+  const { status, statusReason, statusUntil } = details;
+  const until = statusUntil && `Until ${dayName(statusUntil)}.`;
   return (
     <>
-      {closed ? (
-        <Note kind={closed.status === 'closed' ? 'danger' : 'caution'} title={`This peg is ${closed.status}`}>
-          {[closed.statusReason, closed.statusUntil && `Until ${dayName(closed.statusUntil)}.`]
-            .filter(Boolean)
-            .join(' ') || 'Ask the fishery.'}
+      {status === 'open' ? null : (
+        <Note kind={status === 'closed' ? 'danger' : 'caution'} title={`This peg is ${status}`}>
+          {[statusReason, until].filter(Boolean).join('. ') || 'Ask the fishery.'}
         </Note>
-      ) : null}
-      {details ? <OverheadNote details={details} /> : null}
-      <InFront page={page} />
+      )}
+      <OverheadNote details={details} />
+    </>
+  );
+}
+
+function AboutThePeg({ page, details }: { page: PegPageView; details: PegDetails | null }) {
+  const notes = [details?.notesPublic, details?.notesMembers, details?.notesStaff].filter(Boolean);
+  return (
+    <>
       <PegPhotos photos={page.photos} title={pegTitle(page)} />
+      {notes.map((words) => (
+        <Text key={words} style={{ maxWidth: MEASURE_PX }}>
+          {words}
+        </Text>
+      ))}
       {details ? (
         <>
           <PegHazards details={details} />
@@ -96,11 +109,6 @@ function PegSheet({ page }: { page: PegPageView }) {
       ) : (
         <Note kind="caution">This page is older than the server: load it again to read the peg’s facts.</Note>
       )}
-      {[details?.notesPublic, details?.notesMembers, details?.notesStaff].filter(Boolean).map((words) => (
-        <Text key={words} style={{ maxWidth: MEASURE_PX }}>
-          {words}
-        </Text>
-      ))}
       <PegEmergency page={page} details={details} />
       <Section title="A count on your own sticks">
         <CountConverter />
@@ -109,14 +117,36 @@ function PegSheet({ page }: { page: PegPageView }) {
   );
 }
 
+const WATER_WIDTH_PX = 580;
+
+function PegSheet({ page }: { page: PegPageView }) {
+  const details = pegDetailsOf(page);
+  const beside = useThreeColumns();
+  return (
+    <>
+      {details ? <Warnings details={details} /> : null}
+      <View style={beside ? { flexDirection: 'row', gap: space.huge } : { gap: space.large }}>
+        <View style={beside ? { flexBasis: WATER_WIDTH_PX, flexShrink: 1 } : undefined}>
+          <InFront page={page} />
+        </View>
+        <View style={[{ gap: space.large }, beside && { flex: 1, minWidth: 0 }]}>
+          <AboutThePeg page={page} details={details} />
+        </View>
+      </View>
+    </>
+  );
+}
+
 /** A peg's own page: what an angler reads the night before and at the water. */
 export function PegScreen() {
   const { pegId } = useLocalSearchParams<{ pegId: string }>();
   const page = usePegPage(pegId);
+  const wide = useWide();
   const { lake, fishery } = page.data ?? {};
   const details = page.data ? pegDetailsOf(page.data) : null;
   return (
     <Page
+      width="wide"
       title={page.data ? pegTitle(page.data) : 'Peg'}
       over={lake && fishery ? `${lake.name} · ${fishery.name}` : undefined}
       back={
@@ -125,7 +155,7 @@ export function PegScreen() {
           : { label: 'Water', href: '/water' }
       }
       end={details ? <StatusShape {...PEG_STATUS[details.status]} /> : undefined}
-      actions={page.data ? <CardButton pegId={pegId} number={page.data.number} grow /> : undefined}
+      actions={page.data ? <CardButton pegId={pegId} number={page.data.number} grow={!wide} /> : undefined}
     >
       <Loaded query={page} waiting="Reading the peg…">
         {(value) => <PegSheet page={value} />}

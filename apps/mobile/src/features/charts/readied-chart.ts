@@ -1,10 +1,6 @@
-import { decodeClasses, decodeDepth, decodeSigma, fromBase64 } from '@mereward/shared/charts/chart-encoding';
 import { readChart, type ChartLayers, type ChartReading } from '@mereward/shared/charts/chart-reading';
-import { unknownBottom } from '@mereward/shared/charts/bottom-map';
 import type { ChartView } from '@mereward/shared/charts/contract';
-import { bottomAreas, type BottomArea } from '@mereward/shared/charts/drawing/bottom-areas';
 import { groundOf, type Ground } from '@mereward/shared/charts/drawing/ground';
-import { emptyGrid } from '@mereward/shared/charts/grid';
 import { toPlane, type LonLat, type Point } from '@mereward/shared/geometry/plane';
 import type { Outline } from '@mereward/shared/geometry/polygon';
 import type { LakePolygon } from '@mereward/shared/lakes/contract';
@@ -14,25 +10,6 @@ export function planeOutline(polygon: LakePolygon, origin: LonLat): Outline {
   const rings = polygon.coordinates.map((ring) => ring.slice(0, -1).map((place) => toPlane(origin, place)));
   const [shore = [], ...islands] = rings;
   return { shore, islands };
-}
-
-export type ChartPart = Pick<ChartView, 'frame' | 'depth' | 'sigma' | 'substrate' | 'cover'>;
-
-/** The chart's grids out of their bytes; a layer this reader may not see is empty. Null without any grid. */
-export function layersOf({ frame, depth, sigma, substrate, cover }: ChartPart): ChartLayers | null {
-  if (!frame) return null;
-  return {
-    depth: depth ? decodeDepth(fromBase64(depth), frame) : emptyGrid(frame),
-    sigma: sigma ? decodeSigma(fromBase64(sigma), frame) : emptyGrid(frame),
-    substrate: substrate ? decodeClasses(fromBase64(substrate), frame) : unknownBottom(frame),
-    cover: cover ? decodeClasses(fromBase64(cover), frame) : unknownBottom(frame),
-  };
-}
-
-/** Bottom areas of the layers that are there. */
-export function bottomOf(part: ChartPart, layers: ChartLayers | null): BottomArea[] {
-  if (!layers) return [];
-  return bottomAreas(part.substrate ? layers.substrate : null, part.cover ? layers.cover : null);
 }
 
 export type GroundTerms = { raisedM: number; stepM: number; showDepth: boolean };

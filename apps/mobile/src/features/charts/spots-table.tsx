@@ -27,7 +27,7 @@ const useStyles = themed((c) => ({
   line: { flexDirection: 'row', alignItems: 'baseline', gap: space.small },
   chosen: { backgroundColor: c.floatTint },
   name: { flex: 1, minWidth: 0 },
-  figure: { width: 76, textAlign: 'right' },
+  figure: { width: 80, textAlign: 'right' },
   bottom: { textAlign: 'right' },
 }));
 
@@ -51,7 +51,7 @@ export function SpotsTable({ spots, spotId, onSpot, water }: Props) {
           Spot
         </Text>
         <Text size="small" tone="inkSoft" style={styles.figure}>
-          {`wraps of ${stickWords(units.stickSpacingM)}`}
+          {`${stickWords(units.stickSpacingM)} wraps`}
         </Text>
         <Text size="small" tone="inkSoft" style={styles.figure}>
           {water.levelM === null ? 'at datum' : 'today'}

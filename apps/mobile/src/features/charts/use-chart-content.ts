@@ -7,7 +7,8 @@ import type { ShownLayers } from './chart-layers';
 import { stepFor } from './depth-format';
 import type { MapContent } from './map-layers';
 import { sharedLetters } from './peg-words';
-import { bottomOf, groundOfChart, layersOf, raisedNowM } from './readied-chart';
+import { bottomOf, layersOf } from './chart-part';
+import { groundOfChart, raisedNowM } from './readied-chart';
 
 /** Pegs as a map numbers them. */
 export function pegsForMap<P extends { number: string }>(pegs: readonly P[]): P[] {

@@ -1,4 +1,4 @@
-import { pointAlong, type Point } from '../../geometry/plane';
+import { pointAlong, type Point } from '../../geometry/point';
 import type { Bottom, Grade } from '../../surveys/contract';
 import { ruled, stroked, text, type GlyphsMark, type Line, type Mark, type PathMark } from './mark';
 import type { Palette } from './palette';

@@ -56,3 +56,13 @@ test('depth between two places is on the straight line, and unknown in a gap or 
   expect(depthAt(places, 45)).toBeNull();
   expect(depthAt(places, 61)).toBeNull();
 });
+
+test('the bank the angler stands on is not called unsurveyed; a gap out on the water is', () => {
+  const rules = (own: SectionPlace[]) =>
+    stepsOf(drawSection({ ...input, places: own, markLineOutM: null }, page)).filter(
+      (step) =>
+        step.do === 'path' && step.stroke?.colour === palettes.light.rule && step.stroke.widthPx === 1,
+    ).length;
+  expect(rules([bed(0, null), bed(2, 0.1), bed(10, 1)])).toBe(0);
+  expect(rules([bed(0, 0.1), bed(2, null), bed(10, 1)])).toBe(1);
+});

@@ -104,13 +104,16 @@ function gapMarks(places: readonly SectionPlace[], scale: Scale, palette: Palett
     if (open && from === null) from = (places[i - 1] ?? place).lineOutM;
     const last = i === places.length - 1;
     if (from === null || (open && !last)) return;
-    marks.push(...gapMark(scale.x(from), scale.x(place.lineOutM), { scale, palette }));
+    const isBank = from === places[0]?.lineOutM && place.lineOutM - from < BANK_M;
+    if (!isBank) marks.push(...gapMark(scale.x(from), scale.x(place.lineOutM), { scale, palette }));
     from = null;
   });
   return marks;
 }
 
 const GAP_RULE_PX = 9;
+/** A gap at the start shorter than this is the bank the angler stands on, not water that nobody surveyed. */
+const BANK_M = 4;
 
 function gapMark(
   left: number,
