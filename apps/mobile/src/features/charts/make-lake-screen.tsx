@@ -90,6 +90,13 @@ function MakeLakeForm({ fishery }: { fishery: FisheryListItem }) {
         note="Read it from a GeoJSON or GPX file, tap round it here, or type its points."
         bare
       >
+        <OutlineEditor
+          sketch={sketch.field.value}
+          onChange={draw}
+          origin={origin}
+          under={NO_BACKDROP}
+          error={sketch.fieldState.error?.message}
+        />
         {isDrawn ? null : (
           <Field
             label="Where to start drawing"
@@ -101,13 +108,6 @@ function MakeLakeForm({ fishery }: { fishery: FisheryListItem }) {
             }
           />
         )}
-        <OutlineEditor
-          sketch={sketch.field.value}
-          onChange={draw}
-          origin={origin}
-          under={NO_BACKDROP}
-          error={sketch.fieldState.error?.message}
-        />
       </Section>
       <Section title="The lake">
         <View style={{ maxWidth: READING_PX }}>
