@@ -1,5 +1,5 @@
 import type { PegDetails } from '../lakes/contract';
-import { OVERHEAD_LIMIT_M } from '../lakes/peg-rules';
+import { OVERHEAD_LIMIT_M } from '../lakes/overhead-line';
 import { dayWords } from '../time/civil-day';
 
 type Surveyed = { surveyedFrom: string; surveyedTo: string; datumM: number };

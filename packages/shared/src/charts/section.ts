@@ -1,5 +1,4 @@
-import { pointAlong } from '../geometry/plane';
-import type { Point } from '../geometry/plane';
+import { pointAlong, type Point } from '../geometry/point';
 import { readChart } from './chart-reading';
 import type { ChartLayers, ChartReading } from './chart-reading';
 

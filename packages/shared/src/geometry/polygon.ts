@@ -1,4 +1,4 @@
-import type { Point } from './plane';
+import type { Point } from './point';
 
 /**
  * A lake's water in its own plane. Rings are open (the last point is not the first again); the shore runs

@@ -1,4 +1,4 @@
-import { distanceBetweenM, type Point } from './plane';
+import { distanceBetweenM, type Point } from './point';
 import { segmentCrossing, nearestOnSegment } from './shore-distance';
 
 type Side = { a: Point; b: Point; ring: number; index: number; sides: number; minXM: number; maxXM: number };

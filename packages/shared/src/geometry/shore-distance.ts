@@ -1,4 +1,4 @@
-import { distanceBetweenM, pointAlong, type Point } from './plane';
+import { distanceBetweenM, pointAlong, type Point } from './point';
 import { insideOutline, ringsOf, sidesOf, type Outline } from './polygon';
 
 /** The point of the segment a–b nearest to p. */

@@ -1,6 +1,7 @@
 import fc from 'fast-check';
 import { describe, expect, test } from 'vitest';
-import { arcWidthDeg, facingDeg, inArc, isUnderLine, whyNotLet } from './peg-rules';
+import { isUnderLine } from './overhead-line';
+import { arcWidthDeg, facingDeg, inArc, whyNotLet } from './peg-rules';
 
 const line = (kind: 'none' | 'present' | 'unknown', distanceM: number | null) => ({
   kind,

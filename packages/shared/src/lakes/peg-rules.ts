@@ -3,9 +3,8 @@ import { outlineInPlane } from '../geometry/outline';
 import { toPlane } from '../geometry/plane';
 import { distanceToShoreM, waterRunM } from '../geometry/shore-distance';
 import type { LakePolygon, PegDetails } from './contract';
+import { isUnderLine, OVERHEAD_LIMIT_M, type OverheadLine } from './overhead-line';
 
-/** Nearer than this to an overhead line nobody fishes without an assessment: the power networks' own guidance. */
-export const OVERHEAD_LIMIT_M = 30;
 /** A peg's origin lies at the water; farther from the shore than this it belongs to another lake, or is mistyped. */
 const OFF_SHORE_M = 30;
 const NARROWEST_ARC_DEG = 2;
@@ -57,12 +56,6 @@ function placeFaults(details: PegDetails, lake: LakeShape): PegFault[] {
 
 const distanceWords = (lengthM: number): string =>
   lengthM < 2000 ? `${Math.round(lengthM)} m` : `${(lengthM / 1000).toFixed(0)} km`;
-
-type OverheadLine = PegDetails['overheadLine'];
-
-/** Is the line, as far as is known, nearer than nobody may fish without an assessment? */
-export const isUnderLine = ({ kind, distanceM }: OverheadLine): boolean =>
-  kind === 'present' && (distanceM === null || distanceM < OVERHEAD_LIMIT_M);
 
 function overheadFaults(line: OverheadLine): PegFault[] {
   if (line.fishing !== 'ok' || !isUnderLine(line)) return [];

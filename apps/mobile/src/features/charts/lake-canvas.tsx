@@ -3,7 +3,7 @@ import type { Line, Mark } from '@mereward/shared/charts/drawing/mark';
 import { palettes, type Palette } from '@mereward/shared/charts/drawing/palette';
 import type { View as MapView } from '@mereward/shared/charts/drawing/view';
 import { grownView, zoomedView } from '@mereward/shared/charts/drawing/view-moves';
-import { distanceBetweenM, type Point } from '@mereward/shared/geometry/plane';
+import { distanceBetweenM, type Point } from '@mereward/shared/geometry/point';
 import { View, type LayoutChangeEvent } from 'react-native';
 import { Button } from '@/components/button';
 import { radius, space } from '@/constants/layout';

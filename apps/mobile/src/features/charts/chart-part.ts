@@ -1,0 +1,25 @@
+import { unknownBottom } from '@mereward/shared/charts/bottom-map';
+import { decodeClasses, decodeDepth, decodeSigma, fromBase64 } from '@mereward/shared/charts/chart-encoding';
+import type { ChartLayers } from '@mereward/shared/charts/chart-reading';
+import type { ChartView } from '@mereward/shared/charts/contract';
+import { bottomAreas, type BottomArea } from '@mereward/shared/charts/drawing/bottom-areas';
+import { emptyGrid } from '@mereward/shared/charts/grid';
+
+export type ChartPart = Pick<ChartView, 'frame' | 'depth' | 'sigma' | 'substrate' | 'cover'>;
+
+/** The chart's grids out of their bytes; a layer this reader may not see is empty. Null without any grid. */
+export function layersOf({ frame, depth, sigma, substrate, cover }: ChartPart): ChartLayers | null {
+  if (!frame) return null;
+  return {
+    depth: depth ? decodeDepth(fromBase64(depth), frame) : emptyGrid(frame),
+    sigma: sigma ? decodeSigma(fromBase64(sigma), frame) : emptyGrid(frame),
+    substrate: substrate ? decodeClasses(fromBase64(substrate), frame) : unknownBottom(frame),
+    cover: cover ? decodeClasses(fromBase64(cover), frame) : unknownBottom(frame),
+  };
+}
+
+/** Bottom areas of the layers that are there. */
+export function bottomOf(part: ChartPart, layers: ChartLayers | null): BottomArea[] {
+  if (!layers) return [];
+  return bottomAreas(part.substrate ? layers.substrate : null, part.cover ? layers.cover : null);
+}
