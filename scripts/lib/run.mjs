@@ -39,10 +39,10 @@ export function launch(command, args, options) {
 /**
  * Runs a program to its end and keeps what it said.
  * @param {string} command @param {string[]} args
- * @param {import('node:child_process').SpawnOptions & { onText?: (text: string) => void }} [options]
+ * @param {import('node:child_process').SpawnOptions & { onText?: (text: string) => void, withinMs?: number }} [options] withinMs: it is stopped after so long
  * @returns {Promise<{ code: number, output: string }>} code: 127 when it could not be started, 128 when killed
  */
-export function run(command, args, { onText, ...options } = {}) {
+export function run(command, args, { onText, withinMs, ...options } = {}) {
   const child = launch(command, args, { stdio: ['ignore', 'pipe', 'pipe'], ...options });
   let output = '';
   /** @param {Buffer} chunk */
@@ -53,7 +53,14 @@ export function run(command, args, { onText, ...options } = {}) {
   };
   child.stdout?.on('data', hear);
   child.stderr?.on('data', hear);
+  const late = withinMs === undefined ? undefined : setTimeout(tooLate, withinMs);
+  function tooLate() {
+    output += `\nIt had not ended after ${Math.round((withinMs ?? 0) / 60_000)} minutes and was stopped.\n`;
+    signalGroup(child, 'SIGTERM');
+    setTimeout(() => signalGroup(child, 'SIGKILL'), 5_000).unref();
+  }
   return new Promise((resolve) => {
+    child.once('exit', () => clearTimeout(late));
     child.once('error', (error) => resolve({ code: 127, output: `${output}${error.message}\n` }));
     child.once('close', (code) => {
       signalGroup(child, 'SIGKILL');

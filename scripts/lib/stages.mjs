@@ -5,6 +5,9 @@ import { at, ownFolder } from './paths.mjs';
 import { run } from './run.mjs';
 import { elapsed } from './steps.mjs';
 
+/** Far beyond what any stage takes: one that hangs becomes a failure and the others still run. */
+const stageWithinMs = 15 * 60_000;
+
 /**
  * @typedef {object} Sum
  * @property {number} passed
@@ -97,7 +100,7 @@ export async function runStage(stage) {
     PLAYWRIGHT_JSON_OUTPUT_NAME: reportFile(stage.name),
     PLAYWRIGHT_JSON_OUTPUT_FILE: reportFile(stage.name),
   };
-  const { code, output } = await run(program(stage.tool), stage.args, { env });
+  const { code, output } = await run(program(stage.tool), stage.args, { env, withinMs: stageWithinMs });
   const sum = stageSum(stage, code, stage.countIn ? readReport(stage.name) : undefined);
   const skipped = sum.skipped > 0 ? `, ${sum.skipped} skipped` : '';
   if (sum.failed > 0) process.stdout.write(`\n${output.slice(-20_000)}\n`);
