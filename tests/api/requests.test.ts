@@ -5,6 +5,7 @@ import { randomUUID } from 'node:crypto';
 import request from 'supertest';
 import { afterAll, beforeAll, describe, expect, test } from 'vitest';
 import { aPerson, aStranger, type Person } from '../support/people';
+import { aPhoto } from '../support/pictures';
 import { aServer, type TestServer } from '../support/server';
 import { boardDetails, fisheryDetails, lakeDetails, markDetails, pegDetails } from '../support/water-details';
 import { aBoard, aFishery, aLake, aMark, aPeg, type TestFishery, type TestLake } from '../support/waters';
@@ -87,6 +88,11 @@ describe('letters', () => {
   });
 });
 
+test('what is not there is said with what to do', async () => {
+  for (const path of ['/nowhere', `/lakes/${randomUUID()}`, `/fisheries/${randomUUID()}`, '/pegs/x/page'])
+    expect(problem((await aStranger(server).get(path)).body).detail).toMatch(/go back|begin at the front/i);
+});
+
 describe('an address whose id is none', () => {
   test('leads nowhere, also when somebody took the id that is all noughts', async () => {
     const nil = '00000000-0000-0000-0000-000000000000';
@@ -141,6 +147,31 @@ describe('an outline made to keep the server busy', () => {
 });
 
 describe('a clock that is wrong', () => {
+  test.each(['0000-01-01', '1826-06-01', '2999-01-01', '9999-12-31'])(
+    'is noticed at the day of a photo (%s)',
+    async (takenOn) => {
+      const peg = await aPeg(server, lake, { number: takenOn.slice(0, 7) });
+      const answer = await owner
+        .post(`/pegs/${peg.id}/photos`)
+        .field('id', randomUUID())
+        .field('takenOn', takenOn)
+        .attach('photo', await aPhoto(), 'peg.jpg');
+      expect(problem(answer.body).errors?.map(({ pointer }) => pointer)).toEqual(['/takenOn']);
+    },
+  );
+
+  test('is noticed at a ticket thousands of years ahead', async () => {
+    const peg = await aPeg(server, lake, { number: 'T1' });
+    const body = {
+      id: randomUUID(),
+      email: owner.email,
+      from: '9999-01-01T06:00:00Z',
+      until: '9999-01-01T18:00:00Z',
+    };
+    const answer = await here.people.office.post(`/pegs/${peg.id}/bookings`).send(body);
+    expect(problem(answer.body)).toMatchObject({ kind: 'invalid', errors: [{ pointer: '/from' }] });
+  });
+
   test.each(['1970-01-01T00:00:00Z', '0001-01-01T00:00:00Z', '2031-01-01T00:00:00Z'])(
     'is noticed at a level reading (%s)',
     async (at) => {

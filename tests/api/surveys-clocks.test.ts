@@ -43,6 +43,16 @@ test('a visit is not closed years ahead', async () => {
   expect(pointer((await joan.post(`/visits/${visitId}/close`).send(end)).body)).toBe('/endedAt');
 });
 
+test('a visit sent three times at once is opened once and answered thrice', async () => {
+  const body = aVisitBody(water);
+  const answers = await Promise.all(
+    [1, 2, 3].map(() => joan.post(`/lakes/${water.lake.id}/visits`).send(body)),
+  );
+  expect(answers.map(({ status }) => status)).toEqual([201, 201, 201]);
+  const other = await joan.post(`/lakes/${water.lake.id}/visits`).send({ ...body, title: 'Another' });
+  expect(other.status).toBe(409);
+});
+
 test('a cast sent twice is kept once, also when a nought of it has a sign', async () => {
   const visitId = await openedVisit(joan, water);
   const body = JSON.stringify(aCastBody(water)).replace('"sidestepM":0', '"sidestepM":-0');

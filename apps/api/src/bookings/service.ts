@@ -15,6 +15,8 @@ import { mustRepeat } from '../repeat';
 import { TICKET_WRITERS } from './policy';
 
 const LONGEST_MS = 31 * 86_400_000;
+/** Farther ahead it is a slip in the year: nobody lets a peg years before its prices and rules are known. */
+const AHEAD_MS = 2 * 366 * 86_400_000;
 
 /** Writes a ticket at the lodge. The database keeps a peg from being let twice; the later of two is told so. */
 export async function writeTicket(ctx: Ctx, pegId: string, input: WriteTicket): Promise<void> {
@@ -44,11 +46,15 @@ type Written = Times & { id: string; pegId: string; accountId: string; writtenBy
 
 function refuseTimes({ from, until }: Times, now: Date): void {
   const refuse = (pointer: string, title: string) => {
-    throw new Problem('invalid', title, { errors: [{ pointer, detail: title }] });
+    throw new Problem('invalid', title, {
+      detail: 'Nothing was written. Put the time right and write it again.',
+      errors: [{ pointer, detail: title }],
+    });
   };
   if (until <= from) refuse('/until', 'A ticket must end after it starts');
   if (until.getTime() - from.getTime() > LONGEST_MS) refuse('/until', 'A ticket may run for at most 31 days');
   if (until <= now) refuse('/until', 'That time is over already');
+  if (from.getTime() - now.getTime() > AHEAD_MS) refuse('/from', 'A ticket starts at most two years ahead');
 }
 
 /** Reasons of the peg and the lake against letting it then. */

@@ -29,6 +29,7 @@ export async function keepPhoto(ctx: Ctx, sent: Sent, store: FileStore): Promise
   allowPhotos(ctx, subject);
   const fault = photoFault(bytes);
   if (fault !== null) throw new Problem('invalid', fault, { errors: [{ pointer: '/photo', detail: fault }] });
+  refuseWrongDay(input, now);
   const addedBy = accountOf(actor);
   const sha256 = createHash('sha256').update(bytes).digest();
   const known = await tx.findOneBy(Photo, { id: input.id });
@@ -56,6 +57,19 @@ function repeated(sent: Sent & { sha256: Buffer }, by: string, kept: Photo): Pho
   const asked = { ...sent.subject, ...sent.input, sha256: sent.sha256 };
   mustRepeat({ by, content: content(asked) }, { by: kept.addedBy, content: content(kept) });
   return photoView(kept);
+}
+
+const EARLIEST_DAY = '1900-01-01';
+const DAY_MS = 86_400_000; // the day may have begun already where the picture was taken
+
+function refuseWrongDay({ takenOn }: AddPhoto, now: Date): void {
+  const latestDay = new Date(now.getTime() + DAY_MS).toISOString().slice(0, 10);
+  if (takenOn === null || (takenOn >= EARLIEST_DAY && takenOn <= latestDay)) return;
+  const detail = takenOn < EARLIEST_DAY ? 'This day lies before 1900.' : 'This day lies in the future.';
+  throw new Problem('invalid', 'The photo can’t have been taken on that day', {
+    detail: 'Put the day right, or leave it out, and send the photo again.',
+    errors: [{ pointer: '/takenOn', detail }],
+  });
 }
 
 async function refuseTooMany({ tx }: Ctx, { pegId, markId }: PhotoSubject): Promise<void> {

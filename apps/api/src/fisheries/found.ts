@@ -4,9 +4,10 @@ import type { Role } from '@mereward/shared/accounts/contract';
 import { Problem } from '@mereward/shared/problems/problem';
 import type { EntityManager } from 'typeorm';
 import { accountOf, type Actor, type Ctx } from '../ctx';
+import { notFound } from '../http/deny';
 import { isOneOfThem } from './policy';
 
-const noSuch = () => new Problem('not-found', 'There is no such fishery');
+const noSuch = () => notFound('fishery');
 
 /** A fishery's public face. */
 export async function fisheryFound(tx: EntityManager, id: string): Promise<Fishery> {

@@ -2,7 +2,10 @@ import type { Role } from '@mereward/shared/accounts/contract';
 import { Problem } from '@mereward/shared/problems/problem';
 import { holdsAny, rolesAt, type Actor } from '../ctx';
 
-export const notFound = (what: string): Problem => new Problem('not-found', `There is no such ${what}`);
+export const notFound = (what: string): Problem =>
+  new Problem('not-found', `There is no such ${what}`, {
+    detail: 'It may have been taken away, or the address was cut short. Go back and choose it anew.',
+  });
 
 /**
  * Lets the deed go on, or refuses it: a stranger is asked to sign in, somebody without a place at this fishery

@@ -55,5 +55,7 @@ export const answerProblem: ErrorRequestHandler = (error, req, res, next) => {
 };
 
 export const nothingHere: RequestHandler = () => {
-  throw new Problem('not-found', 'There is nothing at this address');
+  throw new Problem('not-found', 'There is nothing at this address', {
+    detail: 'Look at the address for a slip, or begin at the front page.',
+  });
 };

@@ -3,9 +3,8 @@ import { SurveyVisit } from '@mereward/db/entities/surveys/survey-visit';
 import { Problem } from '@mereward/shared/problems/problem';
 import type { OpenVisit, VisitView } from '@mereward/shared/surveys/contract';
 import { isDeepStrictEqual } from 'node:util';
-import { orConflict } from '../conflict';
 import { accountOf, type Ctx } from '../ctx';
-import { plain } from '../repeat';
+import { insertOnce, plain } from '../repeat';
 import { refuseWrongClock } from '../wrong-clock';
 import { CLOCK_OUT_MS } from './cast-time';
 import { lakeFor } from './find-visit';
@@ -37,12 +36,9 @@ export async function openVisit(ctx: Ctx, lakeId: string, input: OpenVisit): Pro
     throw wrongBoard(
       'Depths are brought to chart datum by the board that datum is read on. Read that board.',
     );
-  await orConflict(
-    tx.insert(SurveyVisit, visit),
-    'survey_visit_pkey',
-    'This visit was sent twice at once; look again',
-  );
-  return visitView(ctx, { visit, lake });
+  if (await insertOnce(tx, SurveyVisit, visit)) return visitView(ctx, { visit, lake });
+  const meanwhile = await tx.findOneByOrFail(SurveyVisit, { id: input.id }); // sent twice at once
+  return visitView(ctx, { visit: sameVisit(meanwhile, visit), lake });
 }
 
 const wrongBoard = (detail: string): Problem =>
