@@ -1,4 +1,4 @@
-import { ActivityIndicator, Pressable, type PressableProps } from 'react-native';
+import { ActivityIndicator, Pressable, View, type PressableProps } from 'react-native';
 import { Text } from '@/components/text';
 import { useButtonLook, type ButtonKind } from '@/components/button-look';
 
@@ -33,7 +33,11 @@ export function Button({ label, onPress, kind = 'plain', busy = false, busyLabel
       aria-label={rest.spoken}
       style={({ pressed }) => look.box(pressed)}
     >
-      {busy ? <ActivityIndicator size="small" color={look.ink} /> : null}
+      {busy ? (
+        <View aria-hidden>
+          <ActivityIndicator size="small" color={look.ink} />
+        </View>
+      ) : null}
       <Text weight="semibold" style={look.words}>
         {busy ? (busyLabel ?? label) : label}
       </Text>

@@ -11,7 +11,9 @@ export function Waiting({ words }: { words: string }) {
       role="status"
       style={{ flexDirection: 'row', alignItems: 'center', gap: space.medium, paddingVertical: space.large }}
     >
-      <ActivityIndicator color={colours.water} />
+      <View aria-hidden>
+        <ActivityIndicator color={colours.water} />
+      </View>
       <Text tone="inkSoft">{words}</Text>
     </View>
   );

@@ -78,13 +78,13 @@ function RingPoints({ ring, at, sketch, onChange, chosen }: RingProps) {
             />
             <Button
               label="Take out"
-              spoken={`Take point ${String(spot.index + 1)} of ${name} out`}
+              spoken={`Take out point ${String(spot.index + 1)} of ${name}`}
               onPress={() => onChange(removePlace(sketch, spot))}
             />
             {ring.places.length > 1 ? (
               <Button
                 label="Put one after"
-                spoken={`Put a point after point ${String(spot.index + 1)} of ${name}`}
+                spoken={`Put one after point ${String(spot.index + 1)} of ${name}`}
                 onPress={() =>
                   onChange(insertPlace(sketch, spot, between(spot.index)), {
                     ring: at,

@@ -11,7 +11,13 @@ export function PegPhotos({ photos, title }: { photos: readonly PhotoView[]; tit
   const ready = photos.filter(({ smallUrl }) => smallUrl !== null);
   if (ready.length === 0) return null;
   return (
-    <ScrollView horizontal contentContainerStyle={{ gap: space.medium }}>
+    <ScrollView
+      horizontal
+      role="group"
+      aria-label={`Photographs from ${title}`}
+      {...{ tabIndex: 0 /* so that arrow keys scroll it */ }}
+      contentContainerStyle={{ gap: space.medium }}
+    >
       {ready.map(({ id, smallUrl, caption, takenOn, widthPx, heightPx }) => (
         <View key={id} style={{ gap: space.hair }}>
           <Image

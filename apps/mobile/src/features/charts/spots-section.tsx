@@ -42,7 +42,7 @@ export function SpotsSection({ lakeId, pegId }: Props) {
                       <Button
                         label="Take away"
                         kind="quiet"
-                        spoken={`Take ${spot.name} away`}
+                        spoken={`Take away: ${spot.name}`}
                         onPress={() => setDoomed(spot)}
                       />
                     </View>

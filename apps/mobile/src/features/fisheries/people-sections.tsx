@@ -38,7 +38,7 @@ function PeopleList({ fisheryId, people }: { fisheryId: string; people: PeopleVi
               people.mayGive.length > 0 ? (
                 <Button
                   label="Roles"
-                  spoken={`Change the roles of ${person.name}`}
+                  spoken={`Roles of ${person.name}: change them`}
                   onPress={() => setChosen(person)}
                 />
               ) : null

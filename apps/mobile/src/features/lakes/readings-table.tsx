@@ -56,7 +56,7 @@ export function ReadingsTable({ lake, board }: { lake: LakeView; board: GaugeBoa
                       <Button
                         label="Take back"
                         kind="quiet"
-                        spoken={`Take the reading of ${when(reading)} back`}
+                        spoken={`Take back the reading of ${when(reading)}`}
                         onPress={() => setDoubted(reading)}
                       />
                     </View>
