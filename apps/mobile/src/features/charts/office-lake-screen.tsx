@@ -1,5 +1,5 @@
 import { useMemo } from 'react';
-import { useLocalSearchParams } from 'expo-router';
+import { useLocalSearchParams, useRouter } from 'expo-router';
 import type { LakeView } from '@mereward/shared/lakes/contract';
 import { View } from 'react-native';
 import { Facts } from '@/components/facts';
@@ -16,7 +16,6 @@ import { BoardsSection, MarksSection } from '@/features/lakes/lake-parts';
 import { PegsSection } from '@/features/lakes/pegs-section';
 import { useUnits } from '@/hooks/use-units';
 import { area, figure } from '@/lib/format';
-import { useRouter } from 'expo-router';
 
 /** One lake in the office: what it is, its pegs, boards and marks, each to be changed. */
 export function OfficeLakeScreen() {

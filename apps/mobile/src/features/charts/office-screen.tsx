@@ -48,7 +48,10 @@ export function OfficeScreen() {
 function FisheryOffice({ fishery }: { fishery: FisheryListItem }) {
   return (
     <>
-      <Section title={fishery.name} bare>
+      <Section title="What wants doing" bare>
+        <Tasks fishery={fishery} />
+      </Section>
+      <Section title={fishery.name}>
         <List label={`Kept for ${fishery.name}`}>
           <Row title="Lakes" note={lakesWords(fishery)} href="/office/lakes" />
           <Row title="Charts" note="Drafts, approval, published versions" href="/office/charts" />
@@ -58,9 +61,6 @@ function FisheryOffice({ fishery }: { fishery: FisheryListItem }) {
             href={`/office/fishery?fisheryId=${fishery.id}`}
           />
         </List>
-      </Section>
-      <Section title="What wants doing">
-        <Tasks fishery={fishery} />
       </Section>
     </>
   );

@@ -121,6 +121,17 @@ test('a submitted chart comes first, and only to those who may approve it', () =
   expect(titles(office, [chart('submitted')])).toEqual([]);
 });
 
+test('a lake without a chart is told to everybody; who may not draft one is told who does', () => {
+  const { may } = lakeOf({});
+  const [task] = officeTasks({
+    lake: lakeOf({ may: { ...may, buildCharts: false } }),
+    charts: [],
+    nowMs: NOW,
+  });
+  expect(task).toMatchObject({ title: 'Long Water has no chart', href: '/office/charts' });
+  expect(task?.note).toContain('head bailiff drafts it');
+});
+
 test('a new lake wants pegs, a board, marks, in that order, and no chart before its pegs', () => {
   const fresh = lakeOf({ pegs: [], boards: [], marks: [], levelNow: null });
   expect(titles(fresh, [])).toEqual([

@@ -10,61 +10,73 @@ const DAY_MS = 86_400_000;
 
 type Known = { lake: LakeView; charts: readonly ChartListItem[]; nowMs: number };
 
-/** What a lake and its charts want next, the most pressing first. Only what this reader may do themselves. */
+/** What a lake and its charts want next, the most pressing first. */
 export function officeTasks({ lake, charts, nowMs }: Known): OfficeTask[] {
-  const { id, details, may } = lake;
-  const { name } = details;
-  const tasks: OfficeTask[] = [];
-  const say = (key: string, title: string, note: string, href: OfficeTask['href']): void => {
-    tasks.push({ key: `${id}.${key}`, title, note, href });
-  };
-  for (const chart of charts) {
-    const href = `/office/charts/${chart.id}` as const;
-    if (chart.status === 'submitted' && may.approveCharts)
-      say(
-        chart.id,
-        `${chart.title} of ${name} waits for approval`,
-        `Submitted by ${chart.submittedBy ?? 'somebody'}`,
-        href,
-      );
-    if (chart.status === 'draft' && may.buildCharts)
-      say(chart.id, `${chart.title} of ${name} is a draft`, 'Look it over and submit it', href);
-  }
-  if (lake.pegs.length === 0 && may.changePegs)
-    say('pegs', `${name} has no pegs`, 'Place the first', `/office/lakes/${id}/pegs/new`);
-  if (!lake.boards.some((board) => board.details.isDatumBoard) && may.changePegs)
-    say(
-      'board',
-      `${name} has no datum board`,
-      'Without one, no depth can be told for today',
-      `/office/lakes/${id}/boards/new`,
-    );
-  tasks.push(...levelTasks(lake, nowMs));
-  if (lake.marks.length === 0 && may.changePegs)
-    say('marks', `${name} has no far-bank marks`, 'Casts are aimed at them', `/office/lakes/${id}/marks/new`);
-  if (charts.length === 0 && lake.pegs.length > 0 && may.buildCharts)
-    say(
-      'chart',
-      `${name} has no chart`,
-      'Survey it from the bank, then draft one',
-      `/office/charts/new?lakeId=${id}`,
-    );
-  return tasks;
+  return [
+    ...charts.flatMap((chart) => chartTask(lake, chart)),
+    ...missingTasks(lake),
+    ...levelTask(lake, nowMs),
+    ...(charts.length === 0 && lake.pegs.length > 0 ? [firstChartTask(lake)] : []),
+  ];
 }
 
-function levelTasks({ id, boards, details, levelNow, may }: LakeView, nowMs: number): OfficeTask[] {
-  const board = boards.find((each) => each.details.isDatumBoard);
-  if (!board || !may.recordLevel) return [];
-  const task = { key: `${id}.level`, href: `/office/lakes/${id}/boards/${board.id}` } as const;
-  if (!levelNow)
-    return [{ ...task, title: `Read ${board.details.code} on ${details.name}`, note: 'Nobody has yet' }];
-  const readMs = Date.parse(levelNow.at);
-  if (nowMs - readMs <= READ_EVERY_DAYS * DAY_MS) return [];
-  return [
+function chartTask({ details, may }: LakeView, chart: ChartListItem): OfficeTask[] {
+  const at = { key: chart.id, href: `/office/charts/${chart.id}` } as const;
+  const which = `${chart.title} of ${details.name}`;
+  if (chart.status === 'submitted' && may.approveCharts) {
+    const note = `Submitted by ${chart.submittedBy ?? 'somebody'}`;
+    return [{ ...at, title: `${which} waits for approval`, note }];
+  }
+  if (chart.status === 'draft' && may.buildCharts)
+    return [{ ...at, title: `${which} is a draft`, note: 'Look it over and submit it' }];
+  return [];
+}
+
+function missingTasks({ id, details: { name }, pegs, boards, marks, may }: LakeView): OfficeTask[] {
+  if (!may.changePegs) return [];
+  const missing = [
+    { part: 'pegs', is: pegs.length === 0, title: `${name} has no pegs`, note: 'Place the first' },
     {
-      ...task,
-      title: `Read ${board.details.code} on ${details.name}`,
-      note: `Last read ${ago(readMs, nowMs)}`,
+      part: 'boards',
+      is: !boards.some((board) => board.details.isDatumBoard),
+      title: `${name} has no datum board`,
+      note: 'Without one, no depth can be told for today',
+    },
+    {
+      part: 'marks',
+      is: marks.length === 0,
+      title: `${name} has no far-bank marks`,
+      note: 'Casts are aimed at them',
     },
   ];
+  return missing
+    .filter(({ is }) => is)
+    .map(({ part, title, note }) => ({
+      key: `${id}.${part}`,
+      title,
+      note,
+      href: `/office/lakes/${id}/${part}/new`,
+    }));
+}
+
+function levelTask({ id, boards, details, levelNow, may }: LakeView, nowMs: number): OfficeTask[] {
+  const board = boards.find((each) => each.details.isDatumBoard);
+  if (!board || !may.recordLevel) return [];
+  const readMs = levelNow ? Date.parse(levelNow.at) : null;
+  if (readMs !== null && nowMs - readMs <= READ_EVERY_DAYS * DAY_MS) return [];
+  return [
+    {
+      key: `${id}.level`,
+      title: `Read ${board.details.code} on ${details.name}`,
+      note: readMs === null ? 'Nobody has yet' : `Last read ${ago(readMs, nowMs)}`,
+      href: `/office/lakes/${id}/boards/${board.id}`,
+    },
+  ];
+}
+
+function firstChartTask({ id, details, may }: LakeView): OfficeTask {
+  const task = { key: `${id}.chart`, title: `${details.name} has no chart` };
+  return may.buildCharts
+    ? { ...task, note: 'Survey it from the bank, then draft one', href: `/office/charts/new?lakeId=${id}` }
+    : { ...task, note: 'A manager or the head bailiff drafts it from a survey', href: '/office/charts' };
 }

@@ -1,4 +1,5 @@
 import { useMemo } from 'react';
+import { BOTTOM_WORDS } from '@mereward/shared/charts/bottom-words';
 import { VisitWithCasts } from '@mereward/shared/surveys/contract';
 import { useQueries } from '@tanstack/react-query';
 import { surveyKeys, useVisits } from '@/features/surveys/api';
@@ -34,9 +35,9 @@ export function usePegCasts(lakeId: string, pegId: string): { casts: ReducedCast
       value.flatMap(({ casts: all }) =>
         all.flatMap(({ id, seq, pegId: from, observedAt, reduced }): ReducedCast[] => {
           if (from !== pegId || !reduced.ok) return [];
-          const { xM, yM, rangeM, bearingDeg, bottomWords, grade } = reduced.sounding;
+          const { xM, yM, rangeM, bearingDeg, bottom, grade } = reduced.sounding;
           const where = `${length(rangeM, { length: unit })} at ${String(Math.round(bearingDeg))}°`;
-          const words = `Cast ${String(seq)}, ${dayName(observedAt.slice(0, 10))}: ${where}, ${bottomWords}, grade ${grade}`;
+          const words = `Cast ${String(seq)}, ${dayName(observedAt.slice(0, 10))}: ${where}, ${BOTTOM_WORDS[bottom]}, grade ${grade}`;
           return [{ id, xM, yM, words }];
         }),
       ),
