@@ -6,8 +6,13 @@ import type { MapSurfaceRefs } from './map-surface-refs';
 
 type Press = PointerEvent<HTMLDivElement>;
 
+/** Moves the picture without drawing it again; the drawing follows when the gesture ends. */
+function show(picture: HTMLElement | null, moved: Parameters<typeof cssTransform>[0]): void {
+  if (picture) picture.style.transform = cssTransform(moved);
+}
+
 /** Dragging, pinching, tapping, and taking hold of things on the map. */
-export function useMapPointers({ box, moving, latest }: MapSurfaceRefs) {
+export function useMapPointers({ box, carry, latest }: MapSurfaceRefs) {
   const gesture = useRef(newGesture());
   const held = useRef<number | null>(null);
 
@@ -59,7 +64,7 @@ export function useMapPointers({ box, moving, latest }: MapSurfaceRefs) {
       if (!gesture.current.fingers.has(event.pointerId)) return;
       moveTo(gesture.current, event.pointerId, point);
       const moved = movement();
-      if (moved && moving.current) moving.current.style.transform = cssTransform(moved);
+      if (moved) carry(cssTransform(moved));
     },
     onPointerUp: (event: Press) => letGo(event, at(event)),
     onPointerCancel: (event: Press) => letGo(event, at(event)),
