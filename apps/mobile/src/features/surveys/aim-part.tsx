@@ -6,6 +6,7 @@ import { Note } from '@/components/note';
 import { aimWords, sideWords } from '@/features/surveys/aim-words';
 import { BY_COMPASS } from '@/features/surveys/cast-draft';
 import { FoldedPart } from '@/features/surveys/cast-part';
+import { marksAhead } from '@/features/surveys/marks-ahead';
 import type { CastFormState } from '@/features/surveys/use-cast-form';
 
 const METHODS = [
@@ -41,7 +42,10 @@ export function AimPart({ form, lake }: Props) {
         bank
         unset="Choose a mark"
         choices={[
-          ...lake.marks.map(({ id, details }) => ({ key: id, label: `${details.name} (${details.code})` })),
+          ...marksAhead(lake, typed.pegId).map(({ id, details }) => ({
+            key: id,
+            label: `${details.name} (${details.code})`,
+          })),
           { key: BY_COMPASS, label: 'no mark: a compass bearing' },
         ]}
       />

@@ -57,12 +57,12 @@ export function CoverageSection({ value, lake, bare }: Props) {
       {shown ? (
         <List label={`Coverage of peg ${shown.number}`}>
           <Row
-            title={`${percent(shown.share)} of peg ${shown.number}’s arc`}
+            title={`${percent(shown.share, 1)} of peg ${shown.number}’s arc`}
             note={countWords(shown.casts, 'cast')}
             end={<Enough is={shown.share >= ENOUGH_SHARE} />}
           />
           <Row
-            title={`${percent(shown.repeatsShare)} made again`}
+            title={`${percent(shown.repeatsShare, 1)} made again`}
             note="another throw within 2 m"
             end={<Enough is={shown.repeatsShare >= ENOUGH_REPEATS} />}
           />

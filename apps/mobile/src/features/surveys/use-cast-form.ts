@@ -15,6 +15,7 @@ import {
   type CastRead,
   type CastTyped,
 } from '@/features/surveys/cast-draft';
+import { marksAhead } from '@/features/surveys/marks-ahead';
 import { useCastReduction } from '@/features/surveys/use-cast-reduction';
 import { useDraftForm, type DraftForm } from '@/hooks/use-draft-form';
 import { newId } from '@/lib/new-id';
@@ -36,9 +37,7 @@ export function useCastForm({ lake, visit, casts, send, onKept }: Terms) {
   const form: CastFormState = useDraftForm({
     form: `cast:${visit.id}`,
     schema: CastDraft,
-    start: last
-      ? typedAgain(last)
-      : { ...EMPTY_CAST, pegId: lake.pegs[0]?.id ?? '', aim: lake.marks[0]?.id ?? '' },
+    start: last ? typedAgain(last) : firstCast(lake),
     send: (read) => sendOnce(form, keepCast(read), send),
     onDone: (cast) => {
       const typed = form.getValues();
@@ -68,6 +67,12 @@ export function useCastForm({ lake, visit, casts, send, onKept }: Terms) {
     surroundings,
     reduced: useCastReduction(surroundings, observation, casts),
   };
+}
+
+/** The first cast of a visit: from the first peg of the walk, over the mark straight out of it. */
+function firstCast(lake: LakeView): CastTyped {
+  const pegId = lake.pegs[0]?.id ?? '';
+  return { ...EMPTY_CAST, pegId, aim: marksAhead(lake, pegId)[0]?.id ?? '' };
 }
 
 /** A cast whose answer was lost is known by its id once the visit is read again: the form goes on to the next. */
