@@ -1,12 +1,13 @@
 import { FisheryList } from '@mereward/shared/fisheries/contract';
-import { ChartList } from '@mereward/shared/charts/contract';
+import { ChartList, PegPageView } from '@mereward/shared/charts/contract';
 import { LakeView } from '@mereward/shared/lakes/contract';
-import { VisitList, VisitWithCasts } from '@mereward/shared/surveys/contract';
+import { VisitWithCasts } from '@mereward/shared/surveys/contract';
+import { aFan } from '../../support/long-water';
 import { readdirSync } from 'node:fs';
 import { fileURLToPath } from 'node:url';
 import { Asking } from './people';
 import type { Site } from './site';
-import { anOpenVisit } from './story-water';
+import { anOpenVisit, castMeanwhile } from './story-water';
 
 const APP = fileURLToPath(new URL('../../../apps/mobile/src/app', import.meta.url));
 
@@ -18,38 +19,37 @@ export const routes = (): string[] =>
     .filter((route) => route !== '/')
     .sort();
 
-const KINDS = ['lakeId', 'pegId', 'markId', 'boardId', 'chartId', 'castId', 'visitId', 'openId'] as const;
+const KINDS = ['lakeId', 'pegId', 'markId', 'boardId', 'chartId', 'castId', 'visitId', 'spotId'] as const;
 export type Ids = Readonly<Record<(typeof KINDS)[number], string>>;
 
-/** One thing of each kind from the demo, its first closed visit, and an open one of Joan's. */
+/** One thing of each kind from the demo, and an open visit of Joan's with a few casts. */
 export async function demoIds(site: Site): Promise<Ids> {
   const joan = await Asking.as('joan', site);
   const { fisheries } = await joan.get('/fisheries', FisheryList);
   const lakeId = fisheries[0]?.lakes.find(({ name }) => name === 'Far Ostle')?.id ?? '';
   const lake = await joan.get(`/lakes/${lakeId}`, LakeView);
   const boardId = lake.boards[0]?.id ?? '';
-  const { visits } = await joan.get(`/lakes/${lakeId}/visits`, VisitList);
-  const visitId = visits.at(-1)?.id ?? '';
-  const { casts } = await joan.get(`/visits/${visitId}`, VisitWithCasts);
   const { charts } = await joan.get(`/lakes/${lakeId}/charts`, ChartList);
-  const opened = { startedAt: new Date().toISOString(), title: 'Still open' };
+  const startedAt = new Date(Date.now() - 60_000).toISOString();
+  const visitId = await anOpenVisit(joan, { lakeId, boardId }, { startedAt, title: 'Still open' });
+  await castMeanwhile(joan, visitId, aFan().slice(0, 6));
+  const { casts } = await joan.get(`/visits/${visitId}`, VisitWithCasts);
+  const pegId = lake.pegs.find(({ number }) => number === 'FO7')?.id ?? '';
+  const { spots } = await joan.get(`/pegs/${pegId}/page`, PegPageView);
   return {
     lakeId,
-    pegId: lake.pegs.find(({ number }) => number === 'FO7')?.id ?? '',
+    pegId,
+    spotId: spots?.[0]?.id ?? '',
     markId: lake.marks[0]?.id ?? '',
     boardId,
     chartId: charts[0]?.id ?? '',
     castId: casts[0]?.id ?? '',
     visitId,
-    openId: await anOpenVisit(joan, { lakeId, boardId }, opened),
   };
 }
 
-const WHILE_OPEN = /\/(cast|close|import)$/;
-
 /** A route with its ids filled in, and what it asks for beside them. */
 export function addressOf(route: string, ids: Ids): string {
-  const asked = WHILE_OPEN.test(route) ? route.replace('[visitId]', '[openId]') : route;
-  const path = KINDS.reduce((so, kind) => so.replace(`[${kind}]`, ids[kind]), asked);
+  const path = KINDS.reduce((so, kind) => so.replace(`[${kind}]`, ids[kind]), route);
   return route.endsWith('/new') && !route.includes('[') ? `${path}?lakeId=${ids.lakeId}` : path;
 }
