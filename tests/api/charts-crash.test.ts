@@ -3,7 +3,8 @@ import { spawn, type ChildProcess } from 'node:child_process';
 import { once } from 'node:events';
 import { createRequire } from 'node:module';
 import { fileURLToPath, pathToFileURL } from 'node:url';
-import { afterAll, beforeAll, expect, test } from 'vitest';
+import { Client } from 'pg';
+import { afterAll, beforeAll, expect, inject, test } from 'vitest';
 import { draftedChart } from '../support/charts';
 import { aServer, type TestServer } from '../support/server';
 import { aLongWater, aSurvey } from '../support/surveys';
@@ -77,4 +78,31 @@ test('a chart whose server is killed outright while it builds is built by the ne
   const done = await build();
   expect(done.attempt).not.toBe(left.attempt);
   expect(done.tries).toBe(2);
+}, 120_000);
+
+test('a server whose database goes away while it builds lives on and builds the chart when it is back', async () => {
+  const fishery = await aFishery(server, { name: 'Upper Sallow' });
+  const water = await aLongWater(server, fishery);
+  const person = fishery.people.head_bailiff;
+  const visitIds = [await aSurvey(person, water)];
+  for (const each of running) await killed(each);
+  const id = await draftedChart(server, { person, lakeId: water.lake.id, visitIds, settle: false });
+  const state = async () =>
+    (await server.server.source.manager.findOneByOrFail(ChartBuild, { chartId: id })).state;
+  const child = aProcess();
+  await until(async () => (await state()) === 'running');
+
+  const name = new URL(server.server.config.databaseUrl).pathname.slice(1);
+  const client = new Client({ connectionString: inject('clusterUrl') });
+  await client.connect();
+  await client.query(`ALTER DATABASE ${name} WITH ALLOW_CONNECTIONS false`);
+  await client.query('SELECT pg_terminate_backend(pid) FROM pg_stat_activity WHERE datname = $1', [name]);
+  const away = await person.get('/fisheries');
+  expect([away.status, away.body.title]).toEqual([500, 'The database can’t be reached just now']);
+  await new Promise((next) => setTimeout(next, 2000)); // long enough for the build to notice and to fail
+  await client.query(`ALTER DATABASE ${name} WITH ALLOW_CONNECTIONS true`);
+  await client.end();
+
+  await until(async () => (await state()) === 'done');
+  expect(child.exitCode).toBeNull();
 }, 120_000);

@@ -5,6 +5,7 @@ import { makeApp } from './app';
 import { watchBuilds } from './charts/jobs';
 import { readConfig, SettingsFault, type Config } from './config';
 import { handlers } from './handlers';
+import { isDatabaseAway } from './http/database-away';
 import { makeLogger } from './http/logging';
 import { plainError } from './http/plain-error';
 import { jobsOn, openQueue } from './jobs/queue';
@@ -25,6 +26,7 @@ async function main(): Promise<void> {
   const capture = settings.smtpUrl ? null : await openCapture();
   if (capture) logger.warn('SMTP_URL is not set: mail is caught here and reaches nobody');
   const config = capture ? { ...settings, smtpUrl: capture.url } : settings;
+  outliveTheDatabase((err) => logger.error({ err }, 'the database went away'));
   const source = await makeDataSource(config.databaseUrl).initialize();
   const boss = await openQueue(config.databaseUrl, (err) => logger.error({ err }, 'queue'));
   const server = { config, source, jobs: jobsOn(boss), clock: clockOf(config) };
@@ -77,6 +79,17 @@ async function finish(http: Server): Promise<void> {
   await new Promise((done) => http.close(done));
   clearInterval(idle);
   clearTimeout(broken);
+}
+
+/**
+ * The queue tells its database how a job ended and waits for no answer, so nobody hears when that fails: the job is
+ * taken up again later. Any other promise that fails unheard is a fault of the program, and the end of it.
+ */
+function outliveTheDatabase(tell: (error: unknown) => void): void {
+  process.on('unhandledRejection', (error) => {
+    if (isDatabaseAway(error)) tell(error);
+    else lastWord(error);
+  });
 }
 
 /** The last word of a process that can't go on: what was wrong, without what a row or a request held. */

@@ -1,12 +1,17 @@
 import { Problem, type ProblemBody } from '@mereward/shared/problems/problem';
 import type { ErrorRequestHandler, RequestHandler } from 'express';
 import { z } from 'zod';
+import { isDatabaseAway } from './database-away';
 
 /** A request that could not even be read, as the body's reader and the router tell it. */
 const Unreadable = z.object({ type: z.string().optional(), status: z.int().min(400).max(499) });
 
 function asProblem(error: unknown): Problem | null {
   if (error instanceof Problem) return error;
+  if (isDatabaseAway(error))
+    return new Problem('internal', 'The database can’t be reached just now', {
+      detail: 'Nothing was kept. Try again in a minute; what you typed is still here.',
+    });
   const parsed = Unreadable.safeParse(error);
   if (!parsed.success) return null;
   const { type, status } = parsed.data;
