@@ -1,5 +1,5 @@
 import type { Page } from '@playwright/test';
-import { expectNoAxeFaults } from './support/axe';
+import { axeFaults } from './support/axe';
 import { type Somebody, test } from './support/people';
 import { addressOf, demoIds, routes, type Ids } from './support/screens';
 import { expect } from './support/site';
@@ -56,8 +56,8 @@ for (const { place, who, sees } of LOOKS)
         await expect(page.getByRole('heading', { level: 1 })).toBeVisible();
         await expect(page.getByText('Something in this page failed')).toHaveCount(0);
         await unfold(page);
-        await expectNoAxeFaults(page);
+        expect.soft(await axeFaults(page), route).toEqual([]);
         await page.emulateMedia({ colorScheme: 'dark' });
-        await expectNoAxeFaults(page, 'colours');
+        expect.soft(await axeFaults(page, 'colours'), `${route} at dusk`).toEqual([]);
       });
   });

@@ -5,14 +5,17 @@ const TAGS = ['wcag2a', 'wcag2aa', 'wcag21a', 'wcag21aa', 'wcag22aa'];
 const OF_COLOUR = ['color-contrast', 'link-in-text-block'];
 
 /**
- * Fails with every WCAG 2.2 A and AA fault that axe finds on the page as it stands, rule, place and reason. `colours`
- * looks at those rules alone that another theme can break.
+ * Every WCAG 2.2 A and AA fault that axe finds on the page as it stands: rule, place and reason. `colours` looks at those
+ * rules alone that another theme can break.
  */
-export async function expectNoAxeFaults(page: Page, look: 'all' | 'colours' = 'all'): Promise<void> {
+export async function axeFaults(page: Page, look: 'all' | 'colours' = 'all'): Promise<string[]> {
   const axe = new AxeBuilder({ page });
   const { violations } = await (look === 'all' ? axe.withTags(TAGS) : axe.withRules(OF_COLOUR)).analyze();
-  const faults = violations.flatMap(({ id, nodes }) =>
+  return violations.flatMap(({ id, nodes }) =>
     nodes.map((node) => `${id}: ${node.target.join(' ')}: ${node.failureSummary ?? ''}`),
   );
-  expect(faults, page.url()).toEqual([]);
+}
+
+export async function expectNoAxeFaults(page: Page): Promise<void> {
+  expect(await axeFaults(page), page.url()).toEqual([]);
 }
