@@ -7,7 +7,7 @@ import { ProblemNote } from '@/components/problem-note';
 import { Stepper } from '@/components/stepper';
 import { Waiting } from '@/components/waiting';
 import { space } from '@/constants/layout';
-import { useUnits } from '@/hooks/use-units';
+import { useChartUnits } from './use-chart-units';
 import { length } from '@/lib/format';
 import { capital } from './peg-words';
 import { depthNow } from './depth-format';
@@ -19,7 +19,7 @@ type Props = { tool: ReturnType<typeof useCast>; raisedM: number; when: string }
 
 /** The drawn cast in figures: where to, how much line, what lies under its end, and the bed on the way. */
 export function CastPanel({ tool, raisedM, when }: Props) {
-  const units = useUnits();
+  const units = useChartUnits();
   const { settled, mostM, section, points, aim } = tool;
   if (!settled) return null;
   const wraps = settled.lineOutM / units.stickSpacingM;

@@ -6,7 +6,7 @@ import { Text } from '@/components/text';
 import { MEASURE_PX, space } from '@/constants/layout';
 import { length } from '@/lib/format';
 import { dayRange } from '@/lib/format-time';
-import { useUnits } from '@/hooks/use-units';
+import { useChartUnits } from './use-chart-units';
 
 type Surveyed = {
   version: string | null;
@@ -29,7 +29,7 @@ export function ChartAgeBadge({ age }: { age: ChartAge }) {
 
 /** Stands under every chart: which one, when it was surveyed, at what level, and what it must not be used for. */
 export function ChartCaption({ chart, shownAt }: { chart: Surveyed; shownAt: string }) {
-  const units = useUnits();
+  const units = useChartUnits();
   const version = chart.version === null ? 'Draft chart' : `Chart ${chart.version}`;
   return (
     <View style={{ gap: space.hair, maxWidth: MEASURE_PX + 120 }}>

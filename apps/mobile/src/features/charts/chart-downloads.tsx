@@ -3,7 +3,7 @@ import type { ChartView } from '@mereward/shared/charts/contract';
 import { Button } from '@/components/button';
 import { ProblemNote } from '@/components/problem-note';
 import { Section } from '@/components/section';
-import { useUnits } from '@/hooks/use-units';
+import { useChartUnits } from './use-chart-units';
 import { chartFile, type ChartFileKind } from './chart-file';
 import { shownLayers } from './chart-layers';
 
@@ -16,7 +16,7 @@ const kinds: readonly { kind: ChartFileKind; label: string; bw: boolean }[] = [
 
 /** The chart to take away: only what this reader may see is in the files. */
 export function ChartDownloads({ chart }: { chart: ChartView }) {
-  const units = useUnits();
+  const units = useChartUnits();
   const shown = shownLayers.use();
   const [busy, setBusy] = useState<string | null>(null);
   const [problem, setProblem] = useState<unknown>(null);

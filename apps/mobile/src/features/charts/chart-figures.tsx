@@ -1,12 +1,12 @@
 import type { ChartView } from '@mereward/shared/charts/contract';
 import { Facts } from '@/components/facts';
 import { Section } from '@/components/section';
-import { useUnits } from '@/hooks/use-units';
+import { useChartUnits } from './use-chart-units';
 import { area, figure, length, percent, volume } from '@/lib/format';
 
 /** The water in figures, at chart datum. */
 export function ChartFigures({ figures }: { figures: NonNullable<ChartView['figures']> }) {
-  const units = useUnits();
+  const units = useChartUnits();
   return (
     <Section title="The water in figures" note="At chart datum; volume and mean depth of the surveyed part.">
       <Facts

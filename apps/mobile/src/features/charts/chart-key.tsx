@@ -9,13 +9,13 @@ import { View } from 'react-native';
 import { Text } from '@/components/text';
 import { space } from '@/constants/layout';
 import { useTheme } from '@/hooks/use-theme';
-import { useUnits } from '@/hooks/use-units';
+import { useChartUnits } from './use-chart-units';
 import { isobathFigure } from './depth-format';
 import { SvgPicture } from '@/components/svg-picture';
 
 /** The tints and the depths they begin at. */
 function Tints({ ground, palette }: { ground: Ground; palette: Palette }) {
-  const { length } = useUnits();
+  const { length } = useChartUnits();
   const { colours } = useTheme();
   const bands = bandsOf(ground.levelsM, palette.ramp);
   const every = Math.max(1, Math.ceil(bands.length / 6));

@@ -7,11 +7,12 @@ export const ShownLayers = z.object({
   bottom: z.boolean(),
   soundings: z.boolean(),
   today: z.boolean(), // at today's level where it is known, else at datum
+  otherUnit: z.boolean(), // feet for whoever usually reads metres, and the other way round
 });
 export type ShownLayers = z.infer<typeof ShownLayers>;
 
 export const shownLayers = createPreference<ShownLayers>({
   key: 'mereward.chart-layers',
   schema: ShownLayers,
-  fallback: { depth: true, bottom: false, soundings: false, today: false },
+  fallback: { depth: true, bottom: false, soundings: false, today: false, otherUnit: false },
 });

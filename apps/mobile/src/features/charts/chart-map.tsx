@@ -6,7 +6,7 @@ import { View, type LayoutChangeEvent } from 'react-native';
 import { Button } from '@/components/button';
 import { space } from '@/constants/layout';
 import { useTheme } from '@/hooks/use-theme';
-import { useUnits } from '@/hooks/use-units';
+import { useChartUnits } from './use-chart-units';
 import { baseLayer, chosenLayer, fixedLayer, type MapChosen, type MapContent } from './map-layers';
 import { MapSurface } from './map-surface';
 import { ZOOM_STEP } from './use-map-keys';
@@ -29,7 +29,7 @@ type Props = {
 /** A lake's map with everything that can be done to it. It fills the box it is put in. */
 export function ChartMap({ label, content, chosen, onPeg, onPlace, onAim }: Props) {
   const { name } = useTheme();
-  const units = useUnits();
+  const units = useChartUnits();
   const [size, setSize] = useState({ widthPx: 0, heightPx: 0 });
   const { view, limits, onView, fit, isWhole } = useMapView(content.ground.water, size);
   const palette = palettes[name];

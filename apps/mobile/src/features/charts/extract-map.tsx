@@ -9,7 +9,7 @@ import { stickWords } from '@mereward/shared/charts/spot-words';
 import { View } from 'react-native';
 import { useTheme } from '@/hooks/use-theme';
 import { useThreeColumns } from '@/hooks/use-wide';
-import { useUnits } from '@/hooks/use-units';
+import { useChartUnits } from './use-chart-units';
 import { isobathFigure } from './depth-format';
 import { extractContent, outlookView } from './extract-content';
 import { spotCast } from './spot-cast';
@@ -26,7 +26,7 @@ type Props = { page: PegPageView; spot: SpotView | null; label: string };
 export function ExtractMap({ page, spot, label }: Props) {
   const { extract } = page;
   const { name } = useTheme();
-  const units = useUnits();
+  const units = useChartUnits();
   const heightPx = useThreeColumns() ? WIDE_HEIGHT_PX : PHONE_HEIGHT_PX;
   const [widthPx, setWidthPx] = useState(0);
   const content = useMemo(() => (extract ? extractContent(page, extract) : null), [page, extract]);

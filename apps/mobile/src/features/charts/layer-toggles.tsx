@@ -6,6 +6,7 @@ import { space } from '@/constants/layout';
 import { useUnits } from '@/hooks/use-units';
 import { length } from '@/lib/format';
 import { dayAndTime } from '@/lib/format-time';
+import { useChartUnits } from './use-chart-units';
 import { shownLayers, type ShownLayers } from './chart-layers';
 
 type Key = keyof ShownLayers;
@@ -13,11 +14,13 @@ type Key = keyof ShownLayers;
 /** The layers this reader has, and the level they are shown at. A layer that is not theirs is no button, but a reason. */
 export function LayerToggles({ chart }: { chart: ChartView }) {
   const shown = shownLayers.use();
+  const { length: usual } = useUnits();
   const toggles: Toggle<Key>[] = [];
   if (chart.depth) toggles.push({ key: 'depth', label: 'Depth' });
   if (chart.substrate) toggles.push({ key: 'bottom', label: 'Bottom' });
   if (chart.soundings) toggles.push({ key: 'soundings', label: 'Soundings' });
   if (chart.depth && chart.levelNow) toggles.push({ key: 'today', label: 'At today’s level' });
+  if (chart.depth) toggles.push({ key: 'otherUnit', label: usual === 'm' ? 'In feet' : 'In metres' });
   return (
     <Toggles
       label="Shown on the chart"
@@ -60,7 +63,7 @@ export function LayerReasons({ notes }: { notes: ChartView['layerNotes'] }) {
 
 /** "at today's level, 0.38 m on B1, Sat 4 July, 07:00" or "at chart datum" */
 export function useLevelWords(chart: Pick<ChartView, 'levelNow' | 'zone'>, isToday: boolean): string {
-  const units = useUnits();
+  const units = useChartUnits();
   if (!isToday || !chart.levelNow) return 'depths at datum';
   const { boardReadsM, boardCode, at } = chart.levelNow;
   return `depths at today’s level, ${length(boardReadsM, units, 2)} on ${boardCode}, read ${dayAndTime(at, chart.zone)}`;

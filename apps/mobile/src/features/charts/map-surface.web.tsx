@@ -1,4 +1,4 @@
-import { useEffect, useLayoutEffect, useRef, type CSSProperties } from 'react';
+import { useCallback, useEffect, useLayoutEffect, useRef, type CSSProperties } from 'react';
 import { useTheme } from '@/hooks/use-theme';
 import { type MapSurfaceProps, OVERSCAN } from './map-surface-props';
 import { useMapKeys } from './use-map-keys';
@@ -24,7 +24,10 @@ export function MapSurface(props: MapSurfaceProps) {
   useLayoutEffect(() => {
     if (moving.current) moving.current.style.transform = '';
   }, [view, layers]);
-  const surface = { box, moving, latest };
+  const carry = useCallback((transform: string): void => {
+    if (moving.current) moving.current.style.transform = transform;
+  }, []);
+  const surface = { box, carry, latest };
   const pointers = useMapPointers(surface);
   useMapWheel(surface);
   const onKeyDown = useMapKeys(latest);

@@ -7,7 +7,7 @@ import { List, Row } from '@/components/list';
 import { StatusShape } from '@/components/status-shape';
 import { Text } from '@/components/text';
 import { space } from '@/constants/layout';
-import { useUnits } from '@/hooks/use-units';
+import { useChartUnits } from './use-chart-units';
 import { depthNow } from './depth-format';
 import { pegOutlook } from './peg-outlook';
 import { PEG_STATUS } from './peg-words';
@@ -24,7 +24,7 @@ type Props = {
 
 /** A lake's pegs in walking order, with what lies straight out from each as far as the chart tells this reader. */
 export function PegList({ lake, chart, pegId, onPeg }: Props) {
-  const units = useUnits();
+  const units = useChartUnits();
   const rangeM = OUTLOOK_WRAPS * units.stickSpacingM;
   const outlooks = useMemo(() => {
     const layers = chart?.depth ? layersOf(chart) : null;

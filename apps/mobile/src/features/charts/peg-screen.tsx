@@ -90,6 +90,16 @@ function Warnings({ details }: { details: PegDetails }) {
   );
 }
 
+/** The reader's own ticket, which opens what is kept for ticket holders. */
+function OwnTicket({ page: { ticket, fishery } }: { page: PegPageView }) {
+  if (!ticket) return null;
+  return (
+    <Note kind="fine" title="Your ticket for this peg">
+      {`From ${dayAndTime(ticket.from, fishery.zone)} until ${dayAndTime(ticket.until, fishery.zone)}.`}
+    </Note>
+  );
+}
+
 function AboutThePeg({ page, details }: { page: PegPageView; details: PegDetails | null }) {
   const notes = [details?.notesPublic, details?.notesMembers, details?.notesStaff].filter(Boolean);
   return (
@@ -125,6 +135,7 @@ function PegSheet({ page }: { page: PegPageView }) {
   return (
     <>
       {details ? <Warnings details={details} /> : null}
+      <OwnTicket page={page} />
       <View style={beside ? { flexDirection: 'row', gap: space.huge } : { gap: space.large }}>
         <View style={beside ? { flexBasis: WATER_WIDTH_PX, flexShrink: 1 } : undefined}>
           <InFront page={page} />

@@ -2,7 +2,7 @@ import type { ChartLayers } from '@mereward/shared/charts/chart-reading';
 import { BOTTOM_GLYPHS } from '@mereward/shared/charts/drawing/bottom-glyphs';
 import type { Point } from '@mereward/shared/geometry/plane';
 import { Text } from '@/components/text';
-import { useUnits } from '@/hooks/use-units';
+import { useChartUnits } from './use-chart-units';
 import { lengthWithin, percent } from '@/lib/format';
 import { depthNow } from './depth-format';
 import { readingAt } from './readied-chart';
@@ -11,7 +11,7 @@ type Props = { layers: ChartLayers | null; place: Point; raisedM: number; when: 
 
 /** What the chart says of the place that was touched: depth within its spread, bottom with its confidence. */
 export function PlaceReading({ layers, place, raisedM, when }: Props) {
-  const units = useUnits();
+  const units = useChartUnits();
   const reading = readingAt(layers, place);
   const words = (): string => {
     if (!reading) return 'That place is off the chart.';

@@ -2,14 +2,14 @@ import type { SectionPoint } from '@mereward/shared/charts/contract';
 import { stickWords } from '@mereward/shared/charts/spot-words';
 import { Disclosure } from '@/components/disclosure';
 import { Facts } from '@/components/facts';
-import { useUnits } from '@/hooks/use-units';
+import { useChartUnits } from './use-chart-units';
 import { figure } from '@/lib/format';
 import { depthNow } from './depth-format';
 import { sectionStretches, type SectionStretch } from './section-words';
 
 /** The section said in words, stretch by stretch, for whoever can't see it or would rather read. */
 export function SectionList({ points, raisedM }: { points: readonly SectionPoint[]; raisedM: number }) {
-  const units = useUnits();
+  const units = useChartUnits();
   const wraps = (lineOutM: number): string => figure(lineOutM / units.stickSpacingM, 1);
   const depth = ({ shallowestM, deepestM }: SectionStretch): string => {
     if (shallowestM === null || deepestM === null) return 'not surveyed';

@@ -6,7 +6,7 @@ import { PLAIN_SVG, toSvg } from '@mereward/shared/charts/drawing/to-svg';
 import { fromMetres } from '@mereward/shared/units/length';
 import { View } from 'react-native';
 import { useTheme } from '@/hooks/use-theme';
-import { useUnits } from '@/hooks/use-units';
+import { useChartUnits } from './use-chart-units';
 import { SvgPicture } from '@/components/svg-picture';
 
 const HEIGHT_PX = 190;
@@ -23,7 +23,7 @@ type Props = {
 /** The bed along a cast, drawn in wraps of the reader's own sticks. */
 export function SectionPicture({ points, raisedM, markLineOutM, label }: Props) {
   const { name } = useTheme();
-  const units = useUnits();
+  const units = useChartUnits();
   const [widthPx, setWidthPx] = useState(0);
   const svg = useMemo(() => {
     if (widthPx === 0) return '';

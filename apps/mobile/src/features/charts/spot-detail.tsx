@@ -6,7 +6,7 @@ import { Heading } from '@/components/heading';
 import { Note } from '@/components/note';
 import { Text } from '@/components/text';
 import { MEASURE_PX, space } from '@/constants/layout';
-import { useUnits } from '@/hooks/use-units';
+import { useChartUnits } from './use-chart-units';
 import { length, percent } from '@/lib/format';
 import { depthNow, depthShown } from './depth-format';
 import { capital } from './peg-words';
@@ -18,7 +18,7 @@ type Props = { spot: SpotView; page: Pick<PegPageView, 'chart' | 'levelNow' | 'r
 
 /** One spot in large figures: how to reach it, how deep today, what bottom, how sure, and the bed on the way. */
 export function SpotDetail({ spot, page }: Props) {
-  const units = useUnits();
+  const units = useChartUnits();
   const datumM = page.chart?.datumM ?? 0;
   const water = { levelM: page.levelNow?.levelM ?? null, datumM };
   const shown = spot.depthM === null ? null : depthShown(spot.depthM, water);

@@ -5,7 +5,7 @@ import { Pressable, View } from 'react-native';
 import { Text } from '@/components/text';
 import { space, target } from '@/constants/layout';
 import { themed } from '@/hooks/themed';
-import { useUnits } from '@/hooks/use-units';
+import { useChartUnits } from './use-chart-units';
 import { depthNow, depthShown } from './depth-format';
 import { aimWords, ownCount } from './spot-words';
 
@@ -41,7 +41,7 @@ type Props = {
 /** The spots that can be reached from a peg, each by count and aim, with depth and bottom. A press chooses one. */
 export function SpotsTable({ spots, spotId, onSpot, water }: Props) {
   const styles = useStyles();
-  const units = useUnits();
+  const units = useChartUnits();
   const depth = (spot: SpotView): string =>
     spot.depthM === null ? '' : depthNow(depthShown(spot.depthM, water).depthM, units.length);
   return (

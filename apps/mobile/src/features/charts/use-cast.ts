@@ -1,7 +1,7 @@
 import { useMemo, useState } from 'react';
 import type { ChartView, SectionPoint } from '@mereward/shared/charts/contract';
 import type { Point } from '@mereward/shared/geometry/plane';
-import { useUnits } from '@/hooks/use-units';
+import { useChartUnits } from './use-chart-units';
 import { useSection } from './api';
 import { aimedAt, drawnCast, lineOutAt, openWaterM, type AimedCast } from './drawn-cast';
 import { planeOutline } from './readied-chart';
@@ -15,7 +15,7 @@ type Peg = ChartView['pegs'][number];
 
 /** A cast drawn from the chosen peg, as far as land: by a drag on the map, or by choosing bearing and wraps. */
 export function useCast(chart: ChartView, peg: Peg | null) {
-  const { stickSpacingM } = useUnits();
+  const { stickSpacingM } = useChartUnits();
   const outline = useMemo(() => planeOutline(chart.outline, chart.origin), [chart]);
   const [aims, setAims] = useState<Record<string, AimedCast>>({});
   const [dragged, setDragged] = useState<AimedCast | null>(null);

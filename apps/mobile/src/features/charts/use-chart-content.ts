@@ -2,7 +2,7 @@ import { useMemo } from 'react';
 import type { ChartLayers } from '@mereward/shared/charts/chart-reading';
 import type { ChartView } from '@mereward/shared/charts/contract';
 import type { BottomArea } from '@mereward/shared/charts/drawing/bottom-areas';
-import { useUnits } from '@/hooks/use-units';
+import { useChartUnits } from './use-chart-units';
 import type { ShownLayers } from './chart-layers';
 import { stepFor } from './depth-format';
 import type { MapContent } from './map-layers';
@@ -32,7 +32,7 @@ export function useChartContent(
   shown: ShownLayers,
   spots: MapContent['spots'] = NO_SPOTS,
 ): ChartContent {
-  const units = useUnits();
+  const units = useChartUnits();
   const layers = useMemo(() => layersOf(chart), [chart]);
   const nowM = raisedNowM(chart);
   const isToday = shown.today && nowM !== null;

@@ -6,11 +6,6 @@ import type { MapSurfaceRefs } from './map-surface-refs';
 
 type Press = PointerEvent<HTMLDivElement>;
 
-/** Moves the picture without drawing it again; the drawing follows when the gesture ends. */
-function show(picture: HTMLElement | null, moved: Parameters<typeof cssTransform>[0]): void {
-  if (picture) picture.style.transform = cssTransform(moved);
-}
-
 /** Dragging, pinching, tapping, and taking hold of things on the map. */
 export function useMapPointers({ box, carry, latest }: MapSurfaceRefs) {
   const gesture = useRef(newGesture());

@@ -10,7 +10,7 @@ const PER_PX_PINCHED = 0.01; // a pad's pinch comes as small wheel steps with th
 const LINE_PX = 20;
 
 /** The wheel scales about the pointer; the drawing follows when it has come to rest. */
-export function useMapWheel({ box, moving, latest }: MapSurfaceRefs): void {
+export function useMapWheel({ box, carry, latest }: MapSurfaceRefs): void {
   useEffect(() => {
     const element = box.current;
     if (!element) return undefined;
@@ -29,7 +29,7 @@ export function useMapWheel({ box, moving, latest }: MapSurfaceRefs): void {
       if (scale === 1) about = { x: event.clientX - frame.left, y: event.clientY - frame.top };
       const px = event.deltaMode === WheelEvent.DOM_DELTA_LINE ? event.deltaY * LINE_PX : event.deltaY;
       scale = clampedScale(view, scale * Math.exp(-px * (event.ctrlKey ? PER_PX_PINCHED : PER_PX)), limits);
-      if (moving.current) moving.current.style.transform = cssTransform({ scale, from: about, to: about });
+      carry(cssTransform({ scale, from: about, to: about }));
       clearTimeout(timer);
       timer = setTimeout(settle, SETTLES_AFTER_MS);
     };
@@ -38,5 +38,5 @@ export function useMapWheel({ box, moving, latest }: MapSurfaceRefs): void {
       clearTimeout(timer);
       element.removeEventListener('wheel', turn);
     };
-  }, [box, moving, latest]);
+  }, [box, carry, latest]);
 }

@@ -1,3 +1,4 @@
+import type { Point } from '../../geometry/point';
 import type { BottomArea } from './bottom-areas';
 import { confidenceAt } from './bottom-areas';
 import { BOTTOM_GLYPHS } from './bottom-glyphs';
@@ -60,7 +61,7 @@ function patternOf(area: BottomArea, scene: Scene, bands: readonly Band[]): Mark
   for (const { xM, yM, chance } of latticeIn(scene.view, style.gapPx, style)) {
     const sure = confidenceAt(area, xM, yM);
     if (sure === 0 || (sure < SPARSE_BELOW && chance > SPARSE_KEPT)) continue;
-    const tint = tintUnder(xM, yM, scene, bands);
+    const tint = tintUnder({ xM, yM }, scene, bands);
     const places = byTint.get(tint);
     if (places) places.push(xM, yM);
     else byTint.set(tint, [xM, yM]);
@@ -72,7 +73,7 @@ function patternOf(area: BottomArea, scene: Scene, bands: readonly Band[]): Mark
   });
 }
 
-function tintUnder(xM: number, yM: number, { ground, palette }: Scene, bands: readonly Band[]): string {
+function tintUnder({ xM, yM }: Point, { ground, palette }: Scene, bands: readonly Band[]): string {
   if (!ground.depth) return palette.paper;
   const depthM = valueAt(ground.depth, xM, yM);
   return bandAt(bands, Number.isNaN(depthM) ? 0 : depthM).tint;
@@ -108,7 +109,7 @@ export function bottomLabels(areas: readonly BottomArea[], scene: Scene & { take
         return [];
       taken.push({ ...at, radiusPx: LABEL_PX });
       own.push(at);
-      const { ink, halo } = labelInkOn(tintUnder(xM, yM, scene, bands), palette);
+      const { ink, halo } = labelInkOn(tintUnder({ xM, yM }, scene, bands), palette);
       const { abbreviation } = BOTTOM_GLYPHS[area.kind];
       return [text({ words: abbreviation, x: xM, y: yM, sizePx: LABEL_PX, bold: true, colour: ink, halo })];
     });
