@@ -22,6 +22,7 @@ import { LiveCall } from '@/features/surveys/live-call';
 import { MorePart } from '@/features/surveys/more-part';
 import { bringIntoSight } from '@/lib/bring-into-sight';
 import { useCastForm } from '@/features/surveys/use-cast-form';
+import { useThreeColumns } from '@/hooks/use-wide';
 import { visitGauge } from '@/features/surveys/visit-words';
 
 type Props = { lake: LakeView; visit: VisitView; casts: readonly CastView[] };
@@ -42,6 +43,7 @@ export function CastForm({ lake, visit, casts }: Props) {
     },
   });
   const { form } = cast;
+  const beside = useThreeColumns();
   const last = casts.at(-1);
   const seq = (last?.seq ?? 0) + 1;
   const closer = form.watch('lineId') !== '';
@@ -59,6 +61,7 @@ export function CastForm({ lake, visit, casts }: Props) {
       title={`Cast ${seq}`}
       over={visitGauge(lake, visit)}
       back={{ label: visit.title, href: `/bank/surveys/${visit.id}` }}
+      width={beside ? 'wide' : 'reading'}
       actions={
         <>
           <LiveCall reduced={cast.reduced} />
@@ -103,15 +106,22 @@ export function CastForm({ lake, visit, casts }: Props) {
             />
           </View>
         ) : null}
-        <View nativeID="main-cast">
-          <AimPart form={form} lake={lake} />
-          <LinePart form={form} visit={visit} />
-          <FeelPart form={form} />
-          <FloatPart form={form} visit={visit} />
-          <MorePart form={form} />
+        <View
+          nativeID="main-cast"
+          style={{ flexDirection: beside ? 'row' : 'column', gap: beside ? space.huge : space.page }}
+        >
+          <View style={beside ? { flex: 1, minWidth: 0 } : undefined}>
+            <AimPart form={form} lake={lake} />
+            <LinePart form={form} visit={visit} />
+            <FeelPart form={form} />
+            <FloatPart form={form} visit={visit} />
+            <MorePart form={form} />
+          </View>
+          <View style={beside ? { flex: 1, minWidth: 0, gap: space.page } : { gap: space.page }}>
+            <Warnings reduced={cast.reduced} />
+            <CastSketch lake={lake} casts={casts} surroundings={cast.surroundings} now={cast.reduced} />
+          </View>
         </View>
-        <Warnings reduced={cast.reduced} />
-        <CastSketch lake={lake} casts={casts} surroundings={cast.surroundings} now={cast.reduced} />
         {last ? (
           <View style={{ alignItems: 'flex-start', gap: space.small }}>
             <Button

@@ -1,9 +1,9 @@
-import { fromPlane, type LonLat } from '@mereward/shared/geometry/plane';
+import { fromPlane } from '@mereward/shared/geometry/plane';
 import type { LakeView } from '@mereward/shared/lakes/contract';
 import { expect, test } from 'vitest';
 import { marksAhead } from './marks-ahead';
 
-const origin: LonLat = [-1.2, 52.1];
+const origin: [number, number] = [-1.2, 52.1];
 const at = (xM: number, yM: number): [number, number] => {
   const [lon, lat] = fromPlane(origin, { xM, yM });
   return [lon, lat];

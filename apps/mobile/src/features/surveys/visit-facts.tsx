@@ -47,7 +47,7 @@ export function VisitKit({ visit }: Pick<Props, 'visit'>) {
 const whenWords = ({ startedAt, endedAt }: VisitView, zone: string): string =>
   endedAt === null
     ? `since ${dayAndTime(startedAt, zone)}`
-    : `${dayAndTime(startedAt, zone)} to ${clockTime(endedAt, zone)}`;
+    : `${dayAndTime(startedAt, zone)} to ${clockTime(endedAt, zone, zone)}`;
 
 function gaugeWords(visit: VisitView, lake: LakeView): string {
   const reads = (levelM: number) => boardReads(lake, visit.boardId, levelM);
