@@ -22,7 +22,7 @@ export default defineConfig({
     locale: 'en-GB',
     timezoneId: 'Europe/London',
     screenshot: 'only-on-failure',
-    trace: 'retain-on-failure',
+    trace: process.env.JOURNEY_TRACES ? 'retain-on-failure' : 'off', // recording costs a third of the time
     launchOptions: {
       ...(executablePath ? { executablePath } : {}),
       args: [

@@ -1,5 +1,6 @@
 import type { Locator, Page } from '@playwright/test';
 import { FisheryList } from '@mereward/shared/fisheries/contract';
+import { geodesicBetween } from '@mereward/shared/geometry/geodesic';
 import { LakeView } from '@mereward/shared/lakes/contract';
 import { join } from 'node:path';
 import { fileURLToPath } from 'node:url';
@@ -151,9 +152,14 @@ test('an owner draws a lake by tapping and gives it a mark, a board, a reading a
   await page.getByLabel('Number').fill('TW1');
   const places = page.getByLabel('Tapped Water: the peg’s place and its water');
   await tap(page, places, [[0.35, 0.3]]);
-  await expect(page.getByLabel('Origin mark: latitude, longitude')).not.toHaveValue('');
-  await page.getByLabel('Water’s edge: latitude, longitude').fill(`${String(lat)}, ${String(lon)}`);
-  await page.getByLabel('Origin mark: latitude, longitude').fill(`${String(lat)}, ${String(lon)}`);
+  const edge = page.getByLabel('Water’s edge: latitude, longitude');
+  await expect(edge).not.toHaveValue('');
+  const { bearingDeg } = geodesicBetween([lon, lat], lake.origin);
+  const at = `${String(lat)}, ${String(lon)}`;
+  await edge.fill(at);
+  await page.getByLabel('Origin mark: latitude, longitude').fill(at);
+  await page.getByLabel('Left limit, degrees').fill(String(Math.round(bearingDeg + 330) % 360));
+  await page.getByLabel('Right limit, degrees').fill(String(Math.round(bearingDeg + 30) % 360));
   await page.getByRole('button', { name: 'Keep the peg' }).click();
   await expect(page.getByRole('heading', { level: 1 })).toHaveText('Peg TW1');
   const photo = { name: 'from-the-dot.jpg', mimeType: 'image/jpeg', buffer: await aPhoto() };
