@@ -23,6 +23,7 @@ import { AccountsAndFisheries1780000000000 } from './migrations/1780000000000-Ac
 import { LakesAndPegs1780000001000 } from './migrations/1780000001000-LakesAndPegs';
 import { SurveysAndCharts1780000002000 } from './migrations/1780000002000-SurveysAndCharts';
 import { ReducedWith1780000003000 } from './migrations/1780000003000-ReducedWith';
+import { KeptCasts1780000004000 } from './migrations/1780000004000-KeptCasts';
 
 const ENTITIES = [
   Account,
@@ -52,6 +53,7 @@ const MIGRATIONS = [
   LakesAndPegs1780000001000,
   SurveysAndCharts1780000002000,
   ReducedWith1780000003000,
+  KeptCasts1780000004000,
 ];
 
 /** A pool of connections to one database, opened by the caller with `initialize()`. */

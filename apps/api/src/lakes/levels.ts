@@ -83,9 +83,10 @@ export async function latestReading(tx: EntityManager, lakeId: string): Promise<
   const rows: LatestReading[] = await tx.query(
     `SELECT r.level_m AS "boardReadsM", r.at, b.code AS "boardCode",
             (b.details ->> 'higherNumberHigherWater')::boolean AS "higherNumberHigherWater"
-       FROM gauge_board b JOIN level_reading r ON r.board_id = b.id
-      WHERE b.lake_id = $1 AND b.is_datum_board
-      ORDER BY r.at DESC, r.received_at DESC LIMIT 1`,
+       FROM gauge_board b
+      CROSS JOIN LATERAL (SELECT * FROM level_reading WHERE board_id = b.id
+                           ORDER BY at DESC, received_at DESC LIMIT 1) r
+      WHERE b.lake_id = $1 AND b.is_datum_board`,
     [lakeId],
   );
   return rows[0] ?? null;
