@@ -22,7 +22,8 @@ export function PegPhotos({ photos, title }: { photos: readonly PhotoView[]; tit
         <View key={id} style={{ gap: space.hair }}>
           <Image
             source={{ uri: smallUrl ?? '' }}
-            alt={caption || `Photograph from ${title}`}
+            role="img"
+            aria-label={caption || `Photograph from ${title}`}
             style={{
               height: HEIGHT_PX,
               width: (HEIGHT_PX * (widthPx ?? 4)) / (heightPx ?? 3),

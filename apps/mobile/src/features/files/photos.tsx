@@ -62,7 +62,8 @@ function PhotoTile({ photo: given, onRemove }: { photo: PhotoView; onRemove: () 
       {smallUrl ? (
         <Image
           source={{ uri: smallUrl }}
-          alt={about}
+          role="img"
+          aria-label={about}
           resizeMode="cover"
           style={{ width: TILE_PX, height: (TILE_PX * 3) / 4, borderRadius: radius.control }}
         />
