@@ -3,7 +3,7 @@ import type { SectionPoint } from '@mereward/shared/charts/contract';
 import { palettes } from '@mereward/shared/charts/drawing/palette';
 import { drawSection } from '@mereward/shared/charts/drawing/section-drawing';
 import { PLAIN_SVG, toSvg } from '@mereward/shared/charts/drawing/to-svg';
-import { fromMetres } from '@mereward/shared/units/length';
+import { fromMetres, METRES_IN } from '@mereward/shared/units/length';
 import { View } from 'react-native';
 import { useTheme } from '@/hooks/use-theme';
 import { useChartUnits } from './use-chart-units';
@@ -35,6 +35,7 @@ export function SectionPicture({ points, raisedM, markLineOutM, label }: Props) 
         })),
         stickSpacingM: units.stickSpacingM,
         markLineOutM,
+        unitM: METRES_IN[units.length],
         depthWords: (depthM) => String(Math.round(fromMetres(depthM, units.length) * 10) / 10),
       },
       { widthPx, heightPx: HEIGHT_PX, palette: palettes[name] },

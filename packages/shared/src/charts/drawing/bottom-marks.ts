@@ -3,7 +3,7 @@ import type { BottomArea } from './bottom-areas';
 import { confidenceAt } from './bottom-areas';
 import { BOTTOM_GLYPHS } from './bottom-glyphs';
 import { thinnedFor } from './depth-marks';
-import type { Ground } from './ground';
+import { isWellSurveyed, type Ground } from './ground';
 import type { Taken } from './isobath-labels';
 import { ruled, text, type GlyphsMark, type Mark, type PathMark } from './mark';
 import type { Palette } from './palette';
@@ -103,6 +103,7 @@ export function bottomLabels(areas: readonly BottomArea[], scene: Scene & { take
     const own: PagePoint[] = [];
     return area.labels.flatMap(({ xM, yM, roomM }) => {
       if (roomM * view.pxPerM < LEAST_ROOM_PX && area.kind !== 'snag') return [];
+      if (scene.ground.depth && !isWellSurveyed(scene.ground, { xM, yM })) return [];
       const at = toPage(view, xM, yM);
       if (own.some((other) => Math.hypot(at.x - other.x, at.y - other.y) < SAME_LETTERS_APART_PX)) return [];
       if (taken.some((other) => Math.hypot(at.x - other.x, at.y - other.y) < other.radiusPx + LABEL_PX))

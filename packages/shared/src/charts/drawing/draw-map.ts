@@ -42,20 +42,23 @@ export function drawMap(parts: MapParts, choice: MapChoice): Mark[] {
   const pegs = pegMarks(parts.pegs, { palette, view, selectedId: choice.selectedPegId, taken });
   const letters = bottomLabels(bottom, { ground, palette, view, taken });
   const figures = isobathLabels(ground, palette, { view, words: depthWords, taken });
+  const soundings = parts.soundings.length
+    ? soundingMarks(parts.soundings, { palette, view, words: depthWords })
+    : [];
   const water: Mark[] = [
     ...tintMarks(ground, palette, view),
     ...bottomMarks(bottom, { ground, palette, view }),
     ...isobathMarks(ground, palette, view),
-    ...figures,
-    ...letters,
     ...unsurveyedMarks(ground, palette, view),
     ...dryMarks(ground, palette, view),
+    ...soundings,
+    ...figures,
+    ...letters,
   ];
   return [
     filled(ground.water, palette.paper),
     { kind: 'clip', lines: ground.water, marks: water },
     ...shoreMarks(ground, palette),
-    ...(parts.soundings.length ? soundingMarks(parts.soundings, { palette, view, words: depthWords }) : []),
     ...spotMarks(parts.spots, palette, choice.selectedSpotId),
     ...(parts.cast ? castMarks(parts.cast, palette, view) : []),
     ...pegs,

@@ -3,7 +3,7 @@ import type { Grid } from '../grid';
 import { bottomAreas, confidenceAt } from './bottom-areas';
 import { bottomMarks, scatter } from './bottom-marks';
 import { drawMap, type MapChoice } from './draw-map';
-import { groundOf, type Ground } from './ground';
+import { groundOf, isWellSurveyed, type Ground } from './ground';
 import type { Mark } from './mark';
 import { palettes } from './palette';
 import { fitView } from './view';
@@ -50,6 +50,13 @@ describe('a chart made ready', () => {
     expect(unsurveyed.some((ring) => inside(ring, 34, 34))).toBe(true);
     expect(unsurveyed.some((ring) => inside(ring, 30, 30))).toBe(true);
     expect(unsurveyed.some((ring) => inside(ring, 20, 20))).toBe(false);
+  });
+
+  test('lets words stand on surveyed water only, and not at its very edge', () => {
+    const ground = groundAt(0);
+    expect(isWellSurveyed(ground, { xM: 20, yM: 20 })).toBe(true);
+    expect(isWellSurveyed(ground, { xM: 34, yM: 34 })).toBe(false);
+    expect(isWellSurveyed(ground, { xM: 28, yM: 28 })).toBe(false);
   });
 
   test('has a region for each level that reaches the level’s own depth', () => {

@@ -1,3 +1,4 @@
+import type { Point } from '../../geometry/point';
 import { ringsOf, type Outline } from '../../geometry/polygon';
 import { isSurveyed, type Grid } from '../grid';
 import { deeperRegions, isobathLevels, isobaths, type Isobath } from '../isobaths';
@@ -107,4 +108,21 @@ function dryAreas(drawn: Grid, inWater: Uint8Array): Line[] {
   spreadInto({ values: spread, columns, rows }, DRY_SPREAD_CELLS);
   const values = height.map((own, i) => (inWater[i] ? own : spread[i]!));
   return deeperRegions({ ...drawn, values }, [0])[1]?.lines ?? [];
+}
+
+const CLEAR_CELLS = 1.5;
+
+/** Is a place, and what lies just beside it, surveyed? Words belong to such places only. */
+export function isWellSurveyed({ depth, surveyedAt }: Ground, { xM, yM }: Point): boolean {
+  if (!depth || !surveyedAt) return false;
+  const { columns, rows, cellM, originM } = depth;
+  const beside = [-CLEAR_CELLS, 0, CLEAR_CELLS];
+  return beside.every((right) =>
+    beside.every((up) => {
+      const column = Math.round((xM - originM.xM) / cellM + right);
+      const row = Math.round((yM - originM.yM) / cellM + up);
+      if (column < 0 || row < 0 || column >= columns || row >= rows) return false;
+      return surveyedAt[row * columns + column] === 1;
+    }),
+  );
 }

@@ -1,5 +1,5 @@
 import { isHeavy } from './depth-marks';
-import type { Ground } from './ground';
+import { isWellSurveyed, type Ground } from './ground';
 import { text, type Line, type Mark } from './mark';
 import type { Palette } from './palette';
 import { bandAt, bandsOf, labelInkOn } from './tint';
@@ -130,6 +130,7 @@ function hasRoom(place: RunPoint, { view, ground }: Along): boolean {
   const { depth } = ground;
   if (!depth || place.x < 12 || place.y < 12) return false;
   if (place.x > view.widthPx - 12 || place.y > view.heightPx - 12) return false;
+  if (!isWellSurveyed(ground, place)) return false;
   const reachM = depth.cellM;
   const across = valueAt(depth, place.xM + reachM, place.yM) - valueAt(depth, place.xM - reachM, place.yM);
   const up = valueAt(depth, place.xM, place.yM + reachM) - valueAt(depth, place.xM, place.yM - reachM);

@@ -23,7 +23,7 @@ const places = [
   bed(60, null),
 ];
 const page = { widthPx: 400, heightPx: 200, palette: palettes.light };
-const input = { places, stickSpacingM: 3.6576, depthWords: (d: number) => d.toFixed(1) };
+const input = { places, stickSpacingM: 3.6576, depthWords: (d: number) => d.toFixed(1), unitM: 1 };
 
 test('the mark goes from the water down and ends on the bed', () => {
   const steps = stepsOf(drawSection({ ...input, markLineOutM: 20 }, page));
@@ -65,4 +65,21 @@ test('the bank the angler stands on is not called unsurveyed; a gap out on the w
     ).length;
   expect(rules([bed(0, null), bed(2, 0.1), bed(10, 1)])).toBe(0);
   expect(rules([bed(0, 0.1), bed(2, null), bed(10, 1)])).toBe(1);
+});
+
+test('depths are ruled at round figures of the reader’s own unit', () => {
+  const ruled = (unitM: number) =>
+    stepsOf(
+      drawSection(
+        {
+          ...input,
+          unitM,
+          depthWords: (d) => String(Math.round((d / unitM) * 100) / 100),
+          markLineOutM: null,
+        },
+        page,
+      ),
+    ).flatMap((step) => (step.do === 'text' && step.anchor === 'end' ? [step.words] : []));
+  expect(ruled(1)).toEqual(['0', '1', '2', '3']);
+  expect(ruled(0.3048)).toEqual(['0', '5', '10']);
 });

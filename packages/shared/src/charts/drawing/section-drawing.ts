@@ -17,6 +17,7 @@ export type SectionInput = {
   stickSpacingM: number;
   markLineOutM: number | null; // where the chosen spot lies
   depthWords: (depthM: number) => string;
+  unitM: number; // what depths are read in, metres: 1, or a foot's 0.3048
 };
 
 export type SectionPage = { widthPx: number; heightPx: number; palette: Palette };
@@ -146,9 +147,13 @@ function waterLine(scale: Scale, page: SectionPage): Mark {
   return stroked([[LEFT_PX, y, page.widthPx - RIGHT_PX, y]], ruled(page.palette.waterLine, 1.8));
 }
 
+const RULE_STEPS = [0.5, 1, 2, 5, 10] as const;
+const MOST_RULES = 4.5;
+
 /** Level rules at round depths with figures at the left. */
-function depthRules(scale: Scale, { depthWords }: SectionInput, page: SectionPage): Mark[] {
-  const stepM = scale.deepM > 4 ? 2 : scale.deepM > 1.6 ? 1 : 0.5;
+function depthRules(scale: Scale, { depthWords, unitM }: SectionInput, page: SectionPage): Mark[] {
+  const units = RULE_STEPS.find((step) => scale.deepM / unitM / step <= MOST_RULES) ?? 10;
+  const stepM = units * unitM;
   const marks: Mark[] = [];
   for (let depthM = 0; depthM < scale.deepM; depthM += stepM) {
     const y = scale.y(depthM);
