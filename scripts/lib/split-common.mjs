@@ -131,11 +131,19 @@ function entryIds(others, modules, opened) {
 }
 
 /**
- * Has a script's parts fetched beside it. Runs before the program does, which then sets how a script is fetched.
+ * Has a script's parts fetched beside it, and the script itself run after them: the router asks for a screen again while
+ * it is on its way, and a module that once asked in vain for one of a part stays broken. Runs before the program does,
+ * which then sets how a script is fetched.
  * @param {Map<string, readonly string[]>} needs
  */
 export const fetchingParts = (needs) =>
-  `!function(g,needs,load){Object.defineProperty(g,'__loadBundleAsync',{configurable:!0,get:function(){return load},set:function(one){load=function(path){return Promise.all([path].concat(needs[path]||[]).map(one))}}})}(globalThis,${JSON.stringify(Object.fromEntries(needs))});`;
+  `!function(g,needs,load){` +
+  `function ahead(path){var link=document.createElement('link');link.rel='preload';link.as='script';link.href=path;document.head.appendChild(link)}` +
+  `function set(one){var begun={};load=function(path){var parts=needs[path];if(!parts)return one(path);` +
+  `if(!begun[path]){ahead(path);begun[path]=Promise.all(parts.map(function(part){return one(part)})).then(function(){return one(path)}).catch(function(fault){delete begun[path];throw fault})}` +
+  `return begun[path]}}` +
+  `Object.defineProperty(g,'__loadBundleAsync',{configurable:!0,get:function(){return load},set:set})` +
+  `}(globalThis,${JSON.stringify(Object.fromEntries(needs))});`;
 
 /**
  * Does it to an exported client, before it is compressed. Says how many parts there are; 0 when it was left whole.

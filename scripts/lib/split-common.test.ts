@@ -88,26 +88,35 @@ describe('the script all screens share', () => {
     expect(splitCommon({ common: bundle.common, others: [] })).toBeNull();
   });
 
-  it('has a script’s parts fetched beside it, whoever sets how', async () => {
-    const fetched: string[] = [];
-    const context = { fetched };
+  /** A page that notes what is asked for ahead of its turn. */
+  function aPage(ahead: string[] = []) {
+    const head = { appendChild: ({ href }: { href: string }) => ahead.push(href) };
+    return { document: { createElement: () => ({}), head } };
+  }
+
+  it('runs a script after its parts, fetched beside it and once, however often it is asked for', async () => {
+    const [ahead, run]: [string[], string[]] = [[], []];
+    const context = { ...aPage(ahead), run };
     runInNewContext(fetchingParts(new Map([['/new.js', ['/form.js']]])), context);
     await runInNewContext(
-      `globalThis.__loadBundleAsync = async (path) => { fetched.push(path) };
-       Promise.all([__loadBundleAsync('/new.js'), __loadBundleAsync('/peg.js')])`,
+      `globalThis.__loadBundleAsync = async (path) => { run.push(path) };
+       Promise.all([__loadBundleAsync('/new.js'), __loadBundleAsync('/peg.js'), __loadBundleAsync('/new.js')])`,
       context,
     );
-    expect(fetched).toEqual(['/new.js', '/form.js', '/peg.js']);
+    expect(run).toEqual(['/form.js', '/peg.js', '/new.js']);
+    expect(ahead).toEqual(['/new.js']);
   });
 
-  it('fails a screen whose part cannot be fetched, as if its own script were missing', async () => {
-    const context = {};
+  it('fails a screen whose part cannot be fetched, and tries it anew when asked again', async () => {
+    const context = { ...aPage(), signal: false };
     runInNewContext(fetchingParts(new Map([['/new.js', ['/form.js']]])), context);
     const opening: unknown = runInNewContext(
-      `globalThis.__loadBundleAsync = async (path) => { if (path === '/form.js') throw 'no signal' };
+      `globalThis.__loadBundleAsync = async (path) => { if (!signal && path === '/form.js') throw 'no signal' };
        __loadBundleAsync('/new.js')`,
       context,
     );
     await expect(opening).rejects.toBe('no signal');
+    context.signal = true;
+    await expect(runInNewContext(`__loadBundleAsync('/new.js')`, context)).resolves.toBeUndefined();
   });
 });
