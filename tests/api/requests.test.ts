@@ -183,3 +183,15 @@ describe('a clock that is wrong', () => {
     },
   );
 });
+
+test('a name that is taken is refused with what to do', async () => {
+  const first = await aPeg(server, lake, { number: 'N1' });
+  const second = await aPeg(server, lake, { number: 'N2' });
+  const answer = await owner
+    .put(`/pegs/${second.id}`)
+    .send({ details: { ...second.details, number: first.details.number }, version: 1 });
+  expect(problem(answer.body)).toMatchObject({
+    kind: 'conflict',
+    detail: expect.stringMatching(/Change that/),
+  });
+});

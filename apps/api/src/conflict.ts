@@ -16,7 +16,8 @@ export async function orConflict<T>(deed: Promise<T>, constraint: string, title:
   try {
     return await deed;
   } catch (error) {
-    if (brokenConstraint(error) === constraint) throw new Problem('conflict', title);
+    if (brokenConstraint(error) === constraint)
+      throw new Problem('conflict', title, { detail: 'Nothing was saved. Change that, then save again.' });
     throw error;
   }
 }

@@ -15,6 +15,8 @@ import { whyNotApprove } from './policy';
 import { checksOf } from './checks';
 import { surveyorsOf } from './surveyors';
 
+const NOTHING_DONE = 'Nothing was changed by you. Look at the chart again to see how it stands.';
+
 /** Puts a draft before those who may approve it. Refused while a check blocks it. */
 export async function submitChart(ctx: Ctx, chartId: string): Promise<void> {
   const { tx, actor, now } = ctx;
@@ -25,6 +27,7 @@ export async function submitChart(ctx: Ctx, chartId: string): Promise<void> {
       found.chart.status === 'submitted'
         ? 'This chart is submitted already'
         : 'This chart is published already',
+      { detail: NOTHING_DONE },
     );
   await refuseBlocked(tx, found);
   const submittedBy = accountOf(actor);
@@ -44,7 +47,8 @@ export async function approveChart(ctx: Ctx, chartId: string): Promise<void> {
     throw new Problem('conflict', 'This chart has not been submitted', {
       detail: 'Its surveyor submits it first.',
     });
-  if (chart.status !== 'submitted') throw new Problem('conflict', 'This chart has been published already');
+  if (chart.status !== 'submitted')
+    throw new Problem('conflict', 'This chart has been published already', { detail: NOTHING_DONE });
   const why = whyNotApprove(actor, {
     fisheryId: lake.fisheryId,
     submittedBy: chart.submittedBy,
@@ -70,7 +74,8 @@ export async function approveChart(ctx: Ctx, chartId: string): Promise<void> {
 /** Takes a published chart away from its readers, saying why. It stays on record. */
 export async function withdrawChart(ctx: Ctx, chartId: string, { reason }: WithdrawChart): Promise<void> {
   const { chart } = await chartToChange(ctx, chartId, CHART_APPROVERS);
-  if (chart.status === 'withdrawn') throw new Problem('conflict', 'This chart is withdrawn already');
+  if (chart.status === 'withdrawn')
+    throw new Problem('conflict', 'This chart is withdrawn already', { detail: NOTHING_DONE });
   if (chart.status !== 'published' && chart.status !== 'superseded')
     throw new Problem('conflict', 'Only a published chart can be withdrawn', {
       detail: 'A draft is discarded instead.',

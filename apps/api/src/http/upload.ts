@@ -59,7 +59,12 @@ function received(req: Request, res: Response, wanted: Wanted): Promise<void> {
       if (bytes > wanted.mostBytes + SLACK_BYTES) reject(tooLarge(wanted));
     });
     req.once('close', () => {
-      if (!req.complete) reject(new Problem('invalid', 'The file did not arrive whole'));
+      if (!req.complete)
+        reject(
+          new Problem('invalid', 'The file did not arrive whole', {
+            detail: 'Nothing was kept. Send it again.',
+          }),
+        );
     });
   });
 }

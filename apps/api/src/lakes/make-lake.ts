@@ -60,5 +60,7 @@ function checked(details: LakeDetails): { details: LakeDetails; areaM2: number }
   if (outline && areaM2 !== null) return { details: { ...details, outline }, areaM2 };
   const refused = findings.filter(({ kind }) => kind === 'refused');
   refuseFaults(refused.map(({ words }) => ({ field: 'outline', words })));
-  throw new Problem('invalid', 'The outline encloses no water');
+  throw new Problem('invalid', 'The outline encloses no water', {
+    detail: 'Nothing was saved. Draw the shore again, all round the water.',
+  });
 }
