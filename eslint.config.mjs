@@ -48,6 +48,11 @@ const windowedLists = {
           importNames: ['FlatList', 'SectionList', 'VirtualizedList'],
           message: 'The web build leaves windowed lists out: use a List or a Table.',
         },
+        {
+          name: 'expo-router',
+          importNames: ['Tabs'],
+          message: 'The web build leaves the router’s tab bar out: use Places.',
+        },
       ],
     },
   ],

@@ -20,6 +20,12 @@ const LEFT_OUT = [
     of: /\/(FlatList|SectionList|VirtualizedList|VirtualizedSectionList)$/,
     only: 'web',
   },
+  // The router's own tab bar: ours is written here. The same lint rule keeps its tabs from being asked for.
+  {
+    in: /[\\/]expo-router[\\/]build[\\/]react-navigation[\\/]bottom-tabs[\\/]/,
+    of: /\/views\/(BottomTabBar|BottomTabView)$/,
+    only: 'web',
+  },
 ];
 
 config.resolver.resolveRequest = (context, moduleName, platform) =>
