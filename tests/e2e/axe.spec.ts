@@ -52,8 +52,9 @@ for (const { place, who, sees } of LOOKS)
     for (const route of routes().filter((each) => sees.test(each)))
       await test.step(route, async () => {
         await page.emulateMedia({ colorScheme: 'light' });
-        await page.goto(addressOf(route, ids), { waitUntil: 'networkidle' });
+        await page.goto(addressOf(route, ids));
         await expect(page.getByRole('heading', { level: 1 })).toBeVisible();
+        await expect(page.getByRole('status').filter({ hasText: /…$/ })).toHaveCount(0);
         await expect(page.getByText('Something in this page failed')).toHaveCount(0);
         await unfold(page);
         expect.soft(await axeFaults(page), route).toEqual([]);

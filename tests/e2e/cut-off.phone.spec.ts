@@ -121,3 +121,14 @@ test('a form sent without a signal keeps every word, over a reload too', async (
   await page.goto(`/office/lakes/${water.lakeId}/details`);
   await expect(page.getByLabel('Name', { exact: true })).toHaveValue('Wordy Water');
 });
+
+test('a screen opens though a script that it shares with others comes late', async ({ pageOf }) => {
+  const page = await pageOf({ who: 'joan', now: NOW });
+  await page.route('**/__part-*', async (route) => {
+    await new Promise((later) => setTimeout(later, 1000));
+    await route.fallback();
+  });
+  await page.goto('/bank');
+  await expect(page.getByRole('heading', { level: 1 })).toHaveText('Bank');
+  await expect(page.getByRole('link', { name: 'Open a visit' }).first()).toBeVisible();
+});

@@ -9,7 +9,8 @@ const OF_COLOUR = ['color-contrast', 'link-in-text-block'];
  * rules alone that another theme can break.
  */
 export async function axeFaults(page: Page, look: 'all' | 'colours' = 'all'): Promise<string[]> {
-  const axe = new AxeBuilder({ page });
+  const axe = new AxeBuilder({ page }).setLegacyMode(); // there are no frames, for which it would open a page each time
+  axe.options({ resultTypes: ['violations'] });
   const { violations } = await (look === 'all' ? axe.withTags(TAGS) : axe.withRules(OF_COLOUR)).analyze();
   return violations.flatMap(({ id, nodes }) =>
     nodes.map((node) => `${id}: ${node.target.join(' ')}: ${node.failureSummary ?? ''}`),
