@@ -1,4 +1,4 @@
-import { useState } from 'react';
+import { useMemo, useState } from 'react';
 import { useLocalSearchParams, useRouter } from 'expo-router';
 import { View } from 'react-native';
 import { FormProvider, useController } from 'react-hook-form';
@@ -74,7 +74,7 @@ function MakeLakeForm({ fishery }: { fishery: FisheryListItem }) {
   const { control } = form;
   const sketch = useController({ control, name: 'sketch' });
   const start = useController({ control, name: 'start' });
-  const typed = readPosition(start.field.value);
+  const typed = useMemo(() => readPosition(start.field.value), [start.field.value]);
   const origin = typed ?? fishery.position;
   const isDrawn = sketch.field.value.rings.length > 0;
   const draw = (next: Sketch): void => {

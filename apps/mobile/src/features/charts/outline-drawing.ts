@@ -21,11 +21,24 @@ import type { Sketch } from '@/features/lakes/outline-sketch';
 
 export type PlaneRing = { closed: boolean; points: Point[] };
 
+type Laid = { lon: number; lat: number; point: Point };
+
+// Laying a place on the plane is dear, and a drag moves one of thousands: each place keeps its point while it lasts.
+const laid = new WeakMap<readonly [number, number], Laid>();
+
+function pointOf(place: readonly [number, number], [lon, lat]: LonLat): Point {
+  const known = laid.get(place);
+  if (known?.lon === lon && known.lat === lat) return known.point;
+  const point = toPlane([lon, lat], place);
+  laid.set(place, { lon, lat, point });
+  return point;
+}
+
 /** A sketch laid on the plane of an origin. */
 export const planeSketch = (sketch: Sketch, origin: LonLat): PlaneRing[] =>
   sketch.rings.map(({ closed, places }) => ({
     closed,
-    points: places.map((place) => toPlane(origin, place)),
+    points: places.map((place) => pointOf(place, origin)),
   }));
 
 /** A point of the plane as a place, to a centimetre. */

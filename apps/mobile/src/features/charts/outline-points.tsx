@@ -138,15 +138,13 @@ function PointField({ label, place, onPlace }: PointProps) {
   };
   return (
     <View style={{ flexGrow: 1, flexBasis: 230 }}>
-      <Form label={label} onSubmit={leave}>
-        <Field
-          label={label}
-          value={typed ?? positionText(place)}
-          onChange={setTyped}
-          onBlur={leave}
-          error={typed !== null && !read ? NOT_READ : undefined}
-        />
-      </Form>
+      <Field
+        label={label}
+        value={typed ?? positionText(place)}
+        onChange={setTyped}
+        onBlur={leave}
+        error={typed !== null && !read ? NOT_READ : undefined}
+      />
     </View>
   );
 }
