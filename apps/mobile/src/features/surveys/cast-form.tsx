@@ -64,6 +64,11 @@ export function CastForm({ lake, visit, casts }: Props) {
       width={beside ? 'wide' : 'reading'}
       actions={
         <>
+          {form.problem ? (
+            <View style={{ width: '100%' }}>
+              <ProblemNote problem={form.problem} />
+            </View>
+          ) : null}
           <LiveCall reduced={cast.reduced} />
           {last || cast.begun ? (
             <View style={{ flexGrow: 1 }}>
@@ -90,7 +95,6 @@ export function CastForm({ lake, visit, casts }: Props) {
     >
       <Form label="Cast" onSubmit={cast.keep}>
         <CastCautions visitId={visit.id} />
-        <ProblemNote problem={form.problem} />
         <ProblemNote problem={undo.error} />
         {said ? <Kept words={said} /> : null}
         {closer ? (

@@ -1,5 +1,6 @@
 import { useMemo } from 'react';
 import type { LakeView } from '@mereward/shared/lakes/contract';
+import { inArc } from '@mereward/shared/lakes/peg-rules';
 import type { CastView, Reduced } from '@mereward/shared/surveys/contract';
 import { Section } from '@/components/section';
 import { SvgPicture } from '@/components/svg-picture';
@@ -32,6 +33,11 @@ export function CastSketch({ lake, casts, surroundings, now }: Props) {
     <Section title="Where the casts fall">
       <SvgPicture svg={arcSketchSvg({ ...ground, now: at }, colours)} />
       <Text size="small">{coverWords(shareCovered(ground), ground.casts.length)}</Text>
+      {now?.ok && surroundings && !inArc(surroundings.peg.details, now.sounding.bearingDeg) ? (
+        <Text size="small" tone="amber" weight="semibold">
+          The cast being typed falls outside this peg’s arc: it is kept, but covers nothing of it.
+        </Text>
+      ) : null}
       <GradeKey now={at !== null} />
     </Section>
   );
@@ -39,4 +45,4 @@ export function CastSketch({ lake, casts, surroundings, now }: Props) {
 
 /** A chart asks for 60 % of a peg's arc. */
 const coverWords = (share: number, casts: number): string =>
-  `${countWords(casts, 'cast')} reach ${percent(share)} of this peg’s arc; a chart asks for 60 %.`;
+  `${countWords(casts, 'cast')} ${casts === 1 ? 'reaches' : 'reach'} ${percent(share)} of this peg’s arc; a chart asks for 60 %.`;
