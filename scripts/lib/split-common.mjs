@@ -10,6 +10,8 @@ const LANDING = [
   './water/index.tsx',
   './water/pegs/[pegId].tsx',
 ];
+/** The router opens the layouts of all places before it shows any. @param {string} route */
+const isLanding = (route) => LANDING.includes(route) || route.endsWith('/_layout.tsx');
 const ADDRESS = '/_expo/static/js/web/';
 /** Below this a file of its own costs more than it spares. */
 const LEAST_BYTES = 3000;
@@ -82,8 +84,10 @@ export function splitCommon({ common, others }) {
   const all = [common, ...others].flatMap(modulesOf);
   const modules = new Map(all.map((module) => [module.id, module]));
   const routes = routesOf(modules);
-  const landing = [...routes].filter(([, route]) => LANDING.includes(route)).map(([id]) => id);
-  if (shared.length !== statementsOf(common).length || landing.length !== LANDING.length) return null;
+  const known = new Set(routes.values());
+  if (shared.length !== statementsOf(common).length || !LANDING.every((route) => known.has(route)))
+    return null;
+  const landing = [...routes].filter(([, route]) => isLanding(route)).map(([id]) => id);
 
   const opened = new Map(all.flatMap(({ opens }) => [...opens]));
   const reaches = new Map([...opened.keys()].map((id) => [id, reach([id], modules)]));
