@@ -7,7 +7,7 @@ import { length } from '@/lib/format';
 import { dayAndTime, dayRange } from '@/lib/format-time';
 import type { ChartFileTerms } from './chart-file-terms';
 import { isobathFigure, stepFor } from './depth-format';
-import { bottomOf, layersOf } from './chart-part';
+import { bottomOf, layersOf } from '@mereward/shared/charts/drawing/chart-part';
 import { groundOfChart, raisedNowM } from './readied-chart';
 
 /** Landscape, in the proportion of A paper. */

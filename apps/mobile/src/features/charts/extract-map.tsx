@@ -2,6 +2,7 @@ import { useMemo, useState } from 'react';
 import type { PegPageView, SpotView } from '@mereward/shared/charts/contract';
 import { castMarks, spotMarks } from '@mereward/shared/charts/drawing/cast-marks';
 import { drawMap } from '@mereward/shared/charts/drawing/draw-map';
+import { extractParts, outlookView } from '@mereward/shared/charts/drawing/extract-parts';
 import { northMarks, scaleBarMarks } from '@mereward/shared/charts/drawing/furniture';
 import { palettes } from '@mereward/shared/charts/drawing/palette';
 import { PLAIN_SVG, toSvg } from '@mereward/shared/charts/drawing/to-svg';
@@ -11,7 +12,6 @@ import { useTheme } from '@/hooks/use-theme';
 import { useThreeColumns } from '@/hooks/use-wide';
 import { useChartUnits } from './use-chart-units';
 import { isobathFigure } from './depth-format';
-import { extractContent, outlookView } from './extract-content';
 import { spotCast } from './spot-cast';
 import { SvgPicture } from '@/components/svg-picture';
 
@@ -19,6 +19,7 @@ const PHONE_HEIGHT_PX = 390;
 const WIDE_HEIGHT_PX = 500;
 const LEAST_REACH_M = 45;
 const PAST_SPOT_M = 14;
+const BEHIND_PX = 74; // for the peg's number and the scale
 
 type Props = { page: PegPageView; spot: SpotView | null; label: string };
 
@@ -29,7 +30,7 @@ export function ExtractMap({ page, spot, label }: Props) {
   const units = useChartUnits();
   const heightPx = useThreeColumns() ? WIDE_HEIGHT_PX : PHONE_HEIGHT_PX;
   const [widthPx, setWidthPx] = useState(0);
-  const content = useMemo(() => (extract ? extractContent(page, extract) : null), [page, extract]);
+  const content = useMemo(() => (extract ? extractParts(page, extract) : null), [page, extract]);
   const svg = useMemo(() => {
     if (!extract || !content || widthPx === 0) return '';
     const palette = palettes[name];
@@ -37,13 +38,12 @@ export function ExtractMap({ page, spot, label }: Props) {
       0,
       ...(page.spots ?? []).map(({ xM, yM }) => Math.hypot(xM - extract.originM.xM, yM - extract.originM.yM)),
     );
-    const view = outlookView(extract, Math.max(LEAST_REACH_M, farthestM + PAST_SPOT_M), {
-      widthPx,
-      heightPx,
-    });
+    const reachM = Math.max(LEAST_REACH_M, farthestM + PAST_SPOT_M);
+    const outlook = { towards: 'up', reachM, behindPx: BEHIND_PX } as const;
+    const view = outlookView(extract, outlook, { widthPx, heightPx });
     const cast = spot ? spotCast(extract.originM, spot, units.stickSpacingM) : null;
     const marks = drawMap(
-      { ...content, cast: null },
+      { ...content, spots: page.spots ?? [] },
       {
         palette,
         view,

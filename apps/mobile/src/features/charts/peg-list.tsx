@@ -11,7 +11,7 @@ import { useChartUnits } from './use-chart-units';
 import { depthNow } from './depth-format';
 import { pegOutlook } from './peg-outlook';
 import { PEG_STATUS } from './peg-words';
-import { layersOf } from './chart-part';
+import { layersOf } from '@mereward/shared/charts/drawing/chart-part';
 
 const OUTLOOK_WRAPS = 10;
 

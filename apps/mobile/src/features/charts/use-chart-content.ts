@@ -7,7 +7,7 @@ import type { ShownLayers } from './chart-layers';
 import { stepFor } from './depth-format';
 import type { MapContent } from './map-layers';
 import { sharedLetters } from './peg-words';
-import { bottomOf, layersOf } from './chart-part';
+import { bottomOf, layersOf } from '@mereward/shared/charts/drawing/chart-part';
 import { groundOfChart, raisedNowM } from './readied-chart';
 
 /** Pegs as a map numbers them. */

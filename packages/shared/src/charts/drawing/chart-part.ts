@@ -1,10 +1,11 @@
-import { unknownBottom } from '@mereward/shared/charts/bottom-map';
-import { decodeClasses, decodeDepth, decodeSigma, fromBase64 } from '@mereward/shared/charts/chart-encoding';
-import type { ChartLayers } from '@mereward/shared/charts/chart-reading';
-import type { ChartView } from '@mereward/shared/charts/contract';
-import { bottomAreas, type BottomArea } from '@mereward/shared/charts/drawing/bottom-areas';
-import { emptyGrid } from '@mereward/shared/charts/grid';
+import { unknownBottom } from '../bottom-map';
+import { decodeClasses, decodeDepth, decodeSigma, fromBase64 } from '../chart-encoding';
+import type { ChartLayers } from '../chart-reading';
+import type { ChartView } from '../contract';
+import { emptyGrid } from '../grid';
+import { bottomAreas, type BottomArea } from './bottom-areas';
 
+/** The grids of a chart as they travel; a layer that isn't this reader's is null. */
 export type ChartPart = Pick<ChartView, 'frame' | 'depth' | 'sigma' | 'substrate' | 'cover'>;
 
 /** The chart's grids out of their bytes; a layer this reader may not see is empty. Null without any grid. */
