@@ -166,7 +166,9 @@ test('an owner draws a lake by tapping and gives it a mark, a board, a reading a
   await choose(page, 'Choose a photo', photo);
   await page.getByLabel('Caption').fill('From the dot towards M1');
   await page.getByRole('button', { name: 'Send the photo' }).click();
-  await expect(page.getByRole('img', { name: 'From the dot towards M1' })).toBeVisible({ timeout: 30_000 });
+  await expect(page.getByRole('img', { name: 'From the dot towards M1' }).first()).toBeVisible({
+    timeout: 30_000,
+  });
   await choose(page, 'Choose a photo', { ...photo, buffer: Buffer.from('no picture at all') });
   await page.getByRole('button', { name: 'Send the photo' }).click();
   await expect(page.getByRole('form', { name: 'Add a photo' }).getByRole('alert')).toContainText(
