@@ -11,13 +11,14 @@ import { LevelForm } from '@/features/lakes/level-form';
 import { ReadingsTable } from '@/features/lakes/readings-table';
 import { useHeld } from '@/hooks/use-held';
 
-/** One gauge board: record a reading, the readings so far, and the board itself. */
+/** One gauge board: record a reading, the board itself, and the readings so far. */
 export function BoardScreen() {
   const { lakeId, boardId } = useLocalSearchParams<{ lakeId: string; boardId: string }>();
   const lake = useLake(lakeId);
   const board = lake.data?.boards.find(({ id }) => id === boardId);
   return (
     <Page
+      width="wide"
       title={board ? `Gauge board ${board.details.code}` : 'Gauge board'}
       {...(lake.data ? { over: lake.data.details.name } : {})}
       back={{ label: lake.data?.details.name ?? 'The lake', href: `/office/lakes/${lakeId}` }}
@@ -41,13 +42,13 @@ function Board({ lake, now }: { lake: LakeView; now: GaugeBoardView }) {
   return (
     <>
       {lake.may.recordLevel ? <LevelForm lake={lake} board={now} /> : null}
-      <ReadingsTable lake={lake} board={now} />
       {lake.may.changePegs ? (
         <Disclosure title="The board itself">
           {newer ? <NewerNote what="this board" onTake={() => hold(newer)} /> : null}
           <BoardFields key={held.version} lake={lake} board={held} />
         </Disclosure>
       ) : null}
+      <ReadingsTable lake={lake} board={now} />
     </>
   );
 }

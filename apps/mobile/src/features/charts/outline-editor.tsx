@@ -130,7 +130,7 @@ export function OutlineEditor({ sketch, onChange, origin, under, error }: Props)
       </View>
       <View style={{ flexGrow: 1, flexBasis: 320, gap: space.medium, minWidth: 0 }}>
         <SketchButtons sketch={sketch} deed={deed} />
-        <OutlineFound sketch={settled} reading={reading} />
+        <OutlineFound sketch={settled} reading={reading} crowded={fromPxPerM > 0 && open === null} />
         {error ? <FieldError id="outline" words={error} /> : null}
         <OutlineImport onRead={replace} replaces={sketch.rings.length > 0} />
         <OutlinePoints sketch={sketch} onChange={deed.change} chosen={chosen} />

@@ -5,14 +5,21 @@ import { openRingOf, ringName, type Sketch } from '@/features/lakes/outline-sket
 import { useUnits } from '@/hooks/use-units';
 import { area } from '@/lib/format';
 
+type Props = {
+  sketch: Sketch;
+  reading: OutlineReading | null;
+  /** So many points that they show only from near by. */
+  crowded: boolean;
+};
+
 /** What to do next with the drawing, how large the water is, and what is wrong with it. */
-export function OutlineFound({ sketch, reading }: { sketch: Sketch; reading: OutlineReading | null }) {
+export function OutlineFound({ sketch, reading, crowded }: Props) {
   const units = useUnits();
   const faults = (reading?.findings ?? []).filter(({ kind }) => kind === 'refused');
   const areaM2 = reading?.areaM2 ?? null;
   return (
     <>
-      <Text tone="inkSoft">{nextWords(sketch)}</Text>
+      <Text tone="inkSoft">{`${crowded ? 'Come closer until the points show. ' : ''}${nextWords(sketch)}`}</Text>
       {areaM2 !== null ? (
         <Text role="status" weight="semibold">
           {`Water: ${area(areaM2, units)}${openRingOf(sketch) === null ? '' : ' if it were closed now'}`}
