@@ -139,6 +139,8 @@ describe('a cast', () => {
     expect(cast.reduced.steps.map(({ key }) => key)).toEqual(
       expect.arrayContaining(['line', 'range', 'bearing', 'datum']),
     );
+    const listed = (await visitOf(visitId)).casts.find(({ id }) => id === cast.id);
+    expect(listed).toEqual({ ...cast, reduced: { ...cast.reduced, steps: [] } });
   });
 
   test('that can’t be reduced is kept all the same and says why', async () => {

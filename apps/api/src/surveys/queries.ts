@@ -1,6 +1,6 @@
 import { Account } from '@mereward/db/entities/accounts/account';
 import { SurveyVisit } from '@mereward/db/entities/surveys/survey-visit';
-import type { VisitList, VisitWithCasts } from '@mereward/shared/surveys/contract';
+import type { CastView, VisitList, VisitWithCasts } from '@mereward/shared/surveys/contract';
 import { In } from 'typeorm';
 import type { Ctx } from '../ctx';
 import { castView } from './cast-view';
@@ -47,7 +47,10 @@ export async function readVisit(ctx: Ctx, visitId: string): Promise<VisitWithCas
   const casts = await castsToday(ctx.tx, site);
   return {
     visit: await visitView(ctx, found),
-    casts: casts.map(castView),
+    casts: casts.map((cast) => withoutSteps(castView(cast))),
     coverage: coverageOf(site, casts),
   };
 }
+
+/** Steps are three quarters of a cast's bytes, and whoever opens one can work them out: the reduction is shared. */
+const withoutSteps = (cast: CastView): CastView => ({ ...cast, reduced: { ...cast.reduced, steps: [] } });

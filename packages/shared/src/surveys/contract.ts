@@ -272,7 +272,8 @@ export const VisitList = z.object({ visits: z.array(VisitView), may: z.object({ 
 export type VisitList = z.infer<typeof VisitList>;
 
 /**
- * GET /api/visits/:visitId: the visit, its casts in order, and coverage by peg. GET …/casts.csv is the same as a
+ * GET /api/visits/:visitId: the visit, its casts in order (their steps left out: whoever opens a cast works them out
+ * with the same reduction), and coverage by peg. GET …/casts.csv is the same as a
  * table. DELETE …/casts/:castId takes the last one back.
  */
 export const VisitWithCasts = z.object({

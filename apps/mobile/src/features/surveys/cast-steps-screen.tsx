@@ -1,7 +1,8 @@
+import { useMemo } from 'react';
 import { useLocalSearchParams } from 'expo-router';
-import type { LakeView } from '@mereward/shared/lakes/contract';
+import type { LakeView, PegView } from '@mereward/shared/lakes/contract';
 import { castWords } from '@mereward/shared/surveys/cast-words';
-import type { CastView, SoundingView } from '@mereward/shared/surveys/contract';
+import type { CastView, SoundingView, VisitWithCasts } from '@mereward/shared/surveys/contract';
 import { Empty } from '@/components/empty';
 import { Facts } from '@/components/facts';
 import { LinkButton } from '@/components/link-button';
@@ -11,11 +12,12 @@ import { Page } from '@/components/page';
 import { Section } from '@/components/section';
 import { Text } from '@/components/text';
 import { useLake } from '@/features/lakes/api';
-import { useVisit } from '@/features/surveys/api';
+import { useStance, useVisit } from '@/features/surveys/api';
 import { callWords, depthWords } from '@/features/surveys/call-words';
 import { GradeShape } from '@/features/surveys/grade-shape';
 import { ReductionSteps } from '@/features/surveys/reduction-steps';
 import { GRADE_WORDS } from '@/features/surveys/visit-words';
+import { useKeptReduction } from '@/features/surveys/use-cast-reduction';
 import { useUnits } from '@/hooks/use-units';
 import { figure, length } from '@/lib/format';
 import { dayAndTime } from '@/lib/format-time';
@@ -33,10 +35,10 @@ export function CastStepsScreen() {
       back={{ label: visit.data?.visit.title ?? 'Visit', href: `/bank/surveys/${visitId}` }}
     >
       <Loaded query={visit} waiting="Reading the visit…">
-        {() =>
+        {(value) =>
           cast ? (
             <Loaded query={lake} waiting="Reading the lake…">
-              {(its) => <Cast cast={cast} lake={its} />}
+              {(its) => <Cast cast={cast} lake={its} of={value} />}
             </Loaded>
           ) : (
             <Empty
@@ -52,11 +54,14 @@ export function CastStepsScreen() {
   );
 }
 
-function Cast({ cast, lake }: { cast: CastView; lake: LakeView }) {
+type CastProps = { cast: CastView; lake: LakeView; of: VisitWithCasts };
+
+function Cast({ cast, lake, of }: CastProps) {
   const { observation, reduced } = cast;
   const { aim } = observation;
   const mark = aim.by === 'mark' ? lake.marks.find(({ id }) => id === aim.markId) : undefined;
   const peg = lake.pegs.find(({ id }) => id === cast.pegId);
+  const stance = useStance(cast.pegId);
   return (
     <>
       <Text>
@@ -72,10 +77,19 @@ function Cast({ cast, lake }: { cast: CastView; lake: LakeView }) {
         </Note>
       )}
       <Section title="How did you get this?">
-        <ReductionSteps steps={reduced.steps} />
+        <Loaded query={stance} waiting="Working it out…">
+          {(peg) => <Steps cast={cast} peg={peg} lake={lake} of={of} />}
+        </Loaded>
       </Section>
     </>
   );
+}
+
+function Steps({ cast, lake, of, peg }: CastProps & { peg: PegView }) {
+  const { visit, casts } = of;
+  const surroundings = useMemo(() => ({ lake, peg, visit }), [lake, peg, visit]);
+  const reduced = useKeptReduction(surroundings, cast, casts);
+  return <ReductionSteps steps={reduced?.steps ?? []} />;
 }
 
 function Sounding({ sounding }: { sounding: SoundingView }) {

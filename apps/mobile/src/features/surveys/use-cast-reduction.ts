@@ -17,3 +17,17 @@ export function useCastReduction(
     return reduceCast(observation, visit.kit, castSiteOf(surroundings, { observation, observedAt, earlier }));
   }, [surroundings, observation, casts]);
 }
+
+/** A kept cast's reduction with every step, worked out here from what was kept: a visit's answer leaves steps out. */
+export function useKeptReduction(
+  surroundings: Surroundings | null,
+  cast: CastView,
+  casts: readonly CastView[],
+): Reduced | null {
+  return useMemo(() => {
+    if (surroundings === null) return null;
+    const others = casts.filter(({ id, pegId }) => pegId === cast.pegId && id !== cast.id);
+    const site = castSiteOf(surroundings, { ...cast, earlier: others.map((other) => other.observation) });
+    return reduceCast(cast.observation, surroundings.visit.kit, site);
+  }, [surroundings, cast, casts]);
+}
