@@ -8,6 +8,7 @@ import { toPlane, type Point } from '@mereward/shared/geometry/plane';
 import type { Bottom } from '@mereward/shared/surveys/contract';
 import type { BuiltSounding, BuiltVisit } from './built';
 import type { PegChart, PegGround } from './peg-chart';
+import { castToQuote } from './spot-cast';
 import { reachOf, type Reach } from './spot-reach';
 import { sectionPoints } from './section';
 
@@ -21,7 +22,9 @@ export type OpenChart = { chart: PegChart; layers: ChartLayers };
 /** A spot as this reader may see it; the layers kept from them are left out one by one. */
 export function spotView(ground: PegGround, open: OpenChart | null, spot: Spot): SpotView | null {
   const place = toPlane(ground.origin, spot.details.position);
-  const cast = open ? castWithin(open.chart, place, spot.details.usableRadiusM) : null;
+  const cast = open
+    ? castToQuote(open.chart.content.built.soundings, place, spot.details.usableRadiusM)
+    : null;
   const visit = open ? visitOf(open.chart, cast, ground.peg.id) : null;
   const reading = open ? readChart(open.layers, place) : null;
   const reach = reachOf({
@@ -58,17 +61,6 @@ function whereabouts(
 ): Pick<SpotView, 'xM' | 'yM' | 'rangeM'> {
   if (sees.depth) return { xM, yM, rangeM };
   return { xM: Math.round(xM), yM: Math.round(yM), rangeM: Math.round(rangeM) };
-}
-
-/**
- * The cast a spot is quoted from: the nearest graded A to C within the spot's usable radius. A cast that was made there
- * says more of the place than a surface smoothed over its neighbours; farther off, the surface is quoted instead.
- */
-function castWithin({ content }: PegChart, place: Point, radiusM: number): BuiltSounding | null {
-  const away = (sounding: BuiltSounding): number =>
-    Math.hypot(sounding.xM - place.xM, sounding.yM - place.yM);
-  const near = content.built.soundings.filter((each) => each.grade !== 'D' && away(each) <= radiusM);
-  return near.sort((a, b) => away(a) - away(b) || (a.id < b.id ? -1 : 1))[0] ?? null;
 }
 
 /** Whose sticks a spot is counted in: the visit of that cast, else the newest that cast from this peg, else the newest. */
