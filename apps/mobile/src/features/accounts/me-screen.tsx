@@ -8,7 +8,7 @@ import { ChoiceGrid } from '@/components/choice-grid';
 import { Text } from '@/components/text';
 import { DetailsForm } from '@/features/accounts/details-form';
 import { DeviceUnits } from '@/features/accounts/device-units';
-import { roleWord } from '@/features/accounts/role-words';
+import { ROLE_WORDS } from '@mereward/shared/accounts/role-words';
 import { SignOutSection } from '@/features/accounts/sign-out-section';
 import { themeChoice } from '@/hooks/use-theme';
 import { useSession } from '@/lib/session';
@@ -32,7 +32,7 @@ export function MeScreen() {
           <Facts
             facts={account.roles.map(({ fisheryName, role }) => ({
               term: fisheryName,
-              fact: roleWord(role),
+              fact: ROLE_WORDS[role],
             }))}
           />
         </Section>

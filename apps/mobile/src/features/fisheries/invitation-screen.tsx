@@ -11,7 +11,7 @@ import { Text } from '@/components/text';
 import { space } from '@/constants/layout';
 import { useAcceptInvitation, useInvitation } from '@/features/fisheries/invitation-api';
 import { useQueryText } from '@/features/accounts/next-page';
-import { roleWord } from '@/features/accounts/role-words';
+import { ROLE_WORDS } from '@mereward/shared/accounts/role-words';
 import { useSession } from '@/lib/session';
 
 /** Where a mailed invitation leads: see what it is to, and take it up. */
@@ -40,7 +40,7 @@ function Shown({ invitation, token }: { invitation: InvitationShown; token: stri
   if (accepting.isSuccess)
     return (
       <>
-        <Note kind="fine" title={`You are ${roleWord(role)} at ${fisheryName}`} live>
+        <Note kind="fine" title={`You are ${ROLE_WORDS[role]} at ${fisheryName}`} live>
           What the role opens is among the places now.
         </Note>
         <LinkButton label="To the water" href="/water" kind="main" />
@@ -48,7 +48,7 @@ function Shown({ invitation, token }: { invitation: InvitationShown; token: stri
     );
   return (
     <View style={{ gap: space.page }}>
-      <Text size="lead">{`${fisheryName} invites ${email} as ${roleWord(role)}.`}</Text>
+      <Text size="lead">{`${fisheryName} invites ${email} as ${ROLE_WORDS[role]}.`}</Text>
       {account === null ? (
         <SignInFirst email={email} token={token} />
       ) : (

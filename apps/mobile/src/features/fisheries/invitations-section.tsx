@@ -11,7 +11,7 @@ import { Kept } from '@/components/kept';
 import { List, Row } from '@/components/list';
 import { ProblemNote } from '@/components/problem-note';
 import { Section } from '@/components/section';
-import { roleWord } from '@/features/accounts/role-words';
+import { ROLE_WORDS } from '@mereward/shared/accounts/role-words';
 import { invite, useWithdrawInvitation } from '@/features/fisheries/office-api';
 import { useDraftForm } from '@/hooks/use-draft-form';
 
@@ -41,7 +41,7 @@ export function InvitationsSection({ fisheryId, people }: Props) {
             <Row
               key={invitation.id}
               title={invitation.email}
-              note={`${roleWord(invitation.role)} · ${STATES[invitation.state]}`}
+              note={`${ROLE_WORDS[invitation.role]} · ${STATES[invitation.state]}`}
               end={
                 invitation.state === 'waiting' && people.mayGive.includes(invitation.role) ? (
                   <Button
@@ -79,7 +79,7 @@ function InviteForm({ fisheryId, mayGive }: { fisheryId: string; mayGive: readon
   return (
     <>
       <InviteFields key={sent?.id ?? 'first'} {...{ fisheryId, mayGive }} onSent={setSent} />
-      <Kept words={sent ? `${sent.email} is invited as ${roleWord(sent.role)}.` : null} />
+      <Kept words={sent ? `${sent.email} is invited as ${ROLE_WORDS[sent.role]}.` : null} />
     </>
   );
 }
@@ -106,7 +106,7 @@ function InviteFields({ fisheryId, mayGive, onSent }: FieldsProps) {
         control={form.control}
         name="role"
         label="As"
-        choices={mayGive.map((role) => ({ key: role, label: roleWord(role) }))}
+        choices={mayGive.map((role) => ({ key: role, label: ROLE_WORDS[role] }))}
       />
     </DraftFormFrame>
   );

@@ -4,7 +4,7 @@ import { Button } from '@/components/button';
 import { Loaded } from '@/components/loaded';
 import { List, Row } from '@/components/list';
 import { Section } from '@/components/section';
-import { roleWord } from '@/features/accounts/role-words';
+import { ROLE_WORDS } from '@mereward/shared/accounts/role-words';
 import { InvitationsSection } from '@/features/fisheries/invitations-section';
 import { usePeople } from '@/features/fisheries/office-api';
 import { RolesSheet } from '@/features/fisheries/roles-sheet';
@@ -33,7 +33,7 @@ function PeopleList({ fisheryId, people }: { fisheryId: string; people: PeopleVi
           <Row
             key={person.accountId}
             title={person.name}
-            note={`${person.email} · ${person.roles.map(roleWord).join(', ')}`}
+            note={`${person.email} · ${person.roles.map((role) => ROLE_WORDS[role]).join(', ')}`}
             end={
               people.mayGive.length > 0 ? (
                 <Button

@@ -7,7 +7,7 @@ import { Note } from '@/components/note';
 import { ProblemNote } from '@/components/problem-note';
 import { Sheet } from '@/components/sheet';
 import { Text } from '@/components/text';
-import { roleWord } from '@/features/accounts/role-words';
+import { ROLE_WORDS } from '@mereward/shared/accounts/role-words';
 import { useSetRoles } from '@/features/fisheries/office-api';
 
 const ROLE_NOTES: Readonly<Record<Role, string>> = {
@@ -36,11 +36,11 @@ export function RolesSheet({ fisheryId, person, mayGive, onClose }: Props) {
   return (
     <Sheet open onClose={onClose} title={`Roles of ${person.name}`}>
       {fixed.length > 0 ? (
-        <Text tone="inkSoft">{`Stays ${fixed.map(roleWord).join(' and ')}: only an owner changes that.`}</Text>
+        <Text tone="inkSoft">{`Stays ${fixed.map((role) => ROLE_WORDS[role]).join(' and ')}: only an owner changes that.`}</Text>
       ) : null}
       <ManyChoiceGrid
         label="Roles"
-        choices={mayGive.map((role) => ({ key: role, label: roleWord(role), note: ROLE_NOTES[role] }))}
+        choices={mayGive.map((role) => ({ key: role, label: ROLE_WORDS[role], note: ROLE_NOTES[role] }))}
         values={chosen}
         onChange={setChosen}
         columns={2}
