@@ -59,6 +59,7 @@ for (const { place, who, sees } of LOOKS)
         await unfold(page);
         expect.soft(await axeFaults(page), route).toEqual([]);
         await page.emulateMedia({ colorScheme: 'dark' });
+        await expect(page.locator('html')).toHaveAttribute('data-theme', 'dusk');
         expect.soft(await axeFaults(page, 'colours'), `${route} at dusk`).toEqual([]);
       });
   });

@@ -1,6 +1,6 @@
-import { useColorScheme } from 'react-native';
 import { z } from 'zod';
 import { colours, type Colours, type ThemeName } from '@/constants/colours';
+import { useDeviceDark } from '@/hooks/use-device-dark';
 import { createPreference } from '@/lib/preference';
 
 export const ThemeChoice = z.enum(['device', 'light', 'dusk']);
@@ -15,7 +15,7 @@ export const themeChoice = createPreference<ThemeChoice>({
 /** The theme in force: the reader's choice, or the device's light or dark. */
 export function useTheme(): { name: ThemeName; colours: Colours } {
   const choice = themeChoice.use();
-  const device = useColorScheme();
-  const name: ThemeName = choice === 'device' ? (device === 'dark' ? 'dusk' : 'light') : choice;
+  const dark = useDeviceDark();
+  const name: ThemeName = choice === 'device' ? (dark ? 'dusk' : 'light') : choice;
   return { name, colours: colours[name] };
 }
