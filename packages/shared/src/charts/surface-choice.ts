@@ -47,6 +47,7 @@ const MODEL_WORDS: Record<VariogramModel, string> = {
   exponential: 'exponential',
   gaussian: 'Gaussian',
   matern32: 'Matérn 3/2',
+  matern52: 'Matérn 5/2',
 };
 
 /**

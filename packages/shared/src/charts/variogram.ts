@@ -1,13 +1,14 @@
 import type { SamplePoints } from './sample-points';
 
-export const VARIOGRAM_MODELS = ['spherical', 'exponential', 'gaussian', 'matern32'] as const;
+export const VARIOGRAM_MODELS = ['spherical', 'exponential', 'gaussian', 'matern32', 'matern52'] as const;
 export type VariogramModel = (typeof VARIOGRAM_MODELS)[number];
 
 /**
  * γ(h) = nugget + sill · (1 − ρ(h / range)) for h > 0, γ(0) = 0. Sills in the square of the sampled unit; `rangeM` is the
  * model's parameter: the spherical reaches its sill there, the exponential's practical range is three times it.
- * ρ: spherical 1 − 1.5 u + 0.5 u³; exponential e^−u; Gaussian e^−u²; Matérn 3/2 (1 + √3 u) e^−√3 u.
- * Source: Chilès & Delfiner, Geostatistics, 2012, section 2.5; the first three as in gstat's vgm().
+ * ρ: spherical 1 − 1.5 u + 0.5 u³; exponential e^−u; Gaussian e^−u²; Matérn 3/2 (1 + √3 u) e^−√3 u;
+ * Matérn 5/2 (1 + √5 u + 5/3 u²) e^−√5 u. Source: Chilès & Delfiner, Geostatistics, 2012, section 2.5; the first three as
+ * in gstat's vgm(), the Matérns with its range times √3 and √5.
  */
 export type Variogram = { model: VariogramModel; nuggetM2: number; partialSillM2: number; rangeM: number };
 
@@ -101,6 +102,8 @@ export function correlation(model: VariogramModel, rangeM: number, hM: number): 
       return Math.exp(-u * u);
     case 'matern32':
       return (1 + Math.sqrt(3) * u) * Math.exp(-Math.sqrt(3) * u);
+    case 'matern52':
+      return (1 + Math.sqrt(5) * u + (5 / 3) * u * u) * Math.exp(-Math.sqrt(5) * u);
   }
 }
 
@@ -135,6 +138,12 @@ export function covariancesInPlace(buffer: Float64Array, count: number, variogra
       for (let i = 0; i < count; i++) {
         const u = Math.sqrt(3 * buffer[i]!) * perRange;
         buffer[i] = sill * (1 + u) * Math.exp(-u);
+      }
+      return;
+    case 'matern52':
+      for (let i = 0; i < count; i++) {
+        const u = Math.sqrt(5 * buffer[i]!) * perRange;
+        buffer[i] = sill * (1 + u * (1 + u / 3)) * Math.exp(-u);
       }
   }
 }
