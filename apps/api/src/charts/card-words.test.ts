@@ -29,6 +29,7 @@ const spot: SpotView = {
   surveyedOn: '2027-04-03',
   section: null,
   presentation: null,
+  water: null,
   version: 1,
 };
 
@@ -51,6 +52,7 @@ const page = (wishes: Partial<Levels>): PegPageView => ({
   },
   levelNow: null,
   spots: [spot],
+  neighbourSpots: null,
   extract: null,
   layerNotes: { depth: null, bottom: null, spots: null, soundings: null },
   cautions: [],

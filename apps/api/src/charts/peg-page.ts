@@ -46,6 +46,7 @@ export async function pegPage(ctx: Ctx, pegId: string): Promise<PegPageView> {
         : null,
     levelNow: ground.levelNow,
     spots: sight.sees.spots ? await spotsOf(ctx.tx, ground) : null,
+    neighbourSpots: null,
     extract: pegExtract(ground),
     layerNotes: notesOf(ground),
     cautions: cautionsOf(ground),

@@ -49,6 +49,7 @@ export function spotView(ground: PegGround, open: OpenChart | null, spot: Spot):
     words: wordsOf(ground, reach, shown),
     section: open && sees.depth ? sectionOf(ground, open, reach) : null,
     presentation: shown.bottom === null ? null : PRESENTATION[shown.bottom],
+    water: null,
     version: spot.version,
   };
 }

@@ -1,6 +1,7 @@
 import { z } from 'zod';
 import { Position, Version } from '../fisheries/contract';
 import { LakePolygon, LevelNow, PhotoView } from '../lakes/contract';
+import { PlaceWater } from '../lakes/peg-water-contract';
 import { Bottom, Cover, Grade, Substrate } from '../surveys/contract';
 
 /** draft → submitted → approved by another → published; then superseded by the next, or withdrawn. */
@@ -238,9 +239,17 @@ export const SpotView = z.object({
   surveyedOn: z.iso.date().nullable(),
   section: z.array(SectionPoint).nullable(),
   presentation: z.string().nullable(),
+  water: PlaceWater.nullable().default(null), // whose water it lies in
   version: z.int(),
 });
 export type SpotView = z.infer<typeof SpotView>;
+
+/** Another peg's spot that lies in this peg's water, as reached from here; its `version` is not for changing it here. */
+export const NeighbourSpot = z.object({
+  peg: z.object({ id: z.uuid(), number: z.string(), name: z.string() }),
+  spot: SpotView,
+});
+export type NeighbourSpot = z.infer<typeof NeighbourSpot>;
 
 /** The chart before a peg on a coarse grid; bytes as in ChartView, a layer that isn't this reader's is null. */
 export const ExtractGrid = z.object({
@@ -278,6 +287,7 @@ export const PegPageView = z.object({
     .nullable(),
   levelNow: LevelNow.nullable(), // against this chart's datum
   spots: z.array(SpotView).nullable(),
+  neighbourSpots: z.array(NeighbourSpot).nullable().default(null),
   extract: z // the piece of chart in front of the peg, on the lake's plane
     .object({
       originM: z.object({ xM: z.number(), yM: z.number() }), // the peg's origin mark
