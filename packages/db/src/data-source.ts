@@ -14,6 +14,10 @@ import { LevelReading } from './entities/lakes/level-reading';
 import { Photo } from './entities/files/photo';
 import { Booking } from './entities/bookings/booking';
 import { SurveyVisit } from './entities/surveys/survey-visit';
+import { BottomEvent } from './entities/surveys/bottom-event';
+import { BottomTable } from './entities/surveys/bottom-table';
+import { ConfirmedBottom } from './entities/surveys/confirmed-bottom';
+import { LeadCalibration } from './entities/surveys/lead-calibration';
 import { CastImport } from './entities/surveys/cast-import';
 import { SurveyCast } from './entities/surveys/survey-cast';
 import { ChartBuild } from './entities/charts/chart-build';
@@ -24,6 +28,7 @@ import { LakesAndPegs1780000001000 } from './migrations/1780000001000-LakesAndPe
 import { SurveysAndCharts1780000002000 } from './migrations/1780000002000-SurveysAndCharts';
 import { ReducedWith1780000003000 } from './migrations/1780000003000-ReducedWith';
 import { KeptCasts1780000004000 } from './migrations/1780000004000-KeptCasts';
+import { BottomLearns1780000006000 } from './migrations/1780000006000-BottomLearns';
 
 const ENTITIES = [
   Account,
@@ -42,6 +47,10 @@ const ENTITIES = [
   SurveyVisit,
   CastImport,
   SurveyCast,
+  BottomTable,
+  ConfirmedBottom,
+  BottomEvent,
+  LeadCalibration,
   ChartBuild,
   Spot,
   Chart,
@@ -54,6 +63,7 @@ const MIGRATIONS = [
   SurveysAndCharts1780000002000,
   ReducedWith1780000003000,
   KeptCasts1780000004000,
+  BottomLearns1780000006000,
 ];
 
 /** A pool of connections to one database, opened by the caller with `initialize()`. */

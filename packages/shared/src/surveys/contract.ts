@@ -70,6 +70,7 @@ export const Kit = z.strictObject({
   floatOffsetM: metres(2), // c: float and link above the ring when wound down
   leadG: z.number().min(5).max(500),
   leadShape: z.enum(['smooth_ball', 'ribbed', 'pronged', 'other']),
+  leadId: z.uuid().nullable().optional(), // the calibrated lead thrown (surveys/lead-contract); none: its falls stay counts
   declinationDeg: z.number().min(-90).max(90), // magnetic to true, east positive
 });
 export type Kit = z.infer<typeof Kit>;

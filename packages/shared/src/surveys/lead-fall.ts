@@ -7,6 +7,7 @@ export type LeadCalibration = {
   rateSigmaMPerS: number; // standard error of the rate
   scatterM: number; // of one depth about the rate
   spots: number;
+  longestS?: number | undefined; // the longest fall it was learnt on
 };
 
 export type KnownFall = { seconds: number; depthM: number };
