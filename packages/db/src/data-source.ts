@@ -3,6 +3,7 @@ import { DataSource } from 'typeorm';
 import { Account } from './entities/accounts/account';
 import { Session } from './entities/accounts/session';
 import { EmailToken } from './entities/accounts/email-token';
+import { DeviceKey } from './entities/accounts/device-key';
 import { Fishery } from './entities/fisheries/fishery';
 import { FisheryRole } from './entities/fisheries/fishery-role';
 import { Invitation } from './entities/fisheries/invitation';
@@ -29,11 +30,13 @@ import { SurveysAndCharts1780000002000 } from './migrations/1780000002000-Survey
 import { ReducedWith1780000003000 } from './migrations/1780000003000-ReducedWith';
 import { KeptCasts1780000004000 } from './migrations/1780000004000-KeptCasts';
 import { BottomLearns1780000006000 } from './migrations/1780000006000-BottomLearns';
+import { DeviceKeys1780000012000 } from './migrations/1780000012000-DeviceKeys';
 
 const ENTITIES = [
   Account,
   Session,
   EmailToken,
+  DeviceKey,
   Fishery,
   FisheryRole,
   Invitation,
@@ -64,6 +67,7 @@ const MIGRATIONS = [
   ReducedWith1780000003000,
   KeptCasts1780000004000,
   BottomLearns1780000006000,
+  DeviceKeys1780000012000,
 ];
 
 /** A pool of connections to one database, opened by the caller with `initialize()`. */

@@ -3,6 +3,7 @@ import {
   AskReset,
   AskVerifyAgain,
   ChangeDetails,
+  DeviceKeyView,
   ResetPassword,
   SignedIn,
   SignIn,
@@ -19,6 +20,7 @@ import { deed, raw, read, type Route } from '../http/route';
 import { serverOf } from '../http/server';
 import { ACCESS_TOKEN_S, signAccessToken } from '../http/session';
 import { inOpenTransaction, inTransaction } from '../http/transaction';
+import { deviceKey } from './device-key';
 import { passwordFits, passwordHash } from './password';
 import { accountView } from './queries';
 import { clearRefreshCookie, refreshTokenOf, setRefreshCookie } from './refresh-cookie';
@@ -207,6 +209,16 @@ const forDetails: Route[] = [
       answer: AccountView,
     },
     (ctx, { body }) => changeDetails(ctx, body),
+  ),
+  deed(
+    {
+      method: 'post',
+      path: '/accounts/me/device-key',
+      summary: 'The key with which this account’s phones seal what they have still to send',
+      signIn: 'needed',
+      answer: DeviceKeyView,
+    },
+    (ctx) => deviceKey(ctx),
   ),
 ];
 

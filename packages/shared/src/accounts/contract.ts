@@ -69,3 +69,10 @@ export type SignedIn = z.infer<typeof SignedIn>;
 /** GET and PATCH /api/accounts/me */
 export const ChangeDetails = z.strictObject({ name: z.string().trim().min(1).max(120), units: Units });
 export type ChangeDetails = z.infer<typeof ChangeDetails>;
+
+/**
+ * POST /api/accounts/me/device-key: the key with which this account's phones seal what they have still to send, 32 bytes
+ * as base64url. Made at the first asking and the same ever after: what lies sealed on a phone must open again.
+ */
+export const DeviceKeyView = z.object({ key: z.base64url() });
+export type DeviceKeyView = z.infer<typeof DeviceKeyView>;
