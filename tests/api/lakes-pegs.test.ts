@@ -1,4 +1,4 @@
-import { LakeView, PegView } from '@mereward/shared/lakes/contract';
+import { LakeView, PegList, PegView } from '@mereward/shared/lakes/contract';
 import { ProblemBody } from '@mereward/shared/problems/problem';
 import { randomUUID } from 'node:crypto';
 import { afterAll, beforeAll, describe, expect, test } from 'vitest';
@@ -95,6 +95,20 @@ describe('a peg', () => {
     expect(await seen(here.people.member)).toEqual([true, true, false]);
     expect(await seen(here.people.bailiff)).toEqual([true, true, true]);
     expect(await seen(elsewhere.people.owner)).toEqual([true, false, false]);
+  });
+
+  test('comes with the lake’s others in walking order, each as its own page of details has it', async () => {
+    const own = await aLake(server, here, { name: 'Pegs In Full' });
+    const one = await aPeg(server, own, { number: '1', thetaDeg: 90 });
+    const two = await aPeg(server, own, { number: '2' });
+    const ids = [one.id, two.id];
+    for (const who of [aStranger(server), here.people.bailiff]) {
+      const { pegs } = PegList.parse((await who.get(`/lakes/${own.id}/pegs`)).body);
+      expect(pegs.map(({ details }) => details.number)).toEqual(['1', '2']);
+      const each = await Promise.all(ids.map((id) => who.get(`/pegs/${id}/details`)));
+      expect(pegs).toEqual(each.map(({ body }) => PegView.parse(body)));
+    }
+    expect((await aStranger(server).get(`/lakes/${randomUUID()}/pegs`)).status).toBe(404);
   });
 
   test('is changed once a version, by those who may', async () => {

@@ -9,6 +9,7 @@ import type {
   LevelReadingView,
   MarkView,
   PegDetails,
+  PegList,
   PegListItem,
   PegView,
 } from '@mereward/shared/lakes/contract';
@@ -121,16 +122,37 @@ async function publishedChart(tx: EntityManager, lakeId: string): Promise<LakeVi
 }
 
 /** A peg as this reader sees it. */
-export async function pegView({ tx, actor }: Ctx, pegId: string): Promise<PegView> {
-  const { peg, lake } = await findPeg(tx, pegId);
-  const staff = isStaff(actor, lake.fisheryId);
-  const photos = await photosOf(tx, { kind: 'peg', ids: [pegId], staff });
+export async function pegView(ctx: Ctx, pegId: string): Promise<PegView> {
+  const { peg, lake } = await findPeg(ctx.tx, pegId);
+  const photos = await photosFor(ctx, { lake, pegs: [peg] });
+  return shapePeg(ctx.actor, { lake, peg, photos: photos.get(pegId) ?? [] });
+}
+
+/** Every peg of a lake as this reader sees it, in walking order. */
+export async function pegViews(ctx: Ctx, lakeId: string): Promise<PegList> {
+  const lake = await findLake(ctx.tx, lakeId);
+  const pegs = await ctx.tx.find(Peg, {
+    where: { lakeId },
+    order: { walkingOrder: 'ASC', number: 'ASC' },
+  });
+  const photos = await photosFor(ctx, { lake, pegs });
+  return {
+    pegs: pegs.map((peg) => shapePeg(ctx.actor, { lake, peg, photos: photos.get(peg.id) ?? [] })),
+  };
+}
+
+const photosFor = ({ tx, actor }: Ctx, { lake, pegs }: { lake: Lake; pegs: readonly Peg[] }) =>
+  photosOf(tx, { kind: 'peg', ids: pegs.map(({ id }) => id), staff: isStaff(actor, lake.fisheryId) });
+
+type PegFound = { lake: Lake; peg: Peg; photos: PegView['photos'] };
+
+function shapePeg(actor: Actor, { lake, peg, photos }: PegFound): PegView {
   const change = mayChangePegs(actor, lake.fisheryId);
   return {
     id: peg.id,
     lakeId: peg.lakeId,
     details: pegDetailsFor(actor, lake.fisheryId, peg.details),
-    photos: photos.get(pegId) ?? [],
+    photos,
     version: peg.version,
     may: { change, addPhotos: change },
   };

@@ -7,6 +7,7 @@ import {
   MakePeg,
   OrderPegs,
   OutlineRead,
+  PegList,
   PegView,
   PutBoard,
   PutMark,
@@ -21,7 +22,7 @@ import { changeLake, makeLake } from './make-lake';
 import { putMark } from './marks';
 import { readOutline } from './outlines';
 import { changePeg, makePeg, orderPegs } from './pegs';
-import { lakeView, pegView } from './queries';
+import { lakeView, pegView, pegViews } from './queries';
 
 const signIn = 'needed';
 
@@ -64,6 +65,16 @@ export const lakeRoutes: Route[] = [
       await changeLake(ctx, id('lakeId'), body);
       return lakeView(ctx, id('lakeId'));
     },
+  ),
+  read(
+    {
+      method: 'get',
+      path: '/lakes/:lakeId/pegs',
+      summary: 'Every peg of a lake in full, in walking order',
+      signIn: 'open',
+      answer: PegList,
+    },
+    (ctx, { id }) => pegViews(ctx, id('lakeId')),
   ),
   deed(
     {

@@ -255,6 +255,10 @@ export const PegView = z.object({
 });
 export type PegView = z.infer<typeof PegView>;
 
+/** GET /api/lakes/:lakeId/pegs: every peg of a lake in full, in walking order, for a phone that will lose its signal. */
+export const PegList = z.object({ pegs: z.array(PegView) });
+export type PegList = z.infer<typeof PegList>;
+
 export const PegListItem = z.object({
   id: z.uuid(),
   number: z.string(),
