@@ -33,6 +33,8 @@ export function makeApp(server: Server, logger: pino.Logger, made: With = {}): E
           scriptSrc: ["'self'"],
           styleSrc: ["'self'", "'unsafe-inline'"], // react-native-web writes its rules into the page
           imgSrc: ["'self'", 'data:', 'blob:'],
+          workerSrc: ["'self'"], // the worker that keeps the program for when there is no signal
+          manifestSrc: ["'self'"],
           upgradeInsecureRequests: null, // the demo is plain http on loopback
         },
       },

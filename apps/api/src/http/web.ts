@@ -34,7 +34,7 @@ function compressedSibling(root: string): RequestHandler {
   };
   return (req, res, next) => {
     const path = req.path === '/' ? '/index.html' : req.path;
-    if (path.includes('..') || !/\.(js|css|html|json|svg|map)$/.test(path)) return next();
+    if (path.includes('..') || !/\.(js|css|html|json|svg|map|webmanifest)$/.test(path)) return next();
     const accepts = String(req.headers['accept-encoding'] ?? '');
     const ending = /\bbr\b/.test(accepts) ? '.br' : /\bgzip\b/.test(accepts) ? '.gz' : null;
     res.vary('Accept-Encoding');
