@@ -11,6 +11,7 @@ import { checksOf } from './checks';
 import { chartContent } from './chart-layers';
 import { chartForStaff, LIGHT, type LightChart } from './find-chart';
 import { whyNotApprove } from './policy';
+import { soundingMisses } from './sounding-misses';
 import { surveyorsOf } from './surveyors';
 
 const SHOWN_TO_ALL = ['published', 'superseded', 'withdrawn'] as const;
@@ -84,6 +85,7 @@ export async function chartReview(ctx: Ctx, chartId: string): Promise<ChartRevie
     lakeName: lake.name,
     checks,
     quality: content?.built.quality ?? null,
+    misses: content ? await soundingMisses(tx, content.built) : [],
     may: {
       submit: builder && chart.status === 'draft' && !building && !blocked,
       approve: chart.status === 'submitted' && why === null && !blocked,

@@ -203,6 +203,10 @@ describe('what the soundings may do', () => {
     );
     const built = buildChart({ ...input, soundings }, () => undefined);
     expect(built.quality.flagged).toContain('cast 18 12');
+    const by = built.quality.flaggedBy.find(({ id }) => id === 'cast 18 12')!;
+    expect(Math.abs(by.errorM)).toBeGreaterThan(1);
+    expect(by.standardised).toBeGreaterThan(3);
+    expect(built.quality.flaggedBy.map(({ id }) => id)).toEqual(built.quality.flagged);
     expect(built.quality.worst[0]!.id).toBe('cast 18 12');
     expect(built.quality.worst[0]!.errorM).toBeLessThan(-1);
     expect(built.points).toHaveLength(input.soundings.length);

@@ -170,6 +170,11 @@ function qualityOf(
 ): QualityView {
   const { setup } = best;
   const idOf = (row: number) => samples.soundingIds[row]![0]!;
+  const flagged = flagOutliers(residuals, validation.count);
+  const missOf = (row: number) => ({
+    errorM: -residuals.residualM[row]!,
+    standardised: Math.abs(residuals.residualM[row]!) / Math.sqrt(residuals.varianceM2[row]!),
+  });
   return {
     soundings: validation.count,
     meanErrorM: validation.meanErrorM,
@@ -182,7 +187,8 @@ function qualityOf(
       errorM: -residualM,
       standardised: sigmas,
     })),
-    flagged: flagOutliers(residuals, validation.count).flatMap((row) => samples.soundingIds[row]!),
+    flagged: flagged.flatMap((row) => samples.soundingIds[row]!),
+    flaggedBy: flagged.flatMap((row) => samples.soundingIds[row]!.map((id) => ({ id, ...missOf(row) }))),
     variogram: {
       model: setup.variogram.model,
       nugget: setup.variogram.nuggetM2,

@@ -3,6 +3,7 @@ import { Position, Version } from '../fisheries/contract';
 import { LakePolygon, LevelNow, PhotoView } from '../lakes/contract';
 import { PlaceWater } from '../lakes/peg-water-contract';
 import { Bottom, Cover, Grade, Substrate } from '../surveys/contract';
+import { SoundingMiss, SoundingMissView } from './sounding-miss';
 
 /** draft → submitted → approved by another → published; then superseded by the next, or withdrawn. */
 export const ChartStatus = z.enum(['draft', 'submitted', 'published', 'superseded', 'withdrawn']);
@@ -45,8 +46,9 @@ export const QualityView = z.object({
   standardisedVariance: z.number(), // near 1 when the stated σ is honest
   coverage95: z.number(), // share of soundings inside their own 95 % band
   surveyedShare: z.number(), // of the lake's water
-  worst: z.array(z.object({ id: z.string(), errorM: z.number(), standardised: z.number() })),
-  flagged: z.array(z.string()),
+  worst: z.array(SoundingMiss),
+  flagged: z.array(z.string()), // ids of the soundings out of line by more than 3.5 robust σ; they are used all the same
+  flaggedBy: z.array(SoundingMiss).default([]), // by how much
   variogram: z.object({ model: z.string(), nugget: z.number(), sill: z.number(), rangeM: z.number() }),
   models: z.array(z.object({ model: z.string(), rmseM: z.number(), standardisedVariance: z.number() })),
   words: z.string(), // which model and why
@@ -77,6 +79,7 @@ export const ChartReview = z.object({
   lakeName: z.string(),
   checks: z.array(CheckView),
   quality: QualityView.nullable(),
+  misses: z.array(SoundingMissView).default([]), // the flagged and the worst ten, worst first
   may: z.object({
     submit: z.boolean(),
     approve: z.boolean(),

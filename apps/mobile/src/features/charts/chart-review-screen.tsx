@@ -15,6 +15,7 @@ import { QualityReport } from '@/features/charts/quality-report';
 import { ReviewActions } from '@/features/charts/review-actions';
 import { ReviewMap } from '@/features/charts/review-map';
 import { useChartReview } from '@/features/charts/review-api';
+import { SoundingMisses } from '@/features/charts/sounding-misses';
 
 const READING_PX = 720; // a report's lines stay short on a wide sheet
 
@@ -60,6 +61,7 @@ function Review({ review }: { review: ChartReview }) {
             <CheckList checks={checks} />
           </Section>
         ) : null}
+        {quality ? <SoundingMisses misses={review.misses} /> : null}
         {quality ? (
           <Section title="How good it is" note={quality.words}>
             <QualityReport quality={quality} />

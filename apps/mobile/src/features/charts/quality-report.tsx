@@ -22,7 +22,6 @@ export function QualityReport({ quality }: { quality: QualityView }) {
           },
           { term: 'Inside their own 95 % band', fact: percent(quality.coverage95, 1) },
           { term: 'Share of the water surveyed', fact: percent(quality.surveyedShare) },
-          { term: 'Out of line with their neighbours', fact: `${quality.flagged.length} soundings` },
         ]}
       />
       <Disclosure title="Which model of the bed, and why">
@@ -44,30 +43,6 @@ export function QualityReport({ quality }: { quality: QualityView }) {
               head: 'Standardised variance',
               value: (row) => row.standardisedVariance,
               show: (row) => figure(row.standardisedVariance, 2),
-              figures: true,
-            },
-          ]}
-        />
-      </Disclosure>
-      <Disclosure title="The ten soundings that fit worst">
-        <Table
-          caption="Soundings that fit worst"
-          rows={quality.worst}
-          rowKey={({ id }) => id}
-          columns={[
-            { key: 'sounding', head: 'Sounding', value: ({ id }) => id.slice(0, 8) },
-            {
-              key: 'error',
-              head: 'Out by',
-              value: ({ errorM }) => errorM,
-              show: ({ errorM }) => m(errorM),
-              figures: true,
-            },
-            {
-              key: 'share',
-              head: 'In its own σ',
-              value: ({ standardised }) => standardised,
-              show: ({ standardised }) => figure(standardised, 1),
               figures: true,
             },
           ]}
