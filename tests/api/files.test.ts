@@ -1,5 +1,5 @@
 import { resizePicture } from '@mereward/api/files/resize-picture';
-import { fileStore } from '@mereward/api/files/store';
+import { photoFolder } from '@mereward/api/files/file-key';
 import { PHOTO_MOST_BYTES, PhotoView } from '@mereward/shared/files/contract';
 import { LakeView, PegView } from '@mereward/shared/lakes/contract';
 import { ProblemBody } from '@mereward/shared/problems/problem';
@@ -7,7 +7,7 @@ import { randomUUID } from 'node:crypto';
 import { existsSync, readdirSync } from 'node:fs';
 import { createServer, request, type IncomingMessage } from 'node:http';
 import type { AddressInfo } from 'node:net';
-import { dirname } from 'node:path';
+import { join } from 'node:path';
 import { afterAll, beforeAll, describe, expect, test } from 'vitest';
 import { signAccessToken } from '@mereward/api/http/session';
 import { aStranger, type Person } from '../support/people';
@@ -87,7 +87,7 @@ describe('a photo of a peg', () => {
     });
     const served = await aStranger(server).get(`/photos/${waiting.id}/small.jpg`);
     expect(served.headers['cache-control']).toBe('public, max-age=31536000, immutable');
-    const folder = dirname(fileStore(server.server.config.filesDir).pathOf(waiting.id, 'original'));
+    const folder = join(server.server.config.filesDir, photoFolder(waiting.id));
     expect(readdirSync(folder).sort()).toEqual(['large.jpg', 'small.jpg']); // what was sent is forgotten
   });
 
@@ -193,7 +193,7 @@ describe('who may', () => {
     expect((await here.people.manager.delete(path)).status).toBe(204);
     expect((await aStranger(server).get(`${path}/large.jpg`)).status).toBe(404);
     expect((await here.people.manager.delete(path)).status).toBe(404);
-    const folder = dirname(fileStore(server.server.config.filesDir).pathOf(photo.id, 'original'));
+    const folder = join(server.server.config.filesDir, photoFolder(photo.id));
     expect(existsSync(folder)).toBe(false);
   });
 

@@ -14,6 +14,11 @@ const Environment = z.object({
   SMTP_URL: z.url().optional(),
   MAIL_FROM: z.string().default('Mereward <post@mereward.invalid>'),
   FILES_DIR: z.string().default('.data/files'),
+  /** A bucket to keep files in instead; who may enter is told by AWS_ACCESS_KEY_ID and its like. */
+  FILES_S3_BUCKET: z.string().min(3).optional(),
+  /** The address of a store that isn't Amazon's. */
+  FILES_S3_ENDPOINT: z.url({ protocol: /^https?$/ }).optional(),
+  FILES_S3_REGION: z.string().min(1).default('us-east-1'),
   WEB_DIR: z.string().default('apps/mobile/dist'),
   /** Shows the demo's captured mail and its sign-ins. Never set where real people's mail could be captured. */
   DEMO: flag,
@@ -33,6 +38,8 @@ export type Config = {
   smtpUrl: string | null;
   mailFrom: string;
   filesDir: string;
+  /** Where files are kept instead of `filesDir`. */
+  filesBucket: { name: string; endpoint: string | null; region: string } | null;
   webDir: string;
   demo: boolean;
   trustProxy: number;
@@ -62,6 +69,9 @@ export function readConfig(env: NodeJS.ProcessEnv): Config {
     smtpUrl: e.SMTP_URL ?? null,
     mailFrom: e.MAIL_FROM,
     filesDir: e.FILES_DIR,
+    filesBucket: e.FILES_S3_BUCKET
+      ? { name: e.FILES_S3_BUCKET, endpoint: e.FILES_S3_ENDPOINT ?? null, region: e.FILES_S3_REGION }
+      : null,
     webDir: e.WEB_DIR,
     demo: e.DEMO,
     trustProxy: e.TRUST_PROXY,

@@ -3,6 +3,7 @@ import { readFileSync } from 'node:fs';
 import { createServer, type Server } from 'node:http';
 import { makeApp } from './app';
 import { watchBuilds } from './charts/jobs';
+import { fileStoreOf } from './files/store';
 import { readConfig, SettingsFault, type Config } from './config';
 import { handlers } from './handlers';
 import { isDatabaseAway } from './http/database-away';
@@ -34,6 +35,9 @@ async function main(): Promise<void> {
   const stopWatching = watchBuilds(server, (err) =>
     logger.error({ err }, 'lost builds could not be taken up'),
   );
+  fileStoreOf(config)
+    .check()
+    .catch((err: unknown) => logger.error({ err }, 'the store of files can’t be used'));
   const http = createServer(makeApp(server, logger, { capture }));
   await listen(http, config);
   logger.info({ port: config.port, url: config.publicUrl }, 'listening');

@@ -2,7 +2,8 @@ import { Photo } from '@mereward/db/entities/files/photo';
 import { createHash } from 'node:crypto';
 import type { Ctx } from '../ctx';
 import { resizePicture } from '../files/resize-picture';
-import { fileStore } from '../files/store';
+import { photoFile } from '../files/file-key';
+import type { FileStore } from '../files/store';
 import { FAR_OSTLE_LAKE, OSTLEMERE_ID } from './fishery';
 import { paintView } from './paint-view';
 import { JOAN } from './people';
@@ -11,9 +12,8 @@ import { demoId } from './random';
 const PAINTED = new Set(['FO7', 'FO17']);
 
 /** Two pegs' views, painted for the demo and kept as any photo is. */
-export async function seedPhotos({ tx, now }: Ctx, filesDir: string): Promise<void> {
+export async function seedPhotos({ tx, now }: Ctx, store: FileStore): Promise<void> {
   const { Jimp } = await import('jimp'); // heavy, and wanted only here
-  const store = fileStore(filesDir);
   for (const peg of FAR_OSTLE_LAKE.pegs.filter(({ details }) => PAINTED.has(details.number))) {
     const { width, height, rgba } = paintView(FAR_OSTLE_LAKE, peg);
     const bytes = await Jimp.fromBitmap({ width, height, data: rgba }).getBuffer('image/jpeg', {
@@ -22,8 +22,8 @@ export async function seedPhotos({ tx, now }: Ctx, filesDir: string): Promise<vo
     const made = await resizePicture(bytes);
     if (made.kind === 'refused') throw new Error(made.words);
     const id = demoId(`photo ${peg.details.number}`);
-    await store.write(id, 'large.jpg', made.large);
-    await store.write(id, 'small.jpg', made.small);
+    await store.write(photoFile(id, 'large.jpg'), made.large);
+    await store.write(photoFile(id, 'small.jpg'), made.small);
     await tx.insert(Photo, {
       id,
       fisheryId: OSTLEMERE_ID,

@@ -5,7 +5,9 @@ import { FisheryRole } from '@mereward/db/entities/fisheries/fishery-role';
 import { LevelReading } from '@mereward/db/entities/lakes/level-reading';
 import type { DataSource } from 'typeorm';
 import { passwordHash } from '../accounts/password';
+import { readConfig } from '../config';
 import type { Ctx } from '../ctx';
+import { fileStoreOf, type FileStore } from '../files/store';
 import { putBoard } from '../lakes/boards';
 import { makeLake } from '../lakes/make-lake';
 import { putMark } from '../lakes/marks';
@@ -25,18 +27,18 @@ const DAY_MS = 86_400_000;
 
 /**
  * Fills an empty database with the demo; one that holds it already is left as it is. Answers the sign-ins to
- * print. Without a folder for files the pegs have no pictures.
+ * print. Where nothing says where files are kept the pegs have no pictures.
  */
 export async function seed(
   databaseUrl: string,
   now: Date = new Date(),
-  filesDir: string | null = process.env.FILES_DIR ?? null,
+  files: FileStore | null = filesNamedBy(process.env),
 ): Promise<string[]> {
   const source = await makeDataSource(databaseUrl).initialize();
   const days = demoDays(now);
   try {
     if (!(await source.manager.existsBy(Fishery, { id: OSTLEMERE_ID })))
-      await fill(source, { days, now, filesDir });
+      await fill(source, { days, now, files });
     await seedCharts(source, days);
   } finally {
     await source.destroy();
@@ -47,10 +49,13 @@ export async function seed(
   ];
 }
 
-type Filling = { days: DemoDays; now: Date; filesDir: string | null };
+type Filling = { days: DemoDays; now: Date; files: FileStore | null };
+
+const filesNamedBy = (env: NodeJS.ProcessEnv): FileStore | null =>
+  env.FILES_DIR || env.FILES_S3_BUCKET ? fileStoreOf(readConfig(env)) : null;
 
 /** Everything but the charts, in one transaction. */
-async function fill(source: DataSource, { days, now, filesDir }: Filling): Promise<void> {
+async function fill(source: DataSource, { days, now, files }: Filling): Promise<void> {
   const made = new Date(days.farOstleFirst.getTime() - 60 * DAY_MS);
   await source.transaction(async (tx) => {
     await seedPeople(demoCtx(tx, MARIAN, made));
@@ -59,7 +64,7 @@ async function fill(source: DataSource, { days, now, filesDir }: Filling): Promi
     for (const survey of demoSurveys(days))
       await seedSurvey(demoCtx(tx, survey.surveyor, new Date(survey.day.getTime() + DAY_MS)), survey);
     await seedTicket(demoCtx(tx, PRIYA, now));
-    if (filesDir !== null) await seedPhotos(demoCtx(tx, JOAN, days.farOstleFirst), filesDir);
+    if (files !== null) await seedPhotos(demoCtx(tx, JOAN, days.farOstleFirst), files);
   });
 }
 

@@ -1,9 +1,9 @@
 import { Photo } from '@mereward/db/entities/files/photo';
-import { existsSync } from 'node:fs';
 import { z } from 'zod';
 import { openThread } from '../jobs/thread';
 import type { Handler } from '../jobs/worker';
-import { fileStore } from './store';
+import { photoFile, photoFolder } from './file-key';
+import { fileStoreOf, readWhole } from './store';
 
 const Payload = z.object({ photoId: z.uuid() });
 
@@ -20,23 +20,26 @@ const Answer = z.discriminatedUnion('kind', [
 type Answer = z.infer<typeof Answer>;
 
 const LONGEST_MS = 150_000;
-const LAST_ATTEMPT = 3; // the queue tries three times
+const LAST_ATTEMPT = 3; // then the picture is to blame; the queue itself goes on while the store is away
+
+type Bytes = Uint8Array<ArrayBuffer>;
 
 /** Turns and resizes one photo in a thread of its own, then forgets what was sent. Done twice it changes nothing. */
 export const resizePhoto: Handler = async ({ payload, attempt }, { source, config }) => {
   const { photoId } = Payload.parse(payload);
-  const store = fileStore(config.filesDir);
+  const store = fileStoreOf(config);
+  const original = photoFile(photoId, 'original');
   const waiting = { id: photoId, state: 'waiting' as const };
-  if (!(await source.manager.existsBy(Photo, waiting))) return store.remove(photoId, 'original');
-  const answer = await resized(store.pathOf(photoId, 'original'), attempt);
+  if (!(await source.manager.existsBy(Photo, waiting))) return store.remove(original);
+  const answer = await resized(await readWhole(store, original), attempt);
   if (answer.kind === 'done') {
-    await store.write(photoId, 'large.jpg', answer.large);
-    await store.write(photoId, 'small.jpg', answer.small);
+    await store.write(photoFile(photoId, 'large.jpg'), answer.large);
+    await store.write(photoFile(photoId, 'small.jpg'), answer.small);
   }
   const { affected } = await source.manager.update(Photo, waiting, outcome(answer));
   if (affected !== 1)
-    await store.removeAll(photoId); // taken away meanwhile
-  else await store.remove(photoId, 'original');
+    await store.removeFolder(photoFolder(photoId)); // taken away meanwhile
+  else await store.remove(original);
 };
 
 const outcome = (answer: Answer) =>
@@ -44,11 +47,11 @@ const outcome = (answer: Answer) =>
     ? { state: 'ready' as const, widthPx: answer.widthPx, heightPx: answer.heightPx }
     : { state: 'refused' as const, refusal: answer.words };
 
-async function resized(path: string, attempt: number): Promise<Answer> {
-  if (!existsSync(path))
+async function resized(bytes: Bytes | null, attempt: number): Promise<Answer> {
+  if (bytes === null)
     return { kind: 'refused', words: 'This picture was lost here before it was ready. Send it again.' };
   try {
-    return await inThread(path);
+    return await inThread(bytes);
   } catch (error) {
     if (attempt < LAST_ATTEMPT) throw error;
     return {
@@ -58,8 +61,8 @@ async function resized(path: string, attempt: number): Promise<Answer> {
   }
 }
 
-function inThread(path: string): Promise<Answer> {
-  const thread = openThread('files/resize', { path });
+function inThread(bytes: Bytes): Promise<Answer> {
+  const thread = openThread('files/resize', { bytes });
   const answer = new Promise<Answer>((resolve, reject) => {
     const late = setTimeout(() => reject(new Error('resizing took too long')), LONGEST_MS);
     const settle = (deed: () => void) => {

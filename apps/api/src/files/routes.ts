@@ -5,7 +5,9 @@ import { raw, read, type Route } from '../http/route';
 import { serverOf } from '../http/server';
 import { inTransaction } from '../http/transaction';
 import { photoOf, removePhoto } from './service';
-import { fileStore, type PhotoPart } from './store';
+import { photoFile, photoFolder, type PhotoPart } from './file-key';
+import { serveFile } from './serve-file';
+import { fileStoreOf } from './store';
 import { z } from 'zod';
 
 const Id = z.uuid();
@@ -17,17 +19,14 @@ function photoId(req: Request): string {
 }
 
 /** A picture never changes under its address, so it may be kept for a year without asking again. */
-const serve = (part: PhotoPart) => async (req: Request, res: Response) => {
-  const path = fileStore(serverOf(req).config.filesDir).pathOf(photoId(req), part);
-  await new Promise<void>((resolve, reject) => {
-    const settings = { immutable: true, maxAge: '365d', dotfiles: 'allow', acceptRanges: false } as const;
-    res.removeHeader('Cache-Control'); // the answers' own gives way to the picture's
-    res.type('image/jpeg').sendFile(path, settings, (error?: NodeJS.ErrnoException) => {
-      if (!error || res.headersSent) resolve();
-      else reject(error.code === 'ENOENT' ? notFound('photo') : error);
-    });
+const serve = (part: PhotoPart) => (req: Request, res: Response) =>
+  serveFile(req, res, {
+    store: fileStoreOf(serverOf(req).config),
+    key: photoFile(photoId(req), part),
+    type: 'image/jpeg',
+    what: 'photo',
+    cacheControl: 'public, max-age=31536000, immutable',
   });
-};
 
 const picture = (part: 'small.jpg' | 'large.jpg'): Route =>
   raw(
@@ -57,7 +56,7 @@ export const fileRoutes: Route[] = [
     async (req, res) => {
       const id = photoId(req);
       await inTransaction(req, (ctx) => removePhoto(ctx, id));
-      await fileStore(serverOf(req).config.filesDir).removeAll(id);
+      await fileStoreOf(serverOf(req).config).removeFolder(photoFolder(id));
       res.status(204).end();
     },
   ),

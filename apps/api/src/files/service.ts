@@ -8,6 +8,7 @@ import { insertOnce, mustRepeat } from '../repeat';
 import { photoFault } from './photo-fault';
 import { PHOTO_KEEPERS, PHOTO_STAFF } from './policy';
 import { photoView } from './queries';
+import { photoFile } from './file-key';
 import type { FileStore } from './store';
 
 /** What a photo is of: a peg or a far-bank mark of a fishery. */
@@ -40,7 +41,7 @@ export async function keepPhoto(ctx: Ctx, sent: Sent, store: FileStore): Promise
     const kept = await tx.findOneByOrFail(Photo, { id: input.id });
     return repeated({ ...sent, sha256 }, addedBy, kept);
   }
-  await store.write(input.id, 'original', bytes);
+  await store.write(photoFile(input.id, 'original'), bytes);
   await jobs.send(tx, 'photo.resize', { photoId: input.id });
   return photoView(await tx.findOneByOrFail(Photo, { id: input.id }));
 }

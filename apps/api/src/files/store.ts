@@ -1,52 +1,53 @@
-import { randomUUID } from 'node:crypto';
-import { mkdir, open, rename, rm } from 'node:fs/promises';
-import { dirname, join, resolve } from 'node:path';
-import { z } from 'zod';
+import type { Readable } from 'node:stream';
+import type { Config } from '../config';
+import { openDiskStore } from './disk-store';
+import type { FileKey } from './file-key';
+import { openBucketStore } from './bucket-store';
 
-export type PhotoPart = 'original' | 'small.jpg' | 'large.jpg';
+/** A whole file's length, and a mark that changes with what is in it (RFC 9110 §8.8.3, with its quotes). */
+export type FileAbout = { sizeBytes: number; etag: string };
+/** A part of a file, first and last byte, both of them in it. */
+export type Span = { start: number; end: number };
+export type OpenedFile = FileAbout & { stream: Readable };
 
-/** Files on disk. A name is always made here from a row's id: nothing a client sends ever becomes a path. */
+/**
+ * Where bytes are kept: a folder on disk, or a bucket of an S3-compatible store. A file is there whole or not at
+ * all. A store that can't be reached throws a Problem in words; what isn't there is null.
+ */
 export type FileStore = {
-  pathOf: (photoId: string, part: PhotoPart) => string;
-  write: (photoId: string, part: PhotoPart, bytes: Uint8Array) => Promise<void>;
-  remove: (photoId: string, part: PhotoPart) => Promise<void>;
-  removeAll: (photoId: string) => Promise<void>;
+  write: (key: FileKey, bytes: Uint8Array) => Promise<void>;
+  about: (key: FileKey) => Promise<FileAbout | null>;
+  open: (key: FileKey, span?: Span) => Promise<OpenedFile | null>;
+  remove: (key: FileKey) => Promise<void>;
+  /** Every file whose key begins with the folder's. */
+  removeFolder: (folder: FileKey) => Promise<void>;
+  /** Throws when files can't be kept here. */
+  check: () => Promise<void>;
 };
 
-const Id = z.uuid();
+const STORES = new WeakMap<Config, FileStore>();
 
-export function fileStore(filesDir: string): FileStore {
-  const root = resolve(filesDir);
-  const pathOf = (photoId: string, part: PhotoPart): string => {
-    const id = Id.parse(photoId).toLowerCase();
-    return join(root, 'photos', id.slice(0, 2), id, part); // a folder of a hundred thousand is slow to list
-  };
-  return {
-    pathOf,
-    async write(photoId, part, bytes) {
-      const path = pathOf(photoId, part);
-      await mkdir(dirname(path), { recursive: true });
-      await writeWhole(path, bytes);
-    },
-    remove: (photoId, part) => rm(pathOf(photoId, part), { force: true }),
-    removeAll: (photoId) => rm(dirname(pathOf(photoId, 'original')), { recursive: true, force: true }),
-  };
+/** The store the settings name: a bucket when there is one, else a folder. */
+export function fileStoreOf(config: Config): FileStore {
+  const known = STORES.get(config);
+  if (known) return known;
+  const store = config.filesBucket ? openBucketStore(config.filesBucket) : openDiskStore(config.filesDir);
+  STORES.set(config, store);
+  return store;
 }
 
-/** Written beside and renamed: a reader sees the old file or the whole new one, also after a crash. */
-async function writeWhole(path: string, bytes: Uint8Array): Promise<void> {
-  const beside = `${path}.${randomUUID()}.part`;
-  try {
-    const file = await open(beside, 'w', 0o640);
-    try {
-      await file.writeFile(bytes);
-      await file.sync();
-    } finally {
-      await file.close();
-    }
-    await rename(beside, path);
-  } catch (error) {
-    await rm(beside, { force: true });
-    throw error;
+/** A file from its first byte to its last; null when there is none. What comes broken off is thrown. */
+export async function readWhole(store: FileStore, key: FileKey): Promise<Uint8Array<ArrayBuffer> | null> {
+  const opened = await store.open(key);
+  if (!opened) return null;
+  const bytes = new Uint8Array(opened.sizeBytes);
+  let at = 0;
+  for await (const chunk of opened.stream) {
+    const piece = Buffer.from(chunk);
+    if (at + piece.length > bytes.length) throw new Error('a file was longer than its store said');
+    bytes.set(piece, at);
+    at += piece.length;
   }
+  if (at !== bytes.length) throw new Error(`a file broke off after ${at} of ${bytes.length} bytes`);
+  return bytes;
 }

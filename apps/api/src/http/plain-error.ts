@@ -15,6 +15,8 @@ export type PlainError = {
   code?: string;
   constraint?: string;
   table?: string;
+  /** What lay behind it, such as why a store couldn't be reached. */
+  cause?: string;
 };
 
 const ADDRESS = /[^\s<>"'(=:]+@[^\s<>"'),;]+/g;
@@ -40,5 +42,12 @@ export function plainError(error: unknown): PlainError {
       ...(table === undefined ? {} : { table }),
     };
   }
-  return { type: error.name, message: error.message.replace(ADDRESS, '…@…'), stack };
+  return {
+    type: error.name,
+    message: error.message.replace(ADDRESS, '…@…'),
+    stack,
+    ...(error.cause instanceof Error && !DriverFault.safeParse(error.cause).success
+      ? { cause: `${error.cause.name}: ${error.cause.message.replace(ADDRESS, '…@…')}` }
+      : {}),
+  };
 }

@@ -5,7 +5,8 @@ import type { JobName, Jobs } from '../ctx';
 const QUEUES: Record<JobName, { retryLimit: number; retryDelay: number; expireInSeconds: number }> = {
   'mail.send': { retryLimit: 8, retryDelay: 5, expireInSeconds: 60 },
   'chart.build': { retryLimit: 2, retryDelay: 5, expireInSeconds: 900 },
-  'photo.resize': { retryLimit: 2, retryDelay: 5, expireInSeconds: 180 },
+  // Twelve tries are five hours: the store of files may be away for a while, and what was sent is kept.
+  'photo.resize': { retryLimit: 11, retryDelay: 5, expireInSeconds: 180 },
 };
 
 /** `failed` is told what goes wrong between jobs, the database being away above all; the queue goes on trying. */

@@ -2,7 +2,7 @@ import { AddPhoto, PHOTO_MOST_BYTES, PhotoView } from '@mereward/shared/files/co
 import type { Request, Response } from 'express';
 import type { Ctx } from '../ctx';
 import { allowPhotos, keepPhoto, type PhotoSubject } from '../files/service';
-import { fileStore } from '../files/store';
+import { fileStoreOf } from '../files/store';
 import { parse } from '../http/parse';
 import { raw, type Route } from '../http/route';
 import { idIn } from '../http/route-id';
@@ -29,7 +29,7 @@ const add = (find: FindSubject, name: 'peg' | 'mark') => async (req: Request, re
   const { bytes, fields } = await receiveFile(req, res, { field: 'photo', mostBytes: PHOTO_MOST_BYTES });
   const takenOn = fields['takenOn'] || null; // a form has no null
   const input = parse(AddPhoto, { caption: '', ...fields, takenOn });
-  const store = fileStore(serverOf(req).config.filesDir);
+  const store = fileStoreOf(serverOf(req).config);
   const view = await inTransaction(req, async (ctx) =>
     keepPhoto(ctx, { input, bytes, subject: await find(ctx, id) }, store),
   );
