@@ -1,8 +1,9 @@
+import { clockIn, dayName } from '@mereward/shared/time/day-names';
+
+export { dayName, dayRange } from '@mereward/shared/time/day-names';
+
 const READER_ZONE = Intl.DateTimeFormat().resolvedOptions().timeZone;
 const MINUTE_MS = 60_000;
-
-const clock = (zone: string) =>
-  new Intl.DateTimeFormat('en-GB', { hour: '2-digit', minute: '2-digit', hourCycle: 'h23', timeZone: zone });
 
 /** Minutes that a zone is ahead of UTC at an instant. */
 function aheadMin(zone: string, at: Date): number {
@@ -23,36 +24,12 @@ export function zoneNote(at: string, zone: string, readerZone = READER_ZONE): st
 
 /** An instant's clock time at the fishery: "07:00", or "07:00 at the fishery" to a reader elsewhere. */
 export const clockTime = (at: string, zone: string, readerZone = READER_ZONE): string =>
-  clock(zone).format(new Date(at)) + zoneNote(at, zone, readerZone);
+  clockIn(zone).format(new Date(at)) + zoneNote(at, zone, readerZone);
 
 /** An instant's day and time at the fishery: "Sat 4 July 2026, 07:00". */
 export function dayAndTime(at: string, zone: string, readerZone = READER_ZONE): string {
   const day = new Intl.DateTimeFormat('en-CA', { timeZone: zone }).format(new Date(at));
   return `${dayName(day)}, ${clockTime(at, zone, readerZone)}`;
-}
-
-/** A civil day, YYYY-MM-DD: "Sat 4 July 2026". It has no zone: it is the same day everywhere. */
-export function dayName(day: string): string {
-  const parts = new Intl.DateTimeFormat('en-GB', {
-    weekday: 'short',
-    day: 'numeric',
-    month: 'long',
-    year: 'numeric',
-    timeZone: 'UTC',
-  }).formatToParts(new Date(`${day}T00:00:00Z`));
-  const part = (type: string): string => parts.find((one) => one.type === type)?.value ?? '';
-  return `${part('weekday')} ${part('day')} ${part('month')} ${part('year')}`;
-}
-
-/** From one civil day to another, saying no part twice: "3 to 11 April 2027". */
-export function dayRange(from: string, to: string): string {
-  if (from === to) return dayName(from);
-  const long = (day: string): string[] => dayName(day).split(' ').slice(1);
-  const [fromDay = '', fromMonth = '', fromYear = ''] = long(from);
-  const [toDay = '', toMonth = '', toYear = ''] = long(to);
-  if (fromYear !== toYear) return `${fromDay} ${fromMonth} ${fromYear} to ${toDay} ${toMonth} ${toYear}`;
-  if (fromMonth !== toMonth) return `${fromDay} ${fromMonth} to ${toDay} ${toMonth} ${toYear}`;
-  return `${fromDay} to ${toDay} ${toMonth} ${toYear}`;
 }
 
 /** How long ago, in the largest whole unit: "just now", "12 minutes ago", "3 days ago". */

@@ -10,7 +10,7 @@ import { space } from '@/constants/layout';
 import { useChartUnits } from './use-chart-units';
 import { length } from '@/lib/format';
 import { capital } from './peg-words';
-import { depthNow } from './depth-format';
+import { depthNow } from '@mereward/shared/charts/depth-words';
 import { SectionList } from './section-list';
 import { SectionPicture } from './section-picture';
 import { pointAtLineOut } from './section-words';

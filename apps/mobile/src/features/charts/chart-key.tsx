@@ -10,7 +10,7 @@ import { Text } from '@/components/text';
 import { space } from '@/constants/layout';
 import { useTheme } from '@/hooks/use-theme';
 import { useChartUnits } from './use-chart-units';
-import { isobathFigure } from './depth-format';
+import { isobathFigure } from '@mereward/shared/charts/depth-words';
 import { SvgPicture } from '@/components/svg-picture';
 
 /** The tints and the depths they begin at. */

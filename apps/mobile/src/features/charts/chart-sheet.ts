@@ -6,7 +6,7 @@ import { stickWords } from '@mereward/shared/charts/spot-words';
 import { length } from '@/lib/format';
 import { dayAndTime, dayRange } from '@/lib/format-time';
 import type { ChartFileTerms } from './chart-file-terms';
-import { isobathFigure, stepFor } from './depth-format';
+import { isobathFigure, stepFor } from '@mereward/shared/charts/depth-words';
 import { bottomOf, layersOf } from '@mereward/shared/charts/drawing/chart-part';
 import { groundOfChart, raisedNowM } from './readied-chart';
 

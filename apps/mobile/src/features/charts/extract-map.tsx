@@ -11,7 +11,7 @@ import { View } from 'react-native';
 import { useTheme } from '@/hooks/use-theme';
 import { useThreeColumns } from '@/hooks/use-wide';
 import { useChartUnits } from './use-chart-units';
-import { isobathFigure } from './depth-format';
+import { isobathFigure } from '@mereward/shared/charts/depth-words';
 import { spotCast } from './spot-cast';
 import { SvgPicture } from '@/components/svg-picture';
 

@@ -1,4 +1,5 @@
 import type { ChartView } from '@mereward/shared/charts/contract';
+import { layerReasons } from '@mereward/shared/charts/layer-reasons';
 import { View } from 'react-native';
 import { Text } from '@/components/text';
 import { Toggles, type Toggle } from '@/components/toggles';
@@ -28,21 +29,6 @@ export function LayerToggles({ chart }: { chart: ChartView }) {
       isOn={(key) => shown[key]}
       onToggle={(key) => shownLayers.set({ ...shown, [key]: !shown[key] })}
     />
-  );
-}
-
-const LAYER_NAMES = { depth: 'Depth', bottom: 'Bottom', spots: 'Spots', soundings: 'Soundings' } as const;
-
-/** "Spots, soundings: shown to this fishery's members." – each reason once, with the layers it is about. */
-export function layerReasons(notes: ChartView['layerNotes']): string[] {
-  const byWords = new Map<string, string[]>();
-  for (const layer of ['depth', 'bottom', 'spots', 'soundings'] as const) {
-    const words = notes[layer];
-    if (words === null) continue;
-    byWords.set(words, [...(byWords.get(words) ?? []), LAYER_NAMES[layer]]);
-  }
-  return [...byWords].map(
-    ([words, names]) => `${names.join(', ')}: ${words.charAt(0).toLowerCase()}${words.slice(1)}`,
   );
 }
 

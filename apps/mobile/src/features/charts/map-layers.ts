@@ -17,7 +17,7 @@ import { toPage, type View } from '@mereward/shared/charts/drawing/view';
 import { grownView } from '@mereward/shared/charts/drawing/view-moves';
 import { distanceBetweenM } from '@mereward/shared/geometry/point';
 import { stickWords } from '@mereward/shared/charts/spot-words';
-import { isobathFigure } from './depth-format';
+import { isobathFigure } from '@mereward/shared/charts/depth-words';
 import { OVERSCAN } from './map-surface-props';
 
 /** What stands on a map, whatever is chosen on it. */

@@ -1,5 +1,6 @@
 import type { PegPageView } from '@mereward/shared/charts/contract';
 import type { PegDetails } from '@mereward/shared/lakes/contract';
+import { emergencyFacts } from '@mereward/shared/lakes/peg-facts';
 import { Facts } from '@/components/facts';
 import { Note } from '@/components/note';
 import { Section } from '@/components/section';
@@ -7,7 +8,6 @@ import { Text } from '@/components/text';
 
 /** What to say and where to go when something has happened here; kept with the page for when there's no signal. */
 export function PegEmergency({ page, details }: { page: PegPageView; details: PegDetails | null }) {
-  const { lake, fishery } = page;
   return (
     <Section title="In an emergency">
       <Note kind="danger" title="Ring 999 or 112">
@@ -16,17 +16,7 @@ export function PegEmergency({ page, details }: { page: PegPageView; details: Pe
           <Text weight="semibold">{`Say: “${details.emergency.sayThis}”`}</Text>
         ) : null}
       </Note>
-      <Facts
-        facts={[
-          { term: 'Grid reference', fact: details?.emergency.gridReference },
-          { term: 'Nearest throw line', fact: details?.emergency.throwLine },
-          { term: 'Gate for an ambulance', fact: details?.emergency.ambulanceGate },
-          { term: 'Ambulance route', fact: lake.emergencyAccess },
-          { term: 'Meet it at', fact: fishery.meetingPoint },
-          { term: 'Fishery’s duty phone', fact: fishery.dutyPhone },
-          { term: 'Phone signal', fact: lake.phoneSignal },
-        ]}
-      />
+      <Facts facts={emergencyFacts(page, details?.emergency ?? null)} />
     </Section>
   );
 }

@@ -8,7 +8,7 @@ import { StatusShape } from '@/components/status-shape';
 import { Text } from '@/components/text';
 import { space } from '@/constants/layout';
 import { useChartUnits } from './use-chart-units';
-import { depthNow } from './depth-format';
+import { depthNow } from '@mereward/shared/charts/depth-words';
 import { pegOutlook } from './peg-outlook';
 import { PEG_STATUS } from './peg-words';
 import { layersOf } from '@mereward/shared/charts/drawing/chart-part';

@@ -1,7 +1,10 @@
 import { useState } from 'react';
 import { useLocalSearchParams } from 'expo-router';
 import type { PegPageView } from '@mereward/shared/charts/contract';
+import { levelLine } from '@mereward/shared/charts/depth-words';
+import { layerReasons } from '@mereward/shared/charts/layer-reasons';
 import type { PegDetails } from '@mereward/shared/lakes/contract';
+import { statusWords } from '@mereward/shared/lakes/peg-facts';
 import { View } from 'react-native';
 import { Empty } from '@/components/empty';
 import { LinkButton } from '@/components/link-button';
@@ -13,13 +16,12 @@ import { StatusShape } from '@/components/status-shape';
 import { Text } from '@/components/text';
 import { MEASURE_PX, space } from '@/constants/layout';
 import { useThreeColumns, useWide } from '@/hooks/use-wide';
-import { dayAndTime, dayName } from '@/lib/format-time';
+import { dayAndTime } from '@/lib/format-time';
 import { usePegPage } from './api';
 import { CardButton } from './card-button';
 import { ChartCaption } from './chart-caption';
 import { CountConverter } from './count-converter';
 import { ExtractMap } from './extract-map';
-import { layerReasons } from './layer-toggles';
 import { pegDetailsOf } from './peg-details';
 import { PegEmergency } from './peg-emergency';
 import { GettingThere, ThePeg } from './peg-facts';
@@ -36,6 +38,7 @@ function InFront({ page }: { page: PegPageView }) {
   const spot = spots.find(({ id }) => id === spotId) ?? spots[0] ?? null;
   const water = { levelM: page.levelNow?.levelM ?? null, datumM: page.chart?.datumM ?? 0 };
   const reasons = layerReasons(page.layerNotes);
+  const { levelNow } = page;
   return (
     <View style={{ gap: space.page }}>
       <View style={{ marginHorizontal: beside ? 0 : -space.page }}>
@@ -62,7 +65,12 @@ function InFront({ page }: { page: PegPageView }) {
           </>
         </Note>
       ) : null}
-      {page.chart ? <ChartCaption chart={page.chart} shownAt={levelLine(page)} /> : null}
+      {page.chart ? (
+        <ChartCaption
+          chart={page.chart}
+          shownAt={levelLine(levelNow, levelNow ? dayAndTime(levelNow.at, page.fishery.zone) : '')}
+        />
+      ) : null}
       {page.chart ? (
         <LinkButton label="The whole chart" href={`/water/charts/${page.chart.id}?peg=${page.id}`} />
       ) : null}
@@ -70,19 +78,13 @@ function InFront({ page }: { page: PegPageView }) {
   );
 }
 
-function levelLine({ levelNow, fishery }: PegPageView): string {
-  if (!levelNow) return 'no level read yet, so depths are at datum';
-  return `the chart’s depths are at datum; the water stands at ${levelNow.boardReadsM.toFixed(2)} m on ${levelNow.boardCode}, read ${dayAndTime(levelNow.at, fishery.zone)}`;
-}
-
 function Warnings({ details }: { details: PegDetails }) {
-  const { status, statusReason, statusUntil } = details;
-  const until = statusUntil && `Until ${dayName(statusUntil)}.`;
+  const { status } = details;
   return (
     <>
       {status === 'open' ? null : (
         <Note kind={status === 'closed' ? 'danger' : 'caution'} title={`This peg is ${status}`}>
-          {[statusReason, until].filter(Boolean).join('. ') || 'Ask the fishery.'}
+          {statusWords(details)}
         </Note>
       )}
       <OverheadNote details={details} />

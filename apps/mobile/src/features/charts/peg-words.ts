@@ -1,6 +1,4 @@
-/** "Peg FO7, the Point" */
-export const pegTitle = ({ number, name }: { number: string; name: string }): string =>
-  name ? `Peg ${number}, ${name}` : `Peg ${number}`;
+export { pegTitle } from '@mereward/shared/lakes/peg-facts';
 
 /** How a peg's state looks: shape, tone and word together. */
 export const PEG_STATUS = {

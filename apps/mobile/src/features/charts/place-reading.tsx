@@ -4,7 +4,7 @@ import type { Point } from '@mereward/shared/geometry/plane';
 import { Text } from '@/components/text';
 import { useChartUnits } from './use-chart-units';
 import { lengthWithin, percent } from '@/lib/format';
-import { depthNow } from './depth-format';
+import { depthNow } from '@mereward/shared/charts/depth-words';
 import { readingAt } from './readied-chart';
 
 type Props = { layers: ChartLayers | null; place: Point; raisedM: number; when: string };

@@ -4,7 +4,7 @@ import { Disclosure } from '@/components/disclosure';
 import { Facts } from '@/components/facts';
 import { useChartUnits } from './use-chart-units';
 import { figure } from '@/lib/format';
-import { depthNow } from './depth-format';
+import { depthNow } from '@mereward/shared/charts/depth-words';
 import { sectionStretches, type SectionStretch } from './section-words';
 
 /** The section said in words, stretch by stretch, for whoever can't see it or would rather read. */

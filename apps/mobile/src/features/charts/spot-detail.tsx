@@ -1,5 +1,13 @@
 import { BOTTOM_WORDS } from '@mereward/shared/charts/bottom-words';
 import type { PegPageView, SpotView } from '@mereward/shared/charts/contract';
+import { depthNow, depthShown } from '@mereward/shared/charts/depth-words';
+import {
+  aimWords,
+  bottomCaption,
+  depthCaption,
+  ownCountWords,
+  provenance,
+} from '@mereward/shared/charts/spot-figures';
 import { View } from 'react-native';
 import { Figure } from '@/components/figure';
 import { Heading } from '@/components/heading';
@@ -7,12 +15,10 @@ import { Note } from '@/components/note';
 import { Text } from '@/components/text';
 import { MEASURE_PX, space } from '@/constants/layout';
 import { useChartUnits } from './use-chart-units';
-import { length, percent } from '@/lib/format';
-import { depthNow, depthShown } from './depth-format';
+import { length } from '@/lib/format';
 import { capital } from './peg-words';
 import { SectionList } from './section-list';
 import { SectionPicture } from './section-picture';
-import { aimWords, countedWords, ownCountWords } from './spot-words';
 
 type Props = { spot: SpotView; page: Pick<PegPageView, 'chart' | 'levelNow' | 'rigCaution'> };
 
@@ -30,10 +36,12 @@ export function SpotDetail({ spot, page }: Props) {
         {shown ? (
           <Figure
             figure={depthNow(shown.depthM, units.length)}
-            caption={spread(spot, shown.when, (m) => length(m, units))}
+            caption={depthCaption(spot, shown.when, units)}
           />
         ) : null}
-        {spot.bottom ? <Figure figure={capital(BOTTOM_WORDS[spot.bottom])} caption={sureness(spot)} /> : null}
+        {spot.bottom ? (
+          <Figure figure={capital(BOTTOM_WORDS[spot.bottom])} caption={bottomCaption(spot)} />
+        ) : null}
       </View>
       <Text style={{ maxWidth: MEASURE_PX }}>{`${spot.words}.`}</Text>
       <Text size="small" tone="inkSoft" style={{ maxWidth: MEASURE_PX }}>
@@ -62,35 +70,6 @@ export function SpotDetail({ spot, page }: Props) {
       ) : null}
     </View>
   );
-}
-
-function spread({ depthSigmaM }: SpotView, when: string, words: (lengthM: number) => string): string {
-  return depthSigmaM === null
-    ? `deep ${when}`
-    : `deep ${when}, ± ${words(Math.max(0.1, 1.96 * depthSigmaM))}`;
-}
-
-function sureness({ grade, bottomConfidence }: SpotView): string {
-  const parts = [
-    grade && `grade ${grade}`,
-    bottomConfidence !== null && `${sureWords(bottomConfidence)} sure`,
-  ];
-  return parts.filter(Boolean).join(', ') || 'bottom';
-}
-
-/** Nothing on a lake bed is wholly sure. */
-const sureWords = (share: number): string => (share > 0.99 ? `over ${percent(0.99)}` : percent(share));
-
-function provenance(spot: SpotView): string {
-  const parts = [
-    spot.quotedFrom === 'cast'
-      ? 'From a cast that landed here'
-      : spot.quotedFrom === 'chart'
-        ? 'Read off the chart'
-        : null,
-    countedWords(spot),
-  ];
-  return `${parts.filter(Boolean).join(', ')}.`;
 }
 
 function levelWords(raisedM: number, known: boolean, words: (lengthM: number) => string): string {

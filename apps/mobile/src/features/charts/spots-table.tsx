@@ -6,8 +6,8 @@ import { Text } from '@/components/text';
 import { space, target } from '@/constants/layout';
 import { themed } from '@/hooks/themed';
 import { useChartUnits } from './use-chart-units';
-import { depthNow, depthShown } from './depth-format';
-import { aimWords, ownCount } from './spot-words';
+import { depthNow, depthShown } from '@mereward/shared/charts/depth-words';
+import { aimWords, ownCount } from '@mereward/shared/charts/spot-figures';
 
 const useStyles = themed((c) => ({
   head: {

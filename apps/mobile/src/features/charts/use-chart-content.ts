@@ -4,7 +4,7 @@ import type { ChartView } from '@mereward/shared/charts/contract';
 import type { BottomArea } from '@mereward/shared/charts/drawing/bottom-areas';
 import { useChartUnits } from './use-chart-units';
 import type { ShownLayers } from './chart-layers';
-import { stepFor } from './depth-format';
+import { stepFor } from '@mereward/shared/charts/depth-words';
 import type { MapContent } from './map-layers';
 import { sharedLetters } from './peg-words';
 import { bottomOf, layersOf } from '@mereward/shared/charts/drawing/chart-part';

@@ -1,6 +1,7 @@
-import { depthTodayM } from '@mereward/shared/charts/spot-words';
-import { FOOT_M, fromMetres } from '@mereward/shared/units/length';
-import { length } from '@/lib/format';
+import type { LevelNow } from '../lakes/contract';
+import { FOOT_M, fromMetres } from '../units/length';
+import { length } from '../units/length-words';
+import { depthTodayM } from './spot-words';
 
 type LengthUnit = 'm' | 'ft';
 
@@ -35,4 +36,10 @@ export function depthShown(
   return water.levelM === null
     ? { depthM: depthAtDatumM, when: 'at datum' }
     : { depthM: depthTodayM(depthAtDatumM, water.levelM, water.datumM), when: 'today' };
+}
+
+/** The level a peg's depths stand at, for the foot of its chart. `when`: the reading's day and time in words. */
+export function levelLine(levelNow: LevelNow | null, when: string): string {
+  if (!levelNow) return 'no level read yet, so depths are at datum';
+  return `the chart’s depths are at datum; the water stands at ${levelNow.boardReadsM.toFixed(2)} m on ${levelNow.boardCode}, read ${when}`;
 }

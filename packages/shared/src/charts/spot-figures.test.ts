@@ -1,5 +1,5 @@
 import { expect, test } from 'vitest';
-import { aimWords, countedWords, ownCountWords } from './spot-words';
+import { aimWords, countedWords, ownCountWords } from './spot-figures';
 
 const oak = { code: 'M1', name: 'dead oak', offsetDeg: 0.2 };
 

@@ -1,5 +1,5 @@
 import { expect, test } from 'vitest';
-import { depthNow, depthShown, isobathFigure, stepFor } from './depth-format';
+import { depthNow, depthShown, isobathFigure, stepFor } from './depth-words';
 
 test('isobaths carry as many decimals as their step needs', () => {
   expect(isobathFigure(1.5, 0.5, 'm')).toBe('1.5');
