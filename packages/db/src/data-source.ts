@@ -31,6 +31,7 @@ import { ReducedWith1780000003000 } from './migrations/1780000003000-ReducedWith
 import { KeptCasts1780000004000 } from './migrations/1780000004000-KeptCasts';
 import { BottomLearns1780000006000 } from './migrations/1780000006000-BottomLearns';
 import { DeviceKeys1780000012000 } from './migrations/1780000012000-DeviceKeys';
+import { PegCodes1780000009000 } from './migrations/1780000009000-PegCodes';
 
 const ENTITIES = [
   Account,
@@ -68,6 +69,7 @@ const MIGRATIONS = [
   KeptCasts1780000004000,
   BottomLearns1780000006000,
   DeviceKeys1780000012000,
+  PegCodes1780000009000,
 ];
 
 /** A pool of connections to one database, opened by the caller with `initialize()`. */

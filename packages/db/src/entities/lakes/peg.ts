@@ -6,6 +6,7 @@ export class Peg {
   @PrimaryColumn('uuid') id!: string;
   @Column('uuid', { name: 'lake_id' }) lakeId!: string;
   @Column('text') number!: string;
+  @Column({ type: 'text', insert: false, update: false }) code!: string; // given by the database, for ever
   @Column('int', { name: 'walking_order' }) walkingOrder!: number;
   @Column('jsonb') details!: PegDetails;
   @Column('int') version!: number;
