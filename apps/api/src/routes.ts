@@ -1,5 +1,6 @@
 import { accountRoutes } from './accounts/routes';
 import { bookingRoutes } from './bookings/routes';
+import { disagreementRoutes } from './charts/disagreement-routes';
 import { chartRoutes } from './charts/routes';
 import { fisheryRoutes } from './fisheries/routes';
 import { fileRoutes } from './files/routes';
@@ -18,4 +19,5 @@ export const routes: readonly Route[] = [
   ...bookingRoutes,
   ...surveyRoutes,
   ...chartRoutes,
+  ...disagreementRoutes,
 ];

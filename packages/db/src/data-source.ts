@@ -24,12 +24,14 @@ import { SurveyCast } from './entities/surveys/survey-cast';
 import { ChartBuild } from './entities/charts/chart-build';
 import { Spot } from './entities/charts/spot';
 import { Chart } from './entities/charts/chart';
+import { Disagreement } from './entities/charts/disagreement';
 import { AccountsAndFisheries1780000000000 } from './migrations/1780000000000-AccountsAndFisheries';
 import { LakesAndPegs1780000001000 } from './migrations/1780000001000-LakesAndPegs';
 import { SurveysAndCharts1780000002000 } from './migrations/1780000002000-SurveysAndCharts';
 import { ReducedWith1780000003000 } from './migrations/1780000003000-ReducedWith';
 import { KeptCasts1780000004000 } from './migrations/1780000004000-KeptCasts';
 import { BottomLearns1780000006000 } from './migrations/1780000006000-BottomLearns';
+import { Disagreements1780000008000 } from './migrations/1780000008000-Disagreements';
 import { DeviceKeys1780000012000 } from './migrations/1780000012000-DeviceKeys';
 import { PegCodes1780000009000 } from './migrations/1780000009000-PegCodes';
 
@@ -58,6 +60,7 @@ const ENTITIES = [
   ChartBuild,
   Spot,
   Chart,
+  Disagreement,
 ];
 
 /** Every migration in the order it runs. A new one is added at the end, never edited once merged. */
@@ -68,6 +71,7 @@ const MIGRATIONS = [
   ReducedWith1780000003000,
   KeptCasts1780000004000,
   BottomLearns1780000006000,
+  Disagreements1780000008000,
   DeviceKeys1780000012000,
   PegCodes1780000009000,
 ];

@@ -1,9 +1,12 @@
 import { Account } from '@mereward/db/entities/accounts/account';
 import type { Chart } from '@mereward/db/entities/charts/chart';
+import { Disagreement } from '@mereward/db/entities/charts/disagreement';
 import { Fishery } from '@mereward/db/entities/fisheries/fishery';
 import { Lake } from '@mereward/db/entities/lakes/lake';
+import { Peg } from '@mereward/db/entities/lakes/peg';
 import { SurveyCast } from '@mereward/db/entities/surveys/survey-cast';
 import { SurveyVisit } from '@mereward/db/entities/surveys/survey-visit';
+import type { ReportEvidence } from '@mereward/shared/charts/reported-evidence';
 import { civilDay } from '@mereward/shared/time/civil-day';
 import { In, IsNull, type EntityManager } from 'typeorm';
 import { digestOf } from '../digest';
@@ -11,6 +14,7 @@ import type { ObservedCast, VisitSite } from '../surveys/reduce-visit';
 import { visitSite } from '../surveys/visit-site';
 
 export type SourceCast = ObservedCast & { seq: number; lineId: string; observedOn: string };
+export type SourceReport = ReportEvidence & { id: string; pegId: string };
 export type SourceVisit = { site: VisitSite; surveyorName: string; day: string; casts: SourceCast[] };
 
 /** Everything a chart is made from, as it was observed. It survives structured cloning: a thread reads it. */
@@ -19,6 +23,7 @@ export type BuildSource = {
   zone: string;
   contourStepM: number;
   visits: SourceVisit[];
+  reports: SourceReport[]; // what anglers found otherwise and the fishery accepted, by id
 };
 
 type Wanted = Pick<Chart, 'lakeId' | 'visitIds' | 'contourStepM'>;
@@ -51,14 +56,24 @@ export async function buildSource(tx: EntityManager, chart: Wanted): Promise<Bui
           observedOn: civilDay(observedAt, zone),
         })),
     });
-  return { lake, zone, contourStepM: chart.contourStepM, visits: sourced };
+  const reports = await acceptedReports(tx, lake.id);
+  return { lake, zone, contourStepM: chart.contourStepM, visits: sourced, reports };
+}
+
+async function acceptedReports(tx: EntityManager, lakeId: string): Promise<SourceReport[]> {
+  const pegs = await tx.find(Peg, { where: { lakeId }, select: { id: true } });
+  const rows = await tx.find(Disagreement, {
+    where: { pegId: In(pegs.map(({ id }) => id)), status: 'accepted' },
+    order: { id: 'ASC' },
+  });
+  return rows.flatMap(({ id, pegId, evidence }) => (evidence ? [{ id, pegId, ...evidence }] : []));
 }
 
 /**
  * A digest of everything that decides how the chart comes out, and of nothing else: the same digest, the same chart.
  * Names and notes are no part of it.
  */
-export function sourceDigest({ lake, contourStepM, visits }: BuildSource): Buffer {
+export function sourceDigest({ lake, contourStepM, visits, reports }: BuildSource): Buffer {
   const decides = {
     outline: lake.details.outline,
     origin: [lake.originLon, lake.originLat],
@@ -79,6 +94,7 @@ export function sourceDigest({ lake, contourStepM, visits }: BuildSource): Buffe
         observation,
       ]),
     })),
+    ...(reports.length > 0 ? { reports } : {}), // a chart without any digests as before there were reports
   };
   return digestOf(decides);
 }

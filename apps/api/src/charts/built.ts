@@ -42,6 +42,21 @@ export const BuiltVisit = z.object({
 });
 export type BuiltVisit = z.infer<typeof BuiltVisit>;
 
+/** An accepted report as a chart keeps it: evidence with a grade of its own, and nobody's name. */
+export const BuiltReport = z.object({
+  id: z.uuid(), // of the report
+  pegId: z.uuid(),
+  observedOn: z.iso.date(),
+  xM: z.number(),
+  yM: z.number(),
+  ellipse: z.object({ semiMajorM: z.number(), semiMinorM: z.number(), bearingDeg: z.number() }),
+  depthM: z.number().nullable(), // below datum
+  sigmaM: z.number().nullable(),
+  grade: Grade,
+  bottom: Bottom,
+});
+export type BuiltReport = z.infer<typeof BuiltReport>;
+
 const Lines = z.array(z.object({ levelM: z.number(), lines: z.array(z.array(z.number())) }));
 
 /** The `built` column of a chart: everything of it that is not a grid. */
@@ -63,6 +78,7 @@ export const Built = z.object({
     surveyedShare: z.number(),
   }),
   quality: QualityView,
+  reports: z.array(BuiltReport).default([]), // what anglers found otherwise and the fishery accepted
   checks: z.array(CheckView).default([]), // of what it was made from
 });
 export type Built = z.infer<typeof Built>;

@@ -79,17 +79,20 @@ export function layersFor(
     isobaths: sees.depth ? built.isobaths : null,
     substrate: sees.bottom ? toBase64(substrate) : null,
     cover: sees.bottom ? toBase64(cover) : null,
-    soundings: sees.soundings ? soundingsFor(built.soundings, { bottom: sees.bottom, staff }) : null,
+    soundings: sees.soundings ? soundingsFor(built, { bottom: sees.bottom, staff }) : null,
     hypsography: sees.depth ? built.hypsography : null,
     figures: sees.depth ? built.figures : null,
   };
 }
 
 function soundingsFor(
-  soundings: ChartContent['built']['soundings'],
+  { soundings, reports }: ChartContent['built'],
   sees: { bottom: boolean; staff: boolean },
 ): ChartView['soundings'] {
-  return soundings
+  const measured = reports.flatMap(({ depthM, sigmaM, ...report }) =>
+    depthM === null || sigmaM === null ? [] : [{ ...report, depthM, sigmaM }],
+  );
+  return [...soundings, ...measured]
     .filter((sounding) => sees.staff || sounding.grade !== 'D')
     .map(({ id, xM, yM, depthM, sigmaM, bottom, grade }) => ({
       id,

@@ -3,7 +3,7 @@ import { encodeClasses, encodeDepth, encodeSigma } from '@mereward/shared/charts
 import type { GridFrame } from '@mereward/shared/charts/contract';
 import type { SoundingView } from '@mereward/shared/surveys/contract';
 import { reduceAll } from '../surveys/reduce-visit';
-import type { BuildSource, SourceCast, SourceVisit } from './build-source';
+import type { BuildSource, SourceCast, SourceReport, SourceVisit } from './build-source';
 import type { Built, BuiltSounding } from './built';
 import { sourceChecks, type Reductions } from './source-checks';
 
@@ -33,7 +33,10 @@ export function makeChart(source: BuildSource, report: (step: string, share: num
   if (!outline) throw new RangeError('The visits of this chart are gone. Make a new draft.');
   const input: ChartInput = {
     outline,
-    soundings: reduced.map(({ view, built }) => ({ ...built, substrate: view.substrate, cover: view.cover })),
+    soundings: [
+      ...reduced.map(({ view, built }) => ({ ...built, substrate: view.substrate, cover: view.cover })),
+      ...source.reports.flatMap(measuredReport),
+    ],
     contourStepM: source.contourStepM,
     maxGapM: lake.details.maxGapM,
   };
@@ -56,11 +59,23 @@ export function makeChart(source: BuildSource, report: (step: string, share: num
       hypsography: chart.hypsography,
       figures: shownFigures(chart.figures),
       quality: chart.quality,
+      reports: source.reports.map(builtReport),
       checks: sourceChecks(source, answers),
     },
     surveyedFrom: days[0] ?? '',
     surveyedTo: days.at(-1) ?? '',
   };
+}
+
+/** A report with a depth stands among the soundings, by its own grade. */
+function measuredReport(report: SourceReport): ChartInput['soundings'] {
+  const { depthM, sigmaM } = report;
+  return depthM === null || sigmaM === null ? [] : [{ ...report, depthM, sigmaM }];
+}
+
+function builtReport(report: SourceReport): Built['reports'][number] {
+  const { id, pegId, observedOn, xM, yM, ellipse, depthM, sigmaM, grade, bottom } = report;
+  return { id, pegId, observedOn, xM, yM, ellipse, depthM, sigmaM, grade, bottom };
 }
 
 type ReducedCast = { view: SoundingView; built: BuiltSounding };

@@ -27,6 +27,9 @@ function limit({ windowS, most, onlyRefused = false, key }: Limit): RequestHandl
 /** For what is drawn anew for each asking, such as a printed card, by network address. */
 export const limitDrawings = (): RequestHandler => limit({ windowS: 60, most: 60 });
 
+/** For what a person types and sends for others to read, by network address: a lodge full of anglers shares one. */
+export const limitReports = (): RequestHandler => limit({ windowS: 60, most: 60 });
+
 const QUARTER_S = 15 * 60;
 
 /** For everything: far above what a person does, below what harms the rest. */
