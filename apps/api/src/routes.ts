@@ -7,6 +7,7 @@ import { fileRoutes } from './files/routes';
 import type { Route } from './http/route';
 import { photoRoutes } from './lakes/photo-routes';
 import { lakeRoutes } from './lakes/routes';
+import { waterRoutes } from './lakes/water-routes';
 import { surveyRoutes } from './surveys/routes';
 
 /** Every route of the API, word by word. */
@@ -14,6 +15,7 @@ export const routes: readonly Route[] = [
   ...accountRoutes,
   ...fisheryRoutes,
   ...lakeRoutes,
+  ...waterRoutes,
   ...photoRoutes,
   ...fileRoutes,
   ...bookingRoutes,

@@ -12,6 +12,7 @@ import { Peg } from './entities/lakes/peg';
 import { Mark } from './entities/lakes/mark';
 import { GaugeBoard } from './entities/lakes/gauge-board';
 import { LevelReading } from './entities/lakes/level-reading';
+import { WaterArea } from './entities/lakes/water-area';
 import { Photo } from './entities/files/photo';
 import { Booking } from './entities/bookings/booking';
 import { SurveyVisit } from './entities/surveys/survey-visit';
@@ -34,6 +35,7 @@ import { BottomLearns1780000006000 } from './migrations/1780000006000-BottomLear
 import { Disagreements1780000008000 } from './migrations/1780000008000-Disagreements';
 import { DeviceKeys1780000012000 } from './migrations/1780000012000-DeviceKeys';
 import { PegCodes1780000009000 } from './migrations/1780000009000-PegCodes';
+import { WaterAreas1780000007000 } from './migrations/1780000007000-WaterAreas';
 
 const ENTITIES = [
   Account,
@@ -48,6 +50,7 @@ const ENTITIES = [
   Mark,
   GaugeBoard,
   LevelReading,
+  WaterArea,
   Photo,
   Booking,
   SurveyVisit,
@@ -74,6 +77,7 @@ const MIGRATIONS = [
   Disagreements1780000008000,
   DeviceKeys1780000012000,
   PegCodes1780000009000,
+  WaterAreas1780000007000,
 ];
 
 /** A pool of connections to one database, opened by the caller with `initialize()`. */

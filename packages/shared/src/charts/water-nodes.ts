@@ -1,38 +1,8 @@
 import type { Outline } from '../geometry/polygon';
 import { ringsOf } from '../geometry/polygon';
-import type { Point } from '../geometry/plane';
+export { waterNodes } from '../geometry/water-cells';
 import { columnXM, rowYM } from './grid';
 import type { GridFrame } from './grid';
-
-/** 1 for every node on the water (inside the shore, on no island), 0 elsewhere; even-odd, one sweep a row. */
-export function waterNodes(outline: Outline, frame: GridFrame): Uint8Array {
-  const water = new Uint8Array(frame.columns * frame.rows);
-  const rings = ringsOf(outline);
-  for (let row = 0; row < frame.rows; row++) {
-    const crossings = crossingsAt(rings, rowYM(frame, row));
-    for (let i = 0; i + 1 < crossings.length; i += 2) {
-      const first = Math.max(0, Math.ceil((crossings[i]! - frame.originM.xM) / frame.cellM));
-      const last = Math.min(
-        frame.columns - 1,
-        Math.floor((crossings[i + 1]! - frame.originM.xM) / frame.cellM),
-      );
-      if (first <= last) water.fill(1, row * frame.columns + first, row * frame.columns + last + 1);
-    }
-  }
-  return water;
-}
-
-function crossingsAt(rings: readonly Point[][], yM: number): number[] {
-  const crossings: number[] = [];
-  for (const ring of rings) {
-    let b = ring[ring.length - 1]!;
-    for (const a of ring) {
-      if (a.yM > yM !== b.yM > yM) crossings.push(a.xM + ((yM - a.yM) / (b.yM - a.yM)) * (b.xM - a.xM));
-      b = a;
-    }
-  }
-  return crossings.sort((x, y) => x - y);
-}
 
 /** 1 for every node off the water with a water node among its eight neighbours: the rim that lines run out over. */
 export function rimNodes(water: Uint8Array, { columns, rows }: GridFrame): Uint8Array {
