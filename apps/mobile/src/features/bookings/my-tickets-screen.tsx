@@ -42,7 +42,10 @@ function MyTickets() {
   const tickets = useMyTickets(true);
   const [nowMs] = useState(() => Date.now());
   return (
-    <Section title="My tickets">
+    <Section
+      title="My tickets"
+      end={<LinkButton label="What I told of the water" href="/tickets/disagreements" kind="quiet" />}
+    >
       <Loaded
         query={tickets}
         waiting="Reading your tickets…"

@@ -1,3 +1,4 @@
+import { View } from 'react-native';
 import { Empty } from '@/components/empty';
 import { LinkButton } from '@/components/link-button';
 import { Loaded } from '@/components/loaded';
@@ -29,7 +30,16 @@ export function OfficeChartsScreen() {
           ),
         }}
       >
-        {() => lakes.map((lake) => <LakeCharts key={lake.id} lakeId={lake.id} name={lake.name} />)}
+        {() => (
+          <>
+            <View style={{ alignItems: 'flex-start' }}>
+              <LinkButton label="What anglers found otherwise" href="/office/charts/disagreements" />
+            </View>
+            {lakes.map((lake) => (
+              <LakeCharts key={lake.id} lakeId={lake.id} name={lake.name} />
+            ))}
+          </>
+        )}
       </Loaded>
     </Page>
   );

@@ -12,6 +12,7 @@ import { ProblemNote } from '@/components/problem-note';
 import { Section } from '@/components/section';
 import { Text } from '@/components/text';
 import { Waiting } from '@/components/waiting';
+import { disagreementsOfLake } from '@/features/charts/disagreement-api';
 import { officeTasks } from '@/features/charts/office-tasks';
 import { reviewKeys } from '@/features/charts/review-api';
 import { OFFICE_ROLES, useMyFisheries } from '@/features/fisheries/use-my-fisheries';
@@ -86,6 +87,7 @@ function Tasks({ fishery }: { fishery: FisheryListItem }) {
       queryFn: () => api.get(`/lakes/${id}/charts`, ChartList),
     })),
   });
+  const reports = useQueries({ queries: fishery.lakes.map(({ id }) => disagreementsOfLake(id)) });
   if (fishery.lakes.length === 0)
     return (
       <Empty
@@ -97,10 +99,19 @@ function Tasks({ fishery }: { fishery: FisheryListItem }) {
         Everything starts with the shore of a lake.
       </Empty>
     );
-  const fault = [...lakes, ...charts].find(({ error, data }) => error && data === undefined)?.error;
-  const waiting = [...lakes, ...charts].some(({ isPending }) => isPending);
+  const fault = [...lakes, ...charts, ...reports].find(
+    ({ error, data }) => error && data === undefined,
+  )?.error;
+  const waiting = [...lakes, ...charts, ...reports].some(({ isPending }) => isPending);
   const tasks = lakes.flatMap(({ data: lake }, i) =>
-    lake ? officeTasks({ lake, charts: charts[i]?.data?.charts ?? [], nowMs }) : [],
+    lake
+      ? officeTasks({
+          lake,
+          charts: charts[i]?.data?.charts ?? [],
+          reports: reports[i]?.data?.disagreements ?? [],
+          nowMs,
+        })
+      : [],
   );
   return (
     <>

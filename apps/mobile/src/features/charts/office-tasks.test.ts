@@ -108,7 +108,7 @@ const chart = (status: ChartListItem['status']): ChartListItem => ({
 });
 
 const titles = (lake: LakeView, charts: ChartListItem[]): string[] =>
-  officeTasks({ lake, charts, nowMs: NOW }).map(({ title }) => title);
+  officeTasks({ lake, charts, reports: [], nowMs: NOW }).map(({ title }) => title);
 
 test('a lake that is read, pegged and published wants nothing', () => {
   expect(titles(lakeOf({}), [chart('published')])).toEqual([]);
@@ -126,6 +126,7 @@ test('a lake without a chart is told to everybody; who may not draft one is told
   const [task] = officeTasks({
     lake: lakeOf({ may: { ...may, buildCharts: false } }),
     charts: [],
+    reports: [],
     nowMs: NOW,
   });
   expect(task).toMatchObject({ title: 'Long Water has no chart', href: '/office/charts' });
@@ -146,4 +147,14 @@ test('a board read a fortnight ago is left alone, a day later it is asked for', 
     lakeOf({ levelNow: { levelM: 0.6, at, boardCode: 'GB1', boardReadsM: 0.6 } });
   expect(titles(readAt('2027-04-17T12:00:00Z'), [chart('published')])).toEqual([]);
   expect(titles(readAt('2027-04-16T12:00:00Z'), [chart('published')])).toEqual(['Read GB1 on Long Water']);
+});
+
+test('reports that wait are counted together, and those decided no longer ask', () => {
+  const lake = lakeOf({});
+  const asked = (reports: { status: 'waiting' | 'accepted' | 'declined' }[]) =>
+    officeTasks({ lake, charts: [], reports, nowMs: NOW }).map(({ title }) => title);
+  const waiting = { status: 'waiting' } as const;
+  expect(asked([waiting, { status: 'accepted' }])).toContain('An angler found Long Water not as charted');
+  expect(asked([waiting, waiting])).toContain('2 reports that Long Water is not as charted');
+  expect(asked([{ status: 'declined' }]).filter((title) => /as charted/.test(title))).toEqual([]);
 });

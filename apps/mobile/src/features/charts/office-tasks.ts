@@ -1,4 +1,5 @@
 import type { ChartListItem } from '@mereward/shared/charts/contract';
+import type { DisagreementForReview } from '@mereward/shared/charts/disagreement';
 import type { LakeView } from '@mereward/shared/lakes/contract';
 import { ago } from '@/lib/format-time';
 
@@ -8,12 +9,18 @@ export type OfficeTask = { key: string; title: string; note: string; href: `/${s
 const READ_EVERY_DAYS = 14; // older than this, a depth "today" says little: common practice, no published source
 const DAY_MS = 86_400_000;
 
-type Known = { lake: LakeView; charts: readonly ChartListItem[]; nowMs: number };
+type Known = {
+  lake: LakeView;
+  charts: readonly ChartListItem[];
+  reports: readonly Pick<DisagreementForReview, 'status'>[];
+  nowMs: number;
+};
 
 /** What a lake and its charts want next, the most pressing first. */
-export function officeTasks({ lake, charts, nowMs }: Known): OfficeTask[] {
+export function officeTasks({ lake, charts, reports, nowMs }: Known): OfficeTask[] {
   return [
     ...charts.flatMap((chart) => chartTask(lake, chart)),
+    ...reportTask(lake, reports),
     ...missingTasks(lake),
     ...levelTask(lake, nowMs),
     ...(charts.length === 0 && lake.pegs.length > 0 ? [firstChartTask(lake)] : []),
@@ -30,6 +37,17 @@ function chartTask({ details, may }: LakeView, chart: ChartListItem): OfficeTask
   if (chart.status === 'draft' && may.buildCharts)
     return [{ ...at, title: `${which} is a draft`, note: 'Look it over and submit it' }];
   return [];
+}
+
+function reportTask({ id, details }: LakeView, reports: Known['reports']): OfficeTask[] {
+  const waiting = reports.filter(({ status }) => status === 'waiting').length;
+  if (waiting === 0) return [];
+  const title =
+    waiting === 1
+      ? `An angler found ${details.name} not as charted`
+      : `${waiting} reports that ${details.name} is not as charted`;
+  const href = '/office/charts/disagreements';
+  return [{ key: `${id}.reports`, title, note: 'Hold them against the casts, then accept or decline', href }];
 }
 
 function missingTasks({ id, details: { name }, pegs, boards, marks, may }: LakeView): OfficeTask[] {

@@ -30,6 +30,7 @@ import { PegPhotos } from './peg-photos';
 import { PEG_STATUS, pegTitle } from './peg-words';
 import { SpotDetail } from './spot-detail';
 import { SpotsTable } from './spots-table';
+import { TalkBack } from './talk-back';
 
 function InFront({ page }: { page: PegPageView }) {
   const [spotId, setSpotId] = useState<string | null>(null);
@@ -49,6 +50,7 @@ function InFront({ page }: { page: PegPageView }) {
         />
       </View>
       {spot ? <SpotDetail spot={spot} page={page} /> : null}
+      <TalkBack pegId={page.id} spotId={spot?.id ?? null} />
       {spots.length ? (
         <Section title="Spots from this peg" bare>
           <SpotsTable spots={spots} spotId={spot?.id ?? null} onSpot={setSpotId} water={water} />

@@ -1,0 +1,1 @@
+export { DisagreementsScreen as default } from '@/features/charts/disagreements-screen';

@@ -1,0 +1,1 @@
+export { MyDisagreementsScreen as default } from '@/features/charts/my-disagreements-screen';

@@ -1,0 +1,1 @@
+export { DisagreeScreen as default } from '@/features/charts/disagree-screen';
