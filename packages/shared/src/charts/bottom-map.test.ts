@@ -1,5 +1,11 @@
 import { describe, expect, test } from 'vitest';
-import { bottomMap, chooseBandwidthM, UNKNOWN_CLASS, USUAL_BANDWIDTH_M } from './bottom-map';
+import {
+  bottomMap,
+  chooseBandwidth,
+  UNKNOWN_CLASS,
+  USUAL_BANDWIDTH_M,
+  type BottomEvidence,
+} from './bottom-map';
 
 const frame = { columns: 60, rows: 1, cellM: 1, originM: { xM: 0, yM: 0 } };
 const nodes = {
@@ -31,12 +37,13 @@ describe('the bottom between casts', () => {
   });
 
   test('the bandwidth follows the size of the patches', () => {
+    const chosenM = (evidence: BottomEvidence[]) => chooseBandwidth(evidence).bandwidthM;
     const patches = (widthM: number) =>
       Array.from({ length: 60 }, (_, i) =>
         cast(2 * i, Math.floor((2 * i) / widthM) % 2 === 0 ? [0.9, 0.1] : [0.1, 0.9]),
       );
-    expect(chooseBandwidthM(patches(10))).toBeLessThan(chooseBandwidthM(patches(60)));
-    expect(chooseBandwidthM(patches(60))).toBeLessThan(chooseBandwidthM(patches(120)));
-    expect(chooseBandwidthM(patches(4).slice(0, 9))).toBe(USUAL_BANDWIDTH_M);
+    expect(chosenM(patches(10))).toBeLessThan(chosenM(patches(60)));
+    expect(chosenM(patches(60))).toBeLessThan(chosenM(patches(120)));
+    expect(chosenM(patches(4).slice(0, 9))).toBe(USUAL_BANDWIDTH_M);
   });
 });

@@ -1,9 +1,10 @@
 import type { Outline } from '../geometry/polygon';
 import { outlineAreaM2, perimeterM } from '../geometry/polygon';
-import { Cover, Substrate } from '../surveys/contract';
 import type { CoverShares, SubstrateShares } from '../surveys/contract';
-import { bottomMap, chooseBandwidthM } from './bottom-map';
-import type { BottomNodes, ClassGrid } from './bottom-map';
+import { bottomLayers } from './bottom-layers';
+import type { FeltBottom } from './bottom-layers';
+import type { ClassGrid } from './bottom-map';
+import type { FeltPlace } from './cast-kernel';
 import type { QualityView } from './contract';
 import type { GridFrame, Grid } from './grid';
 import { chooseCellM, frameOver } from './grid';
@@ -23,7 +24,9 @@ import { placesOf, shoreDistancesM } from './water-nodes';
 
 export type ChartInput = {
   outline: Outline;
-  soundings: (ChartSounding & { substrate: SubstrateShares | null; cover: CoverShares | null })[];
+  soundings: (ChartSounding &
+    Pick<FeltPlace, 'spread' | 'track'> & { substrate: SubstrateShares | null; cover: CoverShares | null })[];
+  alsoFelt?: readonly FeltBottom[]; // casts that read no depth, and confirmed bottoms: for the bottom maps alone
   contourStepM: number;
   maxGapM: number; // widest gap between casts that is still drawn, 15 m at most
   cellM?: number; // default: the smallest of 0.5–5 m that fits 400 × 400
@@ -47,7 +50,6 @@ export type BuiltChart = {
   tints: Isobath[]; // closed rings to paint in order; see deeperRegions
   substrate: ClassGrid; // classes in the order of Substrate.options
   cover: ClassGrid; // classes in the order of Cover.options
-  bottomBandwidthM: { substrate: number; cover: number };
   hypsography: HypsographicStep[];
   figures: ChartFigures;
   quality: QualityView;
@@ -92,10 +94,13 @@ export function buildChart(input: ChartInput, report: (step: string, share: numb
   const lines = isobaths(surface.withRim, levels);
   const tints = deeperRegions(surface.withRim, levels);
   report('Mapping the bottom', 0.9);
-  const bottoms = mapBottoms(input, surface, frame);
+  const { bottom, ...bottoms } = mapBottoms(input, surface, frame);
   report('Measuring the water', 0.97);
   const measured = measureWater(input, surface);
-  const quality = qualityOf(samples, chosen, measured.figures.surveyedShare);
+  const quality = {
+    ...qualityOf(samples, chosen, measured.figures.surveyedShare),
+    bottom,
+  };
   report('Done', 1);
   return {
     frame,
@@ -111,33 +116,9 @@ export function buildChart(input: ChartInput, report: (step: string, share: numb
   };
 }
 
-function mapBottoms(input: ChartInput, surface: ChartSurface, frame: GridFrame) {
+function mapBottoms({ soundings, alsoFelt = [] }: ChartInput, surface: ChartSurface, frame: GridFrame) {
   const nodes = { frame, nodes: placesOf(surface.surveyed, frame).nodes };
-  const sorted = [...input.soundings]
-    .filter((s) => s.grade === 'A' || s.grade === 'B')
-    .sort((a, b) => (a.id < b.id ? -1 : 1));
-  const substrate = classMap(
-    sorted.flatMap(({ xM, yM, substrate: shares }) =>
-      shares === null ? [] : [{ xM, yM, shares: Substrate.options.map((kind) => shares[kind]) }],
-    ),
-    nodes,
-  );
-  const cover = classMap(
-    sorted.flatMap(({ xM, yM, cover: shares }) =>
-      shares === null ? [] : [{ xM, yM, shares: Cover.options.map((kind) => shares[kind]) }],
-    ),
-    nodes,
-  );
-  return {
-    substrate: substrate.map,
-    cover: cover.map,
-    bottomBandwidthM: { substrate: substrate.bandwidthM, cover: cover.bandwidthM },
-  };
-}
-
-function classMap(evidence: Parameters<typeof bottomMap>[0], nodes: BottomNodes) {
-  const bandwidthM = chooseBandwidthM(evidence);
-  return { bandwidthM, map: bottomMap(evidence, nodes, bandwidthM) };
+  return bottomLayers([...soundings, ...alsoFelt], nodes);
 }
 
 function measureWater(

@@ -3,6 +3,7 @@ import { Position, Version } from '../fisheries/contract';
 import { LakePolygon, LevelNow, PhotoView } from '../lakes/contract';
 import { PlaceWater } from '../lakes/peg-water-contract';
 import { Bottom, Cover, Grade, Substrate } from '../surveys/contract';
+import { BottomQualityView } from './bottom-quality-contract';
 import { SoundingMiss, SoundingMissView } from './sounding-miss';
 
 /** draft → submitted → approved by another → published; then superseded by the next, or withdrawn. */
@@ -52,6 +53,7 @@ export const QualityView = z.object({
   variogram: z.object({ model: z.string(), nugget: z.number(), sill: z.number(), rangeM: z.number() }),
   models: z.array(z.object({ model: z.string(), rmseM: z.number(), standardisedVariance: z.number() })),
   words: z.string(), // which model and why
+  bottom: BottomQualityView.optional(), // charts built before it was kept have none
 });
 export type QualityView = z.infer<typeof QualityView>;
 
