@@ -8,6 +8,7 @@ import type { Route } from './http/route';
 import { photoRoutes } from './lakes/photo-routes';
 import { lakeRoutes } from './lakes/routes';
 import { waterRoutes } from './lakes/water-routes';
+import { bottomRoutes } from './surveys/bottom-routes';
 import { surveyRoutes } from './surveys/routes';
 
 /** Every route of the API, word by word. */
@@ -20,6 +21,7 @@ export const routes: readonly Route[] = [
   ...fileRoutes,
   ...bookingRoutes,
   ...surveyRoutes,
+  ...bottomRoutes,
   ...chartRoutes,
   ...disagreementRoutes,
 ];

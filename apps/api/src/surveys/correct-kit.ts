@@ -3,6 +3,7 @@ import { Problem } from '@mereward/shared/problems/problem';
 import type { CorrectKit, VisitView } from '@mereward/shared/surveys/contract';
 import type { Ctx } from '../ctx';
 import { visitToKeep } from './find-visit';
+import { refuseWrongLead } from './kit-lead';
 import { reduceVisitAgain } from './reduce-again';
 import { visitView } from './visit-view';
 
@@ -18,6 +19,7 @@ export async function correctKit(
     throw new Problem('conflict', 'Someone changed this meanwhile', {
       detail: 'Look at the visit as it is now, then correct it again.',
     });
+  await refuseWrongLead(tx, lake.fisheryId, kit);
   const corrected = Object.assign(visit, { kit, version: version + 1 });
   await tx.update(SurveyVisit, { id: visitId }, { kit, version: version + 1 });
   await reduceVisitAgain(tx, { visit: corrected, lake });

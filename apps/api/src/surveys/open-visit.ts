@@ -8,6 +8,7 @@ import { insertOnce, plain } from '../repeat';
 import { refuseWrongClock } from '../wrong-clock';
 import { CLOCK_OUT_MS } from './cast-time';
 import { lakeFor } from './find-visit';
+import { refuseWrongLead } from './kit-lead';
 import { visitView } from './visit-view';
 
 /** Opens a survey visit. Sent twice, it is opened once. */
@@ -29,6 +30,7 @@ export async function openVisit(ctx: Ctx, lakeId: string, input: OpenVisit): Pro
   if (known) return visitView(ctx, { visit: sameVisit(known, visit), lake });
   const { startedAt: at } = visit;
   refuseWrongClock({ at, now, pointer: '/startedAt', what: 'visit', fastMs: CLOCK_OUT_MS });
+  await refuseWrongLead(tx, lake.fisheryId, input.kit);
   const board = await tx.findOneBy(GaugeBoard, { id: input.boardId });
   if (board?.lakeId !== lakeId)
     throw wrongBoard('That gauge board is not on this lake. Choose one of its boards.');

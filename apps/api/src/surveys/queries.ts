@@ -1,6 +1,8 @@
 import { Account } from '@mereward/db/entities/accounts/account';
 import { SurveyVisit } from '@mereward/db/entities/surveys/survey-visit';
 import type { CastView, VisitList, VisitWithCasts } from '@mereward/shared/surveys/contract';
+import type { Reducing } from '@mereward/shared/surveys/reducing-contract';
+import { USUAL_FEEL } from '@mereward/shared/surveys/usual-feel';
 import { In } from 'typeorm';
 import type { Ctx } from '../ctx';
 import { castView } from './cast-view';
@@ -8,6 +10,7 @@ import { coverageOf } from './coverage';
 import { lakeFor, visitToRead } from './find-visit';
 import { mayKeepCasts } from './policy';
 import { castsToday } from './reduce-again';
+import type { VisitSite } from './reduce-visit';
 import { visitSite } from './visit-site';
 import { shapeVisit, visitView } from './visit-view';
 
@@ -49,8 +52,16 @@ export async function readVisit(ctx: Ctx, visitId: string): Promise<VisitWithCas
     visit: await visitView(ctx, found),
     casts: casts.map((cast) => withoutSteps(castView(cast))),
     coverage: coverageOf(site, casts),
+    reducing: reducingOf(site),
   };
 }
+
+/** What a phone needs beside the kit to reduce alike; the built-in table it has already. */
+const reducingOf = ({ table, lead }: VisitSite): Reducing => ({
+  tableVersion: table.version,
+  feel: table.feel === USUAL_FEEL ? null : table.feel,
+  lead,
+});
 
 /** Steps are three quarters of a cast's bytes, and whoever opens one can work them out: the reduction is shared. */
 const withoutSteps = (cast: CastView): CastView => ({ ...cast, reduced: { ...cast.reduced, steps: [] } });

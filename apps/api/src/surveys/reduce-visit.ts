@@ -8,6 +8,8 @@ import { reduceCast } from '@mereward/shared/surveys/cast-reduction';
 import type { CastSite, VisitGauge } from '@mereward/shared/surveys/cast-site';
 import type { CastObservation, Reduced } from '@mereward/shared/surveys/contract';
 import { stanceSigmaM } from '@mereward/shared/surveys/error-budget';
+import type { LeadCalibration } from '@mereward/shared/surveys/lead-fall';
+import type { FeelInForce } from './bottom-feel';
 
 /** What the casts of one visit are reduced against, loaded once. */
 export type VisitSite = {
@@ -18,6 +20,8 @@ export type VisitSite = {
   gauge: VisitGauge;
   pegs: ReadonlyMap<string, Peg>;
   marks: ReadonlyMap<string, Mark>;
+  table: FeelInForce;
+  lead: LeadCalibration | null; // of the lead the visit's kit names
 };
 
 export type ObservedCast = { id: string; pegId: string; observedAt: Date; observation: CastObservation };
@@ -48,8 +52,9 @@ export function reduceAt(site: VisitSite, cast: ObservedCast, others: readonly C
       : null,
     gauge: site.gauge,
     observedAt: cast.observedAt.toISOString(),
-    lead: null, // a lead's own rate of fall is not kept yet; counted falls are shown and never plotted
+    lead: site.lead,
     earlier: others,
+    tables: site.table.feel,
   };
   return reduceCast(cast.observation, site.visit.kit, castSite);
 }

@@ -5,7 +5,9 @@ import { outlineInPlane } from '@mereward/shared/geometry/outline';
 import type { EntityManager } from 'typeorm';
 import { digestOf } from '../digest';
 import { originOfLake } from '../lakes/found';
+import { feelInForce } from './bottom-feel';
 import type { VisitFound } from './find-visit';
+import { leadOfKit } from './kit-lead';
 import type { VisitSite } from './reduce-visit';
 
 /** Loads what the casts of a visit are reduced against. */
@@ -29,13 +31,17 @@ export async function visitSite(tx: EntityManager, { visit, lake }: VisitFound):
     },
     pegs: new Map(pegs.map((peg) => [peg.id, peg])),
     marks: new Map(marks.map((mark) => [mark.id, mark])),
+    table: await feelInForce(tx, lake.fisheryId),
+    lead: await leadOfKit(tx, lake.fisheryId, visit.kit),
   };
 }
 
 /** A digest of all that a visit's casts are reduced with: when it differs, they have to be reduced again. */
-export function siteDigest({ visit, lake, gauge, origin, pegs, marks }: VisitSite): Buffer {
+export function siteDigest({ visit, lake, gauge, origin, pegs, marks, table, lead }: VisitSite): Buffer {
   return digestOf({
     kit: visit.kit,
+    lead,
+    tables: [table.feel.substrate, table.feel.cover],
     gauge,
     origin,
     outline: lake.details.outline,

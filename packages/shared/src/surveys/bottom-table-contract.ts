@@ -8,7 +8,7 @@ const FeltDrag = Drag.exclude(['unsure']);
 /** How far a row's sum may be from 1 and still be a row of shares typed by hand. */
 const ROUNDING = 1e-6;
 /** A likelihood of nothing would let one feel overrule all others for ever. */
-export const LEAST_LIKELIHOOD = 0.001;
+export const LEAST_LIKELIHOOD = 0.0001;
 
 const Share = z
   .number()

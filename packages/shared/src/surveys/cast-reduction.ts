@@ -144,7 +144,7 @@ function bottomOf(
   const stops = site.earlier.filter(({ drag }) => cast.drag === 'solid_stop' && drag === 'solid_stop');
   const earlier = stops.map((stop) => ({ aim: stop.aim, drag: stop.drag, lineOutM: lineOutM(stop, kit) }));
   const here = { aim: cast.aim, drag: cast.drag, lineOutM: position.lineOutM };
-  return bottomEvidence(cast, { here, earlier });
+  return bottomEvidence(cast, { here, earlier }, site.tables);
 }
 
 /** A number that is not one can only come from a broken import; it is named rather than spread. */

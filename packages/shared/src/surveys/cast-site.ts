@@ -2,6 +2,7 @@ import type { LonLat } from '../geometry/plane';
 import type { Outline } from '../geometry/polygon';
 import type { MarkDetails } from '../lakes/contract';
 import type { CastObservation } from './contract';
+import type { BottomTables } from './bottom-evidence';
 import type { LeadCalibration } from './lead-fall';
 
 /** The place on a peg where the angler stands. */
@@ -40,6 +41,7 @@ export type CastSite = {
   observedAt: string;
   lead: LeadCalibration | null; // of this very lead and line, for a counted fall
   earlier: readonly CastObservation[]; // the peg's other casts: a snag takes two solid stops at one place
+  tables?: BottomTables | undefined; // the fishery's likelihoods in force; none: the built-in
 };
 
 /** Why something can't be worked out, and what to do about it, in words for the person at the water. */

@@ -281,6 +281,7 @@ export const VisitWithCasts = z.object({
   visit: VisitView,
   casts: z.array(CastView),
   coverage: z.array(ArcCoverage),
+  reducing: z.unknown().optional(), // Reducing (surveys/reducing-contract), parsed by the client
 });
 export type VisitWithCasts = z.infer<typeof VisitWithCasts>;
 
