@@ -78,6 +78,7 @@ function OutlineForm({ lake }: { lake: LakeView }) {
         origin={origin}
         under={under}
         error={sketch.fieldState.error?.message}
+        keptAs={id}
       />
       <DraftFormFrame
         form={form}

@@ -87,7 +87,7 @@ function MakeLakeForm({ fishery }: { fishery: FisheryListItem }) {
     <>
       <Section
         title="The shore"
-        note="Read it from a GeoJSON or GPX file, tap round it here, or type its points."
+        note="Walk round it with a phone, read it from a GeoJSON or GPX file, tap round it here, or type its points."
         bare
       >
         <OutlineEditor
@@ -96,6 +96,7 @@ function MakeLakeForm({ fishery }: { fishery: FisheryListItem }) {
           origin={origin}
           under={NO_BACKDROP}
           error={sketch.fieldState.error?.message}
+          keptAs={`new:${fishery.id}`}
         />
         {isDrawn ? null : (
           <Field

@@ -18,7 +18,9 @@ import {
   workMarks,
   closedMarks,
 } from '@/features/charts/outline-drawing';
+import { OutlineWalk } from '@/features/charts/outline-walk';
 import { useSketch } from '@/features/charts/use-sketch';
+import { frameWithWalk, planeWalk, walkMarks } from '@/features/charts/walk-drawing';
 import {
   addPlace,
   closeRing,
@@ -33,6 +35,7 @@ import {
   startIsland,
   type Sketch,
 } from '@/features/lakes/outline-sketch';
+import { useShoreWalk } from '@/features/lakes/use-shore-walk';
 import { positionText } from '@/lib/position-text';
 import { useWide } from '@/hooks/use-wide';
 
@@ -44,6 +47,8 @@ type Props = {
   /** Pegs and marks that stand already. */
   under: Draw;
   error?: string | undefined;
+  /** Names what is drawn among what this device keeps: a walk round it goes on after a reload. */
+  keptAs: string;
 };
 
 const idOf = (ring: number, index: number): string => `${String(ring)}.${String(index)}`;
@@ -53,7 +58,7 @@ const spotOf = (id: string) => {
 };
 
 /** Draws a lake's shore and islands: by tapping, by typing each point, or from a file. */
-export function OutlineEditor({ sketch, onChange, origin, under, error }: Props) {
+export function OutlineEditor({ sketch, onChange, origin, under, error, keptAs }: Props) {
   const wide = useWide();
   const deed = useSketch(sketch, onChange);
   const { chosen } = deed;
@@ -72,10 +77,21 @@ export function OutlineEditor({ sketch, onChange, origin, under, error }: Props)
     [reading, origin],
   );
   const fromPxPerM = useMemo(() => pointsFromPxPerM(rings), [rings]);
+  const walking = useShoreWalk(keptAs);
+  const walked = useMemo(
+    () => (walking.walk ? planeWalk(walking.walk, origin) : null),
+    [walking.walk, origin],
+  );
+  const shown = useMemo(
+    () => (walked ? frameWithWalk(frame, walked, rings.length === 0) : frame),
+    [frame, walked, rings.length],
+  );
   const over = useCallback<Draw>(
-    ({ palette, view }) =>
-      workMarks(rings, { palette, chosen, faults, showPoints: view.pxPerM >= fromPxPerM }),
-    [rings, chosen, faults, fromPxPerM],
+    ({ palette, view }) => [
+      ...workMarks(rings, { palette, chosen, faults, showPoints: view.pxPerM >= fromPxPerM }),
+      ...(walked ? walkMarks(walked, palette) : []),
+    ],
+    [rings, chosen, faults, fromPxPerM, walked],
   );
   const water = useCallback<Draw>(
     (pen) => [...closedMarks(rings, pen.palette, waterTint(pen.palette)), ...under(pen)],
@@ -114,7 +130,7 @@ export function OutlineEditor({ sketch, onChange, origin, under, error }: Props)
         <LakeCanvas
           key={sheet}
           label="Outline of the lake, to draw on"
-          frame={frame}
+          frame={shown}
           under={water}
           over={over}
           handles={handles}
@@ -129,7 +145,8 @@ export function OutlineEditor({ sketch, onChange, origin, under, error }: Props)
         />
       </View>
       <View style={{ flexGrow: 1, flexBasis: 320, gap: space.medium, minWidth: 0 }}>
-        <SketchButtons sketch={sketch} deed={deed} />
+        {walking.walk ? null : <SketchButtons sketch={sketch} deed={deed} />}
+        <OutlineWalk walking={walking} sketch={sketch} onRing={replace} />
         <OutlineFound sketch={settled} reading={reading} crowded={fromPxPerM > 0 && open === null} />
         {error ? <FieldError id="outline" words={error} /> : null}
         <OutlineImport onRead={replace} replaces={sketch.rings.length > 0} />

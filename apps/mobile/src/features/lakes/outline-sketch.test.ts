@@ -7,6 +7,7 @@ import {
   insertPlace,
   mayClose,
   openRingOf,
+  putRing,
   readSketch,
   removePlace,
   sketchOf,
@@ -63,4 +64,16 @@ test('points go in between and out again, and a ring left with two is open', () 
 test('a finished sketch and its outline are the same drawing', () => {
   const outline = FinishedSketch.parse(square);
   expect(sketchOf(outline)).toEqual(square);
+});
+
+test('a whole ring takes the shore’s place, or is one more island', () => {
+  const island = [at(0.4, 0.4), at(0.6, 0.4), at(0.5, 0.6)];
+  const withIsland = putRing(startIsland(square), 'island', island);
+  expect(withIsland.rings.map(({ closed, places }) => [closed, places.length])).toEqual([
+    [true, 4],
+    [true, 3],
+  ]);
+  const anew = putRing(withIsland, 'shore', [at(-1, -1), at(2, -1), at(2, 2), at(-1, 2), at(-1.5, 0)]);
+  expect(anew.rings.map(({ places }) => places.length)).toEqual([5, 3]);
+  expect(putRing(EMPTY_SKETCH, 'shore', island).rings).toHaveLength(1);
 });

@@ -85,6 +85,14 @@ export function startIsland(sketch: Sketch): Sketch {
   return { rings: [...sketch.rings, { closed: false, places: [] }] };
 }
 
+/** Puts a whole ring in: as the shore, in the place of the one there was, or as one more island. */
+export function putRing(sketch: Sketch, of: 'shore' | 'island', places: [number, number][]): Sketch {
+  const ring: SketchRing = { closed: true, places };
+  const islands = sketch.rings.slice(1);
+  if (of === 'shore') return { rings: [ring, ...islands] };
+  return { rings: [...sketch.rings.filter(({ closed, places: drawn }) => closed || drawn.length > 0), ring] };
+}
+
 export function removeRing(sketch: Sketch, at: number): Sketch {
   return at === 0 ? EMPTY_SKETCH : { rings: sketch.rings.filter((_, i) => i !== at) };
 }
