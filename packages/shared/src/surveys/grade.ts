@@ -1,7 +1,7 @@
 import type { CastFlag, Grade } from './contract';
 
 /** One-σ limits of a grade: along and across the line, and of the depth, metres. Common practice, no published source. */
-const LIMITS = [
+export const GRADE_LIMITS = [
   { grade: 'A', positionM: 1, depthM: 0.15 },
   { grade: 'B', positionM: 2, depthM: 0.3 },
   { grade: 'C', positionM: 4, depthM: 0.6 },
@@ -50,8 +50,8 @@ type Cap = { grade: Grade; reason: string };
 
 function figureCaps({ radialSigmaM, lateralSigmaM, depthSigmaM }: GradeFacts): Cap[] {
   const position = (sigmaM: number): Grade =>
-    LIMITS.find(({ positionM }) => sigmaM <= positionM)?.grade ?? 'D';
-  const depth = (sigmaM: number): Grade => LIMITS.find(({ depthM }) => sigmaM <= depthM)?.grade ?? 'D';
+    GRADE_LIMITS.find(({ positionM }) => sigmaM <= positionM)?.grade ?? 'D';
+  const depth = (sigmaM: number): Grade => GRADE_LIMITS.find(({ depthM }) => sigmaM <= depthM)?.grade ?? 'D';
   const caps: Cap[] = [
     { grade: position(radialSigmaM), reason: `Along the line ± ${radialSigmaM.toFixed(2)} m` },
     { grade: position(lateralSigmaM), reason: `Across the line ± ${lateralSigmaM.toFixed(2)} m` },
