@@ -2,10 +2,12 @@ import { buildChartJob } from './charts/jobs';
 import { resizePhoto } from './files/jobs';
 import type { Handlers } from './jobs/worker';
 import { sendMail } from './mail/jobs';
+import { readLogJob } from './surveys/log-jobs';
 
 /** What does each kind of queued job, word by word. */
 export const handlers: Handlers = {
   'mail.send': sendMail,
   'chart.build': buildChartJob,
   'photo.resize': resizePhoto,
+  'log.read': readLogJob,
 };

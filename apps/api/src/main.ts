@@ -12,6 +12,7 @@ import { plainError } from './http/plain-error';
 import { jobsOn, openQueue } from './jobs/queue';
 import { work } from './jobs/worker';
 import { openCapture } from './mail/capture';
+import { watchLogs } from './surveys/lost-logs';
 
 const FINISH_WITHIN_MS = 10_000;
 
@@ -38,6 +39,9 @@ async function main(): Promise<void> {
   fileStoreOf(config)
     .check()
     .catch((err: unknown) => logger.error({ err }, 'the store of files can’t be used'));
+  const stopWatchingLogs = watchLogs(server, (err) =>
+    logger.error({ err }, 'lost logs could not be taken up'),
+  );
   const http = createServer(makeApp(server, logger, { capture }));
   await listen(http, config);
   logger.info({ port: config.port, url: config.publicUrl }, 'listening');
@@ -45,6 +49,7 @@ async function main(): Promise<void> {
   const close = async () => {
     await finish(http);
     stopWatching();
+    stopWatchingLogs();
     await worker.stop();
     await boss.stop({ graceful: true, wait: true, timeout: FINISH_WITHIN_MS });
     await capture?.close();

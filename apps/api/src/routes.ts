@@ -9,6 +9,7 @@ import { photoRoutes } from './lakes/photo-routes';
 import { lakeRoutes } from './lakes/routes';
 import { waterRoutes } from './lakes/water-routes';
 import { bottomRoutes } from './surveys/bottom-routes';
+import { logRoutes } from './surveys/log-routes';
 import { surveyRoutes } from './surveys/routes';
 
 /** Every route of the API, word by word. */
@@ -22,6 +23,7 @@ export const routes: readonly Route[] = [
   ...bookingRoutes,
   ...surveyRoutes,
   ...bottomRoutes,
+  ...logRoutes,
   ...chartRoutes,
   ...disagreementRoutes,
 ];

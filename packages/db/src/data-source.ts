@@ -22,6 +22,8 @@ import { ConfirmedBottom } from './entities/surveys/confirmed-bottom';
 import { LeadCalibration } from './entities/surveys/lead-calibration';
 import { CastImport } from './entities/surveys/cast-import';
 import { SurveyCast } from './entities/surveys/survey-cast';
+import { SoundingFile } from './entities/surveys/sounding-file';
+import { SoundingImport } from './entities/surveys/sounding-import';
 import { ChartBuild } from './entities/charts/chart-build';
 import { Spot } from './entities/charts/spot';
 import { Chart } from './entities/charts/chart';
@@ -36,6 +38,7 @@ import { Disagreements1780000008000 } from './migrations/1780000008000-Disagreem
 import { DeviceKeys1780000012000 } from './migrations/1780000012000-DeviceKeys';
 import { PegCodes1780000009000 } from './migrations/1780000009000-PegCodes';
 import { WaterAreas1780000007000 } from './migrations/1780000007000-WaterAreas';
+import { SoundingLogs1780000005000 } from './migrations/1780000005000-SoundingLogs';
 
 const ENTITIES = [
   Account,
@@ -60,6 +63,8 @@ const ENTITIES = [
   ConfirmedBottom,
   BottomEvent,
   LeadCalibration,
+  SoundingImport,
+  SoundingFile,
   ChartBuild,
   Spot,
   Chart,
@@ -78,6 +83,7 @@ const MIGRATIONS = [
   DeviceKeys1780000012000,
   PegCodes1780000009000,
   WaterAreas1780000007000,
+  SoundingLogs1780000005000,
 ];
 
 /** A pool of connections to one database, opened by the caller with `initialize()`. */

@@ -1,5 +1,9 @@
 import { Problem } from '@mereward/shared/problems/problem';
 import type { Request, Response } from 'express';
+import { randomUUID } from 'node:crypto';
+import { mkdtemp, rm } from 'node:fs/promises';
+import { tmpdir } from 'node:os';
+import { join } from 'node:path';
 import multer from 'multer';
 
 export type Upload = { bytes: Buffer; fields: Record<string, string> };
@@ -19,37 +23,75 @@ let coming = 0;
 export async function receiveFile(req: Request, res: Response, wanted: Wanted): Promise<Upload> {
   const mostBytes = wanted.mostBytes + SLACK_BYTES;
   if (Number(req.get('content-length') ?? 0) > mostBytes) throw tooLarge(wanted);
+  await oneOfFew(() => received(req, res, { ...wanted, mostFiles: 1, storage: multer.memoryStorage() }));
+  const [file] = filesOf(req, wanted);
+  return { bytes: file.buffer, fields: { ...req.body } };
+}
+
+export type FileOnDisk = { name: string; path: string };
+export type Uploads = { files: FileOnDisk[]; fields: Record<string, string> };
+
+/**
+ * Receives the files of a multipart request onto the disk, `mostBytes` counting them all, hands them to `use`, and
+ * takes them off the disk again whatever comes of it.
+ */
+export async function receiveFiles<T>(
+  { req, res, wanted }: { req: Request; res: Response; wanted: Wanted & { mostFiles: number } },
+  use: (uploads: Uploads) => Promise<T>,
+): Promise<T> {
+  if (Number(req.get('content-length') ?? 0) > wanted.mostBytes + SLACK_BYTES) throw tooLarge(wanted);
+  const folder = await mkdtemp(join(tmpdir(), 'received-'));
+  try {
+    const storage = multer.diskStorage({
+      destination: folder,
+      filename: (_req, _file, named) => named(null, randomUUID()),
+    });
+    await oneOfFew(() => received(req, res, { ...wanted, storage }));
+    const files = filesOf(req, wanted).map(({ originalname, path }) => ({ name: originalname, path }));
+    return await use({ files, fields: { ...req.body } });
+  } finally {
+    await rm(folder, { recursive: true, force: true });
+  }
+}
+
+async function oneOfFew(receive: () => Promise<void>): Promise<void> {
   if (coming >= MOST_AT_ONCE)
     throw new Problem('too-many', 'Several files are being received just now', {
       detail: 'Wait a moment, then send it again.',
     });
   coming += 1;
   try {
-    await received(req, res, wanted);
+    await receive();
   } finally {
     coming -= 1;
   }
-  if (!req.file)
-    throw new Problem('invalid', 'There was no file in what was sent', {
-      detail: 'Choose a file and send it again.',
-      errors: [{ pointer: `/${wanted.field}`, detail: 'No file.' }],
-    });
-  return { bytes: req.file.buffer, fields: { ...req.body } };
 }
 
-function received(req: Request, res: Response, wanted: Wanted): Promise<void> {
+function filesOf({ files }: Request, { field }: Wanted): [Express.Multer.File, ...Express.Multer.File[]] {
+  const [first, ...others] = Array.isArray(files) ? files : [];
+  if (first) return [first, ...others];
+  throw new Problem('invalid', 'There was no file in what was sent', {
+    detail: 'Choose a file and send it again.',
+    errors: [{ pointer: `/${field}`, detail: 'No file.' }],
+  });
+}
+
+type Receiving = Wanted & { mostFiles: number; storage: multer.StorageEngine };
+
+function received(req: Request, res: Response, wanted: Receiving): Promise<void> {
   const read = multer({
-    storage: multer.memoryStorage(),
+    storage: wanted.storage,
+    defParamCharset: 'utf8',
     limits: {
       fileSize: wanted.mostBytes,
-      files: 1,
+      files: wanted.mostFiles,
       fields: 10,
       fieldSize: 4096,
       fieldNameSize: 100,
-      parts: 12,
+      parts: 11 + wanted.mostFiles,
       headerPairs: 20,
     },
-  }).single(wanted.field);
+  }).array(wanted.field, wanted.mostFiles);
   return new Promise((resolve, reject) => {
     let bytes = 0;
     void read(req, res, (error: unknown) => (error ? reject(asProblem(error, wanted)) : resolve()));
@@ -74,11 +116,14 @@ const tooLarge = ({ mostBytes }: Wanted): Problem =>
     detail: 'Nothing was kept. Make it smaller and send it again.',
   });
 
-function asProblem(error: unknown, wanted: Wanted): Problem {
+function asProblem(error: unknown, wanted: Receiving): Problem {
   if (error instanceof Problem) return error;
   const code = error instanceof multer.MulterError ? error.code : null;
   if (code === 'LIMIT_FILE_SIZE') return tooLarge(wanted);
   return new Problem('invalid', 'The file could not be read out of what was sent', {
-    detail: `Send one file, in the field “${wanted.field}”, as multipart form data.`,
+    detail:
+      wanted.mostFiles === 1
+        ? `Send one file, in the field “${wanted.field}”, as multipart form data.`
+        : `Send at most ${wanted.mostFiles} files, in the field “${wanted.field}”, as multipart form data.`,
   });
 }

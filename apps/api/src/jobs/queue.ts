@@ -7,6 +7,7 @@ const QUEUES: Record<JobName, { retryLimit: number; retryDelay: number; expireIn
   'chart.build': { retryLimit: 2, retryDelay: 5, expireInSeconds: 900 },
   // Twelve tries are five hours: the store of files may be away for a while, and what was sent is kept.
   'photo.resize': { retryLimit: 11, retryDelay: 5, expireInSeconds: 180 },
+  'log.read': { retryLimit: 2, retryDelay: 5, expireInSeconds: 900 },
 };
 
 /** `failed` is told what goes wrong between jobs, the database being away above all; the queue goes on trying. */
