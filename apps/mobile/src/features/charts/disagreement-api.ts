@@ -21,6 +21,7 @@ export const useMyDisagreements = (signedIn: boolean) =>
     queryKey: disagreementKeys.mine,
     queryFn: ({ signal }) => api.get('/disagreements/mine', DisagreementList, signal),
     enabled: signedIn,
+    staleTime: 0, // the fishery may have decided a moment ago
   });
 
 export async function disagree(pegId: string, told: Disagree): Promise<DisagreementView> {
