@@ -51,6 +51,7 @@ function Lake({ lake }: { lake: LakeView }) {
                 <LinkButton label="Outline" href={`/office/lakes/${lake.id}/outline`} />
               </>
             ) : null}
+            <LinkButton label="Pegs’ waters" href={`/office/lakes/${lake.id}/waters`} />
             <LinkButton label="As visitors see it" href={`/water/lakes/${lake.id}`} />
           </View>
         </View>

@@ -1,0 +1,1 @@
+export { WatersScreen as default } from '@/features/charts/waters-screen';
