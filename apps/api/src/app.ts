@@ -3,6 +3,7 @@ import cookieParser from 'cookie-parser';
 import express, { Router, type Express, type RequestHandler } from 'express';
 import helmet from 'helmet';
 import type pino from 'pino';
+import { lightPages } from './charts/light-pages';
 import { demoMail } from './demo/mail-page';
 import { health } from './http/health';
 import { limitAll } from './http/limits';
@@ -42,6 +43,7 @@ export function makeApp(server: Server, logger: pino.Logger, made: With = {}): E
   );
   app.use(logRequests(logger));
   app.use('/api', apiRouter(routes));
+  app.use('/p', lightPages());
   if (capture && server.config.demo) app.use('/demo', demoMail(capture));
   app.use(serveWeb(server.config.webDir), nothingHere, answerProblem);
   return app;

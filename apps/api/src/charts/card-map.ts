@@ -1,8 +1,8 @@
-import type { PegPageView, SpotView } from '@mereward/shared/charts/contract';
+import type { PegPageView } from '@mereward/shared/charts/contract';
 import { drawMap } from '@mereward/shared/charts/drawing/draw-map';
-import { extractParts, outlookView, type Extract } from '@mereward/shared/charts/drawing/extract-parts';
+import { extractReachM, numberedSpot } from '@mereward/shared/charts/drawing/extract-page';
+import { extractParts, outlookView } from '@mereward/shared/charts/drawing/extract-parts';
 import { northMarks, scaleBarMarks } from '@mereward/shared/charts/drawing/furniture';
-import { ruled, text, type Mark } from '@mereward/shared/charts/drawing/mark';
 import { stepsOf } from '@mereward/shared/charts/drawing/page';
 import { palettes } from '@mereward/shared/charts/drawing/palette';
 import { stickWords } from '@mereward/shared/charts/spot-words';
@@ -15,8 +15,6 @@ type Frame = { x: number; y: number; width: number; height: number };
 /** Px of the drawing to a point of the card: letters of 12 px come out at 6 pt. */
 const PX_A_POINT = 2;
 const BEHIND_PX = 44;
-const LEAST_REACH_M = 45;
-const PAST_SPOT_M = 14;
 const INK = '#000000';
 
 /**
@@ -29,7 +27,7 @@ export function drawCardMap(doc: Doc, page: PegPageView, frame: Frame): void {
   const palette = palettes.print;
   const size = { widthPx: frame.width * PX_A_POINT, heightPx: frame.height * PX_A_POINT };
   const spots = page.spots ?? [];
-  const outlook = { towards: 'right', reachM: reachOf(extract, spots), behindPx: BEHIND_PX } as const;
+  const outlook = { towards: 'right', reachM: extractReachM(extract, spots), behindPx: BEHIND_PX } as const;
   const view = outlookView(extract, outlook, size);
   const map = drawMap(extractParts(page, extract), {
     palette,
@@ -51,7 +49,11 @@ export function drawCardMap(doc: Doc, page: PegPageView, frame: Frame): void {
     ...northMarks(view, { x: view.widthPx - 30, y: 34 }, palette),
   ];
   const layers = [
-    { view, atPx: { x: 0, y: 0 }, marks: [...map, ...spots.flatMap(numberedSpot)] },
+    {
+      view,
+      atPx: { x: 0, y: 0 },
+      marks: [...map, ...spots.flatMap((spot, i) => numberedSpot(spot, i + 1, palette))],
+    },
     { marks: round },
   ];
   doc.save();
@@ -59,23 +61,4 @@ export function drawCardMap(doc: Doc, page: PegPageView, frame: Frame): void {
   paintSteps(doc, stepsOf({ widthPx: view.widthPx, heightPx: view.heightPx, ground: null, layers }));
   doc.lineWidth(1).rect(0, 0, view.widthPx, view.heightPx).stroke(INK);
   doc.restore();
-}
-
-function reachOf({ originM }: Extract, spots: readonly SpotView[]): number {
-  const farthestM = Math.max(0, ...spots.map(({ xM, yM }) => Math.hypot(xM - originM.xM, yM - originM.yM)));
-  return Math.max(LEAST_REACH_M, farthestM + PAST_SPOT_M);
-}
-
-/** A spot's own number in the list below, in a ring. */
-function numberedSpot({ xM, yM }: SpotView, i: number): Mark[] {
-  return [
-    {
-      kind: 'glyphs',
-      at: [xM, yM],
-      glyph: 'm-9 0a9 9 0 1 0 18 0a9 9 0 1 0 -18 0z',
-      fill: '#FFFFFF',
-      stroke: ruled(INK, 1.8),
-    },
-    text({ words: String(i + 1), x: xM, y: yM, bold: true, colour: INK }),
-  ];
 }

@@ -59,6 +59,7 @@ const page = (wishes: Partial<Levels>): PegPageView => ({
   rigCaution: '',
   emergencyWords: '',
   cardUrl: '',
+  shortUrl: '',
   ticket: null,
   ...wishes,
 });

@@ -7,11 +7,6 @@ import { pegPage } from './peg-page';
 export async function pegCard(ctx: Ctx, pegId: string): Promise<{ filename: string; pdf: Buffer }> {
   const page = await pegPage(ctx, pegId);
   const printedOn = civilDay(ctx.now, page.fishery.zone);
-  const pdf = await drawCard({
-    page,
-    printedOn,
-    printedAt: ctx.now,
-    url: `${ctx.publicUrl}/water/pegs/${pegId}`,
-  });
+  const pdf = await drawCard({ page, printedOn, printedAt: ctx.now, url: page.shortUrl });
   return { filename: `peg-${page.number.toLowerCase().replace(/[^a-z0-9]+/g, '-')}.pdf`, pdf };
 }

@@ -53,6 +53,7 @@ export async function pegPage(ctx: Ctx, pegId: string): Promise<PegPageView> {
     rigCaution: RIG_CAUTION,
     emergencyWords: EMERGENCY,
     cardUrl: `/api/pegs/${peg.id}/card.pdf`,
+    shortUrl: `${ctx.publicUrl}/p/${peg.code}`,
     ticket: ticket && { from: ticket.from.toISOString(), until: ticket.until.toISOString() },
   };
 }

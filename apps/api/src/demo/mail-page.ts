@@ -1,6 +1,6 @@
 import { Router } from 'express';
 import type { Capture, CapturedMail } from '../mail/capture';
-import { escapeHtml } from '../mail/letter';
+import { escapeHtml } from '../http/markup';
 
 /** The demo's caught mail: `/demo/mail` to read, `/demo/mail.json` for what drives a browser. Newest first. */
 export function demoMail(capture: Capture): Router {

@@ -30,6 +30,9 @@ export const limitDrawings = (): RequestHandler => limit({ windowS: 60, most: 60
 /** For what a person types and sends for others to read, by network address: a lodge full of anglers shares one. */
 export const limitReports = (): RequestHandler => limit({ windowS: 60, most: 60 });
 
+/** For pages written here, which cost more than an answer does; a lodge full of anglers shares one address. */
+export const limitPages = (): RequestHandler => limit({ windowS: 60, most: 240 });
+
 const QUARTER_S = 15 * 60;
 
 /** For everything: far above what a person does, below what harms the rest. */

@@ -1,5 +1,5 @@
 import { Problem, type ProblemBody } from '@mereward/shared/problems/problem';
-import type { ErrorRequestHandler, RequestHandler } from 'express';
+import type { ErrorRequestHandler, Request, RequestHandler, Response } from 'express';
 import { z } from 'zod';
 import { isDatabaseAway } from './database-away';
 
@@ -34,30 +34,40 @@ function asProblem(error: unknown): Problem | null {
   return null;
 }
 
-/** The one place where a failure becomes an answer (RFC 9457). What is not meant for a reader is logged, not told. */
-export const answerProblem: ErrorRequestHandler = (error, req, res, next) => {
-  if (res.headersSent) {
-    next(error);
-    return;
-  }
-  const instance = String(req.id);
+/** A failure as a reader may be told of it. What is not meant for a reader is logged. */
+function problemOf(error: unknown, req: Request): Problem {
   const problem =
     asProblem(error) ??
     new Problem('internal', 'Something went wrong here', {
-      detail: `It has been written down as ${instance}. Nothing was kept; try once more.`,
+      detail: `It has been written down as ${String(req.id)}. Nothing was kept; try once more.`,
     });
   if (problem.kind === 'internal') req.log.error({ err: error }, 'internal');
+  return problem;
+}
+
+type Say = (problem: Problem, req: Request, res: Response) => void;
+
+/** Ends a router or the whole server: whatever failed is told in the way that is given. */
+export const answering =
+  (say: Say): ErrorRequestHandler =>
+  (error, req, res, next) => {
+    if (res.headersSent) next(error);
+    else say(problemOf(error, req), req, res);
+  };
+
+/** The one place where a failure becomes an answer of the API (RFC 9457). */
+export const answerProblem = answering((problem, req, res) => {
   const body: ProblemBody = {
     type: `urn:mereward:problem:${problem.kind}`,
     title: problem.title,
     status: problem.status,
     kind: problem.kind,
-    instance,
+    instance: String(req.id),
     ...(problem.detail === undefined ? {} : { detail: problem.detail }),
     ...(problem.errors.length === 0 ? {} : { errors: [...problem.errors] }),
   };
   res.status(problem.status).type('application/problem+json').send(JSON.stringify(body));
-};
+});
 
 export const nothingHere: RequestHandler = () => {
   throw new Problem('not-found', 'There is nothing at this address', {

@@ -1,4 +1,5 @@
 import { z } from 'zod';
+import { escapeHtml } from '../http/markup';
 
 /** A mail as it waits in the queue: already in words, for one reader. */
 export const Letter = z.strictObject({
@@ -18,14 +19,6 @@ export type Words = {
 };
 
 const FOOT = 'Mereward sent this because your address was given to it. Nobody reads replies to this address.';
-
-export const escapeHtml = (text: string): string =>
-  text
-    .replaceAll('&', '&amp;')
-    .replaceAll('<', '&lt;')
-    .replaceAll('>', '&gt;')
-    .replaceAll('"', '&quot;')
-    .replaceAll("'", '&#39;');
 
 /** One line only: a line break in a name must not become a heading of the mail. */
 const oneLine = (text: string): string => text.replace(/\s+/g, ' ').trim();

@@ -309,6 +309,7 @@ export const PegPageView = z.object({
   rigCaution: z.string(), // beside every piece of advice on presentation
   emergencyWords: z.string(),
   cardUrl: z.string(), // GET /api/pegs/:pegId/card.pdf
+  shortUrl: z.string(), // the peg's light page, as its card shows it: https://…/p/K7M3XD
   ticket: z.object({ from: z.iso.datetime(), until: z.iso.datetime() }).nullable(), // the reader's own, if any
 });
 export type PegPageView = z.infer<typeof PegPageView>;

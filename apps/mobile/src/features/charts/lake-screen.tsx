@@ -21,7 +21,7 @@ import { ChartMap } from './chart-map';
 import { ChartPanel } from './chart-panel';
 import { PegBrief } from './peg-brief';
 import { PegList } from './peg-list';
-import { spotCast } from './spot-cast';
+import { spotCast } from '@mereward/shared/charts/drawing/spot-cast';
 
 const PHONE_SHARE = 0.5;
 

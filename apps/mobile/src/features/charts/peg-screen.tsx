@@ -27,6 +27,7 @@ import { PegEmergency } from './peg-emergency';
 import { GettingThere, ThePeg } from './peg-facts';
 import { OverheadNote, PegHazards } from './peg-hazards';
 import { PegPhotos } from './peg-photos';
+import { ShortAddress } from './short-address';
 import { PEG_STATUS, pegTitle } from './peg-words';
 import { SpotDetail } from './spot-detail';
 import { SpotsTable } from './spots-table';
@@ -127,6 +128,7 @@ function AboutThePeg({ page, details }: { page: PegPageView; details: PegDetails
       <Section title="A count on your own sticks">
         <CountConverter />
       </Section>
+      <ShortAddress url={page.shortUrl} />
     </>
   );
 }

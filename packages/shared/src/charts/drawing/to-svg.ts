@@ -1,4 +1,14 @@
+import type { Stroke } from './mark';
 import { stepsOf, type Page, type Step, type TextStep } from './page';
+
+/** One glyph at every corner of a line that isn't drawn itself: fewer letters than the glyph said each time. */
+export type GlyphsStep = {
+  do: 'glyphs';
+  d: string;
+  glyph: string;
+  fill: string | null;
+  stroke: Stroke | null;
+};
 
 export type SvgWords = {
   title: string; // read out for the whole picture
@@ -19,7 +29,14 @@ const escaped = (words: string): string => words.replace(/[&<>"]/g, (sign) => ES
 const figure = (px: number): string => String(Math.round(px * 100) / 100);
 
 /** The page as one SVG document. */
-export function toSvg(page: Page, words: SvgWords): string {
+export const toSvg = (page: Page, words: SvgWords): string => svgOf(stepsOf(page), page, words);
+
+/** Acts of drawing on a page of that size as one SVG document. */
+export function svgOf(
+  steps: readonly (Step | GlyphsStep)[],
+  page: Pick<Page, 'widthPx' | 'heightPx'>,
+  words: SvgWords,
+): string {
   const size = `width="${figure(page.widthPx)}" height="${figure(page.heightPx)}"`;
   const box = `viewBox="0 0 ${figure(page.widthPx)} ${figure(page.heightPx)}"`;
   const naming = words.title ? `role="img"><title>${escaped(words.title)}</title>` : 'aria-hidden="true">';
@@ -27,13 +44,14 @@ export function toSvg(page: Page, words: SvgWords): string {
   const font = `font-family="${escaped(words.fontFamily)}"`;
   return (
     `<svg xmlns="http://www.w3.org/2000/svg" ${size} ${box} ${font} ` +
-    `stroke-linecap="round" stroke-linejoin="round" ${naming}${style}${body(stepsOf(page), words.idPrefix)}</svg>`
+    `stroke-linecap="round" stroke-linejoin="round" ${naming}${style}${body(steps, words.idPrefix)}</svg>`
   );
 }
 
-function body(steps: readonly Step[], idPrefix: string): string {
+function body(steps: readonly (Step | GlyphsStep)[], idPrefix: string): string {
   let out = '';
   let clips = 0;
+  let glyphs = 0;
   for (const step of steps) {
     switch (step.do) {
       case 'path':
@@ -48,6 +66,9 @@ function body(steps: readonly Step[], idPrefix: string): string {
         out += `<clipPath id="${id}"><path d="${step.d}"${rule}/></clipPath><g clip-path="url(#${id})">`;
         break;
       }
+      case 'glyphs':
+        out += glyphsElement(step, `${idPrefix}-glyph-${++glyphs}`);
+        break;
       case 'unclip':
         out += '</g>';
         break;
@@ -56,7 +77,13 @@ function body(steps: readonly Step[], idPrefix: string): string {
   return out;
 }
 
-function pathElement({ d, fill, stroke }: Extract<Step, { do: 'path' }>): string {
+function glyphsElement({ d, glyph, fill, stroke }: GlyphsStep, id: string): string {
+  const shape = pathElement({ d: `M0 0${glyph}`, fill, stroke });
+  const at = ['start', 'mid', 'end'].map((place) => ` marker-${place}="url(#${id})"`).join('');
+  return `<marker id="${id}" markerUnits="userSpaceOnUse" overflow="visible">${shape}</marker><path d="${d}" fill="none"${at}/>`;
+}
+
+function pathElement({ d, fill, stroke }: Omit<Extract<Step, { do: 'path' }>, 'do'>): string {
   const filling = fill ? `fill="${fill}" fill-rule="evenodd"` : 'fill="none"';
   if (!stroke) return `<path d="${d}" ${filling}/>`;
   const dash = stroke.dashPx ? ` stroke-dasharray="${stroke.dashPx.join(' ')}"` : '';

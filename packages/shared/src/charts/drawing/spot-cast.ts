@@ -1,8 +1,8 @@
-import type { SpotView } from '@mereward/shared/charts/contract';
-import type { DrawnCast } from '@mereward/shared/charts/drawing/cast-marks';
-import { recastEllipse } from '@mereward/shared/charts/recast-ellipse';
-import { distanceBetweenM, planeBearingDeg, type Point } from '@mereward/shared/geometry/point';
-import { wrapRangesM } from './section-words';
+import type { SpotView } from '../contract';
+import type { DrawnCast } from './cast-marks';
+import { recastEllipse } from '../recast-ellipse';
+import { distanceBetweenM, planeBearingDeg, type Point } from '../../geometry/point';
+import { wrapRangesM } from '../section-line';
 
 /** The cast from a peg to one of its spots, for the map. */
 export function spotCast(peg: Point, spot: SpotView, stickSpacingM: number): DrawnCast {
