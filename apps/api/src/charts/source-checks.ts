@@ -60,8 +60,10 @@ function checkedCasts({ site, casts }: SourceVisit, reduced: Reductions) {
   return casts.flatMap((cast) => {
     const answer = reduced.get(cast.id);
     if (!answer?.ok) return [];
-    const { xM, yM, depthM } = answer.sounding;
-    return [{ id: cast.id, label: labelOf(site.pegs.get(cast.pegId)?.number, cast.seq), xM, yM, depthM }];
+    const { xM, yM, depthM, depthSigmaM, bearingDeg, rangeM } = answer.sounding;
+    const label = labelOf(site.pegs.get(cast.pegId)?.number, cast.seq);
+    const line = { pegId: cast.pegId, bearingDeg, rangeM };
+    return [{ id: cast.id, label, xM, yM, depthM, depthSigmaM, line }];
   });
 }
 

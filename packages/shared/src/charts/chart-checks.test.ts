@@ -36,6 +36,7 @@ describe('checks before publishing', () => {
     expect(chartChecks(good).map((c) => [c.key, c.state, c.blocks])).toEqual([
       ['casts_on_water', 'passed', false],
       ['neighbours_agree', 'passed', false],
+      ['depths_in_order', 'passed', false],
       ['levels_read', 'passed', false],
       ['level_steady', 'passed', false],
       ['sticks_taped', 'passed', false],

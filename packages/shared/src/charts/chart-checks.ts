@@ -2,9 +2,10 @@ import type { Outline } from '../geometry/polygon';
 import { insideOutline } from '../geometry/polygon';
 import { distanceToShoreM } from '../geometry/shore-distance';
 import type { CheckView } from './contract';
+import { depthOrder, type OrderedCast } from './depth-order';
 
 /** A reduced cast as the checks see it: plane metres, depth at datum (null: no float reading), and a name for people. */
-export type CheckedCast = { id: string; label: string; xM: number; yM: number; depthM: number | null };
+export type CheckedCast = OrderedCast;
 
 export type CheckedVisit = {
   id: string;
@@ -42,6 +43,7 @@ export function chartChecks(input: CheckInput): CheckView[] {
   return [
     castsOnWater(input),
     neighboursAgree(input),
+    depthsInOrder(input),
     levelsRead(input),
     levelSteady(input),
     sticksTaped(input),
@@ -109,6 +111,16 @@ function disagreeingPairs(casts: readonly CheckedCast[]): Finding[] {
     }
   }
   return pairs.sort((a, b) => b.byM - a.byM || (a.id < b.id ? -1 : 1));
+}
+
+function depthsInOrder({ outline, casts }: CheckInput): CheckView {
+  return checkView({
+    key: 'depths_in_order',
+    blocks: false,
+    good: 'From shallow to deep the readings of every line follow one another as a bed can.',
+    bad: 'Readings along a line that a bed can hardly follow; a piled bank, or a count or its order mistaken, look at each:',
+    findings: depthOrder(outline, casts),
+  });
 }
 
 function levelsRead({ visits }: CheckInput): CheckView {
