@@ -150,7 +150,12 @@ describe('a draft', () => {
 
 describe('a build', () => {
   test('tells each step in words and a share that only rises, to the end', async () => {
-    const chart = { lakeId: water.lake.id, visitIds: [surveyVisit], contourStepM: 0.5 };
+    const chart = {
+      lakeId: water.lake.id,
+      visitIds: [surveyVisit],
+      contourStepM: 0.5,
+      draftedAt: new Date('2027-04-03T12:00:00Z'),
+    };
     const told: { step: string; share: number }[] = [];
     makeChart(await buildSource(server.server.source.manager, chart), (step, share) =>
       told.push({ step, share }),

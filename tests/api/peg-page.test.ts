@@ -348,8 +348,10 @@ describe('no export shows more than the screen', () => {
     const built = { ...content.built, soundings: [{ ...first, grade: 'D' as const }, ...rest] };
     const all = { depth: true, bottom: true, spots: true, soundings: true };
     const notes = { depth: null, bottom: null, spots: null, soundings: null };
+    const unmoved = { age: 'current' as const, changes: [], levelsMoved: false };
     const ids = (staff: boolean) =>
-      layersFor({ ...content, built }, { staff, sees: all, notes }).soundings?.map(({ id }) => id) ?? [];
+      layersFor({ ...content, built }, { staff, sees: all, notes }, unmoved).soundings?.map(({ id }) => id) ??
+      [];
     expect(ids(true)).toContain(first.id);
     expect(ids(false)).not.toContain(first.id);
     expect(ids(false)).toHaveLength(rest.length);

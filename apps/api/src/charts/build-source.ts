@@ -7,9 +7,15 @@ import { Peg } from '@mereward/db/entities/lakes/peg';
 import { SurveyCast } from '@mereward/db/entities/surveys/survey-cast';
 import { SurveyVisit } from '@mereward/db/entities/surveys/survey-visit';
 import type { ReportEvidence } from '@mereward/shared/charts/reported-evidence';
+import type { BottomEnding } from '@mereward/shared/surveys/bottom-ending';
+import type { BottomFeel } from '@mereward/shared/surveys/bottom-table-contract';
+import type { ConfirmedPlace } from '@mereward/shared/surveys/confirmed-pairs';
 import { civilDay } from '@mereward/shared/time/civil-day';
 import { In, IsNull, type EntityManager } from 'typeorm';
 import { digestOf } from '../digest';
+import { feelInForce } from '../surveys/bottom-feel';
+import { confirmedPlaces } from '../surveys/confirmed-places';
+import { endingsOf } from '../surveys/endings';
 import type { ObservedCast, VisitSite } from '../surveys/reduce-visit';
 import { visitSite } from '../surveys/visit-site';
 
@@ -23,10 +29,15 @@ export type BuildSource = {
   zone: string;
   contourStepM: number;
   visits: SourceVisit[];
+  feel: BottomFeel;
+  tableVersion: number; // of the feel; 0 is the built-in
+  endings: BottomEnding[]; // works and seasons, oldest first
+  confirmed: ConfirmedPlace[]; // by id
+  asOf: string; // civil day the chart is made for: covers fade up to it
   reports: SourceReport[]; // what anglers found otherwise and the fishery accepted, by id
 };
 
-type Wanted = Pick<Chart, 'lakeId' | 'visitIds' | 'contourStepM'>;
+type Wanted = Pick<Chart, 'lakeId' | 'visitIds' | 'contourStepM' | 'draftedAt'>;
 
 /** Loads what a chart is made from, in an order of its own: visits and casts by their ids. */
 export async function buildSource(tx: EntityManager, chart: Wanted): Promise<BuildSource> {
@@ -57,7 +68,19 @@ export async function buildSource(tx: EntityManager, chart: Wanted): Promise<Bui
         })),
     });
   const reports = await acceptedReports(tx, lake.id);
-  return { lake, zone, contourStepM: chart.contourStepM, visits: sourced, reports };
+  const { feel, version } = await feelInForce(tx, lake.fisheryId);
+  return {
+    lake,
+    zone,
+    contourStepM: chart.contourStepM,
+    visits: sourced,
+    reports,
+    feel,
+    tableVersion: version,
+    endings: await endingsOf(tx, lake),
+    confirmed: await confirmedPlaces(tx, lake),
+    asOf: civilDay(chart.draftedAt, zone),
+  };
 }
 
 async function acceptedReports(tx: EntityManager, lakeId: string): Promise<SourceReport[]> {
@@ -73,7 +96,8 @@ async function acceptedReports(tx: EntityManager, lakeId: string): Promise<Sourc
  * A digest of everything that decides how the chart comes out, and of nothing else: the same digest, the same chart.
  * Names and notes are no part of it.
  */
-export function sourceDigest({ lake, contourStepM, visits, reports }: BuildSource): Buffer {
+export function sourceDigest(source: BuildSource): Buffer {
+  const { lake, contourStepM, visits, reports, feel, tableVersion, endings, confirmed } = source;
   const decides = {
     outline: lake.details.outline,
     origin: [lake.originLon, lake.originLat],
@@ -82,6 +106,7 @@ export function sourceDigest({ lake, contourStepM, visits, reports }: BuildSourc
     visits: visits.map(({ site, casts }) => ({
       id: site.visit.id,
       kit: site.visit.kit,
+      ...(site.lead ? { lead: site.lead } : {}),
       gauge: site.gauge,
       pegs: [...new Set(casts.map((cast) => cast.pegId))].sort().map((id) => stanceOf(site, id)),
       marks: [...new Set(casts.flatMap(markOf))]
@@ -94,7 +119,10 @@ export function sourceDigest({ lake, contourStepM, visits, reports }: BuildSourc
         observation,
       ]),
     })),
-    ...(reports.length > 0 ? { reports } : {}), // a chart without any digests as before there were reports
+    ...(tableVersion > 0 ? { feel } : {}),
+    ...(endings.length > 0 ? { endings } : {}),
+    ...(confirmed.length > 0 ? { confirmed } : {}),
+    ...(reports.length > 0 ? { reports } : {}), // what a chart has none of is no part of its digest
   };
   return digestOf(decides);
 }

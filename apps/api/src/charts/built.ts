@@ -1,3 +1,4 @@
+import { EndedEvidence } from '@mereward/shared/charts/bottom-quality-contract';
 import { CheckView, QualityView } from '@mereward/shared/charts/contract';
 import { Position } from '@mereward/shared/fisheries/contract';
 import { LakePolygon } from '@mereward/shared/lakes/contract';
@@ -26,8 +27,22 @@ export const BuiltSounding = z.object({
   bearingDeg: z.number(),
   markId: z.uuid().nullable(),
   markOffsetDeg: z.number(),
+  coverEnded: z.boolean().default(false), // what lay there was seen before an event that ended it
 });
 export type BuiltSounding = z.infer<typeof BuiltSounding>;
+
+/** A cast that read no depth, most snags among them: it tells of the bottom only. */
+export const BuiltPoint = z.object({
+  id: z.uuid(), // of the cast
+  pegId: z.uuid(),
+  observedOn: z.iso.date(),
+  xM: z.number(),
+  yM: z.number(),
+  grade: Grade,
+  bottom: Bottom,
+  coverEnded: z.boolean(),
+});
+export type BuiltPoint = z.infer<typeof BuiltPoint>;
 
 /** What each visit was made with, frozen with the chart. */
 export const BuiltVisit = z.object({
@@ -66,7 +81,10 @@ export const Built = z.object({
   maxGapM: z.number(),
   visits: z.array(BuiltVisit),
   soundings: z.array(BuiltSounding), // every grade; D is left out of every view but the staff's
+  points: z.array(BuiltPoint).default([]), // every grade, as above
   leftOut: z.array(z.object({ id: z.string(), why: z.string() })),
+  ended: z.array(EndedEvidence).default([]), // what events since the casts took out of it
+  bottomTable: z.int().default(0), // version of the fishery's table of feels; 0 is the built-in
   isobaths: Lines, // x, y, x, y … metres on the lake's plane, to 0.01
   hypsography: z.array(z.object({ depthM: z.number(), areaM2: z.number(), volumeM3: z.number() })),
   figures: z.object({

@@ -1,14 +1,44 @@
-import { chartAge, DRAWDOWN_M, type ChartAge } from '@mereward/shared/charts/chart-age';
+import { chartAge, DRAWDOWN_M, type AgeNow } from '@mereward/shared/charts/chart-age';
+import type { ChartChange } from '@mereward/shared/charts/chart-change-contract';
+import { outlineInPlane } from '@mereward/shared/geometry/outline';
+import type { LonLat } from '@mereward/shared/geometry/plane';
+import { ringsOf } from '@mereward/shared/geometry/polygon';
+import { eventWords } from '@mereward/shared/surveys/bottom-ending';
 import { civilDay } from '@mereward/shared/time/civil-day';
 import type { Ctx } from '../ctx';
+import { eventsOf } from '../surveys/endings';
 
-type Aged = { lakeId: string; surveyedTo: string; datumM: number; zone: string };
+type Aged = { lakeId: string; surveyedTo: string; datumM: number; zone: string; origin: LonLat };
 
-/** A chart's age today, looking at what the lake's datum board has read since. */
-export async function ageNow(
-  { tx, now }: Ctx,
-  { lakeId, surveyedTo, datumM, zone }: Aged,
-): Promise<ChartAge> {
+/** A chart's age today, by what its lake's datum board has read and what has been recorded of its bottom since. */
+export async function ageNow(ctx: Ctx, aged: Aged): Promise<AgeNow> {
+  const changes = await changesSince(ctx, aged);
+  const levelsMoved = await movedSince(ctx, aged);
+  const age = chartAge(aged.surveyedTo, civilDay(ctx.now, aged.zone), changes.length > 0 || levelsMoved);
+  return { age, changes, levelsMoved };
+}
+
+const toCentimetres = (lengthM: number): number => Math.round(lengthM * 100) / 100;
+
+/** What happened after the chart's last cast, newest first. */
+async function changesSince({ tx }: Ctx, { lakeId, surveyedTo, origin }: Aged): Promise<ChartChange[]> {
+  const events = await eventsOf(tx, lakeId);
+  return events
+    .filter(({ happenedOn }) => happenedOn > surveyedTo)
+    .reverse()
+    .map((event) => ({
+      kind: event.kind,
+      happenedOn: event.happenedOn,
+      words: eventWords(event),
+      rings:
+        event.area &&
+        ringsOf(outlineInPlane(origin, event.area)).map((ring) =>
+          ring.flatMap(({ xM, yM }) => [toCentimetres(xM), toCentimetres(yM)]),
+        ),
+    }));
+}
+
+async function movedSince({ tx, now }: Ctx, { lakeId, surveyedTo, datumM, zone }: Aged): Promise<boolean> {
   const [since] = await tx.query<{ changed: boolean }[]>(
     `SELECT EXISTS (
        SELECT 1 FROM level_reading r JOIN gauge_board b ON b.id = r.board_id
@@ -21,7 +51,7 @@ export async function ageNow(
     ),
     [lakeId, zone, surveyedTo, now, datumM, DRAWDOWN_M],
   );
-  return chartAge(surveyedTo, civilDay(now, zone), since?.changed ?? false);
+  return since?.changed ?? false;
 }
 
 /** 1 on a board whose number rises with the water, −1 on one fitted the other way. */

@@ -2,7 +2,10 @@ import { Fishery } from '@mereward/db/entities/fisheries/fishery';
 import type { Lake } from '@mereward/db/entities/lakes/lake';
 import { Mark } from '@mereward/db/entities/lakes/mark';
 import { Peg } from '@mereward/db/entities/lakes/peg';
+import { gradeNow, type AgeNow } from '@mereward/shared/charts/chart-age';
+import type { BottomPoint } from '@mereward/shared/charts/bottom-quality-contract';
 import { toBase64 } from '@mereward/shared/charts/chart-encoding';
+import type { ChartChange } from '@mereward/shared/charts/chart-change-contract';
 import type { ChartView, LayerNotes } from '@mereward/shared/charts/contract';
 import { toPlane } from '@mereward/shared/geometry/plane';
 import { facingDeg } from '@mereward/shared/lakes/peg-rules';
@@ -22,8 +25,11 @@ export async function chartView(ctx: Ctx, chartId: string): Promise<ChartView> {
   const fishery = await tx.findOneByOrFail(Fishery, { id: lake.fisheryId });
   const sight = await sightOnChart(ctx, lake);
   const content = await chartContent(tx, chartId);
+  const origin = content?.built.origin ?? [lake.originLon, lake.originLat];
+  const days = surveyDays(chart);
+  const aged = { lakeId: lake.id, ...days, datumM: chart.datumM, zone: fishery.zone, origin };
+  const now = await ageNow(ctx, aged);
   const shown = content && (sight.staff || chart.status !== 'withdrawn') ? content : null;
-  const { surveyedFrom, surveyedTo } = surveyDays(chart);
   return {
     id: chart.id,
     lakeId: lake.id,
@@ -35,24 +41,37 @@ export async function chartView(ctx: Ctx, chartId: string): Promise<ChartView> {
     status: chart.status,
     withdrawnReason: chart.withdrawnReason,
     supersededBy: await successor(tx, chart),
-    surveyedFrom,
-    surveyedTo,
+    ...days,
     publishedAt: chart.publishedAt?.toISOString() ?? null,
-    age: await ageNow(ctx, { lakeId: lake.id, surveyedTo, datumM: chart.datumM, zone: fishery.zone }),
+    age: now.age,
+    changes: changesFor(now, sight),
     datumM: chart.datumM,
     levelNow: await levelNow(tx, lake.id, chart.datumM),
     contourStepM: chart.contourStepM,
-    origin: content?.built.origin ?? [lake.originLon, lake.originLat],
+    origin,
     outline: content?.built.outline ?? lake.details.outline,
     ...(await places(tx, lake)),
-    ...(shown ? layersFor(shown, sight) : NOTHING),
+    ...(shown ? layersFor(shown, sight, now) : NOTHING),
     layerNotes: shown ? sight.notes : missingNotes({ chart, lake }, sight),
   };
 }
 
+/** What happened and when is everybody's to know; where, as far as they may see the water at all. */
+export const changesFor = ({ changes }: AgeNow, { sees }: Sight): ChartChange[] =>
+  sees.depth || sees.bottom ? changes : changes.map((change) => ({ ...change, rings: change.rings && [] }));
+
 type Layers = Pick<
   ChartView,
-  'frame' | 'depth' | 'sigma' | 'isobaths' | 'substrate' | 'cover' | 'soundings' | 'hypsography' | 'figures'
+  | 'frame'
+  | 'depth'
+  | 'sigma'
+  | 'isobaths'
+  | 'substrate'
+  | 'cover'
+  | 'soundings'
+  | 'bottomPoints'
+  | 'hypsography'
+  | 'figures'
 >;
 
 const NOTHING: Layers = {
@@ -63,6 +82,7 @@ const NOTHING: Layers = {
   substrate: null,
   cover: null,
   soundings: null,
+  bottomPoints: null,
   hypsography: null,
   figures: null,
 };
@@ -71,6 +91,7 @@ const NOTHING: Layers = {
 export function layersFor(
   { built, frame, depth, sigma, substrate, cover }: ChartContent,
   { sees, staff }: Sight,
+  now: AgeNow,
 ): Layers {
   return {
     frame: sees.depth || sees.bottom ? frame : null,
@@ -79,7 +100,8 @@ export function layersFor(
     isobaths: sees.depth ? built.isobaths : null,
     substrate: sees.bottom ? toBase64(substrate) : null,
     cover: sees.bottom ? toBase64(cover) : null,
-    soundings: sees.soundings ? soundingsFor(built, { bottom: sees.bottom, staff }) : null,
+    soundings: sees.soundings ? soundingsFor(built, { bottom: sees.bottom, staff, now }) : null,
+    bottomPoints: sees.soundings && sees.bottom ? pointsFor(built, { staff, now }) : null,
     hypsography: sees.depth ? built.hypsography : null,
     figures: sees.depth ? built.figures : null,
   };
@@ -87,7 +109,7 @@ export function layersFor(
 
 function soundingsFor(
   { soundings, reports }: ChartContent['built'],
-  sees: { bottom: boolean; staff: boolean },
+  sees: { bottom: boolean; staff: boolean; now: AgeNow },
 ): ChartView['soundings'] {
   const measured = reports.flatMap(({ depthM, sigmaM, ...report }) =>
     depthM === null || sigmaM === null ? [] : [{ ...report, depthM, sigmaM }],
@@ -101,7 +123,24 @@ function soundingsFor(
       depthM,
       sigmaM,
       bottom: sees.bottom ? bottom : 'unknown',
-      grade,
+      grade: gradeNow(grade, { xM, yM }, sees.now),
+    }));
+}
+
+/** Casts and reports that tell of the bottom without a depth. */
+function pointsFor(
+  { points, reports }: ChartContent['built'],
+  { staff, now }: { staff: boolean; now: AgeNow },
+): BottomPoint[] {
+  const felt = reports.filter(({ depthM }) => depthM === null);
+  return [...points, ...felt]
+    .filter(({ grade }) => staff || grade !== 'D')
+    .map(({ id, xM, yM, bottom, grade }) => ({
+      id,
+      xM,
+      yM,
+      bottom,
+      grade: gradeNow(grade, { xM, yM }, now),
     }));
 }
 

@@ -2,7 +2,7 @@ import { Chart } from '@mereward/db/entities/charts/chart';
 import type { CheckView } from '@mereward/shared/charts/contract';
 import type { EntityManager } from 'typeorm';
 import { buildSource, sourceDigest, type BuildSource } from './build-source';
-import type { BuiltSounding } from './built';
+import type { Built, BuiltPoint } from './built';
 import { chartContent } from './chart-layers';
 import type { ChartFound } from './find-chart';
 
@@ -19,7 +19,7 @@ export async function checksOf(tx: EntityManager, { chart, lake }: ChartFound): 
   return [
     builtFresh(built !== null, fresh),
     consented(source),
-    ...(built ? [...built.checks, snagsCarried(await publishedSnags(tx, lake.id), built.soundings)] : []),
+    ...(built ? [...built.checks, snagsCarried(await publishedSnags(tx, lake.id), stillSeen(built))] : []),
   ];
 }
 
@@ -51,13 +51,21 @@ function consented({ visits }: BuildSource): CheckView {
 /** A snag on the chart that is out now must be found again or have been cast over, not be forgotten. */
 const SNAG_WITHIN_M = 3;
 
-async function publishedSnags(tx: EntityManager, lakeId: string): Promise<BuiltSounding[]> {
+type Seen = Pick<BuiltPoint, 'id' | 'xM' | 'yM'>;
+
+/** Casts whose word on what lies there still stands: one from before a snag was taken out does not show that it is gone. */
+const stillSeen = ({ soundings, points }: Built): Seen[] =>
+  [...soundings, ...points].filter(({ coverEnded }) => !coverEnded);
+
+async function publishedSnags(tx: EntityManager, lakeId: string): Promise<Seen[]> {
   const row = await tx.findOne(Chart, { where: { lakeId, status: 'published' }, select: { id: true } });
   const content = row && (await chartContent(tx, row.id));
-  return content?.built.soundings.filter((sounding) => sounding.bottom === 'snag') ?? [];
+  if (!content) return [];
+  const { soundings, points } = content.built;
+  return [...soundings, ...points].filter(({ bottom }) => bottom === 'snag');
 }
 
-function snagsCarried(snags: readonly BuiltSounding[], seen: readonly BuiltSounding[]): CheckView {
+function snagsCarried(snags: readonly Seen[], seen: readonly Seen[]): CheckView {
   const lost = snags.filter(
     (snag) => !seen.some((each) => Math.hypot(each.xM - snag.xM, each.yM - snag.yM) <= SNAG_WITHIN_M),
   );

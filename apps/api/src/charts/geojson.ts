@@ -51,7 +51,14 @@ export function chartGeojson(view: ChartView): FeatureCollection {
   }));
   return {
     type: 'FeatureCollection',
-    features: [lake, ...pegs, ...marks, ...contours(view, place), ...soundings(view, place)],
+    features: [
+      lake,
+      ...pegs,
+      ...marks,
+      ...contours(view, place),
+      ...soundings(view, place),
+      ...bottomPoints(view, place),
+    ],
   };
 }
 
@@ -72,6 +79,16 @@ function pairs(line: readonly number[], place: Place): Position[] {
   return Array.from({ length: Math.floor(line.length / 2) }, (_, i) =>
     place(line[2 * i] ?? 0, line[2 * i + 1] ?? 0),
   );
+}
+
+/** Casts that read no depth: the same kind of feature, its depth null. */
+function bottomPoints({ bottomPoints: felt, version }: ChartView, place: Place): Feature[] {
+  return (felt ?? []).map(({ id, xM, yM, bottom, grade }) => ({
+    type: 'Feature',
+    id,
+    geometry: { type: 'Point', coordinates: place(xM, yM) },
+    properties: { kind: 'cast', depth_at_datum_m: null, sigma_m: null, bottom, grade, chart: version },
+  }));
 }
 
 function soundings({ soundings: seen, version }: ChartView, place: Place): Feature[] {

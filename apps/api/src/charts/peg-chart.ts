@@ -3,7 +3,7 @@ import { Fishery } from '@mereward/db/entities/fisheries/fishery';
 import type { Lake } from '@mereward/db/entities/lakes/lake';
 import { Mark } from '@mereward/db/entities/lakes/mark';
 import type { Peg } from '@mereward/db/entities/lakes/peg';
-import type { ChartAge } from '@mereward/shared/charts/chart-age';
+import type { AgeNow, ChartAge } from '@mereward/shared/charts/chart-age';
 import type { LonLat } from '@mereward/shared/geometry/plane';
 import type { LevelNow } from '@mereward/shared/lakes/contract';
 import type { EntityManager } from 'typeorm';
@@ -24,6 +24,7 @@ export type PegChart = {
   datumM: number;
   contourStepM: number;
   age: ChartAge;
+  ageNow: AgeNow; // with what dates it
   content: ChartContent;
 };
 
@@ -78,5 +79,6 @@ async function publishedChart(ctx: Ctx, lake: Lake, zone: string): Promise<PegCh
   const row = await publishedRow(ctx.tx, lake.id);
   const content = row && (await chartContent(ctx.tx, row.id));
   if (!row || !content) return null;
-  return { ...row, age: await ageNow(ctx, { ...row, lakeId: lake.id, zone }), content };
+  const now = await ageNow(ctx, { ...row, lakeId: lake.id, zone, origin: content.built.origin });
+  return { ...row, age: now.age, ageNow: now, content };
 }

@@ -1,5 +1,5 @@
 import { Spot } from '@mereward/db/entities/charts/spot';
-import { AGE_WORDS } from '@mereward/shared/charts/chart-age';
+import { ageWords } from '@mereward/shared/charts/chart-age';
 import { chartCaution, EMERGENCY, overheadCaution } from '@mereward/shared/charts/cautions';
 import type { LayerNotes, PegPageView, SpotView } from '@mereward/shared/charts/contract';
 import { RIG_CAUTION } from '@mereward/shared/charts/presentation';
@@ -8,6 +8,7 @@ import type { Ctx } from '../ctx';
 import { photosOf } from '../files/queries';
 import { pegDetailsFor } from '../lakes/queries';
 import { layersOf } from './chart-layers';
+import { changesFor } from './chart-view';
 import { pegGround, type PegGround } from './peg-chart';
 import { pegExtract } from './peg-extract';
 import { spotView } from './spot-view';
@@ -42,7 +43,15 @@ export async function pegPage(ctx: Ctx, pegId: string): Promise<PegPageView> {
     photos: photos.get(pegId) ?? [],
     chart:
       id && version && surveyedFrom && surveyedTo && datumM !== undefined && age
-        ? { id, version, surveyedFrom, surveyedTo, datumM, age }
+        ? {
+            id,
+            version,
+            surveyedFrom,
+            surveyedTo,
+            datumM,
+            age,
+            changes: chart ? changesFor(chart.ageNow, sight) : [],
+          }
         : null,
     levelNow: ground.levelNow,
     spots: sight.sees.spots ? await spotsOf(ctx.tx, ground) : null,
@@ -83,6 +92,9 @@ function notesOf({ chart, sight: { notes } }: PegGround): LayerNotes {
 
 function cautionsOf({ peg, chart }: PegGround): string[] {
   const overhead = overheadCaution(peg.details);
-  const changed = chart && (chart.age === 'changed' || chart.age === 'old') ? AGE_WORDS[chart.age] : null;
+  const changed =
+    chart && (chart.age === 'changed' || chart.age === 'old')
+      ? ageWords(chart.age, chart.ageNow.changes)
+      : null;
   return [overhead, changed && `${changed}.`, chart && chartCaution(chart)].filter((words) => words !== null);
 }

@@ -85,6 +85,8 @@ export async function chartReview(ctx: Ctx, chartId: string): Promise<ChartRevie
     lakeName: lake.name,
     checks,
     quality: content?.built.quality ?? null,
+    ended: content?.built.ended ?? [],
+    bottomTable: content?.built.bottomTable ?? 0,
     misses: content ? await soundingMisses(tx, content.built) : [],
     may: {
       submit: builder && chart.status === 'draft' && !building && !blocked,

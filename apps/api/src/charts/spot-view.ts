@@ -1,5 +1,6 @@
 import type { Spot } from '@mereward/db/entities/charts/spot';
 import { BOTTOM_OF_COVER, BOTTOM_OF_SUBSTRATE } from '@mereward/shared/charts/bottom-words';
+import { gradeNow } from '@mereward/shared/charts/chart-age';
 import { readChart, type ChartLayers, type ChartReading } from '@mereward/shared/charts/chart-reading';
 import type { SpotView } from '@mereward/shared/charts/contract';
 import { PRESENTATION } from '@mereward/shared/charts/presentation';
@@ -115,7 +116,7 @@ function quoted({ chart, cast, reading }: Source): Quoted {
       quotedFrom: 'cast',
       surveyLevelM: chart.datumM + cast.depthAsReadM - cast.depthM, // the water over datum at that hour
       depthAtSurveyM: cast.depthAsReadM,
-      grade: cast.grade,
+      grade: gradeNow(cast.grade, cast, chart.ageNow),
       surveyedOn: cast.observedOn,
     };
   if (!chart || !reading || (reading.depthM === null && reading.bottom === null)) return UNSURVEYED;

@@ -1,4 +1,5 @@
 import { z } from 'zod';
+import { Bottom, Grade } from '../surveys/contract';
 
 /** How one bottom map was made, and how well it foretells a cast that it was not shown. */
 export const BottomQuality = z.object({
@@ -27,6 +28,7 @@ export const BottomPoint = z.object({
   id: z.string(),
   xM: z.number(),
   yM: z.number(),
-  bottom: z.string(),
-  grade: z.enum(['A', 'B', 'C', 'D']),
+  bottom: Bottom,
+  grade: Grade,
 });
+export type BottomPoint = z.infer<typeof BottomPoint>;

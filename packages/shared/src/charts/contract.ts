@@ -3,7 +3,8 @@ import { Position, Version } from '../fisheries/contract';
 import { LakePolygon, LevelNow, PhotoView } from '../lakes/contract';
 import { PlaceWater } from '../lakes/peg-water-contract';
 import { Bottom, Cover, Grade, Substrate } from '../surveys/contract';
-import { BottomQualityView } from './bottom-quality-contract';
+import { BottomPoint, BottomQualityView, EndedEvidence } from './bottom-quality-contract';
+import { ChartChange } from './chart-change-contract';
 import { SoundingMiss, SoundingMissView } from './sounding-miss';
 
 /** draft → submitted → approved by another → published; then superseded by the next, or withdrawn. */
@@ -81,6 +82,8 @@ export const ChartReview = z.object({
   lakeName: z.string(),
   checks: z.array(CheckView),
   quality: QualityView.nullable(),
+  ended: z.array(EndedEvidence).default([]), // what events since the casts took out of it
+  bottomTable: z.int().default(0), // version of the table of feels it was made with; 0 is the built-in
   misses: z.array(SoundingMissView).default([]), // the flagged and the worst ten, worst first
   may: z.object({
     submit: z.boolean(),
@@ -135,6 +138,7 @@ export const ChartView = z.object({
   surveyedTo: z.iso.date(),
   publishedAt: z.iso.datetime().nullable(),
   age: z.enum(['current', 'ageing', 'old', 'changed']),
+  changes: z.array(ChartChange).optional(), // what dates it, newest first
   datumM: z.number(),
   levelNow: LevelNow.nullable(), // against this chart's datum
   contourStepM: z.number(),
@@ -175,6 +179,7 @@ export const ChartView = z.object({
       }),
     )
     .nullable(),
+  bottomPoints: z.array(BottomPoint).nullable().optional(), // casts that read no depth, most snags among them
   hypsography: z.array(z.object({ depthM: z.number(), areaM2: z.number(), volumeM3: z.number() })).nullable(),
   figures: z
     .object({
@@ -288,6 +293,7 @@ export const PegPageView = z.object({
       surveyedTo: z.iso.date(),
       datumM: z.number(),
       age: z.enum(['current', 'ageing', 'old', 'changed']),
+      changes: z.array(ChartChange).optional(), // what dates it, newest first
     })
     .nullable(),
   levelNow: LevelNow.nullable(), // against this chart's datum
