@@ -3,6 +3,7 @@
 // within 10 % of the better of linear and kriging, since samples of one bed are one draw.
 import { expect, test } from 'vitest';
 import { krige } from '@mereward/shared/charts/kriging';
+import { nearestDistancesM } from '@mereward/shared/charts/nearest';
 import { chooseSurface } from '@mereward/shared/charts/surface-choice';
 import { volcano } from './fixtures';
 
@@ -21,6 +22,7 @@ test.each([
       shoreDistanceM: new Float64Array(count),
       gapM,
       maxGapM: 15,
+      awayM: nearestDistancesM(samples, targets),
     };
     const { best, validation } = chooseSurface(input, () => undefined);
     const { valuesM } = krige(best.setup, targets, 24);

@@ -12,6 +12,7 @@ import { gridTriangles, hypsography, shorelineDevelopment } from './hypsography'
 import type { HypsographicStep } from './hypsography';
 import { deeperRegions, isobathLevels, isobaths } from './isobaths';
 import type { Isobath } from './isobaths';
+import { nearWater } from './near-water';
 import { chartSamples, flagOutliers } from './samples';
 import type { ChartSamples } from './samples';
 import { requirePlaces, sortSoundings } from './sounding-roles';
@@ -72,9 +73,10 @@ export function buildChart(input: ChartInput, report: (step: string, share: numb
   const soundingCount = samples.soundingIds.length;
   requirePlaces(soundingCount);
   const shoreDistanceM = shoreDistancesM(input.outline, samples.points);
+  const near = nearWater({ outline: input.outline, frame, samples, maxGapM: input.maxGapM });
   report('Choosing the variogram', 0.05);
   const chosen = chooseSurface(
-    { ...samples, soundingCount, shoreDistanceM, maxGapM: input.maxGapM },
+    { ...samples, soundingCount, shoreDistanceM, maxGapM: input.maxGapM, awayM: near.soundingDistanceM },
     (share) => report('Choosing the variogram', (5 + 40 * share) / 100),
   );
   report('Kriging the depths', 0.45);
@@ -85,6 +87,7 @@ export function buildChart(input: ChartInput, report: (step: string, share: numb
       samples,
       chosen: chosen.best,
       misses: chosen.misses,
+      near,
       maxGapM: input.maxGapM,
     },
     (share) => report('Kriging the depths', (45 + 40 * share) / 100),

@@ -5,18 +5,18 @@ import { columnXM, emptyGrid, rowYM } from './grid';
 import type { Grid, GridFrame } from './grid';
 import { solveGlobal } from './kriging-global';
 import { predictByTable } from './kriging-table';
-import { DEFAULT_NEIGHBOURS } from './kriging';
+import { krigeBlended } from './kriging-blend';
 import { krigeNeighbourhood } from './kriging-neighbourhood';
 import type { KrigingSetup } from './kriging-setup';
-import { MOST_GAP_M, surveyedPlaces } from './mask';
+import { surveyedPlaces } from './mask';
+import type { NearWater } from './near-water';
 import type { Targets } from './sample-points';
-import { soundingDistancesM } from './samples';
 import type { ChartSamples } from './samples';
 import { shoreDrift } from './shore-drift';
 import { localSpread } from './local-spread';
 import type { Misses } from './local-spread';
-import type { Candidate } from './surface-choice';
-import { placesOf, rimNodes, shoreDistancesM, waterNodes } from './water-nodes';
+import type { Candidate } from './surface-candidates';
+import { rimNodes, shoreDistancesM } from './water-nodes';
 
 export type SurfaceInput = {
   outline: Outline;
@@ -24,6 +24,7 @@ export type SurfaceInput = {
   samples: ChartSamples;
   chosen: Candidate;
   misses: Misses;
+  near: NearWater;
   maxGapM: number;
 };
 
@@ -38,24 +39,19 @@ export type ChartSurface = {
 
 /** Neighbours used for σ. More change it by under 1 %; fewer than all never understate it. */
 const SIGMA_NEIGHBOURS = 16;
-const CHUNK = 8192;
-/**
- * A moving neighbourhood leaves small steps where its members change, and isobaths show them as jags; so the drawn depth uses
- * all samples at once further than `krige` does, while memory (8 n² bytes) and time (n³/3) stay small.
- */
+const CHUNK = 16_384; // of places, between two words on how far it is
+/** The drawn depth uses all samples at once while memory (8 n² bytes) and time (n³/3) stay small, above that blended patches. */
 const AT_ONCE_LIMIT = 2000;
 
 /**
- * Depth and σ at every water node near enough to a sounding. Depths use all samples at once (nearest 24 above 2000); σ uses
- * the nearest 16, which never understates the σ of all. σ holds the nugget: what the bed does between casts is part of
+ * Depth and σ at every water node near enough to a sounding. Depths use all samples at once (blended patches above
+ * 2000); σ uses 16 by octant, which never understates the σ of all. σ holds the nugget: what the bed does between casts is part of
  * not knowing the depth at a place, while the drawn depth leaves it out; and it is widened or narrowed by how well the
  * soundings round about were foretold.
  */
 export function chartSurface(input: SurfaceInput, report: (share: number) => void): ChartSurface {
   const { outline, frame, samples, chosen, misses, maxGapM } = input;
-  const water = waterNodes(outline, frame);
-  const near = nodesNear(input, water);
-  const places = placesOf(near, frame);
+  const { water, soundingDistanceM, ...places } = input.near;
   const shoreDistanceM = shoreDistancesM(outline, places);
   const targets = withDrift(chosen, places, shoreDistanceM);
   const variance = inChunks(
@@ -65,7 +61,6 @@ export function chartSurface(input: SurfaceInput, report: (share: number) => voi
   );
   const spread = localSpread(misses, places, maxGapM);
   const sigmaM = variance.map((v, t) => Math.sqrt((v + chosen.setup.variogram.nuggetM2) * spread[t]!));
-  const soundingDistanceM = soundingDistancesM(samples, places);
   const spreadM = spreadOf(samples);
   const kept = surveyedPlaces({ soundingDistanceM, sigmaM, spreadM }, maxGapM);
   const surveyed = new Uint8Array(water.length);
@@ -86,18 +81,8 @@ export function chartSurface(input: SurfaceInput, report: (share: number) => voi
   return { depth, sigma, withRim, water, surveyed };
 }
 
-/** Water nodes within the widest limit of some sounding; the rest cannot count as surveyed and need no kriging. */
-function nodesNear({ frame, samples, maxGapM }: SurfaceInput, water: Uint8Array): Uint8Array {
-  const all = placesOf(water, frame);
-  const distanceM = soundingDistancesM(samples, all);
-  const near = new Uint8Array(water.length);
-  const limitM = Math.min(maxGapM, MOST_GAP_M);
-  all.nodes.forEach((node, t) => (near[node] = distanceM[t]! <= limitM ? 1 : 0));
-  return near;
-}
-
 function varianceAt(setup: KrigingSetup, targets: Targets): Float64Array {
-  return krigeNeighbourhood(setup, targets, { neighbours: SIGMA_NEIGHBOURS }).varianceM2;
+  return krigeNeighbourhood(setup, targets, { neighbours: SIGMA_NEIGHBOURS, by: 'octant' }).varianceM2;
 }
 
 function withDrift({ driftLengthM }: Candidate, places: Targets, shoreDistanceM: Float64Array): Targets {
@@ -112,7 +97,7 @@ function predictorOf(setup: KrigingSetup): Predict {
     const model = solveGlobal(setup);
     return (targets) => predictByTable(model, targets);
   }
-  return (targets) => krigeNeighbourhood(setup, targets, { neighbours: DEFAULT_NEIGHBOURS }).valuesM;
+  return (targets) => krigeBlended(setup, targets);
 }
 
 function inChunks(targets: Targets, predict: Predict, report: (share: number) => void): Float64Array {

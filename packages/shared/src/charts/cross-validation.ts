@@ -11,10 +11,11 @@ import type { KrigingSetup } from './kriging-setup';
  */
 export type LeaveOneOut = { residualM: Float64Array; varianceM2: Float64Array };
 
+/** In closed form up to 800 samples, above that from 24 by octant; `neighbours` asks for so many of the nearest. */
 export function leaveOneOut(setup: KrigingSetup, neighbours?: number): LeaveOneOut {
   const count = setup.samples.xM.length;
   if (neighbours === undefined && count <= GLOBAL_LIMIT) return leaveOneOutGlobal(solveGlobal(setup));
-  return leaveOneOutNear(setup, neighbours ?? DEFAULT_NEIGHBOURS);
+  return leaveOneOutNear(setup, neighbours ?? DEFAULT_NEIGHBOURS, neighbours === undefined);
 }
 
 /**
@@ -41,10 +42,14 @@ export function leaveOneOutGlobal(model: GlobalKriging): LeaveOneOut {
   return { residualM, varianceM2 };
 }
 
-function leaveOneOutNear(setup: KrigingSetup, neighbours: number): LeaveOneOut {
+function leaveOneOutNear(setup: KrigingSetup, neighbours: number, byOctant: boolean): LeaveOneOut {
   const { xM, yM, valueM, errorVarianceM2 } = setup.samples;
   const targets = setup.driftM === undefined ? { xM, yM } : { xM, yM, driftM: setup.driftM };
-  const predicted = krigeNeighbourhood(setup, targets, { neighbours, leaveOneOut: true });
+  const predicted = krigeNeighbourhood(setup, targets, {
+    neighbours,
+    by: byOctant ? 'octant' : 'nearest',
+    leaveOneOut: true,
+  });
   const nuggetM2 = setup.nuggetIs === 'noise' ? setup.variogram.nuggetM2 : 0;
   return {
     residualM: valueM.map((value, i) => value - predicted.valuesM[i]!),

@@ -1,4 +1,4 @@
-import { indexSamples } from './sample-index';
+import { forEachBucketWithin, indexSamples } from './sample-index';
 
 /** Soundings that were foretold, and the square of each miss over its stated variance; 1 on average when σ is honest. */
 export type Misses = { xM: Float64Array; yM: Float64Array; squaredSigmas: Float64Array };
@@ -22,15 +22,10 @@ export function localSpread(
   const perWidth2 = 1 / (2 * widthM * widthM);
   return places.xM.map((x, t) => {
     const y = places.yM[t]!;
-    const west = Math.max(0, Math.floor((x - reachM - index.westM) / index.bucketM));
-    const east = Math.min(index.columns - 1, Math.floor((x + reachM - index.westM) / index.bucketM));
-    const south = Math.max(0, Math.floor((y - reachM - index.southM) / index.bucketM));
-    const north = Math.min(index.rows - 1, Math.floor((y + reachM - index.southM) / index.bucketM));
     let weights = PRIOR_SOUNDINGS;
     let sum = PRIOR_SOUNDINGS * mean;
-    for (let row = south; row <= north && west <= east; row++) {
-      const to = index.starts[row * index.columns + east + 1]!;
-      for (let m = index.starts[row * index.columns + west]!; m < to; m++) {
+    forEachBucketWithin(index, { xM: x, yM: y, reachM }, (from, to) => {
+      for (let m = from; m < to; m++) {
         const id = index.members[m]!;
         const dx = misses.xM[id]! - x;
         const dy = misses.yM[id]! - y;
@@ -40,7 +35,7 @@ export function localSpread(
         weights += weight;
         sum += weight * misses.squaredSigmas[id]!;
       }
-    }
+    });
     return sum / weights;
   });
 }

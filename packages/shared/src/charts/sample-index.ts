@@ -40,6 +40,22 @@ export function indexSamples(xM: Float64Array, yM: Float64Array): SampleIndex {
   return { xM, yM, westM, southM, bucketM, columns, rows, starts, members };
 }
 
+type Within = { xM: number; yM: number; reachM: number };
+
+/** Calls `visit` with stretches of `members` that together hold every sample of the square round a place, and some beyond. */
+export function forEachBucketWithin(
+  { westM, southM, bucketM, columns, rows, starts }: SampleIndex,
+  { xM, yM, reachM }: Within,
+  visit: (from: number, to: number) => void,
+): void {
+  const west = Math.max(0, Math.floor((xM - reachM - westM) / bucketM));
+  const east = Math.min(columns - 1, Math.floor((xM + reachM - westM) / bucketM));
+  const south = Math.max(0, Math.floor((yM - reachM - southM) / bucketM));
+  const north = Math.min(rows - 1, Math.floor((yM + reachM - southM) / bucketM));
+  for (let row = south; row <= north && west <= east; row++)
+    visit(starts[row * columns + west]!, starts[row * columns + east + 1]!);
+}
+
 function box(xM: Float64Array, yM: Float64Array) {
   let westM = Infinity;
   let eastM = -Infinity;

@@ -1,28 +1,12 @@
 import { leaveOneOut, summarise } from './cross-validation';
 import type { CrossValidation, LeaveOneOut } from './cross-validation';
-import { DEFAULT_NEIGHBOURS } from './kriging';
-import { krigeNeighbourhood } from './kriging-neighbourhood';
+import { askedSoundings, foretell, meanLogDensity } from './foretelling';
+import type { Asked } from './foretelling';
 import { localSpread } from './local-spread';
 import type { Misses } from './local-spread';
-import type { KrigingSetup } from './kriging-setup';
-import type { SamplePoints } from './sample-points';
-import { fitShoreDrift, shoreDrift } from './shore-drift';
-import { empiricalVariogram, VARIOGRAM_MODELS } from './variogram';
-import type { LagBin, VariogramModel } from './variogram';
-import { fitVariogram } from './variogram-fit';
-
-const ESTIMATES = ['matheron', 'robust'] as const;
-
-/** One way of making the surface, and how well it foretells soundings left out, from the nearest 24 samples. */
-export type Candidate = {
-  model: VariogramModel;
-  estimate: (typeof ESTIMATES)[number];
-  driftLengthM: number | null; // of the distance to the shore as drift; null: ordinary kriging
-  setup: KrigingSetup;
-  rmseM: number; // leave-one-out, over the soundings
-  standardisedVariance: number;
-  gapScore: number; // mean log density of the soundings when all others within half the gap are left out too
-};
+import { surfaceCandidates } from './surface-candidates';
+import type { Candidate, CandidateInput } from './surface-candidates';
+import type { VariogramModel } from './variogram';
 
 export type ChosenSurface = {
   best: Candidate;
@@ -33,12 +17,9 @@ export type ChosenSurface = {
   words: string;
 };
 
-export type ChoiceInput = {
-  points: SamplePoints; // soundings first, shore points behind them
-  soundingCount: number;
-  shoreDistanceM: Float64Array; // of each sample
-  gapM: number; // mean distance from a sounding to its nearest other
+export type ChoiceInput = CandidateInput & {
   maxGapM: number; // widest gap that is still drawn
+  awayM: Float64Array; // from places drawn on the chart to their nearest sounding
 };
 
 const NEARLY_AS_GOOD = 1.04;
@@ -51,25 +32,19 @@ const MODEL_WORDS: Record<VariogramModel, string> = {
 };
 
 /**
- * Fits every variogram model to both estimates of the variogram, with and without the distance to the shore as external
- * drift, and keeps the one that foretells left-out soundings best. Of those within 4 % of the least leave-one-out error
- * the one is taken that gives soundings most likelihood when everything within half the widest gap is left out too:
- * σ is needed between casts, where leaving out one of two close readings teaches nothing. Their sills are first scaled so
- * that such soundings are missed by what σ says, unless that would foretell worse. `report` hears the share done.
+ * Tries every way of making the surface and keeps the one that foretells left-out soundings best. Of those within 4 % of
+ * the least leave-one-out error the one is taken that gives soundings most likelihood when those round about are left out
+ * too, as far as places of the chart lie from their nearest sounding: σ is needed between casts, where leaving out one of
+ * two close readings teaches nothing. Their sills are first scaled so that such soundings are missed by what σ says, unless
+ * that would foretell worse. `report` hears the share done.
  */
 export function chooseSurface(input: ChoiceInput, report: (share: number) => void): ChosenSurface {
-  const candidates: Candidate[] = [];
-  const trends = trendsOf(input);
-  for (const trend of trends) {
-    for (const model of VARIOGRAM_MODELS) {
-      for (const estimate of ESTIMATES) candidates.push(tryModel(input, trend, { model, estimate }));
-      report((0.6 * candidates.length) / (trends.length * VARIOGRAM_MODELS.length * ESTIMATES.length));
-    }
-  }
+  const asked = askedSoundings(input.points, input.soundingCount, input.awayM);
+  const candidates = surfaceCandidates(input, asked, (share) => report(0.6 * share));
   const least = Math.min(...candidates.map((c) => c.rmseM));
-  const near = candidates.filter((c) => c.rmseM <= least * NEARLY_AS_GOOD).map((c) => madeHonest(c, input));
+  const near = candidates.filter((c) => c.rmseM <= least * NEARLY_AS_GOOD).map((c) => madeHonest(c, asked));
   const best = near.reduce((a, b) => (b.gapScore > a.gapScore ? b : a));
-  const misses = missesOf(best.setup, input);
+  const misses = missesOf(best, asked);
   const residuals = spreadResiduals(leaveOneOut(best.setup), misses, input);
   report(1);
   const validation = summarise(residuals, input.soundingCount);
@@ -83,50 +58,14 @@ export function chooseSurface(input: ChoiceInput, report: (share: number) => voi
   };
 }
 
-type Trend = { driftLengthM: number | null; bins: LagBin[] };
-
-function trendsOf(input: ChoiceInput): Trend[] {
-  const { points, shoreDistanceM } = input;
-  const plain: Trend = { driftLengthM: null, bins: binsOf(input, points) };
-  const drift = fitShoreDrift(points, shoreDistanceM);
-  if (drift === null) return [plain];
-  return [plain, { driftLengthM: drift.lengthM, bins: binsOf(input, drift.residual) }];
-}
-
-/** Lags out to a dozen gaps between casts: kriging lives on the first few, so they get bins of their own. */
-function binsOf({ gapM, soundingCount }: ChoiceInput, points: SamplePoints): LagBin[] {
-  const fine = empiricalVariogram(points, { cutoffM: 12 * gapM, bins: 20, exactFrom: soundingCount });
-  return fine.length >= 8 ? fine : empiricalVariogram(points, { exactFrom: soundingCount });
-}
-
-function tryModel(input: ChoiceInput, trend: Trend, kind: Pick<Candidate, 'model' | 'estimate'>): Candidate {
-  const { points, shoreDistanceM } = input;
-  const fit = fitVariogram(trend.bins, kind.model, { estimate: kind.estimate });
-  // A flat bed leaves no variation to model; the least sill keeps the system solvable and σ at a millimetre.
-  const partialSillM2 = Math.max(fit.partialSillM2, 1e-6);
-  // A Gaussian without nugget is singular to rounding; one part in a thousand of the sill is the usual cure.
-  const nuggetM2 = kind.model === 'gaussian' ? Math.max(fit.nuggetM2, 1e-3 * partialSillM2) : fit.nuggetM2;
-  const { driftLengthM } = trend;
-  const setup: KrigingSetup = {
-    samples: points,
-    variogram: { model: kind.model, nuggetM2, partialSillM2, rangeM: fit.rangeM },
-    nuggetIs: 'noise',
-    ...(driftLengthM === null ? {} : { driftM: shoreDrift(shoreDistanceM, driftLengthM) }),
-  };
-  const alone = foretell(setup, input, 0);
-  const { rmseM, standardisedVariance } = summarise(alone);
-  const gapScore = meanLogDensity(foretell(setup, input, input.maxGapM / 2));
-  return { ...kind, driftLengthM, setup, rmseM, standardisedVariance, gapScore };
-}
-
 /**
  * The candidate with sill and nugget scaled together until soundings left out with their neighbourhood are missed by what σ
  * says: standardised variance 1, in three steps. Left as it was when that would foretell single soundings worse.
  */
-function madeHonest(candidate: Candidate, input: ChoiceInput): Candidate {
+function madeHonest(candidate: Candidate, asked: Asked): Candidate {
   let { setup } = candidate;
   for (let step = 0; step < 3; step++) {
-    const { standardisedVariance } = summarise(foretell(setup, input, input.maxGapM / 2));
+    const { standardisedVariance } = summarise(foretell(setup, asked, true));
     const { variogram } = setup;
     const scale = Math.min(10, Math.max(0.1, standardisedVariance));
     setup = {
@@ -138,17 +77,18 @@ function madeHonest(candidate: Candidate, input: ChoiceInput): Candidate {
       },
     };
   }
-  const { rmseM, standardisedVariance } = summarise(foretell(setup, input, 0));
+  const { rmseM, standardisedVariance } = summarise(foretell(setup, asked, false));
   if (rmseM > candidate.rmseM) return candidate; // σ alone is scaled then, place by place
-  const gapScore = meanLogDensity(foretell(setup, input, input.maxGapM / 2));
+  const gapScore = meanLogDensity(foretell(setup, asked, true));
   return { ...candidate, setup, rmseM, standardisedVariance, gapScore };
 }
 
-function missesOf(setup: KrigingSetup, input: ChoiceInput): Misses {
-  const { residualM, varianceM2 } = foretell(setup, input, input.maxGapM / 2);
+function missesOf({ setup }: Candidate, asked: Asked): Misses {
+  const { residualM, varianceM2 } = foretell(setup, asked, true);
+  const { xM, yM } = setup.samples;
   return {
-    xM: setup.samples.xM.slice(0, input.soundingCount),
-    yM: setup.samples.yM.slice(0, input.soundingCount),
+    xM: Float64Array.from(asked.rows, (row) => xM[row]!),
+    yM: Float64Array.from(asked.rows, (row) => yM[row]!),
     squaredSigmas: residualM.map((r, i) => (r * r) / varianceM2[i]!),
   };
 }
@@ -157,39 +97,15 @@ function missesOf(setup: KrigingSetup, input: ChoiceInput): Misses {
 function spreadResiduals(
   { residualM, varianceM2 }: LeaveOneOut,
   misses: Misses,
-  input: ChoiceInput,
+  { points, soundingCount, maxGapM }: ChoiceInput,
 ): LeaveOneOut {
-  const spread = localSpread(misses, misses, input.maxGapM);
-  const { errorVarianceM2 } = input.points;
+  const { xM, yM, errorVarianceM2 } = points;
+  const places = { xM: xM.subarray(0, soundingCount), yM: yM.subarray(0, soundingCount) };
+  const spread = localSpread(misses, places, maxGapM);
   return {
-    residualM: residualM.slice(0, input.soundingCount),
+    residualM: residualM.slice(0, soundingCount),
     varianceM2: spread.map((s, i) => (varianceM2[i]! - errorVarianceM2[i]!) * s + errorVarianceM2[i]!),
   };
-}
-
-/** Each sounding from its nearest 24, itself and the soundings within `withinM` metres left out. */
-function foretell(setup: KrigingSetup, { soundingCount }: ChoiceInput, withinM: number): LeaveOneOut {
-  const { xM, yM, valueM, errorVarianceM2 } = setup.samples;
-  const targets = { xM: xM.subarray(0, soundingCount), yM: yM.subarray(0, soundingCount) };
-  const { driftM } = setup;
-  const found = krigeNeighbourhood(
-    setup,
-    driftM === undefined ? targets : { ...targets, driftM: driftM.subarray(0, soundingCount) },
-    { neighbours: DEFAULT_NEIGHBOURS, leaveOneOut: true, leaveNearOut: { withinM, count: soundingCount } },
-  );
-  return {
-    residualM: found.valuesM.map((value, i) => valueM[i]! - value),
-    varianceM2: found.varianceM2.map((v, i) => v + errorVarianceM2[i]! + setup.variogram.nuggetM2),
-  };
-}
-
-function meanLogDensity({ residualM, varianceM2 }: LeaveOneOut): number {
-  let sum = 0;
-  for (let i = 0; i < residualM.length; i++) {
-    const variance = Math.max(varianceM2[i]!, 1e-9);
-    sum -= 0.5 * (Math.log(2 * Math.PI * variance) + (residualM[i]! * residualM[i]!) / variance);
-  }
-  return sum / residualM.length;
 }
 
 /** In words, for the report: "Matérn 3/2 variogram, fitted robustly, with the distance to the shore". */

@@ -1,3 +1,4 @@
+import { forEachBucketWithin, indexSamples } from './sample-index';
 import type { SamplePoints } from './sample-points';
 
 export const VARIOGRAM_MODELS = ['spherical', 'exponential', 'gaussian', 'matern32', 'matern52'] as const;
@@ -39,22 +40,28 @@ export function empiricalVariogram(samples: SamplePoints, options: EmpiricalOpti
   const { xM, yM, valueM, errorVarianceM2 } = samples;
   const perM = bins / cutoffM;
   const cutoff2 = cutoffM * cutoffM;
-  for (let i = 1; i < xM.length; i++) {
+  const index = indexSamples(xM, yM);
+  for (let i = 0; i < xM.length; i++) {
+    // Each pair once: i with the soundings before it.
     const end = i < exactFrom ? i : Math.min(i, exactFrom);
-    for (let j = 0; j < end; j++) {
-      const dx = xM[i]! - xM[j]!;
-      const dy = yM[i]! - yM[j]!;
-      const h2 = dx * dx + dy * dy;
-      if (h2 >= cutoff2 || h2 === 0) continue;
-      const h = Math.sqrt(h2);
-      const difference = Math.abs(valueM[i]! - valueM[j]!);
-      const p = Math.min(bins - 1, Math.floor(h * perM)) * 5;
-      sums[p] = sums[p]! + 1;
-      sums[p + 1] = sums[p + 1]! + h;
-      sums[p + 2] = sums[p + 2]! + difference * difference;
-      sums[p + 3] = sums[p + 3]! + Math.sqrt(difference);
-      sums[p + 4] = sums[p + 4]! + (errorVarianceM2[i]! + errorVarianceM2[j]!) / 2;
-    }
+    forEachBucketWithin(index, { xM: xM[i]!, yM: yM[i]!, reachM: cutoffM }, (from, to) => {
+      for (let m = from; m < to; m++) {
+        const j = index.members[m]!;
+        if (j >= end) continue;
+        const dx = xM[i]! - xM[j]!;
+        const dy = yM[i]! - yM[j]!;
+        const h2 = dx * dx + dy * dy;
+        if (h2 >= cutoff2 || h2 === 0) continue;
+        const h = Math.sqrt(h2);
+        const difference = Math.abs(valueM[i]! - valueM[j]!);
+        const p = Math.min(bins - 1, Math.floor(h * perM)) * 5;
+        sums[p] = sums[p]! + 1;
+        sums[p + 1] = sums[p + 1]! + h;
+        sums[p + 2] = sums[p + 2]! + difference * difference;
+        sums[p + 3] = sums[p + 3]! + Math.sqrt(difference);
+        sums[p + 4] = sums[p + 4]! + (errorVarianceM2[i]! + errorVarianceM2[j]!) / 2;
+      }
+    });
   }
   return binsFrom(sums);
 }
