@@ -1,6 +1,7 @@
 import type { LeaveOneOut } from './cross-validation';
 import { DEFAULT_NEIGHBOURS } from './kriging';
-import { krigeNeighbourhood } from './kriging-neighbourhood';
+import { krigeRows, neighbourRows } from './kriging-neighbourhood';
+import type { NeighbourRows } from './kriging-neighbourhood';
 import type { KrigingSetup } from './kriging-setup';
 import { indexSamples, NearestSearch } from './sample-index';
 import type { SamplePoints } from './sample-points';
@@ -9,11 +10,11 @@ import type { SamplePoints } from './sample-points';
 const MOST_ASKED = 1000;
 const RINGS_SEEN = 48; // nearest others among which the distance to leave out is sought
 
+/** The soundings asked, and from which others each is foretold. */
 export type Asked = {
-  soundingCount: number; // soundings stand first among the samples
   rows: Int32Array; // sample numbers of the soundings asked, ascending
-  /** Around each: leaving out soundings nearer than this puts the nearest left as far away as places of the chart have theirs. */
-  apartM: Float64Array;
+  alone: NeighbourRows; // each with itself left out
+  apart: NeighbourRows; // each with those round it left out as well: as far from its nearest as places of the chart are
 };
 
 /**
@@ -46,30 +47,33 @@ export function askedSoundings(points: SamplePoints, soundingCount: number, away
     // Samples strictly nearer than the one wanted as nearest are left out.
     apartM[at] = nearest === 0 ? 0 : others[nearest]!;
   });
-  return { soundingCount, rows, apartM };
+  const targets = { xM: picked(xM, rows), yM: picked(yM, rows) };
+  const leaving = {
+    neighbours: DEFAULT_NEIGHBOURS,
+    by: 'octant',
+    leaveOneOut: true,
+    samplesOf: rows,
+  } as const;
+  const leaveNearOut = { withinM: apartM, count: soundingCount };
+  return {
+    rows,
+    alone: neighbourRows(points, targets, leaving),
+    apart: neighbourRows(points, targets, { ...leaving, leaveNearOut }),
+  };
 }
 
+const picked = (column: Float64Array, rows: Int32Array) => Float64Array.from(rows, (row) => column[row]!);
+
 /**
- * Each asked sounding from 24 others by octant: alone left out, or with those `apart` round it as well. Residual measured −
+ * Each asked sounding from 24 others by octant: alone left out, or with those round it as well. Residual measured −
  * foretold, metres, and the variance of that difference.
  */
-export function foretell(setup: KrigingSetup, asked: Asked, apart: boolean): LeaveOneOut {
+export function foretell(setup: KrigingSetup, asked: Asked, leftOut: 'alone' | 'apart'): LeaveOneOut {
   const { xM, yM, valueM, errorVarianceM2 } = setup.samples;
-  const { rows, apartM, soundingCount } = asked;
-  const of = (column: Float64Array) => Float64Array.from(rows, (row) => column[row]!);
-  const targets = { xM: of(xM), yM: of(yM) };
-  const { driftM } = setup;
-  const found = krigeNeighbourhood(
-    setup,
-    driftM === undefined ? targets : { ...targets, driftM: of(driftM) },
-    {
-      neighbours: DEFAULT_NEIGHBOURS,
-      by: 'octant',
-      leaveOneOut: true,
-      samplesOf: rows,
-      ...(apart ? { leaveNearOut: { withinM: apartM, count: soundingCount } } : {}),
-    },
-  );
+  const { rows } = asked;
+  const places = { xM: picked(xM, rows), yM: picked(yM, rows) };
+  const targets = setup.driftM === undefined ? places : { ...places, driftM: picked(setup.driftM, rows) };
+  const found = krigeRows(setup, targets, asked[leftOut]);
   return {
     residualM: found.valuesM.map((value, i) => valueM[rows[i]!]! - value),
     varianceM2: found.varianceM2.map((v, i) => v + errorVarianceM2[rows[i]!]! + setup.variogram.nuggetM2),

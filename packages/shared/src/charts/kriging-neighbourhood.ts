@@ -2,8 +2,8 @@ import { requireDrift } from './kriging-setup';
 import type { KrigingSetup, Prediction } from './kriging-setup';
 import { LocalSystem } from './local-system';
 import { OctantSearch } from './octant-search';
-import type { Targets } from './sample-points';
 import { indexSamples, NearestSearch } from './sample-index';
+import type { SamplePoints, Targets } from './sample-points';
 
 export type NeighbourhoodOptions = {
   neighbours: number;
@@ -26,25 +26,83 @@ export function krigeNeighbourhood(
   targets: Targets,
   options: NeighbourhoodOptions,
 ): Prediction {
+  const search = searchOf(setup.samples, options);
+  return krigeEach(setup, targets, {
+    most: search.most,
+    of: (t) => {
+      search.find(targets, t);
+      return search;
+    },
+  });
+}
+
+/** The neighbours of each target, a row of `most` a target of which the first found[t] hold sample numbers, ascending. */
+export type NeighbourRows = { most: number; ids: Int32Array; found: Int32Array };
+
+/** The neighbours alone: to krige the same targets again with another variogram without searching again. */
+export function neighbourRows(
+  samples: SamplePoints,
+  targets: Targets,
+  options: NeighbourhoodOptions,
+): NeighbourRows {
+  const search = searchOf(samples, options);
+  const count = targets.xM.length;
+  const rows = { most: search.most, ids: new Int32Array(count * search.most), found: new Int32Array(count) };
+  for (let t = 0; t < count; t++) {
+    search.find(targets, t);
+    rows.ids.set(search.ids.subarray(0, search.found).slice().sort(), t * search.most);
+    rows.found[t] = search.found;
+  }
+  return rows;
+}
+
+/** Kriging of each target from its row of neighbours. */
+export function krigeRows(setup: KrigingSetup, targets: Targets, rows: NeighbourRows): Prediction {
+  const { most, ids, found } = rows;
+  return krigeEach(setup, targets, {
+    most,
+    of: (t) => ({ ids: ids.subarray(t * most, t * most + found[t]!), found: found[t]! }),
+  });
+}
+
+type Found = { readonly ids: Int32Array; readonly found: number };
+
+function krigeEach(
+  setup: KrigingSetup,
+  targets: Targets,
+  neighbours: { most: number; of: (t: number) => Found },
+): Prediction {
   requireDrift(setup, targets);
   const count = targets.xM.length;
   const valuesM = new Float64Array(count);
   const varianceM2 = new Float64Array(count);
-  const most = Math.min(options.neighbours, setup.samples.xM.length - (options.leaveOneOut === true ? 1 : 0));
-  if (most < 1) throw new RangeError('Kriging needs at least one neighbour.');
-  const index = indexSamples(setup.samples.xM, setup.samples.yM);
-  const search = options.by === 'octant' ? new OctantSearch(index, most) : new NearestSearch(index, most);
-  const { leaveNearOut } = options;
-  if (leaveNearOut !== undefined) search.apartBelow = leaveNearOut.count;
-  const local = new LocalSystem(setup, most);
+  const local = new LocalSystem(setup, neighbours.most);
   for (let t = 0; t < count; t++) {
-    if (options.leaveOneOut === true) search.without = options.samplesOf?.[t] ?? t;
-    if (leaveNearOut !== undefined) search.apartM2 = leaveNearOut.withinM[t]! ** 2;
-    search.find(targets.xM[t]!, targets.yM[t]!);
-    local.gather(search.ids, search.found);
+    const { ids, found } = neighbours.of(t);
+    local.gather(ids, found);
     local.predict(targets.xM[t]!, targets.yM[t]!, targets.driftM?.[t] ?? 0);
     valuesM[t] = local.valueM;
     varianceM2[t] = local.varianceM2;
   }
   return { valuesM, varianceM2 };
+}
+
+function searchOf({ xM, yM }: SamplePoints, options: NeighbourhoodOptions) {
+  const { leaveOneOut, leaveNearOut, samplesOf } = options;
+  const most = Math.min(options.neighbours, xM.length - (leaveOneOut === true ? 1 : 0));
+  if (most < 1) throw new RangeError('Kriging needs at least one neighbour.');
+  const index = indexSamples(xM, yM);
+  const search = options.by === 'octant' ? new OctantSearch(index, most) : new NearestSearch(index, most);
+  if (leaveNearOut !== undefined) search.apartBelow = leaveNearOut.count;
+  return {
+    most,
+    ids: search.ids,
+    found: 0,
+    find(targets: Targets, t: number): void {
+      if (leaveOneOut === true) search.without = samplesOf?.[t] ?? t;
+      if (leaveNearOut !== undefined) search.apartM2 = leaveNearOut.withinM[t]! ** 2;
+      search.find(targets.xM[t]!, targets.yM[t]!);
+      this.found = search.found;
+    },
+  };
 }

@@ -78,7 +78,7 @@ function tryModel({ input, asked, trend }: Trial, model: VariogramModel): Candid
       nuggetIs: 'noise',
       ...(driftLengthM === null ? {} : { driftM: shoreDrift(input.shoreDistanceM, driftLengthM) }),
     };
-    return { setup, rmseM: summarise(foretell(setup, asked, false)).rmseM };
+    return { setup, rmseM: summarise(foretell(setup, asked, 'alone')).rmseM };
   };
   const fits = ESTIMATES.map((estimate) => ({
     estimate,
@@ -86,8 +86,8 @@ function tryModel({ input, asked, trend }: Trial, model: VariogramModel): Candid
   }));
   const { estimate, tried } = fits.reduce((a, b) => (b.tried.rmseM < a.tried.rmseM ? b : a));
   const { setup } = tuned(tried, tryOne);
-  const { rmseM, standardisedVariance } = summarise(foretell(setup, asked, false));
-  const gapScore = meanLogDensity(foretell(setup, asked, true));
+  const { rmseM, standardisedVariance } = summarise(foretell(setup, asked, 'alone'));
+  const gapScore = meanLogDensity(foretell(setup, asked, 'apart'));
   return { model, estimate, driftLengthM, setup, rmseM, standardisedVariance, gapScore };
 }
 

@@ -65,7 +65,7 @@ export function chooseSurface(input: ChoiceInput, report: (share: number) => voi
 function madeHonest(candidate: Candidate, asked: Asked): Candidate {
   let { setup } = candidate;
   for (let step = 0; step < 3; step++) {
-    const { standardisedVariance } = summarise(foretell(setup, asked, true));
+    const { standardisedVariance } = summarise(foretell(setup, asked, 'apart'));
     const { variogram } = setup;
     const scale = Math.min(10, Math.max(0.1, standardisedVariance));
     setup = {
@@ -77,14 +77,14 @@ function madeHonest(candidate: Candidate, asked: Asked): Candidate {
       },
     };
   }
-  const { rmseM, standardisedVariance } = summarise(foretell(setup, asked, false));
+  const { rmseM, standardisedVariance } = summarise(foretell(setup, asked, 'alone'));
   if (rmseM > candidate.rmseM) return candidate; // σ alone is scaled then, place by place
-  const gapScore = meanLogDensity(foretell(setup, asked, true));
+  const gapScore = meanLogDensity(foretell(setup, asked, 'apart'));
   return { ...candidate, setup, rmseM, standardisedVariance, gapScore };
 }
 
 function missesOf({ setup }: Candidate, asked: Asked): Misses {
-  const { residualM, varianceM2 } = foretell(setup, asked, true);
+  const { residualM, varianceM2 } = foretell(setup, asked, 'apart');
   const { xM, yM } = setup.samples;
   return {
     xM: Float64Array.from(asked.rows, (row) => xM[row]!),
