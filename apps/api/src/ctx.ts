@@ -30,7 +30,7 @@ export type Jobs = {
   send(tx: EntityManager, name: JobName, payload: object): Promise<void>;
 };
 
-export type JobName = 'mail.send' | 'chart.build' | 'photo.resize' | 'log.read';
+export type JobName = 'mail.send' | 'chart.build' | 'photo.resize' | 'picture.resize' | 'log.read';
 
 /** Everything a service gets: never a request. */
 export type Ctx = {

@@ -1,6 +1,7 @@
 import { buildChartJob } from './charts/jobs';
 import { resizePhoto } from './files/jobs';
 import type { Handlers } from './jobs/worker';
+import { resizeLakePicture } from './lakes/picture-jobs';
 import { sendMail } from './mail/jobs';
 import { readLogJob } from './surveys/log-jobs';
 
@@ -10,4 +11,5 @@ export const handlers: Handlers = {
   'chart.build': buildChartJob,
   'photo.resize': resizePhoto,
   'log.read': readLogJob,
+  'picture.resize': resizeLakePicture,
 };

@@ -5,6 +5,7 @@ import { chartRoutes } from './charts/routes';
 import { fisheryRoutes } from './fisheries/routes';
 import { fileRoutes } from './files/routes';
 import type { Route } from './http/route';
+import { pictureRoutes } from './lakes/picture-routes';
 import { photoRoutes } from './lakes/photo-routes';
 import { lakeRoutes } from './lakes/routes';
 import { waterRoutes } from './lakes/water-routes';
@@ -19,6 +20,7 @@ export const routes: readonly Route[] = [
   ...lakeRoutes,
   ...waterRoutes,
   ...photoRoutes,
+  ...pictureRoutes,
   ...fileRoutes,
   ...bookingRoutes,
   ...surveyRoutes,

@@ -13,6 +13,7 @@ import { Mark } from './entities/lakes/mark';
 import { GaugeBoard } from './entities/lakes/gauge-board';
 import { LevelReading } from './entities/lakes/level-reading';
 import { WaterArea } from './entities/lakes/water-area';
+import { LakePicture } from './entities/lakes/lake-picture';
 import { Photo } from './entities/files/photo';
 import { Booking } from './entities/bookings/booking';
 import { SurveyVisit } from './entities/surveys/survey-visit';
@@ -39,6 +40,7 @@ import { DeviceKeys1780000012000 } from './migrations/1780000012000-DeviceKeys';
 import { PegCodes1780000009000 } from './migrations/1780000009000-PegCodes';
 import { WaterAreas1780000007000 } from './migrations/1780000007000-WaterAreas';
 import { SoundingLogs1780000005000 } from './migrations/1780000005000-SoundingLogs';
+import { LakePictures1780000010000 } from './migrations/1780000010000-LakePictures';
 
 const ENTITIES = [
   Account,
@@ -54,6 +56,7 @@ const ENTITIES = [
   GaugeBoard,
   LevelReading,
   WaterArea,
+  LakePicture,
   Photo,
   Booking,
   SurveyVisit,
@@ -84,6 +87,7 @@ const MIGRATIONS = [
   PegCodes1780000009000,
   WaterAreas1780000007000,
   SoundingLogs1780000005000,
+  LakePictures1780000010000,
 ];
 
 /** A pool of connections to one database, opened by the caller with `initialize()`. */

@@ -16,3 +16,8 @@ function folderOf(kind: string, id: string): FileKey {
 /** The folder of one photo's files. */
 export const photoFolder = (photoId: string): FileKey => folderOf('photos', photoId);
 export const photoFile = (photoId: string, part: PhotoPart): FileKey => `${photoFolder(photoId)}/${part}`;
+
+/** The folder of a picture that a lake is traced over. */
+export const pictureFolder = (pictureId: string): FileKey => folderOf('pictures', pictureId);
+export const pictureFile = (pictureId: string, part: PhotoPart): FileKey =>
+  `${pictureFolder(pictureId)}/${part}`;

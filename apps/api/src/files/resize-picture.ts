@@ -1,11 +1,10 @@
 import { Jimp, ResizeStrategy } from 'jimp';
+import { LARGE_PX, SMALL_PX } from './photo-sizes';
 
 export type Resized =
   | { kind: 'done'; widthPx: number; heightPx: number; large: Uint8Array; small: Uint8Array }
   | { kind: 'refused'; words: string };
 
-const LARGE_PX = 1600;
-const SMALL_PX = 400;
 /** What the JPEG decoder may take for one picture. Forty megapixels with halved colour need about 500 MB. */
 const DECODER_MB = 640;
 
@@ -22,13 +21,13 @@ const TOO_HEAVY =
  * Decodes a JPEG or PNG, turns it as its camera noted, and writes it anew in two sizes. A picture written anew
  * holds pixels and nothing else: no place, no camera, no thumbnail of what was cropped away.
  */
-export async function resizePicture(bytes: Buffer): Promise<Resized> {
+export async function resizePicture(bytes: Buffer, largePx = LARGE_PX): Promise<Resized> {
   const picture = await decode(bytes);
   if (typeof picture === 'string') return { kind: 'refused', words: picture };
   // What shows through a transparent picture becomes white, not black.
   const opaque = new Jimp({ width: picture.bitmap.width, height: picture.bitmap.height, color: 0xffffffff });
   const large = picture.hasAlpha() ? opaque.composite(picture) : picture;
-  shrinkTo(large, LARGE_PX);
+  shrinkTo(large, largePx);
   const { width, height } = large.bitmap;
   const largeBytes = await large.getBuffer('image/jpeg', { quality: 82 });
   shrinkTo(large, SMALL_PX);

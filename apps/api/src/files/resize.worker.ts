@@ -4,5 +4,7 @@ import { stepAside } from '../jobs/step-aside';
 import { resizePicture } from './resize-picture';
 
 stepAside();
-const { bytes } = z.object({ bytes: z.instanceof(Uint8Array) }).parse(workerData);
-parentPort?.postMessage(await resizePicture(Buffer.from(bytes.buffer, bytes.byteOffset, bytes.byteLength)));
+const { bytes, largePx } = z.object({ bytes: z.instanceof(Uint8Array), largePx: z.int() }).parse(workerData);
+parentPort?.postMessage(
+  await resizePicture(Buffer.from(bytes.buffer, bytes.byteOffset, bytes.byteLength), largePx),
+);
