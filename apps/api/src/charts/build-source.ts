@@ -18,10 +18,17 @@ import { confirmedPlaces } from '../surveys/confirmed-places';
 import { endingsOf } from '../surveys/endings';
 import type { ObservedCast, VisitSite } from '../surveys/reduce-visit';
 import { visitSite } from '../surveys/visit-site';
+import { logsOf, soundingsOf, type SourceLog } from './source-logs';
 
 export type SourceCast = ObservedCast & { seq: number; lineId: string; observedOn: string };
 export type SourceReport = ReportEvidence & { id: string; pegId: string };
-export type SourceVisit = { site: VisitSite; surveyorName: string; day: string; casts: SourceCast[] };
+export type SourceVisit = {
+  site: VisitSite;
+  surveyorName: string;
+  day: string;
+  casts: SourceCast[];
+  logs: SourceLog[];
+};
 
 /** Everything a chart is made from, as it was observed. It survives structured cloning: a thread reads it. */
 export type BuildSource = {
@@ -48,6 +55,7 @@ export async function buildSource(tx: EntityManager, chart: Wanted): Promise<Bui
     where: { visitId: In(chart.visitIds), undoneAt: IsNull() },
     order: { id: 'ASC' },
   });
+  const logs = await logsOf(tx, chart.visitIds);
   const people = await tx.findBy(Account, { id: In(visits.map((visit) => visit.surveyorId)) });
   const sourced: SourceVisit[] = [];
   for (const visit of visits)
@@ -66,6 +74,7 @@ export async function buildSource(tx: EntityManager, chart: Wanted): Promise<Bui
           observation,
           observedOn: civilDay(observedAt, zone),
         })),
+      logs: logs.filter((log) => log.visitId === visit.id),
     });
   const reports = await acceptedReports(tx, lake.id);
   const { feel, version } = await feelInForce(tx, lake.fisheryId);
@@ -81,6 +90,17 @@ export async function buildSource(tx: EntityManager, chart: Wanted): Promise<Bui
     confirmed: await confirmedPlaces(tx, lake),
     asOf: civilDay(chart.draftedAt, zone),
   };
+}
+
+/** The same with the soundings of its logs, which only the building asks for. */
+export async function withSoundings(tx: EntityManager, source: BuildSource): Promise<BuildSource> {
+  const visits: SourceVisit[] = [];
+  for (const visit of source.visits) {
+    const logs: SourceLog[] = [];
+    for (const log of visit.logs) logs.push({ ...log, soundings: await soundingsOf(tx, log) });
+    visits.push({ ...visit, logs });
+  }
+  return { ...source, visits };
 }
 
 async function acceptedReports(tx: EntityManager, lakeId: string): Promise<SourceReport[]> {
@@ -103,7 +123,7 @@ export function sourceDigest(source: BuildSource): Buffer {
     origin: [lake.originLon, lake.originLat],
     maxGapM: lake.details.maxGapM,
     contourStepM,
-    visits: visits.map(({ site, casts }) => ({
+    visits: visits.map(({ site, casts, logs }) => ({
       id: site.visit.id,
       kit: site.visit.kit,
       ...(site.lead ? { lead: site.lead } : {}),
@@ -118,6 +138,7 @@ export function sourceDigest(source: BuildSource): Buffer {
         observedAt.toISOString(),
         observation,
       ]),
+      ...(logs.length > 0 ? { logs: logs.map(({ id, options }) => [id, options]) } : {}), // as before there were logs
     })),
     ...(tableVersion > 0 ? { feel } : {}),
     ...(endings.length > 0 ? { endings } : {}),

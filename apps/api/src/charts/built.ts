@@ -72,6 +72,20 @@ export const BuiltReport = z.object({
 });
 export type BuiltReport = z.infer<typeof BuiltReport>;
 
+/** A log of soundings as a chart keeps it: merged by cells, in the lake's plane. */
+export const BuiltLog = z.object({
+  id: z.uuid(),
+  visitId: z.uuid(),
+  filenames: z.array(z.string()),
+  found: z.int(), // in its files
+  kept: z.int(), // when it was taken in
+  outside: z.int(), // of those, off the water of this outline
+  cellM: z.number(), // side of the cells the others were merged in
+  points: z.array(z.number()), // x, y, depth, σ, x, y, depth, σ … metres
+  grades: z.string(), // a letter for each
+});
+export type BuiltLog = z.infer<typeof BuiltLog>;
+
 const Lines = z.array(z.object({ levelM: z.number(), lines: z.array(z.array(z.number())) }));
 
 /** The `built` column of a chart: everything of it that is not a grid. */
@@ -82,6 +96,7 @@ export const Built = z.object({
   visits: z.array(BuiltVisit),
   soundings: z.array(BuiltSounding), // every grade; D is left out of every view but the staff's
   points: z.array(BuiltPoint).default([]), // every grade, as above
+  logs: z.array(BuiltLog).default([]),
   leftOut: z.array(z.object({ id: z.string(), why: z.string() })),
   ended: z.array(EndedEvidence).default([]), // what events since the casts took out of it
   bottomTable: z.int().default(0), // version of the fishery's table of feels; 0 is the built-in

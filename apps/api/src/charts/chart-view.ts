@@ -14,6 +14,7 @@ import type { Ctx } from '../ctx';
 import { originOfLake } from '../lakes/found';
 import { levelNow } from '../lakes/levels';
 import { ageNow } from './chart-age-now';
+import { logSoundings } from './built-logs';
 import { chartContent, type ChartContent } from './chart-layers';
 import { chartToRead, type ChartFound, type LightChart } from './find-chart';
 import { sightOnChart, type Sight } from './layers';
@@ -100,7 +101,9 @@ export function layersFor(
     isobaths: sees.depth ? built.isobaths : null,
     substrate: sees.bottom ? toBase64(substrate) : null,
     cover: sees.bottom ? toBase64(cover) : null,
-    soundings: sees.soundings ? soundingsFor(built, { bottom: sees.bottom, staff, now }) : null,
+    soundings: sees.soundings
+      ? [...soundingsFor(built, { bottom: sees.bottom, staff, now }), ...logSoundings(built.logs, staff)]
+      : null,
     bottomPoints: sees.soundings && sees.bottom ? pointsFor(built, { staff, now }) : null,
     hypsography: sees.depth ? built.hypsography : null,
     figures: sees.depth ? built.figures : null,
@@ -110,7 +113,7 @@ export function layersFor(
 function soundingsFor(
   { soundings, reports }: ChartContent['built'],
   sees: { bottom: boolean; staff: boolean; now: AgeNow },
-): ChartView['soundings'] {
+): NonNullable<ChartView['soundings']> {
   const measured = reports.flatMap(({ depthM, sigmaM, ...report }) =>
     depthM === null || sigmaM === null ? [] : [{ ...report, depthM, sigmaM }],
   );

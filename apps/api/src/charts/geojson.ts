@@ -92,10 +92,13 @@ function bottomPoints({ bottomPoints: felt, version }: ChartView, place: Place):
 }
 
 function soundings({ soundings: seen, version }: ChartView, place: Place): Feature[] {
-  return (seen ?? []).map(({ id, xM, yM, depthM, sigmaM, bottom, grade }) => ({
+  return (seen ?? []).map(({ id, xM, yM, depthM, sigmaM, bottom, grade, ofLog }) => ({
     type: 'Feature',
     id,
     geometry: { type: 'Point', coordinates: place(xM, yM) },
-    properties: { kind: 'cast', depth_at_datum_m: depthM, sigma_m: sigmaM, bottom, grade, chart: version },
+    properties: {
+      kind: ofLog ? 'sounding' : 'cast',
+      ...{ depth_at_datum_m: depthM, sigma_m: sigmaM, bottom, grade, chart: version },
+    },
   }));
 }

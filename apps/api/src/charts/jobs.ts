@@ -6,7 +6,7 @@ import { z } from 'zod';
 import type { Jobs } from '../ctx';
 import type { Server } from '../http/server';
 import type { Handler } from '../jobs/worker';
-import { buildSource, type BuildSource } from './build-source';
+import { buildSource, withSoundings, type BuildSource } from './build-source';
 import { keepMade } from './keep-made';
 import { runBuild, type BuildEnd, type Progress } from './run-build';
 
@@ -73,7 +73,10 @@ function claim(db: DataSource, run: Run, attempt: string): Promise<boolean> {
 
 async function sourceOf(db: DataSource, chartId: string): Promise<BuildSource> {
   return db.transaction('REPEATABLE READ', async (tx) =>
-    buildSource(tx, await tx.findOneOrFail(Chart, { where: { id: chartId }, select: CHART_WANTED })),
+    withSoundings(
+      tx,
+      await buildSource(tx, await tx.findOneOrFail(Chart, { where: { id: chartId }, select: CHART_WANTED })),
+    ),
   );
 }
 

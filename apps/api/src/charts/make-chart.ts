@@ -5,6 +5,7 @@ import { reduceAll } from '../surveys/reduce-visit';
 import type { BuildSource, SourceReport, SourceVisit } from './build-source';
 import type { Built } from './built';
 import { chartEvidence } from './chart-evidence';
+import { reducedLogs } from './chart-logs';
 import { sourceChecks } from './source-checks';
 
 /** A chart as its row keeps it. */
@@ -27,18 +28,23 @@ export function makeChart(source: BuildSource, report: (step: string, share: num
   report('Reducing the casts', 0);
   const answers = new Map(source.visits.flatMap(({ site, casts }) => [...reduceAll(site, casts)]));
   const evidence = chartEvidence(source, answers);
+  if (source.visits.some(({ logs }) => logs.length > 0)) report('Merging the soundings of logs', 0);
+  const logs = reducedLogs(source);
   const { lake } = source;
   const outline = source.visits[0]?.site.outline;
   if (!outline) throw new RangeError('The visits of this chart are gone. Make a new draft.');
   const input: ChartInput = {
     outline,
-    soundings: evidence.soundings,
+    soundings: [...evidence.soundings, ...logs.soundings],
     alsoFelt: evidence.alsoFelt,
     contourStepM: source.contourStepM,
     maxGapM: lake.details.maxGapM,
   };
   const chart = buildChart(input, report);
-  const days = [...evidence.built, ...evidence.points].map(({ observedOn }) => observedOn).sort();
+  const days = [
+    ...[...evidence.built, ...evidence.points].map(({ observedOn }) => observedOn),
+    ...logs.days,
+  ].sort();
   return {
     frame: chart.frame,
     depth: encodeDepth(chart.depth),
@@ -52,6 +58,7 @@ export function makeChart(source: BuildSource, report: (step: string, share: num
       visits: source.visits.map(builtVisit),
       soundings: evidence.built.sort(byId),
       points: evidence.points.sort(byId),
+      logs: logs.built,
       leftOut: [...evidence.leftOut, ...chart.leftOut].sort(byId),
       ended: evidence.ended,
       bottomTable: source.tableVersion,

@@ -7,6 +7,7 @@ import { In, type EntityManager } from 'typeorm';
 import { holdsAny, type Ctx } from '../ctx';
 import { notFound } from '../http/deny';
 import { CHART_APPROVERS, isStaff, mayBuildCharts, STAFF } from '../lakes/policy';
+import { logViews } from './built-logs';
 import { checksOf } from './checks';
 import { chartContent } from './chart-layers';
 import { chartForStaff, LIGHT, type LightChart } from './find-chart';
@@ -88,6 +89,7 @@ export async function chartReview(ctx: Ctx, chartId: string): Promise<ChartRevie
     ended: content?.built.ended ?? [],
     bottomTable: content?.built.bottomTable ?? 0,
     misses: content ? await soundingMisses(tx, content.built) : [],
+    logs: content ? logViews(content.built) : [],
     may: {
       submit: builder && chart.status === 'draft' && !building && !blocked,
       approve: chart.status === 'submitted' && why === null && !blocked,

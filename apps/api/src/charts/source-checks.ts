@@ -15,12 +15,13 @@ export function sourceChecks(source: BuildSource, reduced: Reductions): CheckVie
     ...chartChecks({
       outline,
       casts: source.visits.flatMap((visit) => checkedCasts(visit, reduced)),
-      visits: source.visits.map(({ site: { visit }, day }) => ({
+      visits: source.visits.map(({ site: { visit }, day, casts, logs }) => ({
         id: visit.id,
         label: visit.title,
         gaugeStartM: visit.gaugeStartM,
         gaugeEndM: visit.gaugeEndM,
-        stickCheckedOn: visit.kit.stickCheckedOn,
+        // Where nothing was cast, no sticks were counted.
+        stickCheckedOn: casts.length === 0 && logs.length > 0 ? day : visit.kit.stickCheckedOn,
         visitedOn: day,
       })),
       pegs: checkedPegs(source, reduced),

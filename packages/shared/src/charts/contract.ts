@@ -1,4 +1,5 @@
 import { z } from 'zod';
+import { ChartLogView } from './chart-log-view';
 import { Position, Version } from '../fisheries/contract';
 import { LakePolygon, LevelNow, PhotoView } from '../lakes/contract';
 import { PlaceWater } from '../lakes/peg-water-contract';
@@ -85,6 +86,7 @@ export const ChartReview = z.object({
   ended: z.array(EndedEvidence).default([]), // what events since the casts took out of it
   bottomTable: z.int().default(0), // version of the table of feels it was made with; 0 is the built-in
   misses: z.array(SoundingMissView).default([]), // the flagged and the worst ten, worst first
+  logs: z.array(ChartLogView).default([]),
   may: z.object({
     submit: z.boolean(),
     approve: z.boolean(),
@@ -176,6 +178,7 @@ export const ChartView = z.object({
         sigmaM: z.number(),
         bottom: Bottom,
         grade: Grade,
+        ofLog: z.boolean().optional(), // merged from a log's; those of logs are thinned for the eye
       }),
     )
     .nullable(),

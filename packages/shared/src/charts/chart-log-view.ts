@@ -1,0 +1,17 @@
+import { z } from 'zod';
+
+/** What a chart took from one log of soundings, in numbers. */
+export const ChartLogView = z.object({
+  id: z.uuid(),
+  visitId: z.uuid(),
+  visitTitle: z.string(),
+  filenames: z.array(z.string()),
+  found: z.int(), // in its files
+  kept: z.int(), // when it was taken in
+  outside: z.int(), // of those, off the water of the chart's outline
+  cells: z.int(), // into which the others were merged
+  cellM: z.number(),
+  contoured: z.int(), // cells of grades A and B
+  flagged: z.int(), // cells out of line with their neighbours
+});
+export type ChartLogView = z.infer<typeof ChartLogView>;
