@@ -102,7 +102,7 @@ export function layersFor(
     substrate: sees.bottom ? toBase64(substrate) : null,
     cover: sees.bottom ? toBase64(cover) : null,
     soundings: sees.soundings
-      ? [...soundingsFor(built, { bottom: sees.bottom, staff, now }), ...logSoundings(built.logs, staff)]
+      ? [...soundingsFor(built, { bottom: sees.bottom, staff, now }), ...logPointsFor(built, { staff, now })]
       : null,
     bottomPoints: sees.soundings && sees.bottom ? pointsFor(built, { staff, now }) : null,
     hypsography: sees.depth ? built.hypsography : null,
@@ -128,6 +128,10 @@ function soundingsFor(
       bottom: sees.bottom ? bottom : 'unknown',
       grade: gradeNow(grade, { xM, yM }, sees.now),
     }));
+}
+
+function logPointsFor({ logs }: ChartContent['built'], { staff, now }: { staff: boolean; now: AgeNow }) {
+  return logSoundings(logs, staff).map((each) => ({ ...each, grade: gradeNow(each.grade, each, now) }));
 }
 
 /** Casts and reports that tell of the bottom without a depth. */
