@@ -6,8 +6,8 @@ import { List, Row } from '@/components/list';
 import { Section } from '@/components/section';
 import { Text } from '@/components/text';
 import { useUnits } from '@/hooks/use-units';
-import { area } from '@/lib/format';
 import type { useWaterDeeds } from './chart-answers-api';
+import { waterArea } from './water-words';
 
 type Props = { waters: LakeWaters; deeds: ReturnType<typeof useWaterDeeds> };
 
@@ -31,13 +31,13 @@ export function WaterAreas({ waters, deeds }: Props) {
             <Row
               key={each.id}
               title={nameOf(each)}
-              note={[area(each.takesM2, units), each.details.note].filter(Boolean).join(' · ')}
+              note={[waterArea(each.takesM2, units), each.details.note].filter(Boolean).join(' · ')}
               end={
                 waters.may.change ? (
                   <Button
                     label="Take away"
                     kind="quiet"
-                    spoken={`Take away: ${nameOf(each)}, ${area(each.takesM2, units)}`}
+                    spoken={`Take away: ${nameOf(each)}, ${waterArea(each.takesM2, units)}`}
                     onPress={() => setDoomed(each)}
                   />
                 ) : undefined

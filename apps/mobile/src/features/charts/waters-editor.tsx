@@ -12,7 +12,6 @@ import { Text } from '@/components/text';
 import { MEASURE_PX, space } from '@/constants/layout';
 import { useUnits } from '@/hooks/use-units';
 import { useWide } from '@/hooks/use-wide';
-import { area } from '@/lib/format';
 import { useWaterDeeds } from './chart-answers-api';
 import { lakeBackdrop, waterLines } from './lake-backdrop';
 import { LakeCanvas, type Draw } from './lake-canvas';
@@ -21,6 +20,7 @@ import { WaterAreas } from './water-areas';
 import { areaMarks, type DrawnArea } from './water-area-marks';
 import { WaterAreaForm } from './water-area-form';
 import { waterSheetMarks } from './water-marks';
+import { waterArea } from './water-words';
 
 type Props = { lake: LakeView; waters: LakeWaters };
 
@@ -72,7 +72,7 @@ export function WatersEditor({ lake, waters }: Props) {
           heightPx={wide ? 560 : 420}
         />
         <Text size="small" tone="inkSoft" style={{ maxWidth: MEASURE_PX }}>
-          {`${waters.words} ${area(waters.nobodysM2, units)} is no peg’s.`}
+          {`${waters.words} ${waterArea(waters.nobodysM2, units)} is no peg’s.`}
         </Text>
       </View>
       <View style={{ flexGrow: 1, flexBasis: 320, gap: space.medium, minWidth: 0 }}>
@@ -82,7 +82,7 @@ export function WatersEditor({ lake, waters }: Props) {
           choices={waters.pegs.map((peg) => ({
             key: peg.pegId,
             label: [peg.number, peg.name].filter(Boolean).join(', '),
-            note: peg.areaM2 === 0 ? 'no water' : area(peg.areaM2, units),
+            note: peg.areaM2 === 0 ? 'no water' : waterArea(peg.areaM2, units),
           }))}
           value={pegId}
           onChange={setPegId}
