@@ -1,4 +1,4 @@
-import { useState } from 'react';
+import { useState, type ReactNode } from 'react';
 import { View } from 'react-native';
 import type { LakeView } from '@mereward/shared/lakes/contract';
 import type { CastView, VisitView } from '@mereward/shared/surveys/contract';
@@ -20,15 +20,27 @@ import { FloatPart } from '@/features/surveys/float-part';
 import { LinePart } from '@/features/surveys/line-part';
 import { LiveCall } from '@/features/surveys/live-call';
 import { MorePart } from '@/features/surveys/more-part';
+import {
+  placesOf,
+  suggestedTyped,
+  type SuggestedCast,
+  type SuggestTerms,
+} from '@/features/surveys/cast-suggestion';
 import { bringIntoSight } from '@/lib/bring-into-sight';
 import { useCastForm } from '@/features/surveys/use-cast-form';
 import { useThreeColumns } from '@/hooks/use-wide';
 import { visitGauge } from '@/features/surveys/visit-words';
 
-type Props = { lake: LakeView; visit: VisitView; casts: readonly CastView[] };
+type Props = {
+  lake: LakeView;
+  visit: VisitView;
+  casts: readonly CastView[];
+  /** Proposes casts from the peg one stands on; one that is taken fills aim and wraps. */
+  suggest?: ((terms: SuggestTerms) => ReactNode) | undefined;
+};
 
 /** Aim, wraps, feel, float: one screen, the last cast carried forward, the call and the two acts under the thumb. */
-export function CastForm({ lake, visit, casts }: Props) {
+export function CastForm({ lake, visit, casts, suggest }: Props) {
   const keep = useKeepCast(visit.id);
   const undo = useUndoCast(visit.id);
   const [said, setSaid] = useState<string | null>(null);
@@ -53,6 +65,10 @@ export function CastForm({ lake, visit, casts }: Props) {
       form.reset(closerIn(typedAgain(last), last.lineId));
       bringIntoSight('main-cast');
     }
+  };
+  const take = (proposed: SuggestedCast): void => {
+    const typed = suggestedTyped(proposed, lake, visit.kit);
+    if (typed) form.reset({ ...nextThrow(form.getValues()), ...typed });
   };
   const takeBack = ({ id, seq: taken }: CastView) =>
     undo.mutate(id, { onSuccess: () => setSaid(`Cast ${taken} is taken back.`) });
@@ -116,6 +132,7 @@ export function CastForm({ lake, visit, casts }: Props) {
         >
           <View style={beside ? { flex: 1, minWidth: 0 } : undefined}>
             <AimPart form={form} lake={lake} />
+            {suggest?.({ lake, pegId: form.watch('pegId'), made: placesOf(casts), onTake: take })}
             <LinePart form={form} visit={visit} />
             <FeelPart form={form} />
             <FloatPart form={form} visit={visit} />

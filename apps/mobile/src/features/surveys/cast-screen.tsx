@@ -1,3 +1,4 @@
+import type { ComponentProps } from 'react';
 import { useLocalSearchParams } from 'expo-router';
 import type { LakeView } from '@mereward/shared/lakes/contract';
 import { Empty } from '@/components/empty';
@@ -9,12 +10,12 @@ import { useVisit } from '@/features/surveys/api';
 import { CastForm } from '@/features/surveys/cast-form';
 
 /** The next cast of a visit, entered with one hand. */
-export function CastScreen() {
+export function CastScreen({ suggest }: Pick<ComponentProps<typeof CastForm>, 'suggest'>) {
   const { visitId } = useLocalSearchParams<{ visitId: string }>();
   const visit = useVisit(visitId);
   const lake = useLake(visit.data?.visit.lakeId ?? '');
   if (visit.data?.visit.may.addCasts && lake.data && lake.data.pegs.length > 0)
-    return <CastForm lake={lake.data} visit={visit.data.visit} casts={visit.data.casts} />;
+    return <CastForm lake={lake.data} visit={visit.data.visit} casts={visit.data.casts} suggest={suggest} />;
   const back = { label: visit.data?.visit.title ?? 'Visit', href: `/bank/surveys/${visitId}` } as const;
   return (
     <Page title="Next cast" back={back}>

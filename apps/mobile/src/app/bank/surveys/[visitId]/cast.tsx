@@ -1,1 +1,1 @@
-export { CastScreen as default } from '@/features/surveys/cast-screen';
+export { CastNextScreen as default } from '@/features/charts/cast-next-screen';
