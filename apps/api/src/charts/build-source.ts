@@ -17,6 +17,7 @@ import { feelInForce } from '../surveys/bottom-feel';
 import { confirmedPlaces } from '../surveys/confirmed-places';
 import { endingsOf } from '../surveys/endings';
 import type { ObservedCast, VisitSite } from '../surveys/reduce-visit';
+import { watersOf, type WatersFound } from '../lakes/peg-waters';
 import { visitSite } from '../surveys/visit-site';
 import { logsOf, soundingsOf, type SourceLog } from './source-logs';
 
@@ -42,6 +43,7 @@ export type BuildSource = {
   confirmed: ConfirmedPlace[]; // by id
   asOf: string; // civil day the chart is made for: covers fade up to it
   reports: SourceReport[]; // what anglers found otherwise and the fishery accepted, by id
+  waters: WatersFound; // for the advice on where to cast next; no part of the chart itself
 };
 
 type Wanted = Pick<Chart, 'lakeId' | 'visitIds' | 'contourStepM' | 'draftedAt'>;
@@ -89,6 +91,7 @@ export async function buildSource(tx: EntityManager, chart: Wanted): Promise<Bui
     endings: await endingsOf(tx, lake),
     confirmed: await confirmedPlaces(tx, lake),
     asOf: civilDay(chart.draftedAt, zone),
+    waters: await watersOf(tx, lake),
   };
 }
 

@@ -4,6 +4,7 @@ import { Position } from '@mereward/shared/fisheries/contract';
 import { LakePolygon } from '@mereward/shared/lakes/contract';
 import { Bottom, Grade, Kit } from '@mereward/shared/surveys/contract';
 import { z } from 'zod';
+import { BuiltTellings } from './built-tellings';
 
 /** A reduced cast as a chart keeps it: with what an angler needs to throw it again, in the survey's own sticks. */
 export const BuiltSounding = z.object({
@@ -113,5 +114,6 @@ export const Built = z.object({
   quality: QualityView,
   reports: z.array(BuiltReport).default([]), // what anglers found otherwise and the fishery accepted
   checks: z.array(CheckView).default([]), // of what it was made from
+  tellings: BuiltTellings.nullable().default(null), // null: built before there were any
 });
 export type Built = z.infer<typeof Built>;

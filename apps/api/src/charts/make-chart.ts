@@ -6,6 +6,7 @@ import type { BuildSource, SourceReport, SourceVisit } from './build-source';
 import type { Built } from './built';
 import { chartEvidence } from './chart-evidence';
 import { reducedLogs } from './chart-logs';
+import { makeTellings } from './make-tellings';
 import { sourceChecks } from './source-checks';
 
 /** A chart as its row keeps it. */
@@ -19,6 +20,9 @@ export type MadeChart = {
   surveyedFrom: string;
   surveyedTo: string;
 };
+
+/** Share of the work that is the chart itself; the rest is finding out what it tells. */
+const BUILDING = 0.75;
 
 /**
  * Reduces every cast and builds the chart. Runs in a thread; the same source gives the same bytes. Throws RangeError,
@@ -40,7 +44,10 @@ export function makeChart(source: BuildSource, report: (step: string, share: num
     contourStepM: source.contourStepM,
     maxGapM: lake.details.maxGapM,
   };
-  const chart = buildChart(input, report);
+  const chart = buildChart(input, (step, share) => report(step, BUILDING * share));
+  const tellings = makeTellings({ source, outline, chart }, (step, share) =>
+    report(step, BUILDING + (1 - BUILDING) * share),
+  );
   const days = [
     ...[...evidence.built, ...evidence.points].map(({ observedOn }) => observedOn),
     ...logs.days,
@@ -68,6 +75,7 @@ export function makeChart(source: BuildSource, report: (step: string, share: num
       quality: chart.quality,
       reports: evidence.reports.map(builtReport),
       checks: sourceChecks(source, answers),
+      tellings,
     },
     surveyedFrom: days[0] ?? '',
     surveyedTo: days.at(-1) ?? '',

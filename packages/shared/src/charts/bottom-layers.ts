@@ -1,10 +1,12 @@
 import { Cover, Substrate, type CoverShares, type Grade, type SubstrateShares } from '../surveys/contract';
 import {
-  bottomMap,
   chooseBandwidth,
+  classWeights,
+  likeliestClasses,
   type BottomEvidence,
   type BottomNodes,
   type ClassGrid,
+  type ClassWeights,
 } from './bottom-map';
 import type { FeltPlace } from './cast-kernel';
 import type { BottomQuality, BottomQualityView } from './bottom-quality-contract';
@@ -21,6 +23,7 @@ export type FeltBottom = FeltPlace & {
 export type BottomLayers = {
   substrate: ClassGrid; // classes in the order of Substrate.options
   cover: ClassGrid; // classes in the order of Cover.options
+  weights: { substrate: ClassWeights | null; cover: ClassWeights | null }; // what both were chosen from
   bottom: BottomQualityView;
 };
 
@@ -41,6 +44,7 @@ export function bottomLayers(felt: readonly FeltBottom[], nodes: BottomNodes): B
   return {
     substrate: substrate.map,
     cover: cover.map,
+    weights: { substrate: substrate.weights, cover: cover.weights },
     bottom: { substrate: substrate.quality, cover: cover.quality },
   };
 }
@@ -60,11 +64,13 @@ function evidenceOf(
 function layer(
   evidence: readonly BottomEvidence[],
   nodes: BottomNodes,
-): { map: ClassGrid; quality: BottomQuality } {
+): { map: ClassGrid; weights: ClassWeights | null; quality: BottomQuality } {
   const { bandwidthM, logScore } = chooseBandwidth(evidence);
+  const weights = classWeights(evidence, nodes.frame, bandwidthM);
   const classes = evidence[0]?.shares.length ?? Substrate.options.length;
   return {
-    map: bottomMap(evidence, nodes, bandwidthM),
+    map: likeliestClasses(weights, nodes),
+    weights,
     quality: { casts: evidence.length, bandwidthM, logScore, evenLogScore: -Math.log(classes) },
   };
 }

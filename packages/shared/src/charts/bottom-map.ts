@@ -45,16 +45,33 @@ export function bottomMap(
   nodes: BottomNodes,
   bandwidthM: number,
 ): ClassGrid {
-  const map = unknownBottom(nodes.frame);
-  if (evidence.length === 0) return map;
-  const classes = evidence[0]!.shares.length;
-  const alpha = new Float64Array(nodes.frame.columns * nodes.frame.rows * classes).fill(
-    PRIOR_CASTS / classes,
-  );
+  return likeliestClasses(classWeights(evidence, nodes.frame, bandwidthM), nodes);
+}
+
+/** α_c of every node of a frame, all classes of a node side by side. */
+export type ClassWeights = { classes: number; alpha: Float64Array };
+
+/** The weights that `bottomMap` chooses from; null without evidence. */
+export function classWeights(
+  evidence: readonly BottomEvidence[],
+  frame: GridFrame,
+  bandwidthM: number,
+): ClassWeights | null {
+  const classes = evidence[0]?.shares.length;
+  if (classes === undefined) return null;
+  const alpha = new Float64Array(frame.columns * frame.rows * classes).fill(PRIOR_CASTS / classes);
   for (const cast of evidence) {
     requireClasses(cast, classes);
-    spreadCast(alpha, nodes.frame, { cast, bandwidthM });
+    spreadCast(alpha, frame, { cast, bandwidthM });
   }
+  return { classes, alpha };
+}
+
+/** The likeliest class at each of the nodes, unknown where none is likely enough. */
+export function likeliestClasses(weights: ClassWeights | null, nodes: BottomNodes): ClassGrid {
+  const map = unknownBottom(nodes.frame);
+  if (weights === null) return map;
+  const { classes, alpha } = weights;
   for (const node of nodes.nodes) {
     const from = node * classes;
     let best = from;

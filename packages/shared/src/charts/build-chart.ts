@@ -3,7 +3,7 @@ import { outlineAreaM2, perimeterM } from '../geometry/polygon';
 import type { CoverShares, SubstrateShares } from '../surveys/contract';
 import { bottomLayers } from './bottom-layers';
 import type { FeltBottom } from './bottom-layers';
-import type { ClassGrid } from './bottom-map';
+import type { ClassGrid, ClassWeights } from './bottom-map';
 import type { FeltPlace } from './cast-kernel';
 import type { QualityView } from './contract';
 import type { GridFrame, Grid } from './grid';
@@ -18,6 +18,7 @@ import type { ChartSamples } from './samples';
 import { requirePlaces, sortSoundings } from './sounding-roles';
 import type { ChartSounding, LeftOut } from './sounding-roles';
 import { chooseSurface, nameOf } from './surface-choice';
+import type { Candidate } from './surface-candidates';
 import type { ChosenSurface } from './surface-choice';
 import { chartSurface } from './chart-surface';
 import type { ChartSurface } from './chart-surface';
@@ -51,6 +52,8 @@ export type BuiltChart = {
   tints: Isobath[]; // closed rings to paint in order; see deeperRegions
   substrate: ClassGrid; // classes in the order of Substrate.options
   cover: ClassGrid; // classes in the order of Cover.options
+  weights: { substrate: ClassWeights | null; cover: ClassWeights | null }; // what the bottom maps were chosen from
+  chosen: Candidate; // how the depths were kriged
   hypsography: HypsographicStep[];
   figures: ChartFigures;
   quality: QualityView;
@@ -112,6 +115,7 @@ export function buildChart(input: ChartInput, report: (step: string, share: numb
     isobaths: lines,
     tints,
     ...bottoms,
+    chosen: chosen.best,
     ...measured,
     quality,
     points: roles.shown,

@@ -18,6 +18,6 @@ export function featureWords(name: string, feature: Sized): string {
 }
 
 export const FEATURE_METHOD =
-  'Looked for in the charted depths: bars fall away and gullies rise on both sides within 20 m, holes rise all round, ' +
+  'Looked for in the charted depths, with and without the fall from the shore that the whole lake shares: bars fall away and gullies rise on both sides within 20 m (wide ones 36 m), holes rise all round, ' +
   'shelves are gentle ground near the shore that ends in a steep edge. Each is drawn at half its height. Certain: it stands ' +
   'out by more than 1.96 σ of the two depths. Depths are at chart datum. Common practice, no published source.';

@@ -7,7 +7,7 @@ import { regionShape, type RegionShape } from './region-shape';
  * read to a foot.
  */
 export const FEATURE_LIMITS = {
-  reachM: 20, // how far to both sides what lies round a place is looked for
+  offShoreM: 3, // of a crest or a foot: nearer in, the margin is all there is
   leastReliefM: 0.25,
   leastAreaM2: 12,
   leastLengthM: 4,
