@@ -1,6 +1,7 @@
 import { accountRoutes } from './accounts/routes';
 import { bookingRoutes } from './bookings/routes';
 import { disagreementRoutes } from './charts/disagreement-routes';
+import { paperRoutes } from './charts/paper-routes';
 import { chartRoutes } from './charts/routes';
 import { fisheryRoutes } from './fisheries/routes';
 import { fileRoutes } from './files/routes';
@@ -27,5 +28,6 @@ export const routes: readonly Route[] = [
   ...bottomRoutes,
   ...logRoutes,
   ...chartRoutes,
+  ...paperRoutes,
   ...disagreementRoutes,
 ];

@@ -11,14 +11,9 @@ import {
   WithdrawChart,
 } from '@mereward/shared/charts/contract';
 import type { Ctx } from '../ctx';
-import { limitDrawings } from '../http/limits';
-import { deed, raw, read, type Route } from '../http/route';
-import { idIn } from '../http/route-id';
-import { reading } from '../http/transaction';
+import { deed, read, type Route } from '../http/route';
 import { chartView } from './chart-view';
 import { cancelBuild, discardChart, draftChart, rebuildChart } from './draft-chart';
-import { chartGeojson } from './geojson';
-import { pegCard } from './peg-card';
 import { pegPage } from './peg-page';
 import { approveChart, submitChart, withdrawChart } from './publish-chart';
 import { chartReview, listCharts } from './review';
@@ -68,20 +63,6 @@ const chartRouteList: Route[] = [
       answer: ChartView,
     },
     (ctx, { id }) => chartView(ctx, id('chartId')),
-  ),
-  raw(
-    {
-      method: 'get',
-      path: '/charts/:chartId/geojson',
-      summary: 'The same layers as GeoJSON',
-      signIn: 'open',
-      answerType: 'application/geo+json',
-    },
-    async (req, res) => {
-      const view = await reading(req, (ctx) => chartView(ctx, idIn(req, 'chartId')));
-      res.attachment(`${fileName(view.lakeName, view.version ?? 'draft')}.geojson`);
-      res.type('application/geo+json').send(JSON.stringify(chartGeojson(view)));
-    },
   ),
   read(
     {
@@ -139,21 +120,6 @@ const pegRouteList: Route[] = [
     },
     (ctx, { id, query }) => pegSection(ctx, id('pegId'), query),
   ),
-  raw(
-    {
-      method: 'get',
-      path: '/pegs/:pegId/card.pdf',
-      summary: 'A peg’s card, to print',
-      signIn: 'open',
-      answerType: 'application/pdf',
-      guards: [limitDrawings],
-    },
-    async (req, res) => {
-      const { filename, pdf } = await reading(req, (ctx) => pegCard(ctx, idIn(req, 'pegId')));
-      res.setHeader('content-disposition', `inline; filename="${filename}"`);
-      res.type('application/pdf').setHeader('cache-control', 'private, no-store').send(pdf);
-    },
-  ),
   deed(
     {
       method: 'put',
@@ -170,12 +136,5 @@ const pegRouteList: Route[] = [
     (ctx, { id }) => removeSpot(ctx, { pegId: id('pegId'), spotId: id('spotId') }),
   ),
 ];
-
-const fileName = (...parts: string[]): string =>
-  parts
-    .join('-')
-    .toLowerCase()
-    .replace(/[^a-z0-9.]+/g, '-')
-    .replace(/^-|-$/g, '');
 
 export const chartRoutes: Route[] = [...chartRouteList, ...pegRouteList];

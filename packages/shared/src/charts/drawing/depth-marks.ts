@@ -43,7 +43,8 @@ export function isobathMarks(ground: Ground, palette: Palette, view: View): Mark
   });
 }
 
-const RULE_GAP_PX = 11;
+/** Between the rules of paper that stands for water nobody surveyed. */
+export const UNSURVEYED_GAP_PX = 11;
 
 /** Bare paper with a soft diagonal rule and the words: nobody surveyed here. */
 export function unsurveyedMarks(ground: Ground, palette: Palette, view: View): Mark[] {
@@ -68,10 +69,13 @@ export function dryMarks(ground: Ground, palette: Palette, view: View): Mark[] {
   return [edge, ...wordsIn(areas, { words: 'dry bank', palette, view, water: ground.water })];
 }
 
-/** Lines at 45° on the page, however the map is turned, over the areas' own box; fixed to the lake. */
+/**
+ * Lines at 45° on the page, however the map is turned, over the areas' own box; fixed to the lake. They lean against
+ * the hatch of clay, from which nothing else tells them in black and white.
+ */
 function diagonals(areas: readonly Line[], view: View): Line[] {
-  const gapM = RULE_GAP_PX / view.pxPerM;
-  const turn = ((45 + view.turnDeg) * Math.PI) / 180; // of the lines, counter-clockwise from the plane's east
+  const gapM = UNSURVEYED_GAP_PX / view.pxPerM;
+  const turn = ((135 + view.turnDeg) * Math.PI) / 180; // of the lines, counter-clockwise from the plane's east
   const [cos, sin] = [Math.cos(turn), Math.sin(turn)];
   let [fromAlong, toAlong, fromAcross, toAcross] = [Infinity, -Infinity, Infinity, -Infinity];
   for (const area of areas) {

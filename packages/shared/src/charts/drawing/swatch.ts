@@ -1,5 +1,6 @@
+import { UNSURVEYED_GAP_PX } from './depth-marks';
 import { BOTTOM_GLYPHS, type Patterned } from './bottom-glyphs';
-import { filled, ruled, type Mark } from './mark';
+import { filled, ruled, stroked, type Mark } from './mark';
 import type { Page } from './page';
 import type { Palette } from './palette';
 import { glyphInkOn, tintAt } from './tint';
@@ -29,6 +30,21 @@ export function swatchPage(kind: Patterned, palette: Palette): Page {
         { kind: 'glyphs', at, glyph, fill: solid ? ink : null, stroke: solid ? null : ruled(ink, widthPx) },
       ],
     },
+  ];
+  return { widthPx: WIDTH_PX, heightPx: HEIGHT_PX, ground: null, layers: [{ marks }] };
+}
+
+/** A patch of the paper that stands for water nobody surveyed, ruled as on the chart. */
+export function unsurveyedSwatch(palette: Palette): Page {
+  const box = [0, 0, WIDTH_PX, 0, WIDTH_PX, HEIGHT_PX, 0, HEIGHT_PX];
+  const step = UNSURVEYED_GAP_PX * Math.SQRT2;
+  const rules = Array.from({ length: Math.ceil((WIDTH_PX + HEIGHT_PX) / step) }, (_, i) => {
+    const x = i * step - HEIGHT_PX;
+    return [x, 0, x + HEIGHT_PX, HEIGHT_PX];
+  });
+  const marks: Mark[] = [
+    filled([box], palette.paper),
+    { kind: 'clip', lines: [box], marks: [stroked(rules, ruled(palette.rule, 1))] },
   ];
   return { widthPx: WIDTH_PX, heightPx: HEIGHT_PX, ground: null, layers: [{ marks }] };
 }

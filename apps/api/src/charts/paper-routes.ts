@@ -1,0 +1,64 @@
+import { PaperAsked } from '@mereward/shared/charts/paper-contract';
+import type { Response } from 'express';
+import { limitDrawings } from '../http/limits';
+import { parse } from '../http/parse';
+import { raw, type Route } from '../http/route';
+import { idIn } from '../http/route-id';
+import { reading } from '../http/transaction';
+import { chartSheet } from './chart-sheet';
+import { chartView } from './chart-view';
+import { fileName } from './file-name';
+import { chartGeojson } from './geojson';
+import { pegCard } from './peg-card';
+
+const guards = [limitDrawings];
+
+/** A printed page belongs to one reader and one hour. */
+function sendPdf(res: Response, { filename, pdf }: { filename: string; pdf: Buffer }): void {
+  res.setHeader('content-disposition', `inline; filename="${filename}"`);
+  res.type('application/pdf').setHeader('cache-control', 'private, no-store').send(pdf);
+}
+
+/** What can be taken away of a chart or a peg: to print, to keep, to open in another program. */
+export const paperRoutes: Route[] = [
+  raw(
+    {
+      method: 'get',
+      path: '/charts/:chartId/sheet.pdf',
+      summary: 'A lake’s chart to print, true to scale, on A3 or A4',
+      signIn: 'open',
+      query: PaperAsked,
+      answerType: 'application/pdf',
+      guards,
+    },
+    async (req, res) => {
+      const { size } = parse(PaperAsked, req.query);
+      sendPdf(res, await reading(req, (ctx) => chartSheet(ctx, idIn(req, 'chartId'), size)));
+    },
+  ),
+  raw(
+    {
+      method: 'get',
+      path: '/charts/:chartId/geojson',
+      summary: 'The same layers as GeoJSON',
+      signIn: 'open',
+      answerType: 'application/geo+json',
+    },
+    async (req, res) => {
+      const view = await reading(req, (ctx) => chartView(ctx, idIn(req, 'chartId')));
+      res.attachment(`${fileName(view.lakeName, view.version ?? 'draft')}.geojson`);
+      res.type('application/geo+json').send(JSON.stringify(chartGeojson(view)));
+    },
+  ),
+  raw(
+    {
+      method: 'get',
+      path: '/pegs/:pegId/card.pdf',
+      summary: 'A peg’s card, to print',
+      signIn: 'open',
+      answerType: 'application/pdf',
+      guards,
+    },
+    async (req, res) => sendPdf(res, await reading(req, (ctx) => pegCard(ctx, idIn(req, 'pegId')))),
+  ),
+];
