@@ -46,7 +46,7 @@ async function loggedVisit(gaugeStartM = 0.62): Promise<{ visitId: string; logId
 
 const drafting = (visitIds: string[]) => ({ person: joan, lakeId: water.lake.id, visitIds });
 
-describe('a chart of a log', () => {
+describe('a chart of a log', { timeout: 60_000 }, () => {
   test('is made of its soundings at datum, merged by cells, and says how many', async () => {
     const { visitId, logId } = await loggedVisit(0.82); // 0.2 m over datum all the while
     const id = await draftedChart(server, drafting([visitId]));

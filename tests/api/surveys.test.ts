@@ -61,6 +61,7 @@ describe('a visit', () => {
       surveyor: { name: 'The bailiff' },
       datumM: 0.62,
       castCount: 0,
+      soundingCount: 0,
       may: { addCasts: true, correct: true },
     });
     expect(list.may.open).toBe(true);

@@ -30,6 +30,17 @@ export class Asking {
     expect(answer.ok(), `${method} ${path}: ${await answer.text()}`).toBe(true);
   }
 
+  /** Sends a form with one file in it. */
+  async send(
+    path: string,
+    fields: Record<string, string>,
+    file: { field: string; name: string; text: string },
+  ) {
+    const upload = { name: file.name, mimeType: 'text/plain', buffer: Buffer.from(file.text) };
+    const answer = await this.asked.post(`/api${path}`, { multipart: { ...fields, [file.field]: upload } });
+    expect(answer.ok(), `POST ${path}: ${await answer.text()}`).toBe(true);
+  }
+
   async get<T>(path: string, schema: z.ZodType<T>): Promise<T> {
     const answer = await this.asked.get(`/api${path}`);
     expect(answer.ok(), `GET ${path}: ${String(answer.status())}`).toBe(true);

@@ -7,7 +7,7 @@ import { readdirSync } from 'node:fs';
 import { fileURLToPath } from 'node:url';
 import { Asking } from './people';
 import type { Site } from './site';
-import { anOpenVisit, castMeanwhile } from './story-water';
+import { aLogRead, anOpenVisit, castMeanwhile } from './story-water';
 
 const APP = fileURLToPath(new URL('../../../apps/mobile/src/app', import.meta.url));
 
@@ -19,7 +19,17 @@ export const routes = (): string[] =>
     .filter((route) => route !== '/')
     .sort();
 
-const KINDS = ['lakeId', 'pegId', 'markId', 'boardId', 'chartId', 'castId', 'visitId', 'spotId'] as const;
+const KINDS = [
+  'lakeId',
+  'pegId',
+  'markId',
+  'boardId',
+  'chartId',
+  'castId',
+  'visitId',
+  'spotId',
+  'logId',
+] as const;
 export type Ids = Readonly<Record<(typeof KINDS)[number], string>>;
 
 /** One thing of each kind from the demo, and an open visit of Joan's with a few casts. */
@@ -33,6 +43,7 @@ export async function demoIds(site: Site): Promise<Ids> {
   const startedAt = new Date(Date.now() - 60_000).toISOString();
   const visitId = await anOpenVisit(joan, { lakeId, boardId }, { startedAt, title: 'Still open' });
   await castMeanwhile(joan, visitId, aFan().slice(0, 6));
+  const logId = await aLogRead(joan, visitId, { name: 'points.csv', text: pointsAt(lake.origin) });
   const { casts } = await joan.get(`/visits/${visitId}`, VisitWithCasts);
   const pegId = lake.pegs.find(({ number }) => number === 'FO7')?.id ?? '';
   const { spots } = await joan.get(`/pegs/${pegId}/page`, PegPageView);
@@ -45,8 +56,19 @@ export async function demoIds(site: Site): Promise<Ids> {
     chartId: charts[0]?.id ?? '',
     castId: casts[0]?.id ?? '',
     visitId,
+    logId,
   };
 }
+
+/** A few soundings at a place, one far from it and one that can't be read. */
+const pointsAt = ([lon, lat]: readonly [number, number]): string =>
+  [
+    'lat,lon,depth',
+    `${lat},${lon},2.1`,
+    `${lat + 0.00002},${lon},2.2`,
+    `${lat + 1},${lon},2`,
+    `${lat},x,2`,
+  ].join('\n');
 
 /** A route with its ids filled in, and what it asks for beside them. */
 export function addressOf(route: string, ids: Ids): string {

@@ -2,10 +2,12 @@ import { randomUUID } from 'node:crypto';
 import { FisheryList } from '@mereward/shared/fisheries/contract';
 import type { LakeDetails } from '@mereward/shared/lakes/contract';
 import type { CastObservation, OpenVisit } from '@mereward/shared/surveys/contract';
+import { LogView } from '@mereward/shared/surveys/log-contract';
 import { aKit } from '../../support/kit';
 import { castsFile, chimneyDetails, longOutline, longPegDetails } from '../../support/long-water';
 import { boardDetails, lakeDetails } from '../../support/water-details';
 import type { Asking } from './people';
+import { expect } from './site';
 
 export type StoryWater = { lakeId: string; pegId: string; markId: string; boardId: string };
 
@@ -48,6 +50,18 @@ export async function anOpenVisit(
   };
   await surveyor.do('POST', `/lakes/${lakeId}/visits`, visit);
   return visit.id;
+}
+
+/** A log of soundings brought to a visit, and read. */
+export async function aLogRead(
+  surveyor: Asking,
+  visitId: string,
+  { name, text }: { name: string; text: string },
+): Promise<string> {
+  const id = randomUUID();
+  await surveyor.send(`/visits/${visitId}/logs`, { id }, { field: 'files', name, text });
+  await expect.poll(async () => (await surveyor.get(`/logs/${id}`, LogView)).state).toBe('looked');
+  return id;
 }
 
 /** Casts made meanwhile, taken in from a table as from a surveyor's notebook. */

@@ -145,10 +145,10 @@ async function takeIn(db: DataSource, run: Run, { preview, rows }: LogEnd): Prom
       }
       const mine = await firstRow(
         tx,
-        `UPDATE sounding_import SET state = 'done', step = 'Done', share = 1, report = $3, preview = NULL,
+        `UPDATE sounding_import SET state = 'done', step = 'Done', share = 1, report = $3, preview = $4,
                 updated_at = clock_timestamp()
           WHERE ${MINE} AND cancel_asked_at IS NULL RETURNING id`,
-        [run.logId, run.id, reportOf(preview)],
+        [run.logId, run.id, reportOf(preview), preview],
       );
       if (!mine) throw new LetGo();
     });

@@ -57,6 +57,6 @@ function shapeLog(log: SoundingImport, names: ReadonlyMap<string, string>, may: 
     report: log.report,
     importedBy: names.get(log.importedBy) ?? '',
     importedAt: log.importedAt.toISOString(),
-    may: { change: may && !busy && log.state !== 'done', undo: may && !busy },
+    may: { change: may && !busy && log.state !== 'done', undo: may && !busy, cancel: may && busy },
   };
 }

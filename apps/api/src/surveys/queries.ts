@@ -12,7 +12,7 @@ import { mayKeepCasts } from './policy';
 import { castsToday } from './reduce-again';
 import type { VisitSite } from './reduce-visit';
 import { visitSite } from './visit-site';
-import { shapeVisit, visitView } from './visit-view';
+import { shapeVisit, soundingCounts, visitView } from './visit-view';
 
 const MOST_VISITS = 500;
 
@@ -32,12 +32,20 @@ export async function listVisits(ctx: Ctx, lakeId: string): Promise<VisitList> {
       WHERE visit_id = ANY ($1) AND undone_at IS NULL GROUP BY visit_id`,
     [visits.map((visit) => visit.id)],
   );
+  const soundings = await soundingCounts(
+    tx,
+    visits.map((visit) => visit.id),
+  );
   const countOf = new Map(counts.map(({ id, n }) => [id, n]));
   const shaped = visits.map((visit) =>
     shapeVisit(
       ctx,
       { visit, lake },
-      { surveyorName: names.get(visit.surveyorId) ?? '', castCount: countOf.get(visit.id) ?? 0 },
+      {
+        surveyorName: names.get(visit.surveyorId) ?? '',
+        castCount: countOf.get(visit.id) ?? 0,
+        soundingCount: soundings.get(visit.id) ?? 0,
+      },
     ),
   );
   return { visits: shaped, may: { open: mayKeepCasts(actor, lake.fisheryId) } };

@@ -1,11 +1,12 @@
 import { Account } from '@mereward/db/entities/accounts/account';
 import type { VisitView } from '@mereward/shared/surveys/contract';
+import type { EntityManager } from 'typeorm';
 import type { Ctx } from '../ctx';
 import type { VisitFound } from './find-visit';
 import { mayKeepCasts } from './policy';
 
 /** What a view of a visit needs beside its row. */
-export type VisitNames = { surveyorName: string; castCount: number };
+export type VisitNames = { surveyorName: string; castCount: number; soundingCount: number };
 
 export async function visitView(ctx: Ctx, found: VisitFound): Promise<VisitView> {
   const { tx } = ctx;
@@ -14,7 +15,25 @@ export async function visitView(ctx: Ctx, found: VisitFound): Promise<VisitView>
     'SELECT count(*)::int AS n FROM survey_cast WHERE visit_id = $1 AND undone_at IS NULL',
     [found.visit.id],
   );
-  return shapeVisit(ctx, found, { surveyorName: surveyor?.name ?? '', castCount: count?.n ?? 0 });
+  const soundings = await soundingCounts(tx, [found.visit.id]);
+  return shapeVisit(ctx, found, {
+    surveyorName: surveyor?.name ?? '',
+    castCount: count?.n ?? 0,
+    soundingCount: soundings.get(found.visit.id) ?? 0,
+  });
+}
+
+/** How many soundings the logs of some visits brought, by visit. */
+export async function soundingCounts(
+  tx: EntityManager,
+  visitIds: readonly string[],
+): Promise<Map<string, number>> {
+  const rows = await tx.query<{ id: string; n: number }[]>(
+    `SELECT visit_id AS id, sum((report->>'kept')::int)::int AS n FROM sounding_import
+      WHERE visit_id = ANY ($1) AND state = 'done' AND undone_at IS NULL GROUP BY visit_id`,
+    [visitIds],
+  );
+  return new Map(rows.map(({ id, n }) => [id, n]));
 }
 
 export function shapeVisit({ actor }: Ctx, { visit, lake }: VisitFound, names: VisitNames): VisitView {
@@ -39,6 +58,7 @@ export function shapeVisit({ actor }: Ctx, { visit, lake }: VisitFound, names: V
     kit: visit.kit,
     consentToPublish: visit.consentToPublish,
     castCount: names.castCount,
+    soundingCount: names.soundingCount,
     version: visit.version,
     may: { addCasts: mayKeep && visit.endedAt === null, correct: mayKeep },
   };

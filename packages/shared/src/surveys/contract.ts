@@ -263,6 +263,7 @@ export const VisitView = z.object({
   kit: Kit,
   consentToPublish: z.boolean(),
   castCount: z.int(),
+  soundingCount: z.int().default(0), // of logs taken in
   version: z.int(),
   may: z.object({ addCasts: z.boolean(), correct: z.boolean() }),
 });

@@ -137,7 +137,7 @@ export const LogView = z.object({
   report: LogReport.nullable(), // once it is taken in
   importedBy: z.string(),
   importedAt: z.iso.datetime(),
-  may: z.object({ change: z.boolean(), undo: z.boolean() }),
+  may: z.object({ change: z.boolean(), undo: z.boolean(), cancel: z.boolean() }),
 });
 export type LogView = z.infer<typeof LogView>;
 

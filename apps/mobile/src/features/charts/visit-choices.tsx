@@ -1,6 +1,7 @@
 import type { VisitView } from '@mereward/shared/surveys/contract';
 import { useController, type Control } from 'react-hook-form';
 import { ManyChoiceGrid } from '@/components/choice-grid';
+import { visitCountWords } from '@/features/surveys/visit-words';
 import { dayName } from '@/lib/format-time';
 
 type Wanted = { title: string; contourStep: string; visitIds: string[] };
@@ -14,7 +15,7 @@ export function Choices({ control, visits }: { control: Control<Wanted>; visits:
       choices={visits.map((visit) => ({
         key: visit.id,
         label: visit.title,
-        note: `${dayName(visit.startedAt.slice(0, 10))}, ${visit.surveyor.name}, ${visit.castCount} casts${visit.status === 'open' ? ', still open' : ''}`,
+        note: `${dayName(visit.startedAt.slice(0, 10))}, ${visit.surveyor.name}, ${visitCountWords(visit)}${visit.status === 'open' ? ', still open' : ''}`,
       }))}
       values={field.value}
       onChange={field.onChange}

@@ -12,7 +12,7 @@ import { Text } from '@/components/text';
 import { space } from '@/constants/layout';
 import { useLake } from '@/features/lakes/api';
 import { useVisits } from '@/features/surveys/api';
-import { countWords, dayAt, levelWords } from '@/features/surveys/visit-words';
+import { countWords, visitCountWords, dayAt, levelWords } from '@/features/surveys/visit-words';
 
 const AT_FIRST = 3;
 
@@ -66,7 +66,7 @@ function Visits({ list, zone, name }: { list: VisitList; zone: string; name: str
           <Row
             key={visit.id}
             title={visit.title}
-            note={`${dayAt(visit.startedAt, zone)} · ${visit.surveyor.name} · ${countWords(visit.castCount, 'cast')}`}
+            note={`${dayAt(visit.startedAt, zone)} · ${visit.surveyor.name} · ${visitCountWords(visit)}`}
             href={`/bank/surveys/${visit.id}`}
             end={visit.status === 'open' ? <StatusShape shape="ring" tone="water" word="open" /> : 'closed'}
           />

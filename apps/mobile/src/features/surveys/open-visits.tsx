@@ -6,7 +6,7 @@ import { Section } from '@/components/section';
 import { Text } from '@/components/text';
 import { space } from '@/constants/layout';
 import { visitsQuery } from '@/features/surveys/api';
-import { countWords } from '@/features/surveys/visit-words';
+import { visitCountWords } from '@/features/surveys/visit-words';
 import { themed } from '@/hooks/themed';
 
 const useStyles = themed((c) => ({
@@ -42,7 +42,7 @@ function OpenVisit({ visit }: { visit: VisitView }) {
       <View>
         <Text weight="semibold">{visit.title}</Text>
         <Text size="small" tone="inkSoft">
-          {`${visit.lakeName} · ${visit.surveyor.name} · ${countWords(visit.castCount, 'cast')}`}
+          {`${visit.lakeName} · ${visit.surveyor.name} · ${visitCountWords(visit)}`}
         </Text>
       </View>
       <View style={styles.acts}>

@@ -13,6 +13,7 @@ import { useLake } from '@/features/lakes/api';
 import { useVisit } from '@/features/surveys/api';
 import { CastsSection } from '@/features/surveys/casts-section';
 import { CoverageSection } from '@/features/surveys/coverage-section';
+import { LogsSection } from '@/features/surveys/logs-section';
 import { VisitFacts, VisitKit } from '@/features/surveys/visit-facts';
 import { useThreeColumns } from '@/hooks/use-wide';
 
@@ -71,6 +72,7 @@ function Visit({ value, lake }: { value: VisitWithCasts; lake: LakeView }) {
       </Section>
     );
   const coverage = casts.length > 0 ? <CoverageSection value={value} lake={lake} bare={beside} /> : null;
+  const logs = <LogsSection visitId={visit.id} zone={lake.zone} />;
   if (!beside)
     return (
       <>
@@ -78,6 +80,7 @@ function Visit({ value, lake }: { value: VisitWithCasts; lake: LakeView }) {
         {coverage}
         {kit}
         {made}
+        {logs}
       </>
     );
   return (
@@ -90,6 +93,7 @@ function Visit({ value, lake }: { value: VisitWithCasts; lake: LakeView }) {
         <View style={{ flex: 1, minWidth: 0 }}>{coverage}</View>
       </View>
       {made}
+      {logs}
     </>
   );
 }

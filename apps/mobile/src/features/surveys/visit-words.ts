@@ -20,6 +20,16 @@ export const dayAt = (at: string, zone: string): string =>
 export const countWords = (count: number, one: string): string =>
   `${figure(count)} ${count === 1 ? one : `${one}s`}`;
 
+/** "12 casts", "12 casts, 4,310 soundings": what a visit holds. */
+export function visitCountWords({
+  castCount,
+  soundingCount,
+}: Pick<VisitView, 'castCount' | 'soundingCount'>): string {
+  const soundings = soundingCount > 0 ? [countWords(soundingCount, 'sounding')] : [];
+  const casts = castCount > 0 || soundingCount === 0 ? [countWords(castCount, 'cast')] : [];
+  return [...casts, ...soundings].join(', ');
+}
+
 /** What a grade stands for, each way and in depth. */
 export const GRADE_WORDS: Readonly<Record<Grade, string>> = {
   A: 'within 1 m, depth within 0.15 m',

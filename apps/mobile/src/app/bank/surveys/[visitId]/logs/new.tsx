@@ -1,0 +1,1 @@
+export { LogNewScreen as default } from '@/features/surveys/log-new-screen';

@@ -1,0 +1,59 @@
+import { useCallback, useMemo } from 'react';
+import { ruled } from '@mereward/shared/charts/drawing/mark';
+import { toPlane } from '@mereward/shared/geometry/plane';
+import type { LakeView } from '@mereward/shared/lakes/contract';
+import type { LogPreview } from '@mereward/shared/surveys/log-contract';
+import { View } from 'react-native';
+import { Text } from '@/components/text';
+import { space } from '@/constants/layout';
+import { lakeBackdrop, waterLines } from '@/features/charts/lake-backdrop';
+import { LakeCanvas, type Draw } from '@/features/charts/lake-canvas';
+import { countWords } from '@/features/surveys/visit-words';
+
+const DOT = 'm-2 0a2 2 0 1 0 4 0a2 2 0 1 0 -4 0z';
+const CROSS = 'm-4 -4l8 8m0 -8l-8 8';
+
+type Props = { lake: LakeView; preview: LogPreview; heightPx: number };
+
+/** Where a log's soundings fall on the lake: dots for those taken, crosses for those left out. */
+export function LogMap({ lake, preview, heightPx }: Props) {
+  const { origin } = lake;
+  const { sample } = preview;
+  const under = useMemo(() => lakeBackdrop(lake, { water: true }), [lake]);
+  const frame = useMemo(() => waterLines(lake), [lake]);
+  const at = useMemo(() => {
+    const taken: number[] = [];
+    const left: number[] = [];
+    for (const [lon, lat, kept] of sample) {
+      const { xM, yM } = toPlane(origin, [lon, lat]);
+      (kept ? taken : left).push(xM, yM);
+    }
+    return { taken, left };
+  }, [origin, sample]);
+  const over = useCallback<Draw>(
+    ({ palette }) => [
+      { kind: 'glyphs', at: at.taken, glyph: DOT, fill: palette.ink, stroke: null },
+      { kind: 'glyphs', at: at.left, glyph: CROSS, fill: null, stroke: ruled(palette.selected, 1.8) },
+    ],
+    [at],
+  );
+  const drawn =
+    sample.length < preview.found
+      ? ` Of ${countWords(preview.found, 'sounding')} ${sample.length} are drawn.`
+      : '';
+  return (
+    <View style={{ gap: space.small }}>
+      <LakeCanvas
+        label={`Where the soundings fall on ${lake.details.name}`}
+        frame={frame}
+        under={under}
+        over={over}
+        handles={[]}
+        onTap={() => undefined}
+        onMove={() => undefined}
+        heightPx={heightPx}
+      />
+      <Text size="small" tone="inkSoft">{`Dots are taken, crosses left out.${drawn}`}</Text>
+    </View>
+  );
+}
