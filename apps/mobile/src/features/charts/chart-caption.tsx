@@ -1,5 +1,6 @@
 import { chartCaution } from '@mereward/shared/charts/cautions';
-import { AGE_WORDS, type ChartAge } from '@mereward/shared/charts/chart-age';
+import { ageWords, type ChartAge } from '@mereward/shared/charts/chart-age';
+import type { ChartChange } from '@mereward/shared/charts/chart-change-contract';
 import { View } from 'react-native';
 import { StatusShape } from '@/components/status-shape';
 import { Text } from '@/components/text';
@@ -14,17 +15,18 @@ type Surveyed = {
   surveyedTo: string;
   datumM: number;
   age: ChartAge;
+  changes?: readonly ChartChange[] | undefined; // what dates it
 };
 
 /** A chart's age in shape and words. */
-export function ChartAgeBadge({ age }: { age: ChartAge }) {
+export function ChartAgeBadge({ age, changes }: Pick<Surveyed, 'age' | 'changes'>) {
   const looks = {
     current: { shape: 'triangle', tone: 'reed' },
     ageing: { shape: 'ring', tone: 'amber' },
     old: { shape: 'diamond', tone: 'amber' },
     changed: { shape: 'diamond', tone: 'amber' },
   } as const;
-  return <StatusShape {...looks[age]} word={AGE_WORDS[age]} size="small" />;
+  return <StatusShape {...looks[age]} word={ageWords(age, changes)} size="small" />;
 }
 
 /** Stands under every chart: which one, when it was surveyed, at what level, and what it must not be used for. */
@@ -36,7 +38,7 @@ export function ChartCaption({ chart, shownAt }: { chart: Surveyed; shownAt: str
       <Text size="small" weight="semibold">
         {`${version} · surveyed ${dayRange(chart.surveyedFrom, chart.surveyedTo)} · datum ${length(chart.datumM, units, 2)} · ${shownAt}`}
       </Text>
-      <ChartAgeBadge age={chart.age} />
+      <ChartAgeBadge age={chart.age} changes={chart.changes} />
       <Text size="small" tone="inkSoft">
         {`${chartCaution(chart)} Not for navigation.`}
       </Text>

@@ -1,7 +1,9 @@
 import { Empty } from '@/components/empty';
 import { LinkButton } from '@/components/link-button';
+import { List, Row } from '@/components/list';
 import { Loaded } from '@/components/loaded';
 import { Page } from '@/components/page';
+import { Section } from '@/components/section';
 import { useMyLakes } from '@/features/fisheries/use-my-lakes';
 import { BankLake } from '@/features/surveys/bank-lake';
 import { OpenVisits } from '@/features/surveys/open-visits';
@@ -31,6 +33,11 @@ export function BankScreen() {
             {lakes.map(({ id, name }) => (
               <BankLake key={id} lakeId={id} name={name} />
             ))}
+            <Section title="Kit">
+              <List label="Kit">
+                <Row title="Leads" note="How fast each falls, counted over known depths" href="/bank/leads" />
+              </List>
+            </Section>
           </>
         )}
       </Loaded>

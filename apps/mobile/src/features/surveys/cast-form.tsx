@@ -2,6 +2,7 @@ import { useState, type ReactNode } from 'react';
 import { View } from 'react-native';
 import type { LakeView } from '@mereward/shared/lakes/contract';
 import type { CastView, VisitView } from '@mereward/shared/surveys/contract';
+import type { Reducing } from '@mereward/shared/surveys/reducing-contract';
 import { Button } from '@/components/button';
 import { Form } from '@/components/form';
 import { Kept } from '@/components/kept';
@@ -35,12 +36,14 @@ type Props = {
   lake: LakeView;
   visit: VisitView;
   casts: readonly CastView[];
+  /** What they are reduced with beside the kit. */
+  reducing: Reducing | null;
   /** Proposes casts from the peg one stands on; one that is taken fills aim and wraps. */
   suggest?: ((terms: SuggestTerms) => ReactNode) | undefined;
 };
 
 /** Aim, wraps, feel, float: one screen, the last cast carried forward, the call and the two acts under the thumb. */
-export function CastForm({ lake, visit, casts, suggest }: Props) {
+export function CastForm({ lake, visit, casts, reducing, suggest }: Props) {
   const keep = useKeepCast(visit.id);
   const undo = useUndoCast(visit.id);
   const [said, setSaid] = useState<string | null>(null);
@@ -48,6 +51,7 @@ export function CastForm({ lake, visit, casts, suggest }: Props) {
     lake,
     visit,
     casts,
+    reducing,
     send: (input) => keep.mutateAsync(input),
     onKept: ({ seq: kept }) => {
       setSaid(`Cast ${kept} is kept.`);

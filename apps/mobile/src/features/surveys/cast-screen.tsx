@@ -7,6 +7,7 @@ import { Loaded } from '@/components/loaded';
 import { Page } from '@/components/page';
 import { useLake } from '@/features/lakes/api';
 import { useVisit } from '@/features/surveys/api';
+import { reducingOf } from '@/features/surveys/cast-site-of';
 import { CastForm } from '@/features/surveys/cast-form';
 
 /** The next cast of a visit, entered with one hand. */
@@ -15,7 +16,15 @@ export function CastScreen({ suggest }: Pick<ComponentProps<typeof CastForm>, 's
   const visit = useVisit(visitId);
   const lake = useLake(visit.data?.visit.lakeId ?? '');
   if (visit.data?.visit.may.addCasts && lake.data && lake.data.pegs.length > 0)
-    return <CastForm lake={lake.data} visit={visit.data.visit} casts={visit.data.casts} suggest={suggest} />;
+    return (
+      <CastForm
+        lake={lake.data}
+        visit={visit.data.visit}
+        casts={visit.data.casts}
+        reducing={reducingOf(visit.data)}
+        suggest={suggest}
+      />
+    );
   const back = { label: visit.data?.visit.title ?? 'Visit', href: `/bank/surveys/${visitId}` } as const;
   return (
     <Page title="Next cast" back={back}>

@@ -1,14 +1,24 @@
 import { outlineInPlane } from '@mereward/shared/geometry/outline';
 import type { LakeView, PegView } from '@mereward/shared/lakes/contract';
 import type { CastSite } from '@mereward/shared/surveys/cast-site';
-import type { CastObservation, VisitView } from '@mereward/shared/surveys/contract';
+import type { CastObservation, VisitView, VisitWithCasts } from '@mereward/shared/surveys/contract';
+import { Reducing } from '@mereward/shared/surveys/reducing-contract';
 import { stanceSigmaM } from '@mereward/shared/surveys/error-budget';
 
-export type Surroundings = { lake: LakeView; peg: PegView; visit: VisitView };
+export type Surroundings = {
+  lake: LakeView;
+  peg: PegView;
+  visit: VisitView;
+  reducing: Reducing | null; // as it came with the visit; null: the built-in table and no calibrated lead
+};
+
+/** What a visit says its casts are reduced with beside its kit. */
+export const reducingOf = ({ reducing }: VisitWithCasts): Reducing | null =>
+  Reducing.safeParse(reducing).data ?? null;
 
 /** What a cast is reduced against, from what this phone has read: the same as the server builds from its rows. */
 export function castSiteOf(
-  { lake, peg, visit }: Surroundings,
+  { lake, peg, visit, reducing }: Surroundings,
   cast: { observation: CastObservation; observedAt: string; earlier: readonly CastObservation[] },
 ): CastSite {
   const { aim } = cast.observation;
@@ -37,7 +47,8 @@ export function castSiteOf(
       higherNumberHigherWater: board?.details.higherNumberHigherWater ?? true,
     },
     observedAt: cast.observedAt,
-    lead: null,
+    lead: reducing?.lead ?? null,
     earlier: cast.earlier,
+    tables: reducing?.feel ?? undefined,
   };
 }

@@ -14,6 +14,7 @@ import { Text } from '@/components/text';
 import { useLake } from '@/features/lakes/api';
 import { useStance, useVisit } from '@/features/surveys/api';
 import { callWords, depthWords } from '@/features/surveys/call-words';
+import { reducingOf } from '@/features/surveys/cast-site-of';
 import { GradeShape } from '@/features/surveys/grade-shape';
 import { ReductionSteps } from '@/features/surveys/reduction-steps';
 import { GRADE_WORDS } from '@/features/surveys/visit-words';
@@ -87,7 +88,10 @@ function Cast({ cast, lake, of }: CastProps) {
 
 function Steps({ cast, lake, of, peg }: CastProps & { peg: PegView }) {
   const { visit, casts } = of;
-  const surroundings = useMemo(() => ({ lake, peg, visit }), [lake, peg, visit]);
+  const surroundings = useMemo(
+    () => ({ lake, peg, visit, reducing: reducingOf(of) }),
+    [lake, peg, visit, of],
+  );
   const reduced = useKeptReduction(surroundings, cast, casts);
   return <ReductionSteps steps={reduced?.steps ?? []} />;
 }

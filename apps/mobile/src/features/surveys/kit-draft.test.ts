@@ -32,6 +32,14 @@ test('a kit comes through the form unchanged', () => {
   expect(kitOf(KitDraft.parse(typedKit(kit)))).toEqual(kit);
 });
 
+test('a calibrated lead comes through the form, and none is none', () => {
+  const leadId = '6a1f0d52-3c1e-4f9e-9a54-0d6a3b6f7c03';
+  const kit = kitOf(KitDraft.parse({ ...chosen, leadId }));
+  expect(kit.leadId).toBe(leadId);
+  expect(kitOf(KitDraft.parse(typedKit(kit)))).toEqual(kit);
+  expect(kitOf(KitDraft.parse(chosen))).not.toHaveProperty('leadId');
+});
+
 test('the last visit’s kit is carried over, but what wraps are read to is asked afresh', () => {
   const kit = { ...kitOf(KitDraft.parse(chosen)), floatOffsetM: 0.31 };
   expect(kitToStartFrom(kit)).toMatchObject({ floatOffsetM: '0.31', wrapReference: null });

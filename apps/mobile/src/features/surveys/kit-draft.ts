@@ -53,6 +53,7 @@ export const KitDraft = z
     floatOffsetM: typedNumber({ what: 'The float set-up', min: 0, max: 2, unit: 'm' }),
     leadG: typedNumber({ what: 'The lead', min: 5, max: 500, unit: 'g' }),
     leadShape: z.enum(['smooth_ball', 'ribbed', 'pronged', 'other']),
+    leadId: z.string(), // '': no calibrated lead
     declinationDeg: typedNumber({ what: 'Declination', min: -90, max: 90, unit: '°' }),
   })
   .refine(({ sticks, stickSpacingM }) => sticks !== 'other' || stickSpacingM !== null, {
@@ -90,6 +91,7 @@ export const USUAL_KIT: TypedKit = {
   floatOffsetM: '0.25',
   leadG: '85',
   leadShape: 'smooth_ball',
+  leadId: '',
   declinationDeg: '0',
 };
 
@@ -128,6 +130,7 @@ export function typedKit(kit: Kit): TypedKit {
     floatOffsetM: text(kit.floatOffsetM),
     leadG: text(kit.leadG),
     leadShape: kit.leadShape,
+    leadId: kit.leadId ?? '',
     declinationDeg: text(kit.declinationDeg),
   };
 }
@@ -159,6 +162,7 @@ export function kitOf(read: ReadKit): Kit {
     floatOffsetM: read.floatOffsetM,
     leadG: read.leadG,
     leadShape: read.leadShape,
+    ...(read.leadId === '' ? {} : { leadId: read.leadId }),
     declinationDeg: read.declinationDeg,
   };
 }

@@ -2,6 +2,8 @@ import { useFormContext, useWatch, type Control } from 'react-hook-form';
 import { FormChoice } from '@/components/form-controls';
 import { FormField } from '@/components/form-field';
 import { FormPart } from '@/components/form-part';
+import { LeadPart } from '@/features/surveys/lead-part';
+import { LEAD_SHAPES, LINE_TYPES } from '@/features/surveys/lead-words';
 import { PULLS, RODS, STICKS, type TypedKit } from '@/features/surveys/kit-draft';
 
 /** What a form that holds a kit has at least. */
@@ -16,20 +18,8 @@ const MEASURED = [
   { key: 'along_line', label: 'along the line', note: 'tape round the sticks' },
   { key: 'centres', label: 'between centres', note: 'half a turn round each is added' },
 ] as const;
-const LINES = [
-  { key: 'braid', label: 'braid' },
-  { key: 'mono', label: 'nylon' },
-  { key: 'other', label: 'other' },
-] as const;
-const LEADS = [
-  { key: 'smooth_ball', label: 'smooth' },
-  { key: 'ribbed', label: 'ribbed' },
-  { key: 'pronged', label: 'pronged' },
-  { key: 'other', label: 'other' },
-] as const;
-
 /** Sticks, rod, line and float: the constants every cast of the visit is reduced with. Stands in a `FormProvider`. */
-export function KitPart() {
+export function KitPart({ lakeId }: { lakeId: string }) {
   const { control } = useFormContext<HoldsKit>();
   return (
     <>
@@ -43,7 +33,7 @@ export function KitPart() {
       />
       <SticksPart control={control} />
       <FloatKitPart control={control} />
-      <RodPart control={control} />
+      <RodPart control={control} lakeId={lakeId} />
     </>
   );
 }
@@ -116,7 +106,7 @@ function FloatKitPart({ control }: Props) {
   );
 }
 
-function RodPart({ control }: Props) {
+function RodPart({ control, lakeId }: Props & { lakeId: string }) {
   return (
     <FormPart
       control={control}
@@ -129,6 +119,7 @@ function RodPart({ control }: Props) {
         'kit.stretchSigmaPercent',
         'kit.wrapSigmaShare',
         'kit.leadG',
+        'kit.leadId',
         'kit.declinationDeg',
       ]}
     >
@@ -158,7 +149,14 @@ function RodPart({ control }: Props) {
       />
       <LinePart control={control} />
       <FormField control={control} name="kit.leadG" label="Lead, grams" keypad="decimal" bank />
-      <FormChoice control={control} name="kit.leadShape" label="Its shape" choices={LEADS} columns={4} />
+      <FormChoice
+        control={control}
+        name="kit.leadShape"
+        label="Its shape"
+        choices={LEAD_SHAPES}
+        columns={4}
+      />
+      <LeadPart lakeId={lakeId} />
       <FormField
         control={control}
         name="kit.declinationDeg"
@@ -175,7 +173,7 @@ function LinePart({ control }: Props) {
   const line = useWatch({ control, name: 'kit.lineType' });
   return (
     <>
-      <FormChoice control={control} name="kit.lineType" label="Line" choices={LINES} columns={3} />
+      <FormChoice control={control} name="kit.lineType" label="Line" choices={LINE_TYPES} columns={3} />
       {line === 'braid' ? null : (
         <>
           <FormField

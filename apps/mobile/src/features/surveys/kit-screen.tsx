@@ -102,7 +102,7 @@ function KitForm({ value, back, onBegin, onDone }: Props) {
           {`${countWords(casts.length, 'cast')} will be reduced again with what stands here. What was observed stays as it is, and published charts keep what they were made from.`}
         </Text>
         <FormProvider {...form}>
-          <KitPart />
+          <KitPart lakeId={visit.lakeId} />
         </FormProvider>
       </Form>
     </Page>

@@ -112,7 +112,7 @@ export function NewVisitForm({ lake, board, last }: Props) {
           }
         >
           <FormProvider {...form}>
-            <KitPart />
+            <KitPart lakeId={lake.id} />
           </FormProvider>
         </Section>
         <WeatherPart control={control} />

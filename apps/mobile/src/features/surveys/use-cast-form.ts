@@ -2,6 +2,7 @@ import { useEffect, useRef } from 'react';
 import type { LakeView } from '@mereward/shared/lakes/contract';
 import { Problem } from '@mereward/shared/problems/problem';
 import type { CastView, KeepCast, VisitView } from '@mereward/shared/surveys/contract';
+import type { Reducing } from '@mereward/shared/surveys/reducing-contract';
 import { useStance } from '@/features/surveys/api';
 import {
   CastDraft,
@@ -26,12 +27,13 @@ type Terms = {
   lake: LakeView;
   visit: VisitView;
   casts: readonly CastView[];
+  reducing: Reducing | null;
   send: (cast: KeepCast) => Promise<CastView>;
   onKept: (cast: CastView) => void;
 };
 
 /** The form of one cast after another: carried forward, kept over a reload, reduced while it is typed. */
-export function useCastForm({ lake, visit, casts, send, onKept }: Terms) {
+export function useCastForm({ lake, visit, casts, reducing, send, onKept }: Terms) {
   const goesCloserIn = useRef(false);
   const last = casts.at(-1);
   const form: CastFormState = useDraftForm({
@@ -49,7 +51,7 @@ export function useCastForm({ lake, visit, casts, send, onKept }: Terms) {
   const typed = form.watch();
   const read = CastDraft.safeParse(typed);
   const peg = useStance(typed.pegId || null);
-  const surroundings = peg.data ? { lake, peg: peg.data, visit } : null;
+  const surroundings = peg.data ? { lake, peg: peg.data, visit, reducing } : null;
   const observation = read.success ? observationOf(read.data) : null;
   const keep = (): void => {
     goesCloserIn.current = false;

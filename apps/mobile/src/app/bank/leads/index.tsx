@@ -1,0 +1,1 @@
+export { LeadsScreen as default } from '@/features/surveys/leads-screen';

@@ -1,0 +1,1 @@
+export { NewLeadScreen as default } from '@/features/surveys/new-lead-screen';
