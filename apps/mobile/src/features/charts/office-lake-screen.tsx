@@ -52,6 +52,7 @@ function Lake({ lake }: { lake: LakeView }) {
               </>
             ) : null}
             <LinkButton label="Pegs’ waters" href={`/office/lakes/${lake.id}/waters`} />
+            <LinkButton label="What changed the bottom" href={`/office/lakes/${lake.id}/events`} />
             <LinkButton label="As visitors see it" href={`/water/lakes/${lake.id}`} />
           </View>
         </View>

@@ -48,7 +48,10 @@ function Acts({ lake, maySurvey }: { lake: LakeView; maySurvey: boolean }) {
           <LinkButton label="Record the level" href={`/bank/levels/${lake.id}`} bank grow />
         ) : null}
         {maySurvey ? (
-          <LinkButton label="Open a visit" href={`/bank/surveys/new?lakeId=${lake.id}`} bank grow />
+          <>
+            <LinkButton label="Open a visit" href={`/bank/surveys/new?lakeId=${lake.id}`} bank grow />
+            <LinkButton label="Confirm a bottom" href={`/bank/confirmed/${lake.id}`} bank grow />
+          </>
         ) : null}
       </View>
     </>

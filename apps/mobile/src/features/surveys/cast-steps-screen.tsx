@@ -71,7 +71,16 @@ function Cast({ cast, lake, of }: CastProps) {
       </Text>
       {observation.note ? <Note title="Note">{observation.note}</Note> : null}
       {reduced.ok ? (
-        <Sounding sounding={reduced.sounding} />
+        <>
+          <Sounding sounding={reduced.sounding} />
+          {of.visit.may.correct ? (
+            <LinkButton
+              label="Confirm what lies here"
+              href={`/bank/confirmed/${lake.id}?castId=${cast.id}&cast=${encodeURIComponent(`cast ${cast.seq} from peg ${peg?.number ?? ''}`)}`}
+              bank
+            />
+          ) : null}
+        </>
       ) : (
         <Note kind="caution" title={reduced.reason}>
           {reduced.remedy}

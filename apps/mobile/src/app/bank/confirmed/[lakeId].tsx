@@ -1,0 +1,1 @@
+export { ConfirmBottomScreen as default } from '@/features/charts/confirm-bottom-screen';

@@ -1,0 +1,1 @@
+export { BottomEventsScreen as default } from '@/features/charts/bottom-events-screen';

@@ -1,0 +1,58 @@
+import { useCallback, useMemo } from 'react';
+import { filled, ruled, stroked, type Mark } from '@mereward/shared/charts/drawing/mark';
+import { mixed } from '@mereward/shared/charts/drawing/colour';
+import { toPlane } from '@mereward/shared/geometry/plane';
+import type { LakeView } from '@mereward/shared/lakes/contract';
+import { lakeBackdrop, waterLines } from '@/features/charts/lake-backdrop';
+import { LakeCanvas, type Draw } from '@/features/charts/lake-canvas';
+import { lineOf, placeOf } from '@/features/charts/outline-drawing';
+
+const DOT = 'm-5 0a5 5 0 1 0 10 0a5 5 0 1 0 -10 0z';
+
+type Props = {
+  lake: LakeView;
+  corners: readonly [number, number][];
+  onCorners: (corners: [number, number][]) => void;
+};
+
+/** A part of the lake, drawn corner by corner: a tap adds one, a drag moves one. It closes by itself. */
+export function AreaCanvas({ lake, corners, onCorners }: Props) {
+  const { origin } = lake;
+  const under = useMemo(() => lakeBackdrop(lake, { water: true }), [lake]);
+  const frame = useMemo(() => waterLines(lake), [lake]);
+  const points = useMemo(() => corners.map((corner) => toPlane(origin, corner)), [corners, origin]);
+  const over = useCallback<Draw>(
+    ({ palette }): Mark[] => {
+      const ring = lineOf(points);
+      if (points.length === 0) return [];
+      const dots: Mark = {
+        kind: 'glyphs',
+        at: ring,
+        glyph: DOT,
+        fill: palette.selected,
+        stroke: ruled(palette.paper, 1.6),
+      };
+      if (points.length < 2) return [dots];
+      return [
+        ...(points.length > 2 ? [filled([ring], mixed(palette.paper, palette.selected, 0.25))] : []),
+        { ...stroked([ring], ruled(palette.selected, 2.2)), closed: true },
+        dots,
+      ];
+    },
+    [points],
+  );
+  return (
+    <LakeCanvas
+      label={`${lake.details.name}: tap round the area, corner by corner`}
+      frame={frame}
+      under={under}
+      over={over}
+      handles={points.map((point, i) => ({ ...point, id: String(i) }))}
+      onTap={(point) => onCorners([...corners, placeOf(origin, point)])}
+      onMove={(id, point) =>
+        onCorners(corners.map((corner, i) => (String(i) === id ? placeOf(origin, point) : corner)))
+      }
+      heightPx={380}
+    />
+  );
+}
