@@ -57,6 +57,11 @@ function FisheryOffice({ fishery }: { fishery: FisheryListItem }) {
           <Row title="Lakes" note={lakesWords(fishery)} href="/office/lakes" />
           <Row title="Charts" note="Drafts, approval, published versions" href="/office/charts" />
           <Row
+            title="How bottoms feel"
+            note="What each bottom does to a lead; learnt from confirmed bottoms"
+            href={`/office/bottom?fisheryId=${fishery.id}`}
+          />
+          <Row
             title="Fishery and people"
             note="Details, roles, invitations"
             href={`/office/fishery?fisheryId=${fishery.id}`}

@@ -41,3 +41,17 @@ export const backWords = (came: readonly CameBack[]): string =>
     : BACK_CELLS.filter(({ key }) => came.includes(key))
         .map(({ label }) => label)
         .join(', ');
+
+/** What a feel is called, whichever list it stands in. */
+export function feelWords(part: 'drop' | 'drag' | 'cameBack' | 'smell', feel: string): string {
+  const cells: readonly { key: string; label: string }[] = {
+    drop: DROP_CELLS,
+    drag: DRAG_CELLS,
+    cameBack: BACK_CELLS,
+    smell: [
+      { key: 'none', label: 'no smell' },
+      { key: 'bad_eggs', label: 'bad eggs' },
+    ],
+  }[part];
+  return cells.find(({ key }) => key === feel)?.label ?? feel;
+}

@@ -1,0 +1,1 @@
+export { BottomTableScreen as default } from '@/features/surveys/bottom-table-screen';
