@@ -4,12 +4,11 @@ import type { LakeView } from '@mereward/shared/lakes/contract';
 import { EVENT_USUALLY_ENDS } from '@mereward/shared/surveys/bottom-ending';
 import { civilDay } from '@mereward/shared/time/civil-day';
 import { useController, useWatch } from 'react-hook-form';
-import { ChoiceGrid } from '@/components/choice-grid';
+import { ChoiceGrid, ManyChoiceGrid } from '@/components/choice-grid';
 import { DraftFormFrame } from '@/components/draft-form-frame';
 import { FormChoice } from '@/components/form-controls';
 import { FormField } from '@/components/form-field';
 import { LinkButton } from '@/components/link-button';
-import { ManyChoiceGrid } from '@/components/choice-grid';
 import { Note } from '@/components/note';
 import { AreaField } from '@/features/charts/area-field';
 import {
