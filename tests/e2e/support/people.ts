@@ -8,6 +8,8 @@ export type Somebody = 'marian' | 'idris' | 'joan' | 'tom' | 'priya' | 'colin' |
 const PASSWORD = 'heron by the sluice';
 const signInOf = (who: Somebody) => ({ email: `${who}@ostlemere.example`, password: PASSWORD });
 
+type Multipart = Record<string, string | { name: string; mimeType: string; buffer: Buffer }>;
+
 /** Asks the API in somebody's name: what a journey needs to be there before it begins. */
 export class Asking {
   private constructor(
@@ -30,14 +32,19 @@ export class Asking {
     expect(answer.ok(), `${method} ${path}: ${await answer.text()}`).toBe(true);
   }
 
-  /** Sends a form with one file in it. */
+  /** Sends a form with one text file in it. */
   async send(
     path: string,
     fields: Record<string, string>,
     file: { field: string; name: string; text: string },
   ) {
     const upload = { name: file.name, mimeType: 'text/plain', buffer: Buffer.from(file.text) };
-    const answer = await this.asked.post(`/api${path}`, { multipart: { ...fields, [file.field]: upload } });
+    await this.upload(path, { ...fields, [file.field]: upload });
+  }
+
+  /** Sends a file as a form does; fails unless it was taken. */
+  async upload(path: string, multipart: Multipart): Promise<void> {
+    const answer = await this.asked.post(`/api${path}`, { multipart });
     expect(answer.ok(), `POST ${path}: ${await answer.text()}`).toBe(true);
   }
 

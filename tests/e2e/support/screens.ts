@@ -1,12 +1,15 @@
+import { randomUUID } from 'node:crypto';
 import { FisheryList } from '@mereward/shared/fisheries/contract';
 import { ChartList, PegPageView } from '@mereward/shared/charts/contract';
 import { LakeView } from '@mereward/shared/lakes/contract';
 import { VisitWithCasts } from '@mereward/shared/surveys/contract';
+import { LakePictureView } from '@mereward/shared/lakes/picture-contract';
+import { aPhoto } from '../../support/pictures';
 import { aFan } from '../../support/long-water';
 import { readdirSync } from 'node:fs';
 import { fileURLToPath } from 'node:url';
 import { Asking } from './people';
-import type { Site } from './site';
+import { expect, type Site } from './site';
 import { aLogRead, anOpenVisit, castMeanwhile } from './story-water';
 
 const APP = fileURLToPath(new URL('../../../apps/mobile/src/app', import.meta.url));
@@ -29,6 +32,7 @@ const KINDS = [
   'visitId',
   'spotId',
   'logId',
+  'pictureId',
 ] as const;
 export type Ids = Readonly<Record<(typeof KINDS)[number], string>>;
 
@@ -57,6 +61,7 @@ export async function demoIds(site: Site): Promise<Ids> {
     castId: casts[0]?.id ?? '',
     visitId,
     logId,
+    pictureId: await aPicture(site, lakeId),
   };
 }
 
@@ -69,6 +74,18 @@ const pointsAt = ([lon, lat]: readonly [number, number]): string =>
     `${lat + 1},${lon},2`,
     `${lat},x,2`,
   ].join('\n');
+
+/** A picture to trace the lake over, once it is ready. */
+async function aPicture(site: Site, lakeId: string): Promise<string> {
+  const marian = await Asking.as('marian', site);
+  const id = randomUUID();
+  const picture = { name: 'drone.jpg', mimeType: 'image/jpeg', buffer: await aPhoto() };
+  await marian.upload(`/lakes/${lakeId}/pictures`, { id, caption: 'From a drone', picture });
+  await expect
+    .poll(async () => (await marian.get(`/pictures/${id}`, LakePictureView)).state, { timeout: 30_000 })
+    .toBe('ready');
+  return id;
+}
 
 /** A route with its ids filled in, and what it asks for beside them. */
 export function addressOf(route: string, ids: Ids): string {

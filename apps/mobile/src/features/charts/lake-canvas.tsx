@@ -10,6 +10,7 @@ import { radius, space } from '@/constants/layout';
 import { fixedLayer, svgOf } from '@/features/charts/map-layers';
 import { MapSurface } from '@/features/charts/map-surface';
 import { OVERSCAN } from '@/features/charts/map-surface-props';
+import type { Backdrop } from '@/features/charts/picture-backdrop';
 import { ZOOM_STEP } from '@/features/charts/use-map-keys';
 import { useMapView } from '@/features/charts/use-map-view';
 import { useTheme } from '@/hooks/use-theme';
@@ -42,11 +43,15 @@ type Props = {
   /** The reader asked for all of it again. */
   onFit?: (() => void) | undefined;
   heightPx?: number | undefined;
+  /** A picture under the drawing. */
+  backdrop?: Backdrop | undefined;
+  /** The plane is no ground but a picture's own pixels: no scale bar and no north. */
+  groundless?: boolean | undefined;
 };
 
 /** A sheet of the lake's plane to draw on: tap to place, drag a handle to move it, drag elsewhere to pan, pinch or wheel to scale. */
 export function LakeCanvas({ label, frame, under, over, handles, heightPx = 440, ...deeds }: Props) {
-  const { handlesFromPxPerM = 0 } = deeds;
+  const { handlesFromPxPerM = 0, groundless = false } = deeds;
   const { name, colours } = useTheme();
   const units = useUnits();
   const palette = palettes[name];
@@ -57,8 +62,8 @@ export function LakeCanvas({ label, frame, under, over, handles, heightPx = 440,
   const above = useMemo(() => (view ? drawn('over', over, { palette, view }) : ''), [over, palette, view]);
   const layers = useMemo(() => [below, above], [below, above]);
   const fixed = useMemo(
-    () => (view ? fixedLayer({ view, palette, unit: units.length }, units.stickSpacingM) : ''),
-    [view, palette, units],
+    () => (view && !groundless ? fixedLayer({ view, palette, unit: units.length }, units.stickSpacingM) : ''),
+    [view, palette, units, groundless],
   );
   const measure = ({ nativeEvent: { layout } }: LayoutChangeEvent): void =>
     setSize({ widthPx: Math.round(layout.width), heightPx: Math.round(layout.height) });
@@ -96,6 +101,7 @@ export function LakeCanvas({ label, frame, under, over, handles, heightPx = 440,
         <MapSurface
           layers={layers}
           fixed={fixed}
+          backdrop={deeds.backdrop}
           view={view}
           limits={limits}
           label={label}

@@ -10,6 +10,7 @@ import { NewerNote } from '@/components/newer-note';
 import { Note } from '@/components/note';
 import { Page } from '@/components/page';
 import { lakeBackdrop } from '@/features/charts/lake-backdrop';
+import { BackdropChoice, useOutlineBackdrop } from '@/features/charts/outline-backdrop';
 import { OutlineEditor } from '@/features/charts/outline-editor';
 import { useLake } from '@/features/lakes/api';
 import { changeLake } from '@/features/lakes/office-api';
@@ -56,6 +57,8 @@ function Outline({ now }: { now: LakeView }) {
 function OutlineForm({ lake }: { lake: LakeView }) {
   const router = useRouter();
   const { id, version, details, origin, publishedChart } = lake;
+  const { pictureId } = useLocalSearchParams<{ pictureId?: string }>();
+  const picture = useOutlineBackdrop(id, pictureId);
   const form = useDraftForm({
     form: `lake-outline:${id}:${String(version)}`,
     schema: Wanted,
@@ -79,6 +82,8 @@ function OutlineForm({ lake }: { lake: LakeView }) {
         under={under}
         error={sketch.fieldState.error?.message}
         keptAs={id}
+        backdrop={picture.backdrop}
+        beside={<BackdropChoice of={picture} />}
       />
       <DraftFormFrame
         form={form}

@@ -1,11 +1,14 @@
 import type { View as MapView } from '@mereward/shared/charts/drawing/view';
 import type { ZoomLimits } from '@mereward/shared/charts/drawing/view-moves';
 import type { Point } from '@mereward/shared/geometry/plane';
+import type { Backdrop } from './picture-backdrop';
 
 /** Share of the page drawn beyond each of its edges, so that a pan has something to show before the redraw. */
 export const OVERSCAN = 0.25;
 
 export type MapSurfaceProps = {
+  /** A picture under the drawing; it moves with the map. */
+  backdrop?: Backdrop | undefined;
   /** Drawn one over the other for `view` grown by `OVERSCAN`; they move with the map. */
   layers: readonly string[];
   /** Stands still over the map: scale bar, north. */

@@ -1,6 +1,8 @@
 import { useCallback, useEffect, useLayoutEffect, useRef, type CSSProperties } from 'react';
+import type { View as MapView } from '@mereward/shared/charts/drawing/view';
 import { useTheme } from '@/hooks/use-theme';
 import { type MapSurfaceProps, OVERSCAN } from './map-surface-props';
+import { cssTransformOf, type Backdrop } from './picture-backdrop';
 import { useMapKeys } from './use-map-keys';
 import { useMapPointers } from './use-map-pointers';
 import { useMapWheel } from './use-map-wheel';
@@ -12,7 +14,7 @@ const fill: CSSProperties = { position: 'absolute', inset: 0 };
  * it is drawn again when the gesture ends.
  */
 export function MapSurface(props: MapSurfaceProps) {
-  const { layers, fixed, view, label } = props;
+  const { backdrop, layers, fixed, view, label } = props;
   const { colours } = useTheme();
   const box = useRef<HTMLDivElement>(null);
   const moving = useRef<HTMLDivElement>(null);
@@ -23,7 +25,7 @@ export function MapSurface(props: MapSurfaceProps) {
   // The new drawing stands where the moved old one stood, so the transform goes in the same frame.
   useLayoutEffect(() => {
     if (moving.current) moving.current.style.transform = '';
-  }, [view, layers]);
+  }, [view, layers, backdrop]);
   const carry = useCallback((transform: string): void => {
     if (moving.current) moving.current.style.transform = transform;
   }, []);
@@ -57,6 +59,7 @@ export function MapSurface(props: MapSurfaceProps) {
       }}
     >
       <div ref={moving} style={{ ...fill, transformOrigin: '0 0', willChange: 'transform' }}>
+        {backdrop ? <BackdropPicture backdrop={backdrop} view={view} /> : null}
         {layers.map((svg, i) => (
           <div key={i} aria-hidden style={drawing} dangerouslySetInnerHTML={{ __html: svg }} />
         ))}
@@ -67,5 +70,29 @@ export function MapSurface(props: MapSurfaceProps) {
         dangerouslySetInnerHTML={{ __html: fixed }}
       />
     </div>
+  );
+}
+
+/** The picture keeps its element while the view changes, so that it is not decoded anew at every step. */
+function BackdropPicture({ backdrop, view }: { backdrop: Backdrop; view: MapView }) {
+  const { url, widthPx, heightPx, opacity } = backdrop;
+  return (
+    <img
+      src={url}
+      alt=""
+      draggable={false}
+      style={{
+        position: 'absolute',
+        left: 0,
+        top: 0,
+        width: widthPx,
+        height: heightPx,
+        maxWidth: 'none',
+        transformOrigin: '0 0',
+        transform: cssTransformOf(backdrop, view),
+        opacity,
+        pointerEvents: 'none',
+      }}
+    />
   );
 }

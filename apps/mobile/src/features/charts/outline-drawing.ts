@@ -78,10 +78,12 @@ const CROSS = 'm-8 -8l16 16m0 -16l-16 16';
 
 type Scene = { palette: Palette; showPoints: boolean; chosen: Chosen; faults: readonly Point[] };
 
-/** The sketch's closed rings: water, shore and islands. */
-export function closedMarks(rings: readonly PlaneRing[], palette: Palette, water: string): Mark[] {
+/** The sketch's closed rings: water, shore and islands. Over a picture (`water` null) the lines alone, edged to be seen on it. */
+export function closedMarks(rings: readonly PlaneRing[], palette: Palette, water: string | null): Mark[] {
   const closed = rings.filter((ring) => ring.closed).map(({ points }) => lineOf(points));
-  return [filled(closed, water), { ...stroked(closed, ruled(palette.ink, 2)), closed: true }];
+  const under =
+    water === null ? { ...stroked(closed, ruled(palette.paper, 5)), closed: true } : filled(closed, water);
+  return [under, { ...stroked(closed, ruled(palette.ink, 2)), closed: true }];
 }
 
 /** What is worked on: the open ring with its closing side dashed, points, and where it is wrong. */
@@ -118,6 +120,7 @@ function openMarks({ points }: PlaneRing, palette: Palette): Mark[] {
   if (!first || !last) return [];
   const closing = points.length < 3 ? [] : [lineOf([last, first])];
   return [
+    stroked([lineOf(points)], ruled(palette.paper, 5)),
     stroked([lineOf(points)], ruled(palette.ink, 2.4)),
     stroked(closing, ruled(palette.inkSoft, 1.6, [6, 6])),
     glyph(first, BIG_DOT, { fill: null, stroke: ruled(palette.ink, 1.6) }),

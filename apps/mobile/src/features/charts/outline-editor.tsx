@@ -1,4 +1,4 @@
-import { useCallback, useDeferredValue, useMemo, useState } from 'react';
+import { useCallback, useDeferredValue, useMemo, useState, type ReactNode } from 'react';
 import { toPlane, type LonLat, type Point } from '@mereward/shared/geometry/plane';
 import { View } from 'react-native';
 import { Button } from '@/components/button';
@@ -18,6 +18,7 @@ import {
   workMarks,
   closedMarks,
 } from '@/features/charts/outline-drawing';
+import type { Backdrop } from '@/features/charts/picture-backdrop';
 import { OutlineWalk } from '@/features/charts/outline-walk';
 import { useSketch } from '@/features/charts/use-sketch';
 import { frameWithWalk, planeWalk, walkMarks } from '@/features/charts/walk-drawing';
@@ -33,6 +34,7 @@ import {
   removeRing,
   ringName,
   startIsland,
+  startShore,
   type Sketch,
 } from '@/features/lakes/outline-sketch';
 import { useShoreWalk } from '@/features/lakes/use-shore-walk';
@@ -49,6 +51,9 @@ type Props = {
   error?: string | undefined;
   /** Names what is drawn among what this device keeps: a walk round it goes on after a reload. */
   keptAs: string;
+  /** A picture to trace over, and what is chosen about it. */
+  backdrop?: Backdrop | undefined;
+  beside?: ReactNode;
 };
 
 const idOf = (ring: number, index: number): string => `${String(ring)}.${String(index)}`;
@@ -58,7 +63,8 @@ const spotOf = (id: string) => {
 };
 
 /** Draws a lake's shore and islands: by tapping, by typing each point, or from a file. */
-export function OutlineEditor({ sketch, onChange, origin, under, error, keptAs }: Props) {
+export function OutlineEditor({ sketch, onChange, origin, under, error, keptAs, ...rest }: Props) {
+  const { backdrop, beside } = rest;
   const wide = useWide();
   const deed = useSketch(sketch, onChange);
   const { chosen } = deed;
@@ -93,9 +99,10 @@ export function OutlineEditor({ sketch, onChange, origin, under, error, keptAs }
     ],
     [rings, chosen, faults, fromPxPerM, walked],
   );
+  const overPicture = backdrop !== undefined;
   const water = useCallback<Draw>(
-    (pen) => [...closedMarks(rings, pen.palette, waterTint(pen.palette)), ...under(pen)],
-    [rings, under],
+    (pen) => [...closedMarks(rings, pen.palette, overPicture ? null : waterTint(pen.palette)), ...under(pen)],
+    [rings, under, overPicture],
   );
   const handles = rings.flatMap(({ points }, ring) =>
     points.map((point, index) => ({ ...point, id: idOf(ring, index) })),
@@ -134,6 +141,7 @@ export function OutlineEditor({ sketch, onChange, origin, under, error, keptAs }
           under={water}
           over={over}
           handles={handles}
+          backdrop={backdrop}
           handlesFromPxPerM={fromPxPerM}
           onTap={tap}
           onPick={pick}
@@ -149,6 +157,7 @@ export function OutlineEditor({ sketch, onChange, origin, under, error, keptAs }
         <OutlineWalk walking={walking} sketch={sketch} onRing={replace} />
         <OutlineFound sketch={settled} reading={reading} crowded={fromPxPerM > 0 && open === null} />
         {error ? <FieldError id="outline" words={error} /> : null}
+        {beside}
         <OutlineImport onRead={replace} replaces={sketch.rings.length > 0} />
         <OutlinePoints sketch={sketch} onChange={deed.change} chosen={chosen} />
       </View>
@@ -172,7 +181,10 @@ function SketchButtons({ sketch, deed }: ButtonsProps) {
         />
       ) : null}
       {open === null && sketch.rings.length > 0 ? (
-        <Button label="Add an island" onPress={() => deed.change(startIsland(sketch))} />
+        <>
+          <Button label="Add an island" onPress={() => deed.change(startIsland(sketch))} />
+          <Button label="Draw the shore anew" onPress={() => deed.change(startShore(sketch))} />
+        </>
       ) : null}
       {chosen ? (
         <Button label="Take this point out" onPress={() => deed.change(removePlace(sketch, chosen))} />

@@ -37,7 +37,8 @@ export function OutlineFound({ sketch, reading, crowded }: Props) {
 function nextWords(sketch: Sketch): string {
   const open = openRingOf(sketch);
   const drawn = open === null ? 0 : (sketch.rings[open]?.places.length ?? 0);
-  if (sketch.rings.length === 0) return 'Tap along the shore, point after point, all the way round.';
+  if (sketch.rings.length === 0 || (open === 0 && drawn === 0))
+    return 'Tap along the shore, point after point, all the way round.';
   if (open === null)
     return 'Drag a point to move it. Tap a point to choose it, or between two points to put one in.';
   if (drawn === 0) return `Tap round ${ringName(open)}, inside the shore.`;

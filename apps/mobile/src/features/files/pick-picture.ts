@@ -11,4 +11,5 @@ export async function pickPicture(): Promise<PickedPicture | null> {
 }
 
 /** On a phone's own system the picker has shrunk it already. */
-export const shrunk = (picture: PickedPicture): Promise<PickedPicture> => Promise.resolve(picture);
+export const shrunk = (picture: PickedPicture, _longestPx?: number): Promise<PickedPicture> =>
+  Promise.resolve(picture);

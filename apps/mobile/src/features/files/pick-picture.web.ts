@@ -7,8 +7,10 @@ export async function pickPicture(): Promise<PickedPicture | null> {
   return file ? { name: file.name, file } : null;
 }
 
-const SHRINK_FROM_PIXELS = 4_000_000;
 const LONGEST_PX = 2000;
+/** A picture of fewer pixels than a square of the longest side is sent as it is. */
+const mayStay = (width: number, height: number, longestPx: number): boolean =>
+  width * height <= longestPx ** 2;
 const QUALITY = 0.87;
 
 const toBlob = (canvas: HTMLCanvasElement): Promise<Blob | null> =>
@@ -16,17 +18,17 @@ const toBlob = (canvas: HTMLCanvasElement): Promise<Blob | null> =>
 
 /**
  * A large picture made smaller before it is sent, turned as it is meant to be seen. One this browser can't open is sent
- * as it is: the server says in words what is wrong with it.
+ * as it is: the server says in words what is wrong with it. `longestPx` is what its longer side becomes.
  */
-export async function shrunk(picture: PickedPicture): Promise<PickedPicture> {
+export async function shrunk(picture: PickedPicture, longestPx = LONGEST_PX): Promise<PickedPicture> {
   const bitmap = await createImageBitmap(picture.file, { imageOrientation: 'from-image' }).catch(() => null);
   if (!bitmap) return picture;
   const { width, height } = bitmap;
-  if (width * height <= SHRINK_FROM_PIXELS) {
+  if (mayStay(width, height, longestPx)) {
     bitmap.close();
     return picture;
   }
-  const scale = LONGEST_PX / Math.max(width, height);
+  const scale = longestPx / Math.max(width, height);
   const canvas = document.createElement('canvas');
   canvas.width = Math.round(width * scale);
   canvas.height = Math.round(height * scale);

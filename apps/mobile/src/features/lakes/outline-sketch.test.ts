@@ -12,6 +12,7 @@ import {
   removePlace,
   sketchOf,
   startIsland,
+  startShore,
   type Sketch,
 } from './outline-sketch';
 
@@ -76,4 +77,17 @@ test('a whole ring takes the shore’s place, or is one more island', () => {
   const anew = putRing(withIsland, 'shore', [at(-1, -1), at(2, -1), at(2, 2), at(-1, 2), at(-1.5, 0)]);
   expect(anew.rings.map(({ places }) => places.length)).toEqual([5, 3]);
   expect(putRing(EMPTY_SKETCH, 'shore', island).rings).toHaveLength(1);
+});
+
+test('a shore begun anew leaves the islands, and taps draw it', () => {
+  const island = [at(0.4, 0.4), at(0.6, 0.4), at(0.5, 0.6)];
+  const begun = startShore(putRing(square, 'island', island));
+  expect(readSketch(begun)).toBeNull();
+  const taps = [at(-1, -1), at(2, -1), at(2, 2), at(-1, 2)];
+  const drawn = closeRing(taps.reduce((sketch, place) => addPlace(sketch, place), begun));
+  expect(drawn.rings.map(({ closed, places }) => [closed, places.length])).toEqual([
+    [true, 4],
+    [true, 3],
+  ]);
+  expect(readSketch(drawn)?.outline?.coordinates).toHaveLength(2);
 });

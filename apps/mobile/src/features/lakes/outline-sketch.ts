@@ -85,6 +85,11 @@ export function startIsland(sketch: Sketch): Sketch {
   return { rings: [...sketch.rings, { closed: false, places: [] }] };
 }
 
+/** Begins the shore anew; the islands stay. */
+export const startShore = ({ rings }: Sketch): Sketch => ({
+  rings: [{ closed: false, places: [] }, ...rings.slice(1)],
+});
+
 /** Puts a whole ring in: as the shore, in the place of the one there was, or as one more island. */
 export function putRing(sketch: Sketch, of: 'shore' | 'island', places: [number, number][]): Sketch {
   const ring: SketchRing = { closed: true, places };

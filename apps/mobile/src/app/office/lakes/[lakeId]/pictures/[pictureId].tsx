@@ -1,0 +1,1 @@
+export { FixPictureScreen as default } from '@/features/charts/fix-picture-screen';

@@ -1,0 +1,1 @@
+export { LakePicturesScreen as default } from '@/features/charts/lake-pictures-screen';
