@@ -194,6 +194,36 @@ describe('a ring made of a walk', () => {
     expect(areaOf(ring)).toBeGreaterThan(0);
   });
 
+  test('is sound also when the walk ends on the very place where it began', () => {
+    const path = Array.from({ length: 29 }, (_, i) => {
+      const turn = (2 * Math.PI * i) / 28;
+      return { xM: 32 * Math.cos(turn), yM: 32 * Math.sin(turn) };
+    });
+    const ring = walkedRing(walked(path.map((point, i) => fixAt(point, i * 2, 5))));
+    expect(Math.abs(areaOf(ring) - Math.PI * 32 ** 2)).toBeLessThan(2 * Math.PI * 32);
+  });
+
+  test('is sound for walks with a phone’s wandering that end anywhere about their start', () => {
+    fc.assert(
+      fc.property(
+        fc.array(fc.double({ min: -1, max: 1, noNaN: true }), { minLength: 420, maxLength: 420 }),
+        fc.double({ min: 0.97, max: 1.05, noNaN: true }),
+        (chances, turns) => {
+          // An error that hangs together from second to second, about 1.5 m large, as a phone's does.
+          let [offX, offY] = [0, 0];
+          const path = round(45, turns).map(({ xM, yM }, i) => {
+            offX = 0.95 * offX + 0.5 * (chances[(2 * i) % 420] ?? 0);
+            offY = 0.95 * offY + 0.5 * (chances[(2 * i + 1) % 420] ?? 0);
+            return { xM: xM + offX, yM: yM + offY };
+          });
+          const ring = walkedRing(walked(along(path, 4)));
+          expect(Math.abs(areaOf(ring) - Math.PI * 45 ** 2)).toBeLessThan(0.12 * Math.PI * 45 ** 2);
+        },
+      ),
+      { numRuns: 60 },
+    );
+  });
+
   test('is none while there are fewer than three places', () => {
     expect(walkedRing(NEW_WALK)).toBeNull();
     expect(walkedRing(walked(along(east(3, 3))))).toBeNull();

@@ -1,6 +1,7 @@
 import { thinLine } from '../geometry/line-thinning';
 import { fromPlane, toPlane, type Point } from '../geometry/plane';
 import { distanceBetweenM } from '../geometry/point';
+import { ringCrossings } from '../geometry/ring-crossings';
 import { segmentCrossing } from '../geometry/shore-distance';
 import { stationPlace, type ShoreWalk } from './shore-walk';
 
@@ -30,9 +31,9 @@ export function walkedRing({ stations }: Pick<ShoreWalk, 'stations'>): WalkedRin
   const walked = stations.map((station) => toPlane(origin, stationPlace(station)));
   const { points, overlapM } = withoutOverlap(walked);
   const unlooped = withoutLoops(points);
-  const ring = thinned(unlooped.points);
-  const [start] = ring;
-  const end = ring.at(-1);
+  const ring = mendedSeam(thinned(unlooped.points));
+  const [start] = unlooped.points;
+  const end = unlooped.points.at(-1);
   if (ring.length < 3 || !start || !end) return null;
   return {
     places: ring.map((point) => {
@@ -70,6 +71,23 @@ function withoutOverlap(points: readonly Point[]): { points: readonly Point[]; o
   }
   const kept = points.slice(best.from, best.to + 1);
   return { points: kept, overlapM: lengthM(points.slice(0, best.from + 1)) + lengthM(points.slice(best.to)) };
+}
+
+/** So many points at either end may be given up where the end of a walk crosses or touches its start. */
+const SEAM_POINTS = 6;
+
+/** Where the ring's two ends meet they may cross or stand on each other: as few points as will do are left off there. */
+function mendedSeam(ring: readonly Point[]): readonly Point[] {
+  for (let off = 0; off <= SEAM_POINTS; off++)
+    for (let atStart = 0; atStart <= off; atStart++) {
+      const kept = ring.slice(atStart, ring.length - (off - atStart));
+      if (kept.length < 3) return ring;
+      const [start] = kept;
+      const end = kept.at(-1);
+      const apart = start && end && distanceBetweenM(start, end) > WALK_TOLERANCE_M / 2;
+      if (apart && ringCrossings([kept])?.length === 0) return kept;
+    }
+  return ring; // it crosses itself elsewhere: that is told, with the place, when it is looked at
 }
 
 /** How many of the points lie within so many metres of the first, along the line. */
