@@ -99,7 +99,7 @@ const HEAD = 64 * 1024;
 
 /** The kind of a file, by what it holds; its name is not asked. */
 export function formatOf({ name, bytes }: LogFile): LogFormat {
-  if (bytes.length === 0) refuseFile(name, 'It is empty.');
+  if (bytes.length === 0) refuseFile(name, 'The file is empty: there is nothing in it to read.');
   const head = latin(bytes.subarray(0, HEAD)).replace(/\0/g, '');
   if (/^[$!][A-Z]{2}[A-Z0-9]{3},/m.test(head)) return 'nmea';
   const start = head.replace(/^(\u00EF\u00BB\u00BF|\u00FF\u00FE|\u00FE\u00FF)/, '').trimStart();

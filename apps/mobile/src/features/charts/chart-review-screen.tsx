@@ -8,6 +8,7 @@ import { Note } from '@/components/note';
 import { Page } from '@/components/page';
 import { Section } from '@/components/section';
 import { BuildSection } from '@/features/charts/build-section';
+import { ChartLogsSection } from '@/features/charts/chart-logs-section';
 import { ChartStatusShape } from '@/features/charts/chart-status';
 import { chartName, surveyedWords } from '@/features/charts/chart-words';
 import { CheckList } from '@/features/charts/check-list';
@@ -61,6 +62,7 @@ function Review({ review }: { review: ChartReview }) {
             <CheckList checks={checks} />
           </Section>
         ) : null}
+        <ChartLogsSection logs={review.logs} />
         {quality ? <SoundingMisses misses={review.misses} /> : null}
         {quality ? (
           <Section title="How good it is" note={quality.words}>
