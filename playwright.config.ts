@@ -21,6 +21,7 @@ export default defineConfig({
     actionTimeout: 15_000,
     locale: 'en-GB',
     timezoneId: 'Europe/London',
+    serviceWorkers: 'block', // they answer past `page.route`; the journeys without a signal allow theirs
     screenshot: 'only-on-failure',
     trace: process.env.JOURNEY_TRACES ? 'retain-on-failure' : 'off', // recording costs a third of the time
     launchOptions: {

@@ -16,6 +16,7 @@ import { alone } from './lock.mjs';
 import { toolEnvironment } from './machine.mjs';
 import { at, ownFolder } from './paths.mjs';
 import { run } from './run.mjs';
+import { writeServiceWorker } from './service-worker.mjs';
 import { contentHash } from './sources.mjs';
 import { splitExported } from './split-common.mjs';
 
@@ -28,7 +29,13 @@ const shared = [
   'pnpm-lock.yaml',
   'scripts/lib/build.mjs',
 ];
-const webSources = ['apps/mobile', 'fonts', 'scripts/lib/split-common.mjs', ...shared];
+const webSources = [
+  'apps/mobile',
+  'fonts',
+  'scripts/lib/split-common.mjs',
+  'scripts/lib/service-worker.mjs',
+  ...shared,
+];
 const apiSources = [
   'apps/api/src',
   'apps/api/package.json',
@@ -144,7 +151,9 @@ export function buildWeb(note) {
       // The export keeps the face as a link to where this clone stands now; the file itself outlives a move.
       rmSync(join(next, 'fonts'), { recursive: true, force: true });
       cpSync(at('fonts'), join(next, 'fonts'), { recursive: true });
-      if (splitExported(next) === 0) note('the script all screens share was left whole');
+      const scriptsOf = splitExported(next);
+      if (scriptsOf.size === 0) note('the script all screens share was left whole');
+      for (const warning of await writeServiceWorker(next, scriptsOf)) note(warning);
       note('compressing');
       await compressBeside(next);
       rmSync(webFolder, { recursive: true, force: true });

@@ -77,7 +77,8 @@ const placeOf = (route) => (route.split('/').length > 2 ? (route.split('/')[1] ?
  * Parts the script all screens share: what the landing screens need stays, the rest goes by the places of the program
  * that need it. Null when the bundle is not laid out as expected.
  * @param {{ common: string, others: readonly string[] }} scripts
- * @returns {{ common: string, parts: string[], needs: Map<string, number[]> } | null} needs: a script's parts, by its address
+ * @returns {{ common: string, parts: string[], needs: Map<string, number[]>, screens: Map<string, string> } | null}
+ *   needs: a script's parts, screens: the file of the screen it is for ('' for another), both by its address
  */
 export function splitCommon({ common, others }) {
   const shared = modulesOf(common);
@@ -120,7 +121,8 @@ export function splitCommon({ common, others }) {
   }
   const textOf = (/** @type {Module[]} */ list) => list.map(({ text }) => text).join('\n');
   const kept = shared.filter(({ id }) => !moved.has(id));
-  return { common: textOf(kept), parts: parts.map(textOf), needs };
+  const screens = new Map([...opened].map(([id, path]) => [path, routes.get(id) ?? '']));
+  return { common: textOf(kept), parts: parts.map(textOf), needs, screens };
 }
 
 /**
@@ -150,8 +152,9 @@ export const fetchingParts = (needs) =>
   `}(globalThis,${JSON.stringify(Object.fromEntries(needs))});`;
 
 /**
- * Does it to an exported client, before it is compressed. Says how many parts there are; 0 when it was left whole.
- * @param {string} folder
+ * Does it to an exported client, before it is compressed. Answers each screen's scripts by its file; nothing when the
+ * client was left whole.
+ * @param {string} folder @returns {Map<string, string[]>}
  */
 export function splitExported(folder) {
   const scripts = join(folder, ...ADDRESS.split('/').filter(Boolean));
@@ -159,12 +162,12 @@ export function splitExported(folder) {
   const read = (/** @type {string} */ name) => readFileSync(join(scripts, name), 'utf8');
   const commonName = names.find((name) => name.startsWith('__common-'));
   const runtimeName = names.find((name) => name.startsWith('__expo-metro-runtime-'));
-  if (!commonName || !runtimeName) return 0;
+  if (!commonName || !runtimeName) return new Map();
   const split = splitCommon({
     common: read(commonName),
     others: names.filter((name) => name !== commonName && name !== runtimeName).map(read),
   });
-  if (!split || split.parts.length === 0) return 0;
+  if (!split || split.parts.length === 0) return new Map();
 
   /** Written under a name that changes with it, so that it may be kept for ever. */
   const write = (/** @type {string} */ stem, /** @type {string} */ text) => {
@@ -187,5 +190,7 @@ export function splitExported(folder) {
     rmSync(join(scripts, from));
   }
   writeFileSync(page, html);
-  return partNames.length;
+  return new Map(
+    [...split.screens].map(([path, screen]) => [screen, [path, ...(addresses.get(path) ?? [])]]),
+  );
 }
