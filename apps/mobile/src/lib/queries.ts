@@ -1,10 +1,8 @@
-import { createAsyncStoragePersister } from '@tanstack/query-async-storage-persister';
 import { QueryClient } from '@tanstack/react-query';
-import { removeOldestQuery, type PersistQueryClientOptions } from '@tanstack/react-query-persist-client';
+import type { PersistQueryClientOptions } from '@tanstack/react-query-persist-client';
 import { Problem } from '@mereward/shared/problems/problem';
-import { storage } from '@/lib/storage';
-
-const DAY_MS = 24 * 60 * 60 * 1000;
+import { persister } from '@/lib/persister';
+import { KEEP_MS } from '@/lib/read-rows';
 
 /** A refusal is final; a failed fetch or a server in trouble is worth two more tries. */
 const mayTryAgain = (failures: number, fault: Error): boolean =>
@@ -12,25 +10,22 @@ const mayTryAgain = (failures: number, fault: Error): boolean =>
 
 export const queryClient = new QueryClient({
   defaultOptions: {
-    queries: { retry: mayTryAgain, staleTime: 20_000, gcTime: 14 * DAY_MS, networkMode: 'offlineFirst' },
+    queries: { retry: mayTryAgain, staleTime: 20_000, gcTime: KEEP_MS, networkMode: 'offlineFirst' },
     mutations: { retry: false, networkMode: 'offlineFirst' },
   },
 });
 
-const persister = createAsyncStoragePersister({
-  storage: { getItem: storage.get, setItem: storage.set, removeItem: storage.remove },
-  key: 'mereward.read',
-  throttleTime: 2000,
-  retry: removeOldestQuery, // a full store loses its oldest reading first
-});
-
-/** Last known readings outlive a reload. A query with `meta: { keep: false }` is too large or too private to keep. */
+/**
+ * Last known readings outlive a reload. A query with `meta: { keep: false }` is too private to keep; of those with
+ * `meta: { large: true }` the newest few are kept.
+ */
 export const persistence: Omit<PersistQueryClientOptions, 'queryClient'> = {
   persister,
-  maxAge: 14 * DAY_MS,
-  buster: '1', // raise when a kept reading's shape changes
+  maxAge: KEEP_MS,
+  buster: '2', // raise when a kept reading's shape changes
   dehydrateOptions: {
-    shouldDehydrateQuery: (query) => query.state.status === 'success' && query.meta?.keep !== false,
+    // A failed try to read afresh does not undo what was read.
+    shouldDehydrateQuery: (query) => query.state.data !== undefined && query.meta?.keep !== false,
   },
 };
 

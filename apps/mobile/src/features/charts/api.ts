@@ -9,14 +9,13 @@ export const chartKeys = {
     ['charts', 'section', pegId, bearingDeg, toM] as const,
 };
 
-/** One chart with all its layers this reader may see. Too large to keep on the device beside the rest. */
+/** One chart with all its layers this reader may see. Large: the device keeps the newest few. */
 export function useChart(chartId: string | null) {
   return useQuery({
     queryKey: chartKeys.one(chartId ?? ''),
     queryFn: ({ signal }) => api.get(`/charts/${chartId ?? ''}`, ChartView, signal),
     enabled: chartId !== null,
-    meta: { keep: false },
-    gcTime: 10 * 60_000,
+    meta: { large: true },
   });
 }
 
