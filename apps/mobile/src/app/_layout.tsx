@@ -5,12 +5,16 @@ import { Slot } from 'expo-router';
 import { View } from 'react-native';
 import { z } from 'zod';
 import { SafeAreaProvider, SafeAreaView } from 'react-native-safe-area-context';
+import { NewerProgramLine } from '@/components/newer-program-line';
+import { OutboxLine } from '@/components/outbox-line';
 import { Places } from '@/components/places';
 import { SkipLink } from '@/components/skip-link';
 import { placesFor } from '@/constants/places';
 import { useTheme } from '@/hooks/use-theme';
 import { useWide } from '@/hooks/use-wide';
 import { useFaces } from '@/lib/faces';
+import { programVersion } from '@/lib/program-version';
+import { watchOutbox } from '@/lib/outbox-watch';
 import { persistence, queryClient } from '@/lib/queries';
 import { resumeSession, useSession } from '@/lib/session';
 import { useStampedTheme } from '@/lib/stamp-theme';
@@ -32,6 +36,8 @@ function Ground() {
       {wide ? places : null}
       <View style={{ flex: 1, minWidth: 0, minHeight: 0 }}>
         <Slot />
+        <NewerProgramLine />
+        <OutboxLine />
       </View>
       {wide ? null : places}
     </SafeAreaView>
@@ -41,6 +47,8 @@ function Ground() {
 export default function RootLayout() {
   const faces = useFaces();
   useEffect(() => {
+    watchOutbox();
+    programVersion.watch();
     void resumeSession();
   }, []);
   if (!faces) return null;

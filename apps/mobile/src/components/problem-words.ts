@@ -1,3 +1,4 @@
+import { NowhereKept } from '@/lib/nowhere-kept';
 import { Problem, type ProblemKind } from '@mereward/shared/problems/problem';
 
 export type ProblemWords = { title: string; whatToDo: string };
@@ -33,6 +34,12 @@ export function problemWords(fault: unknown): ProblemWords {
       title: 'No answer from the server',
       whatToDo:
         'There may be no signal here. What you typed is kept on this device; try again when there is.',
+    };
+  if (fault instanceof NowhereKept)
+    return {
+      title: 'Not kept: this phone has no room, and there is no signal',
+      whatToDo:
+        'It stands in this form only. Leave the page open, make room on the phone or find a signal, then keep it again. Note it on paper if you must go on.',
     };
   return { title: 'Something in this page failed', whatToDo: adviceFor('internal') };
 }

@@ -30,7 +30,7 @@ const places: readonly (Place & { for: readonly Role[]; strangers: boolean })[] 
     for: everywhere,
     strangers: true,
   },
-  { key: 'bank', label: 'Bank', href: '/bank', holds: ['bank'], for: bankRoles, strangers: false },
+  { key: 'bank', label: 'Bank', href: '/bank', holds: ['bank', 'waiting'], for: bankRoles, strangers: false },
   { key: 'office', label: 'Office', href: '/office', holds: ['office'], for: officeRoles, strangers: false },
   {
     key: 'me',

@@ -9,7 +9,7 @@ import { sessionStore } from '@/lib/session-store';
 export const nothing = z.unknown();
 
 type Method = 'GET' | 'POST' | 'PUT' | 'PATCH' | 'DELETE';
-type Ask = { method: Method; body?: unknown; signal?: AbortSignal | undefined };
+export type Ask = { method: Method; body?: unknown; signal?: AbortSignal | undefined };
 
 /** On the web the program and its API share an address; a phone's build names it. */
 const ORIGIN = process.env.EXPO_PUBLIC_API_URL ?? '';
@@ -69,6 +69,22 @@ async function ask(path: string, request: Ask): Promise<Response> {
   sessionStore.forgetToken();
   await refreshSession();
   return send(path, request);
+}
+
+/**
+ * Sends something in the name of one account and no other. Null when that account is not signed in here (any more): a
+ * token that belongs to whoever came since is never used for it.
+ */
+export async function askAs(accountId: string, path: string, request: Ask): Promise<Response | null> {
+  for (let tries = 0; tries < 2; tries += 1) {
+    if (sessionStore.token(Date.now()) === null) await refreshSession();
+    const { state, account } = sessionStore.get();
+    if (state !== 'signed-in' || account.id !== accountId) return null;
+    const response = await send(path, request);
+    if (response.status !== 401) return response;
+    sessionStore.forgetToken();
+  }
+  return null;
 }
 
 /** An answer's content. What is no JSON at all, such as a hotel's sign-in page, is left for the schema to refuse. */

@@ -26,6 +26,15 @@ export function zoneNote(at: string, zone: string, readerZone = READER_ZONE): st
 export const clockTime = (at: string, zone: string, readerZone = READER_ZONE): string =>
   clockIn(zone).format(new Date(at)) + zoneNote(at, zone, readerZone);
 
+const READER_DAY = new Intl.DateTimeFormat('en-CA', { timeZone: READER_ZONE });
+
+/** An instant by this device's own clock: "21:20", or "Fri 3 July 2026, 21:20" when that was not today. */
+export function clockHere(at: string, nowMs = Date.now()): string {
+  const day = READER_DAY.format(new Date(at));
+  const time = clockIn(READER_ZONE).format(new Date(at));
+  return day === READER_DAY.format(nowMs) ? time : `${dayName(day)}, ${time}`;
+}
+
 /** An instant's day and time at the fishery: "Sat 4 July 2026, 07:00". */
 export function dayAndTime(at: string, zone: string, readerZone = READER_ZONE): string {
   const day = new Intl.DateTimeFormat('en-CA', { timeZone: zone }).format(new Date(at));
