@@ -1,5 +1,6 @@
 import { Linking, View } from 'react-native';
 import { Text } from '@/components/text';
+import { TextLink } from '@/components/text-link';
 import { space } from '@/constants/layout';
 import { typeOf } from '@/constants/type';
 import { useTheme } from '@/hooks/use-theme';
@@ -29,7 +30,10 @@ export function EmergencyLine() {
     >
       <Text size="small" tone="inkSoft" style={{ maxWidth: 430 }}>
         In an emergency ring <Ring number="999" /> or <Ring number="112" /> and say which lake and peg. Reach
-        or throw, don’t go in.
+        or throw, don’t go in.{' '}
+        <TextLink href="/emergency" size="small">
+          Emergency card
+        </TextLink>
       </Text>
     </View>
   );

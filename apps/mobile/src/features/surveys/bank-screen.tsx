@@ -30,8 +30,8 @@ export function BankScreen() {
         {() => (
           <>
             <OpenVisits lakeIds={lakes.map(({ id }) => id)} />
-            {lakes.map(({ id, name }) => (
-              <BankLake key={id} lakeId={id} name={name} />
+            {lakes.map(({ id, fisheryId, name }) => (
+              <BankLake key={id} lakeId={id} fisheryId={fisheryId} name={name} />
             ))}
             <Section title="Kit">
               <List label="Kit">

@@ -1,0 +1,1 @@
+export { EmergencyScreen as default } from '@/features/charts/emergency-screen';
