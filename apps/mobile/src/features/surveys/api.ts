@@ -1,43 +1,53 @@
-import { PegView, LevelRecorded, type RecordLevel } from '@mereward/shared/lakes/contract';
+import { PegList, PegView } from '@mereward/shared/lakes/contract';
 import {
-  CastView,
   ImportDone,
   ImportPreview,
   VisitList,
   VisitView,
   VisitWithCasts,
-  type CloseVisit,
   type CorrectKit,
   type ImportCasts,
-  type KeepCast,
-  type OpenVisit,
 } from '@mereward/shared/surveys/contract';
 import { queryOptions, useMutation, useQuery, useQueryClient } from '@tanstack/react-query';
-import { lakeKeys } from '@/features/lakes/api';
-import { api, nothing } from '@/lib/api';
+import { useCallback, useMemo } from 'react';
+import { ofVisit, openedHere, visitShown, visitsShown } from '@/features/surveys/shown-visit';
+import { surveyKeys } from '@/features/surveys/survey-keys';
+import { useWorkedOutHere } from '@/features/surveys/use-worked-out-here';
+import { api } from '@/lib/api';
+import { useOutbox } from '@/lib/outbox';
+import type { OutboxEntry } from '@/lib/outbox-event';
 
-export const surveyKeys = {
-  ofLake: (lakeId: string) => ['surveys', 'lake', lakeId] as const,
-  one: (visitId: string) => ['surveys', 'visit', visitId] as const,
-  peg: (pegId: string) => ['surveys', 'peg', pegId] as const,
-};
+export { surveyKeys };
 
-export const visitsQuery = (lakeId: string) =>
+/** The visits of a lake, newest first, with those in the queue laid over them. */
+export const visitsQuery = (lakeId: string, queue: readonly OutboxEntry[]) =>
   queryOptions({
     queryKey: surveyKeys.ofLake(lakeId),
     queryFn: ({ signal }) => api.get(`/lakes/${lakeId}/visits`, VisitList, signal),
     enabled: lakeId !== '', // no lake chosen yet
+    select: (known) => visitsShown(known, queue, lakeId),
   });
 
 /** The visits of a lake, newest first. */
-export const useVisits = (lakeId: string) => useQuery(visitsQuery(lakeId));
+export function useVisits(lakeId: string) {
+  const { entries } = useOutbox();
+  return useQuery(visitsQuery(lakeId, entries));
+}
 
-/** A visit, its casts in order, and how much of each peg's arc they cover. */
-export const useVisit = (visitId: string) =>
-  useQuery({
+/** A visit, its casts in order, those still to be sent among them, and how much of each peg's arc they cover. */
+export function useVisit(visitId: string) {
+  const { entries, looked } = useOutbox();
+  const here = useWorkedOutHere();
+  const queue = useMemo(() => ofVisit(entries, visitId), [entries, visitId]);
+  const opened = openedHere(queue, visitId);
+  return useQuery({
     queryKey: surveyKeys.one(visitId),
     queryFn: ({ signal }) => api.get(`/visits/${visitId}`, VisitWithCasts, signal),
+    enabled: looked && opened === null, // the server does not know it yet
+    ...(opened ? { initialData: opened } : {}),
+    select: useCallback((known: VisitWithCasts) => visitShown(known, queue, here), [queue, here]),
   });
+}
 
 /** The peg stood on: its origin mark and arc are what a cast is reduced from. */
 export const useStance = (pegId: string | null) =>
@@ -47,38 +57,23 @@ export const useStance = (pegId: string | null) =>
     enabled: pegId !== null,
   });
 
-export const openVisit = (lakeId: string, visit: OpenVisit) =>
-  api.post(`/lakes/${lakeId}/visits`, visit, VisitView);
-
-/** Keeps a cast. The id is made here, so sending it again after a lost answer keeps it once. */
-export function useKeepCast(visitId: string) {
+/** Every peg of a lake in one reading, so that casts from any of them can be reduced once the signal is gone. */
+export function useStances(lakeId: string) {
   const queries = useQueryClient();
-  return useMutation({
-    mutationFn: (cast: KeepCast) => api.post(`/visits/${visitId}/casts`, cast, CastView),
-    onSuccess: (cast) =>
-      queries.setQueryData<VisitWithCasts>(surveyKeys.one(visitId), (known) =>
-        known && !known.casts.some(({ id }) => id === cast.id)
-          ? { ...known, casts: [...known.casts, cast] }
-          : known,
-      ),
-    // Coverage follows by itself; one bar of signal need not wait for it before the next cast.
-    onSettled: () => void queries.invalidateQueries({ queryKey: surveyKeys.one(visitId) }),
-  });
-}
-
-export function useUndoCast(visitId: string) {
-  const queries = useQueryClient();
-  return useMutation({
-    mutationFn: (castId: string) => api.del(`/visits/${visitId}/casts/${castId}`, nothing),
-    onSuccess: () => queries.invalidateQueries({ queryKey: surveyKeys.one(visitId) }),
+  useQuery({
+    queryKey: surveyKeys.pegs(lakeId),
+    queryFn: async ({ signal }) => {
+      const { pegs } = await api.get(`/lakes/${lakeId}/pegs`, PegList, signal);
+      for (const peg of pegs) queries.setQueryData(surveyKeys.peg(peg.id), peg);
+      return pegs.length;
+    },
+    enabled: lakeId !== '',
+    staleTime: 10 * 60_000,
   });
 }
 
 export const correctKit = (visitId: string, input: CorrectKit) =>
   api.patch(`/visits/${visitId}/kit`, input, VisitView);
-
-export const closeVisit = (visitId: string, input: CloseVisit) =>
-  api.post(`/visits/${visitId}/close`, input, VisitView);
 
 /** The casts of a visit as CSV, with the mark that tells spreadsheets it is UTF-8: reading a file takes it off. */
 export const castsText = async (visitId: string): Promise<string> =>
@@ -105,17 +100,5 @@ export function useImportCasts(visitId: string) {
   return useMutation({
     mutationFn: (input: ImportCasts) => api.post(`/visits/${visitId}/imports`, input, ImportDone),
     onSuccess: () => queries.invalidateQueries({ queryKey: surveyKeys.one(visitId) }),
-  });
-}
-
-export const recordLevel = (boardId: string, input: RecordLevel) =>
-  api.post(`/boards/${boardId}/readings`, input, LevelRecorded);
-
-/** Takes a misread reading back. */
-export function useTakeBackLevel(lakeId: string) {
-  const queries = useQueryClient();
-  return useMutation({
-    mutationFn: (readingId: string) => api.del(`/readings/${readingId}`, nothing),
-    onSuccess: () => queries.invalidateQueries({ queryKey: lakeKeys.one(lakeId) }),
   });
 }

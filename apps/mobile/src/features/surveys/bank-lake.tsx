@@ -10,16 +10,21 @@ import { Section } from '@/components/section';
 import { StatusShape } from '@/components/status-shape';
 import { Text } from '@/components/text';
 import { space } from '@/constants/layout';
+import { useFishery } from '@/features/fisheries/office-api';
 import { useLake } from '@/features/lakes/api';
-import { useVisits } from '@/features/surveys/api';
+import { useStances, useVisits } from '@/features/surveys/api';
 import { countWords, visitCountWords, dayAt, levelWords } from '@/features/surveys/visit-words';
 
 const AT_FIRST = 3;
 
+type Props = { lakeId: string; fisheryId: string; name: string };
+
 /** One lake on the bank: its level, what may be done there, its surveys newest first. */
-export function BankLake({ lakeId, name }: { lakeId: string; name: string }) {
+export function BankLake({ lakeId, fisheryId, name }: Props) {
   const lake = useLake(lakeId);
   const visits = useVisits(lakeId);
+  useFishery(fisheryId); // its duty phone and gate stand on the emergency card
+  useStances(visits.data?.may.open ? lakeId : ''); // a visit may be opened once the signal is gone
   return (
     <Section title={name}>
       <Loaded query={lake} waiting="Reading the level…">

@@ -1,8 +1,9 @@
 import { useState, type ReactNode } from 'react';
+import { useRouter } from 'expo-router';
+import { useMutation, useQueryClient } from '@tanstack/react-query';
 import { View } from 'react-native';
 import type { LakeView } from '@mereward/shared/lakes/contract';
-import type { CastView, VisitView } from '@mereward/shared/surveys/contract';
-import type { Reducing } from '@mereward/shared/surveys/reducing-contract';
+import type { CastView } from '@mereward/shared/surveys/contract';
 import { Button } from '@/components/button';
 import { Form } from '@/components/form';
 import { Kept } from '@/components/kept';
@@ -11,11 +12,12 @@ import { Page } from '@/components/page';
 import { ProblemNote } from '@/components/problem-note';
 import { Text } from '@/components/text';
 import { space } from '@/constants/layout';
-import { useKeepCast, useUndoCast } from '@/features/surveys/api';
 import { AimPart } from '@/features/surveys/aim-part';
 import { CastCautions } from '@/features/surveys/cast-cautions';
+import { reducingOf } from '@/features/surveys/cast-site-of';
 import { closerIn, nextThrow, typedAgain } from '@/features/surveys/cast-draft';
 import { CastSketch } from '@/features/surveys/cast-sketch';
+import { undoCastHere } from '@/features/surveys/keep-here';
 import { FeelPart } from '@/features/surveys/feel-part';
 import { FloatPart } from '@/features/surveys/float-part';
 import { LinePart } from '@/features/surveys/line-part';
@@ -29,32 +31,39 @@ import {
 } from '@/features/surveys/cast-suggestion';
 import { bringIntoSight } from '@/lib/bring-into-sight';
 import { useCastForm } from '@/features/surveys/use-cast-form';
+import type { VisitShown } from '@/features/surveys/shown-visit';
+import { surveyKeys } from '@/features/surveys/survey-keys';
+import type { Again } from '@/hooks/use-again';
 import { useThreeColumns } from '@/hooks/use-wide';
 import { visitGauge } from '@/features/surveys/visit-words';
 
 type Props = {
   lake: LakeView;
-  visit: VisitView;
-  casts: readonly CastView[];
-  /** What they are reduced with beside the kit. */
-  reducing: Reducing | null;
+  value: VisitShown;
+  again: Again;
   /** Proposes casts from the peg one stands on; one that is taken fills aim and wraps. */
   suggest?: ((terms: SuggestTerms) => ReactNode) | undefined;
 };
 
 /** Aim, wraps, feel, float: one screen, the last cast carried forward, the call and the two acts under the thumb. */
-export function CastForm({ lake, visit, casts, reducing, suggest }: Props) {
-  const keep = useKeepCast(visit.id);
-  const undo = useUndoCast(visit.id);
+export function CastForm({ lake, value, again, suggest }: Props) {
+  const { visit, casts } = value;
+  const router = useRouter();
+  const queries = useQueryClient();
+  const undo = useMutation({
+    mutationFn: (cast: CastView) => undoCastHere(visit, cast, new Date().toISOString()),
+    onSuccess: () => queries.invalidateQueries({ queryKey: surveyKeys.one(visit.id) }),
+  });
   const [said, setSaid] = useState<string | null>(null);
   const cast = useCastForm({
     lake,
     visit,
     casts,
-    reducing,
-    send: (input) => keep.mutateAsync(input),
-    onKept: ({ seq: kept }) => {
-      setSaid(`Cast ${kept} is kept.`);
+    reducing: reducingOf(value),
+    again,
+    onKept: ({ value: { seq: kept }, waits }) => {
+      if (again.instead !== null) router.replace('/waiting');
+      setSaid(waits ? `Cast ${kept} is kept on this phone and waits to be sent.` : `Cast ${kept} is kept.`);
       bringIntoSight('main-cast');
     },
   });
@@ -74,8 +83,8 @@ export function CastForm({ lake, visit, casts, reducing, suggest }: Props) {
     const typed = suggestedTyped(proposed, lake, visit.kit);
     if (typed) form.reset({ ...nextThrow(form.getValues()), ...typed });
   };
-  const takeBack = ({ id, seq: taken }: CastView) =>
-    undo.mutate(id, { onSuccess: () => setSaid(`Cast ${taken} is taken back.`) });
+  const takeBack = (taken: CastView) =>
+    undo.mutate(taken, { onSuccess: () => setSaid(`Cast ${taken.seq} is taken back.`) });
   return (
     <Page
       title={`Cast ${seq}`}

@@ -6,25 +6,19 @@ import { LinkButton } from '@/components/link-button';
 import { Loaded } from '@/components/loaded';
 import { Page } from '@/components/page';
 import { useLake } from '@/features/lakes/api';
-import { useVisit } from '@/features/surveys/api';
-import { reducingOf } from '@/features/surveys/cast-site-of';
+import { useStances, useVisit } from '@/features/surveys/api';
 import { CastForm } from '@/features/surveys/cast-form';
+import { useAgain } from '@/hooks/use-again';
 
 /** The next cast of a visit, entered with one hand. */
 export function CastScreen({ suggest }: Pick<ComponentProps<typeof CastForm>, 'suggest'>) {
   const { visitId } = useLocalSearchParams<{ visitId: string }>();
   const visit = useVisit(visitId);
   const lake = useLake(visit.data?.visit.lakeId ?? '');
-  if (visit.data?.visit.may.addCasts && lake.data && lake.data.pegs.length > 0)
-    return (
-      <CastForm
-        lake={lake.data}
-        visit={visit.data.visit}
-        casts={visit.data.casts}
-        reducing={reducingOf(visit.data)}
-        suggest={suggest}
-      />
-    );
+  useStances(visit.data?.visit.lakeId ?? '');
+  const again = useAgain();
+  if (visit.data?.visit.may.addCasts && lake.data && lake.data.pegs.length > 0 && again)
+    return <CastForm lake={lake.data} value={visit.data} again={again} suggest={suggest} />;
   const back = { label: visit.data?.visit.title ?? 'Visit', href: `/bank/surveys/${visitId}` } as const;
   return (
     <Page title="Next cast" back={back}>

@@ -13,7 +13,7 @@ export type Surroundings = {
 };
 
 /** What a visit says its casts are reduced with beside its kit. */
-export const reducingOf = ({ reducing }: VisitWithCasts): Reducing | null =>
+export const reducingOf = ({ reducing }: Pick<VisitWithCasts, 'reducing'>): Reducing | null =>
   Reducing.safeParse(reducing).data ?? null;
 
 /** What a cast is reduced against, from what this phone has read: the same as the server builds from its rows. */

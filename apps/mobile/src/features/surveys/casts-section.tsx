@@ -1,5 +1,5 @@
 import type { LakeView } from '@mereward/shared/lakes/contract';
-import type { CastView, VisitWithCasts } from '@mereward/shared/surveys/contract';
+import type { CastView } from '@mereward/shared/surveys/contract';
 import { useMutation } from '@tanstack/react-query';
 import { View } from 'react-native';
 import { Button } from '@/components/button';
@@ -11,14 +11,16 @@ import { space } from '@/constants/layout';
 import { castsText } from '@/features/surveys/api';
 import { callWords } from '@/features/surveys/call-words';
 import { GradeShape } from '@/features/surveys/grade-shape';
+import { SendingShape } from '@/features/surveys/sending-shape';
+import type { VisitShown } from '@/features/surveys/shown-visit';
 import { spacingWords } from '@/features/surveys/spacing-words';
 import { sideWords } from '@/features/surveys/aim-words';
 import { figure } from '@/lib/format';
 import { saveText } from '@/lib/save-file';
 
 /** Every cast of the visit, newest first; a cast opens to how it was reduced. */
-export function CastsSection({ value, lake }: { value: VisitWithCasts; lake: LakeView }) {
-  const { visit, casts } = value;
+export function CastsSection({ value, lake }: { value: VisitShown; lake: LakeView }) {
+  const { visit, casts, unsent, opening } = value;
   const save = useMutation({
     mutationFn: async () =>
       saveText(`casts-${visit.startedAt.slice(0, 10)}.csv`, await castsText(visit.id), 'text/csv'),
@@ -28,16 +30,18 @@ export function CastsSection({ value, lake }: { value: VisitWithCasts; lake: Lak
       title={`${figure(casts.length)} casts`}
       end={
         <View style={{ flexDirection: 'row', flexWrap: 'wrap', gap: space.small }}>
-          {visit.may.addCasts ? (
+          {visit.may.addCasts && opening === null ? (
             <LinkButton label="Bring a file" href={`/bank/surveys/${visit.id}/import`} bank />
           ) : null}
-          <Button
-            label="Casts as CSV"
-            bank
-            busy={save.isPending}
-            busyLabel="Writing…"
-            onPress={() => save.mutate()}
-          />
+          {opening === null ? (
+            <Button
+              label="Casts as CSV"
+              bank
+              busy={save.isPending}
+              busyLabel="Writing…"
+              onPress={() => save.mutate()}
+            />
+          ) : null}
         </View>
       }
     >
@@ -47,7 +51,7 @@ export function CastsSection({ value, lake }: { value: VisitWithCasts; lake: Lak
         rows={[...casts].reverse()}
         rowKey={({ id }) => id}
         href={({ id }) => `/bank/surveys/${visit.id}/casts/${id}`}
-        columns={columnsOf(lake, visit.kit.stickSpacingM)}
+        columns={columnsOf(lake, visit.kit.stickSpacingM, unsent)}
       />
     </Section>
   );
@@ -55,7 +59,7 @@ export function CastsSection({ value, lake }: { value: VisitWithCasts; lake: Lak
 
 const soundingOf = ({ reduced }: CastView) => (reduced.ok ? reduced.sounding : null);
 
-function columnsOf(lake: LakeView, stickSpacingM: number) {
+function columnsOf(lake: LakeView, stickSpacingM: number, unsent: VisitShown['unsent']) {
   const pegs = new Map(lake.pegs.map(({ id, number }) => [id, number]));
   const marks = new Map(lake.marks.map(({ id, details }) => [id, details.code]));
   return [
@@ -102,8 +106,17 @@ function columnsOf(lake: LakeView, stickSpacingM: number) {
         return grade ? <GradeShape grade={grade} /> : '–';
       },
     },
+    ...(Object.keys(unsent).length > 0 ? [sendingColumn(unsent)] : []),
   ];
 }
+
+/** Shown while something of the visit is on this phone only. */
+const sendingColumn = (unsent: VisitShown['unsent']) => ({
+  key: 'sending',
+  head: 'Sending',
+  value: ({ id }: CastView) => unsent[id] ?? 'sent',
+  show: ({ id }: CastView) => <SendingShape standing={unsent[id] ?? null} />,
+});
 
 function depthCell(sounding: ReturnType<typeof soundingOf>): string {
   if (!sounding || sounding.depthM === null) return 'not read';

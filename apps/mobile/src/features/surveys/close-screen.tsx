@@ -14,8 +14,10 @@ import { Page } from '@/components/page';
 import { ProblemNote } from '@/components/problem-note';
 import { Text } from '@/components/text';
 import { useLake } from '@/features/lakes/api';
-import { closeVisit, useReadVisitAnew, useVisit } from '@/features/surveys/api';
+import { useReadVisitAnew, useVisit } from '@/features/surveys/api';
+import { closeVisitHere } from '@/features/surveys/keep-here';
 import { boardReads, countWords } from '@/features/surveys/visit-words';
+import { draftName, useAgain, type Again } from '@/hooks/use-again';
 import { useDraftForm, type DraftForm } from '@/hooks/use-draft-form';
 import { figure } from '@/lib/format';
 import { typedNumber } from '@/lib/typed-schemas';
@@ -25,7 +27,9 @@ export function CloseScreen() {
   const { visitId } = useLocalSearchParams<{ visitId: string }>();
   const visit = useVisit(visitId);
   const lake = useLake(visit.data?.visit.lakeId ?? '');
-  if (visit.data?.visit.may.addCasts && lake.data) return <CloseForm value={visit.data} lake={lake.data} />;
+  const again = useAgain();
+  if (visit.data?.visit.may.addCasts && lake.data && again)
+    return <CloseForm value={visit.data} lake={lake.data} again={again} />;
   const href = `/bank/surveys/${visitId}` as const;
   return (
     <Page title="Close the visit" back={{ label: visit.data?.visit.title ?? 'Visit', href }}>
@@ -52,21 +56,24 @@ const CloseDraft = z.object({
   endedAt: z.string(), // '' until it is first sent: a second try closes at the same moment
 });
 
-function CloseForm({ value: { visit }, lake }: { value: VisitWithCasts; lake: LakeView }) {
+type FormProps = { value: VisitWithCasts; lake: LakeView; again: Again };
+
+function CloseForm({ value: { visit }, lake, again }: FormProps) {
   const router = useRouter();
   const readAnew = useReadVisitAnew({ visitId: visit.id, lakeId: visit.lakeId });
   const board = lake.boards.find(({ id }) => id === visit.boardId);
   const unit = board?.details.unit ?? 'm';
   const href = `/bank/surveys/${visit.id}` as const;
   const form: DraftForm<z.input<typeof CloseDraft>, z.output<typeof CloseDraft>> = useDraftForm({
-    form: `close:${visit.id}`,
+    form: draftName(`close:${visit.id}`, again),
     schema: CloseDraft,
-    start: { gauge: '', endedAt: '' },
+    start: { ...again.over({ gauge: '', endedAt: '' }), ...(again.timeRefused ? { endedAt: '' } : {}) },
     send: async ({ gauge, endedAt }) => {
       const at = endedAt === '' ? new Date().toISOString() : endedAt;
       form.setValue('endedAt', at);
-      await closeVisit(visit.id, { endedAt: at, gaugeEndM: toMetres(gauge, unit) });
-      await readAnew();
+      const closing = { endedAt: at, gaugeEndM: toMetres(gauge, unit) };
+      const waits = await closeVisitHere({ visit, closing, typed: form.getValues() }, again.instead);
+      if (!waits) await readAnew().catch(() => undefined); // closed all the same; the visit is read again when there is a signal
     },
     onDone: () => router.replace(href),
   });

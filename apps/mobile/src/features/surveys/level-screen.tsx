@@ -1,8 +1,7 @@
 import { useState } from 'react';
-import { useLocalSearchParams } from 'expo-router';
+import { useLocalSearchParams, useRouter } from 'expo-router';
 import type { GaugeBoardView, LakeView, LevelRecorded } from '@mereward/shared/lakes/contract';
 import { toMetres } from '@mereward/shared/units/length';
-import { useQueryClient } from '@tanstack/react-query';
 import { z } from 'zod';
 import { Button } from '@/components/button';
 import { ChoiceGrid } from '@/components/choice-grid';
@@ -13,26 +12,29 @@ import { Loaded } from '@/components/loaded';
 import { Page } from '@/components/page';
 import { ProblemNote } from '@/components/problem-note';
 import { Text } from '@/components/text';
-import { lakeKeys, useLake } from '@/features/lakes/api';
-import { recordLevel } from '@/features/surveys/api';
+import { useLake } from '@/features/lakes/api';
+import { recordLevelHere, type Kept } from '@/features/surveys/keep-here';
 import { LevelKept } from '@/features/surveys/level-kept';
 import { levelWords } from '@/features/surveys/visit-words';
+import { draftName, useAgain, type Again } from '@/hooks/use-again';
 import { useDraftForm, type DraftForm } from '@/hooks/use-draft-form';
 import { newId } from '@/lib/new-id';
+import { useSession } from '@/lib/session';
 import { typedNumber } from '@/lib/typed-schemas';
 
 /** Records what a gauge board reads, in the board's own unit. */
 export function LevelScreen() {
-  const { lakeId } = useLocalSearchParams<{ lakeId: string }>();
+  const { lakeId, boardId: asked } = useLocalSearchParams<{ lakeId: string; boardId?: string }>();
   const lake = useLake(lakeId);
-  const [boardId, setBoardId] = useState<string | null>(null);
+  const again = useAgain();
+  const [boardId, setBoardId] = useState<string | null>(asked ?? null);
   const boards = lake.data?.boards ?? [];
   const board =
     boards.find(({ id }) => id === boardId) ??
     boards.find(({ details }) => details.isDatumBoard) ??
     boards[0];
-  if (lake.data?.may.recordLevel && board)
-    return <LevelForm key={board.id} lake={lake.data} board={board} onBoard={setBoardId} />;
+  if (lake.data?.may.recordLevel && board && again)
+    return <LevelForm key={board.id} lake={lake.data} board={board} again={again} onBoard={setBoardId} />;
   return (
     <Page title="Record the level" back={{ label: 'Bank', href: '/bank' }}>
       <Loaded query={lake} waiting="Reading the lake…">
@@ -55,33 +57,35 @@ const LevelDraft = z.object({
   at: z.string(),
 });
 
-type Props = { lake: LakeView; board: GaugeBoardView; onBoard: (boardId: string) => void };
+type Props = { lake: LakeView; board: GaugeBoardView; again: Again; onBoard: (boardId: string) => void };
 
-function LevelForm({ lake, board, onBoard }: Props) {
-  const queries = useQueryClient();
-  const [kept, setKept] = useState<LevelRecorded | null>(null);
+const UNREAD = { reading: '', note: '', id: '', at: '' };
+
+function LevelForm({ lake, board, again, onBoard }: Props) {
+  const router = useRouter();
+  const { account } = useSession();
+  const [kept, setKept] = useState<Kept<LevelRecorded> | null>(null);
   const { unit, code } = board.details;
   const form: DraftForm<z.input<typeof LevelDraft>, z.output<typeof LevelDraft>> = useDraftForm({
-    form: `level:${board.id}`,
+    form: draftName(`level:${board.id}`, again),
     schema: LevelDraft,
-    start: { reading: '', note: '', id: '', at: '' },
-    send: (read) =>
-      recordLevel(board.id, {
-        ...idsOf(),
-        levelM: toMetres(read.reading, unit),
-        levelText: `${form.getValues('reading').trim()} ${unit}`,
-        note: read.note.trim(),
-      }),
+    start: { ...again.over(UNREAD), id: '', ...(again.timeRefused ? { at: '' } : {}) },
+    send: (read) => {
+      const levelText = `${form.getValues('reading').trim()} ${unit}`;
+      const reading = { ...idsOf(), levelM: toMetres(read.reading, unit), levelText, note: read.note.trim() };
+      const typed = form.getValues();
+      return recordLevelHere({ lake, board, reading, typed, by: account?.name ?? '' }, again.instead);
+    },
     onDone: (answer) => {
-      void queries.invalidateQueries({ queryKey: lakeKeys.one(lake.id) });
       setKept(answer);
       form.startAfresh();
+      if (again.instead !== null) router.replace('/waiting');
     },
   });
   const idsOf = () => {
     const { id, at } = form.getValues();
     if (id !== '') return { id, at };
-    const fresh = { id: newId(), at: new Date().toISOString() };
+    const fresh = { id: newId(), at: at || new Date().toISOString() };
     form.setValue('id', fresh.id);
     form.setValue('at', fresh.at);
     return fresh;
@@ -105,7 +109,15 @@ function LevelForm({ lake, board, onBoard }: Props) {
     >
       <Form label="Level" onSubmit={form.submit}>
         <ProblemNote problem={form.problem} />
-        {kept ? <LevelKept lake={lake} board={board} kept={kept} onTakenBack={() => setKept(null)} /> : null}
+        {kept ? (
+          <LevelKept
+            lake={lake}
+            board={board}
+            kept={kept.value}
+            waits={kept.waits}
+            onTakenBack={() => setKept(null)}
+          />
+        ) : null}
         <Text tone="inkSoft">{levelWords(lake)}</Text>
         {lake.boards.length > 1 ? (
           <ChoiceGrid

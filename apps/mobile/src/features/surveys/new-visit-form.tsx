@@ -11,9 +11,11 @@ import { Note } from '@/components/note';
 import { Page } from '@/components/page';
 import { ProblemNote } from '@/components/problem-note';
 import { Section } from '@/components/section';
-import { openVisit, surveyKeys } from '@/features/surveys/api';
+import { openVisitHere } from '@/features/surveys/keep-here';
 import { KitPart } from '@/features/surveys/kit-part';
+import { surveyKeys } from '@/features/surveys/survey-keys';
 import {
+  openedView,
   VisitDraft,
   visitOf,
   visitToStartFrom,
@@ -22,8 +24,10 @@ import {
 } from '@/features/surveys/visit-draft';
 import { dayAt } from '@/features/surveys/visit-words';
 import { WeatherPart } from '@/features/surveys/weather-part';
+import { draftName, type Again } from '@/hooks/use-again';
 import { useDraftForm, type DraftForm } from '@/hooks/use-draft-form';
 import { newId } from '@/lib/new-id';
+import { useSession } from '@/lib/session';
 
 const COMPETENCES = [
   { key: 'trainee', label: 'trainee' },
@@ -31,27 +35,32 @@ const COMPETENCES = [
   { key: 'lead', label: 'lead' },
 ] as const;
 
-type Props = { lake: LakeView; board: GaugeBoardView; last: VisitView | null };
+type Props = { lake: LakeView; board: GaugeBoardView; last: VisitView | null; again: Again };
 
 /** Opens a visit: the board's reading first, then what the casts will be made with. */
-export function NewVisitForm({ lake, board, last }: Props) {
+export function NewVisitForm({ lake, board, last, again }: Props) {
   const router = useRouter();
   const queries = useQueryClient();
+  const { account } = useSession();
   const form: DraftForm<VisitTyped, VisitRead> = useDraftForm({
-    form: `visit:${lake.id}`,
+    form: draftName(`visit:${lake.id}`, again),
     schema: VisitDraft,
-    start: visitToStartFrom(lake, last),
-    send: (read) => openVisit(lake.id, visitOf(read, { board, ...idsOf() })),
-    onDone: (visit) => {
-      void queries.invalidateQueries({ queryKey: surveyKeys.ofLake(lake.id) });
+    start: { ...again.over(visitToStartFrom(lake, last)), ...(again.timeRefused ? { startedAt: '' } : {}) },
+    send: (read) => {
+      const visit = visitOf(read, { board, ...idsOf() });
+      const shown = openedView(visit, { lake, surveyor: account });
+      return openVisitHere({ visit, shown, typed: form.getValues() }, again.instead);
+    },
+    onDone: ({ value: visit, waits }) => {
+      if (!waits) void queries.invalidateQueries({ queryKey: surveyKeys.ofLake(lake.id) });
       form.startAfresh();
-      router.replace(`/bank/surveys/${visit.id}/cast`);
+      router.replace(again.instead === null ? `/bank/surveys/${visit.id}/cast` : '/waiting');
     },
   });
   const idsOf = () => {
     const { id, startedAt } = form.getValues();
-    if (id !== '') return { id, startedAt };
-    const fresh = { id: newId(), startedAt: new Date().toISOString() };
+    if (id !== '' && startedAt !== '') return { id, startedAt };
+    const fresh = { id: id || newId(), startedAt: new Date().toISOString() }; // its casts may wait under the id already
     form.setValue('id', fresh.id);
     form.setValue('startedAt', fresh.startedAt);
     return fresh;

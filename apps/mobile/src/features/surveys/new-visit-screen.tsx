@@ -5,18 +5,21 @@ import { LinkButton } from '@/components/link-button';
 import { Loaded } from '@/components/loaded';
 import { Page } from '@/components/page';
 import { useLake } from '@/features/lakes/api';
-import { useVisits } from '@/features/surveys/api';
+import { useStances, useVisits } from '@/features/surveys/api';
 import { NewVisitForm } from '@/features/surveys/new-visit-form';
 import { datumBoard } from '@/features/surveys/visit-draft';
+import { useAgain } from '@/hooks/use-again';
 
 /** Opens a survey visit of one lake. */
 export function NewVisitScreen() {
   const { lakeId = '' } = useLocalSearchParams<{ lakeId?: string }>();
   const lake = useLake(lakeId);
   const visits = useVisits(lakeId);
+  useStances(lakeId);
+  const again = useAgain();
   const board = lake.data ? datumBoard(lake.data) : null;
-  if (lake.data?.may.survey && board && visits.data)
-    return <NewVisitForm lake={lake.data} board={board} last={visits.data.visits[0] ?? null} />;
+  if (lake.data?.may.survey && board && visits.data && again)
+    return <NewVisitForm lake={lake.data} board={board} last={visits.data.visits[0] ?? null} again={again} />;
   return (
     <Page title="Open a visit" back={{ label: 'Bank', href: '/bank' }}>
       {lakeId === '' ? <ChooseLake /> : null}

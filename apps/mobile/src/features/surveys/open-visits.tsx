@@ -8,6 +8,7 @@ import { space } from '@/constants/layout';
 import { visitsQuery } from '@/features/surveys/api';
 import { visitCountWords } from '@/features/surveys/visit-words';
 import { themed } from '@/hooks/themed';
+import { useOutbox } from '@/lib/outbox';
 
 const useStyles = themed((c) => ({
   visit: {
@@ -23,7 +24,8 @@ const useStyles = themed((c) => ({
 
 /** Visits that are being made: the next cast is one press away. Nothing is shown when there is none. */
 export function OpenVisits({ lakeIds }: { lakeIds: readonly string[] }) {
-  const answers = useQueries({ queries: lakeIds.map(visitsQuery) });
+  const { entries } = useOutbox();
+  const answers = useQueries({ queries: lakeIds.map((lakeId) => visitsQuery(lakeId, entries)) });
   const open = answers.flatMap(({ data }) => (data?.visits ?? []).filter(({ status }) => status === 'open'));
   if (open.length === 0) return null;
   return (

@@ -16,8 +16,11 @@ import {
   type CastRead,
   type CastTyped,
 } from '@/features/surveys/cast-draft';
+import { keepCastHere, type Kept } from '@/features/surveys/keep-here';
 import { marksAhead } from '@/features/surveys/marks-ahead';
 import { useCastReduction } from '@/features/surveys/use-cast-reduction';
+import type { CastMade } from '@/features/surveys/visit-events';
+import { draftName, type Again } from '@/hooks/use-again';
 import { useDraftForm, type DraftForm } from '@/hooks/use-draft-form';
 import { newId } from '@/lib/new-id';
 
@@ -28,31 +31,54 @@ type Terms = {
   visit: VisitView;
   casts: readonly CastView[];
   reducing: Reducing | null;
-  send: (cast: KeepCast) => Promise<CastView>;
-  onKept: (cast: CastView) => void;
+  again: Again;
+  onKept: (kept: Kept<CastView>) => void;
 };
 
 /** The form of one cast after another: carried forward, kept over a reload, reduced while it is typed. */
-export function useCastForm({ lake, visit, casts, reducing, send, onKept }: Terms) {
+export function useCastForm({ lake, visit, casts, reducing, again, onKept }: Terms) {
   const goesCloserIn = useRef(false);
   const last = casts.at(-1);
+  const start = again.over(last ? typedAgain(last) : firstCast(lake));
   const form: CastFormState = useDraftForm({
-    form: `cast:${visit.id}`,
+    form: draftName(`cast:${visit.id}`, again),
     schema: CastDraft,
-    start: last ? typedAgain(last) : firstCast(lake),
-    send: (read) => sendOnce(form, keepCast(read), send),
-    onDone: (cast) => {
+    start: { ...start, castId: '', ...(again.timeRefused ? { sentAt: '' } : {}) },
+    send: (read) => sendOnce(form, keepCast(read), (cast) => keepCastHere(made(cast), again.instead)),
+    onDone: (kept) => {
+      const { value: cast } = kept;
       const typed = form.getValues();
       form.reset(goesCloserIn.current ? closerIn(typedAgain(cast), cast.lineId) : nextThrow(typed));
-      onKept(cast);
+      onKept(kept);
     },
   });
+  const made = (cast: KeepCast): CastMade => {
+    const reduced = reducedHere.current ?? {
+      ok: false,
+      reason: 'Not worked out on this phone',
+      remedy: '',
+      steps: [],
+    };
+    const shown = {
+      ...cast,
+      visitId: visit.id,
+      seq: (last?.seq ?? 0) + 1,
+      reduced: { ...reduced, steps: [] },
+    };
+    const pegNumber = lake.pegs.find(({ id }) => id === cast.pegId)?.number ?? '';
+    return { visit, cast, shown, pegNumber, typed: form.getValues() };
+  };
   useKeptMeanwhile(form, casts, onKept);
   const typed = form.watch();
   const read = CastDraft.safeParse(typed);
   const peg = useStance(typed.pegId || null);
   const surroundings = peg.data ? { lake, peg: peg.data, visit, reducing } : null;
   const observation = read.success ? observationOf(read.data) : null;
+  const reduced = useCastReduction(surroundings, observation, casts);
+  const reducedHere = useRef(reduced);
+  useEffect(() => {
+    reducedHere.current = reduced;
+  }, [reduced]);
   const keep = (): void => {
     goesCloserIn.current = false;
     form.submit();
@@ -67,7 +93,7 @@ export function useCastForm({ lake, visit, casts, reducing, send, onKept }: Term
     keep,
     keepThenCloserIn,
     surroundings,
-    reduced: useCastReduction(surroundings, observation, casts),
+    reduced,
   };
 }
 
@@ -86,17 +112,17 @@ function useKeptMeanwhile(form: CastFormState, casts: readonly CastView[], onKep
     if (busy || !kept) return;
     reset(nextThrow(typed));
     settled();
-    onKept(kept);
+    onKept({ value: kept, waits: false });
   }, [busy, casts, getValues, reset, settled, onKept]);
 }
 
-type Send = Terms['send'];
+type Send = (cast: KeepCast) => Promise<Kept<CastView>>;
 
 /**
  * Sends under the id and time of the first try, which are kept with the draft: a second try after a lost answer
  * keeps the cast once. A refusal says that nothing was kept under them, so the next try is a cast of its own.
  */
-async function sendOnce(form: CastFormState, cast: CastToKeep, send: Send): Promise<CastView> {
+async function sendOnce(form: CastFormState, cast: CastToKeep, send: Send): Promise<Kept<CastView>> {
   const { castId, sentAt } = idsOf(form);
   try {
     return await send({ ...cast, id: castId, lineId: cast.lineId || castId, observedAt: sentAt });
@@ -112,7 +138,7 @@ type Ids = { castId: string; sentAt: string };
 function idsOf(form: CastFormState): Ids {
   const { castId, sentAt } = form.getValues();
   if (castId !== '') return { castId, sentAt };
-  return setIds(form, { castId: newId(), sentAt: new Date().toISOString() });
+  return setIds(form, { castId: newId(), sentAt: sentAt || new Date().toISOString() });
 }
 
 function setIds(form: CastFormState, ids: Ids): Ids {

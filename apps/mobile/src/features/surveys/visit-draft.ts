@@ -70,3 +70,22 @@ export function visitOf(read: VisitRead, { board, id, startedAt }: Opening): Ope
     consentToPublish: read.consentToPublish,
   };
 }
+
+type Opened = { lake: LakeView; surveyor: { id: string; name: string } | null };
+
+/** A visit as the server will answer it once it is opened there: what the screens show meanwhile. */
+export function openedView(visit: OpenVisit, { lake, surveyor }: Opened): VisitView {
+  return {
+    ...visit,
+    lakeId: lake.id,
+    lakeName: lake.details.name,
+    surveyor: { id: surveyor?.id ?? '', name: surveyor?.name ?? '' },
+    status: 'open',
+    endedAt: null,
+    gaugeEndM: null,
+    datumM: lake.details.datumM,
+    castCount: 0,
+    version: 1,
+    may: { addCasts: lake.may.survey, correct: lake.may.survey },
+  };
+}

@@ -1,6 +1,5 @@
 import { useLocalSearchParams } from 'expo-router';
 import type { LakeView } from '@mereward/shared/lakes/contract';
-import type { VisitWithCasts } from '@mereward/shared/surveys/contract';
 import { View } from 'react-native';
 import { Empty } from '@/components/empty';
 import { LinkButton } from '@/components/link-button';
@@ -10,10 +9,12 @@ import { Section } from '@/components/section';
 import { StatusShape } from '@/components/status-shape';
 import { space } from '@/constants/layout';
 import { useLake } from '@/features/lakes/api';
-import { useVisit } from '@/features/surveys/api';
+import { useStances, useVisit } from '@/features/surveys/api';
 import { CastsSection } from '@/features/surveys/casts-section';
 import { CoverageSection } from '@/features/surveys/coverage-section';
 import { LogsSection } from '@/features/surveys/logs-section';
+import { SendingNote } from '@/features/surveys/sending-note';
+import type { VisitShown } from '@/features/surveys/shown-visit';
 import { VisitFacts, VisitKit } from '@/features/surveys/visit-facts';
 import { useThreeColumns } from '@/hooks/use-wide';
 
@@ -22,6 +23,7 @@ export function VisitScreen() {
   const { visitId } = useLocalSearchParams<{ visitId: string }>();
   const visit = useVisit(visitId);
   const lake = useLake(visit.data?.visit.lakeId ?? '');
+  useStances(visit.data?.visit.may.addCasts ? visit.data.visit.lakeId : '');
   const it = visit.data?.visit;
   return (
     <Page
@@ -49,16 +51,19 @@ export function VisitScreen() {
     >
       <Loaded query={visit} waiting="Reading the visit…">
         {(value) => (
-          <Loaded query={lake} waiting="Reading the lake…">
-            {(its) => <Visit value={value} lake={its} />}
-          </Loaded>
+          <>
+            <SendingNote value={value} />
+            <Loaded query={lake} waiting="Reading the lake…">
+              {(its) => <Visit value={value} lake={its} />}
+            </Loaded>
+          </>
         )}
       </Loaded>
     </Page>
   );
 }
 
-function Visit({ value, lake }: { value: VisitWithCasts; lake: LakeView }) {
+function Visit({ value, lake }: { value: VisitShown; lake: LakeView }) {
   const { visit, casts } = value;
   const beside = useThreeColumns();
   const facts = <VisitFacts visit={visit} lake={lake} />;
@@ -98,12 +103,12 @@ function Visit({ value, lake }: { value: VisitWithCasts; lake: LakeView }) {
   );
 }
 
-function NoCasts({ value: { visit } }: { value: VisitWithCasts }) {
+function NoCasts({ value: { visit, opening } }: { value: VisitShown }) {
   return (
     <Empty
       title="No casts yet"
       action={
-        visit.may.addCasts ? (
+        visit.may.addCasts && opening === null ? (
           <LinkButton label="Bring casts from a file" href={`/bank/surveys/${visit.id}/import`} bank />
         ) : null
       }
