@@ -13,6 +13,7 @@ const stopWithinMs = 20_000;
  * @property {Promise<void>} ready
  * @property {Promise<number>} exited
  * @property {() => Promise<void>} stop
+ * @property {() => Promise<void>} kill ends it at once, as a power cut does
  */
 
 /**
@@ -48,6 +49,10 @@ export function startServer(port, settings, { log = 'inherit' } = {}) {
     url,
     ready: ready(),
     exited: gone,
+    async kill() {
+      signalGroup(child, 'SIGKILL');
+      await gone;
+    },
     async stop() {
       if (code === undefined) signalGroup(child, 'SIGTERM');
       await Promise.race([gone, pause(stopWithinMs)]);

@@ -6,13 +6,13 @@ import { expect } from './support/site';
 
 /** Who looks at which screens; `undefined` is a stranger. Each screen is in one place at least. */
 const LOOKS: readonly { place: string; who: Somebody | undefined; sees: RegExp }[] = [
-  { place: 'the water', who: undefined, sees: /^\/(water|tickets)/ },
+  { place: 'the water', who: undefined, sees: /^\/(water|tickets|emergency)/ },
   {
     place: 'the doors',
     who: undefined,
     sees: /^\/(sign-in|sign-up|forgotten|reset-password|verify|invitation|me)$/,
   },
-  { place: 'the bank', who: 'joan', sees: /^\/bank/ },
+  { place: 'the bank', who: 'joan', sees: /^\/(bank|waiting)/ },
   { place: 'the office', who: 'idris', sees: /^\/office/ },
   {
     place: 'the tickets and the pegs they are written for',

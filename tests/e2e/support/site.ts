@@ -11,6 +11,9 @@ import { readGround } from './ground';
 export interface Site {
   url: string;
   databaseUrl: string;
+  /** Ends the server without a word, as a power cut does; `startServer` brings it back at the same address. */
+  killServer: () => Promise<void>;
+  startServer: () => Promise<void>;
   /** Moves a clock that is held still (`test.use({ now })`) to another instant. */
   setNow: (now: string) => void;
   stop: () => Promise<void>;
@@ -40,18 +43,25 @@ async function openSite({ name, now }: Wish): Promise<Site> {
     LOG_LEVEL: 'info',
     ...(now ? { CLOCK_FILE: clockFile } : {}),
   };
-  const server = startServer(await freePort(), settings, { log });
-  closeSync(log);
+  const port = await freePort();
+  const start = () => startServer(port, settings, { log });
+  let server = start();
   await server.ready;
   return {
     url: server.url,
     databaseUrl: database.url,
+    killServer: () => server.kill(),
+    async startServer() {
+      server = start();
+      await server.ready;
+    },
     setNow(instant) {
       if (!now) throw new Error('This site keeps the machine’s time: give its file a `now` first.');
       writeFileSync(clockFile, instant);
     },
     async stop() {
       await server.stop();
+      closeSync(log);
       await database.drop();
       rmSync(folder, { recursive: true, force: true });
     },

@@ -28,6 +28,7 @@ const visit: VisitView = {
   kit: kitOf(KitDraft.parse({ ...kitToStartFrom(null), wrapReference: 'lead_to_clip' })),
   consentToPublish: true,
   castCount: 0,
+  soundingCount: 0,
   version: 1,
   may: { addCasts: true, correct: true },
 };

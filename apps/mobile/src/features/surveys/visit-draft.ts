@@ -85,6 +85,7 @@ export function openedView(visit: OpenVisit, { lake, surveyor }: Opened): VisitV
     gaugeEndM: null,
     datumM: lake.details.datumM,
     castCount: 0,
+    soundingCount: 0,
     version: 1,
     may: { addCasts: lake.may.survey, correct: lake.may.survey },
   };

@@ -64,7 +64,7 @@ export function VisitScreen() {
 }
 
 function Visit({ value, lake }: { value: VisitShown; lake: LakeView }) {
-  const { visit, casts } = value;
+  const { visit, casts, opening } = value;
   const beside = useThreeColumns();
   const facts = <VisitFacts visit={visit} lake={lake} />;
   const kit = <VisitKit visit={visit} />;
@@ -77,7 +77,7 @@ function Visit({ value, lake }: { value: VisitShown; lake: LakeView }) {
       </Section>
     );
   const coverage = casts.length > 0 ? <CoverageSection value={value} lake={lake} bare={beside} /> : null;
-  const logs = <LogsSection visitId={visit.id} zone={lake.zone} />;
+  const logs = opening === null ? <LogsSection visitId={visit.id} zone={lake.zone} /> : null; // not there yet
   if (!beside)
     return (
       <>
