@@ -6,13 +6,15 @@ import { randomUUID } from 'node:crypto';
 import { mkdtempSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
-import { afterAll, beforeAll, describe, expect, test } from 'vitest';
+import { afterAll, beforeAll, describe, expect, test, vi } from 'vitest';
 import { publishedChart } from '../support/charts';
 import { drawnOn, type Drawn } from '../support/pdf-strokes';
 import { aStranger, type Asker } from '../support/people';
 import { aServer, type TestServer } from '../support/server';
 import { aLongWater, aSurvey, type TestWater } from '../support/surveys';
 import { aFishery, type TestFishery } from '../support/waters';
+
+vi.setConfig({ testTimeout: 60_000 }); // the thread that draws reads its source when it starts
 
 let server: TestServer;
 let here: TestFishery;

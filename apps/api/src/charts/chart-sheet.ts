@@ -7,9 +7,10 @@ import type { EntityManager } from 'typeorm';
 import type { Ctx } from '../ctx';
 import { isStaff } from '../lakes/policy';
 import { chartContent } from './chart-layers';
-import { drawChartSheet, type PaperSize } from './chart-sheet-pdf';
+import type { ChartSheet, PaperSize } from './chart-sheet-pdf';
 import type { SheetPeople } from './chart-sheet-words';
 import { chartView } from './chart-view';
+import { drawPaper } from './draw-paper';
 import { fileName } from './file-name';
 
 /** A lake's chart as a sheet to print, true to scale: what the reader's own screen of it holds, and no more. */
@@ -19,13 +20,14 @@ export async function chartSheet(
   paper: PaperSize,
 ): Promise<{ filename: string; pdf: Buffer }> {
   const chart = await chartView(ctx, chartId);
-  const pdf = await drawChartSheet({
+  const sheet: ChartSheet = {
     chart,
     people: await peopleOf(ctx, chart),
     printedOn: civilDay(ctx.now, chart.zone),
     printedAt: ctx.now,
     paper,
-  });
+  };
+  const pdf = await drawPaper({ kind: 'sheet', sheet });
   return { filename: `${fileName(chart.lakeName, 'chart', chart.version ?? 'draft', paper)}.pdf`, pdf };
 }
 

@@ -54,6 +54,7 @@ export async function chartView(ctx: Ctx, chartId: string): Promise<ChartView> {
     ...(await places(tx, lake)),
     ...(shown ? layersFor(shown, sight, now) : NOTHING),
     layerNotes: shown ? sight.notes : missingNotes({ chart, lake }, sight),
+    may: { report: sight.staff && shown !== null },
   };
 }
 

@@ -5,11 +5,13 @@ import { parse } from '../http/parse';
 import { raw, type Route } from '../http/route';
 import { idIn } from '../http/route-id';
 import { reading } from '../http/transaction';
+import { chartCastsCsv } from './chart-casts';
 import { chartSheet } from './chart-sheet';
 import { chartView } from './chart-view';
 import { fileName } from './file-name';
 import { chartGeojson } from './geojson';
 import { pegCard } from './peg-card';
+import { surveyReport } from './report';
 
 const guards = [limitDrawings];
 
@@ -34,6 +36,43 @@ export const paperRoutes: Route[] = [
     async (req, res) => {
       const { size } = parse(PaperAsked, req.query);
       sendPdf(res, await reading(req, (ctx) => chartSheet(ctx, idIn(req, 'chartId'), size)));
+    },
+  ),
+  raw(
+    {
+      method: 'get',
+      path: '/charts/:chartId/report.pdf',
+      summary: 'The whole account of a survey, for staff',
+      signIn: 'needed',
+      answerType: 'application/pdf',
+      guards,
+    },
+    async (req, res) => sendPdf(res, await reading(req, (ctx) => surveyReport(ctx, idIn(req, 'chartId')))),
+  ),
+  raw(
+    {
+      method: 'get',
+      path: '/charts/:chartId/casts.csv',
+      summary: 'Every cast of a chart as a table, for staff',
+      signIn: 'needed',
+      answerType: 'text/csv',
+    },
+    async (req, res) => {
+      const { filename, text } = await reading(req, (ctx) => chartCastsCsv(ctx, idIn(req, 'chartId')));
+      res.attachment(filename).type('text/csv').send(text);
+    },
+  ),
+  raw(
+    {
+      method: 'get',
+      path: '/charts/:chartId/casts.csv.sha256',
+      summary: 'The digest of that table, as sha256sum writes and checks it',
+      signIn: 'needed',
+      answerType: 'text/plain',
+    },
+    async (req, res) => {
+      const { filename, sha256 } = await reading(req, (ctx) => chartCastsCsv(ctx, idIn(req, 'chartId')));
+      res.attachment(`${filename}.sha256`).type('text/plain').send(`${sha256}  ${filename}\n`);
     },
   ),
   raw(

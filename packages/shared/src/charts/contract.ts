@@ -195,6 +195,7 @@ export const ChartView = z.object({
     })
     .nullable(),
   layerNotes: LayerNotes,
+  may: z.object({ report: z.boolean() }).default({ report: false }), // take raw casts and the report away
 });
 export type ChartView = z.infer<typeof ChartView>;
 

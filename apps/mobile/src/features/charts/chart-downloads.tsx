@@ -6,6 +6,8 @@ import { Section } from '@/components/section';
 import { useChartUnits } from './use-chart-units';
 import { chartFile, type ChartFileKind } from './chart-file';
 import { shownLayers } from './chart-layers';
+import { sheetPapers, staffPapers } from './chart-papers';
+import { PaperButtons } from './paper-buttons';
 
 const kinds: readonly { kind: ChartFileKind; label: string; bw: boolean }[] = [
   { kind: 'png', label: 'Picture (PNG)', bw: false },
@@ -33,6 +35,7 @@ export function ChartDownloads({ chart }: { chart: ChartView }) {
   };
   return (
     <Section title="Take the chart away" note="As a sheet with scale, datum, dates and cautions on it.">
+      {chart.depth || chart.substrate ? <PaperButtons papers={sheetPapers(chart)} /> : null}
       {kinds.map(({ kind, label, bw }) => (
         <Button
           key={label}
@@ -43,6 +46,7 @@ export function ChartDownloads({ chart }: { chart: ChartView }) {
         />
       ))}
       <ProblemNote problem={problem} />
+      {chart.may.report ? <PaperButtons papers={staffPapers(chart)} /> : null}
     </Section>
   );
 }

@@ -11,7 +11,9 @@ import { BuildSection } from '@/features/charts/build-section';
 import { ChartLogsSection } from '@/features/charts/chart-logs-section';
 import { ChartStatusShape } from '@/features/charts/chart-status';
 import { chartName, surveyedWords } from '@/features/charts/chart-words';
+import { layersPaper, sheetPapers, staffPapers } from '@/features/charts/chart-papers';
 import { CheckList } from '@/features/charts/check-list';
+import { PaperButtons } from '@/features/charts/paper-buttons';
 import { QualityReport } from '@/features/charts/quality-report';
 import { ReviewActions } from '@/features/charts/review-actions';
 import { ReviewMap } from '@/features/charts/review-map';
@@ -38,6 +40,11 @@ export function ChartReviewScreen() {
       </Loaded>
     </Page>
   );
+}
+
+function papersOf({ chart: { id, version }, lakeName }: ChartReview) {
+  const named = { id, version, lakeName };
+  return [...sheetPapers(named), ...staffPapers(named), layersPaper(named)];
 }
 
 function Review({ review }: { review: ChartReview }) {
@@ -79,6 +86,9 @@ function Review({ review }: { review: ChartReview }) {
       {built ? (
         <View style={{ flexGrow: 2, flexBasis: 340, minWidth: 0 }}>
           <ReviewMap chartId={chart.id} />
+          <Section title="Papers" note="As they would stand with this chart published.">
+            <PaperButtons papers={papersOf(review)} />
+          </Section>
         </View>
       ) : null}
     </View>

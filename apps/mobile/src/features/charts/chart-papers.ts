@@ -1,0 +1,45 @@
+import type { Paper } from './paper-buttons';
+
+type Named = { id: string; lakeName: string; version: string | null };
+
+const slug = (words: string): string =>
+  words
+    .toLowerCase()
+    .replace(/[^a-z0-9]+/g, '-')
+    .replace(/^-|-$/g, '') || 'lake';
+
+const named = ({ lakeName, version }: Named, what: string): string =>
+  `${slug(lakeName)}-${what}-${version ?? 'draft'}`;
+
+/** The chart true to scale, to print and laminate. */
+export const sheetPapers = (chart: Named): Paper[] =>
+  (['a4', 'a3'] as const).map((size) => ({
+    label: `Sheet to print, ${size.toUpperCase()} (PDF)`,
+    path: `/charts/${chart.id}/sheet.pdf?size=${size}`,
+    name: `${named(chart, 'chart')}-${size}.pdf`,
+  }));
+
+/** What only the fishery's staff may take away: raw casts are theirs. */
+export const staffPapers = (chart: Named): Paper[] => [
+  {
+    label: 'Survey report (PDF)',
+    path: `/charts/${chart.id}/report.pdf`,
+    name: `${named(chart, 'report')}.pdf`,
+  },
+  {
+    label: 'Every cast (CSV)',
+    path: `/charts/${chart.id}/casts.csv`,
+    name: `${named(chart, 'casts')}.csv`,
+  },
+  {
+    label: 'Digest of that table (SHA-256)',
+    path: `/charts/${chart.id}/casts.csv.sha256`,
+    name: `${named(chart, 'casts')}.csv.sha256`,
+  },
+];
+
+export const layersPaper = (chart: Named): Paper => ({
+  label: 'Layers (GeoJSON)',
+  path: `/charts/${chart.id}/geojson`,
+  name: `${named(chart, 'chart')}.geojson`,
+});
