@@ -1,4 +1,4 @@
-import { PaperAsked } from '@mereward/shared/charts/paper-contract';
+import { PaperAsked, SvgAsked } from '@mereward/shared/charts/paper-contract';
 import type { Response } from 'express';
 import { limitDrawings } from '../http/limits';
 import { parse } from '../http/parse';
@@ -6,10 +6,10 @@ import { raw, type Route } from '../http/route';
 import { idIn } from '../http/route-id';
 import { reading } from '../http/transaction';
 import { chartCastsCsv } from './chart-casts';
+import { chartLayersFile } from './chart-geojson';
 import { chartSheet } from './chart-sheet';
-import { chartView } from './chart-view';
+import { chartSvg } from './chart-svg';
 import { fileName } from './file-name';
-import { chartGeojson } from './geojson';
 import { pegCard } from './peg-card';
 import { surveyReport } from './report';
 
@@ -84,9 +84,27 @@ export const paperRoutes: Route[] = [
       answerType: 'application/geo+json',
     },
     async (req, res) => {
-      const view = await reading(req, (ctx) => chartView(ctx, idIn(req, 'chartId')));
-      res.attachment(`${fileName(view.lakeName, view.version ?? 'draft')}.geojson`);
-      res.type('application/geo+json').send(JSON.stringify(chartGeojson(view)));
+      const { filename, collection } = await reading(req, (ctx) =>
+        chartLayersFile(ctx, idIn(req, 'chartId')),
+      );
+      res.attachment(filename).type('application/geo+json').send(JSON.stringify(collection));
+    },
+  ),
+  raw(
+    {
+      method: 'get',
+      path: '/charts/:chartId/chart.svg',
+      summary: 'The chart as the screen draws it',
+      signIn: 'open',
+      query: SvgAsked,
+      answerType: 'image/svg+xml',
+      guards,
+    },
+    async (req, res) => {
+      const asked = parse(SvgAsked, req.query);
+      const { filename, svg } = await reading(req, (ctx) => chartSvg(ctx, idIn(req, 'chartId'), asked));
+      res.setHeader('content-disposition', `inline; filename="${filename}"`);
+      res.type('image/svg+xml').send(svg);
     },
   ),
   raw(
