@@ -9,6 +9,7 @@ import { webFolder } from '../../scripts/lib/build.mjs';
 import { findChromium } from '../../scripts/lib/chromium.mjs';
 import { benchLine } from './bench-line';
 import { openHelloPage } from './hello-page';
+import { lightLines } from './light-page';
 import { median } from './median';
 
 const ROUNDS = 5;
@@ -155,6 +156,10 @@ export async function benchClient(site: string): Promise<string[]> {
     return [
       ...(await weightLines(browser, pegUrl)),
       ...(await paintLines(browser, { pegUrl, helloUrl: hello.url, heading: `Peg ${page.number}` })),
+      ...(await lightLines(browser, firstPaint, {
+        lightUrl: `${site}/p/${page.shortUrl.slice(-6)}`,
+        staticUrl: `${hello.url}static`,
+      })),
       await dragLine(browser, `${site}/water/charts/${chartId}`, hello.url),
     ];
   } finally {
@@ -189,6 +194,9 @@ async function weightLines(browser: Browser, pegUrl: string): Promise<string[]> 
         }),
   ];
 }
+
+const firstPaint = async (browser: Browser, url: string): Promise<number> =>
+  (await painted(browser, url, null)).firstMs;
 
 type Painting = { pegUrl: string; helloUrl: string; heading: string };
 

@@ -12,6 +12,10 @@ const HELLO = `
 const PAGE =
   '<!doctype html><html lang="en"><head><meta charset="utf-8"><title>Hello</title></head><body><div id="root"></div><script src="/hello.js" defer></script></body></html>';
 
+/** Words alone: the least a browser can be asked to paint. */
+const STATIC_PAGE =
+  '<!doctype html><html lang="en"><head><meta charset="utf-8"><meta name="viewport" content="width=device-width"><title>Hello</title></head><body><p>Hello</p></body></html>';
+
 export type HelloPage = { url: string; stop: () => void };
 
 /** The least page react-native-web can paint, served compressed: what a first paint is held against. */
@@ -28,13 +32,14 @@ export async function openHelloPage(): Promise<HelloPage> {
   });
   const script = brotliCompressSync(bundled.outputFiles[0]?.contents ?? new Uint8Array());
   const page = brotliCompressSync(PAGE);
+  const plain = brotliCompressSync(STATIC_PAGE);
   const server = createServer((req, res) => {
     const asked = req.url === '/hello.js';
     res.writeHead(200, {
       'Content-Type': asked ? 'text/javascript' : 'text/html',
       'Content-Encoding': 'br',
     });
-    res.end(asked ? script : page);
+    res.end(asked ? script : req.url === '/static' ? plain : page);
   });
   server.listen(0, '127.0.0.1');
   await once(server, 'listening');
