@@ -248,6 +248,7 @@ describe.each(['a folder', 'a bucket'] as const)('photos kept in %s', (kind) => 
     const same = await ask({ 'If-None-Match': whole.headers['etag'] ?? '' });
     expect(same.status).toBe(304);
     expect((await here.people.manager.delete(`/photos/${id}`)).status).toBe(204);
+    await server.settle();
     expect((await ask({})).status).toBe(404);
     expect((await ask({ Range: 'bytes=0-9' })).status).toBe(404);
   });
@@ -281,5 +282,13 @@ describe.each(['a folder', 'a bucket'] as const)('photos kept in %s', (kind) => 
       await server.settle();
       expect((await stateOf(id)).state).toBe('ready');
       expect((await send(photo, other)).status).toBe(202); // sent again with the same id
+      await server.settle();
+      bucket.go({ kind: 'away' });
+      expect((await here.people.manager.delete(`/photos/${other}`)).status).toBe(204);
+      await expect(server.settle()).rejects.toThrow(/can’t be reached/);
+      bucket.go({ kind: 'open' });
+      expect(await inBucket().about(photoFile(other, 'large.jpg'))).not.toBeNull();
+      await server.settle(); // what was to be taken away then is taken away now
+      expect(await inBucket().about(photoFile(other, 'large.jpg'))).toBeNull();
     });
 });

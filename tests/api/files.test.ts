@@ -191,6 +191,7 @@ describe('who may', () => {
     expect((await here.people.office.delete(path)).status).toBe(403);
     expect((await elsewhere.people.manager.delete(path)).status).toBe(404);
     expect((await here.people.manager.delete(path)).status).toBe(204);
+    await server.settle();
     expect((await aStranger(server).get(`${path}/large.jpg`)).status).toBe(404);
     expect((await here.people.manager.delete(path)).status).toBe(404);
     const folder = join(server.server.config.filesDir, photoFolder(photo.id));

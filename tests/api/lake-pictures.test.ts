@@ -230,6 +230,7 @@ describe('who may', () => {
     expect(existsSync(folder)).toBe(true);
     expect((await here.people.manager.delete(`/pictures/${id}`)).status).toBe(204);
     expect((await here.people.manager.get(`/pictures/${id}`)).status).toBe(404);
+    await server.settle();
     expect(existsSync(folder)).toBe(false);
     expect((await here.people.manager.delete(`/pictures/${id}`)).status).toBe(404);
   });

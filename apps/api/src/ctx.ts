@@ -30,7 +30,8 @@ export type Jobs = {
   send(tx: EntityManager, name: JobName, payload: object): Promise<void>;
 };
 
-export type JobName = 'mail.send' | 'chart.build' | 'photo.resize' | 'picture.resize' | 'log.read';
+export type JobName =
+  'mail.send' | 'chart.build' | 'photo.resize' | 'picture.resize' | 'files.remove' | 'log.read';
 
 /** Everything a service gets: never a request. */
 export type Ctx = {

@@ -1,5 +1,5 @@
 import { buildChartJob } from './charts/jobs';
-import { resizePhoto } from './files/jobs';
+import { removeFiles, resizePhoto } from './files/jobs';
 import type { Handlers } from './jobs/worker';
 import { resizeLakePicture } from './lakes/picture-jobs';
 import { sendMail } from './mail/jobs';
@@ -11,5 +11,6 @@ export const handlers: Handlers = {
   'chart.build': buildChartJob,
   'photo.resize': resizePhoto,
   'log.read': readLogJob,
+  'files.remove': removeFiles,
   'picture.resize': resizeLakePicture,
 };

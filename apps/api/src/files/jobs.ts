@@ -20,3 +20,9 @@ export const resizePhoto: Handler = ({ payload, attempt }, { source, config }) =
   };
   return makeReady(fileStoreOf(config), waiting, { attempt, largePx: LARGE_PX });
 };
+
+const Folder = z.object({ folder: z.string().regex(/^(photos|pictures)\/[0-9a-f]{2}\/[0-9a-f-]{36}$/) });
+
+/** Takes away the files of something whose row is gone. Done twice it changes nothing. */
+export const removeFiles: Handler = ({ payload }, { config }) =>
+  fileStoreOf(config).removeFolder(Folder.parse(payload).folder);

@@ -1,11 +1,10 @@
 import { PhotoView } from '@mereward/shared/files/contract';
 import type { Request, Response } from 'express';
 import { notFound } from '../http/deny';
-import { raw, read, type Route } from '../http/route';
+import { deed, raw, read, type Route } from '../http/route';
 import { serverOf } from '../http/server';
-import { inTransaction } from '../http/transaction';
 import { photoOf, removePhoto } from './service';
-import { photoFile, photoFolder, type PhotoPart } from './file-key';
+import { photoFile, type PhotoPart } from './file-key';
 import { serveFile } from './serve-file';
 import { fileStoreOf } from './store';
 import { z } from 'zod';
@@ -51,14 +50,9 @@ export const fileRoutes: Route[] = [
     },
     (ctx, { id }) => photoOf(ctx, id('photoId')),
   ),
-  raw(
+  deed(
     { method: 'delete', path: '/photos/:photoId', summary: 'Take a photo away', signIn: 'needed' },
-    async (req, res) => {
-      const id = photoId(req);
-      await inTransaction(req, (ctx) => removePhoto(ctx, id));
-      await fileStoreOf(serverOf(req).config).removeFolder(photoFolder(id));
-      res.status(204).end();
-    },
+    (ctx, { id }) => removePhoto(ctx, id('photoId')),
   ),
   picture('small.jpg'),
   picture('large.jpg'),

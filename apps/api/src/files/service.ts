@@ -8,7 +8,7 @@ import { insertOnce, mustRepeat } from '../repeat';
 import { photoFault } from './photo-fault';
 import { PHOTO_KEEPERS, PHOTO_STAFF } from './policy';
 import { photoView } from './queries';
-import { photoFile } from './file-key';
+import { photoFile, photoFolder } from './file-key';
 import type { FileStore } from './store';
 
 /** What a photo is of: a peg or a far-bank mark of a fishery. */
@@ -89,10 +89,11 @@ export async function photoOf({ tx, actor }: Ctx, photoId: string): Promise<Phot
   return photoView(photo);
 }
 
-/** Takes a photo away. Its files are removed by the caller once this is committed. */
-export async function removePhoto({ tx, actor }: Ctx, photoId: string): Promise<void> {
+/** Takes a photo away, and its files once this is committed. */
+export async function removePhoto({ tx, actor, jobs }: Ctx, photoId: string): Promise<void> {
   const photo = await tx.findOneBy(Photo, { id: photoId });
   if (!photo) throw notFound('photo');
   allowOnly(actor, { fisheryId: photo.fisheryId, what: 'photo' }, PHOTO_KEEPERS);
   await tx.delete(Photo, { id: photoId });
+  await jobs.send(tx, 'files.remove', { folder: photoFolder(photoId) });
 }

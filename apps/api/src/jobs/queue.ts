@@ -8,6 +8,7 @@ const QUEUES: Record<JobName, { retryLimit: number; retryDelay: number; expireIn
   // Twelve tries are five hours: the store of files may be away for a while, and what was sent is kept.
   'photo.resize': { retryLimit: 11, retryDelay: 5, expireInSeconds: 180 },
   'log.read': { retryLimit: 2, retryDelay: 5, expireInSeconds: 900 },
+  'files.remove': { retryLimit: 11, retryDelay: 5, expireInSeconds: 60 },
   'picture.resize': { retryLimit: 11, retryDelay: 5, expireInSeconds: 180 },
 };
 

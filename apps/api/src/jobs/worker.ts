@@ -15,7 +15,14 @@ export type Handlers = Partial<Record<JobName, Handler>>;
 
 export type Work = { boss: PgBoss; server: Server; logger: pino.Logger; handlers: Handlers };
 
-const NAMES: readonly JobName[] = ['mail.send', 'chart.build', 'photo.resize', 'picture.resize', 'log.read'];
+const NAMES: readonly JobName[] = [
+  'mail.send',
+  'chart.build',
+  'photo.resize',
+  'picture.resize',
+  'files.remove',
+  'log.read',
+];
 
 /** Nothing of these outlasts its being done: a mail holds an address and a secret link. */
 const FORGOTTEN: ReadonlySet<JobName> = new Set<JobName>(['mail.send']);

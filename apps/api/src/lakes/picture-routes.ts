@@ -6,7 +6,7 @@ import {
   LakePictureView,
 } from '@mereward/shared/lakes/picture-contract';
 import type { Request, Response } from 'express';
-import { pictureFile, pictureFolder } from '../files/file-key';
+import { pictureFile } from '../files/file-key';
 import { serveFile } from '../files/serve-file';
 import { fileStoreOf } from '../files/store';
 import { parse } from '../http/parse';
@@ -95,14 +95,9 @@ export const pictureRoutes: Route[] = [
     },
     (ctx, { id, body }) => fixPicture(ctx, id('pictureId'), body),
   ),
-  raw(
+  deed(
     { method: 'delete', path: '/pictures/:pictureId', summary: 'Take a picture away', signIn },
-    async (req, res) => {
-      const id = idIn(req, 'pictureId');
-      await inTransaction(req, (ctx) => removePicture(ctx, id));
-      await fileStoreOf(serverOf(req).config).removeFolder(pictureFolder(id));
-      res.status(204).end();
-    },
+    (ctx, { id }) => removePicture(ctx, id('pictureId')),
   ),
   picture('small.jpg'),
   picture('large.jpg'),

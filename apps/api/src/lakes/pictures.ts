@@ -11,7 +11,7 @@ import { placedPicture } from '@mereward/shared/lakes/picture-placing';
 import { Problem, type ProblemError } from '@mereward/shared/problems/problem';
 import { createHash } from 'node:crypto';
 import { accountOf, type Ctx } from '../ctx';
-import { pictureFile } from '../files/file-key';
+import { pictureFile, pictureFolder } from '../files/file-key';
 import { photoFault } from '../files/photo-fault';
 import type { FileStore } from '../files/store';
 import { allowOnly, notFound } from '../http/deny';
@@ -168,8 +168,9 @@ function refusePoints(errors: ProblemError[]): void {
   });
 }
 
-/** Takes a picture away. Its files are removed by the caller once this is committed. */
+/** Takes a picture away, and its files once this is committed. */
 export async function removePicture(ctx: Ctx, pictureId: string): Promise<void> {
   await findPicture(ctx, pictureId);
   await ctx.tx.delete(LakePicture, { id: pictureId });
+  await ctx.jobs.send(ctx.tx, 'files.remove', { folder: pictureFolder(pictureId) });
 }
