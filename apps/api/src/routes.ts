@@ -3,6 +3,7 @@ import { bookingRoutes } from './bookings/routes';
 import { disagreementRoutes } from './charts/disagreement-routes';
 import { paperRoutes } from './charts/paper-routes';
 import { chartRoutes } from './charts/routes';
+import { tellingRoutes } from './charts/telling-routes';
 import { fisheryRoutes } from './fisheries/routes';
 import { fileRoutes } from './files/routes';
 import type { Route } from './http/route';
@@ -29,5 +30,6 @@ export const routes: readonly Route[] = [
   ...logRoutes,
   ...chartRoutes,
   ...paperRoutes,
+  ...tellingRoutes,
   ...disagreementRoutes,
 ];

@@ -12,18 +12,17 @@ import {
   type ReportedPlace,
 } from '@mereward/shared/charts/reported-evidence';
 import { countWords, stickWords } from '@mereward/shared/charts/spot-words';
-import { outlineInPlane } from '@mereward/shared/geometry/outline';
 import { Problem } from '@mereward/shared/problems/problem';
-import type { CastSite, Refusal } from '@mereward/shared/surveys/cast-site';
-import { stanceSigmaM } from '@mereward/shared/surveys/error-budget';
+import type { Refusal } from '@mereward/shared/surveys/cast-site';
 import { civilDay, dayWords } from '@mereward/shared/time/civil-day';
 import type { EntityManager } from 'typeorm';
 import { accountOf, type Ctx } from '../ctx';
 import { notFound } from '../http/deny';
-import { findPeg, originOfLake } from '../lakes/found';
+import { findPeg } from '../lakes/found';
 import { isMember } from '../lakes/policy';
 import { runningTicket } from '../lakes/running-ticket';
 import { insertOnce, mustRepeat } from '../repeat';
+import { siteOf } from './asked-site';
 import { sightOf } from './layers';
 
 /** Somebody who means well tells of a few places a day; past this it is a slip or a nuisance. */
@@ -167,29 +166,4 @@ async function seenSpot(ctx: Ctx, { peg, lake }: Ground, spotId: string): Promis
   if (!spot || !sight.sees.spots)
     refuse('/at/spotId', 'There is no such spot at this peg', 'Tell the place by wraps and mark instead.');
   return spot;
-}
-
-function siteOf({ peg, lake }: Ground, mark: Mark | null): CastSite {
-  const origin = originOfLake(lake);
-  const { details } = peg;
-  return {
-    origin,
-    outline: outlineInPlane(origin, lake.details.outline),
-    stance: {
-      place: details.origin,
-      sigmaM: stanceSigmaM(details.originFixedBy),
-      originMarked: details.originMarked,
-    },
-    mark: mark && {
-      name: mark.details.name,
-      place: mark.details.position,
-      sigmaM: mark.details.sigmaM,
-      permanence: mark.details.permanence,
-      ofThisLake: true,
-    },
-    gauge: null,
-    observedAt: '',
-    lead: null,
-    earlier: [],
-  };
 }

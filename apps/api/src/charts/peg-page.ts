@@ -3,9 +3,11 @@ import { ageWords } from '@mereward/shared/charts/chart-age';
 import { chartCaution, EMERGENCY, overheadCaution } from '@mereward/shared/charts/cautions';
 import type { LayerNotes, PegPageView, SpotView } from '@mereward/shared/charts/contract';
 import { RIG_CAUTION } from '@mereward/shared/charts/presentation';
-import type { EntityManager } from 'typeorm';
+import { toPlane } from '@mereward/shared/geometry/plane';
+import { In, type EntityManager } from 'typeorm';
 import type { Ctx } from '../ctx';
 import { photosOf } from '../files/queries';
+import { placeWater, watersOf } from '../lakes/peg-waters';
 import { pegDetailsFor } from '../lakes/queries';
 import { layersOf } from './chart-layers';
 import { changesFor } from './chart-view';
@@ -15,6 +17,7 @@ import { spotView } from './spot-view';
 
 /** A page stays light enough for one bar of signal: spots past this many are left to the chart. */
 const MOST_SPOTS = 12;
+const MOST_NEIGHBOURS = 4; // without their sections, which weigh most
 
 /** What an angler reads of a peg before coming, within what this reader may see. The card is printed from the same. */
 export async function pegPage(ctx: Ctx, pegId: string): Promise<PegPageView> {
@@ -54,8 +57,7 @@ export async function pegPage(ctx: Ctx, pegId: string): Promise<PegPageView> {
           }
         : null,
     levelNow: ground.levelNow,
-    spots: sight.sees.spots ? await spotsOf(ctx.tx, ground) : null,
-    neighbourSpots: null,
+    ...(sight.sees.spots ? await spotsOf(ctx.tx, ground) : { spots: null, neighbourSpots: null }),
     extract: pegExtract(ground),
     layerNotes: notesOf(ground),
     cautions: cautionsOf(ground),
@@ -67,15 +69,34 @@ export async function pegPage(ctx: Ctx, pegId: string): Promise<PegPageView> {
   };
 }
 
-async function spotsOf(tx: EntityManager, ground: PegGround): Promise<SpotView[]> {
-  const { chart, peg } = ground;
-  const spots = await tx.find(Spot, {
-    where: { pegId: peg.id },
-    order: { createdAt: 'ASC', id: 'ASC' },
-    take: MOST_SPOTS,
-  });
+type Spots = Pick<PegPageView, 'spots' | 'neighbourSpots'>;
+
+/** The peg's own spots, and those of other pegs that lie in its water, all as reached from here. */
+async function spotsOf(tx: EntityManager, ground: PegGround): Promise<Spots> {
+  const { chart, peg, lake } = ground;
+  const waters = await watersOf(tx, lake);
   const open = chart && { chart, layers: layersOf(chart.content) };
-  return spots.map((spot) => spotView(ground, open, spot)).filter((view) => view !== null);
+  const all = await tx.find(Spot, {
+    where: { pegId: In(waters.pegs.map(({ id }) => id)) },
+    order: { createdAt: 'ASC', id: 'ASC' },
+  });
+  const viewOf = (spot: Spot): SpotView | null => {
+    const view = spotView(ground, open, spot);
+    return view && { ...view, water: waterOf(spot) };
+  };
+  const waterOf = (spot: Spot) => placeWater(waters, peg.id, toPlane(ground.origin, spot.details.position));
+  const own = all.filter((spot) => spot.pegId === peg.id).slice(0, MOST_SPOTS);
+  const theirs = all.filter((spot) => spot.pegId !== peg.id && waterOf(spot).own).slice(0, MOST_NEIGHBOURS);
+  return {
+    spots: own.map(viewOf).filter((view) => view !== null),
+    neighbourSpots: theirs.flatMap((spot) => {
+      const [view, of] = [viewOf(spot), waters.pegs.find(({ id }) => id === spot.pegId)];
+      if (!view || !of) return [];
+      return [
+        { peg: { id: of.id, number: of.number, name: of.details.name }, spot: { ...view, section: null } },
+      ];
+    }),
+  };
 }
 
 const NO_CHART = 'No chart of this water is published yet.';

@@ -9,7 +9,7 @@ import type { BuiltSounding, BuiltVisit } from './built';
 import type { PegGround } from './peg-chart';
 
 /** Taken where nothing was surveyed yet: twelve-foot sticks read to the rod tip, rod level. Common practice. */
-const USUAL_KIT: SpotKit = {
+export const USUAL_KIT: SpotKit = {
   stickSpacingM: USUAL_SPACING_M,
   stickMeasured: 'along_line',
   stickDiameterM: null,
@@ -88,7 +88,7 @@ function lineFor(rangeM: number, kit: SpotKit, depthM: number): Line | null {
 type Aimed = { from: LonLat; bearingDeg: number; aimedAt: string | null };
 
 /** The mark the cast was aimed at, else the one nearest to the line. */
-function markFor(marks: readonly Mark[], { from, bearingDeg, aimedAt }: Aimed): Reach['mark'] {
+export function markFor(marks: readonly Mark[], { from, bearingDeg, aimedAt }: Aimed): Reach['mark'] {
   const catalogued = marks.map(({ id, code, details }) => ({
     id,
     code,

@@ -7,7 +7,7 @@ import { PRESENTATION } from '@mereward/shared/charts/presentation';
 import { spotWords } from '@mereward/shared/charts/spot-words';
 import { toPlane, type Point } from '@mereward/shared/geometry/plane';
 import type { Bottom } from '@mereward/shared/surveys/contract';
-import type { BuiltSounding, BuiltVisit } from './built';
+import type { Built, BuiltSounding, BuiltVisit } from './built';
 import type { PegChart, PegGround } from './peg-chart';
 import { castToQuote } from './spot-cast';
 import { reachOf, type Reach } from './spot-reach';
@@ -21,7 +21,11 @@ const SECTION_POINTS = 40;
 export type OpenChart = { chart: PegChart; layers: ChartLayers };
 
 /** A spot as this reader may see it; the layers kept from them are left out one by one. */
-export function spotView(ground: PegGround, open: OpenChart | null, spot: Spot): SpotView | null {
+export function spotView(
+  ground: PegGround,
+  open: OpenChart | null,
+  spot: Spot,
+): Omit<SpotView, 'water'> | null {
   const place = toPlane(ground.origin, spot.details.position);
   const cast = open
     ? castToQuote(open.chart.content.built.soundings, place, spot.details.usableRadiusM)
@@ -50,7 +54,6 @@ export function spotView(ground: PegGround, open: OpenChart | null, spot: Spot):
     words: wordsOf(ground, reach, shown),
     section: open && sees.depth ? sectionOf(ground, open, reach) : null,
     presentation: shown.bottom === null ? null : PRESENTATION[shown.bottom],
-    water: null,
     version: spot.version,
   };
 }
@@ -72,14 +75,20 @@ function visitOf(
   pegId: string,
 ): BuiltVisit | null {
   if (cast) return built.visits.find((visit) => visit.id === cast.visitId) ?? null;
-  const newest = [...built.visits].sort((a, b) =>
-    a.day < b.day ? 1 : a.day > b.day ? -1 : a.id < b.id ? -1 : 1,
-  );
-  const here = new Set(built.soundings.filter((each) => each.pegId === pegId).map((each) => each.visitId));
+  return newestVisit(built, pegId);
+}
+
+/** The newest visit that cast from a peg, else (or for no peg) the newest of all. */
+export function newestVisit(
+  { visits, soundings }: Pick<Built, 'visits' | 'soundings'>,
+  pegId: string | null,
+): BuiltVisit | null {
+  const newest = [...visits].sort((a, b) => (a.day < b.day ? 1 : a.day > b.day ? -1 : a.id < b.id ? -1 : 1));
+  const here = new Set(soundings.filter((each) => each.pegId === pegId).map((each) => each.visitId));
   return newest.find((visit) => here.has(visit.id)) ?? newest[0] ?? null;
 }
 
-type Quoted = Pick<
+export type Quoted = Pick<
   SpotView,
   | 'depthM'
   | 'depthSigmaM'
@@ -106,7 +115,7 @@ const UNSURVEYED: Quoted = {
 
 type Source = { chart: PegChart | null; cast: BuiltSounding | null; reading: ChartReading | null };
 
-function quoted({ chart, cast, reading }: Source): Quoted {
+export function quoted({ chart, cast, reading }: Source): Quoted {
   if (chart && cast)
     return {
       depthM: cast.depthM,
@@ -138,7 +147,7 @@ function bottomOf({ cover, substrate }: ChartReading): { bottom: Bottom; confide
 }
 
 /** What of it this reader may see. Without depth and bottom there is nothing left to grade or date. */
-function within({ sight: { sees } }: PegGround, whole: Quoted): Quoted {
+export function within({ sight: { sees } }: PegGround, whole: Quoted): Quoted {
   if (!sees.depth && !sees.bottom) return UNSURVEYED;
   const depth = sees.depth
     ? {}

@@ -4,7 +4,7 @@ import { pointAlong, type Point } from '../geometry/point';
 import { signedAreaM2, type Outline } from '../geometry/polygon';
 import { columnXM, rowYM } from '../geometry/cell-frame';
 import {
-  canReach,
+  reachFrom,
   LAND,
   NOBODY,
   ownerAt,
@@ -75,8 +75,8 @@ test('of two drawn areas the last one wins, and what lies over land takes nothin
 
 test('reach is told condition by condition', () => {
   const peg = at(50, 0.3, { arcFromDeg: 340, arcToDeg: 20, reachM: 40 });
-  expect(canReach(pond, peg, { xM: 50, yM: 50 })).toEqual({ inArc: true, inRange: false, inSight: true });
-  expect(canReach(pond, peg, { xM: 80, yM: 10 })).toEqual({ inArc: false, inRange: true, inSight: true });
+  expect(reachFrom(pond, peg)({ xM: 50, yM: 50 })).toEqual({ inArc: true, inRange: false, inSight: true });
+  expect(reachFrom(pond, peg)({ xM: 80, yM: 10 })).toEqual({ inArc: false, inRange: true, inSight: true });
 });
 
 const lobed = fc
@@ -159,6 +159,6 @@ function expectSameArea(rings: readonly (readonly number[])[], areaM2: number, c
 test('a place seen along the shore is not blocked by the shore it stands on', () => {
   const stance = at(50, 0.3);
   for (const bearingDeg of [275, 300, 0, 60, 85]) {
-    expect(canReach(pond, stance, pointAlong(stance.at, bearingDeg, 40)).inSight).toBe(true);
+    expect(reachFrom(pond, stance)(pointAlong(stance.at, bearingDeg, 40)).inSight).toBe(true);
   }
 });

@@ -110,15 +110,15 @@ function takeInStrays(owner: Int16Array, { columns, cellM }: GridFrame): void {
 const commonest = (sides: ReadonlyMap<number, number>): number =>
   [...sides].sort(([a, m], [b, n]) => n - m || a - b)[0]![0];
 
-/** Could a line from this stance reach a place on the water, each condition by itself? */
-export function canReach(outline: Outline, peg: PegStance, place: Point) {
+export type Reachable = { inArc: boolean; inRange: boolean; inSight: boolean };
+
+/** Answers of places on the water whether a line from this stance could reach them, each condition by itself. */
+export function reachFrom(outline: Outline, peg: PegStance): (place: Point) => Reachable {
   const { x, y, reach2, inArc, sees } = casterOf(outline, peg);
-  const dx = place.xM - x;
-  const dy = place.yM - y;
-  return {
-    inArc: inArc(dx, dy),
-    inRange: dx * dx + dy * dy <= reach2,
-    inSight: sees(place.xM, place.yM),
+  return ({ xM, yM }) => {
+    const dx = xM - x;
+    const dy = yM - y;
+    return { inArc: inArc(dx, dy), inRange: dx * dx + dy * dy <= reach2, inSight: sees(xM, yM) };
   };
 }
 
