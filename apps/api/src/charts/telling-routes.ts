@@ -1,15 +1,20 @@
 import {
   CastAsked,
   CastReading,
+  ChangesAsked,
+  ChartChanges,
   ChartFeatures,
   NextCasts,
   SameSpotAsked,
   SameSpotView,
+  SimilarPegs,
   StandOutPatches,
 } from '@mereward/shared/charts/chart-answers';
 import { read, type Route } from '../http/route';
 import { castReading } from './cast-reading';
+import { changesSince } from './changes';
 import { sameSpotFrom } from './same-spot-view';
+import { similarPegs } from './similar-pegs';
 import { chartFeatures, chartNextCasts, chartPatches } from './tellings';
 
 export const tellingRoutes: Route[] = [
@@ -64,5 +69,26 @@ export const tellingRoutes: Route[] = [
       answer: SameSpotView,
     },
     (ctx, { id, query }) => sameSpotFrom(ctx, id('pegId'), query),
+  ),
+  read(
+    {
+      method: 'get',
+      path: '/charts/:chartId/changes',
+      summary: 'What really changed since an earlier version',
+      signIn: 'open',
+      query: ChangesAsked,
+      answer: ChartChanges,
+    },
+    (ctx, { id, query }) => changesSince(ctx, id('chartId'), query),
+  ),
+  read(
+    {
+      method: 'get',
+      path: '/pegs/:pegId/similar',
+      summary: 'Pegs most like this one',
+      signIn: 'open',
+      answer: SimilarPegs,
+    },
+    (ctx, { id }) => similarPegs(ctx, id('pegId')),
   ),
 ];
