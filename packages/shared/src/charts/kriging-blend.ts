@@ -1,5 +1,6 @@
 import type { KrigingSetup } from './kriging-setup';
 import { requireDrift } from './kriging-setup';
+import { localCovariances } from './local-covariance';
 import { LocalSystem } from './local-system';
 import { OctantSearch } from './octant-search';
 import type { SampleIndex } from './sample-index';
@@ -29,7 +30,7 @@ export function krigeBlended(setup: KrigingSetup, targets: Targets): Float64Arra
   const sideM = patchSideM(index);
   const binned = binTargets(targets, sideM);
   const members = new Members(index, sideM);
-  const local = new LocalSystem(setup, Math.max(MOST_MEMBERS, members.most));
+  const local = new LocalSystem(setup, MOST_MEMBERS, localCovariances(setup.variogram, index));
   const valuesM = new Float64Array(targets.xM.length);
   for (let row = 0; row <= binned.rows; row++) {
     for (let column = 0; column <= binned.columns; column++) {

@@ -1,8 +1,11 @@
 import { requireDrift } from './kriging-setup';
 import type { KrigingSetup, Prediction } from './kriging-setup';
+import { localCovariances } from './local-covariance';
 import { LocalSystem } from './local-system';
+import { NearestSet } from './nearest-set';
 import { OctantSearch } from './octant-search';
-import { indexSamples, NearestSearch } from './sample-index';
+import { indexSamples } from './sample-index';
+import type { SampleIndex } from './sample-index';
 import type { SamplePoints, Targets } from './sample-points';
 
 export type NeighbourhoodOptions = {
@@ -29,6 +32,7 @@ export function krigeNeighbourhood(
   const search = searchOf(setup.samples, options);
   return krigeEach(setup, targets, {
     most: search.most,
+    index: search.index,
     of: (t) => {
       search.find(targets, t);
       return search;
@@ -61,6 +65,7 @@ export function krigeRows(setup: KrigingSetup, targets: Targets, rows: Neighbour
   const { most, ids, found } = rows;
   return krigeEach(setup, targets, {
     most,
+    index: indexSamples(setup.samples.xM, setup.samples.yM),
     of: (t) => ({ ids: ids.subarray(t * most, t * most + found[t]!), found: found[t]! }),
   });
 }
@@ -70,13 +75,13 @@ type Found = { readonly ids: Int32Array; readonly found: number };
 function krigeEach(
   setup: KrigingSetup,
   targets: Targets,
-  neighbours: { most: number; of: (t: number) => Found },
+  neighbours: { most: number; index: SampleIndex; of: (t: number) => Found },
 ): Prediction {
   requireDrift(setup, targets);
   const count = targets.xM.length;
   const valuesM = new Float64Array(count);
   const varianceM2 = new Float64Array(count);
-  const local = new LocalSystem(setup, neighbours.most);
+  const local = new LocalSystem(setup, neighbours.most, localCovariances(setup.variogram, neighbours.index));
   for (let t = 0; t < count; t++) {
     const { ids, found } = neighbours.of(t);
     local.gather(ids, found);
@@ -92,10 +97,11 @@ function searchOf({ xM, yM }: SamplePoints, options: NeighbourhoodOptions) {
   const most = Math.min(options.neighbours, xM.length - (leaveOneOut === true ? 1 : 0));
   if (most < 1) throw new RangeError('Kriging needs at least one neighbour.');
   const index = indexSamples(xM, yM);
-  const search = options.by === 'octant' ? new OctantSearch(index, most) : new NearestSearch(index, most);
+  const search = options.by === 'octant' ? new OctantSearch(index, most) : new NearestSet(index, most);
   if (leaveNearOut !== undefined) search.apartBelow = leaveNearOut.count;
   return {
     most,
+    index,
     ids: search.ids,
     found: 0,
     find(targets: Targets, t: number): void {

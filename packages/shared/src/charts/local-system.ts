@@ -1,6 +1,6 @@
 import { priorVarianceM2 } from './kriging-setup';
 import type { KrigingSetup } from './kriging-setup';
-import { covariancesInPlace } from './variogram';
+import type { FillCovariances } from './local-covariance';
 
 /**
  * One neighbourhood's system: packed lower Cholesky factor and the solved vectors. All buffers are reused. The factor is kept
@@ -10,29 +10,35 @@ export class LocalSystem {
   valueM = 0;
   varianceM2 = 0;
   private order = 0;
-  private dualOrder = 0; // neighbours whose dual weights `residual` holds
   private readonly ids: Int32Array;
   private readonly sorted: Int32Array;
   private readonly factor: Float64Array; // row i at i (i + 1) / 2; the diagonal holds reciprocals
   private readonly solvedOnes: Float64Array;
   private readonly solvedDrift: Float64Array;
-  private readonly residual: Float64Array; // L⁻¹ (z − F β)
+  private readonly solvedValues: Float64Array; // L⁻¹ z
+  private readonly dual: Float64Array; // K⁻¹ (z − F β), once asked for
   private readonly row: Float64Array;
-  private trendInverse = [0, 0, 0];
-  private coefficients = [0, 0];
+  private trendKnown = false; // of the factor held
+  private constant = 0;
+  private slope = 0;
+  private inverseOo = 0; // (Fᵀ K⁻¹ F)⁻¹
+  private inverseOd = 0;
+  private inverseDd = 0;
   private readonly prior: number;
   private readonly driftM: Float64Array | undefined;
 
   constructor(
     private readonly setup: KrigingSetup,
     most: number,
+    private readonly fill: FillCovariances,
   ) {
     this.ids = new Int32Array(most).fill(-1);
     this.sorted = new Int32Array(most);
     this.factor = new Float64Array((most * (most + 1)) / 2);
     this.solvedOnes = new Float64Array(most);
     this.solvedDrift = new Float64Array(most);
-    this.residual = new Float64Array(most);
+    this.solvedValues = new Float64Array(most);
+    this.dual = new Float64Array(most);
     this.row = new Float64Array(most);
     this.prior = priorVarianceM2(setup);
     this.driftM = setup.driftM;
@@ -55,20 +61,18 @@ export class LocalSystem {
     if (same) return;
     ids.set(sorted);
     this.order = count;
-    this.fillCovariances();
+    this.fillCovariances(0);
     let jitterM2 = 0;
     while (!this.factorise()) {
       jitterM2 = jitterM2 === 0 ? 1e-10 * this.prior : jitterM2 * 100;
       if (!(jitterM2 <= this.prior))
         throw new RangeError('Samples at one place with no error stated cannot be kriged.');
-      this.fillCovariances();
-      for (let i = 0; i < count; i++)
-        this.factor[(i * (i + 3)) / 2] = this.factor[(i * (i + 3)) / 2]! + jitterM2;
+      this.fillCovariances(jitterM2);
     }
-    this.solveTrend();
+    this.trendKnown = false;
   }
 
-  private fillCovariances(): void {
+  private fillCovariances(jitterM2: number): void {
     const { factor, ids, order } = this;
     const { xM, yM, errorVarianceM2 } = this.setup.samples;
     let p = 0;
@@ -81,11 +85,11 @@ export class LocalSystem {
         factor[p] = dx * dx + dy * dy;
       }
     }
-    covariancesInPlace(factor, p, this.setup.variogram);
-    const { nuggetM2 } = this.setup.variogram;
+    this.fill(factor, p);
+    const addedM2 = this.setup.variogram.nuggetM2 + jitterM2;
     for (let i = 0; i < order; i++) {
       const diagonal = (i * (i + 3)) / 2;
-      factor[diagonal] = factor[diagonal]! + nuggetM2 + errorVarianceM2[ids[i]!]!;
+      factor[diagonal] = factor[diagonal]! + addedM2 + errorVarianceM2[ids[i]!]!;
     }
   }
 
@@ -96,17 +100,35 @@ export class LocalSystem {
     for (; i + 1 < order; i += 2) {
       const first = (i * (i + 1)) / 2;
       const second = first + i + 1;
-      for (let j = 0, rowJ = 0; j < i; rowJ += ++j) {
-        let a = factor[first + j]!;
-        let b = factor[second + j]!;
+      let j = 0;
+      let rowJ = 0;
+      // Two columns at a time as well: every factor read serves two products. i is even, so none is left over.
+      for (; j < i; j += 2) {
+        const rowK = rowJ + j + 1;
+        let a0 = factor[first + j]!;
+        let b0 = factor[second + j]!;
+        let a1 = factor[first + j + 1]!;
+        let b1 = factor[second + j + 1]!;
         for (let k = 0; k < j; k++) {
-          const above = factor[rowJ + k]!;
-          a -= factor[first + k]! * above;
-          b -= factor[second + k]! * above;
+          const p = factor[first + k]!;
+          const q = factor[second + k]!;
+          const u = factor[rowJ + k]!;
+          const v = factor[rowK + k]!;
+          a0 -= p * u;
+          b0 -= q * u;
+          a1 -= p * v;
+          b1 -= q * v;
         }
         const scale = factor[rowJ + j]!;
-        factor[first + j] = a * scale;
-        factor[second + j] = b * scale;
+        a0 *= scale;
+        b0 *= scale;
+        const cross = factor[rowK + j]!;
+        const scaleK = factor[rowK + j + 1]!;
+        factor[first + j] = a0;
+        factor[second + j] = b0;
+        factor[first + j + 1] = (a1 - a0 * cross) * scaleK;
+        factor[second + j + 1] = (b1 - b0 * cross) * scaleK;
+        rowJ = rowK + j + 2;
       }
       let pivotA = factor[first + i]!;
       let cross = factor[second + i]!;
@@ -146,50 +168,78 @@ export class LocalSystem {
     return true;
   }
 
-  /** Solves L x = x for two vectors in one pass over L. */
-  private forwardPair(x: Float64Array, y: Float64Array): void {
+  /** Solves L x = x in one pass over L for the covariances of a target, the ones and the samples' values. */
+  private forwardThree(x: Float64Array, y: Float64Array, z: Float64Array): void {
     const { factor, order } = this;
     for (let i = 0, row = 0; i < order; row += ++i) {
       let a = x[i]!;
       let b = y[i]!;
+      let c = z[i]!;
       for (let k = 0; k < i; k++) {
         const l = factor[row + k]!;
         a -= l * x[k]!;
         b -= l * y[k]!;
+        c -= l * z[k]!;
       }
       const scale = factor[row + i]!;
       x[i] = a * scale;
       y[i] = b * scale;
+      z[i] = c * scale;
     }
   }
 
-  private solveTrend(): void {
-    const { ids, order, solvedOnes, solvedDrift, residual } = this;
+  private forwardOne(x: Float64Array): void {
+    const { factor, order } = this;
+    for (let i = 0, row = 0; i < order; row += ++i) {
+      let sum = x[i]!;
+      for (let k = 0; k < i; k++) sum -= factor[row + k]! * x[k]!;
+      x[i] = sum * factor[row + i]!;
+    }
+  }
+
+  /** Solves for `row`, and with it for what the trend needs when the factor is new. */
+  private forward(): void {
+    const { ids, order, row, solvedOnes, solvedValues, solvedDrift, driftM } = this;
+    if (this.trendKnown) {
+      this.forwardOne(row);
+      return;
+    }
+    const { valueM } = this.setup.samples;
     for (let i = 0; i < order; i++) {
       solvedOnes[i] = 1;
-      solvedDrift[i] = this.driftM === undefined ? 0 : this.driftM[ids[i]!]!;
-      residual[i] = this.setup.samples.valueM[ids[i]!]!;
+      solvedValues[i] = valueM[ids[i]!]!;
     }
-    this.forwardPair(solvedOnes, residual);
-    if (this.driftM !== undefined) this.forwardPair(solvedDrift, this.row); // the row is free to be overwritten
+    this.forwardThree(row, solvedOnes, solvedValues);
+    if (driftM !== undefined) {
+      for (let i = 0; i < order; i++) solvedDrift[i] = driftM[ids[i]!]!;
+      this.forwardOne(solvedDrift);
+    }
+    this.fitTrend();
+    this.trendKnown = true;
+  }
+
+  /** Generalised least squares of the samples on 1 and the drift. */
+  private fitTrend(): void {
+    const { solvedOnes, solvedDrift, solvedValues } = this;
     const oo = this.dotOf(solvedOnes, solvedOnes);
+    const oz = this.dotOf(solvedOnes, solvedValues);
+    this.constant = oz / oo;
+    this.slope = 0;
+    this.inverseOo = 1 / oo;
+    this.inverseOd = 0;
+    this.inverseDd = 0;
+    if (this.driftM === undefined) return;
     const od = this.dotOf(solvedOnes, solvedDrift);
     const dd = this.dotOf(solvedDrift, solvedDrift);
-    const oz = this.dotOf(solvedOnes, residual);
-    const dz = this.dotOf(solvedDrift, residual);
+    const dz = this.dotOf(solvedDrift, solvedValues);
     const determinant = oo * dd - od * od;
     // A drift that is level over this neighbourhood says nothing here: it falls back to ordinary kriging.
-    if (this.driftM === undefined || !(determinant > 1e-9 * oo * dd)) {
-      this.trendInverse = [1 / oo, 0, 0];
-      this.coefficients = [oz / oo, 0];
-    } else {
-      this.trendInverse = [dd / determinant, -od / determinant, oo / determinant];
-      this.coefficients = [(dd * oz - od * dz) / determinant, (oo * dz - od * oz) / determinant];
-    }
-    const [constant, slope] = [this.coefficients[0]!, this.coefficients[1]!];
-    for (let i = 0; i < order; i++) {
-      residual[i] = residual[i]! - constant * solvedOnes[i]! - slope * solvedDrift[i]!;
-    }
+    if (!(determinant > 1e-9 * oo * dd)) return;
+    this.inverseOo = dd / determinant;
+    this.inverseOd = -od / determinant;
+    this.inverseDd = oo / determinant;
+    this.constant = (dd * oz - od * dz) / determinant;
+    this.slope = (oo * dz - od * oz) / determinant;
   }
 
   private dotOf(a: Float64Array, b: Float64Array): number {
@@ -199,37 +249,39 @@ export class LocalSystem {
   }
 
   /**
-   * Turns the solved residual into dual weights, after which `valueAt` reads the surface of these neighbours anywhere by one
-   * pass over them and `predict` may not be used until the next `gather`.
+   * Solves for the dual weights, after which `valueAt` reads the surface of these neighbours anywhere by one pass over them,
+   * until the next `gather`.
    */
   toDual(): void {
-    const { residual, factor, order } = this;
+    const { dual, factor, order, row, solvedOnes, solvedDrift, solvedValues } = this;
+    row.fill(0);
+    this.forward();
+    for (let i = 0; i < order; i++)
+      dual[i] = solvedValues[i]! - this.constant * solvedOnes[i]! - this.slope * solvedDrift[i]!;
     for (let i = order - 1; i >= 0; i--) {
-      const row = (i * (i + 1)) / 2;
-      const value = residual[i]! * factor[row + i]!;
-      residual[i] = value;
-      for (let k = 0; k < i; k++) residual[k] = residual[k]! - value * factor[row + k]!;
+      const start = (i * (i + 1)) / 2;
+      const value = dual[i]! * factor[start + i]!;
+      dual[i] = value;
+      for (let k = 0; k < i; k++) dual[k] = dual[k]! - value * factor[start + k]!;
     }
-    this.order = 0;
-    this.dualOrder = order;
   }
 
   valueAt(x: number, y: number, drift: number): number {
-    const { ids, dualOrder, row, residual } = this;
+    const { ids, order, row, dual } = this;
     const { xM, yM } = this.setup.samples;
-    for (let i = 0; i < dualOrder; i++) {
+    for (let i = 0; i < order; i++) {
       const dx = xM[ids[i]!]! - x;
       const dy = yM[ids[i]!]! - y;
       row[i] = dx * dx + dy * dy;
     }
-    covariancesInPlace(row, dualOrder, this.setup.variogram);
-    let value = this.coefficients[0]! + this.coefficients[1]! * drift;
-    for (let i = 0; i < dualOrder; i++) value += row[i]! * residual[i]!;
+    this.fill(row, order);
+    let value = this.constant + this.slope * drift;
+    for (let i = 0; i < order; i++) value += row[i]! * dual[i]!;
     return value;
   }
 
   predict(x: number, y: number, drift: number): void {
-    const { ids, order, row, factor, solvedOnes, solvedDrift, residual } = this;
+    const { ids, order, row, solvedOnes, solvedDrift, solvedValues } = this;
     const { xM, yM } = this.setup.samples;
     let coincident = -1;
     for (let i = 0; i < order; i++) {
@@ -239,35 +291,32 @@ export class LocalSystem {
       row[i] = h2;
       if (h2 === 0) coincident = i;
     }
-    covariancesInPlace(row, order, this.setup.variogram);
+    this.fill(row, order);
     if (coincident >= 0 && this.setup.nuggetIs === 'field') {
       row[coincident] = row[coincident]! + this.setup.variogram.nuggetM2;
     }
+    this.forward();
     let known = 0;
     let ones = 0;
     let drifts = 0;
-    let value = 0;
-    for (let i = 0, start = 0; i < order; start += ++i) {
-      let sum = row[i]!;
-      for (let k = 0; k < i; k++) sum -= factor[start + k]! * row[k]!;
-      const u = sum * factor[start + i]!;
-      row[i] = u;
+    let values = 0;
+    for (let i = 0; i < order; i++) {
+      const u = row[i]!;
       known += u * u;
       ones += u * solvedOnes[i]!;
       drifts += u * solvedDrift[i]!;
-      value += u * residual[i]!;
+      values += u * solvedValues[i]!;
     }
     const shortOne = 1 - ones;
     const shortDrift = drift - drifts;
-    const [a, b, c] = [this.trendInverse[0]!, this.trendInverse[1]!, this.trendInverse[2]!];
-    this.valueM = value + this.coefficients[0]! + this.coefficients[1]! * drift;
+    this.valueM = values + this.constant * shortOne + this.slope * shortDrift;
     this.varianceM2 = Math.max(
       0,
       this.prior -
         known +
-        a * shortOne * shortOne +
-        2 * b * shortOne * shortDrift +
-        c * shortDrift * shortDrift,
+        this.inverseOo * shortOne * shortOne +
+        2 * this.inverseOd * shortOne * shortDrift +
+        this.inverseDd * shortDrift * shortDrift,
     );
   }
 }
