@@ -47,7 +47,8 @@ export function krigingComparison(withPeers: boolean): Comparison & { stop: () =
   };
 }
 
-function startGstat(samples: ReturnType<typeof barredSoundings>): Peer | null {
+/** gstat kept running over these soundings: each round kriges the 200 × 200 cells from 24 neighbours. */
+export function startGstat(samples: ReturnType<typeof barredSoundings>): Peer | null {
   if (!runs('Rscript', ['-e', 'library(gstat)'])) return null;
   const rows = Array.from(samples.xM, (x, i) => `${x},${samples.yM[i]},${samples.valueM[i]}`);
   const file = join(mkdtempSync(join(tmpdir(), 'bench-')), 'soundings.csv');

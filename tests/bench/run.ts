@@ -8,17 +8,20 @@ import { krigingComparison } from './kriging.bench';
 import { comparisonLine } from './measure';
 import { benchPhotos } from './photos';
 import { benchServer } from './server';
+import { surfaceLines } from './surfaces.bench';
 import { tinComparison } from './tin.bench';
+import { twoWorkersComparison } from './two-workers.bench';
 
 const withPeers = process.argv.includes('--peers');
 const say = (line: string) => process.stdout.write(`${line}\n`);
 
 say(await comparisonLine(isobathComparison()));
-for (const start of [tinComparison, krigingComparison]) {
+for (const start of [tinComparison, krigingComparison, twoWorkersComparison]) {
   const comparison = start(withPeers);
   say(await comparisonLine(comparison));
   comparison.stop();
 }
+for (const line of surfaceLines(withPeers)) say(line);
 say(await comparisonLine(chartComparison()));
 say(await comparisonLine(previewComparison()));
 for (const line of await benchAuth()) say(line);

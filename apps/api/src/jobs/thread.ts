@@ -14,7 +14,7 @@ export function threadEntry(name: ThreadName): { url: URL; execArgv: string[] } 
 }
 
 /** A module that lets a thread read TypeScript. The loader's own entry does that for the main thread alone. */
-function readsSource(): string {
+export function readsSource(): string {
   const tsx = createRequire(fileURLToPath(import.meta.url)).resolve('tsx/package.json');
   const from = JSON.stringify(new URL('./dist/esm/api/index.mjs', pathToFileURL(tsx)).href);
   return `data:text/javascript,${encodeURIComponent(`import { register } from ${from}; register();`)}`;
