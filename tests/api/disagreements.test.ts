@@ -248,6 +248,11 @@ describe('deciding', () => {
     const remeasured = { day: DAY, depthM: 1.3 };
     expect((await decide(here.people.office, id, { ...ACCEPT, remeasured })).status).toBe(200);
     const late = await sent();
+    const without = { ...ACCEPT, remeasured: { day: DAY, depthM: null } };
+    const bare = await decide(here.people.office, late, without);
+    expect(problem(bare.body).errors?.[0]?.pointer).toBe('/remeasured/depthM');
+    const snag = await sent({}, { depthM: null, depthBy: null, snag: true });
+    expect((await decide(here.people.office, snag, without)).body).toMatchObject({ grade: 'B' });
     const early = { day: '2027-07-01', depthM: 1.3 };
     const refused = await decide(here.people.office, late, { ...ACCEPT, remeasured: early });
     expect(problem(refused.body).errors?.[0]?.pointer).toBe('/remeasured/day');
@@ -255,36 +260,42 @@ describe('deciding', () => {
 });
 
 describe('an accepted report', () => {
-  test('leaves the published chart as it is and stands in the next one by its own grade', async () => {
-    const before = await sofia.get(`/charts/${chartId}`);
-    const point = await sent();
-    const touched = await sent({ at: { by: 'spot', spotId } }, { depthBy: 'lead_count' });
-    const declined = await sent();
-    const pattern = await sent({ at: { by: 'spot', spotId } }, { depthM: 4, depthBy: 'other' });
-    await decide(here.people.office, point, ACCEPT);
-    await decide(here.people.office, touched, ACCEPT);
-    await decide(here.people.office, declined, { decision: 'decline', reason: 'No.' });
-    await decide(here.people.office, pattern, { ...ACCEPT, remeasured: { day: DAY, depthM: 2.2 } });
-    expect((await sofia.get(`/charts/${chartId}`)).body).toEqual(before.body);
+  test(
+    'leaves the published chart as it is and stands in the next one by its own grade',
+    { timeout: 90_000 },
+    async () => {
+      const before = await sofia.get(`/charts/${chartId}`);
+      const point = await sent();
+      const touched = await sent({ at: { by: 'spot', spotId } }, { depthBy: 'lead_count' });
+      const declined = await sent();
+      const pattern = await sent({ at: { by: 'spot', spotId } }, { depthM: 4, depthBy: 'other' });
+      await decide(here.people.office, point, ACCEPT);
+      await decide(here.people.office, touched, ACCEPT);
+      await decide(here.people.office, declined, { decision: 'decline', reason: 'No.' });
+      await decide(here.people.office, pattern, { ...ACCEPT, remeasured: { day: DAY, depthM: 2.2 } });
+      expect((await sofia.get(`/charts/${chartId}`)).body).toEqual(before.body);
 
-    const joan = here.people.head_bailiff;
-    const draft = await draftedChart(server, { person: joan, lakeId: water.lake.id, visitIds: [visitId] });
-    const seen = ChartView.parse((await joan.get(`/charts/${draft}`)).body);
-    const gradeOf = (id: string) => seen.soundings?.find((sounding) => sounding.id === id)?.grade ?? null;
-    expect([point, touched, declined, pattern].map(gradeOf)).toEqual(['C', 'D', null, 'B']);
-    expect(seen.soundings?.find(({ id }) => id === point)?.depthM).toBeCloseTo(1.44, 9);
-    const review = ChartReview.parse((await joan.get(`/charts/${draft}/review`)).body);
-    expect(review.checks.find(({ key }) => key === 'built')?.state).toBe('passed');
-    expect((await listed(joan)).find(({ id }) => id === point)?.charts.map(({ id }) => id)).toContain(draft);
-    expect((await mine(sofia)).find(({ id }) => id === point)?.charts).toEqual([]); // a draft is the staff's own
+      const joan = here.people.head_bailiff;
+      const draft = await draftedChart(server, { person: joan, lakeId: water.lake.id, visitIds: [visitId] });
+      const seen = ChartView.parse((await joan.get(`/charts/${draft}`)).body);
+      const gradeOf = (id: string) => seen.soundings?.find((sounding) => sounding.id === id)?.grade ?? null;
+      expect([point, touched, declined, pattern].map(gradeOf)).toEqual(['C', 'D', null, 'B']);
+      expect(seen.soundings?.find(({ id }) => id === point)?.depthM).toBeCloseTo(1.44, 9);
+      const review = ChartReview.parse((await joan.get(`/charts/${draft}/review`)).body);
+      expect(review.checks.find(({ key }) => key === 'built')?.state).toBe('passed');
+      expect((await listed(joan)).find(({ id }) => id === point)?.charts.map(({ id }) => id)).toContain(
+        draft,
+      );
+      expect((await mine(sofia)).find(({ id }) => id === point)?.charts).toEqual([]); // a draft is the staff's own
 
-    const later = await sent();
-    await decide(here.people.office, later, ACCEPT);
-    const stale = ChartReview.parse((await joan.get(`/charts/${draft}/review`)).body);
-    expect(stale.checks.find(({ key }) => key === 'built')?.state).toBe('failed');
-  });
+      const later = await sent();
+      await decide(here.people.office, later, ACCEPT);
+      const stale = ChartReview.parse((await joan.get(`/charts/${draft}/review`)).body);
+      expect(stale.checks.find(({ key }) => key === 'built')?.state).toBe('failed');
+    },
+  );
 
-  test('moves the surface only from grade B up', async () => {
+  test('moves the surface only from grade B up', { timeout: 90_000 }, async () => {
     const joan = here.people.head_bailiff;
     const lakeId = water.lake.id;
     const drafted = async () => {

@@ -68,6 +68,13 @@ async function evidenceOf(
       `That day must lie between ${dayWords(row.day)} and today`,
       'Nothing was decided. Put the day right.',
     );
+  const { bottom, snag, weed } = row.told.found;
+  if (remeasured?.depthM === null && bottom === null && !snag && weed === null)
+    invalid(
+      '/remeasured/depthM',
+      'Only a depth was reported: say what depth staff found',
+      'Nothing was decided. Fill it in, or accept the report as it is.',
+    );
   const { level, words } = await dayLevel(tx, lake, day);
   if (level === null && remeasured !== null && remeasured.depthM !== null)
     invalid('/remeasured/day', words, 'Record the gauge board’s reading of that day first, then accept.');

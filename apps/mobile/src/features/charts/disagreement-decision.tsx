@@ -50,6 +50,9 @@ function Accept({ report, onLeave }: Part) {
     what: 'The depth',
   }).safeParse(depth);
   const fault = read.success ? undefined : read.error.issues[0]?.message;
+  const { bottom, snag, weed } = report.found;
+  const onlyDepth = bottom === null && !snag && weed === null;
+  const missing = again && onlyDepth && depth.trim() === '';
   const act = (): void => {
     if (!read.success) return;
     const depthM = read.data === null ? null : toMetres(read.data, unit);
@@ -68,12 +71,12 @@ function Accept({ report, onLeave }: Part) {
           <Field label="On which day" picker="date" value={day} onChange={setDay} />
           <Field
             label={`Depth staff found, ${unit}`}
-            hint="By float, of the water that day. It stands in place of the angler’s, as grade B. Leave it empty where only the bottom was felt again."
+            hint="By float, of the water that day. It stands in place of the angler’s, as grade B."
             keypad="decimal"
             value={depth}
             onChange={setDepth}
             error={fault}
-            optional
+            optional={!onlyDepth}
           />
         </>
       ) : null}
@@ -85,7 +88,7 @@ function Accept({ report, onLeave }: Part) {
           kind="main"
           busy={decide.isPending}
           busyLabel="Accepting…"
-          disabled={again && !read.success}
+          disabled={missing || (again && !read.success)}
           onPress={act}
         />
         <Button label="Not yet" kind="quiet" onPress={onLeave} />

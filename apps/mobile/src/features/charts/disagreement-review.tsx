@@ -7,21 +7,25 @@ import { Facts } from '@/components/facts';
 import { Heading } from '@/components/heading';
 import { LinkButton } from '@/components/link-button';
 import { StatusShape } from '@/components/status-shape';
+import { List, Row } from '@/components/list';
 import { Table } from '@/components/table';
 import { Text } from '@/components/text';
 import { space } from '@/constants/layout';
 import { useUnits } from '@/hooks/use-units';
+import { useThreeColumns, useWide } from '@/hooks/use-wide';
 import { figure, length, lengthWithin, percent } from '@/lib/format';
 import { DisagreementDecision } from './disagreement-decision';
 import { foundWords, STATUS_LOOKS } from './disagreement-words';
 
 type Props = { report: DisagreementForReview };
 
+const FACTS_PX = 560;
+
 /** One report: what was found, what the chart says there, the casts it doubts, and what becomes of it. */
 export function DisagreementReview({ report }: Props) {
   const units = useUnits();
   const { status, pegNumber, found, placeWords, day, reporter } = report;
-  const whole = <Compared report={report} />;
+  const wide = useThreeColumns();
   return (
     <View style={{ gap: space.medium, paddingBottom: space.page }}>
       <View style={{ flexDirection: 'row', flexWrap: 'wrap', alignItems: 'center', gap: space.medium }}>
@@ -33,14 +37,23 @@ export function DisagreementReview({ report }: Props) {
       <Text>{`${reporter}, ${dayWords(day)}, ${placeWords}.`}</Text>
       {found.note ? <Text>{`“${found.note}”`}</Text> : null}
       {status === 'waiting' ? (
-        <>
-          {whole}
-          <DisagreementDecision report={report} />
-        </>
+        <View style={{ flexDirection: 'row', flexWrap: 'wrap', columnGap: space.huge, rowGap: space.medium }}>
+          <View style={{ flexGrow: 1, flexBasis: 340, minWidth: 0, maxWidth: FACTS_PX, gap: space.medium }}>
+            <Compared report={report} />
+            {wide ? <DisagreementDecision report={report} /> : null}
+          </View>
+          <View style={{ flexGrow: 1, flexBasis: 340, minWidth: 0 }}>
+            <Doubted report={report} />
+          </View>
+          {wide ? null : <DisagreementDecision report={report} />}
+        </View>
       ) : (
         <>
           <Text>{decidedWords(report)}</Text>
-          <Disclosure title="What it was held against">{whole}</Disclosure>
+          <Disclosure title="What it was held against">
+            <Compared report={report} />
+            <Doubted report={report} />
+          </Disclosure>
         </>
       )}
     </View>
@@ -68,7 +81,7 @@ function decidedWords({
 
 function Compared({ report }: Props) {
   const units = useUnits();
-  const { chart, foundDepthM, foundSigmaM, nearest } = report;
+  const { chart, foundDepthM, foundSigmaM } = report;
   const spread = (depthM: number, sigmaM: number) => lengthWithin(depthM, 1.96 * sigmaM, units);
   return (
     <View style={{ gap: space.medium }}>
@@ -87,39 +100,6 @@ function Compared({ report }: Props) {
           { term: 'If accepted', fact: report.status === 'waiting' ? report.gradeWords : null },
         ]}
       />
-      {nearest.length ? (
-        <Table
-          caption="The casts nearest to it"
-          rows={nearest}
-          rowKey={({ id }) => id}
-          columns={[
-            { key: 'cast', head: 'Cast', value: ({ label }) => label },
-            {
-              key: 'away',
-              head: 'Away',
-              value: ({ awayM }) => awayM,
-              show: ({ awayM }) => length(awayM, units),
-              figures: true,
-            },
-            {
-              key: 'depth',
-              head: 'Depth',
-              value: ({ depthM }) => depthM,
-              show: ({ depthM, sigmaM }) => spread(depthM, sigmaM),
-              figures: true,
-            },
-            { key: 'bottom', head: 'Bottom', value: ({ bottom }) => BOTTOM_WORDS[bottom] },
-            { key: 'grade', head: 'Grade', value: ({ grade }) => grade },
-            {
-              key: 'day',
-              head: 'Day',
-              value: ({ observedOn }) => observedOn,
-              show: ({ observedOn }) => dayWords(observedOn),
-            },
-            { key: 'by', head: 'By', value: ({ surveyor }) => surveyor },
-          ]}
-        />
-      ) : null}
       {chart ? (
         <LinkButton
           label="See the chart there"
@@ -128,6 +108,59 @@ function Compared({ report }: Props) {
         />
       ) : null}
     </View>
+  );
+}
+
+/** The casts nearest to the reported place: a table on a wide screen, a short list on a phone. */
+function Doubted({ report: { nearest } }: Props) {
+  const units = useUnits();
+  const wide = useWide();
+  const spread = (depthM: number, sigmaM: number) => lengthWithin(depthM, 1.96 * sigmaM, units);
+  if (nearest.length === 0) return null;
+  if (!wide)
+    return (
+      <List label="The casts nearest to it">
+        {nearest.map(({ id, label, awayM, depthM, sigmaM, bottom, grade, observedOn, surveyor }) => (
+          <Row
+            key={id}
+            title={`${label}: ${spread(depthM, sigmaM)}, ${BOTTOM_WORDS[bottom]}`}
+            note={`${length(awayM, units)} away, grade ${grade}, ${dayWords(observedOn)}, ${surveyor}`}
+          />
+        ))}
+      </List>
+    );
+  return (
+    <Table
+      caption="The casts nearest to it"
+      rows={nearest}
+      rowKey={({ id }) => id}
+      columns={[
+        { key: 'cast', head: 'Cast', value: ({ label }) => label },
+        {
+          key: 'away',
+          head: 'Away',
+          value: ({ awayM }) => awayM,
+          show: ({ awayM }) => length(awayM, units),
+          figures: true,
+        },
+        {
+          key: 'depth',
+          head: 'Depth',
+          value: ({ depthM }) => depthM,
+          show: ({ depthM, sigmaM }) => spread(depthM, sigmaM),
+          figures: true,
+        },
+        { key: 'bottom', head: 'Bottom', value: ({ bottom }) => BOTTOM_WORDS[bottom] },
+        { key: 'grade', head: 'Grade', value: ({ grade }) => grade },
+        {
+          key: 'day',
+          head: 'Day',
+          value: ({ observedOn }) => observedOn,
+          show: ({ observedOn }) => dayWords(observedOn),
+        },
+        { key: 'by', head: 'By', value: ({ surveyor }) => surveyor },
+      ]}
+    />
   );
 }
 

@@ -3,6 +3,7 @@ import { Loaded } from '@/components/loaded';
 import { Page } from '@/components/page';
 import { Section } from '@/components/section';
 import { Text } from '@/components/text';
+import { MEASURE_PX } from '@/constants/layout';
 import { useMyLakes } from '@/features/fisheries/use-my-lakes';
 import { useLakeDisagreements } from './disagreement-api';
 import { DisagreementReview } from './disagreement-review';
@@ -11,8 +12,13 @@ import { DisagreementReview } from './disagreement-review';
 export function DisagreementsScreen() {
   const { fisheries, lakes } = useMyLakes(['owner', 'manager', 'head_bailiff', 'office']);
   return (
-    <Page title="Not as charted" over="What anglers found" back={{ label: 'Charts', href: '/office/charts' }}>
-      <Text tone="inkSoft">
+    <Page
+      title="Not as charted"
+      over="What anglers found"
+      width="wide"
+      back={{ label: 'Charts', href: '/office/charts' }}
+    >
+      <Text tone="inkSoft" style={{ maxWidth: MEASURE_PX }}>
         A report never alters a published chart. Accepted, it is evidence in the next one made: a float at a
         marked place as a point (grade C), anything else for staff (D), and in the contours (B) only once
         staff have measured it again.
