@@ -1,14 +1,16 @@
 import { useMemo, useState } from 'react';
 import { palettes } from '@mereward/shared/charts/drawing/palette';
-import { zoomedView } from '@mereward/shared/charts/drawing/view-moves';
+import { grownView, zoomedView } from '@mereward/shared/charts/drawing/view-moves';
 import { distanceBetweenM, type Point } from '@mereward/shared/geometry/point';
 import { View, type LayoutChangeEvent } from 'react-native';
 import { Button } from '@/components/button';
 import { space } from '@/constants/layout';
 import { useTheme } from '@/hooks/use-theme';
 import { useChartUnits } from './use-chart-units';
-import { baseLayer, chosenLayer, fixedLayer, type MapChosen, type MapContent } from './map-layers';
+import type { Draw } from './lake-canvas';
+import { baseLayer, chosenLayer, fixedLayer, svgOf, type MapChosen, type MapContent } from './map-layers';
 import { MapSurface } from './map-surface';
+import { OVERSCAN } from './map-surface-props';
 import { ZOOM_STEP } from './use-map-keys';
 import { useMapView } from './use-map-view';
 
@@ -19,6 +21,8 @@ type Props = {
   label: string;
   content: MapContent;
   chosen: MapChosen;
+  /** What is told over the layers: it is drawn by itself, so that showing it leaves the chart as it is drawn. */
+  told?: Draw | undefined;
   onPeg: (pegId: string) => void;
   /** A tap on the water. */
   onPlace?: ((place: Point) => void) | undefined;
@@ -27,7 +31,7 @@ type Props = {
 };
 
 /** A lake's map with everything that can be done to it. It fills the box it is put in. */
-export function ChartMap({ label, content, chosen, onPeg, onPlace, onAim }: Props) {
+export function ChartMap({ label, content, chosen, told, onPeg, onPlace, onAim }: Props) {
   const { name } = useTheme();
   const units = useChartUnits();
   const [size, setSize] = useState({ widthPx: 0, heightPx: 0 });
@@ -42,7 +46,12 @@ export function ChartMap({ label, content, chosen, onPeg, onPlace, onAim }: Prop
     () => (view ? chosenLayer(content, chosen, { view, palette, unit }) : ''),
     [content, chosen, view, palette, unit],
   );
-  const layers = useMemo(() => [base, top], [base, top]);
+  const tales = useMemo(() => {
+    if (!view || !told) return '';
+    const grown = grownView(view, OVERSCAN);
+    return svgOf(grown, told({ palette, view: grown }), 'told');
+  }, [told, view, palette]);
+  const layers = useMemo(() => [base, tales, top], [base, tales, top]);
   const fixed = useMemo(
     () => (view ? fixedLayer({ view, palette, unit }, units.stickSpacingM) : ''),
     [view, palette, unit, units.stickSpacingM],

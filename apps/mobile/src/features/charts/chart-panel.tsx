@@ -1,4 +1,4 @@
-import { useMemo, useState } from 'react';
+import { useMemo, useState, type ReactNode } from 'react';
 import type { ChartView } from '@mereward/shared/charts/contract';
 import type { DrawnCast } from '@mereward/shared/charts/drawing/cast-marks';
 import type { Point } from '@mereward/shared/geometry/plane';
@@ -11,6 +11,7 @@ import { ChartKey } from './chart-key';
 import { shownLayers } from './chart-layers';
 import { ChartMap } from './chart-map';
 import { LayerReasons, LayerToggles, useLevelWords } from './layer-toggles';
+import type { Draw } from './lake-canvas';
 import type { MapContent } from './map-layers';
 import { sharedLetters } from './peg-words';
 import { PlaceReading } from './place-reading';
@@ -27,10 +28,15 @@ type Props = {
   spotId?: string | null | undefined;
   cast?: DrawnCast | null | undefined;
   onAim?: ((place: Point, done: boolean) => void) | undefined;
+  /** What is told over the layers, what a touch means to it, and what stands under the map of it. */
+  told?: { draw: Draw; onTouch: (place: Point) => void; below: ReactNode } | undefined;
+  /** Stands under the reading of a touched place. */
+  ofPlace?: ((place: Point) => ReactNode) | undefined;
 };
 
 /** A chart as a sheet: layers to choose above, the map, and below it key, version, dates, datum and cautions. */
-export function ChartPanel({ chart, pegId, onPeg, spots, spotId = null, cast = null, onAim }: Props) {
+export function ChartPanel({ chart, pegId, onPeg, spots, spotId = null, cast = null, ...rest }: Props) {
+  const { onAim, told, ofPlace } = rest;
   const wide = useWide();
   const { height } = useWindowDimensions();
   const shown = shownLayers.use();
@@ -44,7 +50,11 @@ export function ChartPanel({ chart, pegId, onPeg, spots, spotId = null, cast = n
       content={content}
       chosen={chosen}
       onPeg={onPeg}
-      onPlace={setPlace}
+      told={told?.draw}
+      onPlace={(touched) => {
+        setPlace(touched);
+        told?.onTouch(touched);
+      }}
       onAim={onAim}
     />
   );
@@ -58,13 +68,17 @@ export function ChartPanel({ chart, pegId, onPeg, spots, spotId = null, cast = n
         {map}
       </View>
       <View style={[padded, { paddingBottom: space.medium }]}>
+        {told?.below}
         {place ? (
-          <PlaceReading
-            layers={layers}
-            place={place}
-            raisedM={raisedM}
-            when={isToday ? 'today' : 'at datum'}
-          />
+          <>
+            <PlaceReading
+              layers={layers}
+              place={place}
+              raisedM={raisedM}
+              when={isToday ? 'today' : 'at datum'}
+            />
+            {ofPlace?.(place)}
+          </>
         ) : (
           <Text size="small" tone="inkSoft">
             {hint(layers !== null, sharedLetters(chart.pegs.map(({ number }) => number)))}
