@@ -6,15 +6,13 @@ import { LinkButton } from '@/components/link-button';
 import { Loaded } from '@/components/loaded';
 import { Note } from '@/components/note';
 import { Page } from '@/components/page';
-import { Section } from '@/components/section';
 import { Text } from '@/components/text';
 import { MEASURE_PX } from '@/constants/layout';
 import { useLake } from '@/features/lakes/api';
 import { useSession } from '@/lib/session';
 import { usePegPage } from './api';
 import { DisagreeForm } from './disagree-form';
-import { useMyDisagreements } from './disagreement-api';
-import { MyDisagreements } from './my-disagreements';
+import { ToldHere } from './told-here';
 
 type Params = { pegId: string; spot?: string; lon?: string; lat?: string };
 
@@ -64,9 +62,7 @@ type Props = { pegId: string; lakeId: string; spotId: string | null; place: [num
 function Telling({ pegId, lakeId, spotId, place }: Props) {
   const page = usePegPage(pegId);
   const lake = useLake(lakeId);
-  const mine = useMyDisagreements(true);
   const [sent, setSent] = useState<DisagreementView | null>(null);
-  const told = (mine.data?.disagreements ?? []).filter((each) => each.pegId === pegId);
   return (
     <>
       {sent ? (
@@ -93,11 +89,7 @@ function Telling({ pegId, lakeId, spotId, place }: Props) {
           }
         </Loaded>
       )}
-      {told.length > 0 ? (
-        <Section title="What you told of this peg">
-          <MyDisagreements label="What you told of this peg" disagreements={told} />
-        </Section>
-      ) : null}
+      <ToldHere pegId={pegId} />
     </>
   );
 }

@@ -1,6 +1,6 @@
-import { useState } from 'react';
+import { lazy, Suspense, useMemo, useState } from 'react';
 import { useLocalSearchParams } from 'expo-router';
-import type { PegPageView } from '@mereward/shared/charts/contract';
+import type { PegPageView, SpotView } from '@mereward/shared/charts/contract';
 import { levelLine } from '@mereward/shared/charts/depth-words';
 import { layerReasons } from '@mereward/shared/charts/layer-reasons';
 import type { PegDetails } from '@mereward/shared/lakes/contract';
@@ -33,11 +33,14 @@ import { SpotDetail } from './spot-detail';
 import { SpotsTable } from './spots-table';
 import { TalkBack } from './talk-back';
 
+const PegMore = lazy(async () => ({ default: (await import('./peg-more')).PegMore }));
+
 function InFront({ page }: { page: PegPageView }) {
   const [spotId, setSpotId] = useState<string | null>(null);
   const beside = useThreeColumns();
   const spots = page.spots ?? [];
-  const spot = spots.find(({ id }) => id === spotId) ?? spots[0] ?? null;
+  const beyond = useMemo(() => neighbourSpots(page), [page]);
+  const spot = [...spots, ...beyond].find(({ id }) => id === spotId) ?? spots[0] ?? beyond[0] ?? null;
   const water = { levelM: page.levelNow?.levelM ?? null, datumM: page.chart?.datumM ?? 0 };
   const reasons = layerReasons(page.layerNotes);
   const { levelNow } = page;
@@ -51,7 +54,10 @@ function InFront({ page }: { page: PegPageView }) {
         />
       </View>
       {spot ? <SpotDetail spot={spot} page={page} /> : null}
-      <TalkBack pegId={page.id} spotId={spot?.id ?? null} />
+      <TalkBack
+        pegId={page.id}
+        spotId={spots.some(({ id }) => id === spot?.id) ? (spot?.id ?? null) : null}
+      />
       {spots.length ? (
         <Section title="Spots from this peg" bare>
           <SpotsTable spots={spots} spotId={spot?.id ?? null} onSpot={setSpotId} water={water} />
@@ -59,6 +65,24 @@ function InFront({ page }: { page: PegPageView }) {
       ) : page.spots ? (
         <Empty title="No spots written up yet">The chart above is all there is for this peg so far.</Empty>
       ) : null}
+      {beyond.length ? (
+        <Section
+          title="Other pegs’ spots in this peg’s water"
+          note="Written up from a peg beside this one, counted here from this one."
+          bare
+        >
+          <SpotsTable
+            label="Other pegs’ spots in this peg’s water"
+            spots={beyond}
+            spotId={spot?.id ?? null}
+            onSpot={setSpotId}
+            water={water}
+          />
+        </Section>
+      ) : null}
+      <Suspense fallback={null}>
+        <PegMore page={page} spot={spot} />
+      </Suspense>
       {reasons.length ? (
         <Note title="Not shown to you here">
           <>
@@ -80,6 +104,10 @@ function InFront({ page }: { page: PegPageView }) {
     </View>
   );
 }
+
+/** Spots of pegs beside this one that lie in its water, named so. */
+const neighbourSpots = ({ neighbourSpots: found }: PegPageView): SpotView[] =>
+  (found ?? []).map(({ peg, spot }) => ({ ...spot, name: `${spot.name} (peg ${peg.number}’s)` }));
 
 function Warnings({ details }: { details: PegDetails }) {
   const { status } = details;

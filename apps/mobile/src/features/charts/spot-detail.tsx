@@ -47,6 +47,7 @@ export function SpotDetail({ spot, page }: Props) {
       <Text size="small" tone="inkSoft" style={{ maxWidth: MEASURE_PX }}>
         {provenance(spot)}
       </Text>
+      {spot.water && !spot.water.own ? <Note kind="caution">{spot.water.words}</Note> : null}
       {spot.note ? <Text style={{ maxWidth: MEASURE_PX }}>{spot.note}</Text> : null}
       {spot.section?.length ? (
         <>

@@ -32,6 +32,8 @@ const useStyles = themed((c) => ({
 }));
 
 type Props = {
+  /** "Spots from this peg" */
+  label?: string;
   spots: readonly SpotView[];
   spotId: string | null;
   onSpot: (spotId: string) => void;
@@ -39,7 +41,7 @@ type Props = {
 };
 
 /** The spots that can be reached from a peg, each by count and aim, with depth and bottom. A press chooses one. */
-export function SpotsTable({ spots, spotId, onSpot, water }: Props) {
+export function SpotsTable({ label = 'Spots from this peg', spots, spotId, onSpot, water }: Props) {
   const styles = useStyles();
   const units = useChartUnits();
   const depth = (spot: SpotView): string =>
@@ -57,7 +59,7 @@ export function SpotsTable({ spots, spotId, onSpot, water }: Props) {
           {water.levelM === null ? 'at datum' : 'today'}
         </Text>
       </View>
-      <View role="radiogroup" aria-label="Spots from this peg">
+      <View role="radiogroup" aria-label={label}>
         {spots.map((spot) => {
           const bottom = spot.bottom === null ? '' : BOTTOM_WORDS[spot.bottom];
           const chosen = spot.id === spotId;
