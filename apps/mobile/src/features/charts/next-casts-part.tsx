@@ -1,8 +1,7 @@
 import { useState } from 'react';
-import type { NextCast, NextCasts } from '@mereward/shared/charts/chart-answers';
+import type { NextCast } from '@mereward/shared/charts/chart-answers';
 import { aimWords } from '@mereward/shared/charts/spot-figures';
 import { countWords } from '@mereward/shared/charts/spot-words';
-import { distanceBetweenM, type Point } from '@mereward/shared/geometry/point';
 import { View } from 'react-native';
 import { Button } from '@/components/button';
 import { Text } from '@/components/text';
@@ -10,19 +9,8 @@ import { space } from '@/constants/layout';
 import { FoldedPart } from '@/features/surveys/cast-part';
 import type { SuggestTerms } from '@/features/surveys/cast-suggestion';
 import { percent } from '@/lib/format';
+import { castsAhead } from './casts-ahead';
 import { useNextCasts } from './chart-answers-api';
-
-const CAST_THERE_M = 3; // a cast of this visit so near has done what the suggestion was for
-
-/** Casts not made yet on this visit, the most telling first. */
-export function castsAhead(
-  answer: NextCasts | undefined,
-  pegId: string,
-  made: readonly Point[],
-): readonly NextCast[] {
-  const casts = answer?.pegs?.find((peg) => peg.pegId === pegId)?.casts ?? [];
-  return casts.filter((next) => made.every((cast) => distanceBetweenM(cast, next) > CAST_THERE_M));
-}
 
 /** "Where to cast next" for the peg one stands on: one tap fills aim and wraps. Nothing where the chart says nothing. */
 export function NextCastsPart({ lake, pegId, made, onTake }: SuggestTerms) {
