@@ -1,0 +1,88 @@
+import { SoundingImport } from '@mereward/db/entities/surveys/sounding-import';
+import { LogView } from '@mereward/shared/surveys/log-contract';
+import { spawn, type ChildProcess } from 'node:child_process';
+import { randomUUID } from 'node:crypto';
+import { once } from 'node:events';
+import { createRequire } from 'node:module';
+import { fileURLToPath, pathToFileURL } from 'node:url';
+import { afterAll, beforeAll, expect, test } from 'vitest';
+import { aServer, type TestServer } from '../support/server';
+import { aBoatTrack, nmeaLog } from '../support/sounding-log';
+import { aLongWater, openedVisit } from '../support/surveys';
+import { aFishery } from '../support/waters';
+
+let server: TestServer;
+const running: ChildProcess[] = [];
+
+beforeAll(async () => {
+  server = await aServer();
+  server.setNow('2027-04-03T12:00:00Z');
+});
+afterAll(async () => {
+  for (const each of running) await killed(each);
+  await server.close();
+});
+
+const entry = fileURLToPath(new URL('../../apps/api/src/main.ts', import.meta.url));
+const loader = pathToFileURL(createRequire(import.meta.url).resolve('tsx')).href;
+
+/** The real server in a process of its own, on the test's database. */
+function aProcess(): void {
+  const { databaseUrl, smtpUrl, filesDir } = server.server.config;
+  const child = spawn(process.execPath, ['--import', loader, entry], {
+    env: {
+      ...process.env,
+      DATABASE_URL: databaseUrl,
+      SMTP_URL: smtpUrl ?? '',
+      FILES_DIR: filesDir,
+      WEB_DIR: filesDir,
+      PORT: '0',
+      LOG_LEVEL: 'silent',
+    },
+    stdio: 'ignore',
+  });
+  running.push(child);
+}
+
+async function killed(child: ChildProcess): Promise<void> {
+  if (child.exitCode !== null || child.signalCode !== null) return;
+  const gone = once(child, 'exit');
+  child.kill('SIGKILL');
+  await gone;
+}
+
+async function until(holds: () => Promise<boolean>): Promise<void> {
+  while (!(await holds())) await new Promise((again) => setTimeout(again, 5));
+}
+
+test('a log whose server is killed outright while it is written is taken in whole by the next', async () => {
+  const fishery = await aFishery(server);
+  const person = fishery.people.head_bailiff;
+  const visitId = await openedVisit(person, await aLongWater(server, fishery));
+  const track = aBoatTrack({ linesM: 2, speedMS: 1 }); // some thirteen thousand soundings, in three writings
+  const brought = await person
+    .post(`/visits/${visitId}/logs`)
+    .field('id', randomUUID())
+    .attach('files', Buffer.from(nmeaLog(track)), 'boat.log');
+  const { id } = LogView.parse(brought.body);
+  await server.settle();
+  expect((await person.post(`/logs/${id}/start`)).status).toBe(202);
+  const log = () => server.server.source.manager.findOneByOrFail(SoundingImport, { id });
+  const count = async (): Promise<number> =>
+    (
+      await server.server.source.query('SELECT count(*)::int AS n FROM sounding WHERE import_id = $1', [id])
+    )[0].n;
+
+  aProcess();
+  await until(async () => (await log()).step === 'Writing the soundings');
+  for (const each of running) await killed(each);
+  expect((await log()).state).toBe('running');
+  expect(await count()).toBe(0);
+
+  aProcess();
+  await until(async () => (await log()).state === 'done');
+  const done = await log();
+  expect(done.tries).toBe(2);
+  expect(await count()).toBe(done.report?.kept);
+  expect(done.report?.kept).toBe(track.length);
+}, 240_000);
