@@ -3,7 +3,9 @@ import { LogView } from '@mereward/shared/surveys/log-contract';
 import { spawn, type ChildProcess } from 'node:child_process';
 import { randomUUID } from 'node:crypto';
 import { once } from 'node:events';
+import { writeFileSync } from 'node:fs';
 import { createRequire } from 'node:module';
+import { join } from 'node:path';
 import { fileURLToPath, pathToFileURL } from 'node:url';
 import { afterAll, beforeAll, expect, test } from 'vitest';
 import { aServer, type TestServer } from '../support/server';
@@ -11,12 +13,13 @@ import { aBoatTrack, nmeaLog } from '../support/sounding-log';
 import { aLongWater, openedVisit } from '../support/surveys';
 import { aFishery } from '../support/waters';
 
+const NOW = '2027-04-03T12:00:00Z';
 let server: TestServer;
 const running: ChildProcess[] = [];
 
 beforeAll(async () => {
   server = await aServer();
-  server.setNow('2027-04-03T12:00:00Z');
+  server.setNow(NOW);
 });
 afterAll(async () => {
   for (const each of running) await killed(each);
@@ -29,6 +32,8 @@ const loader = pathToFileURL(createRequire(import.meta.url).resolve('tsx')).href
 /** The real server in a process of its own, on the test's database. */
 function aProcess(): void {
   const { databaseUrl, smtpUrl, filesDir } = server.server.config;
+  const clock = join(filesDir, 'clock');
+  writeFileSync(clock, NOW);
   const child = spawn(process.execPath, ['--import', loader, entry], {
     env: {
       ...process.env,
@@ -37,6 +42,7 @@ function aProcess(): void {
       FILES_DIR: filesDir,
       WEB_DIR: filesDir,
       PORT: '0',
+      CLOCK_FILE: clock,
       LOG_LEVEL: 'silent',
     },
     stdio: 'ignore',
@@ -54,6 +60,13 @@ async function killed(child: ChildProcess): Promise<void> {
 async function until(holds: () => Promise<boolean>): Promise<void> {
   while (!(await holds())) await new Promise((again) => setTimeout(again, 5));
 }
+
+/** Lets the writing of a log come no further than its first five thousand soundings. */
+const STICKS = `
+  CREATE FUNCTION sticks() RETURNS trigger LANGUAGE plpgsql AS $$ BEGIN PERFORM pg_sleep(600); RETURN NEW; END $$;
+  CREATE TRIGGER sticks BEFORE INSERT ON sounding FOR EACH ROW WHEN (NEW.seq = 6000) EXECUTE FUNCTION sticks()`;
+
+const query = (sql: string) => server.server.source.query(sql);
 
 test('a log whose server is killed outright while it is written is taken in whole by the next', async () => {
   const fishery = await aFishery(server);
@@ -73,9 +86,14 @@ test('a log whose server is killed outright while it is written is taken in whol
       await server.server.source.query('SELECT count(*)::int AS n FROM sounding WHERE import_id = $1', [id])
     )[0].n;
 
+  await query(STICKS);
   aProcess();
-  await until(async () => (await log()).step === 'Writing the soundings');
+  await until(async () => (await log()).step === 'Writing the soundings'); // some are written, and none is told
   for (const each of running) await killed(each);
+  await query(
+    `SELECT pg_terminate_backend(pid) FROM pg_stat_activity WHERE query LIKE 'INSERT INTO sounding %'`,
+  );
+  await query('DROP TRIGGER sticks ON sounding');
   expect((await log()).state).toBe('running');
   expect(await count()).toBe(0);
 

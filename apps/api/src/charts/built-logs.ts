@@ -1,4 +1,4 @@
-import type { ChartLogView } from '@mereward/shared/charts/chart-log-view';
+import type { ChartLogView, SurveyedBy } from '@mereward/shared/charts/chart-log-view';
 import type { ChartView } from '@mereward/shared/charts/contract';
 import { shownOf } from '@mereward/shared/charts/log-thinning';
 import { Grade } from '@mereward/shared/surveys/contract';
@@ -27,6 +27,11 @@ function soundingsIn({ id, points, grades }: BuiltLog): ShownSounding[] {
     grade: Grade.parse(letter),
     ofLog: true,
   }));
+}
+
+export function surveyedBy({ logs, soundings }: Pick<Built, 'logs' | 'soundings'>): SurveyedBy {
+  if (logs.length === 0) return 'casts';
+  return soundings.length > 0 ? 'both' : 'logs';
 }
 
 /** What the chart took from each log. */

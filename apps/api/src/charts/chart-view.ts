@@ -14,7 +14,7 @@ import type { Ctx } from '../ctx';
 import { originOfLake } from '../lakes/found';
 import { levelNow } from '../lakes/levels';
 import { ageNow } from './chart-age-now';
-import { logSoundings } from './built-logs';
+import { logSoundings, surveyedBy } from './built-logs';
 import { chartContent, type ChartContent } from './chart-layers';
 import { chartToRead, type ChartFound, type LightChart } from './find-chart';
 import { sightOnChart, type Sight } from './layers';
@@ -53,6 +53,7 @@ export async function chartView(ctx: Ctx, chartId: string): Promise<ChartView> {
     outline: content?.built.outline ?? lake.details.outline,
     ...(await places(tx, lake)),
     ...(shown ? layersFor(shown, sight, now) : NOTHING),
+    ...(content ? { surveyedBy: surveyedBy(content.built) } : {}),
     layerNotes: shown ? sight.notes : missingNotes({ chart, lake }, sight),
     may: { report: sight.staff && shown !== null },
   };

@@ -74,7 +74,7 @@ function stated(feature: Feature, view: ChartView): Feature {
 }
 
 const CAUTION =
-  'Depths from casting, below the stated datum. They change. Not for boating, wading, swimming or diving.';
+  'Depths from the stated survey, below the stated datum. They change. Not for boating, wading, swimming or diving.';
 
 function lakeFeature(view: ChartView, place: Place): Feature {
   const outline = outlineInPlane(view.origin, view.outline);

@@ -9,6 +9,7 @@ import type { Ctx } from '../ctx';
 import { photosOf } from '../files/queries';
 import { placeWater, watersOf } from '../lakes/peg-waters';
 import { pegDetailsFor } from '../lakes/queries';
+import { surveyedBy } from './built-logs';
 import { layersOf } from './chart-layers';
 import { changesFor } from './chart-view';
 import { pegGround, type PegGround } from './peg-chart';
@@ -117,5 +118,9 @@ function cautionsOf({ peg, chart }: PegGround): string[] {
     chart && (chart.age === 'changed' || chart.age === 'old')
       ? ageWords(chart.age, chart.ageNow.changes)
       : null;
-  return [overhead, changed && `${changed}.`, chart && chartCaution(chart)].filter((words) => words !== null);
+  return [
+    overhead,
+    changed && `${changed}.`,
+    chart && chartCaution({ ...chart, surveyedBy: surveyedBy(chart.content.built) }),
+  ].filter((words) => words !== null);
 }

@@ -42,6 +42,7 @@ export async function readLogRun(
     if (end === null) await cancelled(source, run);
     else if (end.kind === 'refused') await fail(source, run, end.words);
     else if (log.goal === 'look') await looked(source, run, end);
+    else if (end.preview.kept !== log.preview?.kept) await fail(source, run, NOT_AS_SHOWN);
     else await takeIn(source, run, end);
   } catch (error) {
     logger.error({ logId, err: error }, 'a log could not be read');
@@ -52,6 +53,9 @@ export async function readLogRun(
     );
   }
 }
+
+const NOT_AS_SHOWN =
+  'What would be taken in is not what was shown: the visit or the outline was changed since. Read it again and look.';
 
 /** Of the whole, when the soundings are to be written afterwards. */
 const READING_SHARE = 0.7;

@@ -14,9 +14,10 @@ test('a chart says when it was surveyed and at which level', () => {
   const words = chartCaution({ surveyedFrom: '2027-04-03', surveyedTo: '2027-04-03', datumM: 0.62 });
   expect(words).toContain('on 3 Apr 2027, given at level 0.62 m');
   expect(words).toContain('Not for boating, wading, swimming or diving');
-  expect(chartCaution({ surveyedFrom: '2027-04-03', surveyedTo: '2027-04-10', datumM: 0.62 })).toContain(
-    'between 3 Apr 2027 and 10 Apr 2027',
-  );
+  const later = { surveyedFrom: '2027-04-03', surveyedTo: '2027-04-10', datumM: 0.62 };
+  expect(chartCaution(later)).toContain('between 3 Apr 2027 and 10 Apr 2027');
+  expect(chartCaution(later)).toMatch(/^Bottom and depth come from casting between/);
+  expect(chartCaution({ ...later, surveyedBy: 'logs' })).toMatch(/^Depths come from an echo sounder between/);
 });
 
 test('a power line nearer than thirty metres is never passed over', () => {

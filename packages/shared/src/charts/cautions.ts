@@ -1,16 +1,28 @@
 import type { PegDetails } from '../lakes/contract';
 import { OVERHEAD_LIMIT_M } from '../lakes/overhead-line';
 import { dayWords } from '../time/civil-day';
+import type { SurveyedBy } from './chart-log-view';
 
-type Surveyed = { surveyedFrom: string; surveyedTo: string; datumM: number };
+type Surveyed = {
+  surveyedFrom: string;
+  surveyedTo: string;
+  datumM: number;
+  surveyedBy?: SurveyedBy | undefined; // absent: by casts
+};
+
+const COME_FROM: Readonly<Record<SurveyedBy, string>> = {
+  casts: 'Bottom and depth come from casting',
+  logs: 'Depths come from an echo sounder',
+  both: 'Bottom and depth come from casting and from an echo sounder',
+};
 
 /** Stands on every chart, peg page, card and print. */
-export function chartCaution({ surveyedFrom, surveyedTo, datumM }: Surveyed): string {
+export function chartCaution({ surveyedFrom, surveyedTo, datumM, surveyedBy = 'casts' }: Surveyed): string {
   const when =
     surveyedFrom === surveyedTo
       ? `on ${dayWords(surveyedFrom)}`
       : `between ${dayWords(surveyedFrom)} and ${dayWords(surveyedTo)}`;
-  return `Bottom and depth come from casting ${when}, given at level ${datumM.toFixed(2)} m. They change. Not for boating, wading, swimming or diving.`;
+  return `${COME_FROM[surveyedBy]} ${when}, given at level ${datumM.toFixed(2)} m. They change. Not for boating, wading, swimming or diving.`;
 }
 
 /** What must be said of a power line over or near a peg; null when there is none near. */

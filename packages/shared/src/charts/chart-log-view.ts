@@ -1,5 +1,9 @@
 import { z } from 'zod';
 
+/** What a chart's depths were measured with: casts from the bank, an echo sounder's logs, or both. */
+export const SurveyedBy = z.enum(['casts', 'logs', 'both']);
+export type SurveyedBy = z.infer<typeof SurveyedBy>;
+
 /** What a chart took from one log of soundings, in numbers. */
 export const ChartLogView = z.object({
   id: z.uuid(),

@@ -1,5 +1,5 @@
 import { z } from 'zod';
-import { ChartLogView } from './chart-log-view';
+import { ChartLogView, SurveyedBy } from './chart-log-view';
 import { Position, Version } from '../fisheries/contract';
 import { LakePolygon, LevelNow, PhotoView } from '../lakes/contract';
 import { PlaceWater } from '../lakes/peg-water-contract';
@@ -194,6 +194,7 @@ export const ChartView = z.object({
       surveyedShare: z.number(),
     })
     .nullable(),
+  surveyedBy: SurveyedBy.optional(), // absent until it is built
   layerNotes: LayerNotes,
   may: z.object({ report: z.boolean() }).default({ report: false }), // take raw casts and the report away
 });

@@ -136,14 +136,14 @@ function Log({ log, lake, onStop }: Props) {
           </View>
         ) : null}
         <View style={{ flexGrow: 1, flexBasis: 340, minWidth: 0, gap: space.large }}>
-          {preview && log.may.change ? (
-            <Section title="How it is read" bare>
-              <LogOptionsForm key={JSON.stringify(preview.guessed)} log={log} preview={preview} />
+          {shown ? (
+            <Section title={report ? 'What was taken in' : 'What is in it'} bare>
+              <LogReportPart report={shown} zone={lake.zone} />
             </Section>
           ) : null}
-          {shown ? (
-            <Section title={report ? 'What was taken in' : 'What is in it'} bare={!log.may.change}>
-              <LogReportPart report={shown} zone={lake.zone} />
+          {preview && log.may.change ? (
+            <Section title="How it is read">
+              <LogOptionsForm key={JSON.stringify(preview.guessed)} log={log} preview={preview} />
             </Section>
           ) : null}
           {preview && !report ? <FirstPoints log={log} zone={lake.zone} /> : null}
