@@ -126,13 +126,14 @@ export function chooseBandwidth(evidence: readonly BottomEvidence[]): ChosenBand
   if (evidence.length < FEWEST_TO_SCORE) return { bandwidthM: USUAL_BANDWIDTH_M, logScore: null };
   let best: ChosenBandwidth = { bandwidthM: USUAL_BANDWIDTH_M, logScore: -Infinity };
   for (const bandwidthM of BANDWIDTHS_M) {
-    const logScore = leaveOneOut(evidence, bandwidthM);
+    const logScore = leaveOneOutScore(evidence, bandwidthM);
     if (logScore > (best.logScore ?? -Infinity)) best = { bandwidthM, logScore };
   }
   return best;
 }
 
-function leaveOneOut(evidence: readonly BottomEvidence[], bandwidthM: number): number {
+/** Mean log score, in nats, of foretelling each cast from the others. */
+export function leaveOneOutScore(evidence: readonly BottomEvidence[], bandwidthM: number): number {
   const classes = evidence[0]!.shares.length;
   const kernels = evidence.map((cast) => castKernel(cast, { bandwidthM, reach: REACH }));
   const alpha = new Float64Array(classes);

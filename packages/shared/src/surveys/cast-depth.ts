@@ -2,7 +2,7 @@ import type { CastObservation, Kit, ReductionStep } from './contract';
 import { refuse, type CastSite, type Refusal } from './cast-site';
 import { DEEPEST_M, SIGMA } from './error-budget';
 import { floatDepth } from './float-depth';
-import { fallDepth, uncalibratedFallWords } from './lead-fall';
+import { beyondCalibrationWords, fallDepth, uncalibratedFallWords } from './lead-fall';
 import { metres, plusMinus, step } from './reduction-step';
 
 /** The depth of one reading below the water of that hour; null figures when none can be used. */
@@ -78,5 +78,6 @@ function byFall({ dropCountS }: CastObservation, { lead }: CastSite): CastDepth 
     ],
     { value: metres(depthM), sigma: plusMinus(sigmaM, 'm') },
   );
-  return { ...none, depthM, sigmaM, byFall: true, warnings: [], steps: [fallStep] };
+  const beyond = beyondCalibrationWords(dropCountS, lead);
+  return { ...none, depthM, sigmaM, byFall: true, warnings: beyond ? [beyond] : [], steps: [fallStep] };
 }

@@ -1,5 +1,5 @@
 import { describe, expect, test } from 'vitest';
-import { calibrateLead, fallDepth, uncalibratedFallWords } from './lead-fall';
+import { beyondCalibrationWords, calibrateLead, fallDepth, uncalibratedFallWords } from './lead-fall';
 
 describe('calibrating a lead', () => {
   test('the rate is the regression through the origin with its standard error', () => {
@@ -27,6 +27,12 @@ describe('calibrating a lead', () => {
   test('the depth of a fall carries the error of the rate and of the count', () => {
     const lead = { rateMPerS: 1.5, rateSigmaMPerS: 0.1, scatterM: 0.3, spots: 5 };
     expect(fallDepth(2, lead)).toEqual({ depthM: 3, sigmaM: Math.hypot(0.2, 0.3) });
+  });
+
+  test('a count well beyond those it was calibrated on is called a guess', () => {
+    const lead = { rateMPerS: 1.5, rateSigmaMPerS: 0.1, scatterM: 0.3, spots: 5, longestS: 3 };
+    expect(beyondCalibrationWords(4.5, lead)).toBeNull();
+    expect(beyondCalibrationWords(4.6, lead)).toMatch(/3 s at most/);
   });
 
   test.each([

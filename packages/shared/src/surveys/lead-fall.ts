@@ -42,7 +42,8 @@ export function calibrateLead(
   const residualM = Math.sqrt(squares / (falls.length - 1));
   const scatterM = Math.max(residualM, TIMING_S * rateMPerS);
   const rateSigmaMPerS = scatterM / Math.sqrt(timesSquared);
-  return { ok: true, calibration: { rateMPerS, rateSigmaMPerS, scatterM, spots: falls.length } };
+  const longestS = Math.max(...falls.map(({ seconds }) => seconds));
+  return { ok: true, calibration: { rateMPerS, rateSigmaMPerS, scatterM, spots: falls.length, longestS } };
 }
 
 /** Depth of a counted fall by a calibrated lead, metres, with σ of the rate and of one fall. */
@@ -51,6 +52,12 @@ export function fallDepth(seconds: number, lead: LeadCalibration): { depthM: num
     depthM: seconds * lead.rateMPerS,
     sigmaM: Math.hypot(seconds * lead.rateSigmaMPerS, lead.scatterM),
   };
+}
+
+/** Said of a count well beyond those a lead was calibrated on; null where there is nothing to say. */
+export function beyondCalibrationWords(seconds: number, { longestS }: LeadCalibration): string | null {
+  if (longestS === undefined || seconds <= 1.5 * longestS) return null;
+  return `Counted ${seconds} s, but this lead was calibrated on falls of ${longestS} s at most: so much deeper its rate is a guess`;
 }
 
 /**
