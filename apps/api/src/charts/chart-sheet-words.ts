@@ -1,5 +1,5 @@
 import { chartCaution } from '@mereward/shared/charts/cautions';
-import { AGE_WORDS } from '@mereward/shared/charts/chart-age';
+import { ageWords } from '@mereward/shared/charts/chart-age';
 import type { ChartView } from '@mereward/shared/charts/contract';
 import { layerReasons } from '@mereward/shared/charts/layer-reasons';
 import { stickWords } from '@mereward/shared/charts/spot-words';
@@ -14,7 +14,7 @@ export type SheetPeople = { surveyors: readonly string[]; approvedBy: string | n
 export function sheetHead(chart: ChartView): string[] {
   const depths = chart.depth === null ? [] : [`Depths in metres below datum ${chart.datumM.toFixed(2)} m`];
   return [
-    `Surveyed ${dayRange(chart.surveyedFrom, chart.surveyedTo)}. ${AGE_WORDS[chart.age]}.`,
+    `Surveyed ${dayRange(chart.surveyedFrom, chart.surveyedTo)}. ${ageWords(chart.age, chart.changes)}.`,
     ...depths,
     levelWords(chart),
   ];

@@ -1,5 +1,5 @@
 import type { Units } from '@mereward/shared/accounts/contract';
-import { AGE_WORDS } from '@mereward/shared/charts/chart-age';
+import { ageWords } from '@mereward/shared/charts/chart-age';
 import { overheadCaution } from '@mereward/shared/charts/cautions';
 import type { PegPageView } from '@mereward/shared/charts/contract';
 import { levelLine } from '@mereward/shared/charts/depth-words';
@@ -105,7 +105,7 @@ function caption(page: PegPageView, units: Units): Markup | null {
   const overhead = overheadCaution(PegDetails.parse(page.details)); // stands at the head already
   const cautions = page.cautions.filter((words) => words !== overhead);
   return markup`<p><strong>${facts.join(' · ')}</strong></p>
-<p class="state ${chart.age}"><span aria-hidden="true">${AGE_SHAPE[chart.age]}</span> ${AGE_WORDS[chart.age]}</p>
+<p class="state ${chart.age}"><span aria-hidden="true">${AGE_SHAPE[chart.age]}</span> ${ageWords(chart.age, chart.changes)}</p>
 ${cautions.map((words) => markup`<p>${words}</p>`)}
 <p>Not for navigation.</p>`;
 }

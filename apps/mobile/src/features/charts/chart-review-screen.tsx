@@ -3,6 +3,7 @@ import { View } from 'react-native';
 import { space } from '@/constants/layout';
 import type { ChartReview } from '@mereward/shared/charts/contract';
 import { Facts } from '@/components/facts';
+import { List, Row } from '@/components/list';
 import { Loaded } from '@/components/loaded';
 import { Note } from '@/components/note';
 import { Page } from '@/components/page';
@@ -47,6 +48,25 @@ function papersOf({ chart: { id, version }, lakeName }: ChartReview) {
   return [...sheetPapers(named), ...staffPapers(named), layersPaper(named)];
 }
 
+/** What works and seasons after the casts took out of the chart. */
+function EndedSection({ ended }: Pick<ChartReview, 'ended'>) {
+  const counted = (casts: number, what: string): string[] =>
+    casts === 0 ? [] : [`${what} of ${String(casts)} ${casts === 1 ? 'cast' : 'casts'}`];
+  return (
+    <Section title="What no longer counts" note="Happened after the casts were made.">
+      <List label="Events">
+        {ended.map(({ eventId, words, cover, substrate, depth }) => (
+          <Row
+            key={eventId}
+            title={words}
+            note={`Left out: ${[...counted(cover, 'what lay there'), ...counted(substrate, 'the bottom'), ...counted(depth, 'the depth')].join(', ')}`}
+          />
+        ))}
+      </List>
+    </Section>
+  );
+}
+
 function Review({ review }: { review: ChartReview }) {
   const { chart, checks, quality } = review;
   const built = chart.build?.state === 'done';
@@ -58,6 +78,14 @@ function Review({ review }: { review: ChartReview }) {
             { term: 'Surveyed', fact: surveyedWords(chart) },
             { term: 'Submitted by', fact: chart.submittedBy ?? '' },
             { term: 'Approved by', fact: chart.approvedBy ?? '' },
+            {
+              term: 'Bottom read by',
+              fact: quality
+                ? review.bottomTable === 0
+                  ? 'the built-in table of feels'
+                  : `version ${String(review.bottomTable)} of the fishery’s table of feels`
+                : '',
+            },
           ]}
         />
         <BuildSection review={review} />
@@ -76,6 +104,7 @@ function Review({ review }: { review: ChartReview }) {
             <QualityReport quality={quality} />
           </Section>
         ) : null}
+        {review.ended.length > 0 ? <EndedSection ended={review.ended} /> : null}
         {review.may.approveWhyNot ? (
           <Note kind="caution" title="Not yours to approve">
             {review.may.approveWhyNot}

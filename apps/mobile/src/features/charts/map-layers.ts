@@ -9,7 +9,7 @@ import type { BottomArea } from '@mereward/shared/charts/drawing/bottom-areas';
 import { drawMap, farMarks } from '@mereward/shared/charts/drawing/draw-map';
 import { northMarks, scaleBarMarks } from '@mereward/shared/charts/drawing/furniture';
 import type { Ground } from '@mereward/shared/charts/drawing/ground';
-import type { Mark } from '@mereward/shared/charts/drawing/mark';
+import type { Line, Mark } from '@mereward/shared/charts/drawing/mark';
 import type { Palette } from '@mereward/shared/charts/drawing/palette';
 import { pegMarks, type DrawnPeg } from '@mereward/shared/charts/drawing/shore-marks';
 import { PLAIN_SVG, toSvg } from '@mereward/shared/charts/drawing/to-svg';
@@ -28,6 +28,7 @@ export type MapContent = {
   pegs: readonly DrawnPeg[];
   marks: readonly { code: string; xM: number; yM: number }[];
   spots: readonly DrawnSpot[];
+  changed?: readonly Line[] | undefined; // rings of water that changed since it was surveyed
 };
 
 /** What is chosen on it: drawn over the rest, so that choosing draws little anew. */

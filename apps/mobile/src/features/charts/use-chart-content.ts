@@ -7,7 +7,7 @@ import type { ShownLayers } from './chart-layers';
 import { stepFor } from '@mereward/shared/charts/depth-words';
 import type { MapContent } from './map-layers';
 import { sharedLetters } from './peg-words';
-import { bottomOf, layersOf } from '@mereward/shared/charts/drawing/chart-part';
+import { bottomOf, changedWater, layersOf, pointsOf } from '@mereward/shared/charts/drawing/chart-part';
 import { groundOfChart, raisedNowM } from './readied-chart';
 
 /** Pegs as a map numbers them. */
@@ -50,7 +50,8 @@ export function useChartContent(
     (): MapContent => ({
       ground,
       bottom: allBottom,
-      soundings: shown.soundings ? (chart.soundings ?? []) : [],
+      soundings: shown.soundings ? pointsOf(chart) : [],
+      changed: changedWater(chart, ground.water),
       pegs: pegsForMap(chart.pegs),
       marks: chart.marks,
       spots,

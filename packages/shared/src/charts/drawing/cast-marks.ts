@@ -1,4 +1,5 @@
 import { pointAlong, type Point } from '../../geometry/point';
+import { BOTTOM_ABBREVIATION } from '../../surveys/bottom-abbreviation';
 import type { Bottom, Grade } from '../../surveys/contract';
 import { ruled, stroked, text, type GlyphsMark, type Line, type Mark, type PathMark } from './mark';
 import type { Palette } from './palette';
@@ -78,20 +79,30 @@ function ellipseMark(
   };
 }
 
-export type DrawnSounding = Point & { depthM: number; bottom: Bottom; grade: Grade };
+/** A cast on the sheet; without a depth it tells of the bottom only. */
+export type DrawnSounding = Point & { depthM: number | null; bottom: Bottom; grade: Grade };
 
 const FIGURES_FROM_PX_PER_M = 3.2;
 
-/** Soundings as points: filled where the isobaths lean on them, hollow where they only stand as points. */
+/**
+ * Soundings as points: filled where the isobaths lean on them, hollow where they only stand as points, a hollow square with
+ * the bottom's letters where no depth was read.
+ */
 export function soundingMarks(soundings: readonly DrawnSounding[], scene: SoundingScene): Mark[] {
   const { palette, view, words } = scene;
-  const leantOn = soundings.filter(({ grade }) => grade === 'A' || grade === 'B');
-  const others = soundings.filter(({ grade }) => grade === 'C' || grade === 'D');
-  const marks: Mark[] = [dots(leantOn, palette, true), dots(others, palette, false)];
+  const read = soundings.filter(({ depthM }) => depthM !== null);
+  const leantOn = read.filter(({ grade }) => grade === 'A' || grade === 'B');
+  const others = read.filter(({ grade }) => grade === 'C' || grade === 'D');
+  const felt = soundings.filter(({ depthM }) => depthM === null);
+  const marks: Mark[] = [
+    dots(leantOn, palette, true),
+    dots(others, palette, false),
+    ...(felt.length > 0 ? [{ ...dots(felt, palette, false), glyph: SQUARE }] : []),
+  ];
   if (view.pxPerM < FIGURES_FROM_PX_PER_M) return marks;
-  const figures = soundings.map(({ xM, yM, depthM }) =>
+  const figures = soundings.map(({ xM, yM, depthM, bottom }) =>
     text({
-      words: words(depthM),
+      words: depthM === null ? lettersOf(bottom) : words(depthM),
       x: xM,
       y: yM,
       dyPx: -9,
@@ -102,6 +113,12 @@ export function soundingMarks(soundings: readonly DrawnSounding[], scene: Soundi
   );
   return [...marks, ...figures];
 }
+
+const SQUARE = 'm-2.3 -2.3h4.6v4.6h-4.6z';
+
+/** An open standard's letters where it has any, else the word. */
+const lettersOf = (bottom: Bottom): string =>
+  BOTTOM_ABBREVIATION[bottom] ?? (bottom === 'unknown' ? '?' : bottom);
 
 export type SoundingScene = { palette: Palette; view: View; words: (depthM: number) => string };
 

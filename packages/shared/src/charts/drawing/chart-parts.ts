@@ -1,6 +1,6 @@
 import { outlineInPlane } from '../../geometry/outline';
 import type { ChartView } from '../contract';
-import { bottomOf, layersOf } from './chart-part';
+import { bottomOf, changedWater, layersOf, pointsOf } from './chart-part';
 import type { MapParts } from './draw-map';
 import { groundOf } from './ground';
 
@@ -13,16 +13,18 @@ export type PartsWish = {
 /** A chart made ready for a map, in the layers that came and are wished for. */
 export function chartParts(chart: ChartView, { raisedM, stepM, shown }: PartsWish): MapParts {
   const layers = layersOf(chart);
+  const ground = groundOf({
+    outline: outlineInPlane(chart.origin, chart.outline),
+    depth: shown.depth && chart.depth && layers ? layers.depth : null,
+    isobaths: stepM === chart.contourStepM ? chart.isobaths : null,
+    stepM,
+    raisedM,
+  });
   return {
-    ground: groundOf({
-      outline: outlineInPlane(chart.origin, chart.outline),
-      depth: shown.depth && chart.depth && layers ? layers.depth : null,
-      isobaths: stepM === chart.contourStepM ? chart.isobaths : null,
-      stepM,
-      raisedM,
-    }),
+    ground,
     bottom: shown.bottom ? bottomOf(chart, layers) : [],
-    soundings: shown.soundings ? (chart.soundings ?? []) : [],
+    soundings: shown.soundings ? pointsOf(chart) : [],
+    changed: changedWater(chart, ground.water),
     pegs: chart.pegs,
     spots: [],
     cast: null,

@@ -61,6 +61,21 @@ export function unsurveyedMarks(ground: Ground, palette: Palette, view: View): M
   ];
 }
 
+const CHANGED_GAP_PX = 26;
+
+/** Water whose bottom has changed since it was surveyed: a wide broken hatch over all that is charted there, and the words. */
+export function changedMarks(areas: readonly Line[], ground: Ground, { palette, view }: Pen): Mark[] {
+  if (areas.length === 0) return [];
+  const hatch = stroked(diagonals(areas, view, CHANGED_GAP_PX), ruled(palette.ink, 0.9, [7, 5]));
+  return [
+    { ...stroked([...areas], ruled(palette.ink, 1.1, [7, 5])), closed: true },
+    { kind: 'clip', lines: [...areas], marks: [hatch] },
+    ...wordsIn(areas, { words: 'changed since', palette, view, water: ground.water }),
+  ];
+}
+
+type Pen = { palette: Palette; view: View };
+
 /** Bed that stands out of the water at this level. */
 export function dryMarks(ground: Ground, palette: Palette, view: View): Mark[] {
   if (!ground.depth || ground.dry.length === 0) return [];
@@ -73,8 +88,8 @@ export function dryMarks(ground: Ground, palette: Palette, view: View): Mark[] {
  * Lines at 45° on the page, however the map is turned, over the areas' own box; fixed to the lake. They lean against
  * the hatch of clay, from which nothing else tells them in black and white.
  */
-function diagonals(areas: readonly Line[], view: View): Line[] {
-  const gapM = UNSURVEYED_GAP_PX / view.pxPerM;
+function diagonals(areas: readonly Line[], view: View, gapPx = UNSURVEYED_GAP_PX): Line[] {
+  const gapM = gapPx / view.pxPerM;
   const turn = ((135 + view.turnDeg) * Math.PI) / 180; // of the lines, counter-clockwise from the plane's east
   const [cos, sin] = [Math.cos(turn), Math.sin(turn)];
   let [fromAlong, toAlong, fromAcross, toAcross] = [Infinity, -Infinity, Infinity, -Infinity];

@@ -8,10 +8,10 @@ import {
   type DrawnSounding,
   type DrawnSpot,
 } from './cast-marks';
-import { dryMarks, isobathMarks, tintMarks, unsurveyedMarks } from './depth-marks';
+import { changedMarks, dryMarks, isobathMarks, tintMarks, unsurveyedMarks } from './depth-marks';
 import type { Ground } from './ground';
 import { isobathLabels, type Taken } from './isobath-labels';
-import { filled, text, type Mark } from './mark';
+import { filled, text, type Line, type Mark } from './mark';
 import type { Palette } from './palette';
 import { pegMarks, shoreMarks, type DrawnPeg } from './shore-marks';
 import type { View } from './view';
@@ -24,6 +24,7 @@ export type MapParts = {
   pegs: readonly DrawnPeg[];
   spots: readonly DrawnSpot[];
   cast: DrawnCast | null;
+  changed?: readonly Line[] | undefined; // rings of water that changed since it was surveyed
 };
 
 export type MapChoice = {
@@ -51,6 +52,7 @@ export function drawMap(parts: MapParts, choice: MapChoice): Mark[] {
     ...isobathMarks(ground, palette, view),
     ...unsurveyedMarks(ground, palette, view),
     ...dryMarks(ground, palette, view),
+    ...changedMarks(parts.changed ?? [], ground, { palette, view }),
     ...soundings,
     ...figures,
     ...letters,
