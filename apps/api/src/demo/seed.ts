@@ -3,7 +3,7 @@ import { Account } from '@mereward/db/entities/accounts/account';
 import { Fishery } from '@mereward/db/entities/fisheries/fishery';
 import { FisheryRole } from '@mereward/db/entities/fisheries/fishery-role';
 import { LevelReading } from '@mereward/db/entities/lakes/level-reading';
-import type { DataSource } from 'typeorm';
+import type { DataSource, EntityManager } from 'typeorm';
 import { passwordHash } from '../accounts/password';
 import { readConfig } from '../config';
 import type { Ctx } from '../ctx';
@@ -12,13 +12,14 @@ import { putBoard } from '../lakes/boards';
 import { makeLake } from '../lakes/make-lake';
 import { putMark } from '../lakes/marks';
 import { makePeg } from '../lakes/pegs';
+import { seedGrabs, seedLead, seedWeedCut } from './seed-bottom';
 import { seedCharts } from './seed-charts';
 import { seedPhotos } from './seed-photos';
 import { seedSurvey } from './seed-survey';
 import { demoSurveys } from './surveys';
 import { demoCtx } from './demo-ctx';
 import { DEMO_LAKES, OSTLEMERE, OSTLEMERE_ID, type DemoLake } from './fishery';
-import { DEMO_PASSWORD, DEMO_PEOPLE, JOAN, MARIAN, PRIYA, SOFIA, TOM } from './people';
+import { DEMO_PASSWORD, DEMO_PEOPLE, IDRIS, JOAN, MARIAN, PRIYA, SOFIA, TOM } from './people';
 import { demoId } from './random';
 import { demoDays, demoLevelM, type DemoDays } from './survey-days';
 import { writeTicket } from '../bookings/service';
@@ -63,9 +64,20 @@ async function fill(source: DataSource, { days, now, files }: Filling): Promise<
     for (const lake of DEMO_LAKES) await seedLevels(demoCtx(tx, TOM, now), lake);
     for (const survey of demoSurveys(days))
       await seedSurvey(demoCtx(tx, survey.surveyor, new Date(survey.day.getTime() + DAY_MS)), survey);
+    await seedGround(tx, days);
     await seedTicket(demoCtx(tx, PRIYA, now));
     if (files !== null) await seedPhotos(demoCtx(tx, JOAN, days.farOstleFirst), files);
   });
+}
+
+/** What is known of the bottoms beside the casts: grabs, a lead's rate of fall, weed cut. */
+async function seedGround(tx: EntityManager, days: DemoDays): Promise<void> {
+  const [first] = demoSurveys(days);
+  const evening = new Date(days.farOstleFirst.getTime() + DAY_MS);
+  if (first) await seedGrabs(demoCtx(tx, JOAN, evening), first);
+  await seedLead(demoCtx(tx, JOAN, evening), days.farOstleFirst);
+  const cut = new Date(days.ostlePool.getTime() - 9 * DAY_MS);
+  await seedWeedCut(demoCtx(tx, IDRIS, new Date(cut.getTime() + DAY_MS)), cut);
 }
 
 async function seedPeople({ tx, now }: Ctx): Promise<void> {

@@ -124,7 +124,7 @@ function Row({ form, table, of, part, label }: RowProps) {
         {Object.keys(before).map((feel) => (
           <View key={feel} style={{ flexBasis: 132, flexGrow: 1, maxWidth: 210 }}>
             <Field
-              label={`${feelWords(part, feel)}, %`}
+              label={`${feelWords(part, feel)} %`}
               value={typed[feel] ?? ''}
               onChange={(text) => write(feel, text)}
               keypad="decimal"

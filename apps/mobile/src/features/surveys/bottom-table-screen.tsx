@@ -1,6 +1,7 @@
 import { useState } from 'react';
 import { useLocalSearchParams, useRouter } from 'expo-router';
 import type { BottomTableView } from '@mereward/shared/surveys/bottom-table-contract';
+import { View } from 'react-native';
 import { Button } from '@/components/button';
 import { Disclosure } from '@/components/disclosure';
 import { Empty } from '@/components/empty';
@@ -124,8 +125,10 @@ function Edit({ fisheryId, table }: { fisheryId: string; table: BottomTableView 
         title="Edit it"
         note="A new version is in force at once: for casts to come, and for kept ones when they are read again."
       >
-        <Kept words={kept ? 'The table is in force.' : null} />
-        <Button label="Edit a copy" onPress={() => setBegun(table)} />
+        {kept ? <Kept words="The table is in force." /> : null}
+        <View style={{ alignItems: 'flex-start' }}>
+          <Button label="Edit a copy" onPress={() => setBegun(table)} />
+        </View>
       </Section>
     );
   return (
@@ -142,7 +145,9 @@ function Edit({ fisheryId, table }: { fisheryId: string; table: BottomTableView 
           setKept(true);
         }}
       />
-      <Button label="Leave it" onPress={() => setBegun(null)} />
+      <View style={{ alignItems: 'flex-start' }}>
+        <Button label="Leave it" kind="quiet" onPress={() => setBegun(null)} />
+      </View>
     </Section>
   );
 }
