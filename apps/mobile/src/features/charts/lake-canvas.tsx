@@ -34,7 +34,7 @@ type Props = {
   under: Draw;
   over: Draw;
   handles: readonly Handle[];
-  onTap: (place: Point, reachM: number) => void;
+  onTap?: ((place: Point, reachM: number) => void) | undefined;
   onPick?: ((id: string) => void) | undefined;
   /** `begins` is true for the first step of each drag. */
   onMove: (id: string, place: Point, begins: boolean) => void;
@@ -107,7 +107,7 @@ export function LakeCanvas({ label, frame, under, over, handles, heightPx = 440,
           label={label}
           onView={onView}
           onFit={fit}
-          onTap={(place) => deeds.onTap(place, reachM)}
+          onTap={(place) => deeds.onTap?.(place, reachM)}
           grabs={grab}
           onDrag={drag}
         />

@@ -56,6 +56,9 @@ type Props = {
   beside?: ReactNode;
 };
 
+/** While one walks, a finger that slips on the canvas changes nothing. */
+const NO_HANDLES: readonly [] = [];
+
 const idOf = (ring: number, index: number): string => `${String(ring)}.${String(index)}`;
 const spotOf = (id: string) => {
   const [ring = 0, index = 0] = id.split('.').map(Number);
@@ -140,10 +143,10 @@ export function OutlineEditor({ sketch, onChange, origin, under, error, keptAs, 
           frame={shown}
           under={water}
           over={over}
-          handles={handles}
+          handles={walking.walk ? NO_HANDLES : handles}
           backdrop={backdrop}
           handlesFromPxPerM={fromPxPerM}
-          onTap={tap}
+          onTap={walking.walk ? undefined : tap}
           onPick={pick}
           onMove={(id, point, begins) =>
             deed.drag(movePlace(sketch, spotOf(id), placeOf(origin, point)), begins)
@@ -155,11 +158,15 @@ export function OutlineEditor({ sketch, onChange, origin, under, error, keptAs, 
       <View style={{ flexGrow: 1, flexBasis: 320, gap: space.medium, minWidth: 0 }}>
         {walking.walk ? null : <SketchButtons sketch={sketch} deed={deed} />}
         <OutlineWalk walking={walking} sketch={sketch} onRing={replace} />
-        <OutlineFound sketch={settled} reading={reading} crowded={fromPxPerM > 0 && open === null} />
-        {error ? <FieldError id="outline" words={error} /> : null}
-        {beside}
-        <OutlineImport onRead={replace} replaces={sketch.rings.length > 0} />
-        <OutlinePoints sketch={sketch} onChange={deed.change} chosen={chosen} />
+        {walking.walk ? null : (
+          <>
+            <OutlineFound sketch={settled} reading={reading} crowded={fromPxPerM > 0 && open === null} />
+            {error ? <FieldError id="outline" words={error} /> : null}
+            {beside}
+            <OutlineImport onRead={replace} replaces={sketch.rings.length > 0} />
+            <OutlinePoints sketch={sketch} onChange={deed.change} chosen={chosen} />
+          </>
+        )}
       </View>
     </View>
   );
