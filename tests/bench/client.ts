@@ -11,6 +11,7 @@ import { benchLine } from './bench-line';
 import { openHelloPage } from './hello-page';
 import { lightLines } from './light-page';
 import { median } from './median';
+import { repeatVisitLine } from './repeat-visit';
 
 const ROUNDS = 5;
 /** A blank application of this stack with split routes, brotli, measured once; and its goal's multiple. */
@@ -160,6 +161,7 @@ export async function benchClient(site: string): Promise<string[]> {
         lightUrl: `${site}/p/${page.shortUrl.slice(-6)}`,
         staticUrl: `${hello.url}static`,
       })),
+      await repeatVisitLine(browser, { pegUrl, heading: `Peg ${page.number}` }),
       await dragLine(browser, `${site}/water/charts/${chartId}`, hello.url),
     ];
   } finally {

@@ -57,6 +57,10 @@ test('a whole survey is filled in with no signal, outlives a reload and a sign-o
   await page.goto(`/bank/surveys/${visitId}`);
   await expect(page.getByRole('heading', { name: '6 casts' })).toBeVisible();
   await expect(page.getByText('waiting to be sent').first()).toBeVisible();
+  const phone = page.viewportSize() ?? { width: 390, height: 844 };
+  await page.setViewportSize({ width: 1280, height: 800 }); // a tablet on the bank, which never fetched a wide table
+  await expect(page.getByText('waiting to be sent').first()).toBeVisible();
+  await page.setViewportSize(phone);
   await page.getByRole('link', { name: 'Close the visit' }).click();
   await page.getByLabel('Gauge board FO-G1 reads now, m').fill('0.62');
   await page.getByRole('button', { name: 'Close the visit' }).click();
@@ -204,6 +208,7 @@ test('a refusal is kept with its words, holds its own visit only, and goes when 
   await expect(waiting).toHaveCount(2);
   await expect(waiting.first()).toContainText('This visit is closed');
   await expect(waiting.first()).toContainText('Open another visit for it.');
+  await expect(waiting.first()).toContainText('14 wraps');
   await expect(waiting.last()).toContainText('Stands behind “Cast 1”');
   for (const left of [1, 0]) {
     await expect(waiting.first()).toContainText('refused');
@@ -212,6 +217,33 @@ test('a refusal is kept with its words, holds its own visit only, and goes when 
     await expect(waiting).toHaveCount(left);
   }
   await expect(page.getByText('Nothing waits')).toBeVisible();
+});
+
+test('what was refused for a fast clock is opened again as it was typed, put right, and sent', async ({
+  pageOf,
+  site,
+}) => {
+  const water = await aWater(site);
+  const joan = await Asking.as('joan', site);
+  const page = await pageOf({ who: 'joan', now: new Date(Date.now() + 3_600_000).toISOString() });
+  await packBeforeTheSignalGoes(page, water.lakeId);
+  await page.context().setOffline(true);
+  await page.goto(`/bank/levels/${water.lakeId}`);
+  await page.getByLabel('Board FO-G1 reads, metres').fill('0.60');
+  await page.getByRole('button', { name: 'Keep the reading' }).click();
+  await expect(page.getByText('It waits to be sent.')).toBeVisible();
+  await page.context().setOffline(false);
+  await expect(sending(page)).toContainText('1 refused');
+  await sending(page).getByRole('link').click();
+  const refused = page.getByRole('list', { name: 'Waiting to be sent' }).getByRole('listitem');
+  await expect(refused).toContainText('This reading lies in the future');
+  await page.clock.setFixedTime(new Date());
+  await refused.getByRole('link', { name: 'Open it again' }).click();
+  await expect(page.getByLabel('Board FO-G1 reads, metres')).toHaveValue('0.60');
+  await page.getByRole('button', { name: 'Keep the reading' }).click();
+  await expect(page.getByText('Nothing waits')).toBeVisible();
+  const { boards } = await joan.get(`/lakes/${water.lakeId}`, LakeView);
+  expect(boards[0]?.readings.map(({ levelM }) => levelM)).toEqual([0.6]);
 });
 
 test('a phone that has no room left says so and keeps what is typed', async ({ pageOf, site }) => {

@@ -99,7 +99,8 @@ async function run(): Promise<void> {
 function tryLater(): void {
   clearTimeout(timer);
   if (!outboxNow().entries.some(({ state }) => state === 'waiting') && outboxNow().locked === 0) return;
-  timer = setTimeout(() => void sendWaiting(), pauseMs(Math.max(1, failures)));
+  const least = noNetwork() ? 5 : 1; // the browser says so itself when a network comes
+  timer = setTimeout(() => void sendWaiting(), pauseMs(Math.max(least, failures)));
 }
 
 let running: Promise<void> = Promise.resolve();

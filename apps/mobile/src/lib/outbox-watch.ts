@@ -4,6 +4,7 @@ import { onReturn } from '@/lib/on-return';
 import { dropSent, forgetOpened, lookAgain } from '@/lib/outbox';
 import { sendWaiting } from '@/lib/outbox-sender';
 import { outboxSignal } from '@/lib/outbox-signal';
+import { KEEP_MS } from '@/lib/read-rows';
 import { sessionStore } from '@/lib/session-store';
 import { tabTalk } from '@/lib/tab-talk';
 
@@ -54,6 +55,7 @@ export function watchOutbox(): void {
   sessionStore.subscribe(() => void whoIsHere());
   void dropOtherKeys(who)
     .then(() => lookAgain(false))
+    .then(() => dropSent(({ at }) => Date.parse(at) < Date.now() - KEEP_MS)) // no reading it could stand beside is kept
     .then(whoIsHere)
     .then(sendWaiting);
 }

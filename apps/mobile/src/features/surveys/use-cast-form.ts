@@ -1,6 +1,7 @@
 import { useEffect, useRef } from 'react';
 import type { LakeView } from '@mereward/shared/lakes/contract';
 import { Problem } from '@mereward/shared/problems/problem';
+import { castWords } from '@mereward/shared/surveys/cast-words';
 import type { CastView, KeepCast, VisitView } from '@mereward/shared/surveys/contract';
 import type { Reducing } from '@mereward/shared/surveys/reducing-contract';
 import { useStance } from '@/features/surveys/api';
@@ -65,8 +66,7 @@ export function useCastForm({ lake, visit, casts, reducing, again, onKept }: Ter
       seq: (last?.seq ?? 0) + 1,
       reduced: { ...reduced, steps: [] },
     };
-    const pegNumber = lake.pegs.find(({ id }) => id === cast.pegId)?.number ?? '';
-    return { visit, cast, shown, pegNumber, typed: form.getValues() };
+    return { visit, cast, shown, words: wordsOf(lake, cast), typed: form.getValues() };
   };
   useKeptMeanwhile(form, casts, onKept);
   const typed = form.watch();
@@ -95,6 +95,13 @@ export function useCastForm({ lake, visit, casts, reducing, again, onKept }: Ter
     surroundings,
     reduced,
   };
+}
+
+function wordsOf(lake: LakeView, { pegId, observation }: KeepCast): string {
+  const { aim } = observation;
+  const mark = aim.by === 'mark' ? lake.marks.find(({ id }) => id === aim.markId) : undefined;
+  const peg = lake.pegs.find(({ id }) => id === pegId)?.number ?? '';
+  return castWords(observation, { peg, mark: mark?.details.name ?? null });
 }
 
 /** The first cast of a visit: from the first peg of the walk, over the mark straight out of it. */

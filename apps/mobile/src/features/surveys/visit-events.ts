@@ -31,18 +31,19 @@ export type CastMade = {
   visit: VisitView;
   cast: KeepCast;
   shown: CastView;
-  pegNumber: string;
+  /** All of it in words: were it refused for good, it can still be read off and made again by hand. */
+  words: string;
   typed: unknown;
 };
 
 /** A cast to be kept. `shown`: with its reduction as this device works it out. */
-export const keepingOf = ({ visit, cast, shown, pegNumber, typed }: CastMade): OutboxEvent => ({
+export const keepingOf = ({ visit, cast, shown, words, typed }: CastMade): OutboxEvent => ({
   id: cast.id,
   kind: 'keep-cast',
   ...onVisit(visit),
   at: cast.observedAt,
   title: `Cast ${String(shown.seq)}`,
-  note: `${visit.title}, peg ${pegNumber}, ${cast.observation.lineText} wraps`,
+  note: `${visit.title}: ${words}`,
   method: 'POST',
   path: `/visits/${visit.id}/casts`,
   body: cast,
