@@ -3,7 +3,7 @@ import { BOTTOM_ABBREVIATION } from '../../surveys/bottom-abbreviation';
 import type { Bottom, Grade } from '../../surveys/contract';
 import { ruled, stroked, text, type GlyphsMark, type Line, type Mark, type PathMark } from './mark';
 import type { Palette } from './palette';
-import type { View } from './view';
+import { toPage, type View } from './view';
 
 /** A cast drawn on the chart. Bearings are the plane's, degrees clockwise from north. */
 export type DrawnCast = {
@@ -100,7 +100,7 @@ export function soundingMarks(soundings: readonly DrawnSounding[], scene: Soundi
     ...(felt.length > 0 ? [{ ...dots(felt, palette, false), glyph: SQUARE }] : []),
   ];
   if (view.pxPerM < FIGURES_FROM_PX_PER_M) return marks;
-  const figures = soundings.map(({ xM, yM, depthM, bottom }) =>
+  const figures = withRoom([...felt, ...leantOn, ...others], view).map(({ xM, yM, depthM, bottom }) =>
     text({
       words: depthM === null ? lettersOf(bottom) : words(depthM),
       x: xM,
@@ -119,6 +119,25 @@ const SQUARE = 'm-2.3 -2.3h4.6v4.6h-4.6z';
 /** An open standard's letters where it has any, else the word. */
 const lettersOf = (bottom: Bottom): string =>
   BOTTOM_ABBREVIATION[bottom] ?? (bottom === 'unknown' ? '?' : bottom);
+
+const FIGURE_ACROSS_PX = 24;
+const FIGURE_UP_PX = 12;
+
+/** Those whose figures have room beside the ones before them; a figure under another is read as neither. */
+function withRoom(soundings: readonly DrawnSounding[], view: View): DrawnSounding[] {
+  const taken = new Map<string, { x: number; y: number }[]>(); // by boxes of a figure's size
+  return soundings.filter(({ xM, yM }) => {
+    const { x, y } = toPage(view, xM, yM);
+    const [column, row] = [Math.floor(x / FIGURE_ACROSS_PX), Math.floor(y / FIGURE_UP_PX)];
+    for (let i = column - 1; i <= column + 1; i++)
+      for (let j = row - 1; j <= row + 1; j++)
+        for (const other of taken.get(`${i} ${j}`) ?? [])
+          if (Math.abs(other.x - x) < FIGURE_ACROSS_PX && Math.abs(other.y - y) < FIGURE_UP_PX) return false;
+    const key = `${column} ${row}`;
+    taken.set(key, [...(taken.get(key) ?? []), { x, y }]);
+    return true;
+  });
+}
 
 export type SoundingScene = { palette: Palette; view: View; words: (depthM: number) => string };
 
