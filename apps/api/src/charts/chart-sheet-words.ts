@@ -48,7 +48,7 @@ export function sheetKey(chart: ChartView): string[] {
       : []),
     ...(soundings
       ? [
-          `${soundings.some(({ ofLog }) => ofLog) ? 'Soundings' : 'Casts'} as points with their depth: full, grade A (place within 1 m, depth within 0.15 m, both one standard deviation) or B (2 m, 0.3 m); hollow, C (4 m)${soundings.some(({ grade }) => grade === 'D') ? ' or D (more, or something missing: for staff only)' : ''}.`,
+          `${soundings.some(({ ofLog }) => ofLog) ? 'Soundings' : 'Casts'} as points, with their depth where it has room: full, grade A (place within 1 m, depth within 0.15 m, both one standard deviation) or B (2 m, 0.3 m); hollow, C (4 m)${soundings.some(({ grade }) => grade === 'D') ? ' or D (more, or something missing: for staff only)' : ''}.`,
         ]
       : []),
     ...(substrate

@@ -20,7 +20,7 @@ import { FOOT_M } from '@mereward/shared/units/length';
 import { markup, Markup } from '../http/markup';
 import { lightDocument, type LightDocument } from './light-frame';
 import { lightMap, type LightMap } from './light-map';
-import { lightSpots } from './light-spots';
+import { lightNeighbours, lightSpots } from './light-spots';
 import { wishQuery, type LightWish } from './light-wish';
 
 /** A peg's page for whoever has no script, no time or one bar of signal; it says what the peg's screen says. */
@@ -32,6 +32,7 @@ export function lightPeg(page: PegPageView, wish: LightWish): LightDocument {
 ${warnings(details)}
 ${water(map)}
 ${lightSpots(page, units)}
+${lightNeighbours(page, units)}
 ${page.spots && page.spots.length > 0 && sticks(wish)}
 <p class="screen"><a class="go" href="${wishQuery(otherUnit(units))}">${units.length === 'm' ? 'Show it in feet' : 'Show it in metres'}</a></p>
 ${caption(page, units)}

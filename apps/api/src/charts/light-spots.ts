@@ -36,6 +36,16 @@ ${shown && markup`<p class="figure">${depthNow(shown.depthM, units.length)} <spa
 ${bottom && markup`<p class="figure">${bottom.charAt(0).toUpperCase() + bottom.slice(1)} <span>${bottomCaption(spot)}</span></p>`}
 <p>${spot.words}.</p>
 <p class="soft">${provenance(spot)}</p>
+${spot.water && !spot.water.own && markup`<p><strong>${spot.water.words}</strong></p>`}
 ${spot.note !== '' && markup`<p>${spot.note}</p>`}
 ${spot.presentation && markup`<p>What suits this bottom: ${spot.presentation} <strong>${rigCaution}</strong></p>`}`;
+}
+
+/** Other pegs' spots that lie in this peg's water, in a line each. */
+export function lightNeighbours({ neighbourSpots }: PegPageView, units: Units): Markup | null {
+  if (!neighbourSpots || neighbourSpots.length === 0) return null;
+  return markup`<h2>Neighbours’ spots in this peg’s water</h2><ul>${neighbourSpots.map(
+    ({ peg, spot }) =>
+      markup`<li>${spot.name} (of peg ${peg.number}): ${ownCountWords(spot, units)}, ${aimWords(spot)}. ${spot.words}.</li>`,
+  )}</ul>`;
 }
