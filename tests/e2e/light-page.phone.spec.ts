@@ -27,7 +27,7 @@ test.describe('with scripts switched off', () => {
     await expect(counts).toContainText('of 10 ft');
     await page.getByRole('link', { name: 'Show it in feet' }).click();
     await expect(counts).toContainText('of 10 ft');
-    await expect(page.getByText(/\d ft deep/).first()).toBeVisible();
+    await expect(page.locator('ol .figure').nth(1)).toContainText(/\sft\s+deep/);
   });
 
   test('a slip in the code is told, and it is typed again', async ({ page }) => {
