@@ -1,7 +1,9 @@
 import { Peg } from '@mereward/db/entities/lakes/peg';
+import type { PegPageView } from '@mereward/shared/charts/contract';
 import { PEG_CODE_LENGTH, PEG_CODE_LETTERS, readPegCode } from '@mereward/shared/lakes/peg-code';
 import compression from 'compression';
 import { Router, type Request, type Response } from 'express';
+import { createHash } from 'node:crypto';
 import { STRANGER, type Ctx } from '../ctx';
 import { limitPages } from '../http/limits';
 import { markup } from '../http/markup';
@@ -9,7 +11,7 @@ import { answering } from '../http/problem';
 import { serverOf } from '../http/server';
 import { lightDocument, type LightDocument } from './light-frame';
 import { lightPeg } from './light-peg';
-import { lightWish } from './light-wish';
+import { lightWish, type LightWish } from './light-wish';
 import { pegPage } from './peg-page';
 
 /**
@@ -31,9 +33,24 @@ export function lightPages(): Router {
       const peg = code && (await ctx.tx.findOne(Peg, { select: { id: true }, where: { code } }));
       if (!peg) return send(res, 404, askPage(req.params.code));
       res.set('Cache-Control', 'public, max-age=60');
-      send(res, 200, lightPeg(await pegPage(ctx, peg.id), lightWish(req.query)));
+      send(res, 200, drawnLately(await pegPage(ctx, peg.id), lightWish(req.query)));
     })
     .use(answerInWords);
+}
+
+/** Pages drawn lately, by all that they are drawn from; the drawing costs as much as everything before it. */
+const lately = new Map<string, LightDocument>();
+const MOST_KEPT = 200; // at some forty kilobytes each
+
+function drawnLately(page: PegPageView, wish: LightWish): LightDocument {
+  const key = createHash('sha256')
+    .update(JSON.stringify([page, wish]))
+    .digest('base64');
+  const drawn = lately.get(key) ?? lightPeg(page, wish);
+  lately.delete(key); // set again as the newest of all
+  lately.set(key, drawn);
+  for (const oldest of lately.keys()) if (lately.size > MOST_KEPT) lately.delete(oldest);
+  return drawn;
 }
 
 function strangersCtx(req: Request): Ctx {
