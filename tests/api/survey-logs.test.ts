@@ -236,6 +236,11 @@ describe('a log of soundings', { timeout: 60_000 }, () => {
       kind: 'invalid',
       title: 'There was no file in what was sent',
     });
+    const thirteen = Object.fromEntries(Array.from({ length: 13 }, (_, i) => [`${i}.log`, 'x']));
+    expect(problem((await bring(visitId, thirteen)).body)).toMatchObject({
+      kind: 'invalid',
+      detail: expect.stringContaining('at most 12 files'),
+    });
     const { log } = await looked({ 'boat.log': boatLog });
     const wrong = await joan
       .post(`/logs/${log.id}/look`)

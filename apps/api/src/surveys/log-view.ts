@@ -53,7 +53,7 @@ function shapeLog(log: SoundingImport, names: ReadonlyMap<string, string>, may: 
     share: log.share,
     error: log.error,
     options: log.options,
-    preview: log.preview,
+    preview: busy ? null : log.preview, // asked for every second meanwhile, and of no use
     report: log.report,
     importedBy: names.get(log.importedBy) ?? '',
     importedAt: log.importedAt.toISOString(),

@@ -133,7 +133,7 @@ export const LogView = z.object({
   share: z.number(),
   error: z.string().nullable(),
   options: LogOptions,
-  preview: LogPreview.nullable(),
+  preview: LogPreview.nullable(), // null while it is being read
   report: LogReport.nullable(), // once it is taken in
   importedBy: z.string(),
   importedAt: z.iso.datetime(),
