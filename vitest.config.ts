@@ -1,6 +1,9 @@
 import { fileURLToPath } from 'node:url';
 import { defineConfig } from 'vitest/config';
 
+/** Far beyond what any test takes alone: a loaded machine makes nothing wrong. */
+const PATIENCE_MS = 60_000;
+
 export default defineConfig({
   test: {
     projects: [
@@ -9,6 +12,7 @@ export default defineConfig({
           name: 'unit',
           include: ['packages/*/src/**/*.test.ts', 'apps/*/src/**/*.test.ts', 'scripts/**/*.test.ts'],
           setupFiles: ['tests/support/fast-check-seed.ts'],
+          testTimeout: PATIENCE_MS,
         },
         resolve: { alias: { '@': fileURLToPath(new URL('./apps/mobile/src', import.meta.url)) } },
       },
@@ -18,6 +22,7 @@ export default defineConfig({
           name: 'reference',
           include: ['tests/reference/**/*.test.ts'],
           setupFiles: ['tests/support/fast-check-seed.ts'],
+          testTimeout: PATIENCE_MS,
         },
       },
       {
@@ -26,8 +31,8 @@ export default defineConfig({
           include: ['tests/api/**/*.test.ts'],
           globalSetup: ['tests/support/postgres.ts'],
           setupFiles: ['tests/support/fast-check-seed.ts'],
-          testTimeout: 20_000,
-          hookTimeout: 60_000,
+          testTimeout: PATIENCE_MS,
+          hookTimeout: PATIENCE_MS,
         },
       },
     ],
