@@ -62,6 +62,7 @@ export function unsurveyedMarks(ground: Ground, palette: Palette, view: View): M
 }
 
 const CHANGED_GAP_PX = 26;
+const RAISED_PX = 26; // clear of the words of unsurveyed water, which stand in its middle
 
 /** Water whose bottom has changed since it was surveyed: a wide broken hatch over all that is charted there, and the words. */
 export function changedMarks(areas: readonly Line[], ground: Ground, { palette, view }: Pen): Mark[] {
@@ -70,7 +71,7 @@ export function changedMarks(areas: readonly Line[], ground: Ground, { palette, 
   return [
     { ...stroked([...areas], ruled(palette.ink, 1.1, [7, 5])), closed: true },
     { kind: 'clip', lines: [...areas], marks: [hatch] },
-    ...wordsIn(areas, { words: 'changed since', palette, view, water: ground.water }),
+    ...wordsIn(areas, { words: 'changed since', palette, view, water: ground.water, raisedPx: RAISED_PX }),
   ];
 }
 
@@ -111,13 +112,19 @@ function diagonals(areas: readonly Line[], view: View, gapPx = UNSURVEYED_GAP_PX
   return lines;
 }
 
-type WordsScene = { words: string; palette: Palette; view: View; water: readonly Line[] };
+type WordsScene = {
+  words: string;
+  palette: Palette;
+  view: View;
+  water: readonly Line[];
+  raisedPx?: number; // above the middle, where there is room
+};
 
 const WORDS_ACROSS_PX = 92;
 const WORDS_ROOM_PX = 13;
 
 /** The words in every area with room for them, level on the page however the map is turned, and never on land. */
-function wordsIn(areas: readonly Line[], { words, palette, view, water }: WordsScene): Mark[] {
+function wordsIn(areas: readonly Line[], { words, palette, view, water, raisedPx = 0 }: WordsScene): Mark[] {
   const onPage = areas.map((area) => pageLine(area, view));
   const shores = water.map((ring) => pageLine(ring, view));
   const holes = onPage.filter((area) => turnOf(area) < 0);
@@ -128,7 +135,8 @@ function wordsIn(areas: readonly Line[], { words, palette, view, water }: WordsS
     const ends = [-0.45, 0, 0.45].map((share) => place.xM + share * WORDS_ACROSS_PX);
     if (!ends.every((x) => isInside(shores, x, place.yM))) return [];
     const { xM, yM } = fromPage(view, place.xM, -place.yM);
-    return [text({ words, x: xM, y: yM, colour: palette.inkSoft, halo: palette.paper, slanted: true })];
+    const dyPx = place.roomM < raisedPx + WORDS_ROOM_PX ? 0 : -raisedPx;
+    return [text({ words, x: xM, y: yM, dyPx, colour: palette.inkSoft, halo: palette.paper, slanted: true })];
   });
 }
 
