@@ -1,6 +1,7 @@
 import { ruled, stroked, text, type Line, type Mark } from '@mereward/shared/charts/drawing/mark';
 import type { Palette } from '@mereward/shared/charts/drawing/palette';
 import { toPage, type View } from '@mereward/shared/charts/drawing/view';
+import { inksOver } from './chart-inks';
 import type { Tale } from './tale';
 
 type Scene = { palette: Palette; view: View; chosenKey: string | null };
@@ -24,10 +25,11 @@ const isChange = ({ kind }: Tale): boolean => kind !== 'feature' && kind !== 'pa
 
 function outlineOf({ key, kind, certain, rings }: Tale, { palette, chosenKey }: Scene): Mark[] {
   const chosen = key === chosenKey;
+  const { ink, halo } = inksOver(palette);
   const dash = kind === 'patch' ? null : kind === 'feature' ? (certain ? [7, 4] : [2, 4]) : null;
-  const colour = chosen ? palette.selected : palette.labelDark;
+  const colour = chosen ? palette.selected : ink;
   const ring = (stroke: ReturnType<typeof ruled>): Mark => ({ ...stroked(rings, stroke), closed: true });
-  return [ring(ruled(palette.labelLight, chosen ? 5 : 3.4)), ring(ruled(colour, chosen ? 2.4 : 1.4, dash))];
+  return [ring(ruled(halo, chosen ? 4.6 : 3)), ring(ruled(colour, chosen ? 2.4 : 1.4, dash))];
 }
 
 const LETTER_PX = 6.4;
@@ -57,21 +59,22 @@ const DISC = 'm-9 0a9 9 0 1 0 18 0a9 9 0 1 0 -18 0z';
 
 function signOf({ key, kind, sign, certain, xM, yM }: Tale, { palette, chosenKey }: Scene): Mark[] {
   const chosen = key === chosenKey;
+  const { ink, halo } = inksOver(palette);
   if (kind === 'patch')
     return [
       {
         kind: 'glyphs',
         at: [xM, yM],
         glyph: DISC,
-        fill: chosen ? palette.selected : palette.labelLight,
-        stroke: ruled(chosen ? palette.labelLight : palette.labelDark, 1.4),
+        fill: chosen ? palette.selected : halo,
+        stroke: ruled(chosen ? halo : ink, 1.4),
       },
       text({
         words: sign,
         x: xM,
         y: yM,
         bold: true,
-        colour: chosen ? palette.onSelected : palette.labelDark,
+        colour: chosen ? palette.onSelected : ink,
       }),
     ];
   return [
@@ -81,8 +84,8 @@ function signOf({ key, kind, sign, certain, xM, yM }: Tale, { palette, chosenKey
       y: yM,
       slanted: true,
       bold: chosen,
-      colour: palette.labelDark,
-      halo: palette.labelLight,
+      colour: ink,
+      halo,
     }),
   ];
 }
@@ -101,10 +104,11 @@ function hatchOf(tale: Tale, { palette, view, chosenKey }: Scene): Mark {
     if (tale.kind !== 'shallower') lines.push([x, north, x + heightM, south]);
     if (tale.kind !== 'deeper') lines.push([x, south, x + heightM, north]);
   }
-  const colour = tale.key === chosenKey ? palette.selected : palette.labelDark;
+  const { ink, halo } = inksOver(palette);
+  const colour = tale.key === chosenKey ? palette.selected : ink;
   return {
     kind: 'clip',
     lines: tale.rings,
-    marks: [stroked(lines, ruled(palette.labelLight, 2.2)), stroked(lines, ruled(colour, 0.9))],
+    marks: [stroked(lines, ruled(halo, 2.2)), stroked(lines, ruled(colour, 0.9))],
   };
 }

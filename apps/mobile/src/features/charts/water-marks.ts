@@ -2,6 +2,7 @@ import { mixed } from '@mereward/shared/charts/drawing/colour';
 import { filled, ruled, stroked, text, type Mark } from '@mereward/shared/charts/drawing/mark';
 import type { Palette } from '@mereward/shared/charts/drawing/palette';
 import type { PegWater } from '@mereward/shared/lakes/peg-water-contract';
+import { inksOver } from './chart-inks';
 import { sharedLetters } from './peg-words';
 
 type Rings = PegWater['rings'];
@@ -34,12 +35,13 @@ export function bordersOnce(rings: Rings): number[][] {
 export function waterMarks(pegs: readonly PegWater[], palette: Palette, chosenId: string | null): Mark[] {
   const chosen = pegs.find(({ pegId }) => pegId === chosenId);
   const borders = bordersOnce(pegs.flatMap(({ rings }) => rings));
+  const { ink, halo } = inksOver(palette);
   const own = (stroke: ReturnType<typeof ruled>): Mark[] =>
     chosen ? [{ ...stroked(chosen.rings, stroke), closed: true }] : [];
   return [
-    stroked(borders, ruled(palette.labelLight, 2)),
-    stroked(borders, ruled(palette.labelDark, 1, [5, 3])),
-    ...own(ruled(palette.labelLight, 4.6)),
+    stroked(borders, ruled(halo, 2)),
+    stroked(borders, ruled(ink, 1, [5, 3])),
+    ...own(ruled(halo, 4.6)),
     ...own(ruled(palette.selected, 2.2)),
   ];
 }
