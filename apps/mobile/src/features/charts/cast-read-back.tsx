@@ -8,6 +8,7 @@ import { MEASURE_PX, space } from '@/constants/layout';
 import { useUnits } from '@/hooks/use-units';
 import { length } from '@/lib/format';
 import { useCastReading, type SaidCast } from './chart-answers-api';
+import { sentences, waterUnlessWarned } from './sentences';
 
 type Props = { pegId: string; cast: SaidCast };
 
@@ -18,7 +19,11 @@ export function CastReadBack({ pegId, cast }: Props) {
     <Loaded query={reading} waiting="Reading the cast back…">
       {(view) => (
         <View role="status" style={{ gap: space.hair, alignItems: 'flex-start', maxWidth: MEASURE_PX }}>
-          {view.ok ? <Read view={view} pegId={pegId} /> : <Text>{`${view.reason}. ${view.remedy}.`}</Text>}
+          {view.ok ? (
+            <Read view={view} pegId={pegId} />
+          ) : (
+            <Text>{sentences([view.reason, view.remedy])}</Text>
+          )}
         </View>
       )}
     </Loaded>
@@ -33,7 +38,7 @@ function Read({ view, pegId }: { view: Extract<CastReading, { ok: true }>; pegId
     <>
       <Text weight="semibold">{words}</Text>
       <Text size="small" tone="inkSoft">
-        {`So counted and aimed, 95 casts in 100 land within ${length(spreadM, units)} of it. ${place.water.words}`}
+        {`So counted and aimed, 95 casts in 100 land within ${length(spreadM, units)} of it. ${sentences(waterUnlessWarned(place.water.words, warnings))}`}
       </Text>
       {age === 'changed' || age === 'old' ? (
         <Text size="small" tone="amber">{`${AGE_WORDS[age]}.`}</Text>

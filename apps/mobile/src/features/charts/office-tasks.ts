@@ -46,8 +46,8 @@ function reportTask({ id, details }: LakeView, reports: Known['reports']): Offic
     waiting === 1
       ? `An angler found ${details.name} not as charted`
       : `${waiting} reports that ${details.name} is not as charted`;
-  const href = '/office/charts/disagreements';
-  return [{ key: `${id}.reports`, title, note: 'Hold them against the casts, then accept or decline', href }];
+  const note = `Hold ${waiting === 1 ? 'it' : 'them'} against the casts, then accept or decline`;
+  return [{ key: `${id}.reports`, title, note, href: '/office/charts/disagreements' }];
 }
 
 function missingTasks({ id, details: { name }, pegs, boards, marks, may }: LakeView): OfficeTask[] {

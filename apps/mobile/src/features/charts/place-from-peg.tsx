@@ -8,6 +8,7 @@ import { Text } from '@/components/text';
 import { space } from '@/constants/layout';
 import { useSameSpot } from './chart-answers-api';
 import { placeOf } from './outline-drawing';
+import { sentences, waterUnlessWarned } from './sentences';
 import { useChartUnits } from './use-chart-units';
 
 type Props = { chart: ChartView; pegId: string; place: Point };
@@ -24,7 +25,7 @@ export function PlaceFromPeg({ chart, pegId, place }: Props) {
         view.ok ? (
           <View style={{ gap: space.hair, alignItems: 'flex-start' }}>
             <Text>
-              {`From peg ${number}: ${ownCountWords(view.yourSticks ?? view.surveySticks, units)}, ${aimWords(view.surveySticks)}. ${view.place.water.words}`}
+              {`From peg ${number}: ${ownCountWords(view.yourSticks ?? view.surveySticks, units)}, ${sentences([aimWords(view.surveySticks), ...waterUnlessWarned(view.place.water.words, view.warnings)])}`}
             </Text>
             {view.warnings
               .filter((words) => words !== view.place.water.words)
@@ -40,7 +41,7 @@ export function PlaceFromPeg({ chart, pegId, place }: Props) {
             />
           </View>
         ) : (
-          <Text tone="inkSoft">{`${view.reason}. ${view.remedy}.`}</Text>
+          <Text tone="inkSoft">{sentences([view.reason, view.remedy])}</Text>
         )
       }
     </Loaded>

@@ -7,6 +7,7 @@ import { useUnits } from '@/hooks/use-units';
 import { length, percent } from '@/lib/format';
 import { useSimilarPegs } from './chart-answers-api';
 import { PEG_STATUS } from './peg-words';
+import { sentences } from './sentences';
 
 /** Pegs most like this one, with what is alike and what differs: where to go when this one is taken. */
 export function SimilarPegs({ pegId }: { pegId: string }) {
@@ -49,6 +50,6 @@ const titleOf = ({ number, name, sameLake, lakeName }: SimilarPeg): string =>
 
 function noteOf({ likeness, distanceM, sameLake, alike, differs }: SimilarPeg, words: (m: number) => string) {
   const away = sameLake ? `, ${words(distanceM)} away` : '';
-  const other = differs.length ? ` But: ${differs.join('. ')}.` : '';
-  return `${percent(likeness)} alike${away}. ${alike.join('. ')}${alike.length ? '.' : ''}${other}`;
+  const other = differs.length ? ` But: ${sentences(differs)}` : '';
+  return `${percent(likeness)} alike${away}. ${sentences(alike)}${other}`;
 }

@@ -8,6 +8,7 @@ import { Text } from '@/components/text';
 import { space } from '@/constants/layout';
 import { useUnits } from '@/hooks/use-units';
 import { useSameSpot } from './chart-answers-api';
+import { sentences, waterUnlessWarned } from './sentences';
 
 type Props = { lake: LakeView; pegId: string; spot: { id: string; name: string } };
 
@@ -36,21 +37,19 @@ export function SpotFromAnother({ lake, pegId, spot }: Props) {
                 <Text weight="semibold">
                   {`From peg ${number}: ${ownCountWords(view.yourSticks ?? view.surveySticks, units)}, ${aimWords(view.surveySticks)}.`}
                 </Text>
-                {[
-                  view.place.water.words,
-                  ...view.warnings.filter((each) => each !== view.place.water.words),
-                ].map((words) => (
-                  <Text
-                    key={words}
-                    size="small"
-                    tone={words === view.place.water.words ? 'inkSoft' : 'amber'}
-                  >
+                {waterUnlessWarned(view.place.water.words, view.warnings).map((words) => (
+                  <Text key={words} size="small" tone="inkSoft">
+                    {words}
+                  </Text>
+                ))}
+                {view.warnings.map((words) => (
+                  <Text key={words} size="small" tone="amber">
                     {words}
                   </Text>
                 ))}
               </View>
             ) : (
-              <Text tone="inkSoft">{`${view.reason}. ${view.remedy}.`}</Text>
+              <Text tone="inkSoft">{sentences([view.reason, view.remedy])}</Text>
             )
           }
         </Loaded>

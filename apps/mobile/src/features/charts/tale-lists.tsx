@@ -132,7 +132,7 @@ function Changes({ tales }: Part) {
               />
             ) : null}
             <Text>{words}</Text>
-            {areas === null ? <Missing words={whyNot} /> : null}
+            {areas === null && whyNot !== words ? <Missing words={whyNot} /> : null}
             {areas?.length ? (
               <List label="Areas that changed">
                 {areas.map(changeTale).map((tale) => (
