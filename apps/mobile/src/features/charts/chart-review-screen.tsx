@@ -98,7 +98,7 @@ function Review({ review }: { review: ChartReview }) {
           </Section>
         ) : null}
         <ChartLogsSection logs={review.logs} />
-        {quality ? <SoundingMisses misses={review.misses} /> : null}
+        {quality ? <SoundingMisses misses={review.misses} flaggedIds={quality.flagged} /> : null}
         {quality ? (
           <Section title="How good it is" note={quality.words}>
             <QualityReport quality={quality} />

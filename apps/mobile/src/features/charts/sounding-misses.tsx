@@ -7,9 +7,12 @@ import { useUnits } from '@/hooks/use-units';
 import { figure, length } from '@/lib/format';
 import { castPlaceWords, castTitle, outByWords } from '@/features/charts/sounding-miss-words';
 
+type Props = { misses: readonly SoundingMissView[]; flaggedIds: readonly string[] };
+
 /** The soundings a person must look at before a chart is published, each leading to its cast. */
-export function SoundingMisses({ misses }: { misses: readonly SoundingMissView[] }) {
+export function SoundingMisses({ misses, flaggedIds }: Props) {
   const flagged = misses.filter((miss) => miss.flagged);
+  const ofLogs = flaggedIds.length - flagged.length; // merged from a boat's log: they have no cast to open
   return (
     <Section
       title="Out of line with their neighbours"
@@ -19,11 +22,15 @@ export function SoundingMisses({ misses }: { misses: readonly SoundingMissView[]
           }
         : {})}
     >
-      {flagged.length === 0 ? (
+      {ofLogs > 0 ? (
+        <Note kind="caution">
+          {`${figure(ofLogs)} merged ${ofLogs === 1 ? 'sounding' : 'soundings'} of a boat’s log also out of line. Check the log’s level and its offsets.`}
+        </Note>
+      ) : null}
+      {flaggedIds.length === 0 ? (
         <Note kind="fine">No sounding disagrees with those round about.</Note>
-      ) : (
-        <MissTable caption="Out of line with their neighbours" misses={flagged} />
-      )}
+      ) : null}
+      {flagged.length > 0 ? <MissTable caption="Out of line with their neighbours" misses={flagged} /> : null}
       <Disclosure title="The ten soundings that fit worst">
         <MissTable caption="Soundings that fit worst" misses={misses.slice(0, 10)} />
       </Disclosure>
