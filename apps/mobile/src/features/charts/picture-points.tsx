@@ -140,7 +140,7 @@ function PixelField({ label, value, onChange }: PixelProps) {
       <Field
         label={label}
         keypad="decimal"
-        value={typed ?? String(value)}
+        value={typed ?? String(Math.round(value * 10) / 10)}
         onChange={setTyped}
         onBlur={leave}
       />
