@@ -1,3 +1,4 @@
+import { Booking } from '@mereward/db/entities/bookings/booking';
 import {
   CastReading,
   ChartFeatures,
@@ -251,6 +252,41 @@ describe('the same spot from here', () => {
     expect(seen).toMatchObject({ ok: true, spot: { name: 'Middle bar', pegNumber: 'FO8' } });
     const hidden = await aStranger(server).get(`/pegs/${kept.peg.id}/same-spot?spotId=${id}`);
     expect(hidden.status).toBe(404); // another lake's, and kept besides
+  });
+
+  test('a ticket opens the peg’s own spots and no other’s', async () => {
+    const water = await aLongWater(server, here, {
+      name: 'Ticket Ostle',
+      audiences: { ...OPEN, spots: 'ticket' },
+    });
+    const far = await aPeg(server, water.lake, { ...water.peg.details, number: 'FO9', longestCastM: 5 });
+    const angler = await aPerson(server);
+    const aSpot = async (peg: TestPeg, xM: number, yM: number): Promise<string> => {
+      const [lon, lat] = fromPlane(water.lake.origin, { xM, yM });
+      const id = randomUUID();
+      const details = { name: 'A spot', position: [lon, lat], usableRadiusM: 2, note: '' };
+      const put = await here.people.manager
+        .put(`/pegs/${peg.id}/spots/${id}`)
+        .send({ details, version: null });
+      expect(put.status).toBe(200);
+      return id;
+    };
+    const [own, others] = [await aSpot(water.peg, 0, -20), await aSpot(far, 120, 0)];
+    const statusOf = async (spotId: string) =>
+      (await angler.get(`/pegs/${water.peg.id}/same-spot?spotId=${spotId}`)).status;
+    expect([await statusOf(own), await statusOf(others)]).toEqual([404, 404]);
+    const hoursOff = (hours: number) =>
+      new Date(server.server.clock().getTime() + hours * 3_600_000).toISOString();
+    await server.server.source.manager.insert(Booking, {
+      id: randomUUID(),
+      pegId: water.peg.id,
+      accountId: angler.id,
+      during: `[${hoursOff(-2)},${hoursOff(2)})`,
+      status: 'confirmed',
+      writtenBy: here.people.office.id,
+      writtenAt: server.server.clock(),
+    });
+    expect([await statusOf(own), await statusOf(others)]).toEqual([200, 404]);
   });
 
   test('a place on land is refused in words, and half a place is invalid', async () => {

@@ -1,4 +1,3 @@
-import { Peg } from '@mereward/db/entities/lakes/peg';
 import { Spot } from '@mereward/db/entities/charts/spot';
 import type { SameSpotAsked, SameSpotView } from '@mereward/shared/charts/chart-answers';
 import { aimWords } from '@mereward/shared/charts/spot-figures';
@@ -8,9 +7,10 @@ import { marksBeside, type SpotKit } from '@mereward/shared/surveys/same-spot';
 import { spotPlace } from '@mereward/shared/surveys/spot-place';
 import type { Ctx } from '../ctx';
 import { notFound } from '../http/deny';
-import { watersOf } from '../lakes/peg-waters';
+import { placeWater, watersOf } from '../lakes/peg-waters';
 import { castTo } from './cast-to';
 import { layersOf } from './chart-layers';
+import { sightOf } from './layers';
 import { pegGround, type PegGround } from './peg-chart';
 import { placeReading, slopingDepthM, whyMissing, type PlaceAsked } from './place-reading';
 import { reachOfPeg, reachWarnings } from './reach-warnings';
@@ -20,9 +20,9 @@ import { newestVisit } from './spot-view';
 /** Any spot of the lake, or any place of its water, as reached from this peg. */
 export async function sameSpotFrom(ctx: Ctx, pegId: string, asked: SameSpotAsked): Promise<SameSpotView> {
   const ground = await pegGround(ctx, pegId);
-  const spot = asked.spotId === undefined ? null : await seenSpot(ctx, ground, asked.spotId);
-  const position: LonLat = spot?.position ?? [asked.lon ?? 0, asked.lat ?? 0];
   const waters = await watersOf(ctx.tx, ground.lake);
+  const spot = asked.spotId === undefined ? null : await seenSpot(ctx, { ground, waters }, asked.spotId);
+  const position: LonLat = spot?.position ?? [asked.lon ?? 0, asked.lat ?? 0];
   const point = toPlane(ground.origin, position);
   const onWater = spotPlace(waters.outline, toPlane(ground.origin, ground.peg.details.origin), point);
   if (!onWater.ok)
@@ -31,15 +31,22 @@ export async function sameSpotFrom(ctx: Ctx, pegId: string, asked: SameSpotAsked
   return answer({ ground, open, waters }, asked, { spot, position });
 }
 
+type Grounded = Pick<PlaceAsked, 'ground' | 'waters'>;
 type SeenSpot = { id: string; name: string; pegId: string; pegNumber: string; position: LonLat };
 
-/** A spot of this lake that this reader is shown; to anybody else it isn't there. */
-async function seenSpot({ tx }: Ctx, { lake, sight }: PegGround, spotId: string): Promise<SeenSpot> {
-  const spot = sight.sees.spots ? await tx.findOneBy(Spot, { id: spotId }) : null;
-  const peg = spot && (await tx.findOneBy(Peg, { id: spot.pegId, lakeId: lake.id }));
-  if (!spot || !peg) throw notFound('spot');
+/**
+ * A spot of this lake that this reader is shown; to anybody else it isn't there. A ticket opens the peg's own spots and those
+ * that lie in its water, and no others.
+ */
+async function seenSpot(ctx: Ctx, at: Grounded, spotId: string): Promise<SeenSpot> {
+  const { peg, lake, sight, origin } = at.ground;
+  const spot = sight.sees.spots ? await ctx.tx.findOneBy(Spot, { id: spotId }) : null;
+  const of = at.waters.pegs.find(({ id }) => id === spot?.pegId);
+  if (!spot || !of) throw notFound('spot');
   const { name, position } = spot.details;
-  return { id: spot.id, name, pegId: peg.id, pegNumber: peg.number, position };
+  const own = of.id === peg.id || placeWater(at.waters, peg.id, toPlane(origin, position)).own;
+  if (!own && !sightOf(ctx, lake, false).sees.spots) throw notFound('spot');
+  return { id: spot.id, name, pegId: of.id, pegNumber: of.number, position };
 }
 
 type Asked = { spot: SeenSpot | null; position: LonLat };

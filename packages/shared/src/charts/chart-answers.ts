@@ -245,7 +245,10 @@ export const SameSpotView = z.discriminatedUnion('ok', [
 ]);
 export type SameSpotView = z.infer<typeof SameSpotView>;
 
-/** GET /api/pegs/:pegId/similar: open pegs of this lake first, most alike first (to a tenth, then nearest), then of the fishery’s other lakes; at most 8. */
+/**
+ * GET /api/pegs/:pegId/similar: open pegs of this lake first, then of the fishery's other lakes, most alike first (to a
+ * tenth, then the nearest); at most 8.
+ */
 export const SimilarPeg = z.object({
   pegId: z.uuid(),
   number: z.string(),
