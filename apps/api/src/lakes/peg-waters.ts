@@ -97,7 +97,7 @@ export function placeWater({ pegs, waters }: WatersFound, pegId: string, place: 
 
 const WORDS =
   'Each place belongs to the nearest peg that can cast there: inside its arc, within its longest cast and in straight ' +
-  'sight over the water. The areas the owner drew come on top, the last one first.';
+  'sight over the water; what lies behind another peg’s water is nobody’s. The areas the owner drew come on top, the last one first.';
 
 /** The waters of a lake's pegs. Open to all: they say whose water it is, not what lies in it. */
 export async function lakeWaters({ tx, actor }: Ctx, lakeId: string): Promise<LakeWaters> {

@@ -61,6 +61,14 @@ test('a peg’s arc ends its water, and the neighbour has what lies beyond', () 
   expect(ownerAt(waters, { xM: 60, yM: 10 })).toBe(1);
 });
 
+test('water that can only be cast to over another’s is nobody’s', () => {
+  const straight = { arcFromDeg: 350, arcToDeg: 10 };
+  const waters = pegWaters(pond, [at(40, 0.3, straight), at(90, 0.3)]);
+  // The narrow wedge before the first stance cuts the pond in two; the second sees all of it.
+  expect(ownerAt(waters, { xM: 15, yM: 10 })).toBe(NOBODY);
+  expect(ownerAt(pegWaters(pond, [at(90, 0.3)]), { xM: 15, yM: 10 })).toBe(0);
+});
+
 test('of two drawn areas the last one wins, and what lies over land takes nothing', () => {
   const areas = [
     { peg: 1, ring: box(10.2, 10.2, 30.2, 30.2) },

@@ -25,7 +25,8 @@ export type PegWaters = { frame: GridFrame; owner: Int16Array; area: Int16Array 
 
 /**
  * Parts a lake's water among its pegs. First each cell goes to the nearest stance that can cast there: inside the peg's arc,
- * no farther than it casts, in straight sight over the water (islands and points of land block). Then the drawn areas
+ * no farther than it casts, in straight sight over the water (islands and points of land block); of what a peg gets so, the
+ * piece at its stance is its own, and pieces behind another's water are nobody's. Then the drawn areas
  * are laid on in their order, the last one on top. Of two stances equally near the one earlier in the list has it, and
  * scraps under 12 m² that a twig of the shore hides or frees go to whoever lies most round them.
  */
@@ -44,6 +45,7 @@ export function pegWaters(
     owner[node] = nearest(casters, columnXM(frame, node - row * frame.columns), rowYM(frame, row));
   }
   takeInStrays(owner, frame);
+  leaveOnePiece(owner, frame, pegs);
   const area = new Int16Array(water.length).fill(-1);
   areas.forEach(({ peg, ring }, place) => {
     const covered = waterNodes({ shore: [...ring], islands: [] }, frame);
@@ -84,6 +86,24 @@ function nearest(casters: readonly Caster[], xM: number, yM: number): number {
     least = d2;
   }
   return best;
+}
+
+/** A peg's water is one piece, the one at its stance: what lies behind another's water is no more its own to cast to. */
+function leaveOnePiece(owner: Int16Array, frame: GridFrame, pegs: readonly PegStance[]): void {
+  const { of } = cellRegions(owner, frame.columns, 0);
+  const nearest = pegs.map(() => ({ region: -1, d2: Infinity }));
+  for (let node = 0; node < owner.length; node++) {
+    const peg = pegs[owner[node]!];
+    const best = nearest[owner[node]!];
+    if (!peg || !best) continue;
+    const dx = columnXM(frame, node % frame.columns) - peg.at.xM;
+    const dy = rowYM(frame, Math.floor(node / frame.columns)) - peg.at.yM;
+    if (dx * dx + dy * dy < best.d2) nearest[owner[node]!] = { region: of[node]!, d2: dx * dx + dy * dy };
+  }
+  for (let node = 0; node < owner.length; node++) {
+    const best = nearest[owner[node]!];
+    if (best && best.region !== of[node]) owner[node] = NOBODY;
+  }
 }
 
 /** A scrap of water smaller than this is nobody's to argue over, m². */
