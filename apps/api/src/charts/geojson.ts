@@ -40,7 +40,7 @@ export function chartGeojson(view: ChartView, places: MapPlaces): FeatureCollect
   const place = placing(view.origin);
   const features = [
     lakeFeature(view, place),
-    ...pegFeatures(places, place),
+    ...pegFeatures(places),
     ...view.marks.map(({ id, code, name, xM, yM }): Feature => ({
       type: 'Feature',
       id,
@@ -96,7 +96,7 @@ function lakeFeature(view: ChartView, place: Place): Feature {
 }
 
 /** The peg at the water's edge, the marked place to stand, and the limits of its arc. */
-function pegFeatures({ pegs }: MapPlaces, place: Place): Feature[] {
+function pegFeatures({ pegs }: MapPlaces): Feature[] {
   return pegs.flatMap(({ id, details, reachM }): Feature[] => {
     const { number, name, arcFromDeg, arcToDeg, status, originMark } = details;
     const stance = rounded(details.origin);

@@ -9,7 +9,6 @@ import { chartCastsCsv } from './chart-casts';
 import { chartLayersFile } from './chart-geojson';
 import { chartSheet } from './chart-sheet';
 import { chartSvg } from './chart-svg';
-import { fileName } from './file-name';
 import { pegCard } from './peg-card';
 import { surveyReport } from './report';
 
