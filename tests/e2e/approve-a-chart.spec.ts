@@ -10,7 +10,7 @@ test('the draft of Ostle Pool is looked over, approved by another, published and
   await joan.goto('/office/charts');
   await joan.getByRole('link', { name: /First look/ }).click();
   await expect(joan.getByRole('heading', { level: 1 })).toHaveText('First look');
-  await expect(joan.getByRole('list', { name: 'Checks' }).getByText('passed')).toHaveCount(11);
+  await expect(joan.getByRole('list', { name: 'Checks' }).getByText('passed')).toHaveCount(12);
   await expect(joan.getByText('Root mean square error')).toBeVisible();
   await expect(joan.getByText(/^0\.\d\d\sm$/).first()).toBeVisible();
   await joan.getByRole('button', { name: 'The ten soundings that fit worst' }).click();

@@ -31,7 +31,9 @@ test('a boat’s log is seen on the lake, taken in with progress, seen in the vi
   await expect(page.getByRole('list', { name: 'Faults' })).toContainText('noise on the wire');
   await page.reload(); // it can be left and come back to
   await page.getByLabel('Transducer below the surface, m').fill('0.2');
+  const lookedAgain = page.waitForResponse((answer) => answer.url().endsWith('/look'));
   await page.getByRole('button', { name: 'Read it again' }).click();
+  await lookedAgain;
   await expect(page.getByText(`${count} soundings can be taken in`)).toBeVisible({ timeout: 30_000 });
   await page.getByRole('button', { name: `Take in ${count} soundings` }).click();
   await expect(page.getByText(`${count} soundings taken in`)).toBeVisible({ timeout: 30_000 });

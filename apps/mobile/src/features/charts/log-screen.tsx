@@ -1,7 +1,7 @@
 import { useState } from 'react';
 import { useLocalSearchParams, useRouter } from 'expo-router';
 import type { LakeView } from '@mereward/shared/lakes/contract';
-import type { LogView } from '@mereward/shared/surveys/log-contract';
+import type { LogOptions, LogView } from '@mereward/shared/surveys/log-contract';
 import { View } from 'react-native';
 import { Button } from '@/components/button';
 import { Confirm } from '@/components/confirm';
@@ -16,7 +16,7 @@ import { space } from '@/constants/layout';
 import { LogMap } from '@/features/charts/log-map';
 import { useLake } from '@/features/lakes/api';
 import { useVisit } from '@/features/surveys/api';
-import { isBeingRead, useLog, useLogDeed, useUndoLog } from '@/features/surveys/log-api';
+import { isBeingRead, useLog, useLogDeed, useLookAgain, useUndoLog } from '@/features/surveys/log-api';
 import { LogOptionsForm } from '@/features/surveys/log-options-form';
 import { LogReportPart } from '@/features/surveys/log-report-part';
 import { countWords } from '@/features/surveys/visit-words';
@@ -32,8 +32,10 @@ export function LogScreen() {
   const lake = useLake(visit.data?.visit.lakeId ?? '');
   const log = useLog(logId);
   const deed = useLogDeed(logId);
+  const look = useLookAgain(logId);
   const it = log.data;
   const ready =
+    !look.isPending && // what is on the screen is about to be read in another way
     it?.state === 'looked' &&
     it.may.change &&
     it.preview &&
@@ -68,7 +70,12 @@ export function LogScreen() {
             {(water) => (
               <>
                 <ProblemNote problem={deed.error} />
-                <Log log={value} lake={water} onStop={() => deed.mutate('cancel')} />
+                <Log
+                  log={value}
+                  lake={water}
+                  onStop={() => deed.mutate('cancel')}
+                  onLook={look.mutateAsync}
+                />
               </>
             )}
           </Loaded>
@@ -111,9 +118,14 @@ function TakeBack({ log }: { log: LogView }) {
   );
 }
 
-type Props = { log: LogView; lake: LakeView; onStop: () => void };
+type Props = {
+  log: LogView;
+  lake: LakeView;
+  onStop: () => void;
+  onLook: (options: LogOptions) => Promise<LogView>;
+};
 
-function Log({ log, lake, onStop }: Props) {
+function Log({ log, lake, onStop, onLook }: Props) {
   const wide = useWide();
   const { preview, report } = log;
   if (isBeingRead(log.state))
@@ -143,7 +155,12 @@ function Log({ log, lake, onStop }: Props) {
           ) : null}
           {preview && log.may.change ? (
             <Section title="How it is read">
-              <LogOptionsForm key={JSON.stringify(preview.guessed)} log={log} preview={preview} />
+              <LogOptionsForm
+                key={JSON.stringify(preview.guessed)}
+                log={log}
+                preview={preview}
+                onLook={onLook}
+              />
             </Section>
           ) : null}
           {preview && !report ? <FirstPoints log={log} zone={lake.zone} /> : null}
