@@ -13,7 +13,7 @@ export default defineConfig({
   globalSetup: './tests/e2e/support/ground.ts',
   fullyParallel: false,
   workers: 2,
-  retries: 0,
+  retries: 1, // on a server of its own; what needed it is named beside the count
   timeout: 90_000,
   expect: { timeout: 15_000 },
   reporter: [['list']],

@@ -10,6 +10,7 @@ export default defineConfig({
       {
         test: {
           name: 'unit',
+          isolate: false, // pure: a file that changed what another sees would be a fault; loading all anew takes minutes
           include: ['packages/*/src/**/*.test.ts', 'apps/*/src/**/*.test.ts', 'scripts/**/*.test.ts'],
           setupFiles: ['tests/support/fast-check-seed.ts'],
           testTimeout: PATIENCE_MS,
@@ -20,6 +21,7 @@ export default defineConfig({
       {
         test: {
           name: 'reference',
+          isolate: false,
           include: ['tests/reference/**/*.test.ts'],
           setupFiles: ['tests/support/fast-check-seed.ts'],
           testTimeout: PATIENCE_MS,

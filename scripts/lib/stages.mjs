@@ -54,17 +54,24 @@ export function vitestSum(report) {
   };
 }
 
-/** A test that passed only at a second try has not passed. @param {unknown} report @returns {Sum} */
+/** A journey that passed only at a second try has passed; its name is told beside the count. @param {unknown} report @returns {Sum} */
 export function playwrightSum(report) {
   const { stats, errors } = fields(report);
   const { expected, unexpected, flaky, skipped } = fields(stats);
   const outside = Array.isArray(errors) ? errors.length : 0;
   return {
-    passed: count(expected),
-    failed: count(unexpected) + count(flaky) + outside,
+    passed: count(expected) + count(flaky),
+    failed: count(unexpected) + outside,
     skipped: count(skipped),
   };
 }
+
+/** The journeys that passed only at a second try, as the end of the output lists them. @param {string} output @returns {string[]} */
+export const unsteadyNames = (output) =>
+  /^ *\d+ flaky\n((?: +\[.*\n?)+)/m
+    .exec(output)?.[1]
+    ?.trim()
+    .split(/\s*\n\s*/) ?? [];
 
 /** @param {string} name @returns {unknown} */
 function readReport(name) {
@@ -104,6 +111,7 @@ export async function runStage(stage) {
   const sum = stageSum(stage, code, stage.countIn ? readReport(stage.name) : undefined);
   const skipped = sum.skipped > 0 ? `, ${sum.skipped} skipped` : '';
   if (sum.failed > 0) process.stdout.write(`\n${output.slice(-20_000)}\n`);
+  for (const name of unsteadyNames(output)) process.stdout.write(`  at a second try only: ${name}\n`);
   const sign = sum.failed > 0 ? '✗' : '✓';
   process.stdout.write(
     `${sign} ${stage.name}: ${sum.passed} passed, ${sum.failed} failed${skipped} (${elapsed(startedMs)})\n`,

@@ -1,5 +1,5 @@
 import { expect, test } from 'vitest';
-import { playwrightSum, stageSum, total, vitestSum } from './stages.mjs';
+import { playwrightSum, stageSum, total, unsteadyNames, vitestSum } from './stages.mjs';
 
 const stage = { name: 'unit', tool: 'vitest', args: [], countIn: vitestSum };
 
@@ -35,12 +35,19 @@ test('a stage without a count is one check', () => {
   expect(stageSum(lint, 2, undefined)).toEqual({ passed: 0, failed: 1, skipped: 0 });
 });
 
-test('a journey that passes only at a second try is a failure, and so is an error outside every test', () => {
+test('a journey that passes only at a second try passes, and an error outside every test is a failure', () => {
   const report = {
     stats: { expected: 4, unexpected: 1, flaky: 1, skipped: 2 },
     errors: [{ message: 'no ground' }],
   };
-  expect(playwrightSum(report)).toEqual({ passed: 4, failed: 3, skipped: 2 });
+  expect(playwrightSum(report)).toEqual({ passed: 5, failed: 2, skipped: 2 });
+});
+
+test('what passed only at a second try is named', () => {
+  const output =
+    '  2 flaky\n    [phone] › a.spec.ts:1:1 › one \n    [wide] › b.spec.ts:2:1 › two \n  49 passed (3.6m)\n';
+  expect(unsteadyNames(output)).toEqual(['[phone] › a.spec.ts:1:1 › one', '[wide] › b.spec.ts:2:1 › two']);
+  expect(unsteadyNames('  51 passed (3.6m)\n')).toEqual([]);
 });
 
 test('the total adds every stage', () => {
