@@ -1,15 +1,13 @@
 import { photoFault } from '@mereward/api/files/photo-fault';
+import { LARGE_PX } from '@mereward/api/files/photo-sizes';
 import { resizePicture } from '@mereward/api/files/resize-picture';
 import { receiveFile } from '@mereward/api/http/upload';
 import { openThread } from '@mereward/api/jobs/thread';
 import { PHOTO_MOST_BYTES } from '@mereward/shared/files/contract';
 import { createHash } from 'node:crypto';
 import { once } from 'node:events';
-import { mkdtempSync, rmSync, writeFileSync } from 'node:fs';
 import { createServer, type RequestListener, type Server } from 'node:http';
 import { createRequire } from 'node:module';
-import { tmpdir } from 'node:os';
-import { join } from 'node:path';
 import { monitorEventLoopDelay } from 'node:perf_hooks';
 import { fileURLToPath } from 'node:url';
 import { aJpeg, CORNERS } from '../support/pictures';
@@ -47,18 +45,15 @@ async function photoServer(): Promise<{ server: Server; url: string }> {
   return { server, url: `http://127.0.0.1:${address.port}/` };
 }
 
-async function inThread(path: string): Promise<void> {
-  const thread = openThread('files/resize', { path });
+async function inThread(bytes: Uint8Array): Promise<void> {
+  const thread = openThread('files/resize', { bytes, largePx: LARGE_PX });
   await once(thread, 'message');
   await thread.terminate();
 }
 
 /** One line: how long a photo of twelve megapixels keeps the API from answering, beside resizing it there. */
 export async function benchPhotos(): Promise<string[]> {
-  const folder = mkdtempSync(join(tmpdir(), 'mereward-bench-'));
-  const path = join(folder, 'photo.jpg');
   const bytes = await aJpeg({ widthPx: 4000, heightPx: 3000 }, CORNERS);
-  writeFileSync(path, bytes);
   const { server, url } = await photoServer();
   const send = () => {
     const form = new FormData();
@@ -69,7 +64,7 @@ export async function benchPhotos(): Promise<string[]> {
     const ours: number[] = [];
     const here: number[] = [];
     for (let round = 0; round < ROUNDS; round += 1) {
-      ours.push(await longestBlockMs(async () => Promise.all([send(), inThread(path)])));
+      ours.push(await longestBlockMs(async () => Promise.all([send(), inThread(bytes)])));
       here.push(await longestBlockMs(() => resizePicture(bytes)));
     }
     const [oursMs, hereMs] = [median(ours), median(here)];
@@ -79,6 +74,5 @@ export async function benchPhotos(): Promise<string[]> {
     ];
   } finally {
     server.close();
-    rmSync(folder, { recursive: true, force: true });
   }
 }
