@@ -2,7 +2,8 @@ import { Chart } from '@mereward/db/entities/charts/chart';
 import { ChartBuild } from '@mereward/db/entities/charts/chart-build';
 import { buildSource } from '@mereward/api/charts/build-source';
 import { LIGHT } from '@mereward/api/charts/find-chart';
-import { takeUpLostBuilds } from '@mereward/api/charts/jobs';
+import { CHART_BUILDS } from '@mereward/api/charts/jobs';
+import { takeUpLost } from '@mereward/api/jobs/claimed-run';
 import { makeChart } from '@mereward/api/charts/make-chart';
 import { ChartList, ChartReview, ChartView } from '@mereward/shared/charts/contract';
 import { ProblemBody } from '@mereward/shared/problems/problem';
@@ -217,8 +218,8 @@ describe('a build', () => {
     );
     await server.settle(); // the job of the run that died finds another attempt and lets be
     expect((await buildOf(id)).state).toBe('running');
-    expect(await takeUpLostBuilds({ source, jobs })).toBe(1);
-    expect(await takeUpLostBuilds({ source, jobs })).toBe(0);
+    expect(await takeUpLost({ source, jobs }, CHART_BUILDS)).toBe(1);
+    expect(await takeUpLost({ source, jobs }, CHART_BUILDS)).toBe(0);
     await server.settle();
     expect((await buildOf(id)).state).toBe('done');
   });
@@ -230,7 +231,7 @@ describe('a build', () => {
       `UPDATE chart_build SET state = 'running', tries = 3, updated_at = now() - interval '1 minute' WHERE chart_id = $1`,
       [id],
     );
-    await takeUpLostBuilds({ source, jobs });
+    await takeUpLost({ source, jobs }, CHART_BUILDS);
     expect(await buildOf(id)).toMatchObject({
       state: 'failed',
       error: expect.stringMatching(/cut short 3 times/),

@@ -1,5 +1,6 @@
 import { ProblemBody } from '@mereward/shared/problems/problem';
-import { takeUpLostLogs } from '@mereward/api/surveys/lost-logs';
+import { takeUpLost } from '@mereward/api/jobs/claimed-run';
+import { LOG_READINGS } from '@mereward/api/surveys/log-queue';
 import { LogList, LogView, USUAL_LOG_OPTIONS, type LogOptions } from '@mereward/shared/surveys/log-contract';
 import { randomUUID } from 'node:crypto';
 import { afterAll, beforeAll, describe, expect, test } from 'vitest';
@@ -202,7 +203,7 @@ describe('a log of soundings', { timeout: 60_000 }, () => {
         [log.id, tries],
       );
     await lose(3);
-    expect(await takeUpLostLogs(server.server)).toBe(1);
+    expect(await takeUpLost(server.server, LOG_READINGS)).toBe(1);
     expect(await logOf(log.id)).toMatchObject({
       state: 'failed',
       error: expect.stringContaining('Nothing was taken in'),
@@ -210,7 +211,7 @@ describe('a log of soundings', { timeout: 60_000 }, () => {
     await server.settle();
     expect(await count(log.id)).toBe(0);
     await lose(1);
-    expect(await takeUpLostLogs(server.server)).toBe(1);
+    expect(await takeUpLost(server.server, LOG_READINGS)).toBe(1);
     await server.settle();
     expect(await logOf(log.id)).toMatchObject({ state: 'done' });
     expect(await count(log.id)).toBe(track.length);

@@ -2,17 +2,18 @@ import { makeDataSource } from '@mereward/db/data-source';
 import { readFileSync } from 'node:fs';
 import { createServer, type Server } from 'node:http';
 import { makeApp } from './app';
-import { watchBuilds } from './charts/jobs';
+import { CHART_BUILDS } from './charts/jobs';
 import { fileStoreOf } from './files/store';
 import { readConfig, SettingsFault, type Config } from './config';
 import { handlers } from './handlers';
 import { isDatabaseAway } from './http/database-away';
 import { makeLogger } from './http/logging';
 import { plainError } from './http/plain-error';
+import { watchLost } from './jobs/claimed-run';
 import { jobsOn, openQueue } from './jobs/queue';
 import { work } from './jobs/worker';
 import { openCapture } from './mail/capture';
-import { watchLogs } from './surveys/lost-logs';
+import { LOG_READINGS } from './surveys/log-queue';
 
 const FINISH_WITHIN_MS = 10_000;
 
@@ -33,23 +34,21 @@ async function main(): Promise<void> {
   const boss = await openQueue(config.databaseUrl, (err) => logger.error({ err }, 'queue'));
   const server = { config, source, jobs: jobsOn(boss), clock: clockOf(config) };
   const worker = await work({ boss, server, logger, handlers });
-  const stopWatching = watchBuilds(server, (err) =>
-    logger.error({ err }, 'lost builds could not be taken up'),
+  const watches = [CHART_BUILDS, LOG_READINGS].map((table) =>
+    watchLost(server, table, (err) =>
+      logger.error({ err, job: table.job }, 'lost work could not be taken up'),
+    ),
   );
   fileStoreOf(config)
     .check()
     .catch((err: unknown) => logger.error({ err }, 'the store of files can’t be used'));
-  const stopWatchingLogs = watchLogs(server, (err) =>
-    logger.error({ err }, 'lost logs could not be taken up'),
-  );
   const http = createServer(makeApp(server, logger, { capture }));
   await listen(http, config);
   logger.info({ port: config.port, url: config.publicUrl }, 'listening');
 
   const close = async () => {
     await finish(http);
-    stopWatching();
-    stopWatchingLogs();
+    for (const stopWatching of watches) stopWatching();
     await worker.stop();
     await boss.stop({ graceful: true, wait: true, timeout: FINISH_WITHIN_MS });
     await capture?.close();

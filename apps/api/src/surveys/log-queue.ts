@@ -1,7 +1,21 @@
 import type { LogOptions } from '@mereward/shared/surveys/log-contract';
 import { randomUUID } from 'node:crypto';
 import type { EntityManager } from 'typeorm';
+import { z } from 'zod';
 import type { Jobs } from '../ctx';
+import type { WorkTable } from '../jobs/claimed-run';
+
+export const ReadLogJob = z.object({ logId: z.uuid(), attempt: z.uuid() });
+
+export const LOG_READINGS: WorkTable = {
+  name: 'sounding_import',
+  key: 'id',
+  takenWhen: 'undone_at IS NULL',
+  job: 'log.read',
+  payload: (logId, attempt): z.infer<typeof ReadLogJob> => ({ logId, attempt }),
+  cutShort: (tries) =>
+    `The reading was cut short ${tries} times. Nothing was taken in. Bring the log in parts.`,
+};
 
 type Asked = { logId: string; goal: 'look' | 'keep'; options: LogOptions };
 
