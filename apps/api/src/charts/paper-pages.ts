@@ -9,12 +9,16 @@ export type PaperTable = {
   rows: readonly (readonly string[])[];
 };
 
+/** A photo to print small: JPEG bytes, and the words under it. */
+export type PaperPicture = { jpeg: Uint8Array; caption: string };
+
 /** A piece of a document that runs over pages. `wide` tables lie on pages of their own. */
 export type PaperBlock =
   | { kind: 'heading'; words: string }
   | { kind: 'words'; words: string; bold?: boolean }
   | { kind: 'facts'; facts: readonly (readonly [string, string])[] }
-  | { kind: 'table'; table: PaperTable; wide?: boolean };
+  | { kind: 'table'; table: PaperTable; wide?: boolean }
+  | { kind: 'pictures'; pictures: readonly PaperPicture[] };
 
 export type PaperDocument = {
   title: string;
@@ -31,6 +35,8 @@ const INK = '#000000';
 const BODY_PT = 9;
 const CELL_PT = 7.5;
 const TERM_SHARE = 0.3;
+const PICTURES_ACROSS = 3;
+const PICTURE_PT = 116;
 
 /** A document on A4, black on white: heads of tables repeated, every page numbered out of how many. */
 export function drawPages(paper: PaperDocument): Promise<Buffer> {
@@ -78,6 +84,10 @@ function drawBlock(doc: Doc, block: PaperBlock): void {
     case 'table':
       drawTable(doc, block.table);
       break;
+    case 'pictures':
+      for (let i = 0; i < block.pictures.length; i += PICTURES_ACROSS)
+        drawPictures(doc, block.pictures.slice(i, i + PICTURES_ACROSS));
+      break;
   }
 }
 
@@ -112,6 +122,23 @@ function drawTable(doc: Doc, { title, heading, shares, rows }: PaperTable): void
   for (const cells of rows) drawRow(doc, { cells, shares, font: 'regular', head });
   doc.x = EDGE;
   doc.moveDown(0.4);
+}
+
+/** A row of pictures of one height, each over its caption; a row is never parted by the end of a page. */
+function drawPictures(doc: Doc, row: readonly PaperPicture[]): void {
+  const columnPt = widthOf(doc) / PICTURES_ACROSS;
+  const widthPt = columnPt - 10;
+  doc.font('regular').fontSize(CELL_PT);
+  const captionPt = Math.max(...row.map(({ caption }) => doc.heightOfString(caption, { width: widthPt })));
+  makeRoom(doc, PICTURE_PT + captionPt + 14);
+  const top = doc.y;
+  for (const [i, { jpeg, caption }] of row.entries()) {
+    const left = EDGE + i * columnPt;
+    doc.image(Buffer.from(jpeg), left, top, { fit: [widthPt, PICTURE_PT], valign: 'bottom' });
+    doc.fillColor(INK).text(caption, left, top + PICTURE_PT + 3, { width: widthPt });
+  }
+  doc.x = EDGE;
+  doc.y = top + PICTURE_PT + captionPt + 12;
 }
 
 type TableRow = {

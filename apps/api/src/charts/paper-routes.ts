@@ -3,9 +3,12 @@ import type { Response } from 'express';
 import { limitDrawings } from '../http/limits';
 import { parse } from '../http/parse';
 import { raw, type Route } from '../http/route';
+import { fileStoreOf } from '../files/store';
 import { idIn } from '../http/route-id';
+import { serverOf } from '../http/server';
 import { reading } from '../http/transaction';
 import { chartCastsCsv } from './chart-casts';
+import { chartSoundingsCsv } from './chart-soundings';
 import { chartLayersFile } from './chart-geojson';
 import { chartSheet } from './chart-sheet';
 import { chartSvg } from './chart-svg';
@@ -46,7 +49,10 @@ export const paperRoutes: Route[] = [
       answerType: 'application/pdf',
       guards,
     },
-    async (req, res) => sendPdf(res, await reading(req, (ctx) => surveyReport(ctx, idIn(req, 'chartId')))),
+    async (req, res) => {
+      const store = fileStoreOf(serverOf(req).config);
+      sendPdf(res, await reading(req, (ctx) => surveyReport(ctx, idIn(req, 'chartId'), store)));
+    },
   ),
   raw(
     {
@@ -72,6 +78,19 @@ export const paperRoutes: Route[] = [
     async (req, res) => {
       const { filename, sha256 } = await reading(req, (ctx) => chartCastsCsv(ctx, idIn(req, 'chartId')));
       res.attachment(`${filename}.sha256`).type('text/plain').send(`${sha256}  ${filename}\n`);
+    },
+  ),
+  raw(
+    {
+      method: 'get',
+      path: '/charts/:chartId/soundings.csv',
+      summary: 'Every merged sounding of a chart’s logs as a table, for staff',
+      signIn: 'needed',
+      answerType: 'text/csv',
+    },
+    async (req, res) => {
+      const { filename, text } = await reading(req, (ctx) => chartSoundingsCsv(ctx, idIn(req, 'chartId')));
+      res.attachment(filename).type('text/csv').send(text);
     },
   ),
   raw(

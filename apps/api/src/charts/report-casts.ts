@@ -34,7 +34,8 @@ export function castsBlocks({ visits, built, zone }: SurveyReport): PaperBlock[]
   const charted = new Map(built.soundings.map((each) => [each.id, each]));
   const whyNot = new Map(built.leftOut.map(({ id, why }) => [id, why]));
   const clock = clockIn(zone);
-  return visits.map((each, i): PaperBlock => {
+  return visits.flatMap((each, i): PaperBlock[] => {
+    if (each.casts.length === 0) return []; // a boat's day: its log is told of elsewhere
     const rows = each.casts.map((cast) => [
       ...observed(each, cast),
       ...reduced(charted.get(cast.id)),
@@ -45,16 +46,8 @@ export function castsBlocks({ visits, built, zone }: SurveyReport): PaperBlock[]
       return cast ? [...row.slice(0, 2), clock.format(cast.observedAt), ...row.slice(2)] : row;
     });
     const day = dayWords(civilDay(each.visit.startedAt, zone));
-    return {
-      kind: 'table',
-      wide: true,
-      table: {
-        title: `Casts of visit ${i + 1}: ${each.visit.title}, ${day} (${rows.length})`,
-        heading: HEADING,
-        shares: SHARES,
-        rows: timed,
-      },
-    };
+    const title = `Casts of visit ${i + 1}: ${each.visit.title}, ${day} (${rows.length})`;
+    return [{ kind: 'table', wide: true, table: { title, heading: HEADING, shares: SHARES, rows: timed } }];
   });
 }
 

@@ -1,13 +1,19 @@
 import { chartCaution } from '@mereward/shared/charts/cautions';
+import type { AgeNow } from '@mereward/shared/charts/chart-age';
+import type { LeadCalibration } from '@mereward/db/entities/surveys/lead-calibration';
 import type { ArcCoverage } from '@mereward/shared/surveys/contract';
 import { dayWords } from '@mereward/shared/time/civil-day';
 import { dayAndClock, dayRange } from '@mereward/shared/time/day-names';
 import { figure, percent } from '@mereward/shared/units/length-words';
 import type { Built } from './built';
+import { surveyedBy } from './built-logs';
 import type { CastsTable, ChartCasts } from './chart-casts';
 import type { PaperBlock, PaperDocument } from './paper-pages';
 import { agreementFacts, changeFacts, coverageTable, qualityFacts, usedFacts } from './report-quality';
 import { castsBlocks } from './report-casts';
+import { logsBlocks, type LogBrought } from './report-logs';
+import { photosBlocks, type ReportPhotos } from './report-photos';
+import { acceptedBlocks, eventsBlocks, type ToldEvent, type ToldReport } from './report-since';
 import { visitBlocks } from './report-visits';
 
 /** The chart published before, as far as a report holds the new one against it. */
@@ -18,7 +24,8 @@ export type EarlierChart = {
   visitIds: string[];
   datumM: number;
   figures: Built['figures'];
-  casts: number;
+  casts: number; // soundings of casts
+  merged: number; // merged soundings of logs
 };
 
 export type SurveyReport = ChartCasts & {
@@ -27,7 +34,14 @@ export type SurveyReport = ChartCasts & {
   readings: { at: Date; levelM: number; board: string }[]; // as the board reads
   coverage: ArcCoverage[][]; // by visit, in their order
   earlier: EarlierChart | null;
+  logs: ReadonlyMap<string, LogBrought>; // by the log's id
+  leads: ReadonlyMap<string, LeadCalibration>; // by its id
+  events: ToldEvent[]; // of the lake, oldest first
+  ageNow: AgeNow | null;
+  accepted: ToldReport[];
+  photos: ReportPhotos;
   table: CastsTable;
+  soundingsTable: CastsTable;
   writtenAt: Date;
   writtenOn: string;
 };
@@ -49,32 +63,46 @@ export function reportDocument(report: SurveyReport): PaperDocument {
       { kind: 'facts', facts: chartFacts(report) },
       words(cautionOf(report), true),
       heading('How it was surveyed'),
-      words(
-        'Casts from the bank: a lead is thrown to a counted length of line over a far-bank mark or along a compass bearing, the depth is read by letting a marker float up in counted pulls, and the bottom is called from how the lead landed and dragged and what came back. A depth is (pulls − ½) × one pull + the float’s own length, then brought to datum by the level of its hour. Each cast is kept as it was observed and reduced to a place, a depth and a bottom, each with its error.',
-      ),
+      ...METHOD[surveyedBy(report.built)].map((text) => words(text)),
       ...visitBlocks(report),
+      ...(report.built.logs.length > 0 ? [heading('Logs of soundings'), ...logsBlocks(report)] : []),
       heading('Water level'),
       ...levelBlocks(report),
-      heading('How much was covered'),
-      words(
-        'Of each peg’s arc, sectors of ten degrees by rings of two wraps: the share that a cast came down in, and the share of casts thrown again at a place another had reached.',
-      ),
-      { kind: 'table', table: coverageTable(report) },
-      heading('Repeats and agreement'),
-      { kind: 'facts', facts: agreementFacts(report) },
+      ...(surveyedBy(report.built) === 'logs' ? [] : castingBlocks(report)),
       heading('How good the chart is'),
       { kind: 'facts', facts: qualityFacts(report) },
       heading('What was left out'),
       { kind: 'facts', facts: usedFacts(report) },
+      heading('Reports accepted'),
+      ...acceptedBlocks(report),
+      heading('What dates it'),
+      ...eventsBlocks(report),
       heading('Against the version before'),
       { kind: 'facts', facts: changeFacts(report) },
       heading('The data'),
       ...digestBlocks(report),
-      words('Photos are kept with the pegs and marks and are no part of this report.'),
+      heading('Photos'),
+      ...photosBlocks(report.photos),
       ...castsBlocks(report),
     ],
   };
 }
+
+const BY_CASTS =
+  'Casts from the bank: a lead is thrown to a counted length of line over a far-bank mark or along a compass bearing, the depth is read by letting a marker float up in counted pulls, and the bottom is called from how the lead landed and dragged and what came back. A depth is (pulls − ½) × one pull + the float’s own length, then brought to datum by the level of its hour. Each cast is kept as it was observed and reduced to a place, a depth and a bottom, each with its error.';
+const BY_LOGS =
+  'Logs of soundings from a boat: places and depths as the instruments wrote them, brought to datum by the level of the day. Soundings in one cell are merged, weighed by their error; what scatters beyond it widens the error of the merged one, and what all of a log share (level, speed of sound) is added whole. A log tells nothing of the bottom’s kind.';
+const METHOD = { casts: [BY_CASTS], logs: [BY_LOGS], both: [BY_CASTS, BY_LOGS] } as const;
+
+const castingBlocks = (report: SurveyReport): PaperBlock[] => [
+  heading('How much was covered'),
+  words(
+    'Of each peg’s arc, sectors of ten degrees by rings of two wraps: the share that a cast came down in, and the share of casts thrown again at a place another had reached.',
+  ),
+  { kind: 'table', table: coverageTable(report) },
+  heading('Repeats and agreement'),
+  { kind: 'facts', facts: agreementFacts(report) },
+];
 
 function chartFacts({ chart, built, people, lake, zone }: SurveyReport): [string, string][] {
   const { figures } = built;
@@ -102,9 +130,14 @@ function chartFacts({ chart, built, people, lake, zone }: SurveyReport): [string
   ];
 }
 
-const cautionOf = ({ chart }: SurveyReport): string =>
+const cautionOf = ({ chart, built }: SurveyReport): string =>
   chart.surveyedFrom && chart.surveyedTo
-    ? chartCaution({ surveyedFrom: chart.surveyedFrom, surveyedTo: chart.surveyedTo, datumM: chart.datumM })
+    ? chartCaution({
+        surveyedFrom: chart.surveyedFrom,
+        surveyedTo: chart.surveyedTo,
+        datumM: chart.datumM,
+        surveyedBy: surveyedBy(built),
+      })
     : 'Not for boating, wading, swimming or diving.';
 
 function levelBlocks({ visits, readings, zone }: SurveyReport): PaperBlock[] {
@@ -144,7 +177,7 @@ function levelBlocks({ visits, readings, zone }: SurveyReport): PaperBlock[] {
   ];
 }
 
-function digestBlocks({ table, chart, visits }: SurveyReport): PaperBlock[] {
+function digestBlocks({ table, soundingsTable, built, chart, visits }: SurveyReport): PaperBlock[] {
   const count = visits.reduce((sum, { casts }) => sum + casts.length, 0);
   return [
     words(
@@ -154,6 +187,14 @@ function digestBlocks({ table, chart, visits }: SurveyReport): PaperBlock[] {
     words(
       `Whoever has the file can work the figure out again (sha256sum ${table.filename}), and the file ${table.filename}.sha256 holds it too. Observations and soundings of a published chart do not change; the file does when a peg’s number, a mark’s code or a person’s name is changed, and then so does the figure.`,
     ),
+    ...(built.logs.length === 0
+      ? []
+      : [
+          words(
+            `Every merged sounding of its logs stands in the file ${soundingsTable.filename}. SHA-256 of that file, every byte of it:`,
+          ),
+          words(soundingsTable.sha256, true),
+        ]),
     words(
       chart.inputSha256
         ? `The program’s own digest of what this chart was built from, which also takes in the outline, the kit, the stances and the marks: ${chart.inputSha256.toString('hex')}.`

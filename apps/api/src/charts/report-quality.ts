@@ -48,13 +48,13 @@ export function agreementFacts({ built, visits }: SurveyReport): Facts {
   ];
 }
 
-export function qualityFacts({ built: { quality, soundings } }: SurveyReport): Facts {
+export function qualityFacts({ built: { quality, soundings, logs } }: SurveyReport): Facts {
   const grades = Grade.options.map(
     (grade) => `${grade} ${soundings.filter((each) => each.grade === grade).length}`,
   );
   const { variogram } = quality;
   return [
-    ['Grades', grades.join(', ')],
+    [logs.length === 0 ? 'Grades' : 'Grades of casts', grades.join(', ')],
     [
       'Left out one by one',
       `mean error ${quality.meanErrorM.toFixed(3)} m, root mean square ${quality.rmseM.toFixed(3)} m over ${quality.soundings} soundings`,
@@ -79,15 +79,26 @@ export function qualityFacts({ built: { quality, soundings } }: SurveyReport): F
   ];
 }
 
+/** Those of grade D are kept for staff and build nothing. */
+const mergedOf = (logs: SurveyReport['built']['logs']): number =>
+  logs.reduce((sum, { grades }) => sum + grades.replaceAll('D', '').length, 0);
+
 /** Reasons are told once each, with how many casts they kept out. */
-export function usedFacts({ built: { leftOut, soundings } }: SurveyReport): Facts {
+export function usedFacts({ built: { leftOut, soundings, points, logs, reports } }: SurveyReport): Facts {
   const reasons = new Map<string, number>();
   for (const { why } of leftOut) reasons.set(why, (reasons.get(why) ?? 0) + 1);
   const told = [...reasons]
     .sort(([, a], [, b]) => b - a)
     .map(([why, n]): [string, string] => [`${n} casts`, why]);
   return [
-    ['Soundings in the chart', String(soundings.length)],
+    ['Casts with a depth', `${soundings.length} in the chart`],
+    ['Casts of the bottom only', `${points.length} in the chart`],
+    ...(logs.length > 0
+      ? [['Merged soundings of logs', `${figure(mergedOf(logs))} in the chart`] as [string, string]]
+      : []),
+    ...(reports.length > 0
+      ? [['Reports of anglers', `${reports.length} in the chart`] as [string, string]]
+      : []),
     ...(told.length > 0 ? told : [['Left out', 'none'] as [string, string]]),
   ];
 }
@@ -95,7 +106,7 @@ export function usedFacts({ built: { leftOut, soundings } }: SurveyReport): Fact
 const signed = (value: number, decimals: number): string =>
   `${value > 0 ? '+' : ''}${figure(value, decimals)}`;
 
-export function changeFacts({ earlier, built: { figures, soundings }, chart }: SurveyReport): Facts {
+export function changeFacts({ earlier, built: { figures, soundings, logs }, chart }: SurveyReport): Facts {
   if (!earlier) return [['Version before', 'none: this is the first chart of this water']];
   const was = earlier.figures;
   const days =
@@ -107,7 +118,15 @@ export function changeFacts({ earlier, built: { figures, soundings }, chart }: S
       'Visits',
       `${chart.visitIds.length}, of which ${kept} stood in the version before; ${earlier.visitIds.length - kept} of its visits are not used any more`,
     ],
-    ['Soundings', `${soundings.length}; ${earlier.casts} before`],
+    ['Soundings of casts', `${soundings.length}; ${earlier.casts} before`],
+    ...(logs.length + earlier.merged > 0
+      ? [
+          ['Merged soundings of logs', `${figure(mergedOf(logs))}; ${figure(earlier.merged)} before`] as [
+            string,
+            string,
+          ],
+        ]
+      : []),
     [
       'Datum',
       chart.datumM === earlier.datumM

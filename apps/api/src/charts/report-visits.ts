@@ -1,3 +1,4 @@
+import type { LeadCalibration } from '@mereward/db/entities/surveys/lead-calibration';
 import type { Kit } from '@mereward/shared/surveys/contract';
 import { stickWords } from '@mereward/shared/charts/spot-words';
 import { dayWords } from '@mereward/shared/time/civil-day';
@@ -6,7 +7,7 @@ import type { PaperBlock } from './paper-pages';
 import type { SurveyReport } from './report-document';
 
 /** Who surveyed when, in what weather, with what kit and which constants. */
-export function visitBlocks({ visits, people, zone }: SurveyReport): PaperBlock[] {
+export function visitBlocks({ visits, people, zone, leads, built }: SurveyReport): PaperBlock[] {
   return visits.flatMap(({ visit, casts }, i): PaperBlock[] => {
     const { weather, clarity, weedState, startedAt, endedAt } = visit;
     const wind = [
@@ -14,17 +15,26 @@ export function visitBlocks({ visits, people, zone }: SurveyReport): PaperBlock[
       weather.windFrom === null ? '' : `from ${weather.windFrom}`,
       weather.note,
     ];
+    const logs = built.logs.filter(({ visitId }) => visitId === visit.id).length;
+    const brought = [
+      casts.length > 0 || logs === 0 ? `${casts.length} casts` : '',
+      logs > 0 ? `${logs} ${logs === 1 ? 'log' : 'logs'} of soundings` : '',
+    ];
     const until = endedAt ? ` to ${dayAndClock(endedAt.toISOString(), zone)}` : ', still open';
     return [
       { kind: 'words', words: `Visit ${i + 1}: ${visit.title}`, bold: true },
       {
         kind: 'facts',
         facts: [
-          ['When', `${dayAndClock(startedAt.toISOString(), zone)}${until}; ${casts.length} casts`],
+          [
+            'When',
+            `${dayAndClock(startedAt.toISOString(), zone)}${until}; ${brought.filter(Boolean).join(', ')}`,
+          ],
           ['Surveyor', `${people.get(visit.surveyorId) ?? 'not known'}, ${visit.competence}`],
           ['Weather', wind.filter(Boolean).join(', ') || 'not noted'],
           ['Water', [clarity, weedState].filter(Boolean).join('; ') || 'not noted'],
-          ...kitFacts(visit.kit),
+          ...(casts.length > 0 ? kitFacts(visit.kit) : []),
+          ...(casts.length > 0 ? leadFacts(visit.kit, leads) : []),
         ],
       },
     ];
@@ -62,5 +72,20 @@ function kitFacts(kit: Kit): [string, string][] {
       `one pull ${(kit.pullM * 1000).toFixed(1)} mm; the float and its link add ${(kit.floatOffsetM * 1000).toFixed(0)} mm`,
     ],
     ['Compass', `${kit.declinationDeg.toFixed(1)}° from magnetic to true`],
+  ];
+}
+
+/** The rate a calibrated lead falls at, and the soundings by float it was learnt from. */
+function leadFacts(kit: Kit, leads: ReadonlyMap<string, LeadCalibration>): [string, string][] {
+  const lead = kit.leadId ? leads.get(kit.leadId) : undefined;
+  if (!lead)
+    return [['Counted falls', 'kept as counts and not charted: no calibrated lead was named in the kit']];
+  const { rateMPerS, rateSigmaMPerS, scatterM, spots } = lead.calibration;
+  const learnt = lead.falls.map(({ seconds, depthM }) => `${seconds} s to ${depthM} m`).join(', ');
+  return [
+    [
+      'Counted falls',
+      `${lead.name}: ${rateMPerS.toFixed(2)} ± ${rateSigmaMPerS.toFixed(2)} m a second, one depth ± ${scatterM.toFixed(2)} m; from ${spots} spots read by float on ${dayWords(lead.calibratedOn)} (${learnt})`,
+    ],
   ];
 }

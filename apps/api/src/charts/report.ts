@@ -1,21 +1,36 @@
 import { Account } from '@mereward/db/entities/accounts/account';
 import { Chart } from '@mereward/db/entities/charts/chart';
+import { Disagreement } from '@mereward/db/entities/charts/disagreement';
 import { Fishery } from '@mereward/db/entities/fisheries/fishery';
+import { Peg } from '@mereward/db/entities/lakes/peg';
+import { LeadCalibration } from '@mereward/db/entities/surveys/lead-calibration';
+import { SoundingImport } from '@mereward/db/entities/surveys/sounding-import';
 import { civilDay } from '@mereward/shared/time/civil-day';
-import type { EntityManager } from 'typeorm';
+import { In, type EntityManager } from 'typeorm';
 import type { Ctx } from '../ctx';
+import type { FileStore } from '../files/store';
 import { coverageOf } from '../surveys/coverage';
+import { eventsOf } from '../surveys/endings';
 import { Built } from './built';
+import { ageNow } from './chart-age-now';
 import { castsTable, chartCasts, type ChartCasts } from './chart-casts';
+import { soundingsTable } from './chart-soundings';
 import { drawPaper } from './draw-paper';
 import { fileName } from './file-name';
+import type { LogBrought } from './report-logs';
+import { reportPhotos } from './report-photos';
 import { reportDocument, type EarlierChart, type SurveyReport } from './report-document';
 
 /** The whole account of a survey, for the staff: how it was made, every cast, how good it is, and whose it is. */
-export async function surveyReport(ctx: Ctx, chartId: string): Promise<{ filename: string; pdf: Buffer }> {
+export async function surveyReport(
+  ctx: Ctx,
+  chartId: string,
+  store: FileStore,
+): Promise<{ filename: string; pdf: Buffer }> {
   const { tx, now } = ctx;
   const casts = await chartCasts(ctx, chartId);
-  const { chart, lake, visits, zone } = casts;
+  const { chart, lake, visits, zone, built } = casts;
+  const { surveyedTo, datumM } = chart;
   const fishery = await tx.findOneByOrFail(Fishery, { id: lake.fisheryId });
   const table = await castsTable(tx, casts);
   const report: SurveyReport = {
@@ -25,7 +40,17 @@ export async function surveyReport(ctx: Ctx, chartId: string): Promise<{ filenam
     readings: await readingsOf(tx, casts),
     coverage: visits.map(({ site, casts: own }) => coverageOf(site, own)),
     earlier: await chartBefore(tx, casts),
+    logs: await logsBrought(tx, casts),
+    leads: await leadsOf(tx, casts),
+    events: await eventsOf(tx, lake.id),
+    ageNow:
+      surveyedTo === null
+        ? null
+        : await ageNow(ctx, { lakeId: lake.id, surveyedTo, datumM, zone, origin: built.origin }),
+    accepted: await acceptedOf(tx, casts),
+    photos: await reportPhotos(ctx, casts, store),
     table,
+    soundingsTable: soundingsTable(casts),
     writtenAt: now,
     writtenOn: civilDay(now, zone),
   };
@@ -45,6 +70,39 @@ async function namesOf(
   ].filter((id) => id !== null);
   const people = await tx.createQueryBuilder(Account, 'a').where('a.id = ANY (:ids)', { ids }).getMany();
   return new Map(people.map(({ id, name }) => [id, name]));
+}
+
+/** How each of the chart's logs was read, and who brought it. */
+async function logsBrought(tx: EntityManager, { built }: ChartCasts): Promise<SurveyReport['logs']> {
+  const imports = await tx.findBy(SoundingImport, { id: In(built.logs.map(({ id }) => id)) });
+  const people = await tx.findBy(Account, { id: In(imports.map(({ importedBy }) => importedBy)) });
+  const names = new Map(people.map(({ id, name }) => [id, name]));
+  return new Map(
+    imports.map(({ id, options, report, importedBy, importedAt }): [string, LogBrought] => [
+      id,
+      { options, report, by: names.get(importedBy) ?? 'not known', at: importedAt },
+    ]),
+  );
+}
+
+async function leadsOf(tx: EntityManager, { visits }: ChartCasts): Promise<SurveyReport['leads']> {
+  const ids = visits.flatMap(({ visit: { kit } }) => kit.leadId ?? []);
+  const leads = await tx.findBy(LeadCalibration, { id: In(ids) });
+  return new Map(leads.map((lead) => [lead.id, lead]));
+}
+
+async function acceptedOf(tx: EntityManager, { built, zone }: ChartCasts): Promise<SurveyReport['accepted']> {
+  const rows = await tx.findBy(Disagreement, { id: In(built.reports.map(({ id }) => id)) });
+  const pegs = await tx.findBy(Peg, { id: In(built.reports.map(({ pegId }) => pegId)) });
+  return built.reports.map((report) => {
+    const row = rows.find(({ id }) => id === report.id);
+    return {
+      ...report,
+      peg: pegs.find(({ id }) => id === report.pegId)?.number ?? '',
+      place: row?.place.words ?? '',
+      acceptedOn: row?.decidedAt ? civilDay(row.decidedAt, zone) : null,
+    };
+  });
 }
 
 /** What the lake's datum board read from the day before the survey's first to the day after its last. */
@@ -80,6 +138,7 @@ async function chartBefore(tx: EntityManager, { chart }: ChartCasts): Promise<Ea
       built: true,
     },
   });
-  const { figures, soundings } = Built.parse(built);
-  return { version, surveyedFrom, surveyedTo, visitIds, datumM, figures, casts: soundings.length };
+  const { figures, soundings, logs } = Built.parse(built);
+  const merged = logs.reduce((sum, { grades }) => sum + grades.length, 0);
+  return { version, surveyedFrom, surveyedTo, visitIds, datumM, figures, casts: soundings.length, merged };
 }

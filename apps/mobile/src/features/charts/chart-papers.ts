@@ -1,6 +1,8 @@
+import type { SurveyedBy } from '@mereward/shared/charts/chart-log-view';
 import type { Paper } from './paper-buttons';
 
 type Named = { id: string; lakeName: string; version: string | null };
+type Surveyed = Named & { surveyedBy?: SurveyedBy | undefined }; // absent until it is built
 
 const slug = (words: string): string =>
   words
@@ -20,7 +22,7 @@ export const sheetPapers = (chart: Named): Paper[] =>
   }));
 
 /** What only the fishery's staff may take away: raw casts are theirs. */
-export const staffPapers = (chart: Named): Paper[] => [
+export const staffPapers = (chart: Surveyed): Paper[] => [
   {
     label: 'Survey report (PDF)',
     path: `/charts/${chart.id}/report.pdf`,
@@ -31,8 +33,17 @@ export const staffPapers = (chart: Named): Paper[] => [
     path: `/charts/${chart.id}/casts.csv`,
     name: `${named(chart, 'casts')}.csv`,
   },
+  ...((chart.surveyedBy ?? 'casts') === 'casts'
+    ? []
+    : [
+        {
+          label: 'Every merged sounding (CSV)',
+          path: `/charts/${chart.id}/soundings.csv`,
+          name: `${named(chart, 'soundings')}.csv`,
+        },
+      ]),
   {
-    label: 'Digest of that table (SHA-256)',
+    label: 'Digest of the table of casts (SHA-256)',
     path: `/charts/${chart.id}/casts.csv.sha256`,
     name: `${named(chart, 'casts')}.csv.sha256`,
   },

@@ -43,8 +43,8 @@ export function ChartReviewScreen() {
   );
 }
 
-function papersOf({ chart: { id, version }, lakeName }: ChartReview) {
-  const named = { id, version, lakeName };
+function papersOf({ chart: { id, version }, lakeName, logs }: ChartReview) {
+  const named = { id, version, lakeName, ...(logs.length > 0 ? { surveyedBy: 'both' as const } : {}) };
   return [...sheetPapers(named), ...staffPapers(named), layersPaper(named)];
 }
 
