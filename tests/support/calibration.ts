@@ -3,19 +3,19 @@ import { columnXM, isSurveyed, rowYM } from '@mereward/shared/charts/grid';
 import type { Grade } from '@mereward/shared/surveys/contract';
 import { simulatedSurvey, type SimulatedCast, type SimulatedSurvey } from './simulated-surveys';
 
-/** The one-σ limits of a grade as the bailiffs are told them, metres: position each way, depth. */
+/** The limits of a grade as people are told them, 19 in 20, metres: position each way, depth. */
 const LIMITS: Record<Grade, { placeM: number; depthM: number }> = {
-  A: { placeM: 1, depthM: 0.15 },
-  B: { placeM: 2, depthM: 0.3 },
-  C: { placeM: 4, depthM: 0.6 },
+  A: { placeM: 2, depthM: 0.3 },
+  B: { placeM: 4, depthM: 0.6 },
+  C: { placeM: 8, depthM: 1.2 },
   D: { placeM: Infinity, depthM: Infinity },
 };
 
 export type GradeSeen = {
   casts: number;
   withinLimits: { along: number; across: number; depth: number }; // shares
-  ownEllipse: number; // share inside the cast's own 95 % ellipse
-  ownDepthBand: number; // share inside its own 1.96 σ of depth; the bed at the true place against what was read
+  /** Shares inside the cast's own 95 % ellipse, and its own 1.96 σ; depth: the bed at the true place against what was read. */
+  own: { ellipse: number; along: number; across: number; depth: number };
   rmsPlaceM: number;
 };
 
@@ -38,18 +38,14 @@ export function calibrate({ firstSeed, surveys }: { firstSeed: number; surveys: 
     casts.push(...survey.casts);
     holdChart(survey, seen);
   }
-  const gradeSeen = (grade: Grade) =>
-    holdCasts(
-      casts.filter(({ sounding }) => sounding.grade === grade),
-      grade,
-    );
-  const grades = { A: gradeSeen('A'), B: gradeSeen('B'), C: gradeSeen('C'), D: gradeSeen('D') };
+  const grades = gradesSeen(casts);
   const heldShare = seen.held / seen.cells;
   const rmseM = Math.sqrt(seen.squares / seen.cells);
   const percent = (share: number) => `${(100 * share).toFixed(1)} %`;
-  const gradeWords = (['A', 'B', 'C'] as const).map((grade) => {
-    const { casts: count, withinLimits: w } = grades[grade];
-    return `${grade} (${count}) along ${percent(w.along)}, across ${percent(w.across)}, depth ${percent(w.depth)}`;
+  const gradeWords = (['A', 'B', 'C', 'D'] as const).map((grade) => {
+    const { casts: count, own } = grades[grade];
+    const shares = Object.entries(own).map(([name, share]) => `${name} ${percent(share)}`);
+    return `${grade} (${count}) ${shares.join(', ')}`;
   });
   return {
     surveys,
@@ -60,8 +56,17 @@ export function calibrate({ firstSeed, surveys }: { firstSeed: number; surveys: 
     grades,
     words:
       `${surveys} simulated bank surveys: 95 % bands hold ${percent(heldShare)} of ${seen.cells} cells, ` +
-      `RMSE ${rmseM.toFixed(3)} m; casts within their grade’s limits: ${gradeWords.join('; ')}`,
+      `RMSE ${rmseM.toFixed(3)} m; casts within their own 95 %: ${gradeWords.join('; ')}`,
   };
+}
+
+function gradesSeen(casts: readonly SimulatedCast[]): Record<Grade, GradeSeen> {
+  const seen = (grade: Grade) =>
+    holdCasts(
+      casts.filter(({ sounding }) => sounding.grade === grade),
+      grade,
+    );
+  return { A: seen('A'), B: seen('B'), C: seen('C'), D: seen('D') };
 }
 
 type ChartSeen = { cells: number; held: number; squares: number; sigmas: number };
@@ -90,10 +95,15 @@ function holdCasts(casts: readonly SimulatedCast[], grade: Grade): GradeSeen {
   const errors = casts.map(({ sounding, truth, trueDepthM }) => {
     const [dx, dy] = [sounding.xM - truth.xM, sounding.yM - truth.yM];
     const turn = (sounding.bearingDeg * Math.PI) / 180;
+    const [sin, cos] = [Math.sin(turn), Math.cos(turn)];
     const { xx, xy, yy } = sounding.covariance;
+    const alongSigmaM = Math.sqrt(xx * sin * sin + 2 * xy * sin * cos + yy * cos * cos);
+    const acrossSigmaM = Math.sqrt(xx * cos * cos - 2 * xy * sin * cos + yy * sin * sin);
     return {
-      alongM: dx * Math.sin(turn) + dy * Math.cos(turn),
-      acrossM: dx * Math.cos(turn) - dy * Math.sin(turn),
+      alongSigmaM,
+      acrossSigmaM,
+      alongM: dx * sin + dy * cos,
+      acrossM: dx * cos - dy * sin,
       placeM: Math.hypot(dx, dy),
       mahalanobis2: (yy * dx * dx - 2 * xy * dx * dy + xx * dy * dy) / (xx * yy - xy * xy),
       depthM: (sounding.depthM ?? Number.NaN) - trueDepthM,
@@ -109,8 +119,12 @@ function holdCasts(casts: readonly SimulatedCast[], grade: Grade): GradeSeen {
       across: share((e) => Math.abs(e.acrossM) <= placeM),
       depth: share((e) => Math.abs(e.depthM) <= depthM),
     },
-    ownEllipse: share((e) => e.mahalanobis2 <= 5.991), // χ² of two degrees at 95 %
-    ownDepthBand: share((e) => Math.abs(e.depthSigmas) <= 1.96),
+    own: {
+      ellipse: share((e) => e.mahalanobis2 <= 5.991), // χ² of two degrees at 95 %
+      along: share((e) => Math.abs(e.alongM) <= 1.96 * e.alongSigmaM),
+      across: share((e) => Math.abs(e.acrossM) <= 1.96 * e.acrossSigmaM),
+      depth: share((e) => Math.abs(e.depthSigmas) <= 1.96),
+    },
     rmsPlaceM: Math.sqrt(errors.reduce((sum, e) => sum + e.placeM ** 2, 0) / errors.length),
   };
 }

@@ -3,6 +3,7 @@ import { ageWords } from '@mereward/shared/charts/chart-age';
 import type { ChartView } from '@mereward/shared/charts/contract';
 import { layerReasons } from '@mereward/shared/charts/layer-reasons';
 import { stickWords } from '@mereward/shared/charts/spot-words';
+import { GRADE_LIMITS } from '@mereward/shared/surveys/grade';
 import { dayWords } from '@mereward/shared/time/civil-day';
 import { dayAndClock, dayRange } from '@mereward/shared/time/day-names';
 import { USUAL_SPACING_M } from '@mereward/shared/units/wraps';
@@ -37,6 +38,12 @@ function levelWords({ levelNow, datumM, zone }: ChartView): string {
   return `Board ${levelNow.boardCode} read ${levelNow.boardReadsM.toFixed(2)} m on ${dayAndClock(levelNow.at, zone)}: ${change}.`;
 }
 
+/** "place within 2 m, depth within 0.3 m": how far off 19 in 20 of a grade are at most. */
+function within95(grade: 'A' | 'B' | 'C'): string {
+  const { positionM, depthM } = GRADE_LIMITS.find((each) => each.grade === grade)!.within95;
+  return `place within ${positionM} m, depth within ${depthM} m`;
+}
+
 /** How to read what is drawn. Only of the layers that are there. */
 export function sheetKey(chart: ChartView): string[] {
   const { isobaths, contourStepM, soundings, substrate } = chart;
@@ -48,7 +55,7 @@ export function sheetKey(chart: ChartView): string[] {
       : []),
     ...(soundings
       ? [
-          `${soundings.some(({ ofLog }) => ofLog) ? 'Soundings' : 'Casts'} as points, with their depth where it has room: full, grade A (place within 1 m, depth within 0.15 m, both one standard deviation) or B (2 m, 0.3 m); hollow, C (4 m)${soundings.some(({ grade }) => grade === 'D') ? ' or D (more, or something missing: for staff only)' : ''}.`,
+          `${soundings.some(({ ofLog }) => ofLog) ? 'Soundings' : 'Casts'} as points, with their depth where it has room: full, grade A (${within95('A')}, 19 in 20) or B (${within95('B')}); hollow, C (${within95('C')})${soundings.some(({ grade }) => grade === 'D') ? ' or D (more, or something missing: for staff only)' : ''}.`,
         ]
       : []),
     ...(substrate

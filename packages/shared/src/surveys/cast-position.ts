@@ -3,7 +3,7 @@ import { toPlane, type LonLat, type Point } from '../geometry/plane';
 import { aimedFrom, sidestepShare } from './aim';
 import type { CastSite, Refusal } from './cast-site';
 import type { CastObservation, Kit, ReductionStep } from './contract';
-import { ellipse95, spotCovariance, type Covariance } from './covariance';
+import { BAND_95, ELLIPSE_95, ellipse95, spotCovariance, type Covariance } from './covariance';
 import { SIGMA } from './error-budget';
 import { groundRange, rangeSigmaM, rangeStep, type Slope } from './ground-range';
 import { lineOut } from './line-out';
@@ -39,12 +39,14 @@ export function castPosition(
   const { rangeM } = range;
   const bowM = cast.flags.includes('crosswind') ? SIGMA.crosswindBowM : 0;
   const slackM = cast.flags.includes('slack_line') ? SIGMA.slackLineM : 0;
+  const besideM = site.stance.originMarked ? SIGMA.besideMarkedOriginM : SIGMA.besideUnmarkedOriginM;
   const alongM = Math.hypot(
     rangeSigmaM(line.lineOutM, slope, { lineM: line.sigmaM, depthM: depth.sigmaM }),
     (8 * bowM * bowM) / (3 * line.lineOutM), // extra line in a belly b deep: 8b²/3L
     slackM,
+    besideM, // nearer the water or farther back moves the spot as much
+    arcBendM(rangeM, aimed.sigmaDeg),
   );
-  const besideM = site.stance.originMarked ? SIGMA.besideMarkedOriginM : SIGMA.besideUnmarkedOriginM;
   const acrossM = Math.hypot(
     rangeM * Math.tan((aimed.sigmaDeg * Math.PI) / 180),
     besideM * sidestepShare(rangeM, aimed.markRangeM),
@@ -74,6 +76,16 @@ export function castPosition(
       spotStep({ bearingDeg, rangeM, point, covariance }, site),
     ],
   };
+}
+
+/**
+ * What an uncertain bearing adds to σ along the line, metres. Places at one range lie on an arc that bends away from the
+ * straight error across the line by R·(1 − cos θ); this much along it makes the 95 % ellipse reach the arc out to 1.96 σ of the
+ * bearing: (1.96)² + (bend / σ)² = −2 ln 0.05. Millimetres over a mark, two metres for a bearing guessed to 10° at 50 m.
+ */
+function arcBendM(rangeM: number, sigmaDeg: number): number {
+  const turn = Math.min(Math.PI / 2, (BAND_95 * sigmaDeg * Math.PI) / 180);
+  return (rangeM * (1 - Math.cos(turn))) / Math.sqrt(ELLIPSE_95 ** 2 - BAND_95 ** 2);
 }
 
 /** The triangle of one cast over water `depthM` deep; the cast's own rod angle counts. */

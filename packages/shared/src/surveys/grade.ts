@@ -1,11 +1,24 @@
 import type { CastFlag, Grade } from './contract';
 
-/** One-σ limits of a grade: along and across the line, and of the depth, metres. Common practice, no published source. */
+/**
+ * Limits of a grade, metres: the σ it asks for along and across the line (`positionM`) and of the depth (`depthM`), common
+ * practice, no published source; and how far off 19 casts in 20 are at most, 1.96 σ, which is what people are told. A float
+ * pulled a foot at a time is out by up to half a foot, 0.15 m, by the last pull alone, so no σ rule can promise less.
+ */
 export const GRADE_LIMITS = [
-  { grade: 'A', positionM: 1, depthM: 0.15 },
-  { grade: 'B', positionM: 2, depthM: 0.3 },
-  { grade: 'C', positionM: 4, depthM: 0.6 },
+  { grade: 'A', positionM: 1, depthM: 0.15, within95: { positionM: 2, depthM: 0.3 } },
+  { grade: 'B', positionM: 2, depthM: 0.3, within95: { positionM: 4, depthM: 0.6 } },
+  { grade: 'C', positionM: 4, depthM: 0.6, within95: { positionM: 8, depthM: 1.2 } },
 ] as const;
+
+/** What a grade stands for, each way and in depth, in words: "19 in 20 within 2 m, depth within 0.3 m". */
+export function gradeMeans(grade: Grade): string {
+  const limits = GRADE_LIMITS.find((each) => each.grade === grade);
+  if (!limits) return 'rougher, or something is missing; staff only';
+  const { positionM, depthM } = limits.within95;
+  const within = `19 in 20 within ${positionM} m, depth within ${depthM} m`;
+  return grade === 'C' ? `${within}; shown as a point, never contoured` : within;
+}
 
 /** What the grade of a sounding rests on. */
 export type GradeFacts = {
@@ -25,8 +38,8 @@ export type GradeFacts = {
 };
 
 /**
- * Grade A–D with every reason that held it down. Figures first (A ≤ 1 m both ways and ± 0.15 m, B ≤ 2 m and ± 0.3 m,
- * C ≤ 4 m, D more), then caps.
+ * Grade A–D with every reason that held it down. Figures first (σ: A ≤ 1 m both ways and 0.15 m, B ≤ 2 m and 0.3 m,
+ * C ≤ 4 m and 0.6 m, D more), then caps.
  *
  * A also asks for a marked origin, a permanent mark, braid, a known level and a repeated reading. A reading counts
  * as repeated when the float was read twice within a pull, or when the cast itself can be wound and thrown again to

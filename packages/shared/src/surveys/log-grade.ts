@@ -2,8 +2,8 @@ import type { Grade } from './contract';
 import { GRADE_LIMITS } from './grade';
 
 /**
- * Grade of a sounding from a log, by the same limits as a cast's: A ≤ 1 m and ± 0.15 m, B ≤ 2 m and ± 0.3 m, C ≤ 4 m and
- * ± 0.6 m, D more. No better than C where the board was not read within a fortnight. σ in metres.
+ * Grade of a sounding from a log, by the same limits as a cast's: σ of A ≤ 1 m and 0.15 m, B ≤ 2 m and 0.3 m, C ≤ 4 m and
+ * 0.6 m, D more. No better than C where the board was not read within a fortnight. σ in metres.
  */
 export function logGrade(sigma: { positionM: number; depthM: number; levelKnown: boolean }): Grade {
   const met = GRADE_LIMITS.find(

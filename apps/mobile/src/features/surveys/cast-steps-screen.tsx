@@ -3,6 +3,7 @@ import { useLocalSearchParams } from 'expo-router';
 import type { LakeView, PegView } from '@mereward/shared/lakes/contract';
 import { castWords } from '@mereward/shared/surveys/cast-words';
 import type { CastView, SoundingView, VisitWithCasts } from '@mereward/shared/surveys/contract';
+import { gradeMeans } from '@mereward/shared/surveys/grade';
 import { Empty } from '@/components/empty';
 import { Facts } from '@/components/facts';
 import { LinkButton } from '@/components/link-button';
@@ -17,7 +18,6 @@ import { callWords, depthWords } from '@/features/surveys/call-words';
 import { reducingOf } from '@/features/surveys/cast-site-of';
 import { GradeShape } from '@/features/surveys/grade-shape';
 import { ReductionSteps } from '@/features/surveys/reduction-steps';
-import { GRADE_WORDS } from '@/features/surveys/visit-words';
 import { useKeptReduction } from '@/features/surveys/use-cast-reduction';
 import { useUnits } from '@/hooks/use-units';
 import { figure, length } from '@/lib/format';
@@ -115,7 +115,7 @@ function Sounding({ sounding }: { sounding: SoundingView }) {
           { term: 'Bottom', fact: callWords(sounding) },
           { term: 'Depth', fact: depthWords(sounding, units) },
           { term: 'Grade', fact: <GradeShape grade={sounding.grade} /> },
-          { term: 'That is', fact: GRADE_WORDS[sounding.grade] },
+          { term: 'That is', fact: gradeMeans(sounding.grade) },
           { term: 'Because', fact: sounding.gradeReasons.join('; ') },
           {
             term: 'Where',

@@ -1,5 +1,5 @@
 import type { LakeView } from '@mereward/shared/lakes/contract';
-import type { Grade, VisitView } from '@mereward/shared/surveys/contract';
+import type { VisitView } from '@mereward/shared/surveys/contract';
 import { fromMetres } from '@mereward/shared/units/length';
 import { dayAndTime, dayName } from '@/lib/format-time';
 import { figure } from '@/lib/format';
@@ -29,14 +29,6 @@ export function visitCountWords({
   const casts = castCount > 0 || soundingCount === 0 ? [countWords(castCount, 'cast')] : [];
   return [...casts, ...soundings].join(', ');
 }
-
-/** What a grade stands for, each way and in depth. */
-export const GRADE_WORDS: Readonly<Record<Grade, string>> = {
-  A: 'within 1 m, depth within 0.15 m',
-  B: 'within 2 m, depth within 0.3 m',
-  C: 'within 4 m; shown as a point, never contoured',
-  D: 'rougher, or something is missing; staff only',
-};
 
 /** "0.54 m on board B1, 2 days ago", or that nobody has read it. */
 export function levelWords(lake: LakeView): string {
