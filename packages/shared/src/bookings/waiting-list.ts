@@ -1,0 +1,61 @@
+import type { Interval } from '../time/interval';
+import { addDays, civilTime, instantOf } from '../time/zoned';
+
+/** Common practice, no published source: half an hour to claim by day, nothing asked of anybody from 22:00 to 07:00. */
+export const CLAIM_MINUTES = 30;
+export const QUIET_FROM = '22:00';
+export const QUIET_UNTIL = '07:00';
+
+const MINUTE_MS = 60_000;
+const isQuiet = (clock: string): boolean => clock >= QUIET_FROM || clock < QUIET_UNTIL;
+
+/**
+ * When a place that has come free is offered and how long it is kept. Quiet hours (the lake’s clock) don’t count: what
+ * of the half hour is left at 22:00 goes on at 07:00. Null when it would start before the half hour is over, so that
+ * nobody is offered a place they can’t take.
+ */
+export function claimWindow(freedAt: Date, start: Date, zone: string): Interval | null {
+  const from = isQuiet(clockOf(freedAt, zone)) ? nextMorning(freedAt, zone) : freedAt;
+  const quiet = instantOf(`${civilTime(from, zone).slice(0, 10)}T${QUIET_FROM}`, zone).at;
+  const whole = new Date(from.getTime() + CLAIM_MINUTES * MINUTE_MS);
+  const left = whole.getTime() - quiet.getTime();
+  const until = left <= 0 ? whole : new Date(nextMorning(quiet, zone).getTime() + left);
+  return until.getTime() <= start.getTime() ? { from, until } : null;
+}
+
+const clockOf = (at: Date, zone: string): string => civilTime(at, zone).slice(11, 16);
+
+function nextMorning(at: Date, zone: string): Date {
+  const [day = '', clock = ''] = civilTime(at, zone).split('T');
+  const morning = clock < QUIET_UNTIL ? day : addDays(day, 1);
+  return instantOf(`${morning}T${QUIET_UNTIL}`, zone).at;
+}
+
+export type WaitingPlace = {
+  id: string;
+  joinedAt: Date; // by the server’s clock
+  state: 'waiting' | 'offered' | 'taken' | 'left';
+  passedOver: readonly string[]; // freed places they let go by
+};
+
+/** The order of a list: who joined first, ids where two joined in the same instant. Nobody is moved by hand. */
+export const inOrder = <Place extends WaitingPlace>(places: readonly Place[]): Place[] =>
+  [...places].sort(
+    (a, b) => a.joinedAt.getTime() - b.joinedAt.getTime() || (a.id < b.id ? -1 : a.id > b.id ? 1 : 0),
+  );
+
+/** Who is offered a freed place: the first who still waits and has not let this one go by; null when nobody. */
+export const nextInLine = <Place extends WaitingPlace>(
+  places: readonly Place[],
+  freedId: string,
+): Place | null =>
+  inOrder(places).find(({ state, passedOver }) => state === 'waiting' && !passedOver.includes(freedId)) ??
+  null;
+
+/** Somebody’s own place in the line, from 1; null when they are not waiting. Shown to nobody else. */
+export function placeInLine(places: readonly WaitingPlace[], id: string): number | null {
+  const index = inOrder(places)
+    .filter(({ state }) => state === 'waiting' || state === 'offered')
+    .findIndex((each) => each.id === id);
+  return index < 0 ? null : index + 1;
+}
