@@ -152,6 +152,7 @@ describe('a draft', () => {
 describe('a build', () => {
   test('tells each step in words and a share that only rises, to the end', async () => {
     const chart = {
+      id: randomUUID(),
       lakeId: water.lake.id,
       visitIds: [surveyVisit],
       contourStepM: 0.5,

@@ -2,6 +2,7 @@ import { accountRoutes } from './accounts/routes';
 import { bookingRoutes } from './bookings/routes';
 import { disagreementRoutes } from './charts/disagreement-routes';
 import { paperRoutes } from './charts/paper-routes';
+import { leftOutRoutes } from './charts/left-out-routes';
 import { chartRoutes } from './charts/routes';
 import { tellingRoutes } from './charts/telling-routes';
 import { fisheryRoutes } from './fisheries/routes';
@@ -29,6 +30,7 @@ export const routes: readonly Route[] = [
   ...bottomRoutes,
   ...logRoutes,
   ...chartRoutes,
+  ...leftOutRoutes,
   ...paperRoutes,
   ...tellingRoutes,
   ...disagreementRoutes,

@@ -28,6 +28,7 @@ import { SoundingImport } from './entities/surveys/sounding-import';
 import { ChartBuild } from './entities/charts/chart-build';
 import { Spot } from './entities/charts/spot';
 import { Chart } from './entities/charts/chart';
+import { ChartLeftOut } from './entities/charts/chart-left-out';
 import { Disagreement } from './entities/charts/disagreement';
 import { AccountsAndFisheries1780000000000 } from './migrations/1780000000000-AccountsAndFisheries';
 import { LakesAndPegs1780000001000 } from './migrations/1780000001000-LakesAndPegs';
@@ -41,6 +42,7 @@ import { PegCodes1780000009000 } from './migrations/1780000009000-PegCodes';
 import { WaterAreas1780000007000 } from './migrations/1780000007000-WaterAreas';
 import { SoundingLogs1780000005000 } from './migrations/1780000005000-SoundingLogs';
 import { LakePictures1780000010000 } from './migrations/1780000010000-LakePictures';
+import { ChartLeftOut1780000013000 } from './migrations/1780000013000-ChartLeftOut';
 
 const ENTITIES = [
   Account,
@@ -71,6 +73,7 @@ const ENTITIES = [
   ChartBuild,
   Spot,
   Chart,
+  ChartLeftOut,
   Disagreement,
 ];
 
@@ -88,6 +91,7 @@ const MIGRATIONS = [
   WaterAreas1780000007000,
   SoundingLogs1780000005000,
   LakePictures1780000010000,
+  ChartLeftOut1780000013000,
 ];
 
 /** A pool of connections to one database, opened by the caller with `initialize()`. */

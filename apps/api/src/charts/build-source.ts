@@ -19,6 +19,7 @@ import { endingsOf } from '../surveys/endings';
 import type { ObservedCast, VisitSite } from '../surveys/reduce-visit';
 import { watersOf, type WatersFound } from '../lakes/peg-waters';
 import { visitSite } from '../surveys/visit-site';
+import { keyOf, leftOutOf, type SourceLeftOut } from './source-left-out';
 import { logsOf, soundingsOf, type SourceLog } from './source-logs';
 
 export type SourceCast = ObservedCast & { seq: number; lineId: string; observedOn: string };
@@ -36,7 +37,8 @@ export type BuildSource = {
   lake: Lake;
   zone: string;
   contourStepM: number;
-  visits: SourceVisit[];
+  visits: SourceVisit[]; // with every cast, those left out too
+  leftOut: SourceLeftOut[]; // by a person
   feel: BottomFeel;
   tableVersion: number; // of the feel; 0 is the built-in
   endings: BottomEnding[]; // works and seasons, oldest first
@@ -46,7 +48,7 @@ export type BuildSource = {
   waters: WatersFound; // for the advice on where to cast next; no part of the chart itself
 };
 
-type Wanted = Pick<Chart, 'lakeId' | 'visitIds' | 'contourStepM' | 'draftedAt'>;
+export type Wanted = Pick<Chart, 'id' | 'lakeId' | 'visitIds' | 'contourStepM' | 'draftedAt'>;
 
 /** Loads what a chart is made from, in an order of its own: visits and casts by their ids. */
 export async function buildSource(tx: EntityManager, chart: Wanted): Promise<BuildSource> {
@@ -85,6 +87,7 @@ export async function buildSource(tx: EntityManager, chart: Wanted): Promise<Bui
     zone,
     contourStepM: chart.contourStepM,
     visits: sourced,
+    leftOut: await leftOutOf(tx, { chartId: chart.id, visits: sourced, zone }),
     reports,
     feel,
     tableVersion: version,
@@ -120,7 +123,7 @@ async function acceptedReports(tx: EntityManager, lakeId: string): Promise<Sourc
  * Names and notes are no part of it.
  */
 export function sourceDigest(source: BuildSource): Buffer {
-  const { lake, contourStepM, visits, reports, feel, tableVersion, endings, confirmed } = source;
+  const { lake, contourStepM, visits, leftOut, reports, feel, tableVersion, endings, confirmed } = source;
   const decides = {
     outline: lake.details.outline,
     origin: [lake.originLon, lake.originLat],
@@ -143,6 +146,7 @@ export function sourceDigest(source: BuildSource): Buffer {
       ]),
       ...(logs.length > 0 ? { logs: logs.map(({ id, options }) => [id, options]) } : {}), // as before there were logs
     })),
+    ...(leftOut.length > 0 ? { leftOut: leftOut.map(({ what }) => keyOf(what)) } : {}),
     ...(tableVersion > 0 ? { feel } : {}),
     ...(endings.length > 0 ? { endings } : {}),
     ...(confirmed.length > 0 ? { confirmed } : {}),

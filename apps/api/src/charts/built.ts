@@ -81,11 +81,23 @@ export const BuiltLog = z.object({
   found: z.int(), // in its files
   kept: z.int(), // when it was taken in
   outside: z.int(), // of those, off the water of this outline
+  leftOut: z.int().default(0), // of those, left out of this chart by a person
   cellM: z.number(), // side of the cells the others were merged in
   points: z.array(z.number()), // x, y, depth, σ, x, y, depth, σ … metres
   grades: z.string(), // a letter for each
 });
 export type BuiltLog = z.infer<typeof BuiltLog>;
+
+/** What was merged into a sounding of a log that is out of line, or among the ten worst. */
+export const MergedPlace = z.object({
+  id: z.string(), // of the merged sounding
+  xM: z.number(), // of the cell's south-west corner
+  yM: z.number(),
+  fromSeq: z.int(), // of the log's soundings, from 1
+  toSeq: z.int(),
+  count: z.int(),
+});
+export type MergedPlace = z.infer<typeof MergedPlace>;
 
 const Lines = z.array(z.object({ levelM: z.number(), lines: z.array(z.array(z.number())) }));
 
@@ -98,7 +110,8 @@ export const Built = z.object({
   soundings: z.array(BuiltSounding), // every grade; D is left out of every view but the staff's
   points: z.array(BuiltPoint).default([]), // every grade, as above
   logs: z.array(BuiltLog).default([]),
-  leftOut: z.array(z.object({ id: z.string(), why: z.string() })),
+  merged: z.array(MergedPlace).default([]),
+  leftOut: z.array(z.object({ id: z.string(), why: z.string(), byHand: z.boolean().default(false) })), // by hand: by a person
   ended: z.array(EndedEvidence).default([]), // what events since the casts took out of it
   bottomTable: z.int().default(0), // version of the fishery's table of feels; 0 is the built-in
   isobaths: Lines, // x, y, x, y … metres on the lake's plane, to 0.01

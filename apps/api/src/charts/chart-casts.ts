@@ -9,6 +9,7 @@ import { In, type EntityManager } from 'typeorm';
 import type { Ctx } from '../ctx';
 import { notFound } from '../http/deny';
 import { STAFF } from '../lakes/policy';
+import { LEFT_OUT_FLAG } from '@mereward/shared/surveys/casts-row';
 import { CAST_COLUMNS_OUT, castRow, soundingCells, type CastCells } from '../surveys/cast-cells';
 import type { VisitSite } from '../surveys/reduce-visit';
 import { castsOf } from '../surveys/reduce-again';
@@ -57,7 +58,7 @@ export async function castsTable(
   { built, visits, zone, lake, chart }: ChartCasts,
 ): Promise<CastsTable> {
   const charted = new Map(built.soundings.map((each) => [each.id, each]));
-  const whyNot = new Map(built.leftOut.map(({ id, why }) => [id, why]));
+  const leftOut = new Map(built.leftOut.map((each) => [each.id, each]));
   const keepers = visits.flatMap(({ casts }) => casts.map((cast) => cast.keptBy));
   const people = await tx.findBy(Account, { id: In([...new Set(keepers)]) });
   const names = new Map(people.map(({ id, name }) => [id, name]));
@@ -65,7 +66,7 @@ export async function castsTable(
     casts.map((cast) =>
       castRow(
         { site, cast, zone, by: names.get(cast.keptBy) ?? '' },
-        chartedCells(built, { cast, charted: charted.get(cast.id), whyNot: whyNot.get(cast.id) }),
+        chartedCells(built, { cast, charted: charted.get(cast.id), leftOut: leftOut.get(cast.id) }),
       ),
     ),
   );
@@ -77,16 +78,24 @@ export async function castsTable(
   };
 }
 
-type Charted = { cast: SurveyCast; charted: BuiltSounding | undefined; whyNot: string | undefined };
+type Charted = {
+  cast: SurveyCast;
+  charted: BuiltSounding | undefined;
+  leftOut: Built['leftOut'][number] | undefined;
+};
 
 /** What the chart was made of, frozen with it; not what the same cast would come to today. */
-function chartedCells({ origin }: Built, { cast, charted, whyNot }: Charted): CastCells {
-  if (!charted) return { not_reduced_because: whyNot ?? 'Not in this chart.' };
+function chartedCells({ origin }: Built, { cast, charted, leftOut }: Charted): CastCells {
+  if (!charted)
+    return {
+      ...(leftOut?.byHand ? { flags: [...cast.observation.flags, LEFT_OUT_FLAG].join(';') } : {}),
+      not_reduced_because: leftOut?.why ?? 'Not in this chart.',
+    };
   const { xM, yM } = charted;
   const rangeM = cast.reduced.ok ? cast.reduced.sounding.rangeM : Number.NaN; // a chart keeps the place, not the range
   const position = fromPlane(origin, { xM, yM });
   return {
     ...soundingCells({ ...charted, rangeM, position, depthSigmaM: charted.sigmaM }),
-    not_reduced_because: whyNot ?? null,
+    not_reduced_because: leftOut?.why ?? null,
   };
 }

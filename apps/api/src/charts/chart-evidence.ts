@@ -6,9 +6,10 @@ import { endedBy, eventWords, type BottomEnding } from '@mereward/shared/surveys
 import { fadedCover, monthsSince } from '@mereward/shared/surveys/bottom-fading';
 import type { EventEnds } from '@mereward/shared/surveys/bottom-event-contract';
 import type { Bottom, CoverShares, SoundingView, SubstrateShares } from '@mereward/shared/surveys/contract';
+import type { LeftOut } from '@mereward/shared/charts/sounding-roles';
 import { pointAlong } from '@mereward/shared/geometry/plane';
 import type { BuildSource, SourceCast, SourceReport, SourceVisit } from './build-source';
-import type { Built, BuiltPoint, BuiltSounding } from './built';
+import type { BuiltPoint, BuiltSounding } from './built';
 import type { Reductions } from './source-checks';
 
 /** What a chart is built from once every event since has had its say, and what the chart keeps of it. */
@@ -18,7 +19,7 @@ export type ChartEvidence = {
   built: BuiltSounding[];
   points: BuiltPoint[];
   reports: SourceReport[];
-  leftOut: Built['leftOut'];
+  leftOut: LeftOut[];
   ended: EndedEvidence[];
 };
 

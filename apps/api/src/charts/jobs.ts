@@ -14,7 +14,7 @@ import {
   type WorkTable,
 } from '../jobs/claimed-run';
 import type { Handler } from '../jobs/worker';
-import { buildSource, withSoundings, type BuildSource } from './build-source';
+import { buildSource, withSoundings, type BuildSource, type Wanted } from './build-source';
 import { keepMade } from './keep-made';
 import { runBuild, type BuildEnd } from './run-build';
 
@@ -76,7 +76,13 @@ async function sourceOf(db: DataSource, chartId: string): Promise<BuildSource> {
   );
 }
 
-const CHART_WANTED = { id: true, lakeId: true, visitIds: true, contourStepM: true } as const;
+const CHART_WANTED = {
+  id: true,
+  lakeId: true,
+  visitIds: true,
+  contourStepM: true,
+  draftedAt: true,
+} as const satisfies Record<keyof Wanted, true>;
 
 async function finish(
   db: DataSource,

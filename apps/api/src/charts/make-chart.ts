@@ -1,12 +1,14 @@
 import { buildChart, type BuiltChart, type ChartInput } from '@mereward/shared/charts/build-chart';
 import { encodeClasses, encodeDepth, encodeSigma } from '@mereward/shared/charts/chart-encoding';
+import type { LeftOut } from '@mereward/shared/charts/sounding-roles';
 import type { GridFrame } from '@mereward/shared/charts/contract';
 import { reduceAll } from '../surveys/reduce-visit';
 import type { BuildSource, SourceReport, SourceVisit } from './build-source';
 import type { Built } from './built';
 import { chartEvidence } from './chart-evidence';
-import { reducedLogs } from './chart-logs';
+import { reducedLogs, mergedPlaces } from './chart-logs';
 import { makeTellings } from './make-tellings';
+import { withoutLeftOut } from './source-left-out';
 import { sourceChecks } from './source-checks';
 
 /** A chart as its row keeps it. */
@@ -28,7 +30,8 @@ const BUILDING = 0.75;
  * Reduces every cast and builds the chart. Runs in a thread; the same source gives the same bytes. Throws RangeError,
  * in words for the surveyor, when no chart can be made of it.
  */
-export function makeChart(source: BuildSource, report: (step: string, share: number) => void): MadeChart {
+export function makeChart(whole: BuildSource, report: (step: string, share: number) => void): MadeChart {
+  const { source, leftOut } = withoutLeftOut(whole);
   report('Reducing the casts', 0);
   const answers = new Map(source.visits.flatMap(({ site, casts }) => [...reduceAll(site, casts)]));
   const evidence = chartEvidence(source, answers);
@@ -66,7 +69,8 @@ export function makeChart(source: BuildSource, report: (step: string, share: num
       soundings: evidence.built.sort(byId),
       points: evidence.points.sort(byId),
       logs: logs.built,
-      leftOut: [...evidence.leftOut, ...chart.leftOut].sort(byId),
+      merged: mergedPlaces(logs, missedIds(chart)),
+      leftOut: [...leftOut, ...[...evidence.leftOut, ...chart.leftOut].map(byRule)].sort(byId),
       ended: evidence.ended,
       bottomTable: source.tableVersion,
       isobaths: roundedLines(chart.isobaths),
@@ -81,6 +85,12 @@ export function makeChart(source: BuildSource, report: (step: string, share: num
     surveyedTo: days.at(-1) ?? '',
   };
 }
+
+const byRule = (out: LeftOut): Built['leftOut'][number] => ({ ...out, byHand: false });
+
+const missedIds = ({ quality: { worst, flaggedBy } }: BuiltChart): string[] => [
+  ...new Set([...worst, ...flaggedBy].map(({ id }) => id)),
+];
 
 function builtReport(report: SourceReport): Built['reports'][number] {
   const { id, pegId, observedOn, xM, yM, ellipse, depthM, sigmaM, grade, bottom } = report;

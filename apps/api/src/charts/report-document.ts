@@ -1,6 +1,7 @@
 import { chartCaution } from '@mereward/shared/charts/cautions';
 import type { AgeNow } from '@mereward/shared/charts/chart-age';
 import type { LeadCalibration } from '@mereward/db/entities/surveys/lead-calibration';
+import type { LeftOutView } from '@mereward/shared/charts/left-out-contract';
 import type { ArcCoverage } from '@mereward/shared/surveys/contract';
 import { dayWords } from '@mereward/shared/time/civil-day';
 import { dayAndClock, dayRange } from '@mereward/shared/time/day-names';
@@ -9,7 +10,14 @@ import type { Built } from './built';
 import { surveyedBy } from './built-logs';
 import type { CastsTable, ChartCasts } from './chart-casts';
 import type { PaperBlock, PaperDocument } from './paper-pages';
-import { agreementFacts, changeFacts, coverageTable, qualityFacts, usedFacts } from './report-quality';
+import {
+  agreementFacts,
+  changeFacts,
+  coverageTable,
+  leftOutBlocks,
+  qualityFacts,
+  usedFacts,
+} from './report-quality';
 import { castsBlocks } from './report-casts';
 import { logsBlocks, type LogBrought } from './report-logs';
 import { photosBlocks, type ReportPhotos } from './report-photos';
@@ -40,6 +48,7 @@ export type SurveyReport = ChartCasts & {
   ageNow: AgeNow | null;
   accepted: ToldReport[];
   photos: ReportPhotos;
+  leftOut: LeftOutView[]; // by a person
   table: CastsTable;
   soundingsTable: CastsTable;
   writtenAt: Date;
@@ -73,6 +82,7 @@ export function reportDocument(report: SurveyReport): PaperDocument {
       { kind: 'facts', facts: qualityFacts(report) },
       heading('What was left out'),
       { kind: 'facts', facts: usedFacts(report) },
+      ...leftOutBlocks(report),
       heading('Reports accepted'),
       ...acceptedBlocks(report),
       heading('What dates it'),

@@ -1,10 +1,10 @@
-import { dayRange } from '@mereward/shared/time/day-names';
+import { dayAndClock, dayRange } from '@mereward/shared/time/day-names';
 import { Grade } from '@mereward/shared/surveys/contract';
 import { repeatAgreement } from '@mereward/shared/surveys/repeat-agreement';
 import { REPEAT_WITHIN_M } from '@mereward/shared/surveys/peg-arc';
 import { SIGMA } from '@mereward/shared/surveys/error-budget';
 import { figure, percent } from '@mereward/shared/units/length-words';
-import type { PaperTable } from './paper-pages';
+import type { PaperBlock, PaperTable } from './paper-pages';
 import type { SurveyReport } from './report-document';
 
 type Facts = [string, string][];
@@ -86,7 +86,7 @@ const mergedOf = (logs: SurveyReport['built']['logs']): number =>
 /** Reasons are told once each, with how many casts they kept out. */
 export function usedFacts({ built: { leftOut, soundings, points, logs, reports } }: SurveyReport): Facts {
   const reasons = new Map<string, number>();
-  for (const { why } of leftOut) reasons.set(why, (reasons.get(why) ?? 0) + 1);
+  for (const { why, byHand } of leftOut) if (!byHand) reasons.set(why, (reasons.get(why) ?? 0) + 1);
   const told = [...reasons]
     .sort(([, a], [, b]) => b - a)
     .map(([why, n]): [string, string] => [`${n} casts`, why]);
@@ -100,6 +100,28 @@ export function usedFacts({ built: { leftOut, soundings, points, logs, reports }
       ? [['Reports of anglers', `${reports.length} in the chart`] as [string, string]]
       : []),
     ...(told.length > 0 ? told : [['Left out', 'none'] as [string, string]]),
+  ];
+}
+
+/** What a person left out, with who, why and when. */
+export function leftOutBlocks({ leftOut, zone }: SurveyReport): PaperBlock[] {
+  if (leftOut.length === 0)
+    return [{ kind: 'words', words: 'No person left anything out of this chart.', bold: false }];
+  return [
+    {
+      kind: 'words',
+      words:
+        'Left out of this chart by a person. What was observed is kept, and stands in the table of casts:',
+      bold: false,
+    },
+    {
+      kind: 'table',
+      table: {
+        heading: ['What', 'Why', 'By', 'When'],
+        shares: [0.26, 0.38, 0.18, 0.18],
+        rows: leftOut.map(({ label, reason, by, at }) => [label, reason, by, dayAndClock(at, zone)]),
+      },
+    },
   ];
 }
 

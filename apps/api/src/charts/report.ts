@@ -19,6 +19,7 @@ import { drawPaper } from './draw-paper';
 import { fileName } from './file-name';
 import type { LogBrought } from './report-logs';
 import { reportPhotos } from './report-photos';
+import { leftOutViews } from './left-out-views';
 import { reportDocument, type EarlierChart, type SurveyReport } from './report-document';
 
 /** The whole account of a survey, for the staff: how it was made, every cast, how good it is, and whose it is. */
@@ -49,6 +50,7 @@ export async function surveyReport(
         : await ageNow(ctx, { lakeId: lake.id, surveyedTo, datumM, zone, origin: built.origin }),
     accepted: await acceptedOf(tx, casts),
     photos: await reportPhotos(ctx, casts, store),
+    leftOut: (await leftOutViews(tx, chartId)).filter(({ putBack }) => putBack === null),
     table,
     soundingsTable: soundingsTable(casts),
     writtenAt: now,

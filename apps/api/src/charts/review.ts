@@ -1,6 +1,7 @@
 import { Account } from '@mereward/db/entities/accounts/account';
 import { Chart } from '@mereward/db/entities/charts/chart';
 import { ChartBuild } from '@mereward/db/entities/charts/chart-build';
+import { Fishery } from '@mereward/db/entities/fisheries/fishery';
 import { Lake } from '@mereward/db/entities/lakes/lake';
 import type { BuildView, ChartList, ChartListItem, ChartReview } from '@mereward/shared/charts/contract';
 import { In, type EntityManager } from 'typeorm';
@@ -9,6 +10,8 @@ import { notFound } from '../http/deny';
 import { CHART_APPROVERS, isStaff, mayBuildCharts, STAFF } from '../lakes/policy';
 import { logViews } from './built-logs';
 import { checksOf } from './checks';
+import { leftOutViews } from './left-out-views';
+import { logMisses } from './log-misses';
 import { chartContent } from './chart-layers';
 import { chartForStaff, LIGHT, type LightChart } from './find-chart';
 import { whyNotApprove } from './policy';
@@ -84,13 +87,17 @@ export async function chartReview(ctx: Ctx, chartId: string): Promise<ChartRevie
     chart: item,
     lakeId: lake.id,
     lakeName: lake.name,
+    zone: (await tx.findOneByOrFail(Fishery, { id: lake.fisheryId })).zone,
     checks,
     quality: content?.built.quality ?? null,
     ended: content?.built.ended ?? [],
     bottomTable: content?.built.bottomTable ?? 0,
     misses: content ? await soundingMisses(tx, content.built) : [],
+    logMisses: content ? logMisses(content.built) : [],
+    leftOut: await leftOutViews(tx, chartId),
     logs: content ? logViews(content.built) : [],
     may: {
+      leaveOut: builder && open,
       submit: builder && chart.status === 'draft' && !building && !blocked,
       approve: chart.status === 'submitted' && why === null && !blocked,
       approveWhyNot:

@@ -13,6 +13,7 @@ export const ChartLogView = z.object({
   found: z.int(), // in its files
   kept: z.int(), // when it was taken in
   outside: z.int(), // of those, off the water of the chart's outline
+  leftOut: z.int().default(0), // of those, left out of this chart by a person
   cells: z.int(), // into which the others were merged
   cellM: z.number(),
   contoured: z.int(), // cells of grades A and B

@@ -6,6 +6,7 @@ import { PlaceWater } from '../lakes/peg-water-contract';
 import { Bottom, Cover, Grade, Substrate } from '../surveys/contract';
 import { BottomPoint, BottomQualityView, EndedEvidence } from './bottom-quality-contract';
 import { ChartChange } from './chart-change-contract';
+import { LeftOutView, LogMissView } from './left-out-contract';
 import { SoundingMiss, SoundingMissView } from './sounding-miss';
 
 /** draft → submitted → approved by another → published; then superseded by the next, or withdrawn. */
@@ -81,13 +82,17 @@ export const ChartReview = z.object({
   chart: ChartListItem,
   lakeId: z.uuid(),
   lakeName: z.string(),
+  zone: z.string(), // IANA, of the fishery
   checks: z.array(CheckView),
   quality: QualityView.nullable(),
   ended: z.array(EndedEvidence).default([]), // what events since the casts took out of it
   bottomTable: z.int().default(0), // version of the table of feels it was made with; 0 is the built-in
   misses: z.array(SoundingMissView).default([]), // the flagged and the worst ten, worst first
+  logMisses: z.array(LogMissView).default([]), // the same of boats' logs
+  leftOut: z.array(LeftOutView).default([]), // by a person; newest first, those put back behind
   logs: z.array(ChartLogView).default([]),
   may: z.object({
+    leaveOut: z.boolean().default(false),
     submit: z.boolean(),
     approve: z.boolean(),
     approveWhyNot: z.string().nullable(), // "You surveyed this chart: someone else approves it."

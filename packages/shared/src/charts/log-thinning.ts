@@ -30,6 +30,12 @@ function countCells(logs: readonly (readonly Point[])[], cellM: number): number 
   return logs.reduce((sum, points) => sum + new Set(points.map((point) => cellOf(point, cellM))).size, 0);
 }
 
+/** The south-west corner of the cell a place lies in, metres on the plane. */
+export const cellCorner = ({ xM, yM }: Point, cellM: number): Point => ({
+  xM: Math.floor(xM / cellM) * cellM,
+  yM: Math.floor(yM / cellM) * cellM,
+});
+
 /** A number for each cell of the plane: exact for lakes of up to a hundred thousand cells a side. */
 const SIDE = 1 << 20;
 const cellOf = ({ xM, yM }: Point, cellM: number): number =>

@@ -57,6 +57,15 @@ function wordList<T extends string>(row: RowReader, column: CastColumn, words: r
   return found;
 }
 
+/** Stands among the flags of a cast that a person left out of the chart a table is of. */
+export const LEFT_OUT_FLAG = 'left_out';
+
+/** What a chart left out is a mark of that chart's, not something seen at the water. */
+const flagsOf = (row: RowReader): CastFlag[] =>
+  (wordList(row, 'flags', [...CastFlag.options, LEFT_OUT_FLAG]) ?? []).filter(
+    (flag) => flag !== LEFT_OUT_FLAG,
+  );
+
 function pegOf(row: RowReader, ground: CastsGround): string | null {
   const text = row.text('peg');
   if (text === '') return row.fault('peg', 'Which peg was this cast from?');
@@ -158,7 +167,7 @@ export function readObservation(
     pulls: optionalNumber(row, 'depth_pulls'),
     pullsAgain: optionalNumber(row, 'depth_pulls_again'),
     floatSight: word(row, 'float_sight', ['good', 'poor'] as const),
-    flags: wordList(row, 'flags', CastFlag.options) ?? [],
+    flags: flagsOf(row),
     note: row.text('note'),
   };
   if (pegId === null || aim === null || line === null || observedAt === null) return null;

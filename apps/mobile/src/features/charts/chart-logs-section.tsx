@@ -3,17 +3,24 @@ import { List, Row } from '@/components/list';
 import { Section } from '@/components/section';
 import { figure, percent } from '@/lib/format';
 
+type Props = { chartId: string; logs: readonly ChartLogView[]; mayLeaveOut: boolean };
+
 /** What a chart took from each log of soundings: read, kept, merged, and what only stands as points. */
-export function ChartLogsSection({ logs }: { logs: readonly ChartLogView[] }) {
+export function ChartLogsSection({ chartId, logs, mayLeaveOut }: Props) {
   if (logs.length === 0) return null;
   return (
     <Section
       title="From logs of soundings"
-      note="Soundings of one cell are merged, so that noise averages out. They say nothing of the bottom’s kind."
+      note={`Soundings of one cell are merged, so that noise averages out. They say nothing of the bottom’s kind.${mayLeaveOut ? ' Open a log to leave a part of it out.' : ''}`}
     >
       <List label="Logs of soundings">
         {logs.map((log) => (
-          <Row key={log.id} title={titleOf(log)} note={noteOf(log)} />
+          <Row
+            key={log.id}
+            title={titleOf(log)}
+            note={noteOf(log)}
+            {...(mayLeaveOut ? { href: `/office/charts/${chartId}/logs/${log.id}` } : {})}
+          />
         ))}
       </List>
     </Section>
@@ -23,10 +30,11 @@ export function ChartLogsSection({ logs }: { logs: readonly ChartLogView[] }) {
 const titleOf = ({ found, filenames }: ChartLogView): string =>
   `${figure(found)} found in ${filenames.join(', ')}`;
 
-function noteOf({ kept, outside, cells, cellM, contoured, flagged }: ChartLogView): string {
+function noteOf({ kept, outside, leftOut, cells, cellM, contoured, flagged }: ChartLogView): string {
   const parts = [
     `${figure(kept)} taken in`,
     outside > 0 ? `${figure(outside)} of them off the water` : '',
+    leftOut > 0 ? `${figure(leftOut)} left out of this chart` : '',
     `merged into ${figure(cells)} cells of ${figure(cellM, cellM < 10 ? 1 : 0)} m`,
     contoured === cells
       ? 'all contoured'

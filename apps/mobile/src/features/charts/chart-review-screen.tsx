@@ -14,6 +14,7 @@ import { ChartStatusShape } from '@/features/charts/chart-status';
 import { chartName, surveyedWords } from '@/features/charts/chart-words';
 import { layersPaper, sheetPapers, staffPapers } from '@/features/charts/chart-papers';
 import { CheckList } from '@/features/charts/check-list';
+import { LeftOutSection } from '@/features/charts/left-out-section';
 import { PaperButtons } from '@/features/charts/paper-buttons';
 import { QualityReport } from '@/features/charts/quality-report';
 import { ReviewActions } from '@/features/charts/review-actions';
@@ -97,8 +98,9 @@ function Review({ review }: { review: ChartReview }) {
             <CheckList checks={checks} />
           </Section>
         ) : null}
-        <ChartLogsSection logs={review.logs} />
-        {quality ? <SoundingMisses misses={review.misses} flaggedIds={quality.flagged} /> : null}
+        <ChartLogsSection chartId={chart.id} logs={review.logs} mayLeaveOut={review.may.leaveOut} />
+        {quality ? <SoundingMisses review={review} /> : null}
+        {built || review.leftOut.length > 0 ? <LeftOutSection review={review} /> : null}
         {quality ? (
           <Section title="How good it is" note={quality.words}>
             <QualityReport quality={quality} />

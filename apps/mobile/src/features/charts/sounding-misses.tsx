@@ -1,3 +1,4 @@
+import type { ChartReview } from '@mereward/shared/charts/contract';
 import type { SoundingMissView } from '@mereward/shared/charts/sounding-miss';
 import { Disclosure } from '@/components/disclosure';
 import { Note } from '@/components/note';
@@ -5,40 +6,60 @@ import { Section } from '@/components/section';
 import { Table } from '@/components/table';
 import { useUnits } from '@/hooks/use-units';
 import { figure, length } from '@/lib/format';
+import { LogMissesTable } from '@/features/charts/log-misses-table';
 import { castPlaceWords, castTitle, outByWords } from '@/features/charts/sounding-miss-words';
 
-type Props = { misses: readonly SoundingMissView[]; flaggedIds: readonly string[] };
+type Props = { review: ChartReview };
 
-/** The soundings a person must look at before a chart is published, each leading to its cast. */
-export function SoundingMisses({ misses, flaggedIds }: Props) {
+/** The soundings a person must look at before a chart is published, each leading to where it can be left out. */
+export function SoundingMisses({ review: { chart, misses, logMisses, quality, may } }: Props) {
   const flagged = misses.filter((miss) => miss.flagged);
-  const ofLogs = flaggedIds.length - flagged.length; // merged from a boat's log: they have no cast to open
+  const flaggedOfLogs = logMisses.filter((miss) => miss.flagged);
+  const none = quality?.flagged.length === 0;
   return (
     <Section
       title="Out of line with their neighbours"
-      {...(flagged.length > 0
-        ? {
-            note: 'They are in the chart all the same. Open each cast: a hole or a bar may be true. If it looks like a slip, cast there again; both readings then count.',
-          }
-        : {})}
+      {...(none
+        ? {}
+        : {
+            note: `They are in the chart all the same: a hole or a bar may be true. If it looks like a slip, cast there again, and both readings count${may.leaveOut ? '; or open it and leave it out of this chart, with a reason' : ''}.`,
+          })}
     >
-      {ofLogs > 0 ? (
-        <Note kind="caution">
-          {`${figure(ofLogs)} merged ${ofLogs === 1 ? 'sounding' : 'soundings'} of a boat’s log also out of line. Check the log’s level and its offsets.`}
-        </Note>
+      {none ? <Note kind="fine">No sounding disagrees with those round about.</Note> : null}
+      {flagged.length > 0 ? (
+        <MissTable caption="Casts out of line with their neighbours" chartId={chart.id} misses={flagged} />
       ) : null}
-      {flaggedIds.length === 0 ? (
-        <Note kind="fine">No sounding disagrees with those round about.</Note>
+      {flaggedOfLogs.length > 0 ? (
+        <>
+          <Note kind="caution">
+            {`${figure(flaggedOfLogs.length)} merged ${flaggedOfLogs.length === 1 ? 'sounding' : 'soundings'} of a boat’s log out of line. Many along one run: check the log’s level and its offsets first.`}
+          </Note>
+          <LogMissesTable
+            caption="Soundings of logs out of line with their neighbours"
+            chartId={chart.id}
+            misses={flaggedOfLogs}
+          />
+        </>
       ) : null}
-      {flagged.length > 0 ? <MissTable caption="Out of line with their neighbours" misses={flagged} /> : null}
       <Disclosure title="The ten soundings that fit worst">
-        <MissTable caption="Soundings that fit worst" misses={misses.slice(0, 10)} />
+        {misses.length > 0 ? (
+          <MissTable caption="Casts that fit worst" chartId={chart.id} misses={misses.slice(0, 10)} />
+        ) : null}
+        {logMisses.length > 0 ? (
+          <LogMissesTable
+            caption="Soundings of logs that fit worst"
+            chartId={chart.id}
+            misses={logMisses.slice(0, 10)}
+          />
+        ) : null}
       </Disclosure>
     </Section>
   );
 }
 
-function MissTable({ caption, misses }: { caption: string; misses: readonly SoundingMissView[] }) {
+type MissProps = { caption: string; chartId: string; misses: readonly SoundingMissView[] };
+
+function MissTable({ caption, chartId, misses }: MissProps) {
   const units = useUnits();
   const m = (valueM: number) => length(valueM, units, 2);
   return (
@@ -46,7 +67,7 @@ function MissTable({ caption, misses }: { caption: string; misses: readonly Soun
       caption={caption}
       rows={misses}
       rowKey={({ id }) => id}
-      href={({ id, visitId }) => `/bank/surveys/${visitId}/casts/${id}`}
+      href={({ id }) => `/office/charts/${chartId}/casts/${id}`}
       columns={[
         { key: 'cast', head: 'Cast', value: castTitle },
         { key: 'place', head: 'Place', value: (miss) => castPlaceWords(miss, units) },

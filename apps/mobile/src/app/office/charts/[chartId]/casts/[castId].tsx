@@ -1,0 +1,1 @@
+export { ChartCastScreen as default } from '@/features/charts/chart-cast-screen';

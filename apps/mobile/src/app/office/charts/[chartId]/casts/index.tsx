@@ -1,0 +1,1 @@
+export { ChartCastsScreen as default } from '@/features/charts/chart-casts-screen';

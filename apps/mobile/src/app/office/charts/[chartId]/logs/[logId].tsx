@@ -1,0 +1,1 @@
+export { ChartLogScreen as default } from '@/features/charts/chart-log-screen';
