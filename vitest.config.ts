@@ -30,6 +30,7 @@ export default defineConfig({
       {
         test: {
           name: 'api',
+          isolate: false, // every file has a database and a server of its own; loading the program anew for each takes minutes
           include: ['tests/api/**/*.test.ts'],
           globalSetup: ['tests/support/postgres.ts'],
           setupFiles: ['tests/support/fast-check-seed.ts'],

@@ -23,8 +23,10 @@ export type TestServer = {
   pass: (seconds: number) => void;
   /** Does every queued job there is, mail included; answers how many. */
   settle: () => Promise<number>;
-  /** Starts the worker as the real server runs it, polling; `close` stops it. */
+  /** Starts the worker as the real server runs it, polling; `close` stops it. What `settle` would do is then a race. */
   startWorker: () => Promise<void>;
+  /** Stops the workers started so far: they fetch nothing more, and `settle` is by itself again. */
+  stopWorkers: () => Promise<void>;
   /** Where caught mail is sent to, for what stands between. */
   captureUrl: string;
   /** Mail caught so far, newest last. */
@@ -59,6 +61,9 @@ export async function aServer({ env = {}, logger }: Wishes = {}): Promise<TestSe
   const ground = { boss, server, logger: log, handlers };
   const settle = () => workOff(ground);
   const running: { stop: () => Promise<void> }[] = [];
+  const stopWorkers = async () => {
+    for (const worker of running.splice(0)) await worker.stop();
+  };
   return {
     app: makeApp(server, log, { capture }),
     server,
@@ -66,6 +71,7 @@ export async function aServer({ env = {}, logger }: Wishes = {}): Promise<TestSe
     pass: (seconds) => void (now = new Date(now.getTime() + seconds * 1000)),
     settle,
     startWorker: async () => void running.push(await work(ground)),
+    stopWorkers,
     captureUrl: capture.url,
     mails: capture.mails,
     mailTo: async (address) => {
@@ -75,7 +81,7 @@ export async function aServer({ env = {}, logger }: Wishes = {}): Promise<TestSe
       return mail;
     },
     close: async () => {
-      for (const worker of running) await worker.stop();
+      await stopWorkers();
       await boss.stop({ graceful: true, wait: true, timeout: 10_000 });
       await source.destroy();
       await capture.close();
