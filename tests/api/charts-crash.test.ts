@@ -1,11 +1,10 @@
 import { ChartBuild } from '@mereward/db/entities/charts/chart-build';
-import { spawn, type ChildProcess } from 'node:child_process';
-import { once } from 'node:events';
-import { createRequire } from 'node:module';
-import { fileURLToPath, pathToFileURL } from 'node:url';
+import { CHART_BUILDS } from '@mereward/api/charts/jobs';
+import type { ChildProcess } from 'node:child_process';
 import { Client } from 'pg';
 import { afterAll, beforeAll, expect, inject, test } from 'vitest';
 import { draftedChart } from '../support/charts';
+import { aProcessOn, killed, letItBeLost, until } from '../support/killed-server';
 import { aServer, type TestServer } from '../support/server';
 import { aLongWater, aSurvey } from '../support/surveys';
 import { aFishery } from '../support/waters';
@@ -22,37 +21,10 @@ afterAll(async () => {
   await server.close();
 });
 
-const entry = fileURLToPath(new URL('../../apps/api/src/main.ts', import.meta.url));
-const loader = pathToFileURL(createRequire(import.meta.url).resolve('tsx')).href;
-
-/** The real server in a process of its own, on the test's database. */
 function aProcess(): ChildProcess {
-  const { databaseUrl, smtpUrl, filesDir } = server.server.config;
-  const child = spawn(process.execPath, ['--import', loader, entry], {
-    env: {
-      ...process.env,
-      DATABASE_URL: databaseUrl,
-      SMTP_URL: smtpUrl ?? '',
-      FILES_DIR: filesDir,
-      WEB_DIR: filesDir,
-      PORT: '0',
-      LOG_LEVEL: 'silent',
-    },
-    stdio: 'ignore',
-  });
+  const child = aProcessOn(server);
   running.push(child);
   return child;
-}
-
-async function killed(child: ChildProcess): Promise<void> {
-  if (child.exitCode !== null || child.signalCode !== null) return;
-  const gone = once(child, 'exit');
-  child.kill('SIGKILL');
-  await gone;
-}
-
-async function until(holds: () => Promise<boolean>): Promise<void> {
-  while (!(await holds())) await new Promise((again) => setTimeout(again, 20));
 }
 
 test('a chart whose server is killed outright while it builds is built by the next', async () => {
@@ -72,6 +44,7 @@ test('a chart whose server is killed outright while it builds is built by the ne
   await killed(first);
   const left = await build();
   expect(left.state).toBe('running');
+  await letItBeLost(server, CHART_BUILDS);
 
   aProcess();
   await until(async () => (await build()).state === 'done');
@@ -102,6 +75,7 @@ test('a server whose database goes away while it builds lives on and builds the 
   await new Promise((next) => setTimeout(next, 2000)); // long enough for the build to notice and to fail
   await client.query(`ALTER DATABASE ${name} WITH ALLOW_CONNECTIONS true`);
   await client.end();
+  await letItBeLost(server, CHART_BUILDS);
 
   await until(async () => (await state()) === 'done');
   expect(child.exitCode).toBeNull();

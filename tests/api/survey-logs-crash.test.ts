@@ -1,13 +1,12 @@
 import { SoundingImport } from '@mereward/db/entities/surveys/sounding-import';
 import { LogView } from '@mereward/shared/surveys/log-contract';
-import { spawn, type ChildProcess } from 'node:child_process';
+import { LOG_READINGS } from '@mereward/api/surveys/log-queue';
+import type { ChildProcess } from 'node:child_process';
 import { randomUUID } from 'node:crypto';
-import { once } from 'node:events';
 import { writeFileSync } from 'node:fs';
-import { createRequire } from 'node:module';
 import { join } from 'node:path';
-import { fileURLToPath, pathToFileURL } from 'node:url';
 import { afterAll, beforeAll, expect, test } from 'vitest';
+import { aProcessOn, killed, letItBeLost, until } from '../support/killed-server';
 import { aServer, type TestServer } from '../support/server';
 import { aBoatTrack, nmeaLog } from '../support/sounding-log';
 import { aLongWater, openedVisit } from '../support/surveys';
@@ -26,39 +25,10 @@ afterAll(async () => {
   await server.close();
 });
 
-const entry = fileURLToPath(new URL('../../apps/api/src/main.ts', import.meta.url));
-const loader = pathToFileURL(createRequire(import.meta.url).resolve('tsx')).href;
-
-/** The real server in a process of its own, on the test's database. */
 function aProcess(): void {
-  const { databaseUrl, smtpUrl, filesDir } = server.server.config;
-  const clock = join(filesDir, 'clock');
+  const clock = join(server.server.config.filesDir, 'clock');
   writeFileSync(clock, NOW);
-  const child = spawn(process.execPath, ['--import', loader, entry], {
-    env: {
-      ...process.env,
-      DATABASE_URL: databaseUrl,
-      SMTP_URL: smtpUrl ?? '',
-      FILES_DIR: filesDir,
-      WEB_DIR: filesDir,
-      PORT: '0',
-      CLOCK_FILE: clock,
-      LOG_LEVEL: 'silent',
-    },
-    stdio: 'ignore',
-  });
-  running.push(child);
-}
-
-async function killed(child: ChildProcess): Promise<void> {
-  if (child.exitCode !== null || child.signalCode !== null) return;
-  const gone = once(child, 'exit');
-  child.kill('SIGKILL');
-  await gone;
-}
-
-async function until(holds: () => Promise<boolean>): Promise<void> {
-  while (!(await holds())) await new Promise((again) => setTimeout(again, 5));
+  running.push(aProcessOn(server, { CLOCK_FILE: clock }));
 }
 
 /** Lets the writing of a log come no further than its first five thousand soundings. */
@@ -91,11 +61,13 @@ test('a log whose server is killed outright while it is written is taken in whol
   await until(async () => (await log()).step === 'Writing the soundings'); // some are written, and none is told
   for (const each of running) await killed(each);
   await query(
-    `SELECT pg_terminate_backend(pid) FROM pg_stat_activity WHERE query LIKE 'INSERT INTO sounding %'`,
+    `SELECT pg_terminate_backend(pid) FROM pg_stat_activity
+      WHERE datname = current_database() AND query LIKE 'INSERT INTO sounding %'`,
   );
   await query('DROP TRIGGER sticks ON sounding');
   expect((await log()).state).toBe('running');
   expect(await count()).toBe(0);
+  await letItBeLost(server, LOG_READINGS);
 
   aProcess();
   await until(async () => (await log()).state === 'done');
