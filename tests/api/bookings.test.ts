@@ -4,10 +4,11 @@ import { runningTicket, runningTicketAtLake } from '@mereward/api/lakes/running-
 import { ProblemBody } from '@mereward/shared/problems/problem';
 import { randomUUID } from 'node:crypto';
 import { afterAll, beforeAll, describe, expect, test } from 'vitest';
+import { aLakeGround } from '../support/grounds';
 import { aPerson, aStranger, type Person } from '../support/people';
-import { aServer, type TestServer } from '../support/server';
+import type { TestServer } from '../support/server';
 import { pegDetails } from '../support/water-details';
-import { aFishery, aLake, aPeg, type TestFishery, type TestLake, type TestPeg } from '../support/waters';
+import { aLake, aPeg, type TestFishery, type TestLake, type TestPeg } from '../support/waters';
 
 let server: TestServer;
 let here: TestFishery;
@@ -17,10 +18,7 @@ let peg: TestPeg;
 let visitor: Person;
 
 beforeAll(async () => {
-  server = await aServer();
-  here = await aFishery(server);
-  elsewhere = await aFishery(server, { name: 'Upper Sallow' });
-  lake = await aLake(server, here);
+  ({ server, here, elsewhere, lake } = await aLakeGround());
   visitor = await aPerson(server, { name: 'Sal Marsh', email: 'sal@anglers.example' });
   peg = await freshPeg();
 });

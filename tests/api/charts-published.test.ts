@@ -5,10 +5,11 @@ import { ProblemBody } from '@mereward/shared/problems/problem';
 import fc from 'fast-check';
 import { afterAll, beforeAll, describe, expect, test } from 'vitest';
 import { draftedChart, publishedChart } from '../support/charts';
+import { aSurveyGround } from '../support/grounds';
 import { aPerson, aStranger, type Person } from '../support/people';
-import { aServer, type TestServer } from '../support/server';
-import { aLongWater, aSurvey, type TestWater } from '../support/surveys';
-import { aFishery, type TestFishery } from '../support/waters';
+import type { TestServer } from '../support/server';
+import { aSurvey, type TestWater } from '../support/surveys';
+import type { TestFishery } from '../support/waters';
 
 let server: TestServer;
 let here: TestFishery;
@@ -19,12 +20,7 @@ let joan: Person;
 let idris: Person;
 
 beforeAll(async () => {
-  server = await aServer();
-  server.setNow('2027-04-03T12:00:00Z');
-  here = await aFishery(server, { name: 'Ostlemere Waters' });
-  elsewhere = await aFishery(server, { name: 'Upper Sallow' });
-  water = await aLongWater(server, here);
-  joan = here.people.head_bailiff;
+  ({ server, here, elsewhere, water, joan } = await aSurveyGround());
   idris = here.people.manager;
   surveyVisit = await aSurvey(joan, water);
 });

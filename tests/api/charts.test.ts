@@ -10,8 +10,9 @@ import { ProblemBody } from '@mereward/shared/problems/problem';
 import { randomUUID } from 'node:crypto';
 import { afterAll, beforeAll, describe, expect, test } from 'vitest';
 import { draftedChart } from '../support/charts';
+import { aSurveyGround } from '../support/grounds';
 import { aStranger, type Person } from '../support/people';
-import { aServer, type TestServer } from '../support/server';
+import type { TestServer } from '../support/server';
 import {
   aCastBody,
   aLongWater,
@@ -21,7 +22,7 @@ import {
   openedVisit,
   type TestWater,
 } from '../support/surveys';
-import { aFishery, type TestFishery } from '../support/waters';
+import type { TestFishery } from '../support/waters';
 
 let server: TestServer;
 let here: TestFishery;
@@ -31,12 +32,7 @@ let surveyVisit: string;
 let joan: Person;
 
 beforeAll(async () => {
-  server = await aServer();
-  server.setNow('2027-04-03T12:00:00Z');
-  here = await aFishery(server, { name: 'Ostlemere Waters' });
-  elsewhere = await aFishery(server, { name: 'Upper Sallow' });
-  water = await aLongWater(server, here);
-  joan = here.people.head_bailiff;
+  ({ server, here, elsewhere, water, joan } = await aSurveyGround());
   surveyVisit = await aSurvey(joan, water);
 });
 afterAll(() => server.close());

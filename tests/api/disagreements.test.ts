@@ -13,15 +13,17 @@ import { VisitWithCasts } from '@mereward/shared/surveys/contract';
 import { randomUUID } from 'node:crypto';
 import { afterAll, beforeAll, describe, expect, test } from 'vitest';
 import { draftedChart, publishedChart } from '../support/charts';
+import { aSurveyGround } from '../support/grounds';
 import { aPerson, aStranger, type Person } from '../support/people';
-import { aServer, type TestServer } from '../support/server';
-import { aLongWater, aSurvey, type TestWater } from '../support/surveys';
-import { aFishery, aReading, type TestFishery } from '../support/waters';
+import type { TestServer } from '../support/server';
+import { aSurvey, type TestWater } from '../support/surveys';
+import { aReading, type TestFishery } from '../support/waters';
 
 let server: TestServer;
 let here: TestFishery;
 let elsewhere: TestFishery;
 let water: TestWater;
+let joan: Person;
 let chartId: string;
 let visitId: string;
 let spotId: string;
@@ -30,12 +32,7 @@ let sofia: Person;
 const DAY = '2027-07-17';
 
 beforeAll(async () => {
-  server = await aServer();
-  server.setNow('2027-04-03T12:00:00Z');
-  here = await aFishery(server, { name: 'Ostlemere Waters' });
-  elsewhere = await aFishery(server, { name: 'Upper Sallow' });
-  water = await aLongWater(server, here);
-  const joan = here.people.head_bailiff;
+  ({ server, here, elsewhere, water, joan } = await aSurveyGround());
   visitId = await aSurvey(joan, water);
   chartId = await publishedChart(server, {
     person: joan,

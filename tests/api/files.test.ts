@@ -10,18 +10,11 @@ import type { AddressInfo } from 'node:net';
 import { join } from 'node:path';
 import { afterAll, beforeAll, describe, expect, test } from 'vitest';
 import { signAccessToken } from '@mereward/api/http/session';
+import { aLakeGround } from '../support/grounds';
 import { aStranger, type Person } from '../support/people';
 import { aJpeg, aPhoto, aPng, CORNERS, seenIn, segmentsOf, TELLTALE, withTags } from '../support/pictures';
-import { aServer, type TestServer } from '../support/server';
-import {
-  aFishery,
-  aLake,
-  aMark,
-  aPeg,
-  type TestFishery,
-  type TestLake,
-  type TestPeg,
-} from '../support/waters';
+import type { TestServer } from '../support/server';
+import { aLake, aMark, aPeg, type TestFishery, type TestLake, type TestPeg } from '../support/waters';
 
 let server: TestServer;
 let here: TestFishery;
@@ -30,10 +23,7 @@ let lake: TestLake;
 let peg: TestPeg;
 
 beforeAll(async () => {
-  server = await aServer();
-  here = await aFishery(server);
-  elsewhere = await aFishery(server, { name: 'Upper Sallow' });
-  lake = await aLake(server, here);
+  ({ server, here, elsewhere, lake } = await aLakeGround());
   peg = await aPeg(server, lake, { number: 'P1' });
 });
 afterAll(() => server.close());

@@ -13,10 +13,11 @@ import { randomUUID } from 'node:crypto';
 import { existsSync, readdirSync } from 'node:fs';
 import { join } from 'node:path';
 import { afterAll, beforeAll, describe, expect, test } from 'vitest';
+import { aLakeGround } from '../support/grounds';
 import { aStranger, type Person } from '../support/people';
 import { aJpeg, aPhoto, aPng, CORNERS, seenIn, segmentsOf, TELLTALE, withTags } from '../support/pictures';
-import { aServer, type TestServer } from '../support/server';
-import { aFishery, aLake, type TestFishery, type TestLake } from '../support/waters';
+import type { TestServer } from '../support/server';
+import { aLake, type TestFishery, type TestLake } from '../support/waters';
 
 let server: TestServer;
 let here: TestFishery;
@@ -24,10 +25,7 @@ let elsewhere: TestFishery;
 let lake: TestLake;
 
 beforeAll(async () => {
-  server = await aServer();
-  here = await aFishery(server);
-  elsewhere = await aFishery(server, { name: 'Upper Sallow' });
-  lake = await aLake(server, here);
+  ({ server, here, elsewhere, lake } = await aLakeGround());
 });
 afterAll(() => server.close());
 

@@ -2,9 +2,10 @@ import { LakeView, LevelRecorded } from '@mereward/shared/lakes/contract';
 import { ProblemBody } from '@mereward/shared/problems/problem';
 import { randomUUID } from 'node:crypto';
 import { afterAll, beforeAll, describe, expect, test } from 'vitest';
+import { aLakeGround } from '../support/grounds';
 import { aStranger } from '../support/people';
-import { aServer, type TestServer } from '../support/server';
-import { aBoard, aFishery, aLake, type TestFishery, type TestLake } from '../support/waters';
+import type { TestServer } from '../support/server';
+import { aBoard, aLake, type TestFishery, type TestLake } from '../support/waters';
 
 let server: TestServer;
 let here: TestFishery;
@@ -12,10 +13,7 @@ let elsewhere: TestFishery;
 let lake: TestLake;
 
 beforeAll(async () => {
-  server = await aServer();
-  here = await aFishery(server);
-  elsewhere = await aFishery(server, { name: 'Upper Sallow' });
-  lake = await aLake(server, here);
+  ({ server, here, elsewhere, lake } = await aLakeGround());
 });
 afterAll(() => server.close());
 

@@ -2,10 +2,11 @@ import { LakeView, PegList, PegView } from '@mereward/shared/lakes/contract';
 import { ProblemBody } from '@mereward/shared/problems/problem';
 import { randomUUID } from 'node:crypto';
 import { afterAll, beforeAll, describe, expect, test } from 'vitest';
+import { aLakeGround } from '../support/grounds';
 import { aStranger } from '../support/people';
-import { aServer, type TestServer } from '../support/server';
+import type { TestServer } from '../support/server';
 import { boardDetails, markDetails, pegDetails } from '../support/water-details';
-import { aBoard, aFishery, aLake, aMark, aPeg, type TestFishery, type TestLake } from '../support/waters';
+import { aBoard, aLake, aMark, aPeg, type TestFishery, type TestLake } from '../support/waters';
 
 let server: TestServer;
 let here: TestFishery;
@@ -13,10 +14,7 @@ let elsewhere: TestFishery;
 let lake: TestLake;
 
 beforeAll(async () => {
-  server = await aServer();
-  here = await aFishery(server);
-  elsewhere = await aFishery(server, { name: 'Upper Sallow' });
-  lake = await aLake(server, here);
+  ({ server, here, elsewhere, lake } = await aLakeGround());
 });
 afterAll(() => server.close());
 

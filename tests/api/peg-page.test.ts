@@ -10,10 +10,11 @@ import fc from 'fast-check';
 import { afterAll, beforeAll, describe, expect, test } from 'vitest';
 import { z } from 'zod';
 import { publishedChart } from '../support/charts';
+import { aSurveyGround } from '../support/grounds';
 import { aPerson, aStranger, type Asker, type Person } from '../support/people';
-import { aServer, type TestServer } from '../support/server';
-import { aLongWater, aSurvey, type TestWater } from '../support/surveys';
-import { aFishery, aReading, type TestFishery } from '../support/waters';
+import type { TestServer } from '../support/server';
+import { aSurvey, type TestWater } from '../support/surveys';
+import { aReading, type TestFishery } from '../support/waters';
 import { VisitWithCasts } from '@mereward/shared/surveys/contract';
 
 let server: TestServer;
@@ -26,12 +27,7 @@ let joan: Person;
 let sofia: Person;
 
 beforeAll(async () => {
-  server = await aServer();
-  server.setNow('2027-04-03T12:00:00Z');
-  here = await aFishery(server, { name: 'Ostlemere Waters' });
-  elsewhere = await aFishery(server, { name: 'Upper Sallow' });
-  water = await aLongWater(server, here);
-  joan = here.people.head_bailiff;
+  ({ server, here, elsewhere, water, joan } = await aSurveyGround());
   sofia = await aPerson(server, { name: 'Sofia Marsh' });
   const visitId = await aSurvey(joan, water);
   const lakeId = water.lake.id;

@@ -4,11 +4,12 @@ import { LOG_READINGS } from '@mereward/api/surveys/log-queue';
 import { LogList, LogView, USUAL_LOG_OPTIONS, type LogOptions } from '@mereward/shared/surveys/log-contract';
 import { randomUUID } from 'node:crypto';
 import { afterAll, beforeAll, describe, expect, test } from 'vitest';
+import { aSurveyGround } from '../support/grounds';
 import { aStranger, type Person } from '../support/people';
-import { aServer, type TestServer } from '../support/server';
+import type { TestServer } from '../support/server';
 import { aBoatTrack, boatDepthM, nmeaLog } from '../support/sounding-log';
-import { aLongWater, closedVisit, openedVisit, type TestWater } from '../support/surveys';
-import { aFishery, type TestFishery } from '../support/waters';
+import { closedVisit, openedVisit, type TestWater } from '../support/surveys';
+import type { TestFishery } from '../support/waters';
 
 let server: TestServer;
 let here: TestFishery;
@@ -17,12 +18,7 @@ let water: TestWater;
 let joan: Person;
 
 beforeAll(async () => {
-  server = await aServer();
-  server.setNow('2027-04-03T12:00:00Z');
-  here = await aFishery(server, { name: 'Ostlemere Waters' });
-  elsewhere = await aFishery(server, { name: 'Upper Sallow' });
-  water = await aLongWater(server, here);
-  joan = here.people.head_bailiff;
+  ({ server, here, elsewhere, water, joan } = await aSurveyGround());
 });
 afterAll(() => server.close());
 

@@ -13,11 +13,12 @@ import { Reducing } from '@mereward/shared/surveys/reducing-contract';
 import { USUAL_FEEL } from '@mereward/shared/surveys/usual-feel';
 import { randomUUID } from 'node:crypto';
 import { afterAll, beforeAll, describe, expect, test } from 'vitest';
+import { aSurveyGround } from '../support/grounds';
 import { aKit } from '../support/kit';
 import { aStranger, type Person } from '../support/people';
-import { aServer, type TestServer } from '../support/server';
-import { aLongWater, aVisitBody, keptCast, openedVisit, type TestWater } from '../support/surveys';
-import { aFishery, type TestFishery } from '../support/waters';
+import type { TestServer } from '../support/server';
+import { aVisitBody, keptCast, openedVisit, type TestWater } from '../support/surveys';
+import type { TestFishery } from '../support/waters';
 
 let server: TestServer;
 let here: TestFishery;
@@ -27,12 +28,7 @@ let joan: Person;
 let owner: Person;
 
 beforeAll(async () => {
-  server = await aServer();
-  server.setNow('2027-04-03T12:00:00Z');
-  here = await aFishery(server, { name: 'Ostlemere Waters' });
-  elsewhere = await aFishery(server, { name: 'Upper Sallow' });
-  water = await aLongWater(server, here);
-  joan = here.people.head_bailiff;
+  ({ server, here, elsewhere, water, joan } = await aSurveyGround());
   owner = here.people.owner;
 });
 afterAll(() => server.close());

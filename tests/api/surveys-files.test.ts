@@ -1,10 +1,11 @@
 import { ProblemBody } from '@mereward/shared/problems/problem';
 import { ImportDone, ImportPreview, VisitWithCasts } from '@mereward/shared/surveys/contract';
 import { afterAll, beforeAll, describe, expect, test } from 'vitest';
+import { aSurveyGround } from '../support/grounds';
 import { aStranger, type Person } from '../support/people';
-import { aServer, type TestServer } from '../support/server';
-import { aLongWater, keptCast, openedVisit, type TestWater } from '../support/surveys';
-import { aFishery, aPeg, type TestFishery } from '../support/waters';
+import type { TestServer } from '../support/server';
+import { keptCast, openedVisit, type TestWater } from '../support/surveys';
+import { aPeg, type TestFishery } from '../support/waters';
 
 let server: TestServer;
 let here: TestFishery;
@@ -13,12 +14,7 @@ let water: TestWater;
 let joan: Person;
 
 beforeAll(async () => {
-  server = await aServer();
-  server.setNow('2027-04-03T12:00:00Z');
-  here = await aFishery(server, { name: 'Ostlemere Waters' });
-  elsewhere = await aFishery(server, { name: 'Upper Sallow' });
-  water = await aLongWater(server, here);
-  joan = here.people.head_bailiff;
+  ({ server, here, elsewhere, water, joan } = await aSurveyGround());
 });
 afterAll(() => server.close());
 

@@ -10,9 +10,10 @@ import {
 } from '@mereward/shared/surveys/contract';
 import { randomUUID } from 'node:crypto';
 import { afterAll, beforeAll, describe, expect, test } from 'vitest';
+import { aSurveyGround } from '../support/grounds';
 import { aKit } from '../support/kit';
 import { aStranger, type Person } from '../support/people';
-import { aServer, type TestServer } from '../support/server';
+import type { TestServer } from '../support/server';
 import {
   aCastBody,
   aLongWater,
@@ -22,7 +23,7 @@ import {
   openedVisit,
   type TestWater,
 } from '../support/surveys';
-import { aBoard, aFishery, type TestFishery } from '../support/waters';
+import { aBoard, type TestFishery } from '../support/waters';
 
 let server: TestServer;
 let here: TestFishery;
@@ -31,12 +32,7 @@ let water: TestWater;
 let joan: Person;
 
 beforeAll(async () => {
-  server = await aServer();
-  server.setNow('2027-04-03T12:00:00Z');
-  here = await aFishery(server, { name: 'Ostlemere Waters' });
-  elsewhere = await aFishery(server, { name: 'Upper Sallow' });
-  water = await aLongWater(server, here);
-  joan = here.people.head_bailiff;
+  ({ server, here, elsewhere, water, joan } = await aSurveyGround());
 });
 afterAll(() => server.close());
 
