@@ -1,42 +1,33 @@
 import { FisheryList } from '@mereward/shared/fisheries/contract';
 import { LakeView } from '@mereward/shared/lakes/contract';
 import { VisitList, VisitWithCasts } from '@mereward/shared/surveys/contract';
-import type { Page } from '@playwright/test';
-import { typeCast, type Typed } from './support/cast-form';
-import { deviceText, packBeforeTheSignalGoes, sending, waitUntilKept } from './support/no-signal';
-import { Asking, signIn, test } from './support/people';
-import { expect, type Site } from './support/site';
-import { anOpenVisit, aStoryWater, type StoryWater } from './support/story-water';
+import { typeCast } from './support/cast-form';
+import {
+  CAST,
+  castWithoutSignal,
+  deviceText,
+  firstCast,
+  packBeforeTheSignalGoes,
+  sending,
+  test,
+  waitUntilKept,
+} from './support/no-signal';
+import { Asking, signIn } from './support/people';
+import { expect } from './support/site';
+import { anOpenVisit } from './support/story-water';
 
 test.use({ serviceWorkers: 'allow' });
 test.describe.configure({ timeout: 150_000 });
 
-const CAST: Typed = { wraps: '14', landed: 'sharp crack', drags: 'fine rattle', back: 'nothing', pulls: '8' };
 const WRAPS = ['14', '13', '12', '11', '10', '9'];
-
-const aWater = async (site: Site): Promise<StoryWater> => aStoryWater(await Asking.as('marian', site));
 
 const visitOf = (joan: Asking, visitId: string) => joan.get(`/visits/${visitId}`, VisitWithCasts);
 
-/** Keeps casts one after another with no signal; each is said to wait. */
-async function castWithoutSignal(page: Page, wraps: readonly string[], first = 1): Promise<void> {
-  for (const [i, count] of wraps.entries()) {
-    const seq = String(first + i);
-    await typeCast(page, { ...CAST, wraps: count });
-    await expect(page.getByRole('status').filter({ hasText: 'grade' })).toContainText(/Gravel \d+\s%/);
-    await page.getByRole('button', { name: `Keep cast ${seq}` }).click();
-    await expect(page.getByText(`Cast ${seq} is kept on this phone and waits to be sent.`)).toBeVisible();
-  }
-}
-
 test('a whole survey is filled in with no signal, outlives a reload and a sign-out, and is sent once and in order', async ({
-  pageOf,
-  site,
+  packed: page,
+  joan,
+  water,
 }) => {
-  const water = await aWater(site);
-  const joan = await Asking.as('joan', site);
-  const page = await pageOf({ who: 'joan' });
-  await packBeforeTheSignalGoes(page, water.lakeId);
   await page.context().setOffline(true);
 
   await page.goto(`/bank/surveys/new?lakeId=${water.lakeId}`);
@@ -86,13 +77,9 @@ test('a whole survey is filled in with no signal, outlives a reload and a sign-o
   expect(casts.map(({ observation }) => String(observation.wrapsWhole))).toEqual(WRAPS);
 });
 
-test('what was sent but never answered is sent again and kept once', async ({ pageOf, site }) => {
-  const water = await aWater(site);
-  const joan = await Asking.as('joan', site);
-  const visitId = await anOpenVisit(joan, water, { startedAt: new Date().toISOString() });
+test('what was sent but never answered is sent again and kept once', async ({ joan, pageOf, visitId }) => {
   const page = await pageOf({ who: 'joan' });
-  await page.goto(`/bank/surveys/${visitId}/cast`);
-  await expect(page.getByRole('heading', { level: 1 })).toHaveText('Cast 1');
+  await firstCast(page, visitId);
   let answers = 0;
   await page.route('**/api/visits/*/casts', async (route) => {
     const answer = await route.fetch();
@@ -109,16 +96,11 @@ test('what was sent but never answered is sent again and kept once', async ({ pa
 });
 
 test('the server goes away in the middle of a visit and comes back: nothing is lost and nothing is doubled', async ({
-  pageOf,
+  packed: page,
   site,
+  visitId,
 }) => {
-  const water = await aWater(site);
-  const joan = await Asking.as('joan', site);
-  const visitId = await anOpenVisit(joan, water, { startedAt: new Date().toISOString() });
-  const page = await pageOf({ who: 'joan' });
-  await packBeforeTheSignalGoes(page, water.lakeId);
-  await page.goto(`/bank/surveys/${visitId}/cast`);
-  await expect(page.getByRole('heading', { level: 1 })).toHaveText('Cast 1');
+  await firstCast(page, visitId);
   await typeCast(page, CAST);
   await page.getByRole('button', { name: 'Keep cast 1' }).click();
   await expect(page.getByText('Cast 1 is kept.')).toBeVisible();
@@ -137,19 +119,15 @@ test('the server goes away in the middle of a visit and comes back: nothing is l
 });
 
 test('a second person at the phone sees how much of another waits, and nothing of it', async ({
-  pageOf,
-  site,
+  packed: page,
+  joan,
+  water,
 }) => {
-  const water = await aWater(site);
-  const joan = await Asking.as('joan', site);
   const visitId = await anOpenVisit(joan, water, {
     startedAt: new Date().toISOString(),
     title: 'Joan’s own business',
   });
-  const page = await pageOf({ who: 'joan' });
-  await packBeforeTheSignalGoes(page, water.lakeId);
-  await page.goto(`/bank/surveys/${visitId}/cast`);
-  await expect(page.getByRole('heading', { level: 1 })).toHaveText('Cast 1');
+  await firstCast(page, visitId);
   await page.context().setOffline(true);
   await castWithoutSignal(page, ['14', '13']);
   await page.goto('/me');
@@ -174,21 +152,17 @@ test('a second person at the phone sees how much of another waits, and nothing o
 });
 
 test('a refusal is kept with its words, holds its own visit only, and goes when it is taken away by hand', async ({
-  pageOf,
-  site,
+  packed: page,
+  joan,
+  water,
 }) => {
-  const water = await aWater(site);
-  const joan = await Asking.as('joan', site);
   const startedAt = new Date().toISOString();
   const [closed, open] = [
     await anOpenVisit(joan, water, { startedAt, title: 'Closed meanwhile' }),
     await anOpenVisit(joan, water, { startedAt, title: 'Still open' }),
   ];
-  const page = await pageOf({ who: 'joan' });
-  await packBeforeTheSignalGoes(page, water.lakeId);
   for (const visitId of [closed, open]) {
-    await page.goto(`/bank/surveys/${visitId}/cast`);
-    await expect(page.getByRole('heading', { level: 1 })).toHaveText('Cast 1');
+    await firstCast(page, visitId);
     await waitUntilKept(page, 'surveys', 'visit', visitId);
   }
   const endedAt = new Date().toISOString();
@@ -220,11 +194,10 @@ test('a refusal is kept with its words, holds its own visit only, and goes when 
 });
 
 test('what was refused for a fast clock is opened again as it was typed, put right, and sent', async ({
+  joan,
+  water,
   pageOf,
-  site,
 }) => {
-  const water = await aWater(site);
-  const joan = await Asking.as('joan', site);
   const page = await pageOf({ who: 'joan', now: new Date(Date.now() + 3_600_000).toISOString() });
   await packBeforeTheSignalGoes(page, water.lakeId);
   await page.context().setOffline(true);
@@ -246,14 +219,12 @@ test('what was refused for a fast clock is opened again as it was typed, put rig
   expect(boards[0]?.readings.map(({ levelM }) => levelM)).toEqual([0.6]);
 });
 
-test('a phone that has no room left says so and keeps what is typed', async ({ pageOf, site }) => {
-  const water = await aWater(site);
-  const joan = await Asking.as('joan', site);
-  const visitId = await anOpenVisit(joan, water, { startedAt: new Date().toISOString() });
-  const page = await pageOf({ who: 'joan' });
-  await packBeforeTheSignalGoes(page, water.lakeId);
-  await page.goto(`/bank/surveys/${visitId}/cast`);
-  await expect(page.getByRole('heading', { level: 1 })).toHaveText('Cast 1');
+test('a phone that has no room left says so and keeps what is typed', async ({
+  packed: page,
+  joan,
+  visitId,
+}) => {
+  await firstCast(page, visitId);
   await page.context().setOffline(true);
   await page.evaluate(() => {
     IDBObjectStore.prototype.put = () => {
@@ -272,13 +243,10 @@ test('a phone that has no room left says so and keeps what is typed', async ({ p
 });
 
 test('a level is read with no signal, misread levels are taken back, and the rest is sent', async ({
-  pageOf,
-  site,
+  packed: page,
+  joan,
+  water,
 }) => {
-  const water = await aWater(site);
-  const joan = await Asking.as('joan', site);
-  const page = await pageOf({ who: 'joan' });
-  await packBeforeTheSignalGoes(page, water.lakeId);
   await page.context().setOffline(true);
   await page.goto(`/bank/levels/${water.lakeId}`);
   const reading = page.getByLabel('Board FO-G1 reads, metres');
@@ -300,10 +268,9 @@ test('a level is read with no signal, misread levels are taken back, and the res
 });
 
 test('what was opened once opens again with no signal: lake, peg, chart, bank and the emergency card', async ({
+  joan,
   pageOf,
-  site,
 }) => {
-  const joan = await Asking.as('joan', site);
   const { fisheries } = await joan.get('/fisheries', FisheryList);
   const far = fisheries[0]?.lakes.find(({ name }) => name === 'Far Ostle');
   const { pegs } = await joan.get(`/lakes/${far?.id ?? ''}`, LakeView);
