@@ -4,7 +4,6 @@ import type { LakeView } from '@mereward/shared/lakes/contract';
 import type { ConfirmedBottomView } from '@mereward/shared/surveys/confirmed-contract';
 import { civilDay } from '@mereward/shared/time/civil-day';
 import { useController, useWatch } from 'react-hook-form';
-import { Button } from '@/components/button';
 import { Empty } from '@/components/empty';
 import { Field } from '@/components/field';
 import { Form } from '@/components/form';
@@ -14,6 +13,7 @@ import { Loaded } from '@/components/loaded';
 import { Note } from '@/components/note';
 import { Page } from '@/components/page';
 import { ProblemNote } from '@/components/problem-note';
+import { SaveBar } from '@/components/save-bar';
 import { Text } from '@/components/text';
 import {
   ConfirmDraft,
@@ -101,17 +101,7 @@ function ConfirmForm({ lake, at, kept }: Props) {
       title="Confirm a bottom"
       over={lake.details.name}
       back={{ label: 'Bank', href: '/bank' }}
-      actions={
-        <Button
-          label="Confirm it"
-          kind="main"
-          bank
-          grow
-          busy={form.busy}
-          busyLabel="Keeping…"
-          onPress={form.submit}
-        />
-      }
+      actions={<SaveBar form={form} act="Confirm it" busyLabel="Keeping…" />}
     >
       <Form label="Confirmed bottom" onSubmit={form.submit}>
         <ProblemNote problem={form.problem} />

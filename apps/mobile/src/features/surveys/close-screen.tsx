@@ -3,7 +3,6 @@ import type { LakeView } from '@mereward/shared/lakes/contract';
 import type { VisitWithCasts } from '@mereward/shared/surveys/contract';
 import { toMetres } from '@mereward/shared/units/length';
 import { z } from 'zod';
-import { Button } from '@/components/button';
 import { Empty } from '@/components/empty';
 import { Form } from '@/components/form';
 import { FormField } from '@/components/form-field';
@@ -12,6 +11,7 @@ import { Loaded } from '@/components/loaded';
 import { Note } from '@/components/note';
 import { Page } from '@/components/page';
 import { ProblemNote } from '@/components/problem-note';
+import { SaveBar } from '@/components/save-bar';
 import { Text } from '@/components/text';
 import { useLake } from '@/features/lakes/api';
 import { useReadVisitAnew, useVisit } from '@/features/surveys/api';
@@ -84,17 +84,7 @@ function CloseForm({ value: { visit }, lake, again }: FormProps) {
       title="Close the visit"
       over={visit.lakeName}
       back={{ label: visit.title, href }}
-      actions={
-        <Button
-          label="Close the visit"
-          kind="main"
-          bank
-          grow
-          busy={form.busy}
-          busyLabel="Closing…"
-          onPress={form.submit}
-        />
-      }
+      actions={<SaveBar form={form} act="Close the visit" busyLabel="Closing…" />}
     >
       <Form label="Close" onSubmit={form.submit}>
         <ProblemNote problem={form.problem} />

@@ -3,13 +3,13 @@ import { useLocalSearchParams } from 'expo-router';
 import type { VisitWithCasts } from '@mereward/shared/surveys/contract';
 import { z } from 'zod';
 import { FormProvider } from 'react-hook-form';
-import { Button } from '@/components/button';
 import { Empty } from '@/components/empty';
 import { Form } from '@/components/form';
 import { LinkButton } from '@/components/link-button';
 import { Loaded } from '@/components/loaded';
 import { Page } from '@/components/page';
 import { ProblemNote } from '@/components/problem-note';
+import { SaveBar } from '@/components/save-bar';
 import { Text } from '@/components/text';
 import { correctKit, useReadVisitAnew, useVisit } from '@/features/surveys/api';
 import { KitDraft, kitOf, typedKit } from '@/features/surveys/kit-draft';
@@ -84,15 +84,7 @@ function KitForm({ value, back, onBegin, onDone }: Props) {
       actions={
         <>
           <LinkButton label="Leave it" href={back.href} bank grow />
-          <Button
-            label="Correct it"
-            kind="main"
-            bank
-            grow
-            busy={form.busy}
-            busyLabel="Reducing again…"
-            onPress={form.submit}
-          />
+          <SaveBar form={form} act="Correct it" busyLabel="Reducing again…" />
         </>
       }
     >

@@ -3,7 +3,6 @@ import { useLocalSearchParams, useRouter } from 'expo-router';
 import type { GaugeBoardView, LakeView, LevelRecorded } from '@mereward/shared/lakes/contract';
 import { toMetres } from '@mereward/shared/units/length';
 import { z } from 'zod';
-import { Button } from '@/components/button';
 import { ChoiceGrid } from '@/components/choice-grid';
 import { Empty } from '@/components/empty';
 import { Form } from '@/components/form';
@@ -11,6 +10,7 @@ import { FormField } from '@/components/form-field';
 import { Loaded } from '@/components/loaded';
 import { Page } from '@/components/page';
 import { ProblemNote } from '@/components/problem-note';
+import { SaveBar } from '@/components/save-bar';
 import { Text } from '@/components/text';
 import { useLake } from '@/features/lakes/api';
 import { recordLevelHere, type Kept } from '@/features/surveys/keep-here';
@@ -95,17 +95,7 @@ function LevelForm({ lake, board, again, onBoard }: Props) {
       title="Record the level"
       over={lake.details.name}
       back={{ label: 'Bank', href: '/bank' }}
-      actions={
-        <Button
-          label="Keep the reading"
-          kind="main"
-          bank
-          grow
-          busy={form.busy}
-          busyLabel="Keeping…"
-          onPress={form.submit}
-        />
-      }
+      actions={<SaveBar form={form} act="Keep the reading" busyLabel="Keeping…" />}
     >
       <Form label="Level" onSubmit={form.submit}>
         <ProblemNote problem={form.problem} />

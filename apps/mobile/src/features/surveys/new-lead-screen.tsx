@@ -12,6 +12,7 @@ import { Loaded } from '@/components/loaded';
 import { Note } from '@/components/note';
 import { Page } from '@/components/page';
 import { ProblemNote } from '@/components/problem-note';
+import { SaveBar } from '@/components/save-bar';
 import { Section } from '@/components/section';
 import { Text } from '@/components/text';
 import { space } from '@/constants/layout';
@@ -77,17 +78,7 @@ function LeadForm({ fishery }: { fishery: FisheryListItem }) {
       title="Calibrate a lead"
       over={fishery.name}
       back={BACK}
-      actions={
-        <Button
-          label="Keep the lead"
-          kind="main"
-          bank
-          grow
-          busy={form.busy}
-          busyLabel="Keeping…"
-          onPress={form.submit}
-        />
-      }
+      actions={<SaveBar form={form} act="Keep the lead" busyLabel="Keeping…" />}
     >
       <Form label="Lead" onSubmit={form.submit}>
         <ProblemNote problem={form.problem} />

@@ -10,6 +10,7 @@ import { FormField } from '@/components/form-field';
 import { Note } from '@/components/note';
 import { Page } from '@/components/page';
 import { ProblemNote } from '@/components/problem-note';
+import { SaveBar } from '@/components/save-bar';
 import { Section } from '@/components/section';
 import { openVisitHere } from '@/features/surveys/keep-here';
 import { KitPart } from '@/features/surveys/kit-part';
@@ -71,17 +72,7 @@ export function NewVisitForm({ lake, board, last, again }: Props) {
       title="Open a visit"
       over={lake.details.name}
       back={{ label: 'Bank', href: '/bank' }}
-      actions={
-        <Button
-          label="Open the visit"
-          kind="main"
-          bank
-          grow
-          busy={form.busy}
-          busyLabel="Opening…"
-          onPress={form.submit}
-        />
-      }
+      actions={<SaveBar form={form} act="Open the visit" busyLabel="Opening…" />}
     >
       <Form label="Visit" onSubmit={form.submit}>
         <ProblemNote problem={form.problem} />
