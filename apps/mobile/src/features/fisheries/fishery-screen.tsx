@@ -1,5 +1,4 @@
 import { useState } from 'react';
-import { useLocalSearchParams, useRouter } from 'expo-router';
 import type { FisheryView } from '@mereward/shared/fisheries/contract';
 import { FormProvider } from 'react-hook-form';
 import { z } from 'zod';
@@ -11,49 +10,30 @@ import { Loaded } from '@/components/loaded';
 import { NewerNote } from '@/components/newer-note';
 import { Page } from '@/components/page';
 import { Section } from '@/components/section';
-import { Select } from '@/components/select';
+import { ChosenFishery, useChosenFishery } from '@/features/fisheries/chosen-fishery';
 import { TypedFishery, typedFishery } from '@/features/fisheries/fishery-fields';
 import { FisheryForm } from '@/features/fisheries/fishery-form';
 import { changeFishery, useFishery } from '@/features/fisheries/office-api';
 import { PeopleSections } from '@/features/fisheries/people-sections';
-import { OFFICE_ROLES, useMyFisheries } from '@/features/fisheries/use-my-fisheries';
+import { OFFICE_ROLES } from '@/features/fisheries/use-my-fisheries';
 import { useDraftForm } from '@/hooks/use-draft-form';
 import { useHeld } from '@/hooks/use-held';
 
 /** A fishery's people and what it tells about itself. */
 export function FisheryScreen() {
-  const router = useRouter();
-  const { fisheryId } = useLocalSearchParams<{ fisheryId?: string }>();
-  const { all, mine } = useMyFisheries([...OFFICE_ROLES, 'head_bailiff']);
-  const chosen = mine.find(({ id }) => id === fisheryId) ?? mine[0];
+  const fishery = useChosenFishery([...OFFICE_ROLES, 'head_bailiff']);
   return (
     <Page
-      title={chosen?.name ?? 'Fishery'}
+      title={fishery.chosen?.name ?? 'Fishery'}
       over="Fishery and people"
       back={{ label: 'Office', href: '/office' }}
     >
-      <Loaded
-        query={all}
-        waiting="Reading the fishery…"
-        empty={{
-          when: () => chosen === undefined,
-          show: <Empty title="No fishery">You keep no fishery. Its owner can give you a role.</Empty>,
-        }}
+      <ChosenFishery
+        {...fishery}
+        none={<Empty title="No fishery">You keep no fishery. Its owner can give you a role.</Empty>}
       >
-        {() => (
-          <>
-            {mine.length > 1 ? (
-              <Select
-                label="Which fishery"
-                choices={mine.map(({ id, name }) => ({ key: id, label: name }))}
-                value={chosen?.id ?? null}
-                onChange={(id) => router.setParams({ fisheryId: id })}
-              />
-            ) : null}
-            {chosen ? <Fishery key={chosen.id} fisheryId={chosen.id} /> : null}
-          </>
-        )}
-      </Loaded>
+        {(fisheryId) => <Fishery fisheryId={fisheryId} />}
+      </ChosenFishery>
     </Page>
   );
 }

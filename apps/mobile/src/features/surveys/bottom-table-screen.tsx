@@ -1,5 +1,4 @@
 import { useState } from 'react';
-import { useLocalSearchParams, useRouter } from 'expo-router';
 import type { BottomTableView } from '@mereward/shared/surveys/bottom-table-contract';
 import { View } from 'react-native';
 import { Button } from '@/components/button';
@@ -12,9 +11,8 @@ import { NewerNote } from '@/components/newer-note';
 import { Note } from '@/components/note';
 import { Page } from '@/components/page';
 import { Section } from '@/components/section';
-import { Select } from '@/components/select';
+import { ChosenFishery, useChosenFishery } from '@/features/fisheries/chosen-fishery';
 import { useFishery } from '@/features/fisheries/office-api';
-import { useMyFisheries } from '@/features/fisheries/use-my-fisheries';
 import { useBottomTable } from '@/features/surveys/bottom-api';
 import { BottomHistorySection } from '@/features/surveys/bottom-history-section';
 import { BottomLearningSection } from '@/features/surveys/bottom-learning-section';
@@ -26,43 +24,24 @@ const READERS = ['owner', 'manager', 'head_bailiff'] as const;
 
 /** How each bottom feels through the lead: the fishery's table, to be edited, learnt, and looked back on. */
 export function BottomTableScreen() {
-  const router = useRouter();
-  const { fisheryId } = useLocalSearchParams<{ fisheryId?: string }>();
-  const { all, mine } = useMyFisheries(READERS);
-  const chosen = mine.find(({ id }) => id === fisheryId) ?? mine[0];
+  const fishery = useChosenFishery(READERS);
   return (
     <Page
       title="How bottoms feel"
-      over={chosen?.name}
+      over={fishery.chosen?.name}
       width="wide"
       back={{ label: 'Office', href: '/office' }}
     >
-      <Loaded
-        query={all}
-        waiting="Reading the fishery…"
-        empty={{
-          when: () => chosen === undefined,
-          show: (
-            <Empty title="Not yours to read">
-              The owner, a manager or the head bailiff reads the table of feels.
-            </Empty>
-          ),
-        }}
+      <ChosenFishery
+        {...fishery}
+        none={
+          <Empty title="Not yours to read">
+            The owner, a manager or the head bailiff reads the table of feels.
+          </Empty>
+        }
       >
-        {() => (
-          <>
-            {mine.length > 1 ? (
-              <Select
-                label="Which fishery"
-                choices={mine.map(({ id, name }) => ({ key: id, label: name }))}
-                value={chosen?.id ?? null}
-                onChange={(id) => router.setParams({ fisheryId: id })}
-              />
-            ) : null}
-            {chosen ? <Read key={chosen.id} fisheryId={chosen.id} /> : null}
-          </>
-        )}
-      </Loaded>
+        {(fisheryId) => <Read fisheryId={fisheryId} />}
+      </ChosenFishery>
     </Page>
   );
 }

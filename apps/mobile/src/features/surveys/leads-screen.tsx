@@ -1,5 +1,4 @@
 import { useState } from 'react';
-import { useLocalSearchParams, useRouter } from 'expo-router';
 import type { LeadList, LeadView } from '@mereward/shared/surveys/lead-contract';
 import { dayWords } from '@mereward/shared/time/civil-day';
 import { View } from 'react-native';
@@ -13,11 +12,10 @@ import { Loaded } from '@/components/loaded';
 import { Page } from '@/components/page';
 import { ProblemNote } from '@/components/problem-note';
 import { Section } from '@/components/section';
-import { Select } from '@/components/select';
 import { Table } from '@/components/table';
 import { Text } from '@/components/text';
 import { MEASURE_PX, space } from '@/constants/layout';
-import { useMyFisheries } from '@/features/fisheries/use-my-fisheries';
+import { ChosenFishery, useChosenFishery } from '@/features/fisheries/chosen-fishery';
 import { useLeads, usePutLeadAway } from '@/features/surveys/bottom-api';
 import { leadWords, rateWords } from '@/features/surveys/lead-words';
 import { useUnits } from '@/hooks/use-units';
@@ -27,39 +25,20 @@ const ON_THE_BANK = ['owner', 'manager', 'head_bailiff', 'bailiff'] as const;
 
 /** Leads whose fall was counted over known depths: how fast each falls, and which visits threw it. */
 export function LeadsScreen() {
-  const router = useRouter();
-  const { fisheryId } = useLocalSearchParams<{ fisheryId?: string }>();
-  const { all, mine } = useMyFisheries(ON_THE_BANK);
-  const chosen = mine.find(({ id }) => id === fisheryId) ?? mine[0];
+  const fishery = useChosenFishery(ON_THE_BANK);
   return (
-    <Page title="Leads" over={chosen?.name} back={{ label: 'Bank', href: '/bank' }}>
+    <Page title="Leads" over={fishery.chosen?.name} back={{ label: 'Bank', href: '/bank' }}>
       <Text style={{ maxWidth: MEASURE_PX }}>
         How fast a lead falls hangs on its weight, its shape, the line and the hand. Count it over spots read
         by float, and its counts become depths with their own error. A lead nobody calibrated only has counts.
       </Text>
-      <Loaded
-        query={all}
-        waiting="Reading the fishery…"
-        empty={{
-          when: () => chosen === undefined,
-          show: <Empty title="No fishery">Its owner can give you a role that surveys.</Empty>,
-        }}
+      <ChosenFishery
+        {...fishery}
+        bank
+        none={<Empty title="No fishery">Its owner can give you a role that surveys.</Empty>}
       >
-        {() => (
-          <>
-            {mine.length > 1 ? (
-              <Select
-                label="Which fishery"
-                choices={mine.map(({ id, name }) => ({ key: id, label: name }))}
-                value={chosen?.id ?? null}
-                onChange={(id) => router.setParams({ fisheryId: id })}
-                bank
-              />
-            ) : null}
-            {chosen ? <Leads key={chosen.id} fisheryId={chosen.id} /> : null}
-          </>
-        )}
-      </Loaded>
+        {(fisheryId) => <Leads fisheryId={fisheryId} />}
+      </ChosenFishery>
     </Page>
   );
 }
