@@ -1,1 +1,1 @@
-export { WaitingScreen as default } from '@/components/waiting-screen';
+export { WaitingScreen as default } from '@/features/surveys/waiting-screen';

@@ -128,6 +128,42 @@ export async function keepForSending(event: OutboxEvent, instead: number | null)
   await lookAgain();
 }
 
+/**
+ * Puts changed things at the end of the queue in place of what they were, in their order and all at once. What has left
+ * meanwhile stays as it is.
+ */
+export async function moveToEnd(
+  moves: readonly { entry: OutboxEntry; changed: OutboxEvent }[],
+): Promise<void> {
+  const db = await deviceStore();
+  const accountId = sessionStore.get().account?.id;
+  const key = accountId === undefined ? null : await heldKey(accountId);
+  if (!db || !key || accountId === undefined) throw new CannotWait();
+  const rows = await Promise.all(
+    moves.map(async ({ entry, changed }) => ({
+      seq: entry.seq,
+      sealed: await seal(key, changed, about({ accountId, id: entry.id }, 'event')),
+    })),
+  );
+  const work = db.transaction('outbox', 'readwrite', { durability: 'strict' });
+  for (const { seq, sealed } of rows) {
+    const before = await work.store.get(seq);
+    if (before?.accountId !== accountId) continue;
+    if (before.state === 'sent' || (before.state === 'waiting' && before.attempts > 0)) continue;
+    await work.store.delete(seq);
+    await work.store.put({
+      id: before.id,
+      accountId,
+      state: 'waiting',
+      attempts: 0,
+      refusal: null,
+      sealed,
+    });
+  }
+  await work.done;
+  await lookAgain();
+}
+
 /** Changes rows in one transaction; null takes a row away. */
 async function changeRows(change: (row: Place) => OutboxRow | null): Promise<void> {
   const db = await deviceStore();

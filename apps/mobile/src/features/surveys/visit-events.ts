@@ -1,6 +1,12 @@
 import type { GaugeBoardView, LakeView, RecordLevel } from '@mereward/shared/lakes/contract';
-import type { CastView, CloseVisit, KeepCast, OpenVisit, VisitView } from '@mereward/shared/surveys/contract';
-import type { OutboxEvent } from '@/lib/outbox-event';
+import {
+  CastView,
+  type CloseVisit,
+  type KeepCast,
+  type OpenVisit,
+  type VisitView,
+} from '@mereward/shared/surveys/contract';
+import type { OutboxEntry, OutboxEvent } from '@/lib/outbox-event';
 import { lakeKeys } from '@/features/lakes/api';
 import { surveyKeys } from '@/features/surveys/survey-keys';
 
@@ -65,6 +71,35 @@ export const undoingOf = (visit: VisitView, cast: CastView, at: string): OutboxE
   shown: { castId: cast.id },
   again: null,
 });
+
+/** The lake of whatever belongs to a visit. */
+export const lakeOf = ({ touches }: Pick<OutboxEvent, 'touches'>): string | null =>
+  touches.find(([word, of]) => word === 'surveys' && of === 'lake')?.[2] ?? null;
+
+/** A cast that its own visit does not take, for another visit of the same lake. It stays the same cast, made when it was. */
+export const movedTo = (visit: VisitView, cast: OutboxEvent): OutboxEvent => {
+  const now = onVisit(visit);
+  const shown = CastView.safeParse(cast.shown).data;
+  return {
+    ...cast,
+    group: now.group,
+    touches: [...now.touches, ...cast.touches],
+    note: `${visit.title}; moved from ${cast.note}`,
+    path: `/visits/${visit.id}/casts`,
+    shown: shown ? { ...shown, visitId: visit.id } : cast.shown,
+    again: cast.again && { ...cast.again, href: `/bank/surveys/${visit.id}/cast` },
+  };
+};
+
+/** A refused cast, and those that wait behind it in its visit and have not left yet: what can be moved together. */
+export const castsFrom = <E extends OutboxEntry>(entries: readonly E[], first: E): E[] =>
+  entries.filter(
+    ({ kind, group, seq, state, attempts }) =>
+      kind === 'keep-cast' &&
+      group === first.group &&
+      (seq === first.seq ||
+        (seq > first.seq && (state === 'refused' || (state === 'waiting' && attempts === 0)))),
+  );
 
 /** A visit to be closed. */
 export const closingOf = (visit: VisitView, closing: CloseVisit, typed: unknown): OutboxEvent => ({

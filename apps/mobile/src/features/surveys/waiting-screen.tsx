@@ -8,7 +8,10 @@ import { Note } from '@/components/note';
 import { Page } from '@/components/page';
 import { Section } from '@/components/section';
 import { Text } from '@/components/text';
-import { WaitingEntry } from '@/components/waiting-entry';
+import { BringInSection } from '@/features/surveys/bring-in-section';
+import { HandOverSection } from '@/features/surveys/hand-over-section';
+import { MoveCastSheet } from '@/features/surveys/move-cast-sheet';
+import { WaitingEntry } from '@/features/surveys/waiting-entry';
 import { space } from '@/constants/layout';
 import { useNoSignal } from '@/hooks/use-no-signal';
 import { clockHere } from '@/lib/format-time';
@@ -25,6 +28,7 @@ export function WaitingScreen() {
   const { entries, others, locked } = useOutbox();
   const [sending, setSending] = useState(false);
   const [leaving, setLeaving] = useState<OutboxEntry | null>(null);
+  const [moving, setMoving] = useState<OutboxEntry | null>(null);
   const open = entries.filter(({ state }) => state !== 'sent');
   const send = async (): Promise<void> => {
     setSending(true);
@@ -57,6 +61,7 @@ export function WaitingScreen() {
               entry={entry}
               entries={entries}
               onTakeAway={() => setLeaving(entry)}
+              onMove={() => setMoving(entry)}
             />
           ))}
         </View>
@@ -81,6 +86,9 @@ export function WaitingScreen() {
           )}
         </Section>
       ) : null}
+      {account && open.length > 0 ? <HandOverSection account={account} entries={open} /> : null}
+      {account ? <BringInSection accountId={account.id} entries={entries} /> : null}
+      {moving ? <MoveCastSheet entry={moving} entries={entries} onClose={() => setMoving(null)} /> : null}
       <Confirm
         open={leaving !== null}
         title={`Take away “${leaving?.title ?? ''}”?`}

@@ -28,10 +28,11 @@ const useStyles = themed((c) => ({
   acts: { flexDirection: 'row', flexWrap: 'wrap', gap: space.small },
 }));
 
-type Props = { entry: OutboxEntry; entries: readonly OutboxEntry[]; onTakeAway: () => void };
+type Acts = { onTakeAway: () => void; onMove: () => void };
+type Props = Acts & { entry: OutboxEntry; entries: readonly OutboxEntry[] };
 
 /** One thing of the queue: what it is, when it was made, how it stands, and what can be done about a refusal. */
-export function WaitingEntry({ entry, entries, onTakeAway }: Props) {
+export function WaitingEntry({ entry, entries, ...acts }: Props) {
   const styles = useStyles();
   const behind = heldBy(entries, entry);
   return (
@@ -55,12 +56,12 @@ export function WaitingEntry({ entry, entries, onTakeAway }: Props) {
           tone="amber"
         >{`Stands behind “${behind.title}”, which was refused: put that right first.`}</Text>
       ) : null}
-      {entry.state === 'refused' ? <Refused entry={entry} onTakeAway={onTakeAway} /> : null}
+      {entry.state === 'refused' ? <Refused entry={entry} {...acts} /> : null}
     </View>
   );
 }
 
-function Refused({ entry, onTakeAway }: { entry: OutboxEntry; onTakeAway: () => void }) {
+function Refused({ entry, onTakeAway, onMove }: Acts & { entry: OutboxEntry }) {
   const styles = useStyles();
   const { refusal, again, seq } = entry;
   const said = refusal
@@ -91,6 +92,7 @@ function Refused({ entry, onTakeAway }: { entry: OutboxEntry; onTakeAway: () => 
             bank
           />
         ) : null}
+        {entry.kind === 'keep-cast' ? <Button label="Move to another visit" bank onPress={onMove} /> : null}
         <Button label="Try once more" bank onPress={() => void waitAgain(seq).then(sendWaiting)} />
         <Button label="Take it away" kind="danger" bank onPress={onTakeAway} />
       </View>
