@@ -7,6 +7,7 @@ import { notFound } from '../http/deny';
 import { chartContent, layersOf, type ChartContent } from './chart-layers';
 import { chartToRead, LIGHT, type LightChart } from './find-chart';
 import { sightOnChart, type Sight } from './layers';
+import { soundedBed } from './sounded-bed';
 import { chartNamed } from './tellings';
 
 /** What really changed since an earlier version, within the layers this reader sees. */
@@ -80,7 +81,11 @@ function comparedLately(
   const key = `${sees.depth ? 'depth' : ''} ${sees.bottom ? 'bottom' : ''} ${shiftM}`;
   const kept = known.get(key);
   if (kept?.earlier === earlier) return kept.change;
-  const change = chartChanges(layersOf(now), { layers: layersOf(earlier), shiftM }, sees);
+  const change = chartChanges(
+    { layers: layersOf(now), bed: soundedBed(now.built, earlier.built) },
+    { layers: layersOf(earlier), bed: soundedBed(earlier.built), shiftM },
+    sees,
+  );
   lately.set(now, known.set(key, { earlier, change }));
   return change;
 }
@@ -88,7 +93,7 @@ function comparedLately(
 function wordsOf(comparedM2: number, count: number, then: LightChart): string {
   const both = `${comparedM2} m² were surveyed both now and for chart ${then.version ?? ''}`;
   if (comparedM2 === 0) return 'No water was surveyed both times, so nothing can be compared.';
-  if (count === 0) return `${both}. Nothing there differs by more than both could be wrong.`;
+  if (count === 0) return `${both}. Nothing there differs by more than the soundings of both could be wrong.`;
   const places = count === 1 ? 'One area differs' : `${count} areas differ`;
-  return `${both}. ${places} by more than both could be wrong (1.96 σ); elsewhere no change can be told.`;
+  return `${both}. ${places} by more than the soundings of both could be wrong (1.96 σ); elsewhere no change can be told.`;
 }

@@ -1,58 +1,111 @@
 import { cellRegions } from '../geometry/cell-regions';
 import { regionRings } from '../geometry/cell-rings';
 import { Cover, Substrate } from '../surveys/contract';
+import { bedDifference } from './bed-difference';
 import { UNKNOWN_CLASS, type ClassGrid } from './bottom-map';
 import type { ChangedArea } from './chart-answers';
 import { gridAt, type ChartLayers } from './chart-reading';
 import { columnXM, isSurveyed, rowYM, type GridFrame } from './grid';
 import { nodesByRegion } from './region-shape';
+import type { SamplePoints } from './sample-points';
 
 /** Common practice, no published source. */
 export const CHANGE_LIMITS = {
-  leastAreaM2: 12, // one place in twenty crosses 1.96 σ by chance: a change is an area, not a cell
+  leastAreaM2: 12, // a change is an area, not a cell
+  byChance: 0.05, // of two surveys of an unchanged bed, so many tell of a change of depth anywhere
+  sharedSigmaM: 0.03, // of two boards' readings, which all soundings of a visit share and no number of them averages out
   leastSure: 0.6, // of a class, then and now, to be held against one another
   most: 20,
 } as const;
 
+/** A chart with the soundings its depths come from; of the newer chart, those that the earlier had not. */
+export type SoundedChart = { layers: ChartLayers; bed: SamplePoints };
+
 /** How much deeper the earlier chart's depths read at the newer one's datum, metres (positive: its datum lay lower). */
-export type EarlierChart = { layers: ChartLayers; shiftM: number };
+export type EarlierChart = SoundedChart & { shiftM: number };
 
 export type ChartChange = { comparedM2: number; areas: ChangedArea[] };
 
 type Shown = { depth: boolean; bottom: boolean };
 
 /**
- * What changed from one chart to another, where both were surveyed: areas whose depth differs by more than 1.96 σ of the
- * difference at every cell (σ of both charts together, as if independent), deeper and shallower apart, and areas where cover
- * or bottom reads otherwise with both readings fairly sure. The newer chart's frame is used; the earlier is read at its
- * cells' middles. Scraps under 12 m² are left out.
+ * What changed from one chart to another, where both were surveyed. Depths: areas where the difference kriged from both
+ * charts' soundings (`bedDifference`; never the two surfaces subtracted) exceeds 1.96 σ, deeper and shallower apart, and
+ * somewhere the bound that chance alone crosses anywhere on the lake once in twenty comparisons. Cover and bottom: areas that
+ * read otherwise with both readings fairly sure. The newer chart's frame is used; the earlier is read at its cells' middles.
+ * Scraps under 12 m² are left out.
  */
-export function chartChanges(now: ChartLayers, then: EarlierChart, shown: Shown): ChartChange {
+export function chartChanges(sounded: SoundedChart, then: EarlierChart, shown: Shown): ChartChange {
+  const now = sounded.layers;
   const frame = now.depth;
-  const difference = new Float64Array(frame.values.length).fill(Number.NaN);
-  const sigma = new Float64Array(frame.values.length);
   const earlier = earlierClasses(now, then);
-  let compared = 0;
-  for (let node = 0; node < difference.length; node++) {
-    if (!isSurveyed(frame.values[node]!)) continue;
-    const place = placeOf(frame, node);
-    const depthM = gridAt(then.layers.depth, place);
-    const sigmaM = gridAt(then.layers.sigma, place);
-    if (depthM === null || sigmaM === null) continue;
-    compared++;
-    difference[node] = frame.values[node]! - (depthM + then.shiftM);
-    sigma[node] = Math.hypot(now.sigma.values[node]!, sigmaM);
-  }
+  const compared = frame.values.map((depthM, node) =>
+    isSurveyed(depthM) && gridAt(then.layers.depth, placeOf(frame, node)) !== null ? 1 : 0,
+  );
   const areas = [
     ...(shown.depth
-      ? depthAreas({ difference, sigma, frame }, shown.bottom ? [now.cover, earlier.cover] : null)
+      ? depthAreas(differences(sounded, then, compared), shown.bottom ? [now.cover, earlier.cover] : null)
       : []),
     ...(shown.bottom ? classAreas([now.cover, earlier.cover], Cover.options, 'cover') : []),
     ...(shown.bottom ? classAreas([now.substrate, earlier.substrate], Substrate.options, 'substrate') : []),
   ];
   const largest = areas.sort((a, b) => b.areaM2 - a.areaM2 || a.xM - b.xM || a.yM - b.yM);
-  return { comparedM2: Math.round(compared * frame.cellM ** 2), areas: largest.slice(0, CHANGE_LIMITS.most) };
+  const count = compared.reduce((sum, mark) => sum + mark, 0);
+  return { comparedM2: Math.round(count * frame.cellM ** 2), areas: largest.slice(0, CHANGE_LIMITS.most) };
 }
+
+const MOST_PLACES = 2500; // the difference is worked out at; cells between take the nearest place's
+
+/** The difference at every compared cell, NaN elsewhere, and how many σ chance alone may reach anywhere. */
+function differences(now: SoundedChart, then: EarlierChart, compared: Float64Array): Differences {
+  const frame = now.layers.depth;
+  const difference = new Float64Array(compared.length).fill(Number.NaN);
+  const sigma = new Float64Array(compared.length);
+  const blocks = blocksOf(compared, frame);
+  const middles = [...blocks.values()].map((nodes) => middleOf(frame, nodes));
+  const places = {
+    xM: Float64Array.from(middles, ({ xM }) => xM),
+    yM: Float64Array.from(middles, ({ yM }) => yM),
+  };
+  const { differenceM, sigmaM } = bedDifference([now.bed, then.bed], then.shiftM, places);
+  [...blocks.values()].forEach((nodes, block) => {
+    for (const node of nodes) {
+      difference[node] = differenceM[block]!;
+      sigma[node] = Math.hypot(sigmaM[block]!, CHANGE_LIMITS.sharedSigmaM);
+    }
+  });
+  const independent = Math.max(1, Math.min(now.bed.xM.length, then.bed.xM.length));
+  return { difference, sigma, frame, chanceSigmas: chanceSigmas(independent) };
+}
+
+function middleOf(frame: GridFrame, nodes: readonly number[]) {
+  const places = nodes.map((node) => placeOf(frame, node));
+  const mean = (of: (place: { xM: number; yM: number }) => number) =>
+    places.reduce((sum, place) => sum + of(place), 0) / places.length;
+  return { xM: mean(({ xM }) => xM), yM: mean(({ yM }) => yM) };
+}
+
+/** Compared cells in square blocks; at the shore, what is left of them. */
+function blocksOf(compared: Float64Array, { columns }: GridFrame): Map<number, number[]> {
+  const count = compared.reduce((sum, mark) => sum + mark, 0);
+  const side = Math.max(1, Math.ceil(Math.sqrt(count / MOST_PLACES)));
+  const blocks = new Map<number, number[]>();
+  compared.forEach((mark, node) => {
+    if (mark === 0) return;
+    const key = Math.floor(Math.floor(node / columns) / side) * columns + Math.floor((node % columns) / side);
+    const block = blocks.get(key);
+    if (block) block.push(node);
+    else blocks.set(key, [node]);
+  });
+  return blocks;
+}
+
+/**
+ * How many σ the greatest of so many independent differences reaches by chance once in twenty times, at most: a normal is
+ * beyond z with less than e^(−z²/2), and of all together no more than the sum (Bonferroni).
+ */
+const chanceSigmas = (independent: number): number =>
+  Math.sqrt(2 * Math.log(independent / CHANGE_LIMITS.byChance));
 
 const placeOf = (frame: GridFrame, node: number) => ({
   xM: columnXM(frame, node % frame.columns),
@@ -88,17 +141,25 @@ function earlierClasses(
   return { cover: moved(layers.cover), substrate: moved(layers.substrate) };
 }
 
-type Differences = { difference: Float64Array; sigma: Float64Array; frame: GridFrame };
+type Differences = {
+  difference: Float64Array;
+  sigma: Float64Array;
+  frame: GridFrame;
+  chanceSigmas: number;
+};
 
 function depthAreas(
-  { difference, sigma, frame }: Differences,
+  { difference, sigma, frame, chanceSigmas: leastPeak }: Differences,
   covers: readonly [ClassGrid, ClassGrid] | null,
 ): ChangedArea[] {
   const kinds = Int8Array.from(difference, (by, node) => {
     if (!isSurveyed(by) || Math.abs(by) <= 1.96 * sigma[node]!) return -1;
     return by > 0 ? 1 : 0;
   });
-  return regions(kinds, frame).map(({ nodes, value }) => {
+  const peak = (nodes: readonly number[]) =>
+    nodes.reduce((most, node) => Math.max(most, Math.abs(difference[node]!) / sigma[node]!), 0);
+  const sure = regions(kinds, frame).filter(({ nodes }) => peak(nodes) > leastPeak);
+  return sure.map(({ nodes, value }) => {
     const mean = (of: Float64Array) => nodes.reduce((sum, node) => sum + of[node]!, 0) / nodes.length;
     const areaM2 = nodes.length * frame.cellM ** 2;
     const meanChangeM = hundredth(mean(difference));

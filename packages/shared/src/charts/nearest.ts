@@ -18,3 +18,15 @@ export function nearestDistancesM(samples: SamplePoints, targets: Targets): Floa
     return Math.sqrt(search.squaredM2[0]!);
   });
 }
+
+/** Mean distance from a sample to its nearest other, metres; two samples at least. */
+export function meanNearestM({ xM, yM }: SamplePoints): number {
+  const search = new NearestSearch(indexSamples(xM, yM), 1);
+  let sum = 0;
+  for (let i = 0; i < xM.length; i++) {
+    search.without = i;
+    search.find(xM[i]!, yM[i]!);
+    sum += Math.sqrt(search.squaredM2[0]!);
+  }
+  return sum / xM.length;
+}
