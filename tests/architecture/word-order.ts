@@ -27,7 +27,11 @@ export const downhill: Record<string, string[]> = {
 /** Where words live, and which folders beside them are foundations. `free` folders put everything together. */
 const homes = [
   { home: 'apps/api/src/', foundations: ['http', 'jobs'], free: ['demo'] },
-  { home: 'packages/shared/src/', foundations: ['problems', 'money', 'time', 'units', 'geometry'], free: [] },
+  {
+    home: 'packages/shared/src/',
+    foundations: ['problems', 'money', 'time', 'units', 'geometry', 'writing'],
+    free: [],
+  },
   { home: 'packages/db/src/entities/', foundations: [], free: [] },
   { home: 'apps/mobile/src/features/', foundations: [], free: [] },
   {

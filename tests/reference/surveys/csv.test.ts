@@ -5,7 +5,7 @@
 import { readCastsText } from '@mereward/api/surveys/casts-table';
 import { Problem } from '@mereward/shared/problems/problem';
 import { readCasts, type CastsGround } from '@mereward/shared/surveys/casts-file';
-import { csvCell, csvText } from '@mereward/shared/surveys/csv-cells';
+import { csvCell, csvText } from '@mereward/shared/writing/csv-cells';
 import { readFileText } from '@mereward/shared/surveys/file-text';
 import { readFileSync } from 'node:fs';
 import { describe, expect, test } from 'vitest';

@@ -3,7 +3,7 @@ import { Fishery } from '@mereward/db/entities/fisheries/fishery';
 import type { SurveyCast } from '@mereward/db/entities/surveys/survey-cast';
 import { SurveyVisit } from '@mereward/db/entities/surveys/survey-visit';
 import { fromPlane } from '@mereward/shared/geometry/plane';
-import { csvText } from '@mereward/shared/surveys/csv-cells';
+import { csvText } from '@mereward/shared/writing/csv-cells';
 import { createHash } from 'node:crypto';
 import { In, type EntityManager } from 'typeorm';
 import type { Ctx } from '../ctx';

@@ -1,5 +1,5 @@
 import { fromPlane, type LonLat } from '@mereward/shared/geometry/plane';
-import { csvText } from '@mereward/shared/surveys/csv-cells';
+import { csvText } from '@mereward/shared/writing/csv-cells';
 import { createHash } from 'node:crypto';
 import type { Ctx } from '../ctx';
 import type { Built, BuiltLog } from './built';

@@ -1,7 +1,7 @@
 import { Account } from '@mereward/db/entities/accounts/account';
 import { Fishery } from '@mereward/db/entities/fisheries/fishery';
 import type { SurveyCast } from '@mereward/db/entities/surveys/survey-cast';
-import { csvText } from '@mereward/shared/surveys/csv-cells';
+import { csvText } from '@mereward/shared/writing/csv-cells';
 import { In } from 'typeorm';
 import type { Ctx } from '../ctx';
 import { CAST_COLUMNS_OUT, castRow, soundingCells, type CastCells } from './cast-cells';

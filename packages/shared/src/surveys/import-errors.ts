@@ -1,5 +1,5 @@
 import type { ImportRowError } from './contract';
-import { csvText } from './csv-cells';
+import { csvText } from '../writing/csv-cells';
 
 /** The faults of a casts file as a file of their own, to put right beside the spreadsheet. */
 export function importErrorsCsv(errors: readonly ImportRowError[]): string {
