@@ -1,13 +1,11 @@
 import type { Interval } from '../time/interval';
-import { addDays, civilTime, instantOf } from '../time/zoned';
+import { isQuiet, QUIET_FROM, quietEnd } from '../time/quiet-hours';
+import { civilTime, instantOf } from '../time/zoned';
 
-/** Common practice, no published source: half an hour to claim by day, nothing asked of anybody from 22:00 to 07:00. */
+/** Common practice, no published source: half an hour to claim a place. */
 export const CLAIM_MINUTES = 30;
-export const QUIET_FROM = '22:00';
-export const QUIET_UNTIL = '07:00';
 
 const MINUTE_MS = 60_000;
-const isQuiet = (clock: string): boolean => clock >= QUIET_FROM || clock < QUIET_UNTIL;
 
 /**
  * When a place that has come free is offered and how long it is kept. Quiet hours (the lake’s clock) don’t count: what
@@ -15,20 +13,12 @@ const isQuiet = (clock: string): boolean => clock >= QUIET_FROM || clock < QUIET
  * nobody is offered a place they can’t take.
  */
 export function claimWindow(freedAt: Date, start: Date, zone: string): Interval | null {
-  const from = isQuiet(clockOf(freedAt, zone)) ? nextMorning(freedAt, zone) : freedAt;
+  const from = isQuiet(freedAt, zone) ? quietEnd(freedAt, zone) : freedAt;
   const quiet = instantOf(`${civilTime(from, zone).slice(0, 10)}T${QUIET_FROM}`, zone).at;
   const whole = new Date(from.getTime() + CLAIM_MINUTES * MINUTE_MS);
   const left = whole.getTime() - quiet.getTime();
-  const until = left <= 0 ? whole : new Date(nextMorning(quiet, zone).getTime() + left);
+  const until = left <= 0 ? whole : new Date(quietEnd(quiet, zone).getTime() + left);
   return until.getTime() <= start.getTime() ? { from, until } : null;
-}
-
-const clockOf = (at: Date, zone: string): string => civilTime(at, zone).slice(11, 16);
-
-function nextMorning(at: Date, zone: string): Date {
-  const [day = '', clock = ''] = civilTime(at, zone).split('T');
-  const morning = clock < QUIET_UNTIL ? day : addDays(day, 1);
-  return instantOf(`${morning}T${QUIET_UNTIL}`, zone).at;
 }
 
 export type WaitingPlace = {
