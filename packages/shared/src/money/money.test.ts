@@ -1,6 +1,6 @@
 import fc from 'fast-check';
 import { expect, test } from 'vitest';
-import { MOST_PENCE, moneyWords, sumMoney, sumPence } from './money';
+import { decimalAmount, MOST_PENCE, moneyWords, sumMoney, sumPence } from './money';
 import { shareOf, sharePence } from './sharing';
 import { vatByRate, vatLine, vatOfGross } from './vat';
 
@@ -19,6 +19,7 @@ test('an amount is written with its sign, its thousands and two places', () => {
   expect(moneyWords(-467)).toBe('−£4.67');
   expect(moneyWords(123_456_789, 'EUR')).toBe('€1,234,567.89');
   expect(moneyWords(5, 'CHF')).toBe('CHF 0.05');
+  expect([decimalAmount(123_456), decimalAmount(-7)]).toEqual(['1234.56', '-0.07']);
 });
 
 test('VAT and net make the gross at any rate, and a refund carries the VAT its sale did', () => {

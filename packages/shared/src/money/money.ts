@@ -33,6 +33,12 @@ export function sumMoney(amounts: readonly Money[], currency: Currency): Money {
 
 const SIGNS: Partial<Record<Currency, string>> = { GBP: '£', EUR: '€' };
 
+/** An amount as a plain number with two decimals, for a file: 28.00, -4.67. */
+export function decimalAmount(pence: number): string {
+  const whole = Math.abs(wholePence(pence));
+  return `${pence < 0 ? '-' : ''}${Math.floor(whole / 100)}.${String(whole % 100).padStart(2, '0')}`;
+}
+
 /** An amount in words: £28.00, −£4.67, CHF 12.00. */
 export function moneyWords(pence: number, currency: Currency = 'GBP'): string {
   const whole = Math.abs(wholePence(pence));
