@@ -1,7 +1,6 @@
 import type { KrigingSetup } from './kriging-setup';
 import { requireDrift } from './kriging-setup';
-import { localCovariances } from './local-covariance';
-import { LocalSystem } from './local-system';
+import { PatchSystem } from './patch-system';
 import { OctantSearch } from './octant-search';
 import type { SampleIndex } from './sample-index';
 import { forEachBucketWithin, indexSamples } from './sample-index';
@@ -30,7 +29,7 @@ export function krigeBlended(setup: KrigingSetup, targets: Targets): Float64Arra
   const sideM = patchSideM(index);
   const binned = binTargets(targets, sideM);
   const members = new Members(index, sideM);
-  const local = new LocalSystem(setup, MOST_MEMBERS, localCovariances(setup.variogram, index));
+  const patch = new PatchSystem(setup, MOST_MEMBERS);
   const valuesM = new Float64Array(targets.xM.length);
   for (let row = 0; row <= binned.rows; row++) {
     for (let column = 0; column <= binned.columns; column++) {
@@ -39,14 +38,13 @@ export function krigeBlended(setup: KrigingSetup, targets: Targets): Float64Arra
       const cells = cellsRound(binned, column, row);
       if (cells.length === 0) continue;
       members.find(x, y);
-      local.gather(members.ids, members.found);
-      local.toDual();
+      patch.solve(members.ids, members.found);
       for (const cell of cells) {
         for (let m = binned.starts[cell]!; m < binned.starts[cell + 1]!; m++) {
           const t = binned.members[m]!;
           const [tx, ty] = [targets.xM[t]!, targets.yM[t]!];
           const weight = rise(1 - Math.abs(tx - x) / sideM) * rise(1 - Math.abs(ty - y) / sideM);
-          if (weight > 0) valuesM[t] = valuesM[t]! + weight * local.valueAt(tx, ty, targets.driftM?.[t] ?? 0);
+          if (weight > 0) valuesM[t] = valuesM[t]! + weight * patch.valueAt(tx, ty, targets.driftM?.[t] ?? 0);
         }
       }
     }

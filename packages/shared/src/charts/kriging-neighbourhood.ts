@@ -1,12 +1,12 @@
-import { requireDrift } from './kriging-setup';
+import { priorVarianceM2, requireDrift } from './kriging-setup';
 import type { KrigingSetup, Prediction } from './kriging-setup';
-import { localCovariances } from './local-covariance';
-import { LocalSystem } from './local-system';
+import { GROUP_MOST, GroupSystem } from './group-system';
 import { NearestSet } from './nearest-set';
 import { OctantSearch } from './octant-search';
 import { indexSamples } from './sample-index';
 import type { SampleIndex } from './sample-index';
 import type { SamplePoints, Targets } from './sample-points';
+import { groupTargets } from './target-groups';
 
 export type NeighbourhoodOptions = {
   neighbours: number;
@@ -21,8 +21,8 @@ export type NeighbourhoodOptions = {
 
 /**
  * Kriging from k samples round each target, the nearest or by octant. Because it uses a subset of the samples, its variance is never below
- * that of the global solve with the same variogram. The factor of a neighbourhood is kept while the next target has the
- * same neighbours, which is the common case along a row of a fine grid.
+ * that of the global solve with the same variogram. Targets close together are kriged in company, for
+ * most of their neighbours are the same.
  */
 export function krigeNeighbourhood(
   setup: KrigingSetup,
@@ -71,25 +71,65 @@ export function krigeRows(setup: KrigingSetup, targets: Targets, rows: Neighbour
 }
 
 type Found = { readonly ids: Int32Array; readonly found: number };
+type Neighbours = { most: number; index: SampleIndex; of: (t: number) => Found };
 
-function krigeEach(
-  setup: KrigingSetup,
-  targets: Targets,
-  neighbours: { most: number; index: SampleIndex; of: (t: number) => Found },
-): Prediction {
+/** Targets within this share of a neighbourhood's reach have most of their neighbours in common. */
+const TOGETHER = 0.51;
+
+function krigeEach(setup: KrigingSetup, targets: Targets, neighbours: Neighbours): Prediction {
   requireDrift(setup, targets);
   const count = targets.xM.length;
-  const valuesM = new Float64Array(count);
-  const varianceM2 = new Float64Array(count);
-  const local = new LocalSystem(setup, neighbours.most, localCovariances(setup.variogram, neighbours.index));
-  for (let t = 0; t < count; t++) {
-    const { ids, found } = neighbours.of(t);
-    local.gather(ids, found);
-    local.predict(targets.xM[t]!, targets.yM[t]!, targets.driftM?.[t] ?? 0);
-    valuesM[t] = local.valueM;
-    varianceM2[t] = local.varianceM2;
+  const made = { valuesM: new Float64Array(count), varianceM2: new Float64Array(count) };
+  const { most, index } = neighbours;
+  const system = new GroupSystem(setup, most, index);
+  const { starts, members } = groupTargets(targets, TOGETHER * reachM(index, most), GROUP_MOST);
+  const work = { setup, targets, neighbours, system, made };
+  for (let g = 0; g + 1 < starts.length; g++) {
+    const group = members.subarray(starts[g]!, starts[g + 1]!);
+    if (!krigeGroup(work, group, 0)) for (const t of group) krigeAlone(work, t);
   }
-  return { valuesM, varianceM2 };
+  return made;
+}
+
+/** How far the neighbours of a place lie at most, on average, metres. */
+function reachM({ xM, columns, rows, bucketM }: SampleIndex, most: number): number {
+  return Math.sqrt((columns * rows * bucketM ** 2 * most) / (Math.PI * xM.length));
+}
+
+type Work = {
+  setup: KrigingSetup;
+  targets: Targets;
+  neighbours: Neighbours;
+  system: GroupSystem;
+  made: Prediction;
+};
+
+function krigeGroup(work: Work, group: Int32Array, jitterM2: number): boolean {
+  const { targets, neighbours, system, made } = work;
+  system.begin();
+  for (let i = 0; i < group.length; i++) {
+    const t = group[i]!;
+    const { ids, found } = neighbours.of(t);
+    if (!system.add({ x: targets.xM[t]!, y: targets.yM[t]! }, ids, found)) return false;
+  }
+  if (!system.prepare(jitterM2)) return false;
+  for (let i = 0; i < group.length; i++) {
+    const t = group[i]!;
+    if (!system.predict(i, targets.driftM?.[t] ?? 0)) return false;
+    made.valuesM[t] = system.valueM;
+    made.varianceM2[t] = system.varianceM2;
+  }
+  return true;
+}
+
+/** A target that could not be kriged in company: by itself, with the least jitter that makes its system solvable. */
+function krigeAlone(work: Work, t: number): void {
+  const priorM2 = priorVarianceM2(work.setup);
+  const group = Int32Array.of(t);
+  if (krigeGroup(work, group, 0)) return;
+  for (let jitterM2 = 1e-10 * priorM2; jitterM2 <= priorM2; jitterM2 *= 100)
+    if (krigeGroup(work, group, jitterM2)) return;
+  throw new RangeError('Samples at one place with no error stated cannot be kriged.');
 }
 
 function searchOf({ xM, yM }: SamplePoints, options: NeighbourhoodOptions) {

@@ -9,6 +9,8 @@ export type SampleIndex = {
   rows: number;
   starts: Int32Array; // length columns × rows + 1
   members: Int32Array; // sample numbers, bucket by bucket, ascending within each
+  memberXM: Float64Array; // their places in that order, so that a scan reads straight on
+  memberYM: Float64Array;
 };
 
 const SAMPLES_A_BUCKET = 3;
@@ -32,12 +34,17 @@ export function indexSamples(xM: Float64Array, yM: Float64Array): SampleIndex {
   for (let b = 1; b < starts.length; b++) starts[b] = starts[b]! + starts[b - 1]!;
   const next = starts.slice();
   const members = new Int32Array(count);
+  const memberXM = new Float64Array(count);
+  const memberYM = new Float64Array(count);
   for (let i = 0; i < count; i++) {
     const bucket = bucketOf[i]!;
-    members[next[bucket]!] = i;
-    next[bucket] = next[bucket]! + 1;
+    const m = next[bucket]!;
+    members[m] = i;
+    memberXM[m] = xM[i]!;
+    memberYM[m] = yM[i]!;
+    next[bucket] = m + 1;
   }
-  return { xM, yM, westM, southM, bucketM, columns, rows, starts, members };
+  return { xM, yM, westM, southM, bucketM, columns, rows, starts, members, memberXM, memberYM };
 }
 
 type Within = { xM: number; yM: number; reachM: number };
@@ -134,13 +141,13 @@ export class NearestSearch {
   }
 
   private scanBucket(x: number, y: number, bucket: number): void {
-    const { xM, yM, starts, members } = this.index;
+    const { memberXM, memberYM, starts, members } = this.index;
     const { ids, squaredM2, count, apartM2, apartBelow } = this;
     for (let m = starts[bucket]!, end = starts[bucket + 1]!; m < end; m++) {
       const id = members[m]!;
       if (id === this.without) continue;
-      const dx = xM[id]! - x;
-      const dy = yM[id]! - y;
+      const dx = memberXM[m]! - x;
+      const dy = memberYM[m]! - y;
       const d2 = dx * dx + dy * dy;
       if (d2 < apartM2 && id < apartBelow) continue;
       let slot = this.found;

@@ -1,3 +1,4 @@
+import { decay } from './decay';
 import { forEachBucketWithin, indexSamples } from './sample-index';
 import type { SamplePoints } from './sample-points';
 
@@ -121,36 +122,46 @@ export function semivariance(variogram: Variogram, hM: number): number {
   return nuggetM2 + partialSillM2 * (1 - correlation(model, rangeM, hM));
 }
 
-/**
- * Turns squared distances (m²) held in the first `count` places into covariances without nugget, in place. One loop a model, so
- * that the choice is made once and not at every pair.
- */
-export function covariancesInPlace(buffer: Float64Array, count: number, variogram: Variogram): void {
-  const { model, partialSillM2: sill, rangeM } = variogram;
+/** Turns squared distances (m²) held in places `from` up to `to` of a buffer into covariances without nugget, in place. */
+export type FillCovariances = (buffer: Float64Array, from: number, to: number) => void;
+
+/** One loop a model, so that the choice is made once and not at every pair. */
+export function covarianceFill({ model, partialSillM2: sill, rangeM }: Variogram): FillCovariances {
   const perRange = 1 / rangeM;
   switch (model) {
     case 'spherical':
-      for (let i = 0; i < count; i++) {
-        const u = Math.sqrt(buffer[i]!) * perRange;
-        buffer[i] = u >= 1 ? 0 : sill * (1 - u * (1.5 - 0.5 * u * u));
-      }
-      return;
+      return (buffer, from, to) => {
+        for (let i = from; i < to; i++) {
+          const u = Math.sqrt(buffer[i]!) * perRange;
+          buffer[i] = u >= 1 ? 0 : sill * (1 - u * (1.5 - 0.5 * u * u));
+        }
+      };
     case 'exponential':
-      for (let i = 0; i < count; i++) buffer[i] = sill * Math.exp(-Math.sqrt(buffer[i]!) * perRange);
-      return;
+      return (buffer, from, to) => {
+        for (let i = from; i < to; i++) buffer[i] = sill * decay(Math.sqrt(buffer[i]!) * perRange);
+      };
     case 'gaussian':
-      for (let i = 0; i < count; i++) buffer[i] = sill * Math.exp(-buffer[i]! * perRange * perRange);
-      return;
+      return (buffer, from, to) => {
+        for (let i = from; i < to; i++) buffer[i] = sill * decay(buffer[i]! * perRange * perRange);
+      };
     case 'matern32':
-      for (let i = 0; i < count; i++) {
-        const u = Math.sqrt(3 * buffer[i]!) * perRange;
-        buffer[i] = sill * (1 + u) * Math.exp(-u);
-      }
-      return;
+      return (buffer, from, to) => {
+        for (let i = from; i < to; i++) {
+          const u = Math.sqrt(3 * buffer[i]!) * perRange;
+          buffer[i] = sill * (1 + u) * decay(u);
+        }
+      };
     case 'matern52':
-      for (let i = 0; i < count; i++) {
-        const u = Math.sqrt(5 * buffer[i]!) * perRange;
-        buffer[i] = sill * (1 + u * (1 + u / 3)) * Math.exp(-u);
-      }
+      return (buffer, from, to) => {
+        for (let i = from; i < to; i++) {
+          const u = Math.sqrt(5 * buffer[i]!) * perRange;
+          buffer[i] = sill * (1 + u * (1 + u / 3)) * decay(u);
+        }
+      };
   }
+}
+
+/** The same of the first `count` places, asked for once. */
+export function covariancesInPlace(buffer: Float64Array, count: number, variogram: Variogram): void {
+  covarianceFill(variogram)(buffer, 0, count);
 }
