@@ -9,6 +9,7 @@ import type { CastSite, Refusal } from '@mereward/shared/surveys/cast-site';
 import type { CastObservation, Kit } from '@mereward/shared/surveys/contract';
 import { ellipse95 } from '@mereward/shared/surveys/covariance';
 import { UNREAD_DEPTH } from '@mereward/shared/surveys/error-budget';
+import { NOTHING_FELT } from '@mereward/shared/surveys/nothing-felt';
 import { spotPlace } from '@mereward/shared/surveys/spot-place';
 import type { Ctx } from '../ctx';
 import { watersOf } from '../lakes/peg-waters';
@@ -98,17 +99,8 @@ function observationOf(
     remainderStated: remainderM > 0,
     lineText: '',
     rodElevationDeg: kit.rodElevationDeg,
-    drop: null,
-    dropCountS: null,
-    drag: null,
-    dragLengthM: null,
-    cameBack: null,
-    smell: null,
-    pulls: null,
-    pullsAgain: null,
-    floatSight: null,
+    ...NOTHING_FELT,
     flags: [],
-    note: '',
   };
 }
 

@@ -14,6 +14,7 @@ import {
 } from '../surveys/contract';
 import { ELLIPSE_95, ellipse95 } from '../surveys/covariance';
 import { UNREAD_DEPTH } from '../surveys/error-budget';
+import { NOTHING_FELT } from '../surveys/nothing-felt';
 import { spotPlace } from '../surveys/spot-place';
 import { USUAL_SPACING_M } from '../units/wraps';
 import type { Found, FoundAt, Remeasured } from './disagreement';
@@ -70,17 +71,8 @@ function observationOf({ markId, offsetDeg, wrapsWhole, remainderM }: Count): Ca
     remainderStated: remainderM > 0,
     lineText: '',
     rodElevationDeg: 0,
-    drop: null,
-    dropCountS: null,
-    drag: null,
-    dragLengthM: null,
-    cameBack: null,
-    smell: null,
-    pulls: null,
-    pullsAgain: null,
-    floatSight: null,
+    ...NOTHING_FELT,
     flags: [],
-    note: '',
   };
 }
 

@@ -1,4 +1,5 @@
 import type { VisitView } from '@mereward/shared/surveys/contract';
+import { NOTHING_FELT } from '@mereward/shared/surveys/nothing-felt';
 import { describe, expect, test } from 'vitest';
 import type { OutboxEntry } from '@/lib/outbox-event';
 import { handOver, LARGEST_BYTES, mayBeHandedOver, takenOver, type HandOver } from './handed-over';
@@ -49,17 +50,8 @@ const observation = {
   remainderStated: true,
   lineText: '14',
   rodElevationDeg: 0,
-  drop: null,
-  dropCountS: null,
-  drag: null,
-  dragLengthM: null,
-  cameBack: null,
-  smell: null,
-  pulls: null,
-  pullsAgain: null,
-  floatSight: null,
+  ...NOTHING_FELT,
   flags: [],
-  note: '',
 };
 const reduced = { ok: false as const, reason: 'not worked out', remedy: '', steps: [] };
 

@@ -1,4 +1,5 @@
 import type { CastView, Grade } from '@mereward/shared/surveys/contract';
+import { NOTHING_FELT } from '@mereward/shared/surveys/nothing-felt';
 import { expect, test } from 'vitest';
 import { kitEffect } from './kit-effect';
 
@@ -12,17 +13,8 @@ const observation: CastView['observation'] = {
   remainderStated: true,
   lineText: '10 + 0 ft',
   rodElevationDeg: 0,
-  drop: null,
-  dropCountS: null,
-  drag: null,
-  dragLengthM: null,
-  cameBack: null,
-  smell: null,
-  pulls: null,
-  pullsAgain: null,
-  floatSight: null,
+  ...NOTHING_FELT,
   flags: [],
-  note: '',
 };
 
 function aCast(seq: number, place: Place | null): CastView {

@@ -1,4 +1,5 @@
 import type { CastView, VisitView, VisitWithCasts } from '@mereward/shared/surveys/contract';
+import { NOTHING_FELT } from '@mereward/shared/surveys/nothing-felt';
 import { expect, test } from 'vitest';
 import { kitToStartFrom, kitOf, KitDraft } from './kit-draft';
 import { openedHere, visitShown, visitsShown } from './shown-visit';
@@ -48,17 +49,8 @@ const cast = (n: number, seq: number): CastView => ({
     remainderStated: true,
     lineText: '14',
     rodElevationDeg: 0,
-    drop: null,
-    dropCountS: null,
-    drag: null,
-    dragLengthM: null,
-    cameBack: null,
-    smell: null,
-    pulls: null,
-    pullsAgain: null,
-    floatSight: null,
+    ...NOTHING_FELT,
     flags: [],
-    note: '',
   },
   reduced: FAILED,
 });
