@@ -53,22 +53,24 @@ export function sunTimes(day: string, place: readonly [number, number], zone: st
   const from = startOfDay(day, zone).getTime();
   const until = startOfDay(addDays(day, 1), zone).getTime();
   const altitude = (at: number): number => sunAltitudeDeg(new Date(at), place);
+  const times = Array.from({ length: Math.ceil((until - from) / STEP_MS) + 1 }, (_, step) =>
+    Math.min(from + step * STEP_MS, until),
+  );
+  const altitudes = times.map(altitude);
   const crossings = (level: number): { up: Date | null; down: Date | null } => {
     let up: Date | null = null;
     let down: Date | null = null;
-    let last = altitude(from) - level;
-    for (let start = from; start < until; start += STEP_MS) {
-      const end = Math.min(start + STEP_MS, until);
-      const next = altitude(end) - level;
-      if (last < 0 && next >= 0) up ??= crossing(start, end, (at) => altitude(at) - level);
-      if (last >= 0 && next < 0) down = crossing(start, end, (at) => level - altitude(at));
-      last = next;
+    for (let step = 1; step < times.length; step += 1) {
+      const [start = from, end = until] = [times[step - 1], times[step]];
+      const [last = level, next = level] = [altitudes[step - 1], altitudes[step]];
+      if (last < level && next >= level) up ??= crossing(start, end, (at) => altitude(at) - level);
+      if (last >= level && next < level) down = crossing(start, end, (at) => level - altitude(at));
     }
     return { up, down };
   };
   const sun = crossings(RISE_ALTITUDE_DEG);
   const twilight = crossings(TWILIGHT_ALTITUDE_DEG);
-  const still = altitude(from) >= RISE_ALTITUDE_DEG ? 'always_up' : 'never_up';
+  const still = (altitudes[0] ?? 0) >= RISE_ALTITUDE_DEG ? 'always_up' : 'never_up';
   return {
     dawn: twilight.up,
     sunrise: sun.up,
