@@ -1,4 +1,3 @@
-import { Booking } from '@mereward/db/entities/bookings/booking';
 import {
   CastReading,
   ChartFeatures,
@@ -13,6 +12,7 @@ import { afterAll, beforeAll, describe, expect, test } from 'vitest';
 import { draftedChart, publishedChart } from '../support/charts';
 import { madeUpDepthM } from '../support/long-water';
 import { aPerson, aStranger, type Asker } from '../support/people';
+import { aTicket } from '../support/tickets';
 import { aServer, type TestServer } from '../support/server';
 import { aLongWater, aSurvey, type TestWater } from '../support/surveys';
 import { aFishery, aPeg, type TestFishery, type TestPeg } from '../support/waters';
@@ -277,15 +277,7 @@ describe('the same spot from here', () => {
     expect([await statusOf(own), await statusOf(others)]).toEqual([404, 404]);
     const hoursOff = (hours: number) =>
       new Date(server.server.clock().getTime() + hours * 3_600_000).toISOString();
-    await server.server.source.manager.insert(Booking, {
-      id: randomUUID(),
-      pegId: water.peg.id,
-      accountId: angler.id,
-      during: `[${hoursOff(-2)},${hoursOff(2)})`,
-      status: 'confirmed',
-      writtenBy: here.people.office.id,
-      writtenAt: server.server.clock(),
-    });
+    await aTicket(server, { pegId: water.peg.id, holder: angler, from: hoursOff(-2), until: hoursOff(2) });
     expect([await statusOf(own), await statusOf(others)]).toEqual([200, 404]);
   });
 

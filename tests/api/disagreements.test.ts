@@ -6,7 +6,6 @@ import {
   DisagreementView,
   type Disagree,
 } from '@mereward/shared/charts/disagreement';
-import { Booking } from '@mereward/db/entities/bookings/booking';
 import { Lake } from '@mereward/db/entities/lakes/lake';
 import { ProblemBody } from '@mereward/shared/problems/problem';
 import { VisitWithCasts } from '@mereward/shared/surveys/contract';
@@ -14,6 +13,7 @@ import { randomUUID } from 'node:crypto';
 import { afterAll, beforeAll, describe, expect, test } from 'vitest';
 import { draftedChart, publishedChart } from '../support/charts';
 import { aSurveyGround } from '../support/grounds';
+import { aTicket } from '../support/tickets';
 import { aPerson, aStranger, type Person } from '../support/people';
 import type { TestServer } from '../support/server';
 import { aSurvey, type TestWater } from '../support/surveys';
@@ -47,14 +47,11 @@ beforeAll(async () => {
   const details = { name: 'The bar', position: cast.reduced.sounding.position, usableRadiusM: 1, note: '' };
   await joan.put(`/pegs/${water.peg.id}/spots/${spotId}`).send({ details, version: null });
   sofia = await aPerson(server, { name: 'Sofia Marsh' });
-  await server.server.source.manager.insert(Booking, {
-    id: randomUUID(),
+  await aTicket(server, {
     pegId: water.peg.id,
-    accountId: sofia.id,
-    during: `[${DAY}T06:00:00Z,2027-07-18T06:00:00Z)`,
-    status: 'confirmed',
-    writtenBy: here.people.office.id,
-    writtenAt: server.server.clock(),
+    holder: sofia,
+    from: `${DAY}T06:00:00Z`,
+    until: '2027-07-18T06:00:00Z',
   });
   await aReading(server, water.board, { levelM: 0.38, at: `${DAY}T05:00:00Z` });
   server.setNow(`${DAY}T15:00:00Z`);

@@ -2,7 +2,6 @@ import { ChartReview, ChartView, PegPageView, SectionView, SpotKept } from '@mer
 import { layersFor } from '@mereward/api/charts/chart-view';
 import { chartContent } from '@mereward/api/charts/chart-layers';
 import { ProblemBody } from '@mereward/shared/problems/problem';
-import { Booking } from '@mereward/db/entities/bookings/booking';
 import { Lake } from '@mereward/db/entities/lakes/lake';
 import { Audience, type LayerAudiences } from '@mereward/shared/lakes/contract';
 import { randomUUID } from 'node:crypto';
@@ -11,6 +10,7 @@ import { afterAll, beforeAll, describe, expect, test } from 'vitest';
 import { z } from 'zod';
 import { publishedChart } from '../support/charts';
 import { aSurveyGround } from '../support/grounds';
+import { aTicket } from '../support/tickets';
 import { aPerson, aStranger, type Asker, type Person } from '../support/people';
 import type { TestServer } from '../support/server';
 import { aSurvey, type TestWater } from '../support/surveys';
@@ -46,7 +46,7 @@ beforeAll(async () => {
   await joan
     .put(`/pegs/${water.peg.id}/spots/${spotId}`)
     .send({ details: spotAt(cast.reduced.sounding.position), version: null });
-  await aTicket(sofia, '2027-07-17T06:00:00Z', '2027-07-18T06:00:00Z');
+  await ticketFor(sofia, '2027-07-17T06:00:00Z', '2027-07-18T06:00:00Z');
   await aReading(server, water.board, { levelM: 0.38, at: '2027-07-17T05:00:00Z' });
 });
 afterAll(() => server.close());
@@ -57,17 +57,8 @@ const pageFor = async (reader: Asker) =>
   PegPageView.parse((await reader.get(`/pegs/${water.peg.id}/page`)).body);
 const chartFor = async (reader: Asker) => ChartView.parse((await reader.get(`/charts/${chartId}`)).body);
 
-async function aTicket(person: Person, from: string, until: string): Promise<void> {
-  await server.server.source.manager.insert(Booking, {
-    id: randomUUID(),
-    pegId: water.peg.id,
-    accountId: person.id,
-    during: `[${from},${until})`,
-    status: 'confirmed',
-    writtenBy: here.people.office.id,
-    writtenAt: server.server.clock(),
-  });
-}
+const ticketFor = (holder: Person, from: string, until: string): Promise<string> =>
+  aTicket(server, { pegId: water.peg.id, holder, from, until });
 
 async function setAudiences(audiences: LayerAudiences): Promise<void> {
   const lake = await server.server.source.manager.findOneByOrFail(Lake, { id: water.lake.id });

@@ -2,7 +2,6 @@
  * A peg surveyed, its chart published by another, and read at another level: the whole way with exact figures. Expected
  * values are worked by hand: 7.5 × 0.3048 + 0.25 = 2.536 m; 14 × 3.6576 = 51.206 m; ranges from the slant triangle.
  */
-import { Booking } from '@mereward/db/entities/bookings/booking';
 import { ChartReview, PegPageView } from '@mereward/shared/charts/contract';
 import { ProblemBody } from '@mereward/shared/problems/problem';
 import type { CastObservation, CastView, SoundingView } from '@mereward/shared/surveys/contract';
@@ -12,6 +11,7 @@ import { afterAll, beforeAll, expect, test } from 'vitest';
 import { draftedChart } from '../support/charts';
 import { aKit } from '../support/kit';
 import { aPerson, aStranger, type Person } from '../support/people';
+import { aTicket } from '../support/tickets';
 import { aServer, type TestServer } from '../support/server';
 import { aFan } from '../support/long-water';
 import { aLongWater, closedVisit, keptCast, openedVisit, type TestWater } from '../support/surveys';
@@ -158,14 +158,11 @@ test('on 17 July at 0.38 Sofia, with a ticket on FO7, reads the depth today besi
   const sofia = await aPerson(server, { name: 'Sofia Marsh' });
   await aReading(server, water.board, { levelM: 0.38, at: '2027-07-17T06:00:00Z' });
   server.setNow('2027-07-17T09:00:00Z');
-  await server.server.source.manager.insert(Booking, {
-    id: randomUUID(),
+  await aTicket(server, {
     pegId: water.peg.id,
-    accountId: sofia.id,
-    during: '[2027-07-17T06:00:00Z,2027-07-18T06:00:00Z)',
-    status: 'confirmed',
-    writtenBy: ostlemere.people.office.id,
-    writtenAt: server.server.clock(),
+    holder: sofia,
+    from: '2027-07-17T06:00:00Z',
+    until: '2027-07-18T06:00:00Z',
   });
   const read = async (reader: Pick<Person, 'get'>) =>
     PegPageView.parse((await reader.get(`/pegs/${water.peg.id}/page`)).body);

@@ -16,6 +16,25 @@ import { WaterArea } from './entities/lakes/water-area';
 import { LakePicture } from './entities/lakes/lake-picture';
 import { Photo } from './entities/files/photo';
 import { Booking } from './entities/bookings/booking';
+import { BookingEvent } from './entities/bookings/booking-event';
+import { CalendarFeed } from './entities/bookings/calendar-feed';
+import { ClosureChoice } from './entities/bookings/closure-choice';
+import { PegBlock } from './entities/bookings/peg-block';
+import { PegTime } from './entities/bookings/peg-time';
+import { WaitingEntry } from './entities/bookings/waiting-entry';
+import { Closure } from './entities/closures/closure';
+import { Notice } from './entities/notices/notice';
+import { Dispute } from './entities/payments/dispute';
+import { LedgerDeed } from './entities/payments/ledger-deed';
+import { LedgerPosting } from './entities/payments/ledger-posting';
+import { Payment } from './entities/payments/payment';
+import { ProviderEvent } from './entities/payments/provider-event';
+import { Receipt } from './entities/payments/receipt';
+import { Refund } from './entities/payments/refund';
+import { RuleAcknowledgement } from './entities/rules/rule-acknowledgement';
+import { RuleSheet } from './entities/rules/rule-sheet';
+import { LettingTermsRow } from './entities/bookings/letting-terms';
+import { TicketType } from './entities/tickets/ticket-type';
 import { SurveyVisit } from './entities/surveys/survey-visit';
 import { BottomEvent } from './entities/surveys/bottom-event';
 import { BottomTable } from './entities/surveys/bottom-table';
@@ -43,6 +62,9 @@ import { WaterAreas1780000007000 } from './migrations/1780000007000-WaterAreas';
 import { SoundingLogs1780000005000 } from './migrations/1780000005000-SoundingLogs';
 import { LakePictures1780000010000 } from './migrations/1780000010000-LakePictures';
 import { ChartLeftOut1780000013000 } from './migrations/1780000013000-ChartLeftOut';
+import { TicketsAndPegTime1780000020000 } from './migrations/1780000020000-TicketsAndPegTime';
+import { PaymentsAndLedger1780000021000 } from './migrations/1780000021000-PaymentsAndLedger';
+import { RulesNoticesAndWaiting1780000022000 } from './migrations/1780000022000-RulesNoticesAndWaiting';
 
 const ENTITIES = [
   Account,
@@ -60,7 +82,26 @@ const ENTITIES = [
   WaterArea,
   LakePicture,
   Photo,
+  TicketType,
+  LettingTermsRow,
+  RuleSheet,
+  RuleAcknowledgement,
+  Closure,
+  Notice,
   Booking,
+  BookingEvent,
+  PegTime,
+  PegBlock,
+  ClosureChoice,
+  WaitingEntry,
+  CalendarFeed,
+  Payment,
+  ProviderEvent,
+  Refund,
+  Dispute,
+  LedgerDeed,
+  LedgerPosting,
+  Receipt,
   SurveyVisit,
   CastImport,
   SurveyCast,
@@ -92,6 +133,9 @@ const MIGRATIONS = [
   SoundingLogs1780000005000,
   LakePictures1780000010000,
   ChartLeftOut1780000013000,
+  TicketsAndPegTime1780000020000,
+  PaymentsAndLedger1780000021000,
+  RulesNoticesAndWaiting1780000022000,
 ];
 
 /** A pool of connections to one database, opened by the caller with `initialize()`. */

@@ -10,7 +10,8 @@ const SELECT = `
   SELECT b.id, p.id AS "pegId", p.number AS "pegNumber", l.name AS "lakeName", f.name AS "fisheryName", f.zone,
          lower(b.during) AS "from", upper(b.during) AS until, a.name AS holder
     FROM booking b
-    JOIN peg p ON p.id = b.peg_id
+    JOIN peg_time t ON t.booking_id = b.id
+    JOIN peg p ON p.id = t.peg_id
     JOIN lake l ON l.id = p.lake_id
     JOIN fishery f ON f.id = l.fishery_id
     JOIN account a ON a.id = b.account_id`;
@@ -40,7 +41,7 @@ export async function ticketsOfPeg({ tx, actor, now }: Ctx, pegId: string): Prom
   allowOnly(actor, { fisheryId: lake.fisheryId, what: 'peg' }, [...TICKET_WRITERS, ...TICKET_CHECKERS]);
   const writes = holdsAny(actor, lake.fisheryId, TICKET_WRITERS);
   const rows: Row[] = await tx.query(
-    `${SELECT} WHERE b.peg_id = $1 AND b.status = 'confirmed'
+    `${SELECT} WHERE t.peg_id = $1 AND b.status = 'confirmed'
         AND b.during && tstzrange($2::timestamptz - make_interval(days => $3), $2::timestamptz + make_interval(days => $4))
       ORDER BY lower(b.during), b.id`,
     writes ? [pegId, now, 31, 3660] : [pegId, now, 1, 1],

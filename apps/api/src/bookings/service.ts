@@ -3,7 +3,8 @@ import { Fishery } from '@mereward/db/entities/fisheries/fishery';
 import type { Lake } from '@mereward/db/entities/lakes/lake';
 import type { Peg } from '@mereward/db/entities/lakes/peg';
 import { Booking } from '@mereward/db/entities/bookings/booking';
-import type { WriteTicket } from '@mereward/shared/bookings/contract';
+import { USUAL_CANCELLATION } from '@mereward/shared/bookings/cancellation';
+import type { BookingDetails, WriteTicket } from '@mereward/shared/bookings/contract';
 import { whyNotLet } from '@mereward/shared/lakes/peg-rules';
 import { Problem } from '@mereward/shared/problems/problem';
 import { civilDay } from '@mereward/shared/time/civil-day';
@@ -12,6 +13,7 @@ import { accountOf, holdsAny, type Ctx } from '../ctx';
 import { allowOnly, notFound } from '../http/deny';
 import { findPeg } from '../lakes/found';
 import { mustRepeat } from '../repeat';
+import { freePegs, takePegs } from './peg-calendar';
 import { TICKET_WRITERS } from './policy';
 
 const LONGEST_MS = 31 * 86_400_000;
@@ -34,11 +36,22 @@ export async function writeTicket(ctx: Ctx, pegId: string, input: WriteTicket): 
   const written = { id: input.id, pegId, accountId: holder.id, ...times, writtenBy: accountOf(actor) };
   if (await isRepeat(tx, written)) return;
   await refuseUnlet(ctx, { peg, lake }, times);
-  if (await insertTicket(tx, written, now)) return;
-  if (await isRepeat(tx, written)) return;
-  throw new Problem('conflict', `Peg ${peg.number} is let already for part of that time`, {
-    detail: 'Nothing was written. Choose another time or another peg.',
+  const { zone } = await tx.findOneByOrFail(Fishery, { id: lake.fisheryId });
+  const details = lodgeDetails(civilDay(times.from, zone));
+  if (!(await insertTicket(tx, { ...written, holder, lake, details }, now)) && (await isRepeat(tx, written)))
+    return;
+  const taken = await takePegs(tx, {
+    bookingId: input.id,
+    lakeId: lake.id,
+    ...times,
+    turnaroundMinutes: 0,
+    state: 'taken',
+    pegs: [{ pegId, people: 1, rods: 1 }],
   });
+  if (taken.length > 0)
+    throw new Problem('conflict', `Peg ${peg.number} is let already for part of that time`, {
+      detail: 'Nothing was written. Choose another time or another peg.',
+    });
 }
 
 type Times = { from: Date; until: Date };
@@ -77,33 +90,64 @@ async function refuseUnlet({ tx }: Ctx, at: { peg: Peg; lake: Lake }, { from, un
     refuse(`There is no night fishing on ${at.lake.name}: a ticket ends on the day it starts`);
 }
 
-/** Inserts unless an overlapping ticket or the same id is there: a plain insert against an exclusion can deadlock. */
-async function insertTicket(tx: EntityManager, written: Written, now: Date): Promise<boolean> {
+/** What a ticket written at the lodge tells of itself: no type, no price. `day` is its first at the fishery. */
+export const lodgeDetails = (day: string): BookingDetails => ({
+  ticketName: 'Ticket from the lodge',
+  day,
+  start: null,
+  tickets: [],
+  lines: [],
+  turnaroundMinutes: 0,
+  cancellation: USUAL_CANCELLATION,
+  guardian: null,
+  vehicle: '',
+  emergencyContact: '',
+  licence: null,
+  note: '',
+});
+
+type Ticket = Written & { holder: Account; lake: Lake; details: BookingDetails };
+
+/** Inserts unless the same id is there. */
+async function insertTicket(tx: EntityManager, ticket: Ticket, now: Date): Promise<boolean> {
   const rows: unknown[] = await tx.query(
-    `INSERT INTO booking (id, peg_id, account_id, during, status, written_by, written_at)
-     VALUES ($1, $2, $3, tstzrange($4, $5, '[)'), 'confirmed', $6, $7)
+    `INSERT INTO booking (id, fishery_id, lake_id, account_id, holder_name, holder_email, during, status, people, rods,
+                          gross_pence, currency, source, details, written_by, written_at)
+     VALUES ($1, $2, $3, $4, $5, $6, tstzrange($7, $8, '[)'), 'confirmed', 1, 1, 0, 'GBP', 'office', $9, $10, $11)
      ON CONFLICT DO NOTHING RETURNING id`,
-    [written.id, written.pegId, written.accountId, written.from, written.until, written.writtenBy, now],
+    [
+      ticket.id,
+      ticket.lake.fisheryId,
+      ticket.lake.id,
+      ticket.accountId,
+      ticket.holder.name,
+      ticket.holder.email,
+      ticket.from,
+      ticket.until,
+      ticket.details,
+      ticket.writtenBy,
+      now,
+    ],
   );
   return rows.length === 1;
 }
 
 async function isRepeat(tx: EntityManager, written: Written): Promise<boolean> {
   const rows: (Written & { status: Booking['status'] })[] = await tx.query(
-    `SELECT status, id, peg_id AS "pegId", account_id AS "accountId", lower(during) AS "from", upper(during) AS until,
-            written_by AS "writtenBy"
-       FROM booking WHERE id = $1`,
+    `SELECT b.status, b.id, t.peg_id AS "pegId", b.account_id AS "accountId", lower(b.during) AS "from",
+            upper(b.during) AS until, b.written_by AS "writtenBy"
+       FROM booking b LEFT JOIN peg_time t ON t.booking_id = b.id WHERE b.id = $1`,
     [written.id],
   );
   const [found] = rows;
   if (!found) return false;
   const { status, ...kept } = found;
-  if (kept.pegId !== written.pegId) throw notFound('ticket');
-  mustRepeat({ by: written.writtenBy, content: written }, { by: kept.writtenBy, content: kept });
-  if (status === 'cancelled')
+  if (kept.writtenBy === written.writtenBy && status !== 'confirmed')
     throw new Problem('conflict', 'This ticket was cancelled', {
       detail: 'Write a new one if it is wanted.',
     });
+  if (kept.pegId !== written.pegId) throw notFound('ticket');
+  mustRepeat({ by: written.writtenBy, content: written }, { by: kept.writtenBy, content: kept });
   return true;
 }
 
@@ -111,14 +155,19 @@ async function isRepeat(tx: EntityManager, written: Written): Promise<boolean> {
 export async function cancelTicket({ tx, actor, now }: Ctx, bookingId: string): Promise<void> {
   const accountId = accountOf(actor);
   const booking = await tx.findOneBy(Booking, { id: bookingId });
-  if (!booking || booking.status === 'cancelled') throw notFound('ticket');
-  const { lake } = await findPeg(tx, booking.pegId);
-  if (!holdsAny(actor, lake.fisheryId, TICKET_WRITERS)) {
+  if (booking?.status !== 'confirmed') throw notFound('ticket');
+  const forOthers = holdsAny(actor, booking.fisheryId, TICKET_WRITERS);
+  if (!forOthers) {
     if (booking.accountId !== accountId) throw notFound('ticket');
     if (!(await isAhead(tx, bookingId, now)))
       throw new Problem('forbidden', 'This ticket has started', { detail: 'Ask the fishery’s office.' });
   }
-  await tx.update(Booking, { id: bookingId, status: 'confirmed' }, { status: 'cancelled' });
+  await tx.update(
+    Booking,
+    { id: bookingId, status: 'confirmed' },
+    { status: forOthers ? 'cancelled_by_fishery' : 'cancelled_by_angler' },
+  );
+  await freePegs(tx, bookingId);
 }
 
 async function isAhead(tx: EntityManager, bookingId: string, now: Date): Promise<boolean> {

@@ -94,9 +94,9 @@ async function refuseOutsiders(ctx: Ctx, { peg, lake }: Ground, day: string): Pr
   if (isMember(actor, lake.fisheryId)) return;
   const { zone } = await tx.findOneByOrFail(Fishery, { id: lake.fisheryId });
   const rows: unknown[] = await tx.query(
-    `SELECT 1 FROM booking
-      WHERE account_id = $1 AND peg_id = $2 AND status = 'confirmed' AND lower(during) <= $5
-        AND during && tstzrange(($3::date)::timestamp AT TIME ZONE $4, ($3::date + 1)::timestamp AT TIME ZONE $4)
+    `SELECT 1 FROM booking b JOIN peg_time t ON t.booking_id = b.id
+      WHERE b.account_id = $1 AND t.peg_id = $2 AND b.status IN ('confirmed', 'checked_in', 'completed')
+        AND lower(b.during) <= $5 AND b.during && tstzrange(($3::date)::timestamp AT TIME ZONE $4, ($3::date + 1)::timestamp AT TIME ZONE $4)
       LIMIT 1`,
     [accountOf(actor), peg.id, day, zone, now],
   );

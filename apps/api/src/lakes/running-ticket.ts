@@ -7,8 +7,8 @@ export type RunningTicket = { from: Date; until: Date };
 // Tickets are the bookings' own; here they are only read, since what may be seen of a lake hangs on them.
 const RUNNING = `
   SELECT lower(b.during) AS "from", upper(b.during) AS until
-    FROM booking b JOIN peg p ON p.id = b.peg_id
-   WHERE b.account_id = $1 AND b.status = 'confirmed' AND b.during @> $2::timestamptz`;
+    FROM booking b JOIN peg_time t ON t.booking_id = b.id
+   WHERE b.account_id = $1 AND b.status IN ('confirmed', 'checked_in') AND b.during @> $2::timestamptz`;
 
 async function running(asked: Asked, where: string, id: string): Promise<RunningTicket | null> {
   const { tx, actor, now } = asked;
@@ -22,8 +22,8 @@ async function running(asked: Asked, where: string, id: string): Promise<Running
 
 /** The reader's own ticket for this peg that runs now, if there is one. */
 export const runningTicket = (asked: Asked, pegId: string): Promise<RunningTicket | null> =>
-  running(asked, 'b.peg_id = $3', pegId);
+  running(asked, 't.peg_id = $3', pegId);
 
 /** The reader's own ticket for any peg of this lake that runs now. */
 export const runningTicketAtLake = (asked: Asked, lakeId: string): Promise<RunningTicket | null> =>
-  running(asked, 'p.lake_id = $3', lakeId);
+  running(asked, 't.lake_id = $3', lakeId);

@@ -10,6 +10,7 @@ export const BookingState = z.enum([
   'confirmed',
   'checked_in',
   'completed',
+  'choosing', // a closure lies over it, and its angler has a choice to make
   'expired',
   'cancelled_by_angler',
   'cancelled_by_fishery',
@@ -21,8 +22,16 @@ export type BookingState = z.infer<typeof BookingState>;
 export const BOOKING_STEPS: Readonly<Record<BookingState, readonly BookingState[]>> = {
   hold: ['pending_payment', 'confirmed', 'expired', 'cancelled_by_angler', 'cancelled_by_fishery'],
   pending_payment: ['confirmed', 'expired', 'cancelled_by_angler', 'cancelled_by_fishery'],
-  confirmed: ['checked_in', 'completed', 'no_show', 'cancelled_by_angler', 'cancelled_by_fishery'],
-  checked_in: ['completed', 'cancelled_by_fishery'],
+  confirmed: [
+    'checked_in',
+    'completed',
+    'no_show',
+    'choosing',
+    'cancelled_by_angler',
+    'cancelled_by_fishery',
+  ],
+  checked_in: ['completed', 'choosing', 'cancelled_by_fishery'],
+  choosing: ['confirmed', 'cancelled_by_angler', 'cancelled_by_fishery'],
   no_show: ['checked_in', 'completed', 'cancelled_by_fishery'], // they came after all, or their time ran out
   completed: [],
   expired: [],
@@ -50,6 +59,7 @@ export const BOOKING_STATE_WORDS: Readonly<Record<BookingState, string>> = {
   confirmed: 'Confirmed',
   checked_in: 'On the bank',
   completed: 'Over',
+  choosing: 'Closed: choose what becomes of it',
   expired: 'Ran out before it was paid',
   cancelled_by_angler: 'Cancelled',
   cancelled_by_fishery: 'Cancelled by the fishery',

@@ -208,6 +208,7 @@ export const PegDetails = z.strictObject({
   }),
   people: z.int().min(1).max(20),
   rods: z.int().min(1).max(40),
+  letting: z.enum(['whole', 'by_place']).optional(), // by place: strangers may share it; absent: whole
   shelters: z.int().min(0).max(20),
   overheadLine: z.strictObject({
     kind: z.enum(['none', 'present', 'unknown']),
