@@ -1,5 +1,6 @@
 import { parentPort, workerData } from 'node:worker_threads';
 import type { BuildSource } from './build-source';
+import { doPartsByTwo } from './build-parts';
 import { makeChart, type MadeChart } from './make-chart';
 
 /** What the thread says while it works. */
@@ -14,7 +15,8 @@ function say(word: BuildWord): void {
 
 const source = workerData as BuildSource; // the only thing that opens this thread is run-build
 try {
-  say({ kind: 'made', chart: makeChart(source, (step, share) => say({ kind: 'progress', step, share })) });
+  const report = (step: string, share: number) => say({ kind: 'progress', step, share });
+  say({ kind: 'made', chart: makeChart(source, report, doPartsByTwo) });
 } catch (error) {
   if (!(error instanceof RangeError)) throw error;
   say({ kind: 'refused', words: error.message });

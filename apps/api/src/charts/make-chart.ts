@@ -2,6 +2,7 @@ import { buildChart, type BuiltChart, type ChartInput } from '@mereward/shared/c
 import { encodeClasses, encodeDepth, encodeSigma } from '@mereward/shared/charts/chart-encoding';
 import type { LeftOut } from '@mereward/shared/charts/sounding-roles';
 import type { GridFrame } from '@mereward/shared/charts/contract';
+import { doPartsHere, type DoParts } from '@mereward/shared/charts/surface-parts';
 import { reduceAll } from '../surveys/reduce-visit';
 import type { BuildSource, SourceReport, SourceVisit } from './build-source';
 import type { Built } from './built';
@@ -30,7 +31,11 @@ const BUILDING = 0.75;
  * Reduces every cast and builds the chart. Runs in a thread; the same source gives the same bytes. Throws RangeError,
  * in words for the surveyor, when no chart can be made of it.
  */
-export function makeChart(whole: BuildSource, report: (step: string, share: number) => void): MadeChart {
+export function makeChart(
+  whole: BuildSource,
+  report: (step: string, share: number) => void,
+  doParts: DoParts = doPartsHere,
+): MadeChart {
   const { source, leftOut } = withoutLeftOut(whole);
   report('Reducing the casts', 0);
   const answers = new Map(source.visits.flatMap(({ site, casts }) => [...reduceAll(site, casts)]));
@@ -47,7 +52,7 @@ export function makeChart(whole: BuildSource, report: (step: string, share: numb
     contourStepM: source.contourStepM,
     maxGapM: lake.details.maxGapM,
   };
-  const chart = buildChart(input, (step, share) => report(step, BUILDING * share));
+  const chart = buildChart(input, (step, share) => report(step, BUILDING * share), doParts);
   const tellings = makeTellings({ source, outline, chart }, (step, share) =>
     report(step, BUILDING + (1 - BUILDING) * share),
   );

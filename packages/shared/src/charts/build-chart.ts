@@ -22,6 +22,8 @@ import type { Candidate } from './surface-candidates';
 import type { ChosenSurface } from './surface-choice';
 import { chartSurface } from './chart-surface';
 import type { ChartSurface } from './chart-surface';
+import { doPartsHere } from './surface-parts';
+import type { DoParts } from './surface-parts';
 import { placesOf, shoreDistancesM } from './water-nodes';
 
 export type ChartInput = {
@@ -65,9 +67,14 @@ export type BuiltChart = {
  * The whole chart from reduced soundings at datum: samples, variogram by leave-one-out, kriging, mask, isobaths, bottom,
  * volumes, quality. Contours come from grades A and B alone; C is shown as points, D not at all. The same soundings give
  * the same bytes whatever their order. `report` hears each step in words with the share of the work done, rising to 1.
+ * `doParts` shares the kriging out; whoever does it, the bytes are the same.
  * Throws RangeError with words for the surveyor when no chart can be made.
  */
-export function buildChart(input: ChartInput, report: (step: string, share: number) => void): BuiltChart {
+export function buildChart(
+  input: ChartInput,
+  report: (step: string, share: number) => void,
+  doParts: DoParts = doPartsHere,
+): BuiltChart {
   report('Laying out the samples', 0);
   const roles = sortSoundings(input.soundings, input.outline);
   const corners = [...input.outline.shore];
@@ -94,6 +101,7 @@ export function buildChart(input: ChartInput, report: (step: string, share: numb
       maxGapM: input.maxGapM,
     },
     (share) => report('Kriging the depths', (45 + 40 * share) / 100),
+    doParts,
   );
   report('Drawing the isobaths', 0.85);
   const levels = isobathLevels(surface.depth, input.contourStepM);

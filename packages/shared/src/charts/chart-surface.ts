@@ -5,8 +5,6 @@ import { columnXM, emptyGrid, rowYM } from './grid';
 import type { Grid, GridFrame } from './grid';
 import { solveGlobal } from './kriging-global';
 import { predictByTable } from './kriging-table';
-import { krigeBlended } from './kriging-blend';
-import { krigeNeighbourhood } from './kriging-neighbourhood';
 import type { KrigingSetup } from './kriging-setup';
 import { surveyedPlaces } from './mask';
 import type { NearWater } from './near-water';
@@ -16,6 +14,8 @@ import { shoreDrift } from './shore-drift';
 import { localSpread } from './local-spread';
 import type { Misses } from './local-spread';
 import type { Candidate } from './surface-candidates';
+import { partsOf } from './surface-parts';
+import type { DoParts } from './surface-parts';
 import { rimNodes, shoreDistancesM } from './water-nodes';
 
 export type SurfaceInput = {
@@ -37,9 +37,6 @@ export type ChartSurface = {
   surveyed: Uint8Array; // 1 on surveyed water
 };
 
-/** Neighbours used for σ. More change it by under 1 %; fewer than all never understate it. */
-const SIGMA_NEIGHBOURS = 16;
-const CHUNK = 16_384; // of places, between two words on how far it is
 /** The drawn depth uses all samples at once while memory (8 n² bytes) and time (n³/3) stay small, above that blended patches. */
 const AT_ONCE_LIMIT = 2000;
 
@@ -49,24 +46,24 @@ const AT_ONCE_LIMIT = 2000;
  * not knowing the depth at a place, while the drawn depth leaves it out; and it is widened or narrowed by how well the
  * soundings round about were foretold.
  */
-export function chartSurface(input: SurfaceInput, report: (share: number) => void): ChartSurface {
+export function chartSurface(
+  input: SurfaceInput,
+  report: (share: number) => void,
+  doParts: DoParts,
+): ChartSurface {
   const { outline, frame, samples, chosen, misses, maxGapM } = input;
   const { water, soundingDistanceM, ...places } = input.near;
   const shoreDistanceM = shoreDistancesM(outline, places);
   const targets = withDrift(chosen, places, shoreDistanceM);
-  const variance = inChunks(
-    targets,
-    (part) => varianceAt(chosen.setup, part),
-    (share) => report(0.3 * share),
-  );
+  const variance = doParts(partsOf('variance', chosen.setup, targets), (share) => report(0.3 * share));
   const spread = localSpread(misses, places, maxGapM);
   const sigmaM = variance.map((v, t) => Math.sqrt((v + chosen.setup.variogram.nuggetM2) * spread[t]!));
   const spreadM = spreadOf(samples);
   const kept = surveyedPlaces({ soundingDistanceM, sigmaM, spreadM }, maxGapM);
   const surveyed = new Uint8Array(water.length);
   places.nodes.forEach((node, t) => (surveyed[node] = kept[t]!));
-  const predict = predictorOf(chosen.setup);
-  const wet = inChunks(pick(targets, kept), predict, (share) => report(0.3 + 0.65 * share));
+  const predict = predictorOf(chosen.setup, doParts);
+  const wet = predict(pick(targets, kept), (share) => report(0.3 + 0.65 * share));
   const depth = emptyGrid(frame);
   const sigma = emptyGrid(frame);
   let next = 0;
@@ -81,35 +78,23 @@ export function chartSurface(input: SurfaceInput, report: (share: number) => voi
   return { depth, sigma, withRim, water, surveyed };
 }
 
-function varianceAt(setup: KrigingSetup, targets: Targets): Float64Array {
-  return krigeNeighbourhood(setup, targets, { neighbours: SIGMA_NEIGHBOURS, by: 'octant' }).varianceM2;
-}
-
 function withDrift({ driftLengthM }: Candidate, places: Targets, shoreDistanceM: Float64Array): Targets {
   const { xM, yM } = places;
   return driftLengthM === null ? { xM, yM } : { xM, yM, driftM: shoreDrift(shoreDistanceM, driftLengthM) };
 }
 
-type Predict = (targets: Targets) => Float64Array;
+type Predict = (targets: Targets, report: (share: number) => void) => Float64Array;
 
-function predictorOf(setup: KrigingSetup): Predict {
+function predictorOf(setup: KrigingSetup, doParts: DoParts): Predict {
   if (setup.samples.xM.length <= AT_ONCE_LIMIT) {
     const model = solveGlobal(setup);
-    return (targets) => predictByTable(model, targets);
+    return (targets, report) => {
+      const depths = predictByTable(model, targets);
+      report(1);
+      return depths;
+    };
   }
-  return (targets) => krigeBlended(setup, targets);
-}
-
-function inChunks(targets: Targets, predict: Predict, report: (share: number) => void): Float64Array {
-  const count = targets.xM.length;
-  const out = new Float64Array(count);
-  for (let from = 0; from < count; from += CHUNK) {
-    const to = Math.min(count, from + CHUNK);
-    const part = { xM: targets.xM.subarray(from, to), yM: targets.yM.subarray(from, to) };
-    out.set(predict(targets.driftM ? { ...part, driftM: targets.driftM.subarray(from, to) } : part), from);
-    report(to / count);
-  }
-  return out;
+  return (targets, report) => doParts(partsOf('depth', setup, targets), report);
 }
 
 function pick(targets: Targets, kept: Uint8Array): Targets {
@@ -148,6 +133,6 @@ function fillRim(
     yM: Float64Array.from(mirrored, (m) => m.image.yM),
   };
   const distancesM = Float64Array.from(mirrored, (m) => m.distanceM);
-  const depths = predict(withDrift(chosen, part, distancesM));
+  const depths = predict(withDrift(chosen, part, distancesM), () => undefined);
   mirrored.forEach(({ node, wet }, t) => (withRim.values[node] = wet ? -Math.max(0, depths[t]!) : 0));
 }
