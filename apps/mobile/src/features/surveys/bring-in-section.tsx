@@ -17,7 +17,8 @@ import { sendWaiting } from '@/lib/outbox-sender';
 import { unpackedText } from '@/lib/packed-text';
 import { pickTextFile } from '@/lib/pick-file';
 
-const LINK_PART = 'in';
+/** What a code's address says behind its `#`. */
+export const LINK_PART = 'in';
 
 type Props = { accountId: string; entries: readonly OutboxEntry[] };
 

@@ -10,6 +10,7 @@ import { Sheet } from '@/components/sheet';
 import { SvgPicture } from '@/components/svg-picture';
 import { Text } from '@/components/text';
 import { space } from '@/constants/layout';
+import { LINK_PART } from '@/features/surveys/bring-in-section';
 import { handOver, type HandOver } from '@/features/surveys/handed-over';
 import { countWords } from '@/features/surveys/visit-words';
 import { figure } from '@/lib/format';
@@ -25,7 +26,7 @@ type Code = { letters: number; drawing: string | null };
 
 /** What waits as an address that a phone's camera opens, drawn as one code where it fits one. */
 async function codeOf(file: HandOver, origin: string): Promise<Code> {
-  const link = `${origin}/waiting#in=${await packedText(JSON.stringify(file))}`;
+  const link = `${origin}/waiting#${LINK_PART}=${await packedText(JSON.stringify(file))}`;
   return { letters: link.length, drawing: qrDrawing(link, CODE_PX) };
 }
 

@@ -8,13 +8,14 @@ import { Note } from '@/components/note';
 import { Page } from '@/components/page';
 import { Section } from '@/components/section';
 import { Text } from '@/components/text';
-import { BringInSection } from '@/features/surveys/bring-in-section';
+import { BringInSection, LINK_PART } from '@/features/surveys/bring-in-section';
 import { HandOverSection } from '@/features/surveys/hand-over-section';
 import { MoveCastSheet } from '@/features/surveys/move-cast-sheet';
 import { WaitingEntry } from '@/features/surveys/waiting-entry';
 import { space } from '@/constants/layout';
 import { useNoSignal } from '@/hooks/use-no-signal';
 import { clockHere } from '@/lib/format-time';
+import { linkPart } from '@/lib/link-part';
 import { takeAway, useOutbox } from '@/lib/outbox';
 import type { OutboxEntry } from '@/lib/outbox-event';
 import { sendWaiting } from '@/lib/outbox-sender';
@@ -28,6 +29,7 @@ export function WaitingScreen() {
   const { entries, others, locked } = useOutbox();
   const [sending, setSending] = useState(false);
   const [leaving, setLeaving] = useState<OutboxEntry | null>(null);
+  const [handed] = useState(() => linkPart(LINK_PART) !== null); // held until somebody is signed in to look at it
   const [moving, setMoving] = useState<OutboxEntry | null>(null);
   const open = entries.filter(({ state }) => state !== 'sent');
   const send = async (): Promise<void> => {
@@ -87,6 +89,14 @@ export function WaitingScreen() {
         </Section>
       ) : null}
       {account && open.length > 0 ? <HandOverSection account={account} entries={open} /> : null}
+      {!account && handed ? (
+        <Note title="Sign in to see what the other phone shows">
+          <Text>Whoever made it signs in here, then brings it in.</Text>
+          <View style={{ alignItems: 'flex-start' }}>
+            <LinkButton label="Sign in and look" href="/sign-in?next=/waiting" kind="main" bank />
+          </View>
+        </Note>
+      ) : null}
       {account ? <BringInSection accountId={account.id} entries={entries} /> : null}
       {moving ? <MoveCastSheet entry={moving} entries={entries} onClose={() => setMoving(null)} /> : null}
       <Confirm
