@@ -1,7 +1,9 @@
 import { readFile } from 'node:fs/promises';
+import { deflateRawSync } from 'node:zlib';
 import { VisitWithCasts } from '@mereward/shared/surveys/contract';
 import type { Page } from '@playwright/test';
 import { castWithoutSignal, firstCast, sending, test, waitUntilKept } from './support/no-signal';
+import { fillSignIn } from './support/people';
 import { expect } from './support/site';
 import { anOpenVisit } from './support/story-water';
 
@@ -9,6 +11,8 @@ test.use({ serviceWorkers: 'allow' });
 test.describe.configure({ timeout: 150_000 });
 
 const waiting = (page: Page) => page.getByRole('list', { name: 'Waiting to be sent' }).getByRole('listitem');
+
+const inFile = (page: Page) => page.getByRole('list', { name: 'In the file' }).getByRole('listitem');
 
 test('what waits on a phone without a signal is sent from another, arrives once, and a refused cast moves to another visit', async ({
   packed: page,
@@ -43,12 +47,18 @@ test('what waits on a phone without a signal is sent from another, arrives once,
   await expect(toms.getByText('These are another person’s things')).toBeVisible();
   await expect(toms.getByRole('button', { name: 'Bring them in' })).toHaveCount(0);
 
+  const looking = await pageOf();
+  await looking.goto(`/waiting#in=${deflateRawSync(saved).toString('base64url')}`); // as a code's address
+  await looking.getByRole('link', { name: 'Sign in and look' }).click();
+  await fillSignIn(looking, 'joan');
+  await expect(inFile(looking)).toHaveCount(2);
+  expect(looking.url()).not.toContain('#');
+
   const other = await pageOf({ who: 'joan' });
   await other.goto('/waiting');
   await expect(other.getByText('Nothing waits')).toBeVisible();
   await bringIn(other, saved);
-  const found = other.getByRole('list', { name: 'In the file' }).getByRole('listitem');
-  await expect(found).toHaveText([/^Cast 1.*14 wraps/, /^Cast 2.*13 wraps/]);
+  await expect(inFile(other)).toHaveText([/^Cast 1.*14 wraps/, /^Cast 2.*13 wraps/]);
   await other.getByRole('button', { name: 'Bring them in' }).click();
   await expect(other.getByText('2 things brought in')).toBeVisible();
   await expect(other.getByText('Nothing waits')).toBeVisible();

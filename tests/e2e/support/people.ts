@@ -86,8 +86,13 @@ export const test = siteTest.extend<{ pageOf: (wishes?: Wishes) => Promise<Page>
 
 /** Signs in as people do, by the form. */
 export async function signIn(page: Page, who: Somebody, next: string): Promise<void> {
-  const { email, password } = signInOf(who);
   await page.goto(`/sign-in?next=${encodeURIComponent(next)}`);
+  await fillSignIn(page, who);
+}
+
+/** Fills in and sends the form for signing in that stands on the page. */
+export async function fillSignIn(page: Page, who: Somebody): Promise<void> {
+  const { email, password } = signInOf(who);
   await page.getByLabel('E-mail').fill(email);
   await page.getByLabel('Password').fill(password);
   await page.keyboard.press('Enter');
