@@ -20,6 +20,7 @@ export async function comparisonLine({ name, goal, ours, peer }: Comparison): Pr
   const oursMs: number[] = [];
   const peerMs: number[] = [];
   let error: string | null = null;
+  const before = residentMB(); // what earlier works and this one's input hold
   for (let round = 0; round <= ROUNDS; round++) {
     const started = performance.now();
     error = await ours();
@@ -34,10 +35,12 @@ export async function comparisonLine({ name, goal, ours, peer }: Comparison): Pr
     peerMs.length > 0 ? `ratio ${(median(peerMs.slice(1)) / warm).toFixed(1)}×` : 'ratio –',
     `goal ${goal}`,
     ...(error === null ? [] : [error]),
-    `${Math.round(process.memoryUsage().rss / 1e6)} MB resident`,
+    `${residentMB()} MB resident, ${before} before`,
   ];
   return columns.join(' | ');
 }
+
+const residentMB = (): number => Math.round(process.memoryUsage().rss / 1e6);
 
 function peerColumn(peer: Comparison['peer'], peerMs: readonly number[]): string {
   if (peer === null) return 'no peer';
