@@ -3,7 +3,7 @@ import cookieParser from 'cookie-parser';
 import express, { Router, type Express, type RequestHandler } from 'express';
 import helmet from 'helmet';
 import type pino from 'pino';
-import { lightPages } from './charts/light-pages';
+import { lightPages } from './charts/light/light-pages';
 import { demoMail } from './demo/mail-page';
 import { health } from './http/health';
 import { limitAll } from './http/limits';

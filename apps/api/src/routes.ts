@@ -1,7 +1,7 @@
 import { accountRoutes } from './accounts/routes';
 import { bookingRoutes } from './bookings/routes';
 import { disagreementRoutes } from './charts/disagreement-routes';
-import { paperRoutes } from './charts/paper-routes';
+import { paperRoutes } from './charts/papers/paper-routes';
 import { leftOutRoutes } from './charts/left-out-routes';
 import { chartRoutes } from './charts/routes';
 import { tellingRoutes } from './charts/telling-routes';

@@ -3,7 +3,8 @@ import { fileURLToPath, pathToFileURL } from 'node:url';
 import { Worker } from 'node:worker_threads';
 
 /** The entries that run beside the server; each is `<name>.worker.ts` in the source and `<name>.worker.js` in the bundle. */
-export type ThreadName = 'charts/build' | 'charts/part' | 'charts/paper' | 'files/resize' | 'surveys/log';
+export type ThreadName =
+  'charts/build' | 'charts/part' | 'charts/papers/paper' | 'files/resize' | 'surveys/log';
 
 const source = import.meta.url.endsWith('.ts');
 

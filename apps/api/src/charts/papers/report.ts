@@ -7,19 +7,19 @@ import { LeadCalibration } from '@mereward/db/entities/surveys/lead-calibration'
 import { SoundingImport } from '@mereward/db/entities/surveys/sounding-import';
 import { civilDay } from '@mereward/shared/time/civil-day';
 import { In, type EntityManager } from 'typeorm';
-import type { Ctx } from '../ctx';
-import type { FileStore } from '../files/store';
-import { coverageOf } from '../surveys/coverage';
-import { eventsOf } from '../surveys/endings';
-import { Built } from './built';
-import { ageNow } from './chart-age-now';
-import { castsTable, chartCasts, type ChartCasts } from './chart-casts';
-import { soundingsTable } from './chart-soundings';
+import type { Ctx } from '../../ctx';
+import type { FileStore } from '../../files/store';
+import { coverageOf } from '../../surveys/coverage';
+import { eventsOf } from '../../surveys/endings';
+import { Built } from '../built';
+import { ageNow } from '../chart-age-now';
+import { castsTable, chartCasts, type ChartCasts } from '../chart-casts';
+import { soundingsTable } from '../chart-soundings';
 import { drawPaper } from './draw-paper';
-import { fileName } from './file-name';
+import { fileName } from '../file-name';
 import type { LogBrought } from './report-logs';
 import { reportPhotos } from './report-photos';
-import { leftOutViews } from './left-out-views';
+import { leftOutViews } from '../left-out-views';
 import { reportDocument, type EarlierChart, type SurveyReport } from './report-document';
 
 /** The whole account of a survey, for the staff: how it was made, every cast, how good it is, and whose it is. */

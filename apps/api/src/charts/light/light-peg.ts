@@ -17,7 +17,7 @@ import {
 import { dayAndClock, dayRange } from '@mereward/shared/time/day-names';
 import { length } from '@mereward/shared/units/length-words';
 import { FOOT_M } from '@mereward/shared/units/length';
-import { markup, Markup } from '../http/markup';
+import { markup, Markup } from '../../http/markup';
 import { lightDocument, type LightDocument } from './light-frame';
 import { lightMap, type LightMap } from './light-map';
 import { lightNeighbours, lightSpots } from './light-spots';

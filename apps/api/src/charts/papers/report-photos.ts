@@ -1,10 +1,10 @@
 import { Photo } from '@mereward/db/entities/files/photo';
 import { dayWords } from '@mereward/shared/time/civil-day';
 import { In } from 'typeorm';
-import type { Ctx } from '../ctx';
-import { photoFile } from '../files/file-key';
-import { readWhole, type FileStore } from '../files/store';
-import type { ChartCasts } from './chart-casts';
+import type { Ctx } from '../../ctx';
+import { photoFile } from '../../files/file-key';
+import { readWhole, type FileStore } from '../../files/store';
+import type { ChartCasts } from '../chart-casts';
 import type { PaperBlock, PaperPicture } from './paper-pages';
 
 /** So many photos are printed at most; a survey of a whole lake would else be an album. */

@@ -3,7 +3,7 @@ import { BOTTOM_WORDS } from '@mereward/shared/charts/bottom-words';
 import { eventWords } from '@mereward/shared/surveys/bottom-ending';
 import { dayWords } from '@mereward/shared/time/civil-day';
 import type { BottomEventKind, EventEnds } from '@mereward/shared/surveys/bottom-event-contract';
-import type { BuiltReport } from './built';
+import type { BuiltReport } from '../built';
 import type { PaperBlock } from './paper-pages';
 import type { SurveyReport } from './report-document';
 

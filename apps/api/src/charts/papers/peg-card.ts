@@ -1,7 +1,7 @@
 import { civilDay } from '@mereward/shared/time/civil-day';
-import type { Ctx } from '../ctx';
+import type { Ctx } from '../../ctx';
 import { drawCard } from './card-sheet';
-import { pegPage } from './peg-page';
+import { pegPage } from '../peg-page';
 
 /** A peg's card as a PDF: what the reader's own page of that peg holds, and no more. */
 export async function pegCard(ctx: Ctx, pegId: string): Promise<{ filename: string; pdf: Buffer }> {

@@ -9,7 +9,7 @@ import {
   ownCountWords,
   provenance,
 } from '@mereward/shared/charts/spot-figures';
-import { markup, type Markup } from '../http/markup';
+import { markup, type Markup } from '../../http/markup';
 
 /** The spots of a peg, numbered as on its map: reach, depth today, bottom, how sure, and what suits it. */
 export function lightSpots(page: PegPageView, units: Units): Markup | null {

@@ -2,8 +2,8 @@ import { BOTTOM_WORDS } from '@mereward/shared/charts/bottom-words';
 import { clockIn } from '@mereward/shared/time/day-names';
 import { civilDay, dayWords } from '@mereward/shared/time/civil-day';
 import type { SurveyCast } from '@mereward/db/entities/surveys/survey-cast';
-import type { BuiltSounding } from './built';
-import type { ChartVisit } from './chart-casts';
+import type { BuiltSounding } from '../built';
+import type { ChartVisit } from '../chart-casts';
 import type { PaperBlock } from './paper-pages';
 import type { SurveyReport } from './report-document';
 

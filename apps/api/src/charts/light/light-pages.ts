@@ -4,15 +4,15 @@ import { PEG_CODE_LENGTH, PEG_CODE_LETTERS, readPegCode } from '@mereward/shared
 import compression from 'compression';
 import { Router, type Request, type Response } from 'express';
 import { createHash } from 'node:crypto';
-import { STRANGER, type Ctx } from '../ctx';
-import { limitPages } from '../http/limits';
-import { markup } from '../http/markup';
-import { answering } from '../http/problem';
-import { serverOf } from '../http/server';
+import { STRANGER, type Ctx } from '../../ctx';
+import { limitPages } from '../../http/limits';
+import { markup } from '../../http/markup';
+import { answering } from '../../http/problem';
+import { serverOf } from '../../http/server';
 import { lightDocument, type LightDocument } from './light-frame';
 import { lightPeg } from './light-peg';
 import { lightWish, type LightWish } from './light-wish';
-import { pegPage } from './peg-page';
+import { pegPage } from '../peg-page';
 
 /**
  * The pages behind the codes on peg cards, `/p/K7M3XD`: written here, without a script, and for everybody alike: what a

@@ -4,14 +4,14 @@ import { Lake } from '@mereward/db/entities/lakes/lake';
 import type { ChartView } from '@mereward/shared/charts/contract';
 import { civilDay } from '@mereward/shared/time/civil-day';
 import type { EntityManager } from 'typeorm';
-import type { Ctx } from '../ctx';
-import { isStaff } from '../lakes/policy';
-import { chartContent } from './chart-layers';
+import type { Ctx } from '../../ctx';
+import { isStaff } from '../../lakes/policy';
+import { chartContent } from '../chart-layers';
 import type { ChartSheet, PaperSize } from './chart-sheet-pdf';
 import type { SheetPeople } from './chart-sheet-words';
-import { chartView } from './chart-view';
+import { chartView } from '../chart-view';
 import { drawPaper } from './draw-paper';
-import { fileName } from './file-name';
+import { fileName } from '../file-name';
 
 /** A lake's chart as a sheet to print, true to scale: what the reader's own screen of it holds, and no more. */
 export async function chartSheet(

@@ -6,9 +6,9 @@ import type { ArcCoverage } from '@mereward/shared/surveys/contract';
 import { dayWords } from '@mereward/shared/time/civil-day';
 import { dayAndClock, dayRange } from '@mereward/shared/time/day-names';
 import { figure, percent } from '@mereward/shared/units/length-words';
-import type { Built } from './built';
-import { surveyedBy } from './built-logs';
-import type { CastsTable, ChartCasts } from './chart-casts';
+import type { Built } from '../built';
+import { surveyedBy } from '../built-logs';
+import type { CastsTable, ChartCasts } from '../chart-casts';
 import type { PaperBlock, PaperDocument } from './paper-pages';
 import {
   agreementFacts,

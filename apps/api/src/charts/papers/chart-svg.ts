@@ -4,9 +4,9 @@ import { SHEET_PX, sheetOfChart } from '@mereward/shared/charts/drawing/sheet-of
 import { PLAIN_SVG, toSvg } from '@mereward/shared/charts/drawing/to-svg';
 import type { SvgAsked } from '@mereward/shared/charts/paper-contract';
 import { dayAndClock } from '@mereward/shared/time/day-names';
-import type { Ctx } from '../ctx';
-import { chartView } from './chart-view';
-import { fileName } from './file-name';
+import type { Ctx } from '../../ctx';
+import { chartView } from '../chart-view';
+import { fileName } from '../file-name';
 
 /** A chart as one drawing: the same marks as the screen's, for whoever asks without one. */
 export async function chartSvg(

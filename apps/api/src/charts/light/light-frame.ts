@@ -1,6 +1,6 @@
 import { EMERGENCY } from '@mereward/shared/charts/cautions';
 import { createHash } from 'node:crypto';
-import { markup, Markup } from '../http/markup';
+import { markup, Markup } from '../../http/markup';
 
 /** A page of words without any script: its text, and the policy that holds it to that. */
 export type LightDocument = { text: string; policy: string };

@@ -1,6 +1,6 @@
 import { Piscina } from 'piscina';
 import { z } from 'zod';
-import { threadEntry } from '../jobs/thread';
+import { threadEntry } from '../../jobs/thread';
 import type { PaperGiven } from './paper.worker';
 
 /** A thread that stands by for a while: papers are asked for in twos and threes, and the faces are read but once. */
@@ -10,7 +10,7 @@ let drawing: Piscina | null = null;
 
 function thread(): Piscina {
   if (drawing) return drawing;
-  const { url, execArgv } = threadEntry('charts/paper');
+  const { url, execArgv } = threadEntry('charts/papers/paper');
   drawing = new Piscina({
     filename: url.href,
     execArgv,

@@ -2,8 +2,8 @@ import { shownOf } from '@mereward/shared/charts/log-thinning';
 import type { DepthUnit, LogFormat, LogOptions, LogReport } from '@mereward/shared/surveys/log-contract';
 import { dayAndClock } from '@mereward/shared/time/day-names';
 import { figure } from '@mereward/shared/units/length-words';
-import type { BuiltLog } from './built';
-import { mergedSoundings, type MergedSounding } from './chart-soundings';
+import type { BuiltLog } from '../built';
+import { mergedSoundings, type MergedSounding } from '../chart-soundings';
 import type { PaperBlock } from './paper-pages';
 import type { SurveyReport } from './report-document';
 
