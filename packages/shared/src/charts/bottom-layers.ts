@@ -10,6 +10,7 @@ import {
 } from './bottom-map';
 import type { FeltPlace } from './cast-kernel';
 import type { BottomQuality, BottomQualityView } from './bottom-quality-contract';
+import { markSnags } from './snag-areas';
 
 /** What one cast, or one confirmed bottom, says of the bottom at its place. */
 export type FeltBottom = FeltPlace & {
@@ -29,7 +30,8 @@ export type BottomLayers = {
 
 /**
  * Both bottom maps. Grades A, B and C count, C more blurred the less surely it is placed; D does not. Contours ask for a
- * depth and so for A and B; what was felt at a place is worth something even there where no depth was read.
+ * depth and so for A and B; what was felt at a place is worth something even there where no depth was read. A snag is not
+ * averaged with what lies round it.
  */
 export function bottomLayers(felt: readonly FeltBottom[], nodes: BottomNodes): BottomLayers {
   const counted = felt.filter(({ grade }) => grade !== 'D').sort((a, b) => (a.id < b.id ? -1 : 1));
@@ -37,10 +39,11 @@ export function bottomLayers(felt: readonly FeltBottom[], nodes: BottomNodes): B
     counted.flatMap((each) => evidenceOf(each, each.substrate && inOrder(Substrate.options, each.substrate))),
     nodes,
   );
-  const cover = layer(
-    counted.flatMap((each) => evidenceOf(each, each.cover && inOrder(Cover.options, each.cover))),
-    nodes,
+  const covers = counted.flatMap((each) =>
+    evidenceOf(each, each.cover && inOrder(Cover.options, each.cover)),
   );
+  const cover = layer(covers, nodes);
+  markSnags(cover.map, covers, nodes);
   return {
     substrate: substrate.map,
     cover: cover.map,

@@ -18,6 +18,7 @@ export type BottomArea = {
 /** Half the cells round a place are of the kind: there its edge runs. */
 export const EDGE_SHARE = 0.5;
 const SOFTENED_TIMES = 3;
+const SNAG_SHARE = 0.8;
 
 /** Every patterned area of the bottom's two maps; readied once, whatever the scale. */
 export function bottomAreas(substrate: ClassGrid | null, cover: ClassGrid | null): BottomArea[] {
@@ -45,6 +46,9 @@ function areaOf(grid: ClassGrid, code: number, kind: Patterned): BottomArea | nu
     originM,
     values: softened({ values: own, columns, rows }, SOFTENED_TIMES).values,
   };
+  if (kind === 'snag')
+    // a thing, however few its cells: softening must not wipe it off
+    soft.values = soft.values.map((share, cell) => (own[cell] === 1 ? Math.max(share, SNAG_SHARE) : share));
   return {
     kind,
     edges: deeperRegions(soft, [EDGE_SHARE])[1]?.lines ?? [],
