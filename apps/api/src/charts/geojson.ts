@@ -21,6 +21,7 @@ import {
   type Place,
   type Properties,
 } from './geojson-feature';
+import { onTheWater } from './on-the-water';
 
 export type Ellipse = { semiMajorM: number; semiMinorM: number; bearingDeg: number };
 export type MapSpot = Point & { id: string; name: string; peg: string; usableRadiusM: number };
@@ -168,10 +169,11 @@ const KINDS: Partial<Record<BottomArea['kind'], string>> = {
   tall_weed: 'weed',
 };
 
-/** The areas of each bottom, their edges as the chart draws them: half the cells round a place are of the kind. */
+/** The areas of each bottom, their edges as the chart draws them: half the cells round a place are of the kind, and the shore. */
 function areaFeatures(view: ChartView, { audiences }: MapPlaces, place: Place): Feature[] {
+  const water = outlineInPlane(view.origin, view.outline);
   return bottomOf(view, layersOf(view)).flatMap((area): Feature[] => {
-    const polygons = polygonsOf(area.edges.map(pointsOf));
+    const polygons = onTheWater(polygonsOf(area.edges.map(pointsOf)), water);
     const geometry = polygonsGeometry(polygons, place);
     if (!geometry) return [];
     const areaM2 = polygons.reduce((sum, each) => sum + outlineAreaM2(each), 0);
