@@ -14,7 +14,7 @@ import { shoreDrift } from './shore-drift';
 import { localSpread } from './local-spread';
 import type { Misses } from './local-spread';
 import type { Candidate } from './surface-candidates';
-import { partsOf } from './surface-parts';
+import { AT_ONCE_LIMIT, partsOf } from './surface-parts';
 import type { DoParts } from './surface-parts';
 import { rimNodes, shoreDistancesM } from './water-nodes';
 
@@ -37,12 +37,9 @@ export type ChartSurface = {
   surveyed: Uint8Array; // 1 on surveyed water
 };
 
-/** The drawn depth uses all samples at once while memory (8 n² bytes) and time (n³/3) stay small, above that blended patches. */
-const AT_ONCE_LIMIT = 2000;
-
 /**
  * Depth and σ at every water node near enough to a sounding. Depths use all samples at once (blended patches above
- * 2000); σ uses 16 by octant, which never understates the σ of all. σ holds the nugget: what the bed does between casts is part of
+ * 2000, and σ from the same); up to 2000 σ uses 16 by octant, which never understates the σ of all. σ holds the nugget: what the bed does between casts is part of
  * not knowing the depth at a place, while the drawn depth leaves it out; and it is widened or narrowed by how well the
  * soundings round about were foretold.
  */

@@ -14,7 +14,7 @@ const MOST_MEMBERS = 192;
 const REACH = 1.5;
 
 /**
- * Kriged values (no variance) for more samples than are solved at once, without the small steps that a moving neighbourhood
+ * Kriged values for more samples than are solved at once, without the small steps that a moving neighbourhood
  * leaves where its members change. The plane is covered by square patches that overlap by half; each is kriged from the
  * samples in and around it, and patches are blended by weights that rise smoothly from 0 at a patch's edge to 1 at its middle
  * and sum to 1 everywhere, so the surface and its slope are continuous wherever kriging's own are. Any part of the targets
@@ -23,14 +23,51 @@ const REACH = 1.5;
  * Approximation, 2005, section 15.4.
  */
 export function krigeBlended(setup: KrigingSetup, targets: Targets): Float64Array {
+  const valuesM = new Float64Array(targets.xM.length);
+  const system = new PatchSystem(setup, MOST_MEMBERS);
+  forEachPatch(setup, targets, ({ x, y, sideM, ids, found }, members) => {
+    system.solve(ids, found);
+    for (const t of members) {
+      const [tx, ty] = [targets.xM[t]!, targets.yM[t]!];
+      const weight = rise(1 - Math.abs(tx - x) / sideM) * rise(1 - Math.abs(ty - y) / sideM);
+      if (weight > 0) valuesM[t] = valuesM[t]! + weight * system.valueAt(tx, ty, targets.driftM?.[t] ?? 0);
+    }
+  });
+  return valuesM;
+}
+
+/**
+ * Kriging variance of the same, m²: that of the patch which weighs most at a place, from the samples its value comes from.
+ * The others see nearly the same samples, so their errors go together and blending takes off next to nothing.
+ */
+export function blendedVariance(setup: KrigingSetup, targets: Targets): Float64Array {
+  const varianceM2 = new Float64Array(targets.xM.length);
+  const system = new PatchSystem(setup, MOST_MEMBERS);
+  forEachPatch(setup, targets, ({ x, y, sideM, ids, found }, members) => {
+    system.solve(ids, found);
+    for (const t of members) {
+      const [tx, ty] = [targets.xM[t]!, targets.yM[t]!];
+      if (Math.round(tx / sideM) * sideM !== x || Math.round(ty / sideM) * sideM !== y) continue;
+      varianceM2[t] = system.varianceAt(tx, ty, targets.driftM?.[t] ?? 0);
+    }
+  });
+  return varianceM2;
+}
+
+type Patch = { x: number; y: number; sideM: number; ids: Int32Array; found: number };
+
+/** Finds the samples of every patch in turn, and gives with them the targets in the cells that touch its middle. */
+function forEachPatch(
+  setup: KrigingSetup,
+  targets: Targets,
+  use: (patch: Patch, members: Iterable<number>) => void,
+): void {
   requireDrift(setup, targets);
   const { xM, yM } = setup.samples;
   const index = indexSamples(xM, yM);
   const sideM = patchSideM(index);
   const binned = binTargets(targets, sideM);
   const members = new Members(index, sideM);
-  const patch = new PatchSystem(setup, MOST_MEMBERS);
-  const valuesM = new Float64Array(targets.xM.length);
   for (let row = 0; row <= binned.rows; row++) {
     for (let column = 0; column <= binned.columns; column++) {
       const x = (binned.firstColumn + column) * sideM;
@@ -38,18 +75,13 @@ export function krigeBlended(setup: KrigingSetup, targets: Targets): Float64Arra
       const cells = cellsRound(binned, column, row);
       if (cells.length === 0) continue;
       members.find(x, y);
-      patch.solve(members.ids, members.found);
-      for (const cell of cells) {
-        for (let m = binned.starts[cell]!; m < binned.starts[cell + 1]!; m++) {
-          const t = binned.members[m]!;
-          const [tx, ty] = [targets.xM[t]!, targets.yM[t]!];
-          const weight = rise(1 - Math.abs(tx - x) / sideM) * rise(1 - Math.abs(ty - y) / sideM);
-          if (weight > 0) valuesM[t] = valuesM[t]! + weight * patch.valueAt(tx, ty, targets.driftM?.[t] ?? 0);
-        }
-      }
+      use({ x, y, sideM, ids: members.ids, found: members.found }, inCells(binned, cells));
     }
   }
-  return valuesM;
+}
+
+function* inCells({ starts, members }: Binned, cells: readonly number[]): Generator<number> {
+  for (const cell of cells) for (let m = starts[cell]!; m < starts[cell + 1]!; m++) yield members[m]!;
 }
 
 /** 0 at 0, 1 at 1, level at both ends; rise(t) + rise(1 − t) = 1. */

@@ -126,4 +126,29 @@ export class PatchSystem {
     for (let i = 0; i < order; i++) value += row[i]! * dual[i]!;
     return value;
   }
+
+  /** Kriging variance of the surface of the samples last solved, m²: n²/2 operations. */
+  varianceAt(x: number, y: number, drift: number): number {
+    const { order, row, sampleX, sampleY, system, trend } = this;
+    const { rows, stride } = system;
+    for (let i = 0; i < order; i++) {
+      const dx = sampleX[i]! - x;
+      const dy = sampleY[i]! - y;
+      row[i] = dx * dx + dy * dy;
+    }
+    this.fill(row, 0, order);
+    const ones = order * stride;
+    let [known, toOnes, toDrift] = [0, 0, 0];
+    for (let i = 0; i < order; i++) {
+      const at = i * stride;
+      let u = row[i]!;
+      for (let k = 0; k < i; k++) u -= rows[at + k]! * row[k]!;
+      u *= rows[at + i]!; // the diagonal holds reciprocals
+      row[i] = u;
+      known += u * u;
+      toOnes += u * rows[ones + i]!;
+      toDrift += u * rows[ones + 2 * stride + i]!;
+    }
+    return Math.max(0, priorVarianceM2(this.setup) - known + trend.varianceM2(1 - toOnes, drift - toDrift));
+  }
 }

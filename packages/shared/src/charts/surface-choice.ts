@@ -83,13 +83,15 @@ function madeHonest(candidate: Candidate, asked: Asked): Candidate {
   return { ...candidate, setup, rmseM, standardisedVariance, gapScore };
 }
 
+/** A miss tells of the bed only as far as the bed, and not the sounding's own error, makes up its variance. */
 function missesOf({ setup }: Candidate, asked: Asked): Misses {
   const { residualM, varianceM2 } = foretell(setup, asked, 'apart');
-  const { xM, yM } = setup.samples;
+  const { xM, yM, errorVarianceM2 } = setup.samples;
+  const ofBed = varianceM2.map((v, i) => 1 - Math.min(1, errorVarianceM2[asked.rows[i]!]! / v));
   return {
     xM: Float64Array.from(asked.rows, (row) => xM[row]!),
     yM: Float64Array.from(asked.rows, (row) => yM[row]!),
-    squaredSigmas: residualM.map((r, i) => (r * r) / varianceM2[i]!),
+    squaredSigmas: residualM.map((r, i) => 1 + ofBed[i]! * ((r * r) / varianceM2[i]! - 1)),
   };
 }
 

@@ -1,4 +1,4 @@
-import { krigeBlended } from './kriging-blend';
+import { blendedVariance, krigeBlended } from './kriging-blend';
 import { krigeNeighbourhood } from './kriging-neighbourhood';
 import type { KrigingSetup } from './kriging-setup';
 import type { Targets } from './sample-points';
@@ -6,12 +6,15 @@ import type { Targets } from './sample-points';
 /** A stretch of the places of a chart: their kriging variance, m², or their depths by blended patches, metres. */
 export type SurfacePart = { wanted: 'variance' | 'depth'; setup: KrigingSetup; targets: Targets };
 
-/** Neighbours used for σ. More change it by under 1 %; fewer than all never understate it. */
+/** The drawn depth uses all samples at once while memory (8 n² bytes) and time (n³/3) stay small, above that blended patches. */
+export const AT_ONCE_LIMIT = 2000;
+/** Neighbours used for σ beside a solution from all. More change it by under 1 %; fewer than all never understate it. */
 const SIGMA_NEIGHBOURS = 16;
 
 /** One part's answers, in the order of its targets. Parts need nothing of each other, so threads may share them out. */
 export function surfacePart({ wanted, setup, targets }: SurfacePart): Float64Array {
   if (wanted === 'depth') return krigeBlended(setup, targets);
+  if (setup.samples.xM.length > AT_ONCE_LIMIT) return blendedVariance(setup, targets);
   return krigeNeighbourhood(setup, targets, { neighbours: SIGMA_NEIGHBOURS, by: 'octant' }).varianceM2;
 }
 
