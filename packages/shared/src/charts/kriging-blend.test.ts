@@ -1,6 +1,6 @@
 import fc from 'fast-check';
 import { describe, expect, test } from 'vitest';
-import { krigeBlended } from './kriging-blend';
+import { blendedVariance, krigeBlended } from './kriging-blend';
 import { predictGlobal, solveGlobal } from './kriging-global';
 import { krigeNeighbourhood } from './kriging-neighbourhood';
 import type { KrigingSetup } from './kriging-setup';
@@ -31,6 +31,27 @@ const walk = {
 };
 const greatestStep = (values: Float64Array) =>
   values.reduce((most, value, i) => (i === 0 ? 0 : Math.max(most, Math.abs(value - values[i - 1]!))), 0);
+
+describe('the variance of the blended surface', () => {
+  const drifted: KrigingSetup = {
+    ...setup,
+    driftM: strewn.xM.map((x, i) => 1 - Math.exp(-(x + strewn.yM[i]!) / 50)),
+  };
+  const some = { xM: walk.xM.filter((_, i) => i % 400 === 0), yM: walk.yM.filter((_, i) => i % 400 === 0) };
+  const someDrifted = { ...some, driftM: some.xM.map((x, i) => 1 - Math.exp(-(x + some.yM[i]!) / 50)) };
+
+  test.each([
+    ['without drift', setup, some],
+    ['with a drift', drifted, someDrifted],
+  ] as const)('is hardly more than that of all samples at once, and never less: %s', (_, of, targets) => {
+    const varianceM2 = blendedVariance(of, targets);
+    const { varianceM2: exact } = predictGlobal(solveGlobal(of), targets);
+    varianceM2.forEach((v, t) => {
+      expect(v).toBeGreaterThanOrEqual(exact[t]! * (1 - 1e-9));
+      expect(v).toBeLessThan(exact[t]! * 1.1);
+    });
+  });
+});
 
 describe('the blended surface', () => {
   const blended = krigeBlended(setup, walk);
