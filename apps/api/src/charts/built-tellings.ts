@@ -8,6 +8,7 @@ export const BuiltNextCasts = z.object({
   wrapReference: WrapReference,
   meanSigmaM: z.number(), // root of the mean variance over the places
   places: z.int(), // of the water the variance is held over
+  isMerged: z.boolean().default(false), // from samples merged by cells: gains are good to a tenth of the best
   meanErrorShare: z.number(), // standard error of that mean, as a share of it
   pegs: z.array(
     z.object({
@@ -28,7 +29,7 @@ export const BuiltNextCasts = z.object({
 });
 export type BuiltNextCasts = z.infer<typeof BuiltNextCasts>;
 
-/** What a chart was found to tell when it was built. `nextCasts` is null where there were too many samples. */
+/** What a chart was found to tell when it was built. `nextCasts` is null where no visit told its kit. */
 export const BuiltTellings = z.object({
   features: z.array(ChartFeature),
   patches: z.array(StandOutPatch.omit({ reach: true })),

@@ -4,6 +4,7 @@ import { castCandidates, type CastCandidate } from '@mereward/shared/charts/cast
 import { gridAt } from '@mereward/shared/charts/chart-reading';
 import { columnXM, rowYM, type GridFrame } from '@mereward/shared/charts/grid';
 import { solveGlobal } from '@mereward/shared/charts/kriging-global';
+import { mergedSamples } from '@mereward/shared/charts/merged-samples';
 import { nextCasts } from '@mereward/shared/charts/next-casts';
 import type { Targets } from '@mereward/shared/charts/sample-points';
 import { shoreDrift } from '@mereward/shared/charts/shore-drift';
@@ -15,8 +16,9 @@ import { UNREAD_DEPTH } from '@mereward/shared/surveys/error-budget';
 import type { BuildSource } from './build-source';
 import type { BuiltNextCasts, BuiltTellings } from './built-tellings';
 
-/** Above so many samples the whole solve takes a minute, and a water so densely sounded needs no advice. */
+/** Solved as they are up to so many samples; more are merged by cells, for the whole solve takes n³. */
 const MOST_SAMPLES = 2000;
+const MERGED_TO = 1500;
 const CASTS_A_PEG = 5;
 /** Places of the water the mean variance is held over. */
 const WATER_PLACES = 300;
@@ -49,7 +51,8 @@ function shoreDistanceGrid(outline: Outline, frame: GridFrame): Float64Array {
 function castsNext({ source, outline, chart }: Made): BuiltNextCasts | null {
   const { setup, driftLengthM } = chart.chosen;
   const kit = newestKit(source);
-  if (kit === null || setup.samples.xM.length > MOST_SAMPLES) return null;
+  if (kit === null) return null;
+  const isMerged = setup.samples.xM.length > MOST_SAMPLES;
   const drift = (places: { xM: Float64Array; yM: Float64Array }): Float64Array | null =>
     driftLengthM === null ? null : shoreDrift(shoreDistancesM(outline, places), driftLengthM);
   const water = withDrift(waterPlaces(outline, chart.frame), drift);
@@ -68,13 +71,14 @@ function castsNext({ source, outline, chart }: Made): BuiltNextCasts | null {
       ...(driftM ? { driftM: driftM[i]! } : {}),
     }));
   });
-  const model = solveGlobal(setup);
+  const model = solveGlobal(isMerged ? mergedSamples(setup, MERGED_TO) : setup);
   const { meanVarianceM2, varianceErrorM2, casts } = nextCasts(model, water, { pegs, most: CASTS_A_PEG });
   return {
     stickSpacingM: kit.stickSpacingM,
     wrapReference: kit.wrapReference,
     meanSigmaM: thousandth(Math.sqrt(meanVarianceM2)),
     places: water.xM.length,
+    isMerged,
     meanErrorShare: thousandth(varianceErrorM2 / Math.max(meanVarianceM2, 1e-12)),
     pegs: waters.pegs.map(({ id }, peg) => ({
       pegId: id,

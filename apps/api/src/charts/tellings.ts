@@ -137,16 +137,21 @@ export async function chartNextCasts(ctx: Ctx, chartId: string): Promise<NextCas
     meanSigmaM: built?.meanSigmaM ?? null,
     whyNot:
       whyNot ??
-      (built ? null : 'So many soundings lie in this chart that no single cast would tell much more.'),
+      (built
+        ? null
+        : 'No visit of this chart tells of sticks and a rod to cast with, so no cast can be named.'),
     method: built ? methodOf(built) : '',
   };
 }
 
-function methodOf({ places, meanErrorShare }: BuiltNextCasts): string {
+function methodOf({ places, meanErrorShare, isMerged }: BuiltNextCasts): string {
   const percent = Math.max(1, Math.round(100 * meanErrorShare));
   return (
     `Chosen one after another so that the mean variance of the depth over ${places} places of the water (its mean known to ` +
-    `${percent} %) falls most; each peg by itself, within its own water, its arc and its longest cast, on the survey’s sticks.`
+    `${percent} %) falls most; each peg by itself, within its own water, its arc and its longest cast, on the survey’s sticks.` +
+    (isMerged
+      ? ' The soundings are so many that neighbours were merged for this: gains are good to a tenth of the best.'
+      : '')
   );
 }
 
