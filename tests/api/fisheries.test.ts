@@ -30,7 +30,13 @@ describe('a fishery', () => {
     expect(answers.map(({ status }) => status)).toEqual([201, 201]);
     const view = FisheryView.parse((await maker.get(`/fisheries/${made.id}`)).body);
     expect(view).toMatchObject({ version: 1, details: made.details });
-    expect(view.may).toEqual({ change: true, invite: true, addLakes: true, seePeople: true });
+    expect(view.may).toEqual({
+      change: true,
+      invite: true,
+      addLakes: true,
+      seePeople: true,
+      readFeels: true,
+    });
     expect(answers.map(({ body }) => body)).toEqual([view, view]);
     const me = await maker.get('/accounts/me');
     expect(me.body.roles).toEqual([{ fisheryId: made.id, fisheryName: 'New Fen', role: 'owner' }]);
@@ -163,7 +169,13 @@ describe('its people', () => {
   test('hold their roles at that fishery only', async () => {
     const { owner } = theirs.people;
     const view = FisheryView.parse((await owner.get(`/fisheries/${ours.id}`)).body);
-    expect(view.may).toEqual({ change: false, invite: false, addLakes: false, seePeople: false });
+    expect(view.may).toEqual({
+      change: false,
+      invite: false,
+      addLakes: false,
+      seePeople: false,
+      readFeels: false,
+    });
   });
 });
 

@@ -1,7 +1,14 @@
 import { Role } from '@mereward/shared/accounts/contract';
 import { describe, expect, test } from 'vitest';
 import { STRANGER, type Actor } from '../ctx';
-import { givableRoles, isOneOfThem, mayChangeFishery, maySeeGateCode, maySeePeople } from './policy';
+import {
+  givableRoles,
+  isOneOfThem,
+  mayChangeFishery,
+  mayReadFeels,
+  maySeeGateCode,
+  maySeePeople,
+} from './policy';
 
 const holder = (...roles: Role[]): Actor => ({
   kind: 'account',
@@ -17,6 +24,7 @@ describe('at a fishery', () => {
     expect(those(mayChangeFishery)).toEqual(['owner', 'manager']);
     expect(those(maySeePeople)).toEqual(['owner', 'manager', 'office']);
     expect(those(maySeeGateCode)).toEqual(['owner', 'manager', 'head_bailiff', 'bailiff', 'office']);
+    expect(those(mayReadFeels)).toEqual(['owner', 'manager', 'head_bailiff']);
     expect(those(isOneOfThem)).toEqual(Role.options);
   });
 
@@ -30,7 +38,7 @@ describe('at a fishery', () => {
       expect(givableRoles(holder(role), 'here')).toEqual([]);
   });
 
-  test.each([mayChangeFishery, maySeePeople, maySeeGateCode, isOneOfThem])(
+  test.each([mayChangeFishery, mayReadFeels, maySeePeople, maySeeGateCode, isOneOfThem])(
     'roles held elsewhere, or by nobody, give nothing',
     (may) => {
       expect(may(holder('owner'), 'elsewhere')).toBe(false);

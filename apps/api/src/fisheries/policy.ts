@@ -5,6 +5,9 @@ import { holdsAny, rolesAt, type Actor } from '../ctx';
 const STAFF = ['owner', 'manager', 'head_bailiff', 'bailiff', 'office'] as const satisfies readonly Role[];
 const PEOPLE_READERS = ['owner', 'manager', 'office'] as const satisfies readonly Role[];
 
+/** Those who read how the fishery's bottoms feel through the lead: every cast is read by it. */
+export const FEEL_READERS = ['owner', 'manager', 'head_bailiff'] as const satisfies readonly Role[];
+
 /** Which roles a holder may give and take away. Nobody but an owner makes or unmakes an owner or a manager. */
 const GIVES: Partial<Record<Role, readonly Role[]>> = {
   owner: ['owner', 'manager', 'head_bailiff', 'bailiff', 'office', 'member', 'angler'],
@@ -21,6 +24,9 @@ export const maySeeGateCode = (actor: Actor, fisheryId: string): boolean => hold
 
 export const maySeePeople = (actor: Actor, fisheryId: string): boolean =>
   holdsAny(actor, fisheryId, PEOPLE_READERS);
+
+export const mayReadFeels = (actor: Actor, fisheryId: string): boolean =>
+  holdsAny(actor, fisheryId, FEEL_READERS);
 
 /** The roles this actor may give and take away there. */
 export function givableRoles(actor: Actor, fisheryId: string): Role[] {

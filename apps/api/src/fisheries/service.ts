@@ -5,7 +5,14 @@ import { Problem } from '@mereward/shared/problems/problem';
 import { accountOf, type Actor, type Ctx } from '../ctx';
 import { insertOnce, mustRepeat, staleVersion } from '../repeat';
 import { actorNow, admit, fisheryFound } from './found';
-import { givableRoles, mayAddLakes, mayChangeFishery, maySeeGateCode, maySeePeople } from './policy';
+import {
+  givableRoles,
+  mayAddLakes,
+  mayChangeFishery,
+  mayReadFeels,
+  maySeeGateCode,
+  maySeePeople,
+} from './policy';
 
 /** Makes a fishery; whoever makes it is its first owner. */
 export async function makeFishery(ctx: Ctx, { id, details }: MakeFishery): Promise<FisheryView> {
@@ -58,6 +65,7 @@ export function fisheryView(
       invite: givableRoles(actor, id).length > 0,
       addLakes: mayAddLakes(actor, id),
       seePeople: maySeePeople(actor, id),
+      readFeels: mayReadFeels(actor, id),
     },
   };
 }

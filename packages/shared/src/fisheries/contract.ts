@@ -52,7 +52,13 @@ export const FisheryView = z.object({
   id: z.uuid(),
   details: FisheryDetails,
   version: z.int(),
-  may: z.object({ change: z.boolean(), invite: z.boolean(), addLakes: z.boolean(), seePeople: z.boolean() }),
+  may: z.object({
+    change: z.boolean(),
+    invite: z.boolean(),
+    addLakes: z.boolean(),
+    seePeople: z.boolean(),
+    readFeels: z.boolean().default(false), // how its bottoms feel through the lead
+  }),
 });
 export type FisheryView = z.infer<typeof FisheryView>;
 

@@ -15,6 +15,7 @@ import { Waiting } from '@/components/waiting';
 import { disagreementsOfLake } from '@/features/charts/disagreement-api';
 import { officeTasks } from '@/features/charts/office-tasks';
 import { reviewKeys } from '@/features/charts/review-api';
+import { useFishery } from '@/features/fisheries/office-api';
 import { OFFICE_ROLES, useMyFisheries } from '@/features/fisheries/use-my-fisheries';
 import { lakeKeys } from '@/features/lakes/api';
 import { api } from '@/lib/api';
@@ -47,6 +48,7 @@ export function OfficeScreen() {
 }
 
 function FisheryOffice({ fishery }: { fishery: FisheryListItem }) {
+  const kept = useFishery(fishery.id);
   return (
     <>
       <Section title="What wants doing" bare>
@@ -56,11 +58,13 @@ function FisheryOffice({ fishery }: { fishery: FisheryListItem }) {
         <List label={`Kept for ${fishery.name}`}>
           <Row title="Lakes" note={lakesWords(fishery)} href="/office/lakes" />
           <Row title="Charts" note="Drafts, approval, published versions" href="/office/charts" />
-          <Row
-            title="How bottoms feel"
-            note="What each bottom does to a lead; learnt from confirmed bottoms"
-            href={`/office/bottom?fisheryId=${fishery.id}`}
-          />
+          {kept.data?.may.readFeels ? (
+            <Row
+              title="How bottoms feel"
+              note="What each bottom does to a lead; learnt from confirmed bottoms"
+              href={`/office/bottom?fisheryId=${fishery.id}`}
+            />
+          ) : null}
           <Row
             title="Fishery and people"
             note="Details, roles, invitations"
