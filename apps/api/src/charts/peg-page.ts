@@ -1,5 +1,5 @@
 import { Spot } from '@mereward/db/entities/charts/spot';
-import { ageWords } from '@mereward/shared/charts/chart-age';
+import { ageWords, type AgeNow } from '@mereward/shared/charts/chart-age';
 import { chartCaution, EMERGENCY, overheadCaution } from '@mereward/shared/charts/cautions';
 import type { LayerNotes, PegPageView, SpotView } from '@mereward/shared/charts/contract';
 import { RIG_CAUTION } from '@mereward/shared/charts/presentation';
@@ -7,12 +7,13 @@ import { toPlane } from '@mereward/shared/geometry/plane';
 import { In, type EntityManager } from 'typeorm';
 import type { Ctx } from '../ctx';
 import { photosOf } from '../files/queries';
-import { placeWater, watersOf } from '../lakes/peg-waters';
+import { placeWater, watersOf, type WatersFound } from '../lakes/peg-waters';
 import { pegDetailsFor } from '../lakes/queries';
 import { surveyedBy } from './built-logs';
 import { layersOf } from './chart-layers';
 import { changesFor } from './chart-view';
 import { pegGround, type PegGround } from './peg-chart';
+import { ageAtPeg } from './peg-age';
 import { pegExtract } from './peg-extract';
 import { spotView } from './spot-view';
 
@@ -25,7 +26,12 @@ export async function pegPage(ctx: Ctx, pegId: string): Promise<PegPageView> {
   const ground = await pegGround(ctx, pegId);
   const { peg, lake, fishery, chart, sight, ticket } = ground;
   const photos = await photosOf(ctx.tx, { kind: 'peg', ids: [pegId], staff: sight.staff });
-  const { id, version, surveyedFrom, surveyedTo, datumM, age } = chart ?? {};
+  const { id, version, surveyedFrom, surveyedTo, datumM } = chart ?? {};
+  const waters = await watersOf(ctx.tx, lake);
+  const seen = sight.sees.spots
+    ? await spotsOf(ctx.tx, ground, waters)
+    : { spots: null, neighbourSpots: null };
+  const told = ageAtPeg({ ground, waters, spots: seen.spots ?? [], now: ctx.now });
   return {
     id: peg.id,
     number: peg.number,
@@ -46,22 +52,22 @@ export async function pegPage(ctx: Ctx, pegId: string): Promise<PegPageView> {
     details: pegDetailsFor(ctx.actor, lake.fisheryId, peg.details),
     photos: photos.get(pegId) ?? [],
     chart:
-      id && version && surveyedFrom && surveyedTo && datumM !== undefined && age
+      id && version && surveyedFrom && surveyedTo && datumM !== undefined && told
         ? {
             id,
             version,
             surveyedFrom,
             surveyedTo,
             datumM,
-            age,
-            changes: chart ? changesFor(chart.ageNow, sight) : [],
+            age: told.age,
+            changes: changesFor(told, sight),
           }
         : null,
     levelNow: ground.levelNow,
-    ...(sight.sees.spots ? await spotsOf(ctx.tx, ground) : { spots: null, neighbourSpots: null }),
+    ...seen,
     extract: pegExtract(ground),
     layerNotes: notesOf(ground),
-    cautions: cautionsOf(ground),
+    cautions: cautionsOf(ground, told),
     rigCaution: RIG_CAUTION,
     emergencyWords: EMERGENCY,
     cardUrl: `/api/pegs/${peg.id}/card.pdf`,
@@ -73,9 +79,8 @@ export async function pegPage(ctx: Ctx, pegId: string): Promise<PegPageView> {
 type Spots = Pick<PegPageView, 'spots' | 'neighbourSpots'>;
 
 /** The peg's own spots, and those of other pegs that lie in its water, all as reached from here. */
-async function spotsOf(tx: EntityManager, ground: PegGround): Promise<Spots> {
-  const { chart, peg, lake } = ground;
-  const waters = await watersOf(tx, lake);
+async function spotsOf(tx: EntityManager, ground: PegGround, waters: WatersFound): Promise<Spots> {
+  const { chart, peg } = ground;
   const open = chart && { chart, layers: layersOf(chart.content) };
   const all = await tx.find(Spot, {
     where: { pegId: In(waters.pegs.map(({ id }) => id)) },
@@ -112,12 +117,10 @@ function notesOf({ chart, sight: { notes } }: PegGround): LayerNotes {
   };
 }
 
-function cautionsOf({ peg, chart }: PegGround): string[] {
+function cautionsOf({ peg, chart }: PegGround, told: AgeNow | null): string[] {
   const overhead = overheadCaution(peg.details);
   const changed =
-    chart && (chart.age === 'changed' || chart.age === 'old')
-      ? ageWords(chart.age, chart.ageNow.changes)
-      : null;
+    told && (told.age === 'changed' || told.age === 'old') ? ageWords(told.age, told.changes) : null;
   return [
     overhead,
     changed && `${changed}.`,

@@ -48,9 +48,13 @@ const DROPPED: Readonly<Record<Grade, Grade>> = { A: 'B', B: 'C', C: 'C', D: 'D'
  * which would take the point off the reader's sheet in place of a warning.
  */
 export function gradeNow(grade: Grade, place: Point, { age, changes, levelsMoved }: AgeNow): Grade {
-  const touched = changes.some(({ rings }) => rings === null || insideRings(rings, place));
+  const touched = changes.some((change) => touches(change, place));
   return age === 'old' || levelsMoved || touched ? DROPPED[grade] : grade;
 }
+
+/** Whether something happened at a place: what happened to the whole lake happened there too. */
+export const touches = ({ rings }: Pick<ChartChange, 'rings'>, place: Point): boolean =>
+  rings === null || insideRings(rings, place);
 
 function insideRings(rings: readonly (readonly number[])[], place: Point): boolean {
   const inside = rings.filter((ring) => insideRing(pointsOf(ring), place));
