@@ -309,3 +309,80 @@ describe('an accepted report', () => {
     expect((await drafted()).depth).not.toBe(before.depth);
   });
 });
+
+describe('taking back an accepted report', () => {
+  const takeBack = (person: Person, id: string, reason = 'Sofia had mistaken the chimney.') =>
+    person.post(`/disagreements/${id}/take-back`).send({ reason });
+  const accepted = async (by = sofia): Promise<string> => {
+    const id = await sent({}, {}, by);
+    expect((await decide(here.people.office, id, ACCEPT)).status).toBe(200);
+    return id;
+  };
+
+  test('keeps what it was accepted as, tells the angler why, and leaves no word for a second', async () => {
+    const id = await accepted();
+    const answer = await takeBack(here.people.head_bailiff, id);
+    expect(answer.status, answer.text).toBe(200);
+    expect(DisagreementForReview.parse(answer.body)).toMatchObject({
+      status: 'taken_back',
+      grade: 'C',
+      decidedBy: 'The office',
+      takenBackBy: 'The head bailiff',
+      takenBack: { reason: 'Sofia had mistaken the chimney.' },
+      may: { decide: false, takeBack: false },
+    });
+    expect((await mine(sofia)).find((each) => each.id === id)).toMatchObject({
+      status: 'taken_back',
+      takenBack: { reason: 'Sofia had mistaken the chimney.' },
+    });
+    expect((await takeBack(here.people.head_bailiff, id)).status).toBe(200); // sent twice
+    const late = await takeBack(here.people.manager, id);
+    expect(problem(late.body).title).toBe('This was taken back already, by The head bailiff');
+    expect((await decide(here.people.manager, id, ACCEPT)).status).toBe(409);
+  });
+
+  test('is for those who decide, never for one’s own, and of an accepted one', async () => {
+    const id = await accepted();
+    expect((await takeBack(here.people.bailiff, id)).status).toBe(403);
+    expect((await takeBack(sofia, id)).status).toBe(404);
+    expect((await takeBack(elsewhere.people.manager, id)).status).toBe(404);
+    expect((await takeBack(here.people.office, id, ' ')).status).toBe(400);
+    expect((await takeBack(here.people.office, randomUUID())).status).toBe(404);
+    const own = await sent({}, {}, here.people.head_bailiff);
+    await decide(here.people.office, own, ACCEPT);
+    expect((await takeBack(here.people.head_bailiff, own)).status).toBe(403);
+    const waiting = await sent();
+    expect((await takeBack(here.people.office, waiting)).status).toBe(409);
+  });
+
+  test('of two at once one is heard', async () => {
+    const id = await accepted(here.people.member);
+    const answers = await Promise.all([
+      takeBack(here.people.office, id, 'One reason'),
+      takeBack(here.people.manager, id, 'Another'),
+    ]);
+    expect(answers.map(({ status }) => status).sort()).toEqual([200, 409]);
+  });
+
+  test(
+    'leaves the published chart, and asks a draft to be built without it',
+    { timeout: 60_000 },
+    async () => {
+      const id = await accepted(here.people.bailiff);
+      const joan = here.people.head_bailiff;
+      const draft = await draftedChart(server, { person: joan, lakeId: water.lake.id, visitIds: [visitId] });
+      const before = (await sofia.get(`/charts/${chartId}`)).body;
+      await takeBack(here.people.manager, id);
+      expect((await sofia.get(`/charts/${chartId}`)).body).toEqual(before);
+      const stale = ChartReview.parse((await joan.get(`/charts/${draft}/review`)).body);
+      expect(stale.checks.find(({ key }) => key === 'built')).toMatchObject({
+        state: 'failed',
+        blocks: true,
+      });
+      await joan.post(`/charts/${draft}/rebuild`);
+      await server.settle();
+      const seen = ChartView.parse((await joan.get(`/charts/${draft}`)).body);
+      expect(seen.soundings?.some((sounding) => sounding.id === id)).toBe(false);
+    },
+  );
+});

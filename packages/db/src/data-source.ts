@@ -61,6 +61,7 @@ import { PegCodes1780000009000 } from './migrations/1780000009000-PegCodes';
 import { WaterAreas1780000007000 } from './migrations/1780000007000-WaterAreas';
 import { SoundingLogs1780000005000 } from './migrations/1780000005000-SoundingLogs';
 import { LakePictures1780000010000 } from './migrations/1780000010000-LakePictures';
+import { ReportsTakenBack1780000014000 } from './migrations/1780000014000-ReportsTakenBack';
 import { ChartLeftOut1780000013000 } from './migrations/1780000013000-ChartLeftOut';
 import { TicketsAndPegTime1780000020000 } from './migrations/1780000020000-TicketsAndPegTime';
 import { PaymentsAndLedger1780000021000 } from './migrations/1780000021000-PaymentsAndLedger';
@@ -136,6 +137,7 @@ const MIGRATIONS = [
   TicketsAndPegTime1780000020000,
   PaymentsAndLedger1780000021000,
   RulesNoticesAndWaiting1780000022000,
+  ReportsTakenBack1780000014000,
 ];
 
 /** A pool of connections to one database, opened by the caller with `initialize()`. */

@@ -5,11 +5,13 @@ import {
   DisagreementList,
   DisagreementReviewList,
   DisagreementView,
+  TakeBackDisagreement,
 } from '@mereward/shared/charts/disagreement';
 import { limitReports } from '../http/limits';
 import { deed, read, type Route } from '../http/route';
 import { decideDisagreement } from './decide-disagreement';
 import { disagree } from './disagree';
+import { takeBackDisagreement } from './take-back-disagreement';
 import { disagreementForReview, disagreementsOfLake, myDisagreement, myDisagreements } from './disagreements';
 
 const signIn = 'needed';
@@ -62,6 +64,20 @@ export const disagreementRoutes: Route[] = [
     },
     async (ctx, { id, body }) => {
       await decideDisagreement(ctx, id('disagreementId'), body);
+      return disagreementForReview(ctx, id('disagreementId'));
+    },
+  ),
+  deed(
+    {
+      method: 'post',
+      path: '/disagreements/:disagreementId/take-back',
+      summary: 'Take back that a report was accepted',
+      signIn,
+      body: TakeBackDisagreement,
+      answer: DisagreementForReview,
+    },
+    async (ctx, { id, body }) => {
+      await takeBackDisagreement(ctx, id('disagreementId'), body);
       return disagreementForReview(ctx, id('disagreementId'));
     },
   ),

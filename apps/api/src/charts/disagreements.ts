@@ -57,6 +57,7 @@ function view(row: Disagreement, { peg, lake }: Named, charts: readonly ChartOf[
     decidedAt: row.decidedAt?.toISOString() ?? null,
     reason: row.decision?.reason ?? '',
     grade: row.evidence?.grade ?? null,
+    takenBack: row.takenBackAt && { at: row.takenBackAt.toISOString(), reason: row.takenBackReason ?? '' },
     charts: charts
       .filter(({ reportId }) => reportId === row.id)
       .map(({ id, version, title }) => ({ id, version, title })),
@@ -129,7 +130,15 @@ async function forReview(ctx: Ctx, lake: Lake, ids: readonly string[]): Promise<
   const charts = await chartsWith(tx, ids);
   const pegs = await tx.findBy(Peg, { lakeId: lake.id });
   const people = await tx.findBy(Account, {
-    id: In([...new Set(rows.flatMap(({ reportedBy, decidedBy }) => [reportedBy, decidedBy ?? reportedBy]))]),
+    id: In([
+      ...new Set(
+        rows.flatMap(({ reportedBy, decidedBy, takenBackBy }) => [
+          reportedBy,
+          decidedBy ?? reportedBy,
+          takenBackBy ?? reportedBy,
+        ]),
+      ),
+    ]),
   });
   const published = await publishedOf(tx, lake.id);
   const nameOf = (id: string | null) => people.find((person) => person.id === id)?.name ?? null;
@@ -143,8 +152,13 @@ async function forReview(ctx: Ctx, lake: Lake, ids: readonly string[]): Promise<
       ...view(row, { peg, lake }, charts),
       reporter: nameOf(row.reportedBy) ?? '',
       decidedBy: nameOf(row.decidedBy),
+      takenBackBy: nameOf(row.takenBackBy),
       ...(await compared(tx, { row, lake, published, pegs })),
-      may: { decide: row.status === 'waiting' && whyNot === null, whyNot },
+      may: {
+        decide: row.status === 'waiting' && whyNot === null,
+        takeBack: row.status === 'accepted' && whyNot === null,
+        whyNot,
+      },
     });
   }
   return reviews;

@@ -52,7 +52,7 @@ export const Disagree = z.strictObject({
 });
 export type Disagree = z.infer<typeof Disagree>;
 
-export const DisagreementStatus = z.enum(['waiting', 'accepted', 'declined']);
+export const DisagreementStatus = z.enum(['waiting', 'accepted', 'declined', 'taken_back']);
 export type DisagreementStatus = z.infer<typeof DisagreementStatus>;
 
 /** Re-measured by the fishery's own staff: what they found there, which then stands in place of the report. */
@@ -76,6 +76,12 @@ export const DecideDisagreement = z.discriminatedUnion('decision', [
 ]);
 export type DecideDisagreement = z.infer<typeof DecideDisagreement>;
 
+/** POST /api/disagreements/:disagreementId/take-back: what was accepted counts no more in charts built from now on. */
+export const TakeBackDisagreement = z.strictObject({
+  reason: z.string().trim().min(1, 'Say why: the angler reads it.').max(300),
+});
+export type TakeBackDisagreement = z.infer<typeof TakeBackDisagreement>;
+
 /** GET /api/disagreements/mine: the reader's own, newest first. It tells nothing of the chart. */
 export const DisagreementView = z.object({
   id: z.uuid(),
@@ -91,6 +97,7 @@ export const DisagreementView = z.object({
   decidedAt: z.iso.datetime().nullable(),
   reason: z.string(),
   grade: Grade.nullable(), // as evidence, once accepted
+  takenBack: z.object({ at: z.iso.datetime(), reason: z.string() }).nullable().default(null), // after it was accepted
   /** Charts made with it; to its reporter published ones only. */
   charts: z.array(z.object({ id: z.uuid(), version: z.string().nullable(), title: z.string() })),
 });
@@ -116,6 +123,7 @@ export type DoubtedSounding = z.infer<typeof DoubtedSounding>;
 export const DisagreementForReview = DisagreementView.extend({
   reporter: z.string(),
   decidedBy: z.string().nullable(),
+  takenBackBy: z.string().nullable().default(null),
   xM: z.number(), // on the lake's plane
   yM: z.number(),
   ellipse: z.object({ semiMajorM: z.number(), semiMinorM: z.number(), bearingDeg: z.number() }), // 95 %
@@ -139,7 +147,11 @@ export const DisagreementForReview = DisagreementView.extend({
   nearest: z.array(DoubtedSounding),
   gradeIfAccepted: Grade,
   gradeWords: z.string(),
-  may: z.object({ decide: z.boolean(), whyNot: z.string().nullable() }),
+  may: z.object({
+    decide: z.boolean(),
+    takeBack: z.boolean().default(false),
+    whyNot: z.string().nullable(),
+  }),
 });
 export type DisagreementForReview = z.infer<typeof DisagreementForReview>;
 export const DisagreementReviewList = z.object({ disagreements: z.array(DisagreementForReview) });

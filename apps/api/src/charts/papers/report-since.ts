@@ -18,7 +18,12 @@ export type ToldEvent = {
 };
 
 /** What an angler told, as far as the report says it: where, and on what day it was taken up. Nobody's name. */
-export type ToldReport = BuiltReport & { peg: string; place: string; acceptedOn: string | null };
+export type ToldReport = BuiltReport & {
+  peg: string;
+  place: string;
+  acceptedOn: string | null;
+  takenBackOn: string | null;
+};
 
 const ENDS: Readonly<Record<EventEnds, string>> = {
   cover: 'weed, leaves and snags',
@@ -72,7 +77,12 @@ export function acceptedBlocks({ accepted }: SurveyReport): PaperBlock[] {
     each.sigmaM === null ? '–' : each.sigmaM.toFixed(2),
     each.bottom === 'unknown' ? 'not known' : BOTTOM_WORDS[each.bottom],
     each.grade,
-    each.acceptedOn === null ? '' : dayWords(each.acceptedOn),
+    [
+      each.acceptedOn === null ? '' : dayWords(each.acceptedOn),
+      each.takenBackOn === null ? '' : `taken back ${dayWords(each.takenBackOn)}`,
+    ]
+      .filter(Boolean)
+      .join('; '),
   ]);
   return [
     words(

@@ -103,6 +103,7 @@ async function acceptedOf(tx: EntityManager, { built, zone }: ChartCasts): Promi
       peg: pegs.find(({ id }) => id === report.pegId)?.number ?? '',
       place: row?.place.words ?? '',
       acceptedOn: row?.decidedAt ? civilDay(row.decidedAt, zone) : null,
+      takenBackOn: row?.takenBackAt ? civilDay(row.takenBackAt, zone) : null,
     };
   });
 }

@@ -5,6 +5,7 @@ import {
   DisagreementView,
   type DecideDisagreement,
   type Disagree,
+  type TakeBackDisagreement,
 } from '@mereward/shared/charts/disagreement';
 import { useMutation, useQuery, useQueryClient } from '@tanstack/react-query';
 import { api } from '@/lib/api';
@@ -45,6 +46,15 @@ export function useDecide({ lakeId, id }: { lakeId: string; id: string }) {
   return useMutation({
     mutationFn: (decision: DecideDisagreement) =>
       api.post(`/disagreements/${id}/decide`, decision, DisagreementForReview),
+    onSuccess: () => queries.invalidateQueries({ queryKey: disagreementKeys.ofLake(lakeId) }),
+  });
+}
+
+export function useTakeBack({ lakeId, id }: { lakeId: string; id: string }) {
+  const queries = useQueryClient();
+  return useMutation({
+    mutationFn: (said: TakeBackDisagreement) =>
+      api.post(`/disagreements/${id}/take-back`, said, DisagreementForReview),
     onSuccess: () => queries.invalidateQueries({ queryKey: disagreementKeys.ofLake(lakeId) }),
   });
 }

@@ -15,6 +15,7 @@ import { useUnits } from '@/hooks/use-units';
 import { useThreeColumns, useWide } from '@/hooks/use-wide';
 import { figure, length, lengthWithin, percent } from '@/lib/format';
 import { DisagreementDecision } from './disagreement-decision';
+import { TakeBack } from './disagreement-take-back';
 import { foundWords, STATUS_LOOKS } from './disagreement-words';
 
 type Props = { report: DisagreementForReview };
@@ -50,6 +51,7 @@ export function DisagreementReview({ report }: Props) {
       ) : (
         <>
           <Text>{decidedWords(report)}</Text>
+          {report.may.takeBack ? <TakeBack report={report} /> : null}
           <Disclosure title="What it was held against">
             <Compared report={report} />
             <Doubted report={report} />
@@ -60,15 +62,9 @@ export function DisagreementReview({ report }: Props) {
   );
 }
 
-function decidedWords({
-  status,
-  decidedBy,
-  decidedAt,
-  reason,
-  grade,
-  charts,
-}: DisagreementForReview): string {
-  const day = decidedAt === null ? '' : ` on ${dayWords(decidedAt.slice(0, 10))}`;
+function decidedWords(report: DisagreementForReview): string {
+  const { status, decidedBy, decidedAt, reason, grade, charts, takenBack, takenBackBy } = report;
+  const on = (at: string | null): string => (at === null ? '' : ` on ${dayWords(at.slice(0, 10))}`);
   const as = grade === null ? '' : ` as grade ${grade}`;
   const said = reason ? ` ${reason}` : '';
   const where = charts.length
@@ -76,7 +72,10 @@ function decidedWords({
     : status === 'accepted'
       ? ' In no chart yet: it counts in the next one built.'
       : '';
-  return `${status === 'accepted' ? 'Accepted' : 'Declined'}${as} by ${decidedBy ?? 'somebody'}${day}.${said}${where}`;
+  const back = takenBack
+    ? ` Taken back by ${takenBackBy ?? 'somebody'}${on(takenBack.at)}: ${takenBack.reason}`
+    : '';
+  return `${status === 'declined' ? 'Declined' : 'Accepted'}${as} by ${decidedBy ?? 'somebody'}${on(decidedAt)}.${said}${where}${back}`;
 }
 
 function Compared({ report }: Props) {

@@ -26,15 +26,18 @@ export const STATUS_LOOKS = {
   waiting: { shape: 'diamond', tone: 'amber', word: 'waits' },
   accepted: { shape: 'triangle', tone: 'reed', word: 'accepted' },
   declined: { shape: 'bar', tone: 'inkSoft', word: 'declined' },
+  taken_back: { shape: 'cross', tone: 'inkSoft', word: 'taken back' },
 } as const;
 
 /** What became of a report, for the one who told. */
-export function becameWords({ status, reason, grade, charts }: DisagreementView): string {
+export function becameWords({ status, reason, grade, charts, takenBack }: DisagreementView): string {
   switch (status) {
     case 'waiting':
       return 'The fishery has not looked at it yet. The chart stays as it is until then.';
     case 'declined':
       return `Not taken up: ${reason}`;
+    case 'taken_back':
+      return `Accepted at first, then taken back: ${takenBack?.reason ?? ''}`;
     case 'accepted': {
       const versions = charts.flatMap(({ version }) => (version === null ? [] : [version]));
       const where = versions.length

@@ -16,5 +16,8 @@ export class Disagreement {
   @Column('uuid', { name: 'decided_by', nullable: true }) decidedBy!: string | null;
   @Column('timestamptz', { name: 'decided_at', nullable: true }) decidedAt!: Date | null;
   @Column('jsonb', { nullable: true }) decision!: DecideDisagreement | null;
+  @Column('uuid', { name: 'taken_back_by', nullable: true }) takenBackBy!: string | null;
+  @Column('timestamptz', { name: 'taken_back_at', nullable: true }) takenBackAt!: Date | null;
+  @Column('text', { name: 'taken_back_reason', nullable: true }) takenBackReason!: string | null;
   @Column('jsonb', { nullable: true }) evidence!: ReportEvidence | null;
 }
