@@ -120,13 +120,15 @@ export const BookingView = z.object({
     finish: z.boolean(),
     claimPeg: z.boolean(),
     checkIn: z.boolean(),
+    noShow: z.boolean(), // staff: nobody came
+    letGo: z.boolean(), // staff: let the peg of one who did not come to others
     takeMoney: z.boolean(), // at the lodge
     refund: z.boolean(),
   }),
 });
 export type BookingView = z.infer<typeof BookingView>;
 
-/** GET /api/bookings/mine; GET /api/fisheries/:fisheryId/bookings?day=… (staff). */
+/** GET /api/bookings/mine; GET /api/fisheries/:fisheryId/bookings?day=… (staff; bailiffs today ± a day). */
 export const BookingListItem = BookingView.pick({
   id: true,
   code: true,
@@ -148,6 +150,18 @@ export const BookingListItem = BookingView.pick({
 export type BookingListItem = z.infer<typeof BookingListItem>;
 export const BookingList = z.object({ bookings: z.array(BookingListItem) });
 export type BookingList = z.infer<typeof BookingList>;
+
+/** The day whose tickets staff look at: those that run on any part of it, at the lake. */
+export const BookingsOfDay = z.strictObject({ day: z.iso.date(), lakeId: z.uuid().optional() });
+export type BookingsOfDay = z.infer<typeof BookingsOfDay>;
+
+/*
+ * One deed a route, each answered with the BookingView:
+ * GET /api/bookings/by-code/:code (its holder, staff of its fishery);
+ * GET /api/fisheries/:fisheryId/bookings/by-code/:code (staff; bailiffs today ± a day);
+ * POST /api/bookings/:bookingId/confirm (nothing to pay now), /finish, /check-in (holder or staff),
+ * /no-show and /let-go (staff). DELETE /api/bookings/:bookingId/hold and DELETE /api/bookings/:bookingId answer nothing.
+ */
 
 /** POST /api/bookings/:bookingId/page → where to pay; DELETE /api/bookings/:bookingId/hold lets go of a hold. */
 export const PaymentPage = z.object({ url: z.string() });
