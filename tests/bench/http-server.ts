@@ -28,7 +28,7 @@ function bare(): RequestListener {
 function ours(): RequestListener {
   const url = 'postgres://127.0.0.1:1/none';
   const config = readConfig({ DATABASE_URL: url, WEB_DIR: '.', LOG_LEVEL: 'info', TRUST_PROXY: '1' });
-  const jobs = { send: () => Promise.resolve() };
+  const jobs = { send: () => Promise.resolve(), later: () => Promise.resolve() };
   const server = { config, source: makeDataSource(url), jobs, clock: () => new Date() };
   const spec = { method: 'get', path: '/bench', summary: 'The bench', signIn: 'open' } as const;
   const route = raw(spec, async (_req, res) => void res.json(BODY));

@@ -39,7 +39,7 @@ async function openProgram(databaseUrl: string): Promise<Program> {
   const recorder = new Recorder();
   const source = makeDataSource(databaseUrl).setOptions({ logging: ['query'], logger: recorder });
   await source.initialize();
-  const jobs = { send: () => Promise.resolve() };
+  const jobs = { send: () => Promise.resolve(), later: () => Promise.resolve() };
   const app = makeApp({ config, source, jobs, clock: () => new Date() }, makeLogger(config, { write() {} }));
   const server = createServer(app).listen(0, '127.0.0.1');
   await once(server, 'listening');

@@ -28,10 +28,18 @@ export function accountOf(actor: Actor): string {
 /** What the world outside the database is to a service: queued in the deed's transaction, done after it. */
 export type Jobs = {
   send(tx: EntityManager, name: JobName, payload: object): Promise<void>;
+  /** Queued now, done not before so many seconds have gone by. */
+  later(tx: EntityManager, job: { name: JobName; payload: object; afterSeconds: number }): Promise<void>;
 };
 
 export type JobName =
-  'mail.send' | 'chart.build' | 'photo.resize' | 'picture.resize' | 'files.remove' | 'log.read';
+  | 'mail.send'
+  | 'chart.build'
+  | 'photo.resize'
+  | 'picture.resize'
+  | 'files.remove'
+  | 'log.read'
+  | 'booking.expire';
 
 /** Everything a service gets: never a request. */
 export type Ctx = {

@@ -4,7 +4,7 @@ import { OSTLEMERE_ID } from './fishery';
 import type { DemoPerson } from './people';
 
 /** The demo's past sends no mail and queues nothing: what a job would do is done on the spot where it is wanted. */
-const NO_JOBS: Jobs = { send: async () => {} };
+const NO_JOBS: Jobs = { send: async () => {}, later: async () => {} };
 
 /** A service's context for one of the demo's people at an instant of its past. */
 export function demoCtx(tx: EntityManager, { id, roles }: DemoPerson, at: Date): Ctx {

@@ -10,6 +10,7 @@ const QUEUES: Record<JobName, { retryLimit: number; retryDelay: number; expireIn
   'log.read': { retryLimit: 2, retryDelay: 5, expireInSeconds: 900 },
   'files.remove': { retryLimit: 11, retryDelay: 5, expireInSeconds: 60 },
   'picture.resize': { retryLimit: 11, retryDelay: 5, expireInSeconds: 180 },
+  'booking.expire': { retryLimit: 5, retryDelay: 5, expireInSeconds: 60 },
 };
 
 /** `failed` is told what goes wrong between jobs, the database being away above all; the queue goes on trying. */
@@ -24,10 +25,10 @@ export async function openQueue(databaseUrl: string, failed: (error: Error) => v
 
 /** Jobs as rows of the deed's own transaction: rolled back with it, run only once it is committed. */
 export function jobsOn(boss: PgBoss): Jobs {
-  return {
-    async send(tx: EntityManager, name, payload) {
-      const executeSql = async (text: string, values: unknown[]) => ({ rows: await tx.query(text, values) });
-      await boss.send(name, payload, { ...QUEUES[name], retryBackoff: true, db: { executeSql } });
-    },
+  const later: Jobs['later'] = async (tx: EntityManager, { name, payload, afterSeconds }) => {
+    const executeSql = async (text: string, values: unknown[]) => ({ rows: await tx.query(text, values) });
+    const when = { startAfter: Math.max(0, Math.ceil(afterSeconds)) };
+    await boss.send(name, payload, { ...QUEUES[name], ...when, retryBackoff: true, db: { executeSql } });
   };
+  return { later, send: (tx, name, payload) => later(tx, { name, payload, afterSeconds: 0 }) };
 }

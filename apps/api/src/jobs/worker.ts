@@ -22,6 +22,7 @@ const NAMES: readonly JobName[] = [
   'picture.resize',
   'files.remove',
   'log.read',
+  'booking.expire',
 ];
 
 /** Nothing of these outlasts its being done: a mail holds an address and a secret link. */
