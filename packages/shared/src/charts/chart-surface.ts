@@ -39,8 +39,8 @@ export type ChartSurface = {
 
 /**
  * Depth and σ at every water node near enough to a sounding. Depths use all samples at once (blended patches above
- * 2000, and σ from the same); up to 2000 σ uses 16 by octant, which never understates the σ of all. σ holds the nugget: what the bed does between casts is part of
- * not knowing the depth at a place, while the drawn depth leaves it out; and it is widened or narrowed by how well the
+ * 2000, and σ from the same); up to 2000 σ uses 16 by octant, which never understates the σ of all. σ holds the nugget: what
+ * the bed does between casts is part of not knowing the depth at a place, while the drawn depth leaves it out; and it is widened or narrowed by how well the
  * soundings round about were foretold.
  */
 export function chartSurface(
