@@ -18,7 +18,7 @@ export const downhill: Record<string, string[]> = {
   notices: ['lakes'],
   tickets: ['lakes'],
   payments: ['fisheries'],
-  bookings: ['tickets', 'rules', 'closures', 'payments', 'lakes'],
+  bookings: ['tickets', 'rules', 'closures', 'payments', 'surveys'],
   rounds: ['bookings'],
   works: ['bookings'],
   members: ['bookings'],
