@@ -12,6 +12,7 @@ import { pictureRoutes } from './lakes/picture-routes';
 import { photoRoutes } from './lakes/photo-routes';
 import { lakeRoutes } from './lakes/routes';
 import { waterRoutes } from './lakes/water-routes';
+import { ruleRoutes } from './rules/routes';
 import { bottomRoutes } from './surveys/bottom-routes';
 import { logRoutes } from './surveys/log-routes';
 import { surveyRoutes } from './surveys/routes';
@@ -25,6 +26,7 @@ export const routes: readonly Route[] = [
   ...photoRoutes,
   ...pictureRoutes,
   ...fileRoutes,
+  ...ruleRoutes,
   ...bookingRoutes,
   ...surveyRoutes,
   ...bottomRoutes,

@@ -2,8 +2,8 @@ import { z } from 'zod';
 import { Version } from '../fisheries/contract';
 import { Acknowledgement, ChangeWeight, Rule, RuleSheet, SheetNumber } from './contract';
 
-/** What happened to a rule between two versions. Words are runs of the text: kept, taken away or put in. */
-const WordRunView = z.object({ kind: z.enum(['same', 'removed', 'added']), text: z.string() });
+/** What happened to a rule between two versions. Words are runs of the text: kept, gone or new. */
+const WordRunView = z.object({ kind: z.enum(['same', 'gone', 'new']), text: z.string() });
 export const RuleChangeView = z.discriminatedUnion('kind', [
   z.object({ kind: z.literal('added'), rule: Rule }),
   z.object({ kind: z.literal('removed'), rule: Rule }),
@@ -18,7 +18,8 @@ export const RuleChangeView = z.discriminatedUnion('kind', [
 export type RuleChangeView = z.infer<typeof RuleChangeView>;
 
 /** A published version: frozen. `changes` are those since the version before it; null for the first. */
-export const SheetView = SheetNumber.extend({
+export const SheetView = z.object({
+  ...SheetNumber.shape,
   id: z.uuid(),
   weight: ChangeWeight,
   publishedAt: z.iso.datetime(),
@@ -33,7 +34,13 @@ export const RulesView = z.object({
   fisheryName: z.string(),
   sheet: SheetView.nullable(),
   /** The newest version the reader has read; null: none, or a stranger. */
-  read: SheetNumber.extend({ at: z.iso.datetime(), method: Acknowledgement.shape.method }).nullable(),
+  read: z
+    .object({
+      ...SheetNumber.shape,
+      at: z.iso.datetime(),
+      method: Acknowledgement.shape.method,
+    })
+    .nullable(),
   /** What changed since they read it; null where that is the whole sheet. */
   since: z.array(RuleChangeView).nullable(),
   may: z.object({
@@ -49,7 +56,8 @@ export type RulesView = z.infer<typeof RulesView>;
 /** GET /api/fisheries/:fisheryId/rules/versions (members, staff; others those they have read), the newest first. */
 export const SheetList = z.object({
   versions: z.array(
-    SheetNumber.extend({
+    z.object({
+      ...SheetNumber.shape,
       id: z.uuid(),
       weight: ChangeWeight,
       publishedAt: z.iso.datetime(),
