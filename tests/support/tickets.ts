@@ -3,6 +3,9 @@ import { Booking } from '@mereward/db/entities/bookings/booking';
 import { PegTime } from '@mereward/db/entities/bookings/peg-time';
 import { Lake } from '@mereward/db/entities/lakes/lake';
 import { Peg } from '@mereward/db/entities/lakes/peg';
+import { TicketType } from '@mereward/db/entities/tickets/ticket-type';
+import type { TicketType as TicketTypeDetails } from '@mereward/shared/tickets/contract';
+import { TICKET_TEMPLATES } from '@mereward/shared/tickets/ticket-templates';
 import { randomUUID } from 'node:crypto';
 import type { TestServer } from './server';
 
@@ -48,4 +51,21 @@ export async function aTicket(test: TestServer, { pegId, holder, from, until }: 
     rods: 1,
   });
   return id;
+}
+
+/** A kind of ticket that is sold for a lake; what is wished goes over the day ticket of the templates. */
+export async function aTicketType(
+  test: TestServer,
+  lake: { id: string; fisheryId: string },
+  wishes: Partial<TicketTypeDetails> = {},
+): Promise<{ id: string; details: TicketTypeDetails }> {
+  const { manager } = test.server.source;
+  const { createdBy } = await manager.findOneByOrFail(Lake, { id: lake.id });
+  const id = randomUUID();
+  const name = `${wishes.name ?? TICKET_TEMPLATES.day.name} ${id.slice(0, 8)}`;
+  const details: TicketTypeDetails = { ...TICKET_TEMPLATES.day, lakeIds: [lake.id], ...wishes, name };
+  const createdAt = test.server.clock();
+  const row = { id, fisheryId: lake.fisheryId, details, version: 1, withdrawnAt: null, createdBy, createdAt };
+  await manager.insert(TicketType, row);
+  return { id, details };
 }

@@ -1,5 +1,6 @@
 import { accountRoutes } from './accounts/routes';
 import { bookingRoutes } from './bookings/routes';
+import { termsRoutes } from './bookings/terms-routes';
 import { disagreementRoutes } from './charts/disagreement-routes';
 import { paperRoutes } from './charts/papers/paper-routes';
 import { leftOutRoutes } from './charts/left-out-routes';
@@ -16,6 +17,7 @@ import { ruleRoutes } from './rules/routes';
 import { bottomRoutes } from './surveys/bottom-routes';
 import { logRoutes } from './surveys/log-routes';
 import { surveyRoutes } from './surveys/routes';
+import { ticketRoutes } from './tickets/routes';
 
 /** Every route of the API, word by word. */
 export const routes: readonly Route[] = [
@@ -27,6 +29,8 @@ export const routes: readonly Route[] = [
   ...pictureRoutes,
   ...fileRoutes,
   ...ruleRoutes,
+  ...ticketRoutes,
+  ...termsRoutes,
   ...bookingRoutes,
   ...surveyRoutes,
   ...bottomRoutes,
