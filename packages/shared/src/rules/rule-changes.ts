@@ -51,7 +51,7 @@ export const ruleOf = (change: RuleChange): Rule => (change.kind === 'changed' ?
 const numberOf = (change: RuleChange): number => ruleOf(change).number;
 
 /** “2 rules changed”, “1 rule added and 1 taken away”: for a letter’s subject and over the list. */
-export function changesWords(changes: readonly RuleChange[]): string {
+export function changesWords(changes: readonly Pick<RuleChange, 'kind'>[]): string {
   const parts = (
     [
       ['changed', 'changed'],

@@ -2,15 +2,18 @@ import { z } from 'zod';
 import { Version } from '../fisheries/contract';
 import { Acknowledgement, ChangeWeight, Rule, RuleSheet, SheetNumber } from './contract';
 
+/** A rule as it is told; a newer server may say more of it. */
+const RuleView = z.object(Rule.shape);
+
 /** What happened to a rule between two versions. Words are runs of the text: kept, gone or new. */
 const WordRunView = z.object({ kind: z.enum(['same', 'gone', 'new']), text: z.string() });
 export const RuleChangeView = z.discriminatedUnion('kind', [
-  z.object({ kind: z.literal('added'), rule: Rule }),
-  z.object({ kind: z.literal('removed'), rule: Rule }),
+  z.object({ kind: z.literal('added'), rule: RuleView }),
+  z.object({ kind: z.literal('removed'), rule: RuleView }),
   z.object({
     kind: z.literal('changed'),
-    before: Rule,
-    after: Rule,
+    before: RuleView,
+    after: RuleView,
     words: z.array(WordRunView),
     fields: z.array(z.string()),
   }),
@@ -23,7 +26,7 @@ export const SheetView = z.object({
   id: z.uuid(),
   weight: ChangeWeight,
   publishedAt: z.iso.datetime(),
-  rules: z.array(Rule),
+  rules: z.array(RuleView),
   changes: z.array(RuleChangeView).nullable(),
 });
 export type SheetView = z.infer<typeof SheetView>;
@@ -71,7 +74,7 @@ export type SheetList = z.infer<typeof SheetList>;
 /** GET /api/fisheries/:fisheryId/rules/draft (office, manager, owner); null when nobody has begun one. */
 export const DraftView = z.object({
   id: z.uuid(),
-  rules: z.array(Rule),
+  rules: z.array(RuleView),
   version: z.int(),
   changes: z.array(RuleChangeView), // against the version in force
   words: z.string(),
