@@ -19,6 +19,11 @@ const Environment = z.object({
   /** The address of a store that isn't Amazon's. */
   FILES_S3_ENDPOINT: z.url({ protocol: /^https?$/ }).optional(),
   FILES_S3_REGION: z.string().min(1).default('us-east-1'),
+  /** The card provider's keys (Stripe). Without both, no cards are taken on the web. */
+  STRIPE_SECRET_KEY: z.string().min(8).optional(),
+  STRIPE_WEBHOOK_SECRET: z.string().min(8).optional(),
+  /** Another address of the provider: the demo's, which takes no real card. */
+  STRIPE_URL: z.url({ protocol: /^https?$/ }).optional(),
   WEB_DIR: z.string().default('apps/mobile/dist'),
   /** Shows the demo's captured mail and its sign-ins. Never set where real people's mail could be captured. */
   DEMO: flag,
@@ -40,6 +45,8 @@ export type Config = {
   filesDir: string;
   /** Where files are kept instead of `filesDir`. */
   filesBucket: { name: string; endpoint: string | null; region: string } | null;
+  /** Null: no cards are taken on the web. */
+  cards: { secretKey: string; webhookSecret: string; url: string | null } | null;
   webDir: string;
   demo: boolean;
   trustProxy: number;
@@ -72,6 +79,14 @@ export function readConfig(env: NodeJS.ProcessEnv): Config {
     filesBucket: e.FILES_S3_BUCKET
       ? { name: e.FILES_S3_BUCKET, endpoint: e.FILES_S3_ENDPOINT ?? null, region: e.FILES_S3_REGION }
       : null,
+    cards:
+      e.STRIPE_SECRET_KEY && e.STRIPE_WEBHOOK_SECRET
+        ? {
+            secretKey: e.STRIPE_SECRET_KEY,
+            webhookSecret: e.STRIPE_WEBHOOK_SECRET,
+            url: e.STRIPE_URL ?? null,
+          }
+        : null,
     webDir: e.WEB_DIR,
     demo: e.DEMO,
     trustProxy: e.TRUST_PROXY,

@@ -25,6 +25,9 @@ export function accountOf(actor: Actor): string {
   return actor.id;
 }
 
+/** The account that asks; null for a stranger, and for what the program does by itself. */
+export const accountOrNull = (actor: Actor): string | null => (actor.kind === 'account' ? actor.id : null);
+
 /** What the world outside the database is to a service: queued in the deed's transaction, done after it. */
 export type Jobs = {
   send(tx: EntityManager, name: JobName, payload: object): Promise<void>;
@@ -39,6 +42,8 @@ export type JobName =
   | 'picture.resize'
   | 'files.remove'
   | 'log.read'
+  | 'refund.ask'
+  | 'payment.close'
   | 'booking.expire';
 
 /** Everything a service gets: never a request. */

@@ -66,6 +66,7 @@ import { ChartLeftOut1780000013000 } from './migrations/1780000013000-ChartLeftO
 import { TicketsAndPegTime1780000020000 } from './migrations/1780000020000-TicketsAndPegTime';
 import { PaymentsAndLedger1780000021000 } from './migrations/1780000021000-PaymentsAndLedger';
 import { RulesNoticesAndWaiting1780000022000 } from './migrations/1780000022000-RulesNoticesAndWaiting';
+import { OfficeMoney1780000032000 } from './migrations/1780000032000-OfficeMoney';
 
 const ENTITIES = [
   Account,
@@ -137,6 +138,7 @@ const MIGRATIONS = [
   TicketsAndPegTime1780000020000,
   PaymentsAndLedger1780000021000,
   RulesNoticesAndWaiting1780000022000,
+  OfficeMoney1780000032000,
   ReportsTakenBack1780000014000,
 ];
 

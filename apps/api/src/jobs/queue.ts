@@ -10,6 +10,9 @@ const QUEUES: Record<JobName, { retryLimit: number; retryDelay: number; expireIn
   'log.read': { retryLimit: 2, retryDelay: 5, expireInSeconds: 900 },
   'files.remove': { retryLimit: 11, retryDelay: 5, expireInSeconds: 60 },
   'picture.resize': { retryLimit: 11, retryDelay: 5, expireInSeconds: 180 },
+  // Fourteen tries are some twenty hours, within the day a provider knows an idempotency key.
+  'refund.ask': { retryLimit: 13, retryDelay: 5, expireInSeconds: 120 },
+  'payment.close': { retryLimit: 11, retryDelay: 5, expireInSeconds: 120 },
   'booking.expire': { retryLimit: 5, retryDelay: 5, expireInSeconds: 60 },
 };
 

@@ -22,6 +22,8 @@ const NAMES: readonly JobName[] = [
   'picture.resize',
   'files.remove',
   'log.read',
+  'refund.ask',
+  'payment.close',
   'booking.expire',
 ];
 

@@ -40,6 +40,8 @@ export type MoneyDeed =
   | { kind: 'sale' | 'refund'; method: PaymentMethod; lines: readonly Line[] }
   | { kind: 'credit_note'; lines: readonly Line[] } // a sale undone against credit to spend later
   | { kind: 'card_fee' | 'payout' | 'cash_banked'; amountPence: number }
+  | { kind: 'refund_returned'; amountPence: number } // told as made, came back later: owed again
+  | { kind: 'refund_again'; method: PaymentMethod; amountPence: number } // what was owed so is given after all
   | { kind: 'dispute_opened' | 'dispute_won' | 'dispute_lost'; amountPence: number }
   | { kind: 'cash_counted'; expectedPence: number; countedPence: number };
 
@@ -72,6 +74,10 @@ function sides(deed: MoneyDeed): Posting[] {
       return moved(deed.amountPence, 'card_money_coming', 'card_fees');
     case 'payout':
       return moved(deed.amountPence, 'card_money_coming', 'bank');
+    case 'refund_returned':
+      return moved(deed.amountPence, 'credit_owed', 'card_money_coming');
+    case 'refund_again':
+      return moved(deed.amountPence, paidInto(deed.method, []), 'credit_owed');
     case 'cash_banked':
       return moved(deed.amountPence, 'cash_tin', 'bank');
     case 'dispute_opened':

@@ -229,6 +229,7 @@ describe('takings', () => {
     lakeId: 'far',
     ticketTypeId: 'day',
     method: 'card_online',
+    rateBp: 2000,
     grossPence,
     vatPence: vatOfGross(grossPence, 2000),
     ...more,

@@ -33,6 +33,8 @@ export const DecideRefund = z.strictObject({ approve: z.boolean(), words: words(
 export type DecideRefund = z.infer<typeof DecideRefund>;
 export const AskRefundAgain = z.strictObject({ by: z.enum(['card', 'hand']) });
 export type AskRefundAgain = z.infer<typeof AskRefundAgain>;
+export const GiveByHand = z.strictObject({ method: z.enum(['cash', 'bank_transfer', 'card_reader']) });
+export type GiveByHand = z.infer<typeof GiveByHand>;
 
 /** What waits for somebody in the office, oldest first. */
 export const OfficeQueueKind = z.enum([

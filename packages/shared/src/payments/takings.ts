@@ -7,6 +7,7 @@ export type Taking = {
   lakeId: string;
   ticketTypeId: string;
   method: PaymentMethod;
+  rateBp: number;
   grossPence: number;
   vatPence: number;
 };
@@ -27,9 +28,10 @@ export const TAKINGS_KEYS = {
   lake: ({ lakeId }: Taking): string => lakeId,
   ticketType: ({ ticketTypeId }: Taking): string => ticketTypeId,
   method: ({ method }: Taking): string => method,
+  vatRate: ({ rateBp }: Taking): string => String(rateBp).padStart(5, '0'),
 } as const;
 
-/** Takings added up by day, month, lake, kind of ticket or method, in the order of the key. Pence. */
+/** Takings added up by day, month, lake, kind of ticket, method or rate of VAT, in the order of the key. Pence. */
 export function takingsBy(takings: readonly Taking[], by: keyof typeof TAKINGS_KEYS): TakingsSum[] {
   const groups = new Map<string, Taking[]>();
   for (const taking of takings) {

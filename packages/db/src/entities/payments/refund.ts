@@ -18,4 +18,6 @@ export class Refund {
   @Column('timestamptz', { name: 'approved_at', nullable: true }) approvedAt!: Date | null;
   @Column('timestamptz', { name: 'done_at', nullable: true }) doneAt!: Date | null;
   @Column('text') fault!: string;
+  @Column('uuid', { name: 'seen_by', nullable: true }) seenBy!: string | null;
+  @Column('timestamptz', { name: 'seen_at', nullable: true }) seenAt!: Date | null;
 }
