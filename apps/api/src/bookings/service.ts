@@ -5,13 +5,14 @@ import type { Peg } from '@mereward/db/entities/lakes/peg';
 import { Booking } from '@mereward/db/entities/bookings/booking';
 import { USUAL_CANCELLATION } from '@mereward/shared/bookings/cancellation';
 import type { BookingDetails, WriteTicket } from '@mereward/shared/bookings/contract';
+import { toldLine } from '@mereward/shared/lakes/lake-places';
 import { whyNotLet } from '@mereward/shared/lakes/peg-rules';
 import { Problem } from '@mereward/shared/problems/problem';
 import { civilDay } from '@mereward/shared/time/civil-day';
 import type { EntityManager } from 'typeorm';
 import { accountOf, holdsAny, type Ctx } from '../ctx';
 import { allowOnly, notFound } from '../http/deny';
-import { findPeg } from '../lakes/found';
+import { findPeg, originOfLake } from '../lakes/found';
 import { mustRepeat } from '../repeat';
 import { freePegs, takePegs } from './peg-calendar';
 import { TICKET_WRITERS } from './policy';
@@ -78,7 +79,8 @@ async function refuseUnlet({ tx }: Ctx, at: { peg: Peg; lake: Lake }, { from, un
       detail: 'Nothing was written. Choose another peg or another time.',
     });
   };
-  const under = whyNotLet(details);
+  const drawn = { places: at.lake.details.places, origin: originOfLake(at.lake) };
+  const under = whyNotLet({ overheadLine: toldLine(details, drawn) });
   if (under) refuse(under);
   const { zone } = await tx.findOneByOrFail(Fishery, { id: at.lake.fisheryId });
   const lastDay = civilDay(new Date(until.getTime() - 1), zone);

@@ -8,11 +8,13 @@ import { toBase64 } from '@mereward/shared/charts/chart-encoding';
 import type { ChartChange } from '@mereward/shared/charts/chart-change-contract';
 import type { ChartView, LayerNotes } from '@mereward/shared/charts/contract';
 import { toPlane } from '@mereward/shared/geometry/plane';
+import { placesInPlane } from '@mereward/shared/lakes/lake-places';
 import { facingDeg } from '@mereward/shared/lakes/peg-rules';
 import type { EntityManager } from 'typeorm';
 import type { Ctx } from '../ctx';
 import { originOfLake } from '../lakes/found';
 import { levelNow } from '../lakes/levels';
+import { lakeDetailsFor } from '../lakes/queries';
 import { ageNow } from './chart-age-now';
 import { logSoundings, surveyedBy } from './built-logs';
 import { chartContent, type ChartContent } from './chart-layers';
@@ -52,6 +54,7 @@ export async function chartView(ctx: Ctx, chartId: string): Promise<ChartView> {
     origin,
     outline: content?.built.outline ?? lake.details.outline,
     ...(await places(tx, lake)),
+    places: placesInPlane(lakeDetailsFor(ctx.actor, lake).places ?? [], origin),
     ...(shown ? layersFor(shown, sight, now) : NOTHING),
     ...(content ? { surveyedBy: surveyedBy(content.built) } : {}),
     layerNotes: shown ? sight.notes : missingNotes({ chart, lake }, sight),

@@ -18,7 +18,9 @@ import {
   rounded,
   type Feature,
   type FeatureCollection,
+  type Geometry,
   type Place,
+  type Position,
   type Properties,
 } from './geojson-feature';
 import { onTheWater } from './on-the-water';
@@ -49,6 +51,7 @@ export function chartGeojson(view: ChartView, places: MapPlaces): FeatureCollect
       properties: { kind: 'marker', code, name },
     })),
     ...boardFeatures(places),
+    ...placeFeatures(view, place),
     ...waterFeatures(places, place),
     ...spotFeatures(places, place),
     ...areaFeatures(view, places, place),
@@ -135,6 +138,21 @@ const boardFeatures = ({ boards }: MapPlaces): Feature[] =>
     geometry: pointOf(rounded(position)),
     properties: { kind: 'gauge', code, board: kind, unit, datum_board: isDatumBoard ? 'yes' : 'no' },
   }));
+
+/** Parking, gates, throw lines and hazards as points; an overhead line as a line. */
+const placeFeatures = ({ places = [] }: ChartView, place: Place): Feature[] =>
+  places.flatMap(({ id, kind, name, note, audience, line }): Feature[] => {
+    const positions = positionsOf(line, place);
+    const [first] = positions;
+    if (!first) return [];
+    const geometry = kind === 'overhead_line' ? lineThrough(positions) : pointOf(first);
+    return geometry
+      ? [{ type: 'Feature', id, geometry, properties: { kind, name, note, visibility: audience } }]
+      : [];
+  });
+
+const lineThrough = (coordinates: Position[]): Geometry | null =>
+  coordinates.length > 1 ? { type: 'LineString', coordinates } : null;
 
 function waterFeatures({ waters }: MapPlaces, place: Place): Feature[] {
   return waters.flatMap(({ number, areaM2, rings }): Feature[] => {

@@ -4,11 +4,12 @@ import { chartCaution, EMERGENCY, overheadCaution } from '@mereward/shared/chart
 import type { LayerNotes, PegPageView, SpotView } from '@mereward/shared/charts/contract';
 import { RIG_CAUTION } from '@mereward/shared/charts/presentation';
 import { toPlane } from '@mereward/shared/geometry/plane';
+import type { PegDetails } from '@mereward/shared/lakes/contract';
 import { In, type EntityManager } from 'typeorm';
 import type { Ctx } from '../ctx';
 import { photosOf } from '../files/queries';
 import { placeWater, watersOf, type WatersFound } from '../lakes/peg-waters';
-import { pegDetailsFor } from '../lakes/queries';
+import { toldDetails } from '../lakes/queries';
 import { surveyedBy } from './built-logs';
 import { layersOf } from './chart-layers';
 import { changesFor } from './chart-view';
@@ -25,6 +26,7 @@ const MOST_NEIGHBOURS = 4; // without their sections, which weigh most
 export async function pegPage(ctx: Ctx, pegId: string): Promise<PegPageView> {
   const ground = await pegGround(ctx, pegId);
   const { peg, lake, fishery, chart, sight, ticket } = ground;
+  const details = toldDetails(ctx.actor, lake, peg.details);
   const photos = await photosOf(ctx.tx, { kind: 'peg', ids: [pegId], staff: sight.staff });
   const { id, version, surveyedFrom, surveyedTo, datumM } = chart ?? {};
   const waters = await watersOf(ctx.tx, lake);
@@ -49,7 +51,7 @@ export async function pegPage(ctx: Ctx, pegId: string): Promise<PegPageView> {
       emergencyAccess: lake.details.emergencyAccess,
       phoneSignal: lake.details.phoneSignal,
     },
-    details: pegDetailsFor(ctx.actor, lake.fisheryId, peg.details),
+    details,
     photos: photos.get(pegId) ?? [],
     chart:
       id && version && surveyedFrom && surveyedTo && datumM !== undefined && told
@@ -67,7 +69,7 @@ export async function pegPage(ctx: Ctx, pegId: string): Promise<PegPageView> {
     ...seen,
     extract: pegExtract(ground),
     layerNotes: notesOf(ground),
-    cautions: cautionsOf(ground, told),
+    cautions: cautionsOf(ground, details, told),
     rigCaution: RIG_CAUTION,
     emergencyWords: EMERGENCY,
     cardUrl: `/api/pegs/${peg.id}/card.pdf`,
@@ -117,8 +119,8 @@ function notesOf({ chart, sight: { notes } }: PegGround): LayerNotes {
   };
 }
 
-function cautionsOf({ peg, chart }: PegGround, told: AgeNow | null): string[] {
-  const overhead = overheadCaution(peg.details);
+function cautionsOf({ chart }: PegGround, details: PegDetails, told: AgeNow | null): string[] {
+  const overhead = overheadCaution(details);
   const changed =
     told && (told.age === 'changed' || told.age === 'old') ? ageWords(told.age, told.changes) : null;
   return [

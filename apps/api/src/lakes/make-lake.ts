@@ -2,12 +2,13 @@ import { Fishery } from '@mereward/db/entities/fisheries/fishery';
 import { Lake } from '@mereward/db/entities/lakes/lake';
 import { originOf, outlineFromRings, type OutlineReading } from '@mereward/shared/geometry/outline';
 import type { ChangeLake, LakeDetails, MakeLake } from '@mereward/shared/lakes/contract';
+import { lakePlaceFaults } from '@mereward/shared/lakes/lake-places';
 import { Problem } from '@mereward/shared/problems/problem';
 import { orConflict } from '../conflict';
 import { accountOf, type Ctx } from '../ctx';
 import { allowOnly, notFound } from '../http/deny';
 import { insertOnce, mustRepeat, refuseFaults, staleVersion } from '../repeat';
-import { findLake } from './found';
+import { findLake, originOfLake } from './found';
 import { LAKE_CHANGERS } from './policy';
 
 const NAME_TAKEN = 'Another lake of this fishery has this name';
@@ -19,6 +20,9 @@ export async function makeLake(ctx: Ctx, fisheryId: string, input: MakeLake): Pr
   allowOnly(actor, { fisheryId, what: 'fishery' }, LAKE_CHANGERS);
   const { details, areaM2 } = checked(input.details);
   const [originLon, originLat] = originOf(details.outline);
+  refuseFaults(
+    lakePlaceFaults(details.places ?? [], { origin: [originLon, originLat], outline: details.outline }),
+  );
   const createdBy = accountOf(actor);
   const made = await insertOnce(tx, Lake, {
     id: input.id,
@@ -40,11 +44,16 @@ export async function makeLake(ctx: Ctx, fisheryId: string, input: MakeLake): Pr
   mustRepeat({ by: createdBy, content: details }, { by: kept.createdBy, content: kept.details });
 }
 
-/** Changes a lake. Charts already published keep the datum and the outline they were made with. */
+/**
+ * Changes a lake. Charts already published keep the datum and the outline they were made with; a change that says nothing
+ * of places, as an older client's, leaves them.
+ */
 export async function changeLake({ tx, actor }: Ctx, lakeId: string, input: ChangeLake): Promise<void> {
   const lake = await findLake(tx, lakeId);
   allowOnly(actor, { fisheryId: lake.fisheryId, what: 'lake' }, LAKE_CHANGERS);
-  const { details, areaM2 } = checked(input.details);
+  const { places = lake.details.places } = input.details;
+  const { details, areaM2 } = checked({ ...input.details, ...(places ? { places } : {}) });
+  refuseFaults(lakePlaceFaults(places ?? [], { origin: originOfLake(lake), outline: details.outline }));
   const change = { name: details.name, details, areaM2, datumM: details.datumM, version: input.version + 1 };
   const { affected } = await orConflict(
     tx.update(Lake, { id: lakeId, version: input.version }, change),

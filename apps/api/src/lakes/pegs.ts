@@ -1,6 +1,7 @@
 import { Peg } from '@mereward/db/entities/lakes/peg';
 import type { Lake } from '@mereward/db/entities/lakes/lake';
 import type { ChangePeg, MakePeg, OrderPegs, PegDetails } from '@mereward/shared/lakes/contract';
+import { overheadDispute } from '@mereward/shared/lakes/lake-places';
 import { pegFaults } from '@mereward/shared/lakes/peg-rules';
 import { Problem } from '@mereward/shared/problems/problem';
 import { orConflict } from '../conflict';
@@ -68,6 +69,13 @@ export async function orderPegs({ tx, actor }: Ctx, lakeId: string, { pegIds }: 
   );
 }
 
+/** A peg's sheet may say more of an overhead line than the lake's drawing, and never less. */
 function refuse(details: PegDetails, lake: Lake): void {
-  refuseFaults(pegFaults(details, { origin: originOfLake(lake), outline: lake.details.outline }));
+  const origin = originOfLake(lake);
+  const { outline, places } = lake.details;
+  const dispute = overheadDispute(details, { places, origin });
+  refuseFaults([
+    ...pegFaults(details, { origin, outline }),
+    ...(dispute === null ? [] : [{ field: 'overheadLine/kind', words: dispute }]),
+  ]);
 }

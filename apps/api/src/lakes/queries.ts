@@ -5,6 +5,7 @@ import { Mark } from '@mereward/db/entities/lakes/mark';
 import { Peg } from '@mereward/db/entities/lakes/peg';
 import type {
   GaugeBoardView,
+  LakeDetails,
   LakeView,
   LevelReadingView,
   MarkView,
@@ -13,11 +14,13 @@ import type {
   PegListItem,
   PegView,
 } from '@mereward/shared/lakes/contract';
+import { overheadDispute, placesFor, toldLine } from '@mereward/shared/lakes/lake-places';
+import { toldPeg } from '@mereward/shared/lakes/told-peg';
 import { facingDeg } from '@mereward/shared/lakes/peg-rules';
 import type { EntityManager } from 'typeorm';
 import type { Actor, Ctx } from '../ctx';
 import { photosOf } from '../files/queries';
-import { findLake, findPeg } from './found';
+import { findLake, findPeg, originOfLake } from './found';
 import { levelNow } from './levels';
 import {
   isMember,
@@ -42,11 +45,11 @@ export async function lakeView({ tx, actor }: Ctx, lakeId: string): Promise<Lake
     fisheryId: lake.fisheryId,
     fisheryName: fishery.name,
     zone: fishery.zone,
-    details: lake.details,
+    details: lakeDetailsFor(actor, lake),
     origin: [lake.originLon, lake.originLat],
     areaM2: lake.areaM2,
     levelNow: await levelNow(tx, lakeId, lake.datumM),
-    pegs: await pegsOf(tx, lakeId),
+    pegs: await pegsOf(tx, lake, staff),
     marks: await marksOf(tx, lakeId, staff),
     boards: await boardsOf(tx, lakeId, staff),
     publishedChart: await publishedChart(tx, lakeId),
@@ -64,8 +67,25 @@ const mayAt = (actor: Actor, { fisheryId }: Lake): LakeView['may'] => ({
   approveCharts: mayApproveCharts(actor, fisheryId),
 });
 
-async function pegsOf(tx: EntityManager, lakeId: string): Promise<PegListItem[]> {
-  const pegs = await tx.find(Peg, { where: { lakeId }, order: { walkingOrder: 'ASC', number: 'ASC' } });
+/** The lake's details with only those places this reader is shown. */
+export function lakeDetailsFor(actor: Actor, { fisheryId, details }: Lake): LakeDetails {
+  if (!details.places) return details;
+  const reader = { member: isMember(actor, fisheryId), staff: isStaff(actor, fisheryId) };
+  return { ...details, places: placesFor(details.places, reader) };
+}
+
+/** A peg's details as this reader is told them, with what is drawn near it on the lake. */
+export function toldDetails(actor: Actor, lake: Lake, details: PegDetails): PegDetails {
+  const places = lakeDetailsFor(actor, lake).places ?? [];
+  return pegDetailsFor(actor, lake.fisheryId, toldPeg(details, { places, origin: originOfLake(lake) }));
+}
+
+async function pegsOf(tx: EntityManager, lake: Lake, staff: boolean): Promise<PegListItem[]> {
+  const drawn = { places: lake.details.places, origin: originOfLake(lake) };
+  const pegs = await tx.find(Peg, {
+    where: { lakeId: lake.id },
+    order: { walkingOrder: 'ASC', number: 'ASC' },
+  });
   return pegs.map(({ id, number, details }) => ({
     id,
     number,
@@ -74,8 +94,9 @@ async function pegsOf(tx: EntityManager, lakeId: string): Promise<PegListItem[]>
     facingDeg: facingDeg(details),
     status: details.status,
     statusReason: details.statusReason,
-    overheadFishing: details.overheadLine.fishing,
+    overheadFishing: toldLine(details, drawn).fishing,
     fromParkingM: details.access.fromParkingM,
+    ...(staff ? { overheadDispute: overheadDispute(details, drawn) } : {}),
   }));
 }
 

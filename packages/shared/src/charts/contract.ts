@@ -3,6 +3,7 @@ import { ChartLogView, SurveyedBy } from './chart-log-view';
 import { Position, Version } from '../fisheries/contract';
 import { LakePolygon, LevelNow, PhotoView } from '../lakes/contract';
 import { PlaceWater } from '../lakes/peg-water-contract';
+import { ShownPlace } from '../lakes/place-contract';
 import { Bottom, Cover, Grade, Substrate } from '../surveys/contract';
 import { BottomPoint, BottomQualityView, EndedEvidence } from './bottom-quality-contract';
 import { ChartChange } from './chart-change-contract';
@@ -165,6 +166,7 @@ export const ChartView = z.object({
   marks: z.array(
     z.object({ id: z.uuid(), code: z.string(), name: z.string(), xM: z.number(), yM: z.number() }),
   ),
+  places: z.array(ShownPlace).optional(), // what is drawn beside them, as far as this reader is shown it
   frame: GridFrame.nullable(),
   depth: z.string().nullable(), // int16 cm below datum
   sigma: z.string().nullable(), // uint8

@@ -1,6 +1,7 @@
 import { z } from 'zod';
 import { PhotoView } from '../files/contract';
 import { Position, Version } from '../fisheries/contract';
+import { LakePlaces } from './place-contract';
 
 export { AddPhoto, PhotoView } from '../files/contract';
 
@@ -50,6 +51,7 @@ export const LakeDetails = z.strictObject({
   maxGapM: z.number().min(2).max(15), // farther from a cast than this is "not surveyed"
   longestCastM: z.number().min(10).max(250),
   audiences: LayerAudiences,
+  places: LakePlaces.optional(), // parking, gates, throw lines, hazards, overhead lines; left out of a change they stay
 });
 export type LakeDetails = z.infer<typeof LakeDetails>;
 
@@ -270,6 +272,7 @@ export const PegListItem = z.object({
   statusReason: z.string(),
   overheadFishing: z.enum(['ok', 'restricted', 'no_fishing']),
   fromParkingM: z.int().nullable(),
+  overheadDispute: z.string().nullable().optional(), // staff: its sheet and the lake's drawing differ
 });
 export type PegListItem = z.infer<typeof PegListItem>;
 

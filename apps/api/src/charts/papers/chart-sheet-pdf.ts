@@ -2,6 +2,7 @@ import type { ChartView } from '@mereward/shared/charts/contract';
 import { isobathFigure } from '@mereward/shared/charts/depth-words';
 import { BOTTOM_GLYPHS } from '@mereward/shared/charts/drawing/bottom-glyphs';
 import { chartParts } from '@mereward/shared/charts/drawing/chart-parts';
+import { placeMarks } from '@mereward/shared/charts/drawing/place-marks';
 import { drawMap, farMarks, type MapParts } from '@mereward/shared/charts/drawing/draw-map';
 import { northMarks, scaleBarMarks } from '@mereward/shared/charts/drawing/furniture';
 import { stepsOf, type Page } from '@mereward/shared/charts/drawing/page';
@@ -137,7 +138,15 @@ function drawChartMap(doc: Doc, { chart, parts }: Drawn, { room, drawn: { view }
     heightPx: view.heightPx,
     ground: null,
     layers: [
-      { view, atPx: { x: 0, y: 0 }, marks: [...drawMap(parts, choice), ...farMarks(marks, INK_ONLY)] },
+      {
+        view,
+        atPx: { x: 0, y: 0 },
+        marks: [
+          ...drawMap(parts, choice),
+          ...placeMarks(chart.places ?? [], INK_ONLY, view),
+          ...farMarks(marks, INK_ONLY),
+        ],
+      },
       { marks: northMarks(view, { x: view.widthPx - 26, y: 40 }, INK_ONLY) },
     ],
   };

@@ -1,5 +1,6 @@
 import { groundOf } from '@mereward/shared/charts/drawing/ground';
 import { toPlane } from '@mereward/shared/geometry/plane';
+import { placesInPlane } from '@mereward/shared/lakes/lake-places';
 import type { LakeView } from '@mereward/shared/lakes/contract';
 import type { MapContent } from './map-layers';
 import { planeOutline } from './readied-chart';
@@ -20,5 +21,6 @@ export function bareLake(lake: LakeView): MapContent {
     spots: [],
     pegs: lake.pegs.map((peg) => ({ ...peg, ...at(peg.position) })),
     marks: lake.marks.map(({ details }) => ({ code: details.code, ...at(details.position) })),
+    places: placesInPlane(lake.details.places ?? [], lake.origin),
   };
 }

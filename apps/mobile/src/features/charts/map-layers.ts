@@ -11,6 +11,7 @@ import { northMarks, scaleBarMarks } from '@mereward/shared/charts/drawing/furni
 import type { Ground } from '@mereward/shared/charts/drawing/ground';
 import type { Line, Mark } from '@mereward/shared/charts/drawing/mark';
 import type { Palette } from '@mereward/shared/charts/drawing/palette';
+import { placeMarks, type DrawnPlace } from '@mereward/shared/charts/drawing/place-marks';
 import { pegMarks, type DrawnPeg } from '@mereward/shared/charts/drawing/shore-marks';
 import { PLAIN_SVG, toSvg } from '@mereward/shared/charts/drawing/to-svg';
 import { toPage, type View } from '@mereward/shared/charts/drawing/view';
@@ -28,6 +29,7 @@ export type MapContent = {
   pegs: readonly DrawnPeg[];
   marks: readonly { code: string; xM: number; yM: number }[];
   spots: readonly DrawnSpot[];
+  places?: readonly DrawnPlace[] | undefined;
   changed?: readonly Line[] | undefined; // rings of water that changed since it was surveyed
 };
 
@@ -57,7 +59,15 @@ export function baseLayer(content: MapContent, { view, palette, unit }: Pen): st
       selectedSpotId: null,
     },
   );
-  return svgOf(grown, [...marks, ...farMarks(freeMarks(content, view), palette)], 'base');
+  return svgOf(
+    grown,
+    [
+      ...marks,
+      ...placeMarks(content.places ?? [], palette, grown),
+      ...farMarks(freeMarks(content, view), palette),
+    ],
+    'base',
+  );
 }
 
 const CROWDED_PX = 34;

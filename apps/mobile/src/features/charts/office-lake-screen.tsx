@@ -12,7 +12,7 @@ import { bareLake } from '@/features/charts/bare-lake';
 import { ChartMap } from '@/features/charts/chart-map';
 import { useLake } from '@/features/lakes/api';
 import { AUDIENCES, LAYERS, LAKE_KINDS } from '@/features/lakes/lake-fields';
-import { BoardsSection, MarksSection } from '@/features/lakes/lake-parts';
+import { BoardsSection, MarksSection, PlacesSection } from '@/features/lakes/lake-parts';
 import { PegsSection } from '@/features/lakes/pegs-section';
 import { useUnits } from '@/hooks/use-units';
 import { area, figure } from '@/lib/format';
@@ -60,6 +60,7 @@ function Lake({ lake }: { lake: LakeView }) {
       <PegsSection lake={lake} />
       <BoardsSection lake={lake} />
       <MarksSection lake={lake} />
+      <PlacesSection lake={lake} />
     </>
   );
 }

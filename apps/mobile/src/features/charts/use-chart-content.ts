@@ -54,6 +54,7 @@ export function useChartContent(
       changed: changedWater(chart, ground.water),
       pegs: pegsForMap(chart.pegs),
       marks: chart.marks,
+      places: chart.places,
       spots,
     }),
     [ground, allBottom, shown.soundings, chart, spots],

@@ -1,8 +1,11 @@
 import type { LakeView } from '@mereward/shared/lakes/contract';
+import { PLACE_WORDS } from '@mereward/shared/lakes/place-contract';
 import { Empty } from '@/components/empty';
 import { LinkButton } from '@/components/link-button';
+import { Note } from '@/components/note';
 import { Section } from '@/components/section';
 import { Table } from '@/components/table';
+import { Text } from '@/components/text';
 import { permanenceWord } from '@/features/lakes/mark-fields';
 import { figure } from '@/lib/format';
 import { ago } from '@/lib/format-time';
@@ -95,3 +98,48 @@ export function MarksSection({ lake }: Props) {
     </Section>
   );
 }
+
+/** What is drawn at a lake beside pegs, boards and marks; and pegs whose own sheet says less of an overhead line. */
+export function PlacesSection({ lake }: Props) {
+  const places = lake.details.places ?? [];
+  const add = lake.may.change ? (
+    <LinkButton label="Add a place" href={`/office/lakes/${lake.id}/places/new`} />
+  ) : null;
+  if (places.length === 0)
+    return (
+      <Section title="Places">
+        <Empty title="Nothing drawn yet" action={add}>
+          Parking, gates, throw lines, hazards and overhead lines stand on the chart, the cards and the pegs’
+          pages.
+        </Empty>
+      </Section>
+    );
+  const disputes = lake.pegs.filter(({ overheadDispute }) => overheadDispute);
+  return (
+    <Section title="Places" end={add}>
+      {disputes.map(({ id, number, overheadDispute }) => (
+        <Note key={id} kind="danger" title={`Peg ${number}: two answers about an overhead line`}>
+          <Text>{overheadDispute}</Text>
+          <LinkButton label={`Peg ${number}’s own sheet`} href={`/office/lakes/${lake.id}/pegs/${id}`} />
+        </Note>
+      ))}
+      <Table
+        caption={`Places of ${lake.details.name}`}
+        csvName="places"
+        rows={places}
+        rowKey={({ id }) => id}
+        {...(lake.may.change
+          ? { href: ({ id }: { id: string }) => `/office/lakes/${lake.id}/places/${id}` as const }
+          : {})}
+        columns={[
+          { key: 'kind', head: 'Kind', value: ({ kind }) => PLACE_WORDS[kind] },
+          { key: 'name', head: 'Name', value: ({ name }) => name },
+          { key: 'who', head: 'Shown to', value: ({ audience }) => AUDIENCE_WORDS[audience] },
+          { key: 'note', head: 'Note', value: ({ note }) => note },
+        ]}
+      />
+    </Section>
+  );
+}
+
+const AUDIENCE_WORDS = { public: 'everybody', members: 'members and staff', staff: 'staff' } as const;

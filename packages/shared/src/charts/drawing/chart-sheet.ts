@@ -4,6 +4,7 @@ import { northMarks, scaleBarMarks } from './furniture';
 import { filled, ruled, stroked, text, type Mark } from './mark';
 import type { Layer, Page } from './page';
 import type { Palette } from './palette';
+import { placeMarks, type DrawnPlace } from './place-marks';
 import { swatchPage } from './swatch';
 import { bandsOf } from './tint';
 import { bestFit, toPage, type View } from './view';
@@ -22,6 +23,7 @@ export type SheetWords = {
 export type SheetInput = {
   parts: MapParts;
   marks: readonly { code: string; xM: number; yM: number }[];
+  places?: readonly DrawnPlace[] | undefined;
   words: SheetWords;
   depthWords: (depthM: number) => string;
   stickSpacingM: number;
@@ -48,7 +50,11 @@ export function drawSheet(input: SheetInput, { widthPx, heightPx }: SheetSize, p
   const map: Layer = {
     view,
     atPx: { x: EDGE_PX, y: HEAD_PX },
-    marks: [...drawMap(input.parts, choice), ...farMarks(marksInView(input, view), palette)],
+    marks: [
+      ...drawMap(input.parts, choice),
+      ...placeMarks(input.places ?? [], palette, view),
+      ...farMarks(marksInView(input, view), palette),
+    ],
   };
   const bar = {
     x: EDGE_PX,

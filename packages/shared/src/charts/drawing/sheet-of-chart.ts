@@ -31,6 +31,7 @@ export function sheetOfChart(chart: ChartView, { units, shown, today, levelRead 
   return {
     parts: chartParts(chart, { raisedM, stepM, shown }),
     marks: chart.marks,
+    places: chart.places,
     words: {
       lake: chart.lakeName,
       fishery: chart.fisheryName,

@@ -1,0 +1,1 @@
+export { LakePlaceScreen as default } from '@/features/charts/lake-place-screen';

@@ -1,0 +1,1 @@
+export { NewLakePlaceScreen as default } from '@/features/charts/lake-place-screen';
