@@ -1,4 +1,9 @@
+import { changesSince } from '@mereward/api/charts/changes';
+import { chartPatches } from '@mereward/api/charts/tellings';
+import { STRANGER, type Ctx } from '@mereward/api/ctx';
 import { seed } from '@mereward/api/demo/seed';
+import { FAR_OSTLE_CHART } from '@mereward/api/demo/seed-charts';
+import { insideRing } from '@mereward/shared/geometry/polygon';
 import { makeDataSource } from '@mereward/db/data-source';
 import { afterAll, beforeAll, expect, test } from 'vitest';
 import { freshDatabase } from '../support/fresh-database';
@@ -11,7 +16,7 @@ let databases: [Database, Database];
 beforeAll(async () => {
   databases = await Promise.all([freshDatabase(), freshDatabase()]);
   for (const { url } of databases) await seed(url, NOW, null);
-}, 120_000);
+}, 180_000);
 
 afterAll(() => Promise.all(databases.map(({ drop }) => drop())));
 
@@ -24,17 +29,81 @@ async function rows<Row>({ url }: Database, sql: string): Promise<Row[]> {
   }
 }
 
+const holds = (rings: readonly number[][], place: { xM: number; yM: number }): boolean =>
+  rings.some((line) =>
+    insideRing(
+      Array.from({ length: line.length / 2 }, (_, i) => ({ xM: line[2 * i] ?? 0, yM: line[2 * i + 1] ?? 0 })),
+      place,
+    ),
+  );
+
+/** Reads the demo as a stranger does. */
+async function asStranger<T>(read: (ctx: Ctx) => Promise<T>): Promise<T> {
+  const source = await makeDataSource(databases[0].url, 1).initialize();
+  try {
+    const jobs = { send: () => Promise.resolve() };
+    return await read({ tx: source.manager, actor: STRANGER, now: NOW, jobs, publicUrl: 'http://127.0.0.1' });
+  } finally {
+    await source.destroy();
+  }
+}
+
 test('Far Ostle is published by another than its surveyors, and Ostle Pool waits as a draft', async () => {
   const charts = await rows<{ lake: string; status: string; version: string | null; other: boolean | null }>(
     databases[0],
     `SELECT l.name AS lake, c.status, c.version,
             c.approved_by NOT IN (SELECT surveyor_id FROM survey_visit WHERE id = ANY (c.visit_ids)) AS other
-       FROM chart c JOIN lake l ON l.id = c.lake_id ORDER BY l.name`,
+       FROM chart c JOIN lake l ON l.id = c.lake_id ORDER BY l.name, c.version`,
   );
   expect(charts).toEqual([
+    { lake: 'Far Ostle', status: 'superseded', version: '2025.1', other: true },
     { lake: 'Far Ostle', status: 'published', version: '2026.1', other: true },
     { lake: 'Ostle Pool', status: 'draft', version: null, other: null },
   ]);
+});
+
+test('Far Ostle’s two charts differ where the gully was dug, and the works stand between them by their days', async () => {
+  const changes = await asStranger((ctx) => changesSince(ctx, FAR_OSTLE_CHART, {}));
+  expect(changes.since?.version).toBe('2025.1');
+  const dug = changes.areas?.find(
+    ({ kind, rings }) => kind === 'deeper' && holds(rings, { xM: -72, yM: 17 }),
+  );
+  expect(dug?.meanChangeM).toBeGreaterThan(0.4); // 1.3 m at the middle of what was dug, nothing at its edge
+  const events = await rows<{ day: string; kind: string; drawn: boolean }>(
+    databases[0],
+    `SELECT happened_on::text AS day, kind, area IS NOT NULL AS drawn FROM bottom_event e
+       JOIN lake l ON l.id = e.lake_id WHERE l.name = 'Far Ostle' ORDER BY happened_on`,
+  );
+  expect(events).toEqual([
+    { day: '2025-11-14', kind: 'weed_cut', drawn: true },
+    { day: '2026-01-22', kind: 'dredged', drawn: true },
+  ]);
+});
+
+test('the clean hole in the weed of the west bay stands out, and its pegs are told', async () => {
+  const { patches } = await asStranger((ctx) => chartPatches(ctx, FAR_OSTLE_CHART));
+  const hole = patches?.find(({ bottom, around }) => bottom === 'clear' && around === 'tall_weed');
+  expect(Math.hypot((hole?.xM ?? 0) + 128, (hole?.yM ?? 0) + 6)).toBeLessThan(4); // its middle, by a few cells
+  expect(hole?.reach.map(({ number }) => number)).toContain('FO22');
+});
+
+test('one report waits and one counts in the spring chart; a log was taken in with the autumn one', async () => {
+  const [told] = await rows<{
+    waiting: number;
+    accepted: number;
+    counted: number;
+    logged: number;
+    found: number;
+  }>(
+    databases[0],
+    `SELECT (SELECT count(*) FROM disagreement WHERE status = 'waiting')::int AS waiting,
+            (SELECT count(*) FROM disagreement WHERE status = 'accepted')::int AS accepted,
+            (SELECT jsonb_array_length(built -> 'reports') FROM chart WHERE version = '2026.1') AS counted,
+            (SELECT jsonb_array_length(built -> 'logs') FROM chart WHERE version = '2025.1') AS logged,
+            (SELECT count(*) FROM sounding)::int AS found`,
+  );
+  expect(told).toMatchObject({ waiting: 1, accepted: 1, counted: 1, logged: 1 });
+  expect(told?.found).toBeGreaterThan(150);
 });
 
 test('two demos of one day are alike to the byte', async () => {

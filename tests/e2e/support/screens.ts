@@ -33,6 +33,7 @@ const KINDS = [
   'spotId',
   'logId',
   'pictureId',
+  'placeId',
 ] as const;
 export type Ids = Readonly<Record<(typeof KINDS)[number], string>>;
 
@@ -62,6 +63,7 @@ export async function demoIds(site: Site): Promise<Ids> {
     visitId,
     logId,
     pictureId: await aPicture(site, lakeId),
+    placeId: lake.details.places?.[0]?.id ?? '',
   };
 }
 

@@ -8,7 +8,7 @@ import { FAR_OSTLE, OSTLE_POOL, type DemoWater } from './waters';
 export type Bed = { depthM: number; substrate: Substrate; cover: Cover };
 
 /** A long mound or trough: Gaussian across, fading at both ends. Height in metres, up negative depth. */
-type Ridge = { from: Point; to: Point; halfWidthM: number; depthM: number };
+export type Ridge = { from: Point; to: Point; halfWidthM: number; depthM: number };
 
 function along(ridge: Ridge, p: Point): number {
   const dx = ridge.to.xM - ridge.from.xM;
@@ -35,7 +35,12 @@ const WEST_BAY: Ridge = {
   depthM: -0.7,
 };
 
-/** Far Ostle's invented bed: two gravel bars, a silted gully between them, a hole in the east, weed in the west bay. */
+/** A hole in the weed of the west bay, hard and swept clean, such as fish keep. */
+export const CLEAN_HOLE = { xM: -128, yM: -6, radiusM: 8 };
+const inHole = (p: Point): boolean =>
+  Math.hypot(p.xM - CLEAN_HOLE.xM, p.yM - CLEAN_HOLE.yM) < CLEAN_HOLE.radiusM;
+
+/** Far Ostle's invented bed: two gravel bars, a silted gully between them, a hole in the east, weed in the west bay with a clean hole in it. */
 export function farOstleBed(p: Point): Bed | null {
   const shoreM = waterDepthFromShore(FAR_OSTLE, p);
   if (shoreM === null) return null;
@@ -55,6 +60,7 @@ export function farOstleBed(p: Point): Bed | null {
 
 function farOstleSubstrate(p: Point, depthM: number, onBar: number): Substrate {
   if (onBar > 0.45) return 'gravel';
+  if (inHole(p)) return 'gravel';
   if (depthM > 3.1) return 'silt';
   if (onBar > 0.2) return 'clay';
   if (p.xM > 70 && p.yM < -15 && depthM < 2.6) return 'sand';
@@ -63,10 +69,28 @@ function farOstleSubstrate(p: Point, depthM: number, onBar: number): Substrate {
 
 function farOstleCover(p: Point, shoreM: number, depthM: number): Cover {
   if (Math.hypot(p.xM - 40, p.yM - 12) < 4) return 'snag'; // an old post line off the island
+  if (inHole(p)) return 'clear';
   const west = along(WEST_BAY, p);
   if (west > 0.55 && depthM < 2.6) return 'tall_weed';
   if (west > 0.25 && depthM < 2.8) return 'low_weed';
   return p.yM > 60 && shoreM < 12 ? 'leaf_litter' : 'clear';
+}
+
+/** The west end of the gully, that was dug out in the winter, and how much silt stood in it before. */
+export const DUG_GULLY: Ridge = {
+  from: { xM: -92, yM: 22 },
+  to: { xM: -52, yM: 12 },
+  halfWidthM: 11,
+  depthM: -1.3,
+};
+
+/** The same bed the autumn before: the gully's west end full of silt, and weed over more of the west bay. */
+export function farOstleAutumnBed(p: Point): Bed | null {
+  const bed = farOstleBed(p);
+  if (!bed) return null;
+  const depthM = Math.max(0.4, bed.depthM + DUG_GULLY.depthM * along(DUG_GULLY, p));
+  const weedy = along(WEST_BAY, p) > 0.18 && bed.cover !== 'tall_weed';
+  return { ...bed, depthM, cover: weedy ? 'tall_weed' : bed.cover };
 }
 
 const POOL_HOLLOW: Ridge = { from: { xM: -18, yM: -6 }, to: { xM: 14, yM: 8 }, halfWidthM: 15, depthM: 0.5 };

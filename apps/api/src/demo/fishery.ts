@@ -7,6 +7,7 @@ import type {
 } from '@mereward/shared/lakes/contract';
 import { fromPlane, pointAlong, type Point } from '@mereward/shared/geometry/plane';
 import { demoId } from './random';
+import { farOstlePlaces } from './places';
 import { FAR_OSTLE, OSTLE_POOL, SEDGE_CUT, type DemoWater } from './waters';
 
 export const OSTLEMERE_ID = demoId('fishery');
@@ -259,7 +260,7 @@ export const FAR_OSTLE_LAKE = planned({
   pegCount: 24,
   longestCastM: 95,
   datumM: 0.62,
-  lake: { nights: true, kind: 'gravel_pit' },
+  lake: { nights: true, kind: 'gravel_pit', places: farOstlePlaces() },
   marks: [
     { name: 'dead oak', permanence: 'tree', at: { xM: -150, yM: 118 } },
     { name: 'white gate', permanence: 'pole', at: { xM: 10, yM: 150 } },

@@ -1,12 +1,19 @@
 import { SurveyCast } from '@mereward/db/entities/surveys/survey-cast';
+import { fromPlane, pointAlong, type Point } from '@mereward/shared/geometry/plane';
+import type { LakePolygon } from '@mereward/shared/lakes/contract';
+import type { EntityManager } from 'typeorm';
 import type { Ctx } from '../ctx';
 import { recordBottomEvent } from '../surveys/bottom-events';
 import { confirmBottom } from '../surveys/confirmed-bottoms';
 import { keepLead } from '../surveys/leads';
-import { OSTLEMERE_ID, OSTLE_POOL_LAKE } from './fishery';
+import { CLEAN_HOLE, DUG_GULLY, farOstleBed, type Ridge } from './bed';
+import { demoCtx } from './demo-ctx';
+import { FAR_OSTLE_LAKE, OSTLEMERE_ID, OSTLE_POOL_LAKE } from './fishery';
+import { IDRIS } from './people';
 import { demoId } from './random';
 import { demoVisitId, type DemoSurvey } from './seed-survey';
 import { DEMO_KIT } from './simulate-casts';
+import type { DemoDays } from './survey-days';
 
 const civil = (at: Date): string => at.toISOString().slice(0, 10);
 
@@ -37,6 +44,31 @@ export async function seedGrabs(ctx: Ctx, survey: DemoSurvey): Promise<void> {
   }
 }
 
+/** Metres from the middle of the clean hole: in it, and in the weed round it. */
+const HOLE_GRABS_M = [3, 14];
+
+/** Grabs in and round the clean hole, on the day it was cast over closely. */
+export async function seedHoleGrabs(ctx: Ctx, day: Date): Promise<void> {
+  for (const awayM of HOLE_GRABS_M)
+    for (let turn = 0; turn < 360; turn += 60) {
+      const place = pointAlong(CLEAN_HOLE, turn, awayM);
+      const bed = farOstleBed(place);
+      if (!bed) continue;
+      const [lon, lat] = fromPlane(FAR_OSTLE_LAKE.water.centre, place);
+      await confirmBottom(ctx, FAR_OSTLE_LAKE.id, {
+        id: demoId(`grab hole ${awayM} ${turn}`),
+        castId: null,
+        position: [Number(lon.toFixed(7)), Number(lat.toFixed(7))],
+        positionSigmaM: 1,
+        substrate: bed.substrate,
+        cover: bed.cover,
+        method: 'grab',
+        day: civil(day),
+        note: '',
+      });
+    }
+}
+
 /** The lead of the demo's kit, counted down over spots read by float. */
 export async function seedLead(ctx: Ctx, day: Date): Promise<void> {
   await keepLead(ctx, OSTLEMERE_ID, {
@@ -54,6 +86,58 @@ export async function seedLead(ctx: Ctx, day: Date): Promise<void> {
     calibratedOn: civil(day),
     note: 'Rod up, line held on the fingers',
   });
+}
+
+/** Works on Far Ostle between its two charts, each where it was drawn: weed cut in the west bay, the gully's west end dug out. */
+export async function seedWorks(tx: EntityManager, days: DemoDays): Promise<void> {
+  await recordBottomEvent(demoCtx(tx, IDRIS, later(days.westBayCut)), FAR_OSTLE_LAKE.id, {
+    id: demoId('weed cut FO'),
+    kind: 'weed_cut',
+    area: drawnArea(WEST_BAY_CUT),
+    happenedOn: civil(days.westBayCut),
+    ends: ['cover'],
+    note: 'A strip cut from the punt and taken out the same day',
+  });
+  await recordBottomEvent(demoCtx(tx, IDRIS, later(days.gullyDug)), FAR_OSTLE_LAKE.id, {
+    id: demoId('gully dug FO'),
+    kind: 'dredged',
+    area: drawnArea(roundRidge(DUG_GULLY, 16)),
+    happenedOn: civil(days.gullyDug),
+    ends: ['cover', 'substrate', 'depth'],
+    note: 'The west end of the gully dug out from the bank, long reach',
+  });
+}
+
+const DAY_MS = 86_400_000;
+const later = (day: Date): Date => new Date(day.getTime() + DAY_MS);
+
+/** Counter-clockwise, in Far Ostle's plane: the mouth of the west bay. */
+const WEST_BAY_CUT: readonly Point[] = [
+  { xM: -112, yM: -30 },
+  { xM: -92, yM: -22 },
+  { xM: -90, yM: 6 },
+  { xM: -104, yM: 22 },
+  { xM: -112, yM: 6 },
+];
+
+/** A strip so wide to either side of a ridge's line, and past its ends. */
+function roundRidge({ from, to }: Ridge, wideM: number): Point[] {
+  const lengthM = Math.hypot(to.xM - from.xM, to.yM - from.yM);
+  const [ex, ey] = [(wideM * (to.xM - from.xM)) / lengthM, (wideM * (to.yM - from.yM)) / lengthM];
+  return [
+    { xM: from.xM - ex + ey, yM: from.yM - ey - ex },
+    { xM: to.xM + ex + ey, yM: to.yM + ey - ex },
+    { xM: to.xM + ex - ey, yM: to.yM + ey + ex },
+    { xM: from.xM - ex - ey, yM: from.yM - ey + ex },
+  ];
+}
+
+function drawnArea(ring: readonly Point[]): LakePolygon {
+  const places = [...ring, ...ring.slice(0, 1)].map((at): [number, number] => {
+    const [lon, lat] = fromPlane(FAR_OSTLE_LAKE.water.centre, at);
+    return [Number(lon.toFixed(7)), Number(lat.toFixed(7))];
+  });
+  return { type: 'Polygon', coordinates: [places] };
 }
 
 /** Ostle Pool's weed was cut before it was first surveyed. */

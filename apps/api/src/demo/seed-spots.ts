@@ -14,10 +14,12 @@ const NAMES: Record<string, string> = {
   silt_firm: 'Firm silt',
 };
 
-/** Up to three spots a peg, on its best casts: near, middle and far. */
-export async function seedSpots(ctx: Ctx, lake: DemoLake): Promise<void> {
-  const pegIds = lake.pegs.map(({ id }) => id);
-  const casts = await ctx.tx.find(SurveyCast, { where: { pegId: In(pegIds) }, order: { seq: 'ASC' } });
+/** Up to three spots a peg, on its best casts of some visits: near, middle and far. */
+export async function seedSpots(ctx: Ctx, lake: DemoLake, visitIds: readonly string[]): Promise<void> {
+  const casts = await ctx.tx.find(SurveyCast, {
+    where: { visitId: In([...visitIds]) },
+    order: { visitId: 'ASC', seq: 'ASC' },
+  });
   for (const peg of lake.pegs) {
     const soundings = casts.flatMap(({ pegId, reduced }) =>
       pegId === peg.id && reduced.ok ? [reduced.sounding] : [],

@@ -1,12 +1,13 @@
 import { SurveyCast } from '@mereward/db/entities/surveys/survey-cast';
 import type { Point } from '@mereward/shared/geometry/plane';
+import type { OpenVisit } from '@mereward/shared/surveys/contract';
 import type { Ctx } from '../ctx';
 import { closeVisit } from '../surveys/close-visit';
 import { openVisit } from '../surveys/open-visit';
 import type { Bed } from './bed';
 import type { DemoLake } from './fishery';
 import { demoId, seeded } from './random';
-import { DEMO_KIT, simulatePeg } from './simulate-casts';
+import { DEMO_KIT, simulateClosely, simulatePeg, type Plan } from './simulate-casts';
 import { demoLevelM } from './survey-days';
 
 export type DemoSurvey = {
@@ -17,6 +18,7 @@ export type DemoSurvey = {
   pegs: DemoLake['pegs'];
   day: Date;
   seed: number;
+  closely?: Plan; // round one place, and not the peg's whole arc
 };
 
 const MINUTE_MS = 60_000;
@@ -28,19 +30,7 @@ export async function seedSurvey(ctx: Ctx, survey: DemoSurvey): Promise<void> {
   const { lake, day } = survey;
   const visitId = demoVisitId(survey);
   const gaugeM = demoLevelM(lake.details.datumM, day);
-  await openVisit(ctx, lake.id, {
-    id: visitId,
-    title: survey.title,
-    competence: 'lead',
-    boardId: lake.board.id,
-    startedAt: day.toISOString(),
-    gaugeStartM: gaugeM,
-    weather: { windForce: 2, windFrom: 'SW', note: 'Light airs, dry' },
-    clarity: 'Clear to a metre',
-    weedState: lake.prefix === 'OP' ? 'Low weed round the edge' : 'Weed in the west bay only',
-    kit: { ...DEMO_KIT, stickCheckedOn: day.toISOString().slice(0, 10) },
-    consentToPublish: true,
-  });
+  await openVisit(ctx, lake.id, visitBody(survey, gaugeM));
   const casts = castsOf(survey, gaugeM);
   for (let i = 0; i < casts.length; i += 400)
     await ctx.tx
@@ -57,6 +47,24 @@ export async function seedSurvey(ctx: Ctx, survey: DemoSurvey): Promise<void> {
   });
 }
 
+/** How a day of the demo's surveys is opened; the board reads `gaugeM`. */
+export const visitBody = (
+  { key, title, lake, day }: Pick<DemoSurvey, 'key' | 'title' | 'lake' | 'day'>,
+  gaugeM: number,
+): OpenVisit => ({
+  id: demoVisitId({ key }),
+  title,
+  competence: 'lead',
+  boardId: lake.board.id,
+  startedAt: day.toISOString(),
+  gaugeStartM: gaugeM,
+  weather: { windForce: 2, windFrom: 'SW', note: 'Light airs, dry' },
+  clarity: 'Clear to a metre',
+  weedState: lake.prefix === 'OP' ? 'Low weed round the edge' : 'Weed in the west bay only',
+  kit: { ...DEMO_KIT, stickCheckedOn: day.toISOString().slice(0, 10) },
+  consentToPublish: true,
+});
+
 function surveyorOf({ actor }: Ctx): string {
   if (actor.kind !== 'account') throw new RangeError('A stranger keeps no casts');
   return actor.id;
@@ -64,7 +72,9 @@ function surveyorOf({ actor }: Ctx): string {
 
 function castsOf(survey: DemoSurvey, gaugeM: number) {
   const random = seeded(survey.seed);
-  const thrown = survey.pegs.flatMap((peg) => simulatePeg({ ...survey, gaugeM, random }, peg));
+  const { pegs, closely } = survey;
+  const at = { ...survey, gaugeM, random };
+  const thrown = pegs.flatMap((peg) => (closely ? simulateClosely(at, peg, closely) : simulatePeg(at, peg)));
   return thrown.map(({ pegId, observation }, i) => {
     const observedAt = new Date(survey.day.getTime() + (i + 1) * MINUTE_MS * 0.75);
     return {

@@ -12,10 +12,12 @@ import { putBoard } from '../lakes/boards';
 import { makeLake } from '../lakes/make-lake';
 import { putMark } from '../lakes/marks';
 import { makePeg } from '../lakes/pegs';
-import { seedGrabs, seedLead, seedWeedCut } from './seed-bottom';
+import { seedGrabs, seedHoleGrabs, seedLead, seedWeedCut, seedWorks } from './seed-bottom';
+import { seedAreas } from './seed-areas';
 import { seedCharts } from './seed-charts';
 import { seedPhotos } from './seed-photos';
 import { seedSurvey } from './seed-survey';
+import { seedWaiting } from './seed-reports';
 import { demoSurveys } from './surveys';
 import { demoCtx } from './demo-ctx';
 import { DEMO_LAKES, OSTLEMERE, OSTLEMERE_ID, type DemoLake } from './fishery';
@@ -41,6 +43,7 @@ export async function seed(
     if (!(await source.manager.existsBy(Fishery, { id: OSTLEMERE_ID })))
       await fill(source, { days, now, files });
     await seedCharts(source, days);
+    await source.transaction((tx) => seedWaiting(tx, now));
   } finally {
     await source.destroy();
   }
@@ -57,7 +60,7 @@ const filesNamedBy = (env: NodeJS.ProcessEnv): FileStore | null =>
 
 /** Everything but the charts, in one transaction. */
 async function fill(source: DataSource, { days, now, files }: Filling): Promise<void> {
-  const made = new Date(days.farOstleFirst.getTime() - 60 * DAY_MS);
+  const made = new Date(days.farOstleAutumn.getTime() - 60 * DAY_MS);
   await source.transaction(async (tx) => {
     await seedPeople(demoCtx(tx, MARIAN, made));
     for (const lake of DEMO_LAKES) await seedLake(demoCtx(tx, MARIAN, made), lake);
@@ -65,6 +68,7 @@ async function fill(source: DataSource, { days, now, files }: Filling): Promise<
     for (const survey of demoSurveys(days))
       await seedSurvey(demoCtx(tx, survey.surveyor, new Date(survey.day.getTime() + DAY_MS)), survey);
     await seedGround(tx, days);
+    await seedAreas(demoCtx(tx, IDRIS, made));
     await seedTicket(demoCtx(tx, PRIYA, now));
     if (files !== null) await seedPhotos(demoCtx(tx, JOAN, days.farOstleFirst), files);
   });
@@ -72,12 +76,15 @@ async function fill(source: DataSource, { days, now, files }: Filling): Promise<
 
 /** What is known of the bottoms beside the casts: grabs, a lead's rate of fall, weed cut. */
 async function seedGround(tx: EntityManager, days: DemoDays): Promise<void> {
-  const [first] = demoSurveys(days);
+  const first = demoSurveys(days).find(({ key }) => key === 'FO 1');
   const evening = new Date(days.farOstleFirst.getTime() + DAY_MS);
   if (first) await seedGrabs(demoCtx(tx, JOAN, evening), first);
+  const afterSecond = new Date(days.farOstleSecond.getTime() + DAY_MS);
+  await seedHoleGrabs(demoCtx(tx, JOAN, afterSecond), days.farOstleSecond);
   await seedLead(demoCtx(tx, JOAN, evening), days.farOstleFirst);
   const cut = new Date(days.ostlePool.getTime() - 9 * DAY_MS);
   await seedWeedCut(demoCtx(tx, IDRIS, new Date(cut.getTime() + DAY_MS)), cut);
+  await seedWorks(tx, days);
 }
 
 async function seedPeople({ tx, now }: Ctx): Promise<void> {

@@ -40,6 +40,20 @@ export type SimulatedCast = { pegId: string; observation: CastObservation; truth
 type Survey = { lake: DemoLake; bed: (p: Point) => Bed | null; gaugeM: number; random: () => number };
 type Peg = DemoLake['pegs'][number];
 
+/** Close casting over one place: lines four degrees apart, every wrap, so far to either side. */
+const CLOSE_LINES_DEG = [-16, -12, -8, -4, 0, 4, 8, 12, 16];
+const CLOSE_WRAPS = [-4, -3, -2, -1, 0, 1, 2, 3, 4];
+
+/** One place cast over closely from a peg. */
+export function simulateClosely(survey: Survey, peg: Peg, middle: Plan): SimulatedCast[] {
+  return CLOSE_LINES_DEG.flatMap((off) =>
+    CLOSE_WRAPS.flatMap((more) => {
+      const plan = { bearingDeg: middle.bearingDeg + off, wraps: middle.wraps + more };
+      return throwOne(survey, peg, plan) ?? [];
+    }),
+  );
+}
+
 /** One peg surveyed: five lines across its arc, rings outwards, every ninth cast thrown again. */
 export function simulatePeg(survey: Survey, peg: Peg): SimulatedCast[] {
   const planned = LINES_DEG.flatMap((off) =>
@@ -50,7 +64,7 @@ export function simulatePeg(survey: Survey, peg: Peg): SimulatedCast[] {
   return [...thrown, ...again];
 }
 
-type Plan = { bearingDeg: number; wraps: number };
+export type Plan = { bearingDeg: number; wraps: number };
 
 function throwOne(survey: Survey, peg: Peg, plan: Plan): SimulatedCast | null {
   const { lake, random, gaugeM } = survey;

@@ -1,5 +1,10 @@
 /** The days on which the demo's surveys and readings were made, so that it looks the same whenever it is started. */
 export type DemoDays = {
+  farOstleAutumn: Date;
+  farOstleAutumnPublished: Date;
+  westBayCut: Date;
+  gullyDug: Date;
+  reported: Date; // an angler found it otherwise
   farOstleFirst: Date;
   farOstleSecond: Date;
   farOstlePublished: Date;
@@ -11,12 +16,17 @@ const DAY_MS = 86_400_000;
 const atTen = (year: number, month: number, day: number): Date =>
   new Date(Date.UTC(year, month - 1, day, 9, 0));
 
-/** The last April of which the eleventh and the publishing are past; Ostle Pool three weeks before today. */
+/** The last April of which the eleventh and the publishing are past, and the autumn before; Ostle Pool three weeks before today. */
 export function demoDays(now: Date): DemoDays {
   const thisYear = now.getUTCFullYear();
   const year = now.getTime() > atTen(thisYear, 4, 20).getTime() ? thisYear : thisYear - 1;
   const pool = new Date(now.getTime() - 21 * DAY_MS);
   return {
+    farOstleAutumn: atTen(year - 1, 10, 3),
+    farOstleAutumnPublished: atTen(year - 1, 10, 9),
+    westBayCut: atTen(year - 1, 11, 14),
+    gullyDug: atTen(year, 1, 22),
+    reported: atTen(year, 3, 20),
     farOstleFirst: atTen(year, 4, 3),
     farOstleSecond: atTen(year, 4, 11),
     farOstlePublished: atTen(year, 4, 16),

@@ -1,4 +1,4 @@
-import { farOstleBed, ostlePoolBed } from './bed';
+import { farOstleAutumnBed, farOstleBed, ostlePoolBed } from './bed';
 import { FAR_OSTLE_LAKE, OSTLE_POOL_LAKE } from './fishery';
 import { JOAN, TOM, type DemoPerson } from './people';
 import type { DemoSurvey } from './seed-survey';
@@ -6,11 +6,27 @@ import type { DemoDays } from './survey-days';
 
 const NOT_CAST = new Set(['FO20', 'FO24']); // closed, and under the line: nobody cast there
 
-/** The demo's surveys: Far Ostle on two days by two people, Ostle Pool on one. */
+const HOUR_MS = 3_600_000;
+const IN_AUTUMN = new Set(['FO1', 'FO2', 'FO3', 'FO21', 'FO22', 'FO23']); // round the gully's west end and the west bay
+
+/**
+ * The demo's surveys: Far Ostle's west in autumn and the whole of it in spring, with one place cast over closely; Ostle Pool
+ * on one day.
+ */
 export function demoSurveys(days: DemoDays): (DemoSurvey & { surveyor: DemoPerson })[] {
   const pegs = FAR_OSTLE_LAKE.pegs.filter(({ details }) => !NOT_CAST.has(details.number));
   const farOstle = { lake: FAR_OSTLE_LAKE, bed: farOstleBed };
   return [
+    {
+      lake: FAR_OSTLE_LAKE,
+      bed: farOstleAutumnBed,
+      key: 'FO 0',
+      title: 'Far Ostle, the west end',
+      pegs: pegs.filter(({ details }) => IN_AUTUMN.has(details.number)),
+      day: days.farOstleAutumn,
+      seed: 20251003,
+      surveyor: JOAN,
+    },
     {
       ...farOstle,
       key: 'FO 1',
@@ -28,6 +44,16 @@ export function demoSurveys(days: DemoDays): (DemoSurvey & { surveyor: DemoPerso
       day: days.farOstleSecond,
       seed: 20260411,
       surveyor: TOM,
+    },
+    {
+      ...farOstle,
+      key: 'FO 3',
+      title: 'The hole in the west bay, off peg 22',
+      pegs: pegs.filter(({ details }) => details.number === 'FO22'),
+      day: new Date(days.farOstleSecond.getTime() + 6 * HOUR_MS),
+      seed: 20260412,
+      surveyor: TOM,
+      closely: { bearingDeg: 93, wraps: 10 },
     },
     {
       lake: OSTLE_POOL_LAKE,

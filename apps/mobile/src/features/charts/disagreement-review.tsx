@@ -27,11 +27,12 @@ export function DisagreementReview({ report }: Props) {
   const units = useUnits();
   const { status, pegNumber, found, placeWords, day, reporter } = report;
   const wide = useThreeColumns();
+  const title = `Peg ${pegNumber}: ${foundWords(found, units)}`;
   return (
-    <View style={{ gap: space.medium, paddingBottom: space.page }}>
+    <View role="group" aria-label={title} style={{ gap: space.medium, paddingBottom: space.page }}>
       <View style={{ flexDirection: 'row', flexWrap: 'wrap', alignItems: 'center', gap: space.medium }}>
         <Heading level={3} style={{ flexGrow: 1 }}>
-          {`Peg ${pegNumber}: ${foundWords(found, units)}`}
+          {title}
         </Heading>
         <StatusShape {...STATUS_LOOKS[status]} />
       </View>
