@@ -35,12 +35,12 @@ const WEST_BAY: Ridge = {
   depthM: -0.7,
 };
 
-/** A hole in the weed of the west bay, hard and swept clean, such as fish keep. */
-export const CLEAN_HOLE = { xM: -128, yM: -6, radiusM: 8 };
-const inHole = (p: Point): boolean =>
-  Math.hypot(p.xM - CLEAN_HOLE.xM, p.yM - CLEAN_HOLE.yM) < CLEAN_HOLE.radiusM;
+/** A hard spot in the silt off peg FO18, such as fish keep clean. */
+export const HARD_SPOT = { xM: -79, yM: -60, radiusM: 8 };
+const onSpot = (p: Point): boolean =>
+  Math.hypot(p.xM - HARD_SPOT.xM, p.yM - HARD_SPOT.yM) < HARD_SPOT.radiusM;
 
-/** Far Ostle's invented bed: two gravel bars, a silted gully between them, a hole in the east, weed in the west bay with a clean hole in it. */
+/** Far Ostle's invented bed: two gravel bars, a silted gully between them, a hole in the east, weed in the west bay, a hard spot in the south. */
 export function farOstleBed(p: Point): Bed | null {
   const shoreM = waterDepthFromShore(FAR_OSTLE, p);
   if (shoreM === null) return null;
@@ -60,7 +60,7 @@ export function farOstleBed(p: Point): Bed | null {
 
 function farOstleSubstrate(p: Point, depthM: number, onBar: number): Substrate {
   if (onBar > 0.45) return 'gravel';
-  if (inHole(p)) return 'gravel';
+  if (onSpot(p)) return 'gravel';
   if (depthM > 3.1) return 'silt';
   if (onBar > 0.2) return 'clay';
   if (p.xM > 70 && p.yM < -15 && depthM < 2.6) return 'sand';
@@ -69,7 +69,6 @@ function farOstleSubstrate(p: Point, depthM: number, onBar: number): Substrate {
 
 function farOstleCover(p: Point, shoreM: number, depthM: number): Cover {
   if (Math.hypot(p.xM - 40, p.yM - 12) < 4) return 'snag'; // an old post line off the island
-  if (inHole(p)) return 'clear';
   const west = along(WEST_BAY, p);
   if (west > 0.55 && depthM < 2.6) return 'tall_weed';
   if (west > 0.25 && depthM < 2.8) return 'low_weed';

@@ -6,7 +6,7 @@ import type { Ctx } from '../ctx';
 import { recordBottomEvent } from '../surveys/bottom-events';
 import { confirmBottom } from '../surveys/confirmed-bottoms';
 import { keepLead } from '../surveys/leads';
-import { CLEAN_HOLE, DUG_GULLY, farOstleBed, type Ridge } from './bed';
+import { HARD_SPOT, DUG_GULLY, farOstleBed, type Ridge } from './bed';
 import { demoCtx } from './demo-ctx';
 import { FAR_OSTLE_LAKE, OSTLEMERE_ID, OSTLE_POOL_LAKE } from './fishery';
 import { IDRIS } from './people';
@@ -44,19 +44,19 @@ export async function seedGrabs(ctx: Ctx, survey: DemoSurvey): Promise<void> {
   }
 }
 
-/** Metres from the middle of the clean hole: in it, and in the weed round it. */
-const HOLE_GRABS_M = [3, 14];
+/** Metres from the middle of the hard spot: on it, and in the silt round it. */
+const SPOT_GRABS_M = [3, 14];
 
-/** Grabs in and round the clean hole, on the day it was cast over closely. */
-export async function seedHoleGrabs(ctx: Ctx, day: Date): Promise<void> {
-  for (const awayM of HOLE_GRABS_M)
+/** Grabs on and round the hard spot, on the day it was cast over closely. */
+export async function seedSpotGrabs(ctx: Ctx, day: Date): Promise<void> {
+  for (const awayM of SPOT_GRABS_M)
     for (let turn = 0; turn < 360; turn += 60) {
-      const place = pointAlong(CLEAN_HOLE, turn, awayM);
+      const place = pointAlong(HARD_SPOT, turn, awayM);
       const bed = farOstleBed(place);
       if (!bed) continue;
       const [lon, lat] = fromPlane(FAR_OSTLE_LAKE.water.centre, place);
       await confirmBottom(ctx, FAR_OSTLE_LAKE.id, {
-        id: demoId(`grab hole ${awayM} ${turn}`),
+        id: demoId(`grab spot ${awayM} ${turn}`),
         castId: null,
         position: [Number(lon.toFixed(7)), Number(lat.toFixed(7))],
         positionSigmaM: 1,

@@ -12,7 +12,7 @@ import { putBoard } from '../lakes/boards';
 import { makeLake } from '../lakes/make-lake';
 import { putMark } from '../lakes/marks';
 import { makePeg } from '../lakes/pegs';
-import { seedGrabs, seedHoleGrabs, seedLead, seedWeedCut, seedWorks } from './seed-bottom';
+import { seedGrabs, seedSpotGrabs, seedLead, seedWeedCut, seedWorks } from './seed-bottom';
 import { seedAreas } from './seed-areas';
 import { seedCharts } from './seed-charts';
 import { seedPhotos } from './seed-photos';
@@ -80,7 +80,7 @@ async function seedGround(tx: EntityManager, days: DemoDays): Promise<void> {
   const evening = new Date(days.farOstleFirst.getTime() + DAY_MS);
   if (first) await seedGrabs(demoCtx(tx, JOAN, evening), first);
   const afterSecond = new Date(days.farOstleSecond.getTime() + DAY_MS);
-  await seedHoleGrabs(demoCtx(tx, JOAN, afterSecond), days.farOstleSecond);
+  await seedSpotGrabs(demoCtx(tx, JOAN, afterSecond), days.farOstleSecond);
   await seedLead(demoCtx(tx, JOAN, evening), days.farOstleFirst);
   const cut = new Date(days.ostlePool.getTime() - 9 * DAY_MS);
   await seedWeedCut(demoCtx(tx, IDRIS, new Date(cut.getTime() + DAY_MS)), cut);

@@ -48,12 +48,12 @@ export function demoSurveys(days: DemoDays): (DemoSurvey & { surveyor: DemoPerso
     {
       ...farOstle,
       key: 'FO 3',
-      title: 'The hole in the west bay, off peg 22',
-      pegs: pegs.filter(({ details }) => details.number === 'FO22'),
+      title: 'The hard spot off peg 18',
+      pegs: pegs.filter(({ details }) => details.number === 'FO18'),
       day: new Date(days.farOstleSecond.getTime() + 6 * HOUR_MS),
       seed: 20260412,
       surveyor: TOM,
-      closely: { bearingDeg: 93, wraps: 10 },
+      closely: { bearingDeg: 354, wraps: 12 },
     },
     {
       lake: OSTLE_POOL_LAKE,
