@@ -3,8 +3,10 @@ import { BOTTOM_GLYPHS, type Patterned } from '@mereward/shared/charts/drawing/b
 import type { BottomArea } from '@mereward/shared/charts/drawing/bottom-areas';
 import type { Ground } from '@mereward/shared/charts/drawing/ground';
 import { palettes, type Palette } from '@mereward/shared/charts/drawing/palette';
+import { placeSwatchSvg, type DrawnPlace } from '@mereward/shared/charts/drawing/place-marks';
 import { swatchSvg } from '@mereward/shared/charts/drawing/swatch';
 import { bandsOf } from '@mereward/shared/charts/drawing/tint';
+import { LakePlaceKind, PLACE_WORDS } from '@mereward/shared/lakes/place-contract';
 import { View } from 'react-native';
 import { Text } from '@/components/text';
 import { space } from '@/constants/layout';
@@ -49,10 +51,32 @@ function Swatch({ kind, palette }: { kind: Patterned; palette: Palette }) {
   );
 }
 
-type Props = { ground: Ground; bottom: readonly BottomArea[] };
+/** What stands at the lake, kind by kind, by its sign and by name. */
+function Places({ places, palette }: { places: readonly DrawnPlace[]; palette: Palette }) {
+  const kinds = LakePlaceKind.options.flatMap((kind) => {
+    const names = places.filter((place) => place.kind === kind).map(({ name }) => name);
+    return names.length > 0 ? [{ kind, names, svg: placeSwatchSvg(kind, palette) }] : [];
+  });
+  return (
+    <View style={{ gap: space.hair }}>
+      {kinds.map(({ kind, names, svg }) => (
+        <View key={kind} style={{ flexDirection: 'row', alignItems: 'center', gap: space.hair }}>
+          <SvgPicture svg={svg} />
+          <Text size="small" style={{ flexShrink: 1 }}>{`${PLACE_WORDS[kind]}: ${names.join(', ')}`}</Text>
+        </View>
+      ))}
+    </View>
+  );
+}
 
-/** How to read the chart: depth tints, and the pattern of every bottom that is on it. */
-export function ChartKey({ ground, bottom }: Props) {
+type Props = {
+  ground: Ground;
+  bottom: readonly BottomArea[];
+  places?: readonly DrawnPlace[] | undefined;
+};
+
+/** How to read the chart: depth tints, the pattern of every bottom that is on it, and what stands at the lake. */
+export function ChartKey({ ground, bottom, places = [] }: Props) {
   const { name } = useTheme();
   const palette = palettes[name];
   return (
@@ -65,6 +89,7 @@ export function ChartKey({ ground, bottom }: Props) {
           ))}
         </View>
       ) : null}
+      {places.length ? <Places places={places} palette={palette} /> : null}
     </View>
   );
 }

@@ -84,7 +84,7 @@ export function ChartPanel({ chart, pegId, onPeg, spots, spotId = null, cast = n
             {hint(layers !== null, sharedLetters(chart.pegs.map(({ number }) => number)))}
           </Text>
         )}
-        <ChartKey ground={content.ground} bottom={content.bottom} />
+        <ChartKey ground={content.ground} bottom={content.bottom} places={content.places} />
         <LayerReasons notes={chart.layerNotes} />
         <ChartCaption chart={chart} shownAt={levelWords} />
       </View>

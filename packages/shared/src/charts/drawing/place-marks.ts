@@ -1,6 +1,7 @@
 import type { LakePlaceKind, ShownPlace } from '../../lakes/place-contract';
 import { ruled, stroked, text, type Mark } from './mark';
 import type { Palette } from './palette';
+import { PLAIN_SVG, toSvg } from './to-svg';
 import { fromPage, toPage, type View } from './view';
 
 export type DrawnPlace = Pick<ShownPlace, 'kind' | 'name' | 'line'>;
@@ -14,6 +15,20 @@ const GLYPHS: Readonly<Record<LakePlaceKind, string>> = {
   overhead_line: 'm2 -7l-5 8h6l-5 7',
 };
 const LETTER: Partial<Record<LakePlaceKind, string>> = { parking: 'P', hazard: '!' };
+
+const SWATCH_PX = 26;
+
+/** The sign of a kind by itself, for a key; its name stands beside it. */
+export function placeSwatchSvg(kind: LakePlaceKind, palette: Palette): string {
+  const [x, y] = [SWATCH_PX / 2, SWATCH_PX / 2];
+  const letter = LETTER[kind];
+  const marks: Mark[] = [
+    { kind: 'glyphs', at: [x, y], glyph: GLYPHS[kind], fill: null, stroke: ruled(palette.ink, 1.5) },
+    ...(letter ? [text({ words: letter, x, y, sizePx: 11, bold: true, colour: palette.ink })] : []),
+  ];
+  const page = { widthPx: SWATCH_PX, heightPx: SWATCH_PX, ground: null, layers: [{ marks }] };
+  return toSvg(page, { ...PLAIN_SVG, idPrefix: `place-${kind}` });
+}
 
 const EDGE_PX = 14;
 const NAMED_FROM_PX_PER_M = 2.5; // nearer than this there is room for names
