@@ -1,5 +1,5 @@
 import { SurveyCast } from '@mereward/db/entities/surveys/survey-cast';
-import { fromPlane, pointAlong, type Point } from '@mereward/shared/geometry/plane';
+import { fromPlane, pointAlong, toPlane, type Point } from '@mereward/shared/geometry/plane';
 import type { LakePolygon } from '@mereward/shared/lakes/contract';
 import type { EntityManager } from 'typeorm';
 import type { Ctx } from '../ctx';
@@ -28,7 +28,7 @@ export async function seedGrabs(ctx: Ctx, survey: DemoSurvey): Promise<void> {
   });
   for (const { id, seq, reduced } of casts) {
     if (seq % GRAB_EVERY !== 0 || !reduced.ok) continue;
-    const bed = survey.bed(reduced.sounding);
+    const bed = survey.bed(toPlane(survey.lake.water.centre, reduced.sounding.position)); // the bed has a plane of its own
     if (!bed) continue;
     await confirmBottom(ctx, survey.lake.id, {
       id: demoId(`grab ${survey.key} ${seq}`),
