@@ -1,3 +1,4 @@
+import { LakePlaceKind } from '@mereward/shared/lakes/place-contract';
 import { chartCaution } from '@mereward/shared/charts/cautions';
 import { ageWords } from '@mereward/shared/charts/chart-age';
 import type { ChartView } from '@mereward/shared/charts/contract';
@@ -64,7 +65,25 @@ export function sheetKey(chart: ChartView): string[] {
         ]
       : []),
     'Pegs: a bar with a head is open, a ring limited, a cross closed. Triangles are far-bank marks.',
+    ...placeWords(chart),
   ];
+}
+
+const SIGNS: Readonly<Record<LakePlaceKind, string>> = {
+  parking: 'P is parking',
+  gate: 'a barred sign a gate',
+  throw_line: 'two rings a throw line',
+  hazard: 'a diamond a hazard',
+  overhead_line:
+    'a broken line with bolts an overhead line: nobody fishes within 30 m of it unless the fishery says so',
+};
+
+/** What the signs of the places on it mean; nothing for kinds that aren't there. */
+function placeWords({ places = [] }: ChartView): string[] {
+  const kinds = LakePlaceKind.options.filter((kind) => places.some((place) => place.kind === kind));
+  if (kinds.length === 0) return [];
+  const words = kinds.map((kind) => SIGNS[kind]).join(', ');
+  return [`${words.charAt(0).toUpperCase()}${words.slice(1)}.`];
 }
 
 /** What the sheet must not be used for. */

@@ -32,6 +32,7 @@ export function placeSwatchSvg(kind: LakePlaceKind, palette: Palette): string {
 
 const EDGE_PX = 14;
 const NAMED_FROM_PX_PER_M = 2.5; // nearer than this there is room for names
+const WIRE_NAMED_FROM_PX_PER_M = 1.6; // farther off its name would lie on the pegs'; the key has it
 
 /** What stands at a lake beside its pegs and marks, as far as it lies in view. */
 export function placeMarks(places: readonly DrawnPlace[], palette: Palette, view: View): Mark[] {
@@ -56,7 +57,7 @@ function wire({ line }: DrawnPlace, palette: Palette, view: View): Mark[] {
   const posts: number[] = [];
   for (let i = 0; i + 1 < line.length; i += 2)
     if (inView(view, line[i]!, line[i + 1]!)) posts.push(line[i]!, line[i + 1]!);
-  const label = labelled(line, view);
+  const label = view.pxPerM >= WIRE_NAMED_FROM_PX_PER_M ? labelled(line, view) : null;
   return [
     {
       kind: 'clip',
@@ -95,20 +96,24 @@ function wire({ line }: DrawnPlace, palette: Palette, view: View): Mark[] {
 
 const STEPS = 24;
 
-/** A place along the line that lies well in view: the one nearest to the middle of what does. */
+/** The middle of what is in view of the stretch between posts that shows longest: clear of the posts themselves. */
 function labelled(line: readonly number[], view: View): { x: number; y: number } | null {
-  const seen: { x: number; y: number }[] = [];
-  for (let i = 0; i + 3 < line.length; i += 2)
-    for (let step = 0; step <= STEPS; step++) {
-      const at = {
-        x: line[i]! + (step / STEPS) * (line[i + 2]! - line[i]!),
-        y: line[i + 1]! + (step / STEPS) * (line[i + 3]! - line[i + 1]!),
-      };
+  let longest: { x: number; y: number }[] = [];
+  let longestPx = 0;
+  for (let i = 0; i + 3 < line.length; i += 2) {
+    const stretch = Array.from({ length: STEPS + 1 }, (_, step) => ({
+      x: line[i]! + (step / STEPS) * (line[i + 2]! - line[i]!),
+      y: line[i + 1]! + (step / STEPS) * (line[i + 3]! - line[i + 1]!),
+    }));
+    const seen = stretch.filter((at) => {
       const { x, y } = toPage(view, at.x, at.y);
-      if (x > 5 * EDGE_PX && x < view.widthPx - 5 * EDGE_PX && y > 2 * EDGE_PX && y < view.heightPx - EDGE_PX)
-        seen.push(at);
-    }
-  return seen[Math.floor(seen.length / 2)] ?? null;
+      const across = x > 5 * EDGE_PX && x < view.widthPx - 5 * EDGE_PX;
+      return across && y > 2 * EDGE_PX && y < view.heightPx - EDGE_PX;
+    });
+    const stepPx = (Math.hypot(line[i + 2]! - line[i]!, line[i + 3]! - line[i + 1]!) / STEPS) * view.pxPerM;
+    if (seen.length * stepPx > longestPx) [longest, longestPx] = [seen, seen.length * stepPx];
+  }
+  return longest[Math.floor(longest.length / 2)] ?? null;
 }
 
 function inView(view: View, xM: number, yM: number): boolean {
