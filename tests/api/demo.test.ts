@@ -50,7 +50,7 @@ const holds = (rings: readonly number[][], place: Point): boolean =>
 async function asStranger<T>(read: (ctx: Ctx) => Promise<T>): Promise<T> {
   const source = await makeDataSource(databases[0].url, 1).initialize();
   try {
-    const jobs = { send: () => Promise.resolve() };
+    const jobs = { send: () => Promise.resolve(), later: () => Promise.resolve() };
     return await read({ tx: source.manager, actor: STRANGER, now: NOW, jobs, publicUrl: 'http://127.0.0.1' });
   } finally {
     await source.destroy();
