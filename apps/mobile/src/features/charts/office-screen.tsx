@@ -19,6 +19,7 @@ import { useFishery } from '@/features/fisheries/office-api';
 import { OFFICE_ROLES, useMyFisheries } from '@/features/fisheries/use-my-fisheries';
 import { lakeKeys } from '@/features/lakes/api';
 import { api } from '@/lib/api';
+import { useSession } from '@/lib/session';
 
 /** The office: what wants doing, and where everything is kept. */
 export function OfficeScreen() {
@@ -49,6 +50,8 @@ export function OfficeScreen() {
 
 function FisheryOffice({ fishery }: { fishery: FisheryListItem }) {
   const kept = useFishery(fishery.id);
+  const { rolesAt } = useSession();
+  const sells = rolesAt(fishery.id).some((role) => OFFICE_ROLES.some((each) => each === role));
   return (
     <>
       <Section title="What wants doing" bare>
@@ -57,6 +60,13 @@ function FisheryOffice({ fishery }: { fishery: FisheryListItem }) {
       <Section title={fishery.name}>
         <List label={`Kept for ${fishery.name}`}>
           <Row title="Lakes" note={lakesWords(fishery)} href="/office/lakes" />
+          {sells ? (
+            <Row
+              title="Tickets and prices"
+              note="Kinds of ticket, what they cost, the terms of letting"
+              href={`/office/tickets?fisheryId=${fishery.id}`}
+            />
+          ) : null}
           <Row title="Charts" note="Drafts, approval, published versions" href="/office/charts" />
           {kept.data?.may.readFeels ? (
             <Row

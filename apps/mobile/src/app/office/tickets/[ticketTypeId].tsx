@@ -1,0 +1,1 @@
+export { TicketTypeScreen as default } from '@/features/tickets/ticket-type-screen';

@@ -1,0 +1,1 @@
+export { TicketTypesScreen as default } from '@/features/tickets/ticket-types-screen';

@@ -1,0 +1,1 @@
+export { NewTicketTypeScreen as default } from '@/features/tickets/new-ticket-type-screen';
