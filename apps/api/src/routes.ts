@@ -1,4 +1,5 @@
 import { accountRoutes } from './accounts/routes';
+import { boardRoutes } from './bookings/board-routes';
 import { bookingRoutes } from './bookings/routes';
 import { termsRoutes } from './bookings/terms-routes';
 import { disagreementRoutes } from './charts/disagreement-routes';
@@ -32,6 +33,7 @@ export const routes: readonly Route[] = [
   ...ticketRoutes,
   ...termsRoutes,
   ...bookingRoutes,
+  ...boardRoutes,
   ...surveyRoutes,
   ...bottomRoutes,
   ...logRoutes,
