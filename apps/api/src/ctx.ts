@@ -53,4 +53,5 @@ export type Ctx = {
   now: Date;
   jobs: Jobs;
   publicUrl: string;
+  takesCards: boolean; // on the web
 };

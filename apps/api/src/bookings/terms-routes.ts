@@ -2,9 +2,6 @@ import { LettingTermsView, PutLettingTerms } from '@mereward/shared/bookings/let
 import { deed, read, type Route } from '../http/route';
 import { lettingTerms, putLettingTerms } from './terms';
 
-/** Cards are taken once there is somebody to take them. */
-const cardPayments = false;
-
 export const termsRoutes: Route[] = [
   read(
     {
@@ -14,7 +11,7 @@ export const termsRoutes: Route[] = [
       signIn: 'open',
       answer: LettingTermsView,
     },
-    (ctx, { id }) => lettingTerms(ctx, { fisheryId: id('fisheryId'), cardPayments }),
+    (ctx, { id }) => lettingTerms(ctx, id('fisheryId')),
   ),
   deed(
     {
@@ -27,7 +24,7 @@ export const termsRoutes: Route[] = [
     },
     async (ctx, { id, body }) => {
       await putLettingTerms(ctx, id('fisheryId'), body);
-      return lettingTerms(ctx, { fisheryId: id('fisheryId'), cardPayments });
+      return lettingTerms(ctx, id('fisheryId'));
     },
   ),
 ];

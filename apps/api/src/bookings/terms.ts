@@ -19,18 +19,16 @@ export async function termsOf(tx: EntityManager, fisheryId: string): Promise<Let
   return row?.details ?? USUAL_TERMS;
 }
 
-type Asked = { fisheryId: string; cardPayments: boolean };
-
 export async function lettingTerms(
-  { tx, actor }: Ctx,
-  { fisheryId, cardPayments }: Asked,
+  { tx, actor, takesCards }: Ctx,
+  fisheryId: string,
 ): Promise<LettingTermsView> {
   await fisheryFound(tx, fisheryId);
   const row = await tx.findOneBy(LettingTermsRow, { fisheryId });
   return {
     details: row?.details ?? USUAL_TERMS,
     version: row?.version ?? null,
-    cardPayments,
+    cardPayments: takesCards,
     may: { change: mayChangeFishery(actor, fisheryId) },
   };
 }

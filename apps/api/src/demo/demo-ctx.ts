@@ -14,5 +14,6 @@ export function demoCtx(tx: EntityManager, { id, roles }: DemoPerson, at: Date):
     now: at,
     jobs: NO_JOBS,
     publicUrl: 'http://127.0.0.1',
+    takesCards: true,
   };
 }

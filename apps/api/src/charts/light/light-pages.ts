@@ -4,7 +4,8 @@ import { PEG_CODE_LENGTH, PEG_CODE_LETTERS, readPegCode } from '@mereward/shared
 import compression from 'compression';
 import { Router, type Request, type Response } from 'express';
 import { createHash } from 'node:crypto';
-import { STRANGER, type Ctx } from '../../ctx';
+import type { Ctx } from '../../ctx';
+import { ctxOf } from '../../http/ctx-of';
 import { limitPages } from '../../http/limits';
 import { markup } from '../../http/markup';
 import { answering } from '../../http/problem';
@@ -54,8 +55,8 @@ function drawnLately(page: PegPageView, wish: LightWish): LightDocument {
 }
 
 function strangersCtx(req: Request): Ctx {
-  const { source, jobs, clock, config } = serverOf(req);
-  return { tx: source.manager, actor: STRANGER, now: clock(), jobs, publicUrl: config.publicUrl };
+  const server = serverOf(req);
+  return ctxOf(server, server.source.manager);
 }
 
 function send(res: Response, status: number, { text, policy }: LightDocument): void {
