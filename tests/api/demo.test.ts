@@ -51,7 +51,14 @@ async function asStranger<T>(read: (ctx: Ctx) => Promise<T>): Promise<T> {
   const source = await makeDataSource(databases[0].url, 1).initialize();
   try {
     const jobs = { send: () => Promise.resolve(), later: () => Promise.resolve() };
-    return await read({ tx: source.manager, actor: STRANGER, now: NOW, jobs, publicUrl: 'http://127.0.0.1' });
+    return await read({
+      tx: source.manager,
+      actor: STRANGER,
+      now: NOW,
+      jobs,
+      publicUrl: 'http://127.0.0.1',
+      takesCards: false,
+    });
   } finally {
     await source.destroy();
   }
