@@ -1,0 +1,1 @@
+export { LettingTermsScreen as default } from '@/features/bookings/letting-terms-screen';
