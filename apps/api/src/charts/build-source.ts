@@ -126,6 +126,7 @@ export function sourceDigest(source: BuildSource): Buffer {
   const { lake, contourStepM, visits, leftOut, reports, feel, tableVersion, endings, confirmed } = source;
   const decides = {
     outline: lake.details.outline,
+    ...(lake.details.outlineFrom ? { shoreWithinM: lake.details.outlineFrom.withinM } : {}),
     origin: [lake.originLon, lake.originLat],
     maxGapM: lake.details.maxGapM,
     contourStepM,

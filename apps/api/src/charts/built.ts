@@ -5,6 +5,7 @@ import { LakePolygon } from '@mereward/shared/lakes/contract';
 import { Bottom, Grade, Kit } from '@mereward/shared/surveys/contract';
 import { z } from 'zod';
 import { BuiltTellings } from './built-tellings';
+import { OutlineSource } from '@mereward/shared/lakes/outline-source';
 
 /** A reduced cast as a chart keeps it: with what an angler needs to throw it again, in the survey's own sticks. */
 export const BuiltSounding = z.object({
@@ -105,6 +106,7 @@ const Lines = z.array(z.object({ levelM: z.number(), lines: z.array(z.array(z.nu
 export const Built = z.object({
   origin: Position,
   outline: LakePolygon,
+  outlineFrom: OutlineSource.optional(),
   maxGapM: z.number(),
   visits: z.array(BuiltVisit),
   soundings: z.array(BuiltSounding), // every grade; D is left out of every view but the staff's

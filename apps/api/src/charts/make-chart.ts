@@ -11,6 +11,7 @@ import { reducedLogs, mergedPlaces } from './chart-logs';
 import { makeTellings } from './make-tellings';
 import { withoutLeftOut } from './source-left-out';
 import { sourceChecks } from './source-checks';
+import { shoreSigmaM } from '@mereward/shared/lakes/outline-source';
 
 /** A chart as its row keeps it. */
 export type MadeChart = {
@@ -47,6 +48,7 @@ export function makeChart(
   if (!outline) throw new RangeError('The visits of this chart are gone. Make a new draft.');
   const input: ChartInput = {
     outline,
+    shoreSigmaM: shoreSigmaM(lake.details.outlineFrom),
     soundings: [...evidence.soundings, ...logs.soundings],
     alsoFelt: evidence.alsoFelt,
     contourStepM: source.contourStepM,
@@ -69,6 +71,7 @@ export function makeChart(
     built: {
       origin: [lake.originLon, lake.originLat],
       outline: lake.details.outline,
+      ...(lake.details.outlineFrom ? { outlineFrom: lake.details.outlineFrom } : {}),
       maxGapM: lake.details.maxGapM,
       visits: source.visits.map(builtVisit),
       soundings: evidence.built.sort(byId),

@@ -28,6 +28,7 @@ import { placesOf, shoreDistancesM } from './water-nodes';
 
 export type ChartInput = {
   outline: Outline;
+  shoreSigmaM?: number; // of the outline's line, across it; default 0: it is believed
   soundings: (ChartSounding &
     Pick<FeltPlace, 'spread' | 'track'> & { substrate: SubstrateShares | null; cover: CoverShares | null })[];
   alsoFelt?: readonly FeltBottom[]; // casts that read no depth, and confirmed bottoms: for the bottom maps alone
@@ -79,7 +80,7 @@ export function buildChart(
   const roles = sortSoundings(input.soundings, input.outline);
   const corners = [...input.outline.shore];
   const frame = frameOver(corners, input.cellM ?? chooseCellM(corners));
-  const samples = chartSamples(roles.surface, input.outline);
+  const samples = chartSamples(roles.surface, input.outline, input.shoreSigmaM);
   const soundingCount = samples.soundingIds.length;
   requirePlaces(soundingCount);
   const shoreDistanceM = shoreDistancesM(input.outline, samples.points);

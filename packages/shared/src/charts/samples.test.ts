@@ -125,3 +125,35 @@ test('the nearest search agrees with looking at every sample', () => {
     ),
   );
 });
+
+describe('a shore whose line is unsure', () => {
+  const outline = { shore: square, islands: [] };
+  const depthOf = (shoreSigmaM: number) => {
+    const { points, soundingIds } = chartSamples(
+      [sounding('a', 30, 3, 1.5), sounding('b', 30, 30, 4)],
+      outline,
+      shoreSigmaM,
+    );
+    const first = soundingIds.length;
+    const near = [...points.xM.keys()]
+      .slice(first)
+      .sort(
+        (i, j) =>
+          Math.hypot(points.xM[i]! - 30, points.yM[i]!) - Math.hypot(points.xM[j]! - 30, points.yM[j]!),
+      )[0]!;
+    return {
+      awayM: Math.hypot(points.xM[near]! - 30, points.yM[near]! - 3),
+      sigmaM: Math.sqrt(points.errorVarianceM2[near]!),
+    };
+  };
+
+  test('is as unsure in depth as the bed falls there, by how far off the line may lie', () => {
+    const { awayM, sigmaM } = depthOf(1);
+    expect(sigmaM).toBeCloseTo(1.5 / awayM, 9);
+    expect(depthOf(0).sigmaM).toBe(0);
+  });
+
+  test('is never unsurer than the nearest depth itself', () => {
+    expect(depthOf(40).sigmaM).toBeCloseTo(1.5, 9);
+  });
+});

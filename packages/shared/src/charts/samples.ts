@@ -26,10 +26,15 @@ export type ChartSamples = {
 
 /**
  * The samples of a surface: soundings, those at one place merged by inverse variance, and the shoreline, islands' too, at
- * depth 0 no wider apart than the mean gap between soundings. Soundings are taken in the order of their ids, so the
- * order they are given in does not matter.
+ * depth 0 no wider apart than the mean gap between soundings. Where the shore's line itself is unsure (`shoreSigmaM`, across
+ * it) its depth is as unsure as the bed falls there: σ times the fall to the nearest sounding. Soundings are taken in the
+ * order of their ids, so the order they are given in does not matter.
  */
-export function chartSamples(soundings: readonly Sounding[], outline: Outline): ChartSamples {
+export function chartSamples(
+  soundings: readonly Sounding[],
+  outline: Outline,
+  shoreSigmaM = 0,
+): ChartSamples {
   const places = mergePlaces([...soundings].sort((a, b) => (a.id < b.id ? -1 : a.id > b.id ? 1 : 0)));
   const gapM = places.length > 1 ? meanGapM(places) : SHORE_SPACING_LIMITS_M[1];
   const shoreSpacingM = shoreSpacing(gapM, outline);
@@ -50,14 +55,26 @@ export function chartSamples(soundings: readonly Sounding[], outline: Outline): 
         (p) => p.depthM,
         () => 0,
       ),
-      errorVarianceM2: column(
-        (p) => p.varianceM2,
-        () => 0,
-      ),
+      errorVarianceM2: column((p) => p.varianceM2, shoreVariance(places, shoreSigmaM)),
     },
     soundingIds: places.map((place) => place.ids),
     gapM,
     shoreSpacingM,
+  };
+}
+
+/** Of a shore point's depth, m²: (σ × depth / distance of the nearest place sounded)², the distance never below σ. */
+function shoreVariance(places: readonly Place[], sigmaM: number): (point: Point) => number {
+  if (sigmaM === 0 || places.length === 0) return () => 0;
+  const sounded = indexSamples(
+    Float64Array.from(places, (p) => p.xM),
+    Float64Array.from(places, (p) => p.yM),
+  );
+  const search = new NearestSearch(sounded, 1);
+  return ({ xM, yM }) => {
+    search.find(xM, yM);
+    const awayM = Math.max(sigmaM, Math.sqrt(search.squaredM2[0]!));
+    return ((sigmaM * (places[search.ids[0]!]?.depthM ?? 0)) / awayM) ** 2;
   };
 }
 

@@ -2,6 +2,7 @@ import { z } from 'zod';
 import { PhotoView } from '../files/contract';
 import { Position, Version } from '../fisheries/contract';
 import { LakePlaces } from './place-contract';
+import { OutlineSource } from './outline-source';
 
 export { AddPhoto, PhotoView } from '../files/contract';
 
@@ -37,6 +38,7 @@ export const LakeDetails = z.strictObject({
     'purpose_dug',
   ]),
   outline: LakePolygon,
+  outlineFrom: OutlineSource.optional(), // absent: nobody said
   nights: z.boolean(),
   maxPeople: z.int().min(0).max(2000).nullable(),
   maxRods: z.int().min(0).max(5000).nullable(),

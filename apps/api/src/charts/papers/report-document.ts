@@ -3,6 +3,7 @@ import type { AgeNow } from '@mereward/shared/charts/chart-age';
 import type { LeadCalibration } from '@mereward/db/entities/surveys/lead-calibration';
 import type { LeftOutView } from '@mereward/shared/charts/left-out-contract';
 import type { ArcCoverage } from '@mereward/shared/surveys/contract';
+import { outlineSourceWords } from '@mereward/shared/lakes/outline-source';
 import { dayWords } from '@mereward/shared/time/civil-day';
 import { dayAndClock, dayRange } from '@mereward/shared/time/day-names';
 import { figure, percent } from '@mereward/shared/units/length-words';
@@ -136,6 +137,7 @@ function chartFacts({ chart, built, people, lake, zone }: SurveyReport): [string
       'Mean and greatest depth',
       `${figures.meanDepthM.toFixed(2)} m and ${figures.greatestDepthM.toFixed(2)} m`,
     ],
+    ['Outline', outlineSourceWords(built.outlineFrom) ?? 'how it was found is not on record'],
     ['Isobaths', `every ${Number(chart.contourStepM.toFixed(4))} m`],
   ];
 }

@@ -15,10 +15,16 @@ import { OutlineEditor } from '@/features/charts/outline-editor';
 import { useLake } from '@/features/lakes/api';
 import { changeLake } from '@/features/lakes/office-api';
 import { FinishedSketch, sketchOf } from '@/features/lakes/outline-sketch';
+import {
+  outlineFrom,
+  OutlineSourceFields,
+  TypedOutlineSource,
+  typedOutlineSource,
+} from '@/features/lakes/outline-source-fields';
 import { useDraftForm } from '@/hooks/use-draft-form';
 import { useHeld } from '@/hooks/use-held';
 
-const Wanted = z.object({ sketch: FinishedSketch });
+const Wanted = z.object({ sketch: FinishedSketch, source: TypedOutlineSource });
 
 /** Draws a lake's shore and islands anew or mends them. */
 export function LakeOutlineScreen() {
@@ -62,11 +68,15 @@ function OutlineForm({ lake }: { lake: LakeView }) {
   const form = useDraftForm({
     form: `lake-outline:${id}:${String(version)}`,
     schema: Wanted,
-    start: { sketch: sketchOf(details.outline) },
-    send: ({ sketch }) => changeLake(id, { details: { ...details, outline: sketch }, version }),
+    start: { sketch: sketchOf(details.outline), source: typedOutlineSource(details.outlineFrom) },
+    send: ({ sketch, source }) => {
+      const { outlineFrom: _before, ...rest } = details;
+      return changeLake(id, { details: { ...rest, outline: sketch, ...outlineFrom(source) }, version });
+    },
     onDone: () => router.replace(`/office/lakes/${id}`),
   });
   const sketch = useController({ control: form.control, name: 'sketch' });
+  const source = useController({ control: form.control, name: 'source' });
   const under = useMemo(() => lakeBackdrop(lake, { water: false }), [lake]);
   return (
     <>
@@ -82,6 +92,7 @@ function OutlineForm({ lake }: { lake: LakeView }) {
         under={under}
         error={sketch.fieldState.error?.message}
         keptAs={id}
+        onSource={(found) => source.field.onChange(typedOutlineSource(found))}
         backdrop={picture.backdrop}
         beside={<BackdropChoice of={picture} />}
       />
@@ -92,7 +103,7 @@ function OutlineForm({ lake }: { lake: LakeView }) {
         busyLabel="Keeping…"
         beside={<LinkButton label="Leave it" href={`/office/lakes/${id}`} />}
       >
-        {null}
+        <OutlineSourceFields control={form.control} name="source" />
       </DraftFormFrame>
     </>
   );

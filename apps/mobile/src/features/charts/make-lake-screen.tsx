@@ -19,6 +19,12 @@ import { NEW_LAKE, TypedLake } from '@/features/lakes/lake-fields';
 import { LakeForm } from '@/features/lakes/lake-form';
 import { makeLake } from '@/features/lakes/office-api';
 import { EMPTY_SKETCH, FinishedSketch, type Sketch } from '@/features/lakes/outline-sketch';
+import {
+  outlineFrom,
+  OutlineSourceFields,
+  TypedOutlineSource,
+  typedOutlineSource,
+} from '@/features/lakes/outline-source-fields';
 import { positionText, readPosition } from '@/lib/position-text';
 import { useDraftForm } from '@/hooks/use-draft-form';
 import { newId } from '@/lib/new-id';
@@ -26,7 +32,12 @@ import { newId } from '@/lib/new-id';
 const READING_PX = 720; // a form's lines stay short on a wide sheet
 const FAR_M = 5000;
 
-const Wanted = z.object({ start: z.string(), sketch: FinishedSketch, details: TypedLake });
+const Wanted = z.object({
+  start: z.string(),
+  sketch: FinishedSketch,
+  source: TypedOutlineSource,
+  details: TypedLake,
+});
 
 /** Draws a new lake and says what it is. */
 export function MakeLakeScreen() {
@@ -67,12 +78,19 @@ function MakeLakeForm({ fishery }: { fishery: FisheryListItem }) {
   const form = useDraftForm({
     form: `lake:new:${fishery.id}`,
     schema: Wanted,
-    start: { start: positionText(fishery.position), sketch: EMPTY_SKETCH, details: NEW_LAKE },
-    send: ({ sketch, details }) => makeLake(fishery.id, { id, details: { ...details, outline: sketch } }),
+    start: {
+      start: positionText(fishery.position),
+      sketch: EMPTY_SKETCH,
+      source: typedOutlineSource(undefined),
+      details: NEW_LAKE,
+    },
+    send: ({ sketch, source, details }) =>
+      makeLake(fishery.id, { id, details: { ...details, outline: sketch, ...outlineFrom(source) } }),
     onDone: (lake) => router.replace(`/office/lakes/${lake.id}`),
   });
   const { control } = form;
   const sketch = useController({ control, name: 'sketch' });
+  const source = useController({ control, name: 'source' });
   const start = useController({ control, name: 'start' });
   const typed = useMemo(() => readPosition(start.field.value), [start.field.value]);
   const origin = typed ?? fishery.position;
@@ -97,6 +115,7 @@ function MakeLakeForm({ fishery }: { fishery: FisheryListItem }) {
           under={NO_BACKDROP}
           error={sketch.fieldState.error?.message}
           keptAs={`new:${fishery.id}`}
+          onSource={(found) => source.field.onChange(typedOutlineSource(found))}
         />
         {isDrawn ? null : (
           <Field
@@ -114,6 +133,7 @@ function MakeLakeForm({ fishery }: { fishery: FisheryListItem }) {
         <View style={{ maxWidth: READING_PX }}>
           <FormProvider {...form}>
             <DraftFormFrame form={form} label="A new lake" act="Keep the lake" busyLabel="Keeping…">
+              <OutlineSourceFields control={control} name="source" />
               <LakeForm />
             </DraftFormFrame>
           </FormProvider>

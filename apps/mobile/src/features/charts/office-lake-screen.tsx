@@ -1,5 +1,6 @@
 import { useMemo } from 'react';
 import { useLocalSearchParams, useRouter } from 'expo-router';
+import { outlineSourceWords } from '@mereward/shared/lakes/outline-source';
 import type { LakeView } from '@mereward/shared/lakes/contract';
 import { View } from 'react-native';
 import { Facts } from '@/components/facts';
@@ -95,6 +96,10 @@ function LakeFacts({ lake }: { lake: LakeView }) {
       <Facts
         facts={[
           { term: 'Water', fact: area(lake.areaM2, units) },
+          {
+            term: 'Outline',
+            fact: outlineSourceWords(details.outlineFrom) ?? 'nobody said how it was found',
+          },
           { term: 'Kind', fact: kind },
           { term: 'Nights', fact: details.nights ? 'yes' : 'days only' },
           { term: 'Chart datum', fact: `${figure(details.datumM, 2)} m` },

@@ -1,4 +1,5 @@
 import { useCallback, useDeferredValue, useMemo, useState, type ReactNode } from 'react';
+import type { OutlineSource } from '@mereward/shared/lakes/outline-source';
 import { toPlane, type LonLat, type Point } from '@mereward/shared/geometry/plane';
 import { View } from 'react-native';
 import { Button } from '@/components/button';
@@ -51,6 +52,8 @@ type Props = {
   error?: string | undefined;
   /** Names what is drawn among what this device keeps: a walk round it goes on after a reload. */
   keptAs: string;
+  /** Told how the shore was found, when the editor knows: walked round with the phone. */
+  onSource: (source: OutlineSource) => void;
   /** A picture to trace over, and what is chosen about it. */
   backdrop?: Backdrop | undefined;
   beside?: ReactNode;
@@ -67,7 +70,7 @@ const spotOf = (id: string) => {
 
 /** Draws a lake's shore and islands: by tapping, by typing each point, or from a file. */
 export function OutlineEditor({ sketch, onChange, origin, under, error, keptAs, ...rest }: Props) {
-  const { backdrop, beside } = rest;
+  const { backdrop, beside, onSource } = rest;
   const wide = useWide();
   const deed = useSketch(sketch, onChange);
   const { chosen } = deed;
@@ -157,7 +160,7 @@ export function OutlineEditor({ sketch, onChange, origin, under, error, keptAs, 
       </View>
       <View style={{ flexGrow: 1, flexBasis: 320, gap: space.medium, minWidth: 0 }}>
         {walking.walk ? null : <SketchButtons sketch={sketch} deed={deed} />}
-        <OutlineWalk walking={walking} sketch={sketch} onRing={replace} />
+        <OutlineWalk walking={walking} sketch={sketch} onRing={replace} onSource={onSource} />
         {walking.walk ? null : (
           <>
             <OutlineFound sketch={settled} reading={reading} crowded={fromPxPerM > 0 && open === null} />

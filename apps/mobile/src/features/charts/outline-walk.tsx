@@ -1,4 +1,6 @@
 import { useState } from 'react';
+import type { OutlineSource } from '@mereward/shared/lakes/outline-source';
+import { walkReport } from '@mereward/shared/lakes/shore-walk';
 import { walkedRing } from '@mereward/shared/lakes/walked-ring';
 import { View } from 'react-native';
 import { Note } from '@/components/note';
@@ -9,11 +11,17 @@ import type { ShoreWalking } from '@/features/lakes/use-shore-walk';
 import { ringWords, surenessWords } from '@/features/lakes/walk-words';
 import { useUnits } from '@/hooks/use-units';
 
-type Props = { walking: ShoreWalking; sketch: Sketch; onRing: (sketch: Sketch) => void };
+type Props = {
+  walking: ShoreWalking;
+  sketch: Sketch;
+  onRing: (sketch: Sketch) => void;
+  /** Told when the shore itself was walked. */
+  onSource: (source: OutlineSource) => void;
+};
 type Said = { kind: 'fine' | 'caution'; title: string; words: string };
 
 /** Walking as a way to draw: what is walked becomes a ring of the drawing, and it is told how sure that is. */
-export function OutlineWalk({ walking, sketch, onRing }: Props) {
+export function OutlineWalk({ walking, sketch, onRing, onSource }: Props) {
   const units = useUnits();
   const [said, setSaid] = useState<Said | null>(null);
   const { walk, of } = walking;
@@ -35,6 +43,9 @@ export function OutlineWalk({ walking, sketch, onRing }: Props) {
       words: words.filter(Boolean).join(' '),
     });
     onRing(putRing(sketch, of, ring.places));
+    const { radiusM } = walkReport(walk);
+    if (of === 'shore' && radiusM !== null)
+      onSource({ way: 'walked', withinM: Math.min(50, Math.max(0.1, Math.round(radiusM * 10) / 10)) });
     walking.end();
   };
   const drawing = openRingOf(sketch);

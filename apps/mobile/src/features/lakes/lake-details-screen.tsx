@@ -12,6 +12,7 @@ import { useLake } from '@/features/lakes/api';
 import { TypedLake, typedLake } from '@/features/lakes/lake-fields';
 import { LakeForm } from '@/features/lakes/lake-form';
 import { changeLake } from '@/features/lakes/office-api';
+import { outlineFrom } from '@/features/lakes/outline-source-fields';
 import { useDraftForm } from '@/hooks/use-draft-form';
 import { useHeld } from '@/hooks/use-held';
 
@@ -58,7 +59,10 @@ function DetailsForm({ lake }: { lake: LakeView }) {
     schema: Wanted,
     start: { details: typedLake(details) },
     send: ({ details: typed }) =>
-      changeLake(id, { details: { ...typed, outline: details.outline }, version }),
+      changeLake(id, {
+        details: { ...typed, outline: details.outline, ...outlineFrom(details.outlineFrom ?? null) },
+        version,
+      }),
     onDone: () => router.replace(`/office/lakes/${id}`),
   });
   return (

@@ -4,7 +4,7 @@ import type { Choice } from '@/components/choice-props';
 import { typedNumber, typedNumberOrNothing } from '@/lib/typed-schemas';
 
 /** A lake's details as they are typed, without its outline, which is drawn. */
-export const TypedLake = LakeDetails.omit({ outline: true }).extend({
+export const TypedLake = LakeDetails.omit({ outline: true, outlineFrom: true }).extend({
   name: z.string().trim().min(1, 'Give the lake its name.').max(120, 'At most 120 letters.'),
   maxPeople: typedNumberOrNothing({ what: 'Most people', min: 0, max: 2000 }).pipe(
     z.int('A whole number of people.').nullable(),
@@ -40,7 +40,7 @@ export const NEW_LAKE: TypedLake = {
 const text = (value: number | null): string => (value === null ? '' : String(value));
 
 /** A lake's details laid into the form. */
-export function typedLake({ outline: _drawn, ...details }: LakeDetails): TypedLake {
+export function typedLake({ outline: _drawn, outlineFrom: _found, ...details }: LakeDetails): TypedLake {
   return {
     ...details,
     maxPeople: text(details.maxPeople),
