@@ -5,6 +5,7 @@ import { Lake } from '@mereward/db/entities/lakes/lake';
 import { Peg } from '@mereward/db/entities/lakes/peg';
 import { TicketType } from '@mereward/db/entities/tickets/ticket-type';
 import type { TicketType as TicketTypeDetails } from '@mereward/shared/tickets/contract';
+import type { BookedTicket, FillInBooking, HoldPegs } from '@mereward/shared/bookings/contract';
 import { TICKET_TEMPLATES } from '@mereward/shared/tickets/ticket-templates';
 import { randomUUID } from 'node:crypto';
 import type { TestServer } from './server';
@@ -69,3 +70,39 @@ export async function aTicketType(
   await manager.insert(TicketType, row);
   return { id, details };
 }
+
+type HoldWishes = { ticketTypeId: string; lakeId: string; day: string; start?: string | null };
+
+/** What a phone sends to hold some pegs, one ticket on each. */
+export const aHold = (
+  { ticketTypeId, lakeId, day, start = null }: HoldWishes,
+  pegIds: readonly (string | null)[],
+  ticket: Partial<BookedTicket> = {},
+): HoldPegs => ({
+  id: randomUUID(),
+  lakeId,
+  day,
+  start,
+  tickets: pegIds.map((pegId, index) => ({
+    ticketTypeId,
+    pegId,
+    rods: 2,
+    people: 1,
+    kind: index === 0 ? 'holder' : 'guest',
+    name: '',
+    bornOn: null,
+    ...ticket,
+  })),
+});
+
+/** What is filled in of an adult with a licence. */
+export const filledIn = (version: number, wishes: Partial<FillInBooking> = {}): FillInBooking => ({
+  version,
+  tickets: [{ name: 'Sofia Marsh', bornOn: '1988-05-02' }],
+  guardian: null,
+  vehicle: 'WE27 OST',
+  emergencyContact: 'Jo Marsh, 01632 960 002',
+  licence: { held: true, lastSix: '4F7K2M', expiresOn: null },
+  note: '',
+  ...wishes,
+});

@@ -1,3 +1,4 @@
+import { expireHoldJob } from './bookings/jobs';
 import { buildChartJob } from './charts/jobs';
 import { removeFiles, resizePhoto } from './files/jobs';
 import type { Handlers } from './jobs/worker';
@@ -7,6 +8,7 @@ import { readLogJob } from './surveys/log-jobs';
 
 /** What does each kind of queued job, word by word. */
 export const handlers: Handlers = {
+  'booking.expire': expireHoldJob,
   'mail.send': sendMail,
   'chart.build': buildChartJob,
   'photo.resize': resizePhoto,

@@ -1,5 +1,6 @@
 import { accountRoutes } from './accounts/routes';
 import { boardRoutes } from './bookings/board-routes';
+import { lifeRoutes } from './bookings/life-routes';
 import { bookingRoutes } from './bookings/routes';
 import { termsRoutes } from './bookings/terms-routes';
 import { disagreementRoutes } from './charts/disagreement-routes';
@@ -34,6 +35,7 @@ export const routes: readonly Route[] = [
   ...termsRoutes,
   ...bookingRoutes,
   ...boardRoutes,
+  ...lifeRoutes,
   ...surveyRoutes,
   ...bottomRoutes,
   ...logRoutes,

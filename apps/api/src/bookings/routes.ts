@@ -1,5 +1,6 @@
-import { TicketList, TicketView, WriteTicket } from '@mereward/shared/bookings/contract';
+import { BookingList, TicketList, TicketView, WriteTicket } from '@mereward/shared/bookings/contract';
 import { deed, read, type Route } from '../http/route';
+import { myBookings } from './booking-lists';
 import { myTickets, ticketsOfPeg, ticketView } from './queries';
 import { cancelTicket, writeTicket } from './service';
 
@@ -32,8 +33,14 @@ export const bookingRoutes: Route[] = [
     (ctx, { id }) => ticketsOfPeg(ctx, id('pegId')),
   ),
   read(
-    { method: 'get', path: '/bookings/mine', summary: 'One’s own tickets', signIn, answer: TicketList },
-    (ctx) => myTickets(ctx),
+    {
+      method: 'get',
+      path: '/bookings/mine',
+      summary: 'One’s own tickets',
+      signIn,
+      answer: BookingList.extend(TicketList.shape),
+    },
+    async (ctx) => ({ ...(await myTickets(ctx)), ...(await myBookings(ctx)) }),
   ),
   deed(
     { method: 'delete', path: '/bookings/:bookingId', summary: 'Cancel a ticket', signIn },
