@@ -26,7 +26,7 @@ const places: readonly (Place & { for: readonly Role[]; strangers: boolean })[] 
     key: 'tickets',
     label: 'Tickets',
     href: '/tickets',
-    holds: ['tickets'],
+    holds: ['tickets', 't', 'choose'],
     for: everywhere,
     strangers: true,
   },

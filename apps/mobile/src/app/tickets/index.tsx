@@ -1,1 +1,1 @@
-export { MyTicketsScreen as default } from '@/features/bookings/my-tickets-screen';
+export { FindPegScreen as default } from '@/features/bookings/find-peg-screen';

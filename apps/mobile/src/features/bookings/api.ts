@@ -5,17 +5,8 @@ import { queryClient } from '@/lib/queries';
 
 const bookingKeys = {
   all: ['bookings'] as const,
-  mine: ['bookings', 'mine'] as const,
   ofPeg: (pegId: string) => ['bookings', 'peg', pegId] as const,
 };
-
-/** The reader's own tickets, the newest first. */
-export const useMyTickets = (signedIn: boolean) =>
-  useQuery({
-    queryKey: bookingKeys.mine,
-    queryFn: ({ signal }) => api.get('/bookings/mine', TicketList, signal),
-    enabled: signedIn,
-  });
 
 /** A peg's tickets, for those who write or check them. Names of visitors are not kept on the device. */
 export const usePegTickets = (pegId: string) =>

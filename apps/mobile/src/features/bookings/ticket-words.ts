@@ -1,5 +1,5 @@
 import type { TicketView } from '@mereward/shared/bookings/contract';
-import { clockTime, dayAndTime, dayName } from '@/lib/format-time';
+import { clockTime, dayAndTime } from '@/lib/format-time';
 import { civilTime } from '@/lib/zoned-time';
 
 type Times = Pick<TicketView, 'from' | 'until' | 'zone'>;
@@ -10,14 +10,3 @@ export function ticketTimes({ from, until, zone }: Times): string {
   if (day(from) === day(until)) return `${dayAndTime(from, zone)} to ${clockTime(until, zone)}`;
   return `${dayAndTime(from, zone)} to ${dayAndTime(until, zone)}`;
 }
-
-export type TicketState = 'running' | 'to come' | 'over';
-
-export function ticketState({ from, until }: Times, nowMs: number): TicketState {
-  if (Date.parse(until) <= nowMs) return 'over';
-  return Date.parse(from) <= nowMs ? 'running' : 'to come';
-}
-
-/** The day a ticket begins on, in words. */
-export const ticketDay = ({ from, zone }: Times): string =>
-  dayName(civilTime(Date.parse(from), zone).slice(0, 10));

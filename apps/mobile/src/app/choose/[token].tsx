@@ -1,0 +1,1 @@
+export { ChoiceScreen as default } from '@/features/bookings/choice-screen';

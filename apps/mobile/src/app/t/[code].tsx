@@ -1,0 +1,1 @@
+export { ByCodeScreen as default } from '@/features/bookings/by-code-screen';

@@ -1,0 +1,1 @@
+export { BookingScreen as default } from '@/features/bookings/booking-screen';

@@ -1,0 +1,1 @@
+export { MoveScreen as default } from '@/features/bookings/move-screen';
