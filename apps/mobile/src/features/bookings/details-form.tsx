@@ -1,9 +1,12 @@
-import { useState } from 'react';
+import { useRef, useState } from 'react';
 import type { BookingView } from '@mereward/shared/bookings/contract';
+import type { LettingTermsView } from '@mereward/shared/bookings/letting-terms';
 import { useWatch } from 'react-hook-form';
 import { View } from 'react-native';
+import { Button } from '@/components/button';
 import { DraftFormFrame } from '@/components/draft-form-frame';
 import { FormField } from '@/components/form-field';
+import { Note } from '@/components/note';
 import { Text } from '@/components/text';
 import { space } from '@/constants/layout';
 import { confirmBooking, fillInBooking, paymentPage } from '@/features/bookings/booking-api';
@@ -26,33 +29,62 @@ import { useDraftForm, type DraftForm } from '@/hooks/use-draft-form';
 import { goTo } from '@/lib/go-to';
 import { money } from '@/lib/format';
 
-type Props = { asked: Asked };
+type Props = { asked: Asked; terms: Pick<LettingTermsView, 'cardPayments' | 'details'> };
 
 /** What a booking still asks for, and the one act that ends it: paying, or taking the ticket where nothing is to be paid. */
-export function BookingDetailsForm({ asked }: Props) {
+export function BookingDetailsForm({ asked, terms }: Props) {
   const { booking } = asked;
   const [schema] = useState(() => detailsSchema(asked));
+  const atLodge = useRef(false);
   const form = useDraftForm({
     form: detailsDraft(booking.id),
     schema,
     start: detailsStart(booking),
-    send: (typed) => finish(asked, typed),
+    send: (typed) => finish(asked, { typed, atLodge: atLodge.current }),
   });
   const owed = booking.grossPence - booking.paidPence;
-  const act = owed > 0 ? `Pay ${money(owed, booking.currency)}` : 'Take the ticket';
+  const lodge = owed > 0 && terms.details.payAtLodge;
+  const card = owed > 0 && terms.cardPayments;
+  const go = (pays: 'card' | 'lodge') => (): void => {
+    atLodge.current = pays === 'lodge';
+    form.submit();
+  };
+  if (owed > 0 && !card && !lodge)
+    return (
+      <Note kind="caution" title="This fishery takes no card here yet">
+        Ring the office: a ticket written there for your e-mail address is shown under My tickets.
+      </Note>
+    );
+  const act = card ? `Pay ${money(owed, booking.currency)}` : 'Take the ticket';
   return (
-    <DraftFormFrame form={form} label="Your booking" act={act} busyLabel="Keeping…" bank>
+    <DraftFormFrame
+      form={{ ...form, submit: go(card || owed <= 0 ? 'card' : 'lodge') }}
+      label="Your booking"
+      act={act}
+      busyLabel="Keeping…"
+      bank
+      beside={
+        card && lodge ? (
+          <Button label="Pay at the lodge on the day" bank disabled={form.busy} onPress={go('lodge')} />
+        ) : null
+      }
+    >
       <Fields asked={asked} form={form} />
+      {lodge && !card ? (
+        <Text>{`${money(owed, booking.currency)} is paid at the lodge on the day.`}</Text>
+      ) : null}
     </DraftFormFrame>
   );
 }
 
-/** Keeps what was filled in, then goes to the payment page; where nothing is to be paid the ticket is there at once. */
-async function finish(asked: Asked, typed: DetailsForm): Promise<BookingView> {
+type Sent = { typed: DetailsForm; atLodge: boolean };
+
+/** Keeps what was filled in, then goes to the payment page; where nothing is to be paid now the ticket is there at once. */
+async function finish(asked: Asked, { typed, atLodge }: Sent): Promise<BookingView> {
   const { booking } = asked;
   const kept = booking.may.fillIn ? await fillInBooking(booking.id, fillInOf(asked, typed)) : booking;
+  if (kept.may.confirm && (atLodge || !kept.may.pay)) return confirmBooking(kept.id);
   if (kept.may.pay) goTo((await paymentPage(kept.id)).url);
-  else if (kept.may.confirm) return confirmBooking(kept.id);
   return kept;
 }
 

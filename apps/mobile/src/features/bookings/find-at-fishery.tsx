@@ -12,7 +12,7 @@ import { FreePegsPart } from '@/features/bookings/free-pegs-part';
 import { KindBar } from '@/features/bookings/kind-bar';
 import { lastSearch } from '@/features/bookings/use-find-choice';
 import { useFishery } from '@/features/fisheries/office-api';
-import { useTicketKinds } from '@/features/tickets/kinds-api';
+import { useTicketTypes } from '@/features/tickets/office-api';
 import { startsOf } from '@/features/tickets/kind-words';
 import { civilTime } from '@/lib/zoned-time';
 
@@ -22,7 +22,7 @@ type Props = FindProps & { fishery: FisheryListItem };
 /** The search at one fishery: a day, a kind of ticket, then the pegs. */
 export function FindAtFishery({ fishery, choice, change }: Props) {
   const about = useFishery(fishery.id);
-  const kinds = useTicketKinds(fishery.id);
+  const kinds = useTicketTypes(fishery.id);
   return (
     <Loaded query={about} waiting="Reading the fishery…">
       {(view) => (

@@ -8,9 +8,10 @@ import { BookingDetailsForm } from '@/features/bookings/details-form';
 import { HoldAgain } from '@/features/bookings/hold-again';
 import { HoldClock } from '@/features/bookings/hold-clock';
 import { LetGo } from '@/features/bookings/let-go';
+import { useLettingTerms } from '@/features/bookings/terms-api';
 import { useFishery } from '@/features/fisheries/office-api';
 import { RulesToRead } from '@/features/rules/rules-to-read';
-import { useTicketKinds } from '@/features/tickets/kinds-api';
+import { useTicketTypes } from '@/features/tickets/office-api';
 
 type Props = { booking: BookingView; onAsk: () => void };
 
@@ -43,12 +44,19 @@ export function HeldBooking({ booking, onAsk }: Props) {
 
 function Asking({ booking }: { booking: BookingView }) {
   const fishery = useFishery(booking.fisheryId);
-  const kinds = useTicketKinds(booking.fisheryId);
+  const kinds = useTicketTypes(booking.fisheryId);
+  const terms = useLettingTerms(booking.fisheryId);
   return (
     <Loaded query={fishery} waiting="Reading what is asked…">
       {({ details: { jurisdiction } }) => (
         <Loaded query={kinds} waiting="Reading what is asked…">
-          {({ ticketTypes }) => <BookingDetailsForm asked={askedOf(booking, jurisdiction, ticketTypes)} />}
+          {({ ticketTypes }) => (
+            <Loaded query={terms} waiting="Reading how it is paid…">
+              {(how) => (
+                <BookingDetailsForm asked={askedOf(booking, jurisdiction, ticketTypes)} terms={how} />
+              )}
+            </Loaded>
+          )}
         </Loaded>
       )}
     </Loaded>

@@ -20,7 +20,7 @@ import { ticketTimes } from '@/features/bookings/ticket-words';
 import { choiceOf, freeQuery } from '@/features/bookings/find-choice';
 import { useFreePegs } from '@/features/bookings/free-api';
 import { PegRows } from '@/features/bookings/free-peg-list';
-import { useTicketKinds } from '@/features/tickets/kinds-api';
+import { useTicketTypes } from '@/features/tickets/office-api';
 import { startsOf } from '@/features/tickets/kind-words';
 
 /** Another day or other pegs for the same tickets; with `?claim=yes` the peg of a ticket that chooses on arrival. */
@@ -56,7 +56,7 @@ export function MoveScreen() {
 }
 
 function Moving({ booking }: { booking: BookingView }) {
-  const kinds = useTicketKinds(booking.fisheryId);
+  const kinds = useTicketTypes(booking.fisheryId);
   return (
     <Loaded query={kinds} waiting="Reading the ticket…">
       {({ ticketTypes }) => (
