@@ -1,4 +1,5 @@
 import { makeApp } from '@mereward/api/app';
+import { closeBoardStreams } from '@mereward/api/bookings/board-streams';
 import { readConfig, type Config } from '@mereward/api/config';
 import { handlers } from '@mereward/api/handlers';
 import { makeLogger } from '@mereward/api/http/logging';
@@ -82,6 +83,7 @@ export async function aServer({ env = {}, logger }: Wishes = {}): Promise<TestSe
     },
     close: async () => {
       await stopWorkers();
+      await closeBoardStreams(server);
       await boss.stop({ graceful: true, wait: true, timeout: 10_000 });
       await source.destroy();
       await capture.close();

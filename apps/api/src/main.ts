@@ -2,6 +2,7 @@ import { makeDataSource } from '@mereward/db/data-source';
 import { readFileSync } from 'node:fs';
 import { createServer, type Server } from 'node:http';
 import { makeApp } from './app';
+import { closeBoardStreams } from './bookings/board-streams';
 import { CHART_BUILDS } from './charts/jobs';
 import { fileStoreOf } from './files/store';
 import { readConfig, SettingsFault, type Config } from './config';
@@ -47,6 +48,7 @@ async function main(): Promise<void> {
   logger.info({ port: config.port, url: config.publicUrl }, 'listening');
 
   const close = async () => {
+    await closeBoardStreams(server);
     await finish(http);
     for (const stopWatching of watches) stopWatching();
     await worker.stop();

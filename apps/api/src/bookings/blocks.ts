@@ -123,28 +123,37 @@ export async function unblockPegs(ctx: Ctx, at: { fisheryId: string; blockId: st
 
 type BlockRow = Omit<BlockView, 'from' | 'until' | 'may'> & { from: Date; until: Date };
 
+const BLOCKS = `
+  SELECT k.id, k.title, lower(k.during) AS "from", upper(k.during) AS until, a.name AS "madeBy",
+            (SELECT coalesce(json_agg(json_build_object('pegId', p.id, 'number', p.number, 'lakeName', l.name)
+                      ORDER BY l.name, p.walking_order), '[]')
+               FROM peg_time t JOIN peg p ON p.id = t.peg_id JOIN lake l ON l.id = p.lake_id
+              WHERE t.block_id = k.id) AS pegs
+    FROM peg_block k JOIN account a ON a.id = k.made_by`;
+
+const blockView = ({ actor }: Ctx, fisheryId: string, row: BlockRow): BlockView => ({
+  ...row,
+  from: row.from.toISOString(),
+  until: row.until.toISOString(),
+  may: { remove: holdsAny(actor, fisheryId, PEG_BLOCKERS) },
+});
+
+/** One block, as whoever made it sees it. */
+export async function blockOf(ctx: Ctx, fisheryId: string, blockId: string): Promise<BlockView> {
+  const rows: BlockRow[] = await ctx.tx.query(`${BLOCKS} WHERE k.id = $1`, [blockId]);
+  const [row] = rows;
+  if (!row) throw notFound('block');
+  return blockView(ctx, fisheryId, row);
+}
+
 /** What is kept back from now on, for staff. */
 export async function blocksOf(ctx: Ctx, fisheryId: string): Promise<BlockList> {
   const { tx, actor, now } = ctx;
   await fisheryFound(tx, fisheryId);
   allowOnly(actor, { fisheryId, what: 'fishery' }, STAFF);
   const rows: BlockRow[] = await tx.query(
-    `SELECT k.id, k.title, lower(k.during) AS "from", upper(k.during) AS until, a.name AS "madeBy",
-            (SELECT coalesce(json_agg(json_build_object('pegId', p.id, 'number', p.number, 'lakeName', l.name)
-                      ORDER BY l.name, p.walking_order), '[]')
-               FROM peg_time t JOIN peg p ON p.id = t.peg_id JOIN lake l ON l.id = p.lake_id
-              WHERE t.block_id = k.id) AS pegs
-       FROM peg_block k JOIN account a ON a.id = k.made_by
-      WHERE k.fishery_id = $1 AND upper(k.during) > $2 ORDER BY lower(k.during), k.id`,
+    `${BLOCKS} WHERE k.fishery_id = $1 AND upper(k.during) > $2 ORDER BY lower(k.during), k.id`,
     [fisheryId, now],
   );
-  const remove = holdsAny(actor, fisheryId, PEG_BLOCKERS);
-  return {
-    blocks: rows.map((row) => ({
-      ...row,
-      from: row.from.toISOString(),
-      until: row.until.toISOString(),
-      may: { remove },
-    })),
-  };
+  return { blocks: rows.map((row) => blockView(ctx, fisheryId, row)) };
 }

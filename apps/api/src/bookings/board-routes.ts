@@ -1,6 +1,7 @@
 import {
   BlockList,
   BlockPegs,
+  BlockView,
   BoardAsked,
   BoardView,
   FreeAsked,
@@ -9,10 +10,13 @@ import {
 import { parse } from '../http/parse';
 import { deed, raw, read, type Route } from '../http/route';
 import { idIn } from '../http/route-id';
+import { serverOf } from '../http/server';
 import { reading } from '../http/transaction';
+import { fisheryFound } from '../fisheries/found';
 import { availability } from './availability';
-import { blockPegs, blocksOf, unblockPegs } from './blocks';
+import { blockOf, blockPegs, blocksOf, unblockPegs } from './blocks';
 import { boardText } from './board';
+import { boardStreamsOf } from './board-streams';
 
 export const boardRoutes: Route[] = [
   read(
@@ -48,9 +52,13 @@ export const boardRoutes: Route[] = [
       summary: 'Keep pegs back for a while, all of them or none',
       signIn: 'needed',
       body: BlockPegs,
+      answer: BlockView,
       status: 201,
     },
-    (ctx, { id, body }) => blockPegs(ctx, id('fisheryId'), body),
+    async (ctx, { id, body }) => {
+      await blockPegs(ctx, id('fisheryId'), body);
+      return blockOf(ctx, id('fisheryId'), body.id);
+    },
   ),
   read(
     {
@@ -70,5 +78,19 @@ export const boardRoutes: Route[] = [
       signIn: 'needed',
     },
     (ctx, { id }) => unblockPegs(ctx, { fisheryId: id('fisheryId'), blockId: id('blockId') }),
+  ),
+  raw(
+    {
+      method: 'get',
+      path: '/fisheries/:fisheryId/board/events',
+      summary: 'A stream that tells which lake’s calendar changed',
+      signIn: 'open',
+      answerType: 'text/event-stream',
+    },
+    async (req, res) => {
+      const { id } = await reading(req, ({ tx }) => fisheryFound(tx, idIn(req, 'fisheryId')));
+      const failed = (err: unknown) => req.log.error({ err }, 'the board’s stream failed');
+      boardStreamsOf(serverOf(req), failed).open(req, res, id);
+    },
   ),
 ];
