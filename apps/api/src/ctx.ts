@@ -44,6 +44,7 @@ export type JobName =
   | 'log.read'
   | 'refund.ask'
   | 'payment.close'
+  | 'closure.settle'
   | 'booking.expire';
 
 /** Everything a service gets: never a request. */

@@ -1,4 +1,5 @@
 import { expireHoldJob } from './bookings/jobs';
+import { settleChoicesJob } from './bookings/settle-choices';
 import { buildChartJob } from './charts/jobs';
 import { removeFiles, resizePhoto } from './files/jobs';
 import type { Handlers } from './jobs/worker';
@@ -9,6 +10,7 @@ import { readLogJob } from './surveys/log-jobs';
 /** What does each kind of queued job, word by word. */
 export const handlers: Handlers = {
   'booking.expire': expireHoldJob,
+  'closure.settle': settleChoicesJob,
   'mail.send': sendMail,
   'chart.build': buildChartJob,
   'photo.resize': resizePhoto,

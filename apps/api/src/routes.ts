@@ -1,6 +1,7 @@
 import { accountRoutes } from './accounts/routes';
 import { boardRoutes } from './bookings/board-routes';
 import { lifeRoutes } from './bookings/life-routes';
+import { closureDeedRoutes } from './bookings/closure-routes';
 import { bookingRoutes } from './bookings/routes';
 import { termsRoutes } from './bookings/terms-routes';
 import { disagreementRoutes } from './charts/disagreement-routes';
@@ -15,6 +16,8 @@ import { pictureRoutes } from './lakes/picture-routes';
 import { photoRoutes } from './lakes/photo-routes';
 import { lakeRoutes } from './lakes/routes';
 import { waterRoutes } from './lakes/water-routes';
+import { closureRoutes } from './closures/routes';
+import { noticeRoutes } from './notices/routes';
 import { ruleRoutes } from './rules/routes';
 import { bottomRoutes } from './surveys/bottom-routes';
 import { logRoutes } from './surveys/log-routes';
@@ -31,6 +34,9 @@ export const routes: readonly Route[] = [
   ...pictureRoutes,
   ...fileRoutes,
   ...ruleRoutes,
+  ...closureRoutes,
+  ...noticeRoutes,
+  ...closureDeedRoutes,
   ...ticketRoutes,
   ...termsRoutes,
   ...bookingRoutes,

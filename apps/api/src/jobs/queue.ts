@@ -13,6 +13,7 @@ const QUEUES: Record<JobName, { retryLimit: number; retryDelay: number; expireIn
   // Fourteen tries are some twenty hours, within the day a provider knows an idempotency key.
   'refund.ask': { retryLimit: 13, retryDelay: 5, expireInSeconds: 120 },
   'payment.close': { retryLimit: 11, retryDelay: 5, expireInSeconds: 120 },
+  'closure.settle': { retryLimit: 11, retryDelay: 5, expireInSeconds: 120 },
   'booking.expire': { retryLimit: 5, retryDelay: 5, expireInSeconds: 60 },
 };
 

@@ -25,6 +25,7 @@ const NAMES: readonly JobName[] = [
   'refund.ask',
   'payment.close',
   'booking.expire',
+  'closure.settle',
 ];
 
 /** Nothing of these outlasts its being done: a mail holds an address and a secret link. */

@@ -1,7 +1,6 @@
 import { READING_WORDS, rulesAt } from '@mereward/shared/rules/reading';
 import type { Rule } from '@mereward/shared/rules/contract';
 import type { RulesToReadView } from '@mereward/shared/rules/sheet-contract';
-import type { EntityManager } from 'typeorm';
 import { holdsAny, type Ctx } from '../ctx';
 import { notFound } from '../http/deny';
 import { STAFF } from '../lakes/policy';
@@ -64,16 +63,4 @@ export async function rulesToRead(ctx: Ctx, bookingId: string): Promise<RulesToR
       witness: inForce !== null && holdsAny(actor, booking.fisheryId, READING_WITNESSES),
     },
   };
-}
-
-/** Why a booking's ticket isn't good yet as far as rules go, in words; null when it is. For the booking's own view. */
-export async function rulesStillToRead(
-  tx: EntityManager,
-  bookingId: string,
-): Promise<{ needed: boolean; notYet: string | null; goodFrom: Date | null }> {
-  const reading = (await readingsOf(tx, [bookingId])).get(bookingId);
-  if (!reading) return { needed: false, notYet: null, goodFrom: null };
-  const { needed, blocks } = reading;
-  const notYet = needed && blocks !== 'nothing' ? READING_WORDS[blocks] : null;
-  return { needed, notYet, goodFrom: reading.goodFrom };
 }

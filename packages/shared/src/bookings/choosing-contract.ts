@@ -1,5 +1,4 @@
 import { z } from 'zod';
-import { Clock } from '../tickets/contract';
 
 /** A day on which everything of a booking finds a place, with the free pegs that could take it. */
 export const PlaceOffered = z.object({
@@ -57,7 +56,7 @@ export type ChoiceView = z.infer<typeof ChoiceView>;
  * in `errors`. The same choice again is no fault; another after it is.
  */
 export const Choose = z.discriminatedUnion('choice', [
-  z.strictObject({ choice: z.literal('move_date'), day: z.iso.date(), start: Clock.nullable() }),
+  z.strictObject({ choice: z.literal('move_date'), day: z.iso.date() }),
   z.strictObject({ choice: z.literal('move_lake'), day: z.iso.date() }),
   z.strictObject({ choice: z.literal('refund') }),
 ]);

@@ -1,4 +1,5 @@
 import { z } from 'zod';
+import { Version } from '../fisheries/contract';
 
 const words = (max: number) => z.string().trim().max(max);
 
@@ -12,7 +13,7 @@ export const NoticeDetails = z.strictObject({
 });
 export type NoticeDetails = z.infer<typeof NoticeDetails>;
 
-/** POST /api/fisheries/:fisheryId/notices (head bailiff and up), PUT /api/notices/:noticeId */
+/** POST /api/fisheries/:fisheryId/notices (head bailiff and up) */
 export const WriteNotice = z.strictObject({
   id: z.uuid(),
   lakeIds: z.array(z.uuid()).max(100), // none: the whole fishery
@@ -22,6 +23,9 @@ export const WriteNotice = z.strictObject({
   details: NoticeDetails,
 });
 export type WriteNotice = z.infer<typeof WriteNotice>;
+/** PUT /api/notices/:noticeId (head bailiff and up); DELETE takes it down. */
+export const ChangeNotice = WriteNotice.extend({ version: Version });
+export type ChangeNotice = z.infer<typeof ChangeNotice>;
 
 /** GET /api/fisheries/:fisheryId/notices (open; as much as the reader may see). Danger and closed can't be put away. */
 export const NoticeView = z.object({
