@@ -165,11 +165,12 @@ describe('cancelling', () => {
     for (const body of [ahead, running]) await here.people.office.post(path).send(body);
     expect((await aStranger(server).delete(`/bookings/${ahead.id}`)).status).toBe(401);
     expect((await elsewhere.people.office.delete(`/bookings/${ahead.id}`)).status).toBe(404);
-    expect((await here.people.bailiff.delete(`/bookings/${ahead.id}`)).status).toBe(404);
+    expect((await here.people.bailiff.delete(`/bookings/${ahead.id}`)).status).toBe(404); // not his days
+    expect((await here.people.bailiff.delete(`/bookings/${running.id}`)).status).toBe(403);
     expect((await visitor.delete(`/bookings/${running.id}`)).status).toBe(403);
     expect((await visitor.delete(`/bookings/${ahead.id}`)).status).toBe(204);
-    expect((await here.people.office.delete(`/bookings/${running.id}`)).status).toBe(204);
-    expect((await here.people.office.delete(`/bookings/${running.id}`)).status).toBe(404);
+    for (let times = 0; times < 2; times += 1)
+      expect((await here.people.office.delete(`/bookings/${running.id}`)).status).toBe(204);
     expect((await here.people.office.post(path).send(running)).status).toBe(409);
     expect((await here.people.office.post(path).send(ticket())).status).toBe(201);
   });

@@ -5,10 +5,18 @@ import { Lake } from '@mereward/db/entities/lakes/lake';
 import { Peg } from '@mereward/db/entities/lakes/peg';
 import { TicketType } from '@mereward/db/entities/tickets/ticket-type';
 import type { TicketType as TicketTypeDetails } from '@mereward/shared/tickets/contract';
-import type { BookedTicket, FillInBooking, HoldPegs } from '@mereward/shared/bookings/contract';
+import {
+  BookingView,
+  type BookedTicket,
+  type BookForSomebody,
+  type FillInBooking,
+  type HoldPegs,
+} from '@mereward/shared/bookings/contract';
+import { Payment } from '@mereward/db/entities/payments/payment';
 import { TICKET_TEMPLATES } from '@mereward/shared/tickets/ticket-templates';
 import { randomUUID } from 'node:crypto';
 import type { TestServer } from './server';
+import type { TestFishery } from './waters';
 
 type Wishes = {
   pegId: string;
@@ -106,3 +114,34 @@ export const filledIn = (version: number, wishes: Partial<FillInBooking> = {}): 
   note: '',
   ...wishes,
 });
+
+/** A ticket written by the office for somebody. */
+export async function bookedFor(
+  here: TestFishery,
+  hold: HoldPegs,
+  holder: BookForSomebody['holder'] = { name: 'Ned Bray', email: null },
+): Promise<BookingView> {
+  const body: BookForSomebody = { ...hold, holder, vehicle: 'WE27 OST', note: '' };
+  const answer = await here.people.office.post(`/fisheries/${here.id}/bookings`).send(body);
+  return BookingView.parse(answer.body);
+}
+
+/** A payment in cash as a row: what it does to the books is the payments’ own test. */
+export const paidInCash = (
+  test: TestServer,
+  here: TestFishery,
+  { bookingId, amountPence }: { bookingId: string; amountPence: number },
+) =>
+  test.server.source.manager.insert(Payment, {
+    id: randomUUID(),
+    fisheryId: here.id,
+    bookingId,
+    method: 'cash',
+    amountPence,
+    currency: 'GBP',
+    status: 'captured',
+    madeBy: here.people.office.id,
+    madeAt: test.server.clock(),
+    takenAt: test.server.clock(),
+    fault: '',
+  });

@@ -1,4 +1,5 @@
 import { accountRoutes } from './accounts/routes';
+import { bankRoutes } from './bookings/bank-routes';
 import { boardRoutes } from './bookings/board-routes';
 import { lifeRoutes } from './bookings/life-routes';
 import { closureDeedRoutes } from './bookings/closure-routes';
@@ -42,6 +43,7 @@ export const routes: readonly Route[] = [
   ...bookingRoutes,
   ...boardRoutes,
   ...lifeRoutes,
+  ...bankRoutes,
   ...surveyRoutes,
   ...bottomRoutes,
   ...logRoutes,

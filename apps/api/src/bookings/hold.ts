@@ -123,8 +123,13 @@ export async function place(
 
 type Sent = HoldPegs & { accountId: string };
 
-/** What a phone sent to hold; names and births may have been filled in since. */
-const held = ({ lakeId, day, start, tickets }: Pick<Sent, 'lakeId' | 'day' | 'start' | 'tickets'>) => ({
+/** What was sent to hold; names and births may have been filled in since. */
+export const heldContent = ({
+  lakeId,
+  day,
+  start,
+  tickets,
+}: Pick<Sent, 'lakeId' | 'day' | 'start' | 'tickets'>) => ({
   lakeId,
   day,
   start,
@@ -145,6 +150,9 @@ async function isRepeat(tx: EntityManager, sent: Sent): Promise<boolean> {
   const [found] = rows;
   if (!found) return false;
   const { by, lakeId, details } = found;
-  mustRepeat({ by: sent.accountId, content: held(sent) }, { by, content: held({ ...details, lakeId }) });
+  mustRepeat(
+    { by: sent.accountId, content: heldContent(sent) },
+    { by, content: heldContent({ ...details, lakeId }) },
+  );
   return true;
 }

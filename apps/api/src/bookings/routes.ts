@@ -2,7 +2,7 @@ import { BookingList, TicketList, TicketView, WriteTicket } from '@mereward/shar
 import { deed, read, type Route } from '../http/route';
 import { myBookings } from './booking-lists';
 import { myTickets, ticketsOfPeg, ticketView } from './queries';
-import { cancelTicket, writeTicket } from './service';
+import { writeTicket } from './service';
 
 const signIn = 'needed';
 
@@ -41,9 +41,5 @@ export const bookingRoutes: Route[] = [
       answer: BookingList.extend(TicketList.shape),
     },
     async (ctx) => ({ ...(await myTickets(ctx)), ...(await myBookings(ctx)) }),
-  ),
-  deed(
-    { method: 'delete', path: '/bookings/:bookingId', summary: 'Cancel a ticket', signIn },
-    (ctx, { id }) => cancelTicket(ctx, id('bookingId')),
   ),
 ];

@@ -10,11 +10,11 @@ import { whyNotLet } from '@mereward/shared/lakes/peg-rules';
 import { Problem } from '@mereward/shared/problems/problem';
 import { civilDay } from '@mereward/shared/time/civil-day';
 import type { EntityManager } from 'typeorm';
-import { accountOf, holdsAny, type Ctx } from '../ctx';
+import { accountOf, type Ctx } from '../ctx';
 import { allowOnly, notFound } from '../http/deny';
 import { findPeg, originOfLake } from '../lakes/found';
 import { mustRepeat } from '../repeat';
-import { freePegs, takePegs } from './peg-calendar';
+import { takePegs } from './peg-calendar';
 import { TICKET_WRITERS } from './policy';
 
 const LONGEST_MS = 31 * 86_400_000;
@@ -151,31 +151,4 @@ async function isRepeat(tx: EntityManager, written: Written): Promise<boolean> {
   if (kept.pegId !== written.pegId) throw notFound('ticket');
   mustRepeat({ by: written.writtenBy, content: written }, { by: kept.writtenBy, content: kept });
   return true;
-}
-
-/** Cancels a ticket: those who write them at any time, its holder until it starts. */
-export async function cancelTicket({ tx, actor, now }: Ctx, bookingId: string): Promise<void> {
-  const accountId = accountOf(actor);
-  const booking = await tx.findOneBy(Booking, { id: bookingId });
-  if (booking?.status !== 'confirmed') throw notFound('ticket');
-  const forOthers = holdsAny(actor, booking.fisheryId, TICKET_WRITERS);
-  if (!forOthers) {
-    if (booking.accountId !== accountId) throw notFound('ticket');
-    if (!(await isAhead(tx, bookingId, now)))
-      throw new Problem('forbidden', 'This ticket has started', { detail: 'Ask the fishery’s office.' });
-  }
-  await tx.update(
-    Booking,
-    { id: bookingId, status: 'confirmed' },
-    { status: forOthers ? 'cancelled_by_fishery' : 'cancelled_by_angler' },
-  );
-  await freePegs(tx, bookingId);
-}
-
-async function isAhead(tx: EntityManager, bookingId: string, now: Date): Promise<boolean> {
-  const rows: { ahead: boolean }[] = await tx.query(
-    `SELECT lower(during) > $2 AS ahead FROM booking WHERE id = $1`,
-    [bookingId, now],
-  );
-  return rows[0]?.ahead === true;
 }

@@ -70,7 +70,7 @@ export const BookingDetails = z.object({
   lines: z.array(PriceLineView),
   turnaroundMinutes: z.int(),
   cancellation: CancellationPolicy, // as it was when sold
-  guardian: FillInBooking.shape.guardian,
+  guardian: z.object({ name: z.string(), phone: z.string(), consent: z.boolean() }).nullable(), // no phone for bailiffs
   vehicle: z.string(),
   emergencyContact: z.string(),
   licence: LicenceDeclaration.nullable(),
@@ -181,6 +181,10 @@ export const BookForSomebody = HoldPegs.extend({
   note: words(500),
 });
 export type BookForSomebody = z.infer<typeof BookForSomebody>;
+
+/** On whose account staff cancel: as the angler asked, by the terms, or by the fishery, all back. Holders: the former. */
+export const CancelAsked = z.strictObject({ cause: z.enum(['angler', 'fishery']).optional() });
+export type CancelAsked = z.infer<typeof CancelAsked>;
 
 /** GET /api/bookings/:bookingId/cancellation: what would go back now. DELETE /api/bookings/:bookingId does it. */
 export const CancellationQuote = z.object({ refundPence: z.int(), percent: z.int(), words: z.string() });

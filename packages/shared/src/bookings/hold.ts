@@ -26,5 +26,5 @@ export function holdInChallenge(hold: Hold, now: Date, minutes = CHALLENGE_HOLD_
 
 /** Two hours after its start with nobody there and no word, a bailiff may mark it. Common practice, no published source. */
 export const NO_SHOW_AFTER_HOURS = 2;
-export const mayBeNoShow = (from: Date, now: Date): boolean =>
-  now.getTime() >= from.getTime() + NO_SHOW_AFTER_HOURS * 60 * MINUTE_MS;
+export const mayBeNoShow = (from: Date, now: Date, afterHours = NO_SHOW_AFTER_HOURS): boolean =>
+  now.getTime() >= from.getTime() + afterHours * 60 * MINUTE_MS;
