@@ -1,1 +1,1 @@
-export { WaterScreen as default } from '@/features/lakes/water-screen';
+export { WaterFrontScreen as default } from '@/features/notices/water-front-screen';

@@ -12,6 +12,7 @@ import { Section } from '@/components/section';
 import { Text } from '@/components/text';
 import { space } from '@/constants/layout';
 import { useLake } from '@/features/lakes/api';
+import { NoticesHere } from '@/features/notices/notices-here';
 import { useUnits } from '@/hooks/use-units';
 import { useWide } from '@/hooks/use-wide';
 import { area, length } from '@/lib/format';
@@ -90,6 +91,8 @@ function LakeSheet({ lake }: { lake: LakeView }) {
   const chosen = useChosen();
   const chart = useChart(lake.publishedChart?.id ?? null);
   const { pegId, spotId, setSpotId, choose } = chosen;
+  const wide = useWide();
+  const told = <NoticesHere fisheryId={lake.fisheryId} lakeId={lake.id} />;
   const main: ReactNode = lake.publishedChart ? (
     <Loaded query={chart} waiting="Reading the chart…">
       {(value) => <ChartPart chart={value} chosen={chosen} />}
@@ -99,7 +102,16 @@ function LakeSheet({ lake }: { lake: LakeView }) {
   );
   return (
     <Columns
-      main={main}
+      main={
+        wide ? (
+          main
+        ) : (
+          <>
+            {told}
+            {main}
+          </>
+        )
+      }
       list={
         lake.pegs.length ? (
           <Section bare title="Pegs">
@@ -111,6 +123,7 @@ function LakeSheet({ lake }: { lake: LakeView }) {
       }
       detail={
         <View style={{ gap: space.page }}>
+          {wide ? told : null}
           {pegId ? (
             <PegBrief pegId={pegId} spotId={spotId} onSpot={setSpotId} />
           ) : (

@@ -15,6 +15,7 @@ import { Section } from '@/components/section';
 import { StatusShape } from '@/components/status-shape';
 import { Text } from '@/components/text';
 import { MEASURE_PX, space } from '@/constants/layout';
+import { NoticesHere } from '@/features/notices/notices-here';
 import { useThreeColumns, useWide } from '@/hooks/use-wide';
 import { dayAndTime } from '@/lib/format-time';
 import { usePegPage } from './api';
@@ -169,6 +170,7 @@ function PegSheet({ page }: { page: PegPageView }) {
   return (
     <>
       {details ? <Warnings details={details} /> : null}
+      <NoticesHere fisheryId={page.fishery.id} lakeId={page.lake.id} />
       <OwnTicket page={page} />
       <View style={beside ? { flexDirection: 'row', gap: space.huge } : { gap: space.large }}>
         <View style={beside ? { flexBasis: WATER_WIDTH_PX, flexShrink: 1 } : undefined}>

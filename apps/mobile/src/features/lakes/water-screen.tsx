@@ -1,3 +1,4 @@
+import type { ReactNode } from 'react';
 import type { FisheryListItem } from '@mereward/shared/fisheries/contract';
 import { Empty } from '@/components/empty';
 import { List, Row } from '@/components/list';
@@ -9,10 +10,13 @@ import { useFisheries } from '@/features/fisheries/api';
 import { useUnits } from '@/hooks/use-units';
 import { area } from '@/lib/format';
 
-function LakesOf({ fishery, first }: { fishery: FisheryListItem; first: boolean }) {
+type Told = (fisheryId: string) => ReactNode;
+
+function LakesOf({ fishery, first, told }: { fishery: FisheryListItem; first: boolean; told: Told }) {
   const units = useUnits();
   return (
     <Section title={fishery.name} bare={first}>
+      {told(fishery.id)}
       {fishery.lakes.length ? (
         <List label={`Lakes of ${fishery.name}`}>
           {fishery.lakes.map(({ id, name, areaM2, pegs, nights, chart }) => (
@@ -36,8 +40,8 @@ function LakesOf({ fishery, first }: { fishery: FisheryListItem; first: boolean 
   );
 }
 
-/** Everybody's front door: fisheries and their lakes. */
-export function WaterScreen() {
+/** Everybody's front door: fisheries and their lakes. `told` is what stands over a fishery's lakes. */
+export function WaterScreen({ told }: { told: Told }) {
   const fisheries = useFisheries();
   return (
     <Page title="Water" under="Lakes, their charts and pegs">
@@ -55,7 +59,7 @@ export function WaterScreen() {
         }}
       >
         {({ fisheries: all }) =>
-          all.map((fishery, i) => <LakesOf key={fishery.id} fishery={fishery} first={i === 0} />)
+          all.map((fishery, i) => <LakesOf key={fishery.id} fishery={fishery} first={i === 0} told={told} />)
         }
       </Loaded>
     </Page>

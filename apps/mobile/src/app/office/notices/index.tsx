@@ -1,0 +1,1 @@
+export { NoticesScreen as default } from '@/features/notices/notices-screen';
