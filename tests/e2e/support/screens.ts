@@ -23,6 +23,7 @@ export const routes = (): string[] =>
     .sort();
 
 const KINDS = [
+  'fisheryId',
   'lakeId',
   'pegId',
   'markId',
@@ -53,6 +54,7 @@ export async function demoIds(site: Site): Promise<Ids> {
   const pegId = lake.pegs.find(({ number }) => number === 'FO7')?.id ?? '';
   const { spots } = await joan.get(`/pegs/${pegId}/page`, PegPageView);
   return {
+    fisheryId: fisheries[0]?.id ?? '',
     lakeId,
     pegId,
     spotId: spots?.[0]?.id ?? '',

@@ -82,6 +82,7 @@ export const DraftView = z.object({
   suggested: ChangeWeight,
   upcoming: z.int(), // bookings to come, which a safety change asks again
 });
+export type DraftView = z.infer<typeof DraftView>;
 export const DraftAnswer = z.object({
   draft: DraftView.nullable(),
   inForce: SheetView.nullable(),

@@ -1,0 +1,1 @@
+export { OfficeRulesScreen as default } from '@/features/rules/office-rules-screen';

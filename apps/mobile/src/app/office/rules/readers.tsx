@@ -1,0 +1,1 @@
+export { RuleReadersScreen as default } from '@/features/rules/readers-screen';

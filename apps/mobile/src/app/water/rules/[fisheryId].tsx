@@ -1,0 +1,1 @@
+export { FisheryRulesScreen as default } from '@/features/rules/fishery-rules-screen';

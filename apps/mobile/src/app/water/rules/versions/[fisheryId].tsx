@@ -1,0 +1,1 @@
+export { RuleVersionsScreen as default } from '@/features/rules/versions-screen';
