@@ -50,7 +50,7 @@ function Choosing({ token, view }: { token: string; view: ChoiceView }) {
       ) : (
         <>
           <Text weight="semibold">
-            {`Choose by ${dayAndTime(view.chooseUntil, view.zone)}. If you don’t, ${money(view.refundPence, currency)} goes back.`}
+            {`Choose by ${dayAndTime(view.chooseUntil, view.zone)}. If you don’t, ${endWords(view)}.`}
           </Text>
           <ProblemNote problem={choose.error} />
           <Days
@@ -60,7 +60,7 @@ function Choosing({ token, view }: { token: string; view: ChoiceView }) {
               setAsking({
                 words: `Your ticket moves to ${place.words}. The price stays.`,
                 act: 'Move it',
-                choose: { choice: 'move_date', day: place.day, start: null },
+                choose: { choice: 'move_date', day: place.day },
               })
             }
           />
@@ -78,19 +78,7 @@ function Choosing({ token, view }: { token: string; view: ChoiceView }) {
               }
             />
           ) : null}
-          <Section title="The money back">
-            <Text>{`${money(view.refundPence, currency)} goes back the way it was paid.`}</Text>
-            <Button
-              label={`Take ${money(view.refundPence, currency)} back`}
-              onPress={() =>
-                setAsking({
-                  words: `The ticket ends and ${money(view.refundPence, currency)} goes back.`,
-                  act: 'Take the money back',
-                  choose: { choice: 'refund' },
-                })
-              }
-            />
-          </Section>
+          <Ending view={view} onChoose={setAsking} />
           <Confirm
             open={asking !== null}
             title="Is that your choice?"
@@ -105,6 +93,31 @@ function Choosing({ token, view }: { token: string; view: ChoiceView }) {
         </>
       )}
     </>
+  );
+}
+
+const endWords = ({ refundPence, currency }: ChoiceView): string =>
+  refundPence === 0 ? 'the ticket ends' : `${money(refundPence, currency)} goes back`;
+
+/** The ticket ends: with its money back, where any was paid. */
+function Ending({ view, onChoose }: { view: ChoiceView; onChoose: (asking: Asking) => void }) {
+  const { refundPence, currency } = view;
+  const back = money(refundPence, currency);
+  const paid = refundPence > 0;
+  return (
+    <Section title={paid ? 'The money back' : 'End the ticket'}>
+      <Text>{paid ? `${back} goes back the way it was paid.` : 'Nothing was paid for it.'}</Text>
+      <Button
+        label={paid ? `Take ${back} back` : 'End the ticket'}
+        onPress={() =>
+          onChoose({
+            words: `The ticket ends${paid ? ` and ${back} goes back` : ''}.`,
+            act: paid ? 'Take the money back' : 'End the ticket',
+            choose: { choice: 'refund' },
+          })
+        }
+      />
+    </Section>
   );
 }
 

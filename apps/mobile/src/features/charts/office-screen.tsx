@@ -68,6 +68,23 @@ function FisheryOffice({ fishery }: { fishery: FisheryListItem }) {
             />
           ) : null}
           <Row title="Charts" note="Drafts, approval, published versions" href="/office/charts" />
+          {sells ? (
+            <Row
+              title="Rules"
+              note="What holds on the banks, in versions; who has read it"
+              href={`/office/rules?fisheryId=${fishery.id}`}
+            />
+          ) : null}
+          <Row
+            title="Closures"
+            note="Close water, and find every booking a place"
+            href={`/office/closures?fisheryId=${fishery.id}`}
+          />
+          <Row
+            title="Notices"
+            note="What visitors are told"
+            href={`/office/notices?fisheryId=${fishery.id}`}
+          />
           {kept.data?.may.readFeels ? (
             <Row
               title="How bottoms feel"

@@ -1,0 +1,1 @@
+export { ClosuresScreen as default } from '@/features/closures/closures-screen';

@@ -1,0 +1,1 @@
+export { CloseScreen as default } from '@/features/closures/close-screen';
