@@ -2,6 +2,7 @@ import { Chart } from '@mereward/db/entities/charts/chart';
 import { chartChanges, type ChartChange } from '@mereward/shared/charts/chart-changes';
 import type { ChangesAsked, ChartChanges } from '@mereward/shared/charts/chart-answers';
 import { In, type EntityManager } from 'typeorm';
+import { figure } from '@mereward/shared/units/length-words';
 import type { Ctx } from '../ctx';
 import { notFound } from '../http/deny';
 import { chartContent, layersOf, type ChartContent } from './chart-layers';
@@ -91,7 +92,7 @@ function comparedLately(
 }
 
 function wordsOf(comparedM2: number, count: number, then: LightChart): string {
-  const both = `${comparedM2} m² were surveyed both now and for chart ${then.version ?? ''}`;
+  const both = `${figure(comparedM2)} m² were surveyed both now and for chart ${then.version ?? ''}`;
   if (comparedM2 === 0) return 'No water was surveyed both times, so nothing can be compared.';
   if (count === 0) return `${both}. Nothing there differs by more than the soundings of both could be wrong.`;
   const places = count === 1 ? 'One area differs' : `${count} areas differ`;

@@ -63,6 +63,7 @@ function lakeDetails(plan: LakePlan): LakeDetails {
     name: plan.name,
     kind: 'gravel_pit',
     outline: plan.water.polygon,
+    outlineFrom: { way: 'plan', withinM: 1.5 },
     nights: false,
     maxPeople: plan.pegCount * 2,
     maxRods: plan.pegCount * 3,

@@ -1,9 +1,9 @@
 import type { ChartReview } from '@mereward/shared/charts/contract';
 import type { SoundingMissView } from '@mereward/shared/charts/sounding-miss';
 import { Disclosure } from '@/components/disclosure';
+import { List, Row } from '@/components/list';
 import { Note } from '@/components/note';
 import { Section } from '@/components/section';
-import { Table } from '@/components/table';
 import { useUnits } from '@/hooks/use-units';
 import { figure, length } from '@/lib/format';
 import { LogMissesTable } from '@/features/charts/log-misses-table';
@@ -27,7 +27,7 @@ export function SoundingMisses({ review: { chart, misses, logMisses, quality, ma
     >
       {none ? <Note kind="fine">No sounding disagrees with those round about.</Note> : null}
       {flagged.length > 0 ? (
-        <MissTable caption="Casts out of line with their neighbours" chartId={chart.id} misses={flagged} />
+        <MissList caption="Casts out of line with their neighbours" chartId={chart.id} misses={flagged} />
       ) : null}
       {flaggedOfLogs.length > 0 ? (
         <>
@@ -43,7 +43,7 @@ export function SoundingMisses({ review: { chart, misses, logMisses, quality, ma
       ) : null}
       <Disclosure title="The ten soundings that fit worst">
         {misses.length > 0 ? (
-          <MissTable caption="Casts that fit worst" chartId={chart.id} misses={misses.slice(0, 10)} />
+          <MissList caption="Casts that fit worst" chartId={chart.id} misses={misses.slice(0, 10)} />
         ) : null}
         {logMisses.length > 0 ? (
           <LogMissesTable
@@ -59,48 +59,24 @@ export function SoundingMisses({ review: { chart, misses, logMisses, quality, ma
 
 type MissProps = { caption: string; chartId: string; misses: readonly SoundingMissView[] };
 
-function MissTable({ caption, chartId, misses }: MissProps) {
+/** Rows of a list: seven columns would not fit beside the drawing. */
+function MissList({ caption, chartId, misses }: MissProps) {
   const units = useUnits();
   const m = (valueM: number) => length(valueM, units, 2);
   return (
-    <Table
-      caption={caption}
-      rows={misses}
-      rowKey={({ id }) => id}
-      href={({ id }) => `/office/charts/${chartId}/casts/${id}`}
-      columns={[
-        { key: 'cast', head: 'Cast', value: castTitle },
-        { key: 'place', head: 'Place', value: (miss) => castPlaceWords(miss, units) },
-        { key: 'visit', head: 'Visit', value: ({ visitTitle }) => visitTitle },
-        {
-          key: 'depth',
-          head: 'Read',
-          value: ({ depthM }) => depthM,
-          show: ({ depthM }) => m(depthM),
-          figures: true,
-        },
-        {
-          key: 'foretold',
-          head: 'By its neighbours',
-          value: ({ foretoldM }) => foretoldM,
-          show: ({ foretoldM }) => m(foretoldM),
-          figures: true,
-        },
-        {
-          key: 'out',
-          head: 'Out by',
-          value: ({ errorM }) => Math.abs(errorM),
-          show: (miss) => outByWords(miss, units),
-          figures: true,
-        },
-        {
-          key: 'share',
-          head: 'In its own σ',
-          value: ({ standardised }) => standardised,
-          show: ({ standardised }) => figure(standardised, 1),
-          figures: true,
-        },
-      ]}
-    />
+    <List label={caption}>
+      {misses.map((miss) => (
+        <Row
+          key={miss.id}
+          title={`${castTitle(miss)}: ${outByWords(miss, units)} than foretold`}
+          note={[
+            `${m(miss.depthM)} read, ${m(miss.foretoldM)} by its neighbours (${figure(miss.standardised, 1)} of its own σ)`,
+            castPlaceWords(miss, units),
+            miss.visitTitle,
+          ].join(' · ')}
+          href={`/office/charts/${chartId}/casts/${miss.id}`}
+        />
+      ))}
+    </List>
   );
 }
