@@ -26,7 +26,7 @@ export const downhill: Record<string, string[]> = {
 
 /** Where words live, and which folders beside them are foundations. `free` folders put everything together. */
 const homes = [
-  { home: 'apps/api/src/', foundations: ['http', 'jobs'], free: ['demo'] },
+  { home: 'apps/api/src/', foundations: ['http', 'jobs', 'pdf'], free: ['demo'] },
   {
     home: 'packages/shared/src/',
     foundations: ['problems', 'money', 'time', 'units', 'geometry', 'writing'],

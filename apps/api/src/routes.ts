@@ -19,6 +19,7 @@ import { lakeRoutes } from './lakes/routes';
 import { waterRoutes } from './lakes/water-routes';
 import { closureRoutes } from './closures/routes';
 import { noticeRoutes } from './notices/routes';
+import { rulePaperRoutes } from './rules/paper-routes';
 import { ruleRoutes } from './rules/routes';
 import { bottomRoutes } from './surveys/bottom-routes';
 import { logRoutes } from './surveys/log-routes';
@@ -35,6 +36,7 @@ export const routes: readonly Route[] = [
   ...pictureRoutes,
   ...fileRoutes,
   ...ruleRoutes,
+  ...rulePaperRoutes,
   ...closureRoutes,
   ...noticeRoutes,
   ...closureDeedRoutes,

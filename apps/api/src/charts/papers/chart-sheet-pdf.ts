@@ -21,7 +21,7 @@ import {
   versionWords,
   type SheetPeople,
 } from './chart-sheet-words';
-import { writePdf, type Doc } from './pdf-document';
+import { writePdf, type Doc } from '../../pdf/pdf-document';
 import { paintSteps } from './pdf-steps';
 
 export type PaperSize = 'a3' | 'a4';

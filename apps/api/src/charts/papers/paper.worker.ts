@@ -1,5 +1,5 @@
 import { drawChartSheet, type ChartSheet } from './chart-sheet-pdf';
-import { drawPages, type PaperDocument } from './paper-pages';
+import { drawPages, type PaperDocument } from '../../pdf/paper-pages';
 
 /** What the thread is given to draw; the only thing that gives it anything is draw-paper. */
 export type PaperGiven = { kind: 'sheet'; sheet: ChartSheet } | { kind: 'pages'; paper: PaperDocument };

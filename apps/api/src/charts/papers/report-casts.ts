@@ -4,7 +4,7 @@ import { civilDay, dayWords } from '@mereward/shared/time/civil-day';
 import type { SurveyCast } from '@mereward/db/entities/surveys/survey-cast';
 import type { BuiltSounding } from '../built';
 import type { ChartVisit } from '../chart-casts';
-import type { PaperBlock } from './paper-pages';
+import type { PaperBlock } from '../../pdf/paper-pages';
 import type { SurveyReport } from './report-document';
 
 const HEADING = [

@@ -10,7 +10,7 @@ import { figure, percent } from '@mereward/shared/units/length-words';
 import type { Built } from '../built';
 import { surveyedBy } from '../built-logs';
 import type { CastsTable, ChartCasts } from '../chart-casts';
-import type { PaperBlock, PaperDocument } from './paper-pages';
+import type { PaperBlock, PaperDocument } from '../../pdf/paper-pages';
 import {
   agreementFacts,
   changeFacts,

@@ -4,7 +4,7 @@ import { dayAndClock } from '@mereward/shared/time/day-names';
 import { figure } from '@mereward/shared/units/length-words';
 import type { BuiltLog } from '../built';
 import { mergedSoundings, type MergedSounding } from '../chart-soundings';
-import type { PaperBlock } from './paper-pages';
+import type { PaperBlock } from '../../pdf/paper-pages';
 import type { SurveyReport } from './report-document';
 
 /** What is kept beside a chart's log: how it was read, and by whom. */

@@ -5,7 +5,7 @@ import type { Ctx } from '../../ctx';
 import { photoFile } from '../../files/file-key';
 import { readWhole, type FileStore } from '../../files/store';
 import type { ChartCasts } from '../chart-casts';
-import type { PaperBlock, PaperPicture } from './paper-pages';
+import type { PaperBlock, PaperPicture } from '../../pdf/paper-pages';
 
 /** So many photos are printed at most; a survey of a whole lake would else be an album. */
 const MOST_PHOTOS = 24;

@@ -4,7 +4,7 @@ import { repeatAgreement } from '@mereward/shared/surveys/repeat-agreement';
 import { REPEAT_WITHIN_M } from '@mereward/shared/surveys/peg-arc';
 import { SIGMA } from '@mereward/shared/surveys/error-budget';
 import { figure, percent } from '@mereward/shared/units/length-words';
-import type { PaperBlock, PaperTable } from './paper-pages';
+import type { PaperBlock, PaperTable } from '../../pdf/paper-pages';
 import type { SurveyReport } from './report-document';
 
 type Facts = [string, string][];

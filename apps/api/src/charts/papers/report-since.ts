@@ -4,7 +4,7 @@ import { eventWords } from '@mereward/shared/surveys/bottom-ending';
 import { dayWords } from '@mereward/shared/time/civil-day';
 import type { BottomEventKind, EventEnds } from '@mereward/shared/surveys/bottom-event-contract';
 import type { BuiltReport } from '../built';
-import type { PaperBlock } from './paper-pages';
+import type { PaperBlock } from '../../pdf/paper-pages';
 import type { SurveyReport } from './report-document';
 
 /** An event of the lake as a report tells it; `counted` says what it took out of this very chart. */

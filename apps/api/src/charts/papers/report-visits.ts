@@ -3,7 +3,7 @@ import type { Kit } from '@mereward/shared/surveys/contract';
 import { stickWords } from '@mereward/shared/charts/spot-words';
 import { dayWords } from '@mereward/shared/time/civil-day';
 import { dayAndClock } from '@mereward/shared/time/day-names';
-import type { PaperBlock } from './paper-pages';
+import type { PaperBlock } from '../../pdf/paper-pages';
 import type { SurveyReport } from './report-document';
 
 /** Who surveyed when, in what weather, with what kit and which constants. */
