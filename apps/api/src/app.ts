@@ -57,7 +57,9 @@ function apiRouter(routes: readonly Route[]): Router {
     res.set('Cache-Control', 'private, no-cache'); // what one reader may see is nobody else's; a route may say otherwise
     next();
   });
-  api.use(limitAll(), compression(), cookieParser(), express.json({ limit: '6mb' }));
+  api.use(limitAll(), compression(), cookieParser());
+  api.use('/payments/webhook', express.raw({ type: () => true, limit: '1mb' })); // signed over its very bytes
+  api.use(express.json({ limit: '6mb' }));
   api.get('/openapi.json', (_req, res) => void res.type('application/json').send(document));
   api.use(byFirstWord(routes));
   api.use(nothingHere, answerProblem);

@@ -1,10 +1,12 @@
 import { expireHoldJob } from './bookings/jobs';
 import { settleChoicesJob } from './bookings/settle-choices';
+import { closePageJob } from './bookings/payment-jobs';
 import { buildChartJob } from './charts/jobs';
 import { removeFiles, resizePhoto } from './files/jobs';
 import type { Handlers } from './jobs/worker';
 import { resizeLakePicture } from './lakes/picture-jobs';
 import { sendMail } from './mail/jobs';
+import { askRefund } from './payments/refund-jobs';
 import { readLogJob } from './surveys/log-jobs';
 
 /** What does each kind of queued job, word by word. */
@@ -17,4 +19,6 @@ export const handlers: Handlers = {
   'log.read': readLogJob,
   'files.remove': removeFiles,
   'picture.resize': resizeLakePicture,
+  'refund.ask': askRefund,
+  'payment.close': closePageJob,
 };

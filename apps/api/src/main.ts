@@ -3,6 +3,7 @@ import { readFileSync } from 'node:fs';
 import { createServer, type Server } from 'node:http';
 import { makeApp } from './app';
 import { closeBoardStreams } from './bookings/board-streams';
+import { watchPayments } from './bookings/payment-jobs';
 import { CHART_BUILDS } from './charts/jobs';
 import { fileStoreOf } from './files/store';
 import { readConfig, SettingsFault, type Config } from './config';
@@ -40,6 +41,7 @@ async function main(): Promise<void> {
       logger.error({ err, job: table.job }, 'lost work could not be taken up'),
     ),
   );
+  const stopPayments = watchPayments(server, logger);
   fileStoreOf(config)
     .check()
     .catch((err: unknown) => logger.error({ err }, 'the store of files can’t be used'));
@@ -50,7 +52,7 @@ async function main(): Promise<void> {
   const close = async () => {
     await closeBoardStreams(server);
     await finish(http);
-    for (const stopWatching of watches) stopWatching();
+    for (const stopWatching of [...watches, stopPayments]) stopWatching();
     await worker.stop();
     await boss.stop({ graceful: true, wait: true, timeout: FINISH_WITHIN_MS });
     await capture?.close();

@@ -3,6 +3,7 @@ import { bankRoutes } from './bookings/bank-routes';
 import { boardRoutes } from './bookings/board-routes';
 import { lifeRoutes } from './bookings/life-routes';
 import { closureDeedRoutes } from './bookings/closure-routes';
+import { moneyRoutes } from './bookings/money-routes';
 import { bookingRoutes } from './bookings/routes';
 import { termsRoutes } from './bookings/terms-routes';
 import { disagreementRoutes } from './charts/disagreement-routes';
@@ -43,6 +44,7 @@ export const routes: readonly Route[] = [
   ...ticketRoutes,
   ...termsRoutes,
   ...bookingRoutes,
+  ...moneyRoutes,
   ...boardRoutes,
   ...lifeRoutes,
   ...bankRoutes,

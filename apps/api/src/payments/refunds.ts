@@ -7,7 +7,7 @@ import type { EntityManager } from 'typeorm';
 import { z } from 'zod';
 import { accountOrNull, type Ctx } from '../ctx';
 import { currencyOf } from './currency';
-import { askedByHand } from './settle-refund';
+import { askedByHand, firstOf } from './settle-refund';
 
 /** A refund asked of the provider, outside any transaction. */
 export const AskRefundJob = z.strictObject({ refundId: z.uuid() });
@@ -30,7 +30,12 @@ export async function queueRefund(ctx: Ctx, wish: RefundWish): Promise<Refund[]>
   const { tx } = ctx;
   if (wish.amountPence === 0) return [];
   const payments = await lockPayments(tx, wish);
-  const before = await tx.findBy(Refund, { bookingId: wish.bookingId, cause: wish.cause });
+  const { bookingId, cause, paymentId } = wish;
+  const before = await tx.findBy(Refund, {
+    bookingId,
+    cause,
+    ...(paymentId === undefined ? {} : { paymentId }),
+  });
   if (before.length > 0) return before;
   let left = await leftOf(tx, payments);
   if (!wish.proposed && sumOf(left) < wish.amountPence) {
@@ -130,4 +135,27 @@ async function insertRefund(ctx: Ctx, { payment, amountPence, wish }: ToInsert):
 /** Sets a queued refund on its way: a card's to the provider; what a person does waits in the office's queue. */
 export async function setOff(ctx: Ctx, refund: Refund, payment: Payment): Promise<void> {
   if (!askedByHand(refund, payment)) await ctx.jobs.send(ctx.tx, 'refund.ask', { refundId: refund.id });
+}
+
+type Again = { refund: Refund; payment: Payment; by: 'card' | 'hand' };
+
+/** Another refund in the place of a failed one, which is then declined; by card, or by hand. */
+export async function putInPlace(ctx: Ctx, { refund, payment, by }: Again): Promise<Refund> {
+  const { tx, now } = ctx;
+  const first = firstOf(refund);
+  const rows: { tries: number }[] = await tx.query(
+    `SELECT count(*)::int AS tries FROM refund WHERE payment_id = $1 AND cause LIKE '%:' || $2 || ':%'`,
+    [payment.id, first],
+  );
+  await tx.update(Refund, { id: refund.id }, { status: 'declined', doneAt: now });
+  return insertRefund(ctx, {
+    payment,
+    amountPence: refund.amountPence,
+    wish: {
+      bookingId: refund.bookingId,
+      amountPence: refund.amountPence,
+      cause: `${by === 'card' ? 'again' : 'hand'}:${first}:${(rows[0]?.tries ?? 0) + 1}`,
+      reason: refund.reason,
+    },
+  });
 }
