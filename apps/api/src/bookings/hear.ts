@@ -1,6 +1,5 @@
 import { Dispute } from '@mereward/db/entities/payments/dispute';
 import { Payment } from '@mereward/db/entities/payments/payment';
-import { ProviderEvent } from '@mereward/db/entities/payments/provider-event';
 import { Refund } from '@mereward/db/entities/payments/refund';
 import { paymentFrom, type PaymentEvent } from '@mereward/shared/payments/payment-state';
 import { randomUUID } from 'node:crypto';
@@ -22,15 +21,13 @@ import { lockStay, tell } from './stay';
 export async function hear(ctx: Ctx, heard: Heard): Promise<void> {
   const payment = await paymentOf(ctx.tx, heard);
   const { event, fault } = heard;
-  const fresh = await insertOnce(ctx.tx, ProviderEvent, {
-    id: heard.id,
-    paymentId: payment?.id ?? null,
-    type: heard.type,
-    saidAt: heard.saidAt,
-    receivedAt: ctx.now,
-    told: { event, fault },
-  });
-  if (!fresh || !payment) return;
+  if (payment) await lockStay(ctx.tx, payment.bookingId); // booking first, then its payments: so everybody locks
+  const fresh: unknown[] = await ctx.tx.query(
+    `INSERT INTO provider_event (id, payment_id, type, said_at, received_at, told)
+     VALUES ($1, $2, $3, $4, $5, $6) ON CONFLICT DO NOTHING RETURNING id`,
+    [heard.id, payment?.id ?? null, heard.type, heard.saidAt, ctx.now, { event, fault }],
+  );
+  if (fresh.length === 0 || !payment) return;
   await keepReferences(ctx.tx, payment, heard);
   if (heard.event) await settlePayment(ctx, payment.id);
   if (heard.refund) await hearRefund(ctx, payment, heard.refund);
@@ -74,7 +71,7 @@ export async function keptEvents(tx: EntityManager, paymentId: string): Promise<
   return rows.map(({ told }) => told);
 }
 
-/** Brings a payment to where all that was heard puts it, its booking with it. Booking first: so everybody locks. */
+/** Brings a payment to where all that was heard puts it, its booking with it. */
 async function settlePayment(ctx: Ctx, paymentId: string): Promise<void> {
   const { tx, now } = ctx;
   const { bookingId } = await tx.findOneByOrFail(Payment, { id: paymentId });

@@ -12,13 +12,13 @@ import type { Request } from 'express';
 import { deed, raw, type Route } from '../http/route';
 import { idIn } from '../http/route-id';
 import { serverOf } from '../http/server';
-import { inOpenTransaction, inTransaction, reading } from '../http/transaction';
+import { inTransaction, reading } from '../http/transaction';
 import { heardFrom } from '../payments/heard';
 import { providerOf, readMessage, type Provider } from '../payments/provider';
 import { bookingView } from './booking-view';
 import { askAgain, askForRefund, decideRefund, giveByHand, seeRefund } from './give-back';
 import { hear } from './hear';
-import { lookAt } from './look';
+import { byItself, lookAt } from './look';
 import { openPayment, pageOf } from './payment-page';
 import { takeMoney } from './take-money';
 
@@ -80,7 +80,7 @@ export const moneyRoutes: Route[] = [
           detail: 'Nothing was done. See that the signing secret of the endpoint is the one set here.',
         });
       const heard = heardFrom(message);
-      if (heard) await inOpenTransaction(req, (ctx) => hear(ctx, heard));
+      if (heard) await byItself(serverOf(req), (ctx) => hear(ctx, heard));
       res.status(204).end();
     },
   ),

@@ -90,7 +90,6 @@ async function whatIsPaid(
   const metadata = { payment_id: payment.id };
   return {
     mode: 'payment',
-    payment_method_types: ['card'],
     client_reference_id: payment.bookingId,
     success_url: back,
     cancel_url: back,
