@@ -17,7 +17,13 @@ export default defineConfig({
         },
         resolve: { alias: { '@': fileURLToPath(new URL('./apps/mobile/src', import.meta.url)) } },
       },
-      { test: { name: 'architecture', include: ['tests/architecture/**/*.test.ts'] } },
+      {
+        test: {
+          name: 'architecture',
+          include: ['tests/architecture/**/*.test.ts'],
+          testTimeout: PATIENCE_MS,
+        },
+      },
       {
         test: {
           name: 'reference',
