@@ -7,6 +7,7 @@ import { Confirm } from '@/components/confirm';
 import { Heading } from '@/components/heading';
 import { Kept } from '@/components/kept';
 import { LinkButton } from '@/components/link-button';
+import { Loaded } from '@/components/loaded';
 import { Note } from '@/components/note';
 import { ProblemNote } from '@/components/problem-note';
 import { StatusShape } from '@/components/status-shape';
@@ -16,6 +17,9 @@ import { BlockForm } from '@/features/bookings/block-form';
 import { useRemoveBlock } from '@/features/bookings/board-api';
 import { spansIn } from '@/features/bookings/board-cells';
 import type { BoardChoice } from '@/features/bookings/board-table-props';
+import { useOfficeBooking } from '@/features/bookings/office-api';
+import { paidWords } from '@/features/bookings/paid-words';
+import { StaffDeeds } from '@/features/bookings/staff-deeds';
 import { SPAN_LOOKS, spanName, spanTimes, type BoardLine } from '@/features/bookings/board-words';
 import { themed } from '@/hooks/themed';
 import { dayName } from '@/lib/format-time';
@@ -100,15 +104,36 @@ function Span({ board, span }: { board: BoardView; span: BoardSpan }) {
           <Text tone="inkSoft">
             {`${bookingCodeWords(booking.code)} · ${String(booking.people)} ${booking.people === 1 ? 'person' : 'people'}, ${String(booking.rods)} ${booking.rods === 1 ? 'rod' : 'rods'}`}
           </Text>
-          <View style={{ alignItems: 'flex-start' }}>
-            <LinkButton label="The booking" href={`/office/bookings/${booking.id}`} />
-          </View>
+          <WholeBooking bookingId={booking.id} />
         </>
       ) : null}
       {blockId && board.may.block ? (
         <GiveBack board={board} blockId={blockId} title={spanName(span)} />
       ) : null}
     </View>
+  );
+}
+
+/** The booking with all that may be done with it, opened in place; its own page is a link away. */
+function WholeBooking({ bookingId }: { bookingId: string }) {
+  const booking = useOfficeBooking(bookingId);
+  return (
+    <Loaded query={booking} waiting="Reading the booking…">
+      {(value) => (
+        <>
+          <Text>{paidWords(value)}</Text>
+          {value.notYet.map((why) => (
+            <Text key={why} tone="amber">
+              {why}
+            </Text>
+          ))}
+          <StaffDeeds booking={value} />
+          <View style={{ alignItems: 'flex-start' }}>
+            <LinkButton label="All of it" href={`/office/bookings/${bookingId}`} kind="quiet" />
+          </View>
+        </>
+      )}
+    </Loaded>
   );
 }
 

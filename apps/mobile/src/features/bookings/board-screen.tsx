@@ -20,6 +20,7 @@ import { BoardList } from '@/features/bookings/board-list';
 import { BoardTable } from '@/features/bookings/board-table';
 import type { BoardChoice } from '@/features/bookings/board-table-props';
 import { boardLines, SPAN_LOOKS } from '@/features/bookings/board-words';
+import { useBoardEvents } from '@/features/bookings/use-board-events';
 import { useBoardPlace } from '@/features/bookings/use-board-place';
 import { useFishery } from '@/features/fisheries/office-api';
 import { useMyLakes } from '@/features/fisheries/use-my-lakes';
@@ -89,6 +90,7 @@ function Board({ lakes }: { lakes: Lakes }) {
   const today = civilTime(nowMs, zone).slice(0, 10);
   const { place, moveTo } = useBoardPlace({ lakeIds: lakes.map(({ id }) => id), today });
   const zoom: Zoom = wide ? place.zoom : 'day';
+  useBoardEvents(lakes.find(({ id }) => id === place.lakeId)?.fisheryId ?? first?.fisheryId ?? '');
   const board = useBoard(place.lakeId, place.from, daysOf(zoom));
   const [choice, setChoice] = useState<BoardChoice | null>(null);
   const { data, error, isFetching, dataUpdatedAt, refetch } = board;

@@ -185,11 +185,14 @@ function DayTable({ fisheryId, day }: { fisheryId: string; day: string }) {
   );
 }
 
-const paidShort = (booking: Parameters<typeof paidWords>[0] | Omit<Parameters<typeof paidWords>[0], 'refundedPence'>): string =>
-  paidWords({ refundedPence: 0, ...booking });
+const paidShort = (
+  booking: Parameters<typeof paidWords>[0] | Omit<Parameters<typeof paidWords>[0], 'refundedPence'>,
+): string => paidWords({ refundedPence: 0, ...booking });
 
 /** The clock time where it is that day's, else with its day in front. */
 function timeOn(at: string, zone: string, day: string): string {
   const civil = civilTime(Date.parse(at), zone).slice(0, 10);
-  return civil === day ? clockTime(at, zone) : `${dayName(civil).split(' ').slice(0, 3).join(' ')}, ${clockTime(at, zone)}`;
+  return civil === day
+    ? clockTime(at, zone)
+    : `${dayName(civil).split(' ').slice(0, 3).join(' ')}, ${clockTime(at, zone)}`;
 }

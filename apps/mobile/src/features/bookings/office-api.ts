@@ -96,7 +96,13 @@ export const useCancelFor = (bookingId: string) =>
     },
   });
 
-type FreeWish = { fisheryId: string; lakeId: string; day: string; ticketTypeId: string; start: string | null };
+type FreeWish = {
+  fisheryId: string;
+  lakeId: string;
+  day: string;
+  ticketTypeId: string;
+  start: string | null;
+};
 
 /** How a lake's pegs stand for a ticket's hours. */
 export const useFreeFor = ({ fisheryId, lakeId, day, ticketTypeId, start }: FreeWish) =>

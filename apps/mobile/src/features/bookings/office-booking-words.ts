@@ -32,7 +32,13 @@ export const STATE_FILTERS = [
 ] as const;
 export type StateFilter = (typeof STATE_FILTERS)[number]['key'];
 
-const LIVE: ReadonlySet<BookingState> = new Set(['hold', 'pending_payment', 'confirmed', 'checked_in', 'choosing']);
+const LIVE: ReadonlySet<BookingState> = new Set([
+  'hold',
+  'pending_payment',
+  'confirmed',
+  'checked_in',
+  'choosing',
+]);
 const OFF: ReadonlySet<BookingState> = new Set(['expired', 'cancelled_by_angler', 'cancelled_by_fishery']);
 
 type Filtered = Pick<BookingListItem, 'status' | 'grossPence' | 'paidPence' | 'notYet'>;

@@ -15,27 +15,28 @@ import { TakeMoney } from '@/features/bookings/take-money';
 
 type Asked = 'money' | 'refund' | 'cancel';
 
-const SURE: Readonly<Record<StaffDeed, { title: string; words: string; act: string; done: string } | null>> = {
-  'check-in': null,
-  finish: {
-    title: 'Have they gone home?',
-    words: 'The rest of the peg’s time is free for others from now on. Nothing goes back for it.',
-    act: 'They have gone home',
-    done: 'Over: the peg is free.',
-  },
-  'no-show': {
-    title: 'Did nobody come?',
-    words: 'It is written down that nobody came. The peg stays theirs until you let it go to others.',
-    act: 'Nobody came',
-    done: 'Written down: nobody came.',
-  },
-  'let-go': {
-    title: 'Let the peg go to others?',
-    words: 'Whoever comes late has no peg then. Nothing goes back unless you give it.',
-    act: 'Let it go',
-    done: 'The peg is free for others.',
-  },
-};
+const SURE: Readonly<Record<StaffDeed, { title: string; words: string; act: string; done: string } | null>> =
+  {
+    'check-in': null,
+    finish: {
+      title: 'Have they gone home?',
+      words: 'The rest of the peg’s time is free for others from now on. Nothing goes back for it.',
+      act: 'They have gone home',
+      done: 'Over: the peg is free.',
+    },
+    'no-show': {
+      title: 'Did nobody come?',
+      words: 'It is written down that nobody came. The peg stays theirs until you let it go to others.',
+      act: 'Nobody came',
+      done: 'Written down: nobody came.',
+    },
+    'let-go': {
+      title: 'Let the peg go to others?',
+      words: 'Whoever comes late has no peg then. Nothing goes back unless you give it.',
+      act: 'Let it go',
+      done: 'The peg is free for others.',
+    },
+  };
 
 type Props = {
   booking: BookingView;
@@ -47,7 +48,9 @@ type Props = {
 /** What staff may do with a booking, each where it may be done. */
 export function StaffDeeds({ booking, first, bank }: Props) {
   const { may } = booking;
-  const [open, setOpen] = useState<Asked | null>(first === 'money' && !may.takeMoney ? null : (first ?? null));
+  const [open, setOpen] = useState<Asked | null>(
+    first === 'money' && !may.takeMoney ? null : (first ?? null),
+  );
   const [sure, setSure] = useState<StaffDeed | null>(null);
   const [kept, setKept] = useState<string | null>(null);
   const deed = useStaffDeed(booking.id);
@@ -75,7 +78,9 @@ export function StaffDeeds({ booking, first, bank }: Props) {
           />
         ) : null}
         {may.takeMoney ? <Button label="Take money" bank={bank} onPress={() => turn('money')} /> : null}
-        {may.move ? <LinkButton label="Move" bank={bank} href={`/tickets/bookings/${booking.id}/move`} /> : null}
+        {may.move ? (
+          <LinkButton label="Move" bank={bank} href={`/tickets/bookings/${booking.id}/move`} />
+        ) : null}
         {may.finish ? <Button label="Gone home" bank={bank} onPress={() => setSure('finish')} /> : null}
         {may.noShow ? <Button label="Nobody came" bank={bank} onPress={() => setSure('no-show')} /> : null}
         {may.letGo ? <Button label="Let the peg go" bank={bank} onPress={() => setSure('let-go')} /> : null}
@@ -103,11 +108,7 @@ export function StaffDeeds({ booking, first, bank }: Props) {
       {open === 'cancel' && may.cancel ? (
         <>
           <Heading level={3}>Cancel the booking</Heading>
-          <CancelFor
-            booking={booking}
-            onDone={() => done('Cancelled.')}
-            onLeave={() => setOpen(null)}
-          />
+          <CancelFor booking={booking} onDone={() => done('Cancelled.')} onLeave={() => setOpen(null)} />
         </>
       ) : null}
       {sure && asked ? (

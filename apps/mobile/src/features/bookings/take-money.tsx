@@ -29,7 +29,14 @@ export function TakeMoney({ booking, onDone }: { booking: BookingView; onDone: (
   });
   return (
     <DraftFormFrame form={form} label="Take money" act="It is paid" busyLabel="Writing the receipt…">
-      <FormChoice control={form.control} name="method" label="Paid by" choices={PAID_BY} columns={2} bank={false} />
+      <FormChoice
+        control={form.control}
+        name="method"
+        label="Paid by"
+        choices={PAID_BY}
+        columns={2}
+        bank={false}
+      />
       <FormField
         control={form.control}
         name="amount"

@@ -1,4 +1,5 @@
 import { useEffect } from 'react';
+import { boardKeys } from '@/features/bookings/board-api';
 import { bookingKeys } from '@/features/bookings/booking-api';
 import { apiUrl } from '@/lib/api';
 import { queryClient } from '@/lib/queries';
@@ -12,10 +13,10 @@ export function useBoardEvents(fisheryId: string): void {
     let timer: ReturnType<typeof setTimeout> | undefined;
     const changed = (): void => {
       clearTimeout(timer);
-      timer = setTimeout(
-        () => void queryClient.invalidateQueries({ queryKey: bookingKeys.free(fisheryId) }),
-        SETTLE_MS,
-      );
+      timer = setTimeout(() => {
+        void queryClient.invalidateQueries({ queryKey: bookingKeys.free(fisheryId) });
+        void queryClient.invalidateQueries({ queryKey: boardKeys.all });
+      }, SETTLE_MS);
     };
     events.addEventListener('board', changed);
     return () => {

@@ -60,6 +60,16 @@ function FisheryOffice({ fishery }: { fishery: FisheryListItem }) {
       <Section title={fishery.name}>
         <List label={`Kept for ${fishery.name}`}>
           <Row title="Lakes" note={lakesWords(fishery)} href="/office/lakes" />
+          <Row
+            title="The board"
+            note="Every peg against time: who has which, what is kept back, what is closed"
+            href="/office/board"
+          />
+          <Row
+            title="Bookings"
+            note="A day’s tickets, by code or name; book for somebody"
+            href={`/office/bookings?fisheryId=${fishery.id}`}
+          />
           {sells ? (
             <Row
               title="Tickets and prices"

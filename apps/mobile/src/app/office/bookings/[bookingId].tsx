@@ -1,0 +1,1 @@
+export { OfficeBookingScreen as default } from '@/features/bookings/office-booking-screen';

@@ -1,0 +1,1 @@
+export { BookingsOfDayScreen as default } from '@/features/bookings/bookings-of-day-screen';

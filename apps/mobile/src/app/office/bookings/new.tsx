@@ -1,0 +1,1 @@
+export { BookForSomebodyScreen as default } from '@/features/bookings/book-for-somebody-screen';
