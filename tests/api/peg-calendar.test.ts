@@ -4,6 +4,7 @@ import { Booking } from '@mereward/db/entities/bookings/booking';
 import { PegTime } from '@mereward/db/entities/bookings/peg-time';
 import { Closure } from '@mereward/db/entities/closures/closure';
 import { PaymentsAndLedger1780000021000 } from '@mereward/db/migrations/1780000021000-PaymentsAndLedger';
+import { FreedPegs1780000031000 } from '@mereward/db/migrations/1780000031000-FreedPegs';
 import { RulesNoticesAndWaiting1780000022000 } from '@mereward/db/migrations/1780000022000-RulesNoticesAndWaiting';
 import { TicketsAndPegTime1780000020000 } from '@mereward/db/migrations/1780000020000-TicketsAndPegTime';
 import { BOOKING_CODES, bookingCode, readBookingCode } from '@mereward/shared/bookings/booking-code';
@@ -185,6 +186,7 @@ test('tickets from before the calendar keep their peg, and going back keeps them
     new TicketsAndPegTime1780000020000(),
     new PaymentsAndLedger1780000021000(),
     new RulesNoticesAndWaiting1780000022000(),
+    new FreedPegs1780000031000(),
   ];
   for (const each of migrations.toReversed()) await each.down(q);
   const before: unknown = await q.query('SELECT peg_id, status FROM booking WHERE id = $1', [id]);

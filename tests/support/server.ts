@@ -1,5 +1,6 @@
 import { makeApp } from '@mereward/api/app';
 import { closeBoardStreams } from '@mereward/api/bookings/board-streams';
+import { offerAllFreed } from '@mereward/api/bookings/watch-freed';
 import { readConfig, type Config } from '@mereward/api/config';
 import { handlers } from '@mereward/api/handlers';
 import { makeLogger } from '@mereward/api/http/logging';
@@ -60,7 +61,14 @@ export async function aServer({ env = {}, logger }: Wishes = {}): Promise<TestSe
   let now = new Date(START);
   const server: Server = { config, source, jobs: jobsOn(boss), clock: () => now };
   const ground = { boss, server, logger: log, handlers };
-  const settle = () => workOff(ground);
+  const fail = (error: unknown) => {
+    throw error;
+  };
+  const settle = async () => {
+    let done = await workOff(ground);
+    while ((await offerAllFreed(server, fail)) > 0) done += await workOff(ground);
+    return done;
+  };
   const running: { stop: () => Promise<void> }[] = [];
   const stopWorkers = async () => {
     for (const worker of running.splice(0)) await worker.stop();

@@ -4,6 +4,7 @@ import { createServer, type Server } from 'node:http';
 import { makeApp } from './app';
 import { closeBoardStreams } from './bookings/board-streams';
 import { watchPayments } from './bookings/payment-jobs';
+import { watchFreed } from './bookings/watch-freed';
 import { CHART_BUILDS } from './charts/jobs';
 import { fileStoreOf } from './files/store';
 import { readConfig, SettingsFault, type Config } from './config';
@@ -42,6 +43,7 @@ async function main(): Promise<void> {
     ),
   );
   const stopPayments = watchPayments(server, logger);
+  const freed = watchFreed(server, (err) => logger.error({ err }, 'what came free could not be offered'));
   fileStoreOf(config)
     .check()
     .catch((err: unknown) => logger.error({ err }, 'the store of files can’t be used'));
@@ -53,6 +55,7 @@ async function main(): Promise<void> {
     await closeBoardStreams(server);
     await finish(http);
     for (const stopWatching of [...watches, stopPayments]) stopWatching();
+    await freed.stop();
     await worker.stop();
     await boss.stop({ graceful: true, wait: true, timeout: FINISH_WITHIN_MS });
     await capture?.close();

@@ -13,6 +13,7 @@ import { chartRoutes } from './charts/routes';
 import { tellingRoutes } from './charts/telling-routes';
 import { fisheryRoutes } from './fisheries/routes';
 import { fileRoutes } from './files/routes';
+import { waitingRoutes } from './bookings/waiting-routes';
 import type { Route } from './http/route';
 import { pictureRoutes } from './lakes/picture-routes';
 import { photoRoutes } from './lakes/photo-routes';
@@ -46,6 +47,7 @@ export const routes: readonly Route[] = [
   ...bookingRoutes,
   ...moneyRoutes,
   ...boardRoutes,
+  ...waitingRoutes,
   ...lifeRoutes,
   ...bankRoutes,
   ...surveyRoutes,

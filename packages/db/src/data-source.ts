@@ -65,6 +65,7 @@ import { ReportsTakenBack1780000014000 } from './migrations/1780000014000-Report
 import { ChartLeftOut1780000013000 } from './migrations/1780000013000-ChartLeftOut';
 import { TicketsAndPegTime1780000020000 } from './migrations/1780000020000-TicketsAndPegTime';
 import { PaymentsAndLedger1780000021000 } from './migrations/1780000021000-PaymentsAndLedger';
+import { FreedPegs1780000031000 } from './migrations/1780000031000-FreedPegs';
 import { RulesNoticesAndWaiting1780000022000 } from './migrations/1780000022000-RulesNoticesAndWaiting';
 import { OfficeMoney1780000032000 } from './migrations/1780000032000-OfficeMoney';
 
@@ -140,6 +141,7 @@ const MIGRATIONS = [
   RulesNoticesAndWaiting1780000022000,
   OfficeMoney1780000032000,
   ReportsTakenBack1780000014000,
+  FreedPegs1780000031000,
 ];
 
 /** A pool of connections to one database, opened by the caller with `initialize()`. */

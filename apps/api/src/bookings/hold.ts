@@ -49,7 +49,13 @@ export async function holdPegs(ctx: Ctx, input: HoldPegs): Promise<void> {
 }
 
 export type Said = Pick<BookingDetails, 'guardian' | 'vehicle' | 'emergencyContact' | 'licence' | 'note'>;
-const NOTHING_SAID: Said = { guardian: null, vehicle: '', emergencyContact: '', licence: null, note: '' };
+export const NOTHING_SAID: Said = {
+  guardian: null,
+  vehicle: '',
+  emergencyContact: '',
+  licence: null,
+  note: '',
+};
 
 /** What travels with the booking: what was chosen, its price and the way of cancelling as they stand now. */
 export function detailsOf(

@@ -318,7 +318,7 @@ describe('room at a peg', () => {
 describe('the waiting list', () => {
   const start = at('2027-07-17T12:00');
   const window = (freed: string): string[] | null => {
-    const found = claimWindow(at(freed), start, zone);
+    const found = claimWindow(at(freed), { start, zone });
     return found && [found.from, found.until].map((each) => each.toISOString());
   };
 

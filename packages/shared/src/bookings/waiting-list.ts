@@ -12,10 +12,13 @@ const MINUTE_MS = 60_000;
  * of the half hour is left at 22:00 goes on at 07:00. Null when it would start before the half hour is over, so that
  * nobody is offered a place they can’t take.
  */
-export function claimWindow(freedAt: Date, start: Date, zone: string): Interval | null {
+export function claimWindow(
+  freedAt: Date,
+  { start, zone, claimMinutes = CLAIM_MINUTES }: { start: Date; zone: string; claimMinutes?: number },
+): Interval | null {
   const from = isQuiet(freedAt, zone) ? quietEnd(freedAt, zone) : freedAt;
   const quiet = instantOf(`${civilTime(from, zone).slice(0, 10)}T${QUIET_FROM}`, zone).at;
-  const whole = new Date(from.getTime() + CLAIM_MINUTES * MINUTE_MS);
+  const whole = new Date(from.getTime() + claimMinutes * MINUTE_MS);
   const left = whole.getTime() - quiet.getTime();
   const until = left <= 0 ? whole : new Date(quietEnd(quiet, zone).getTime() + left);
   return until.getTime() <= start.getTime() ? { from, until } : null;

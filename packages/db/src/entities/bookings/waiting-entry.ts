@@ -15,4 +15,6 @@ export class WaitingEntry {
   @Column('text') status!: 'waiting' | 'offered' | 'claimed' | 'passed' | 'left';
   @Column('uuid', { name: 'booking_id', nullable: true }) bookingId!: string | null;
   @Column('timestamptz', { name: 'claim_until', nullable: true }) claimUntil!: Date | null;
+  @Column('uuid', { name: 'passed_over', array: true, default: [] }) passedOver!: string[]; // freed places they let go by
+  @Column('uuid', { name: 'offer_of', nullable: true }) offerOf!: string | null; // the freed place they were offered last
 }
