@@ -18,6 +18,7 @@ import { money } from '@/lib/format';
 import { goTo } from '@/lib/go-to';
 
 const ASK_MS = 3000;
+const ASK_DECLINED_MS = 10_000; // another card may be tried in another window
 
 type Props = { booking: BookingView; onAsk: () => void };
 
@@ -28,7 +29,7 @@ type Props = { booking: BookingView; onAsk: () => void };
 export function PayingBooking({ booking, onAsk }: Props) {
   const payment = latestPayment(booking.payments);
   const stage = paymentStage(payment);
-  const looking = useLooking(booking.id, stage !== 'declined');
+  const looking = useLooking(booking.id, stage === 'declined' ? ASK_DECLINED_MS : ASK_MS);
   const [ranOut, setRanOut] = useState(false);
   if (ranOut && stage !== 'under way') return <HoldAgain booking={booking} />;
   return (
@@ -53,18 +54,17 @@ export function PayingBooking({ booking, onAsk }: Props) {
 }
 
 /** Has the server ask the provider every few seconds; gives what the last asking failed with. */
-function useLooking(bookingId: string, wanted: boolean): Error | null {
+function useLooking(bookingId: string, everyMs: number): Error | null {
   const look = useMutation({ mutationFn: () => lookAtPayment(bookingId) });
   const ask = useRef(look.mutate);
   useEffect(() => {
     ask.current = look.mutate;
   });
   useEffect(() => {
-    if (!wanted) return undefined;
     ask.current();
-    const timer = setInterval(() => ask.current(), ASK_MS);
+    const timer = setInterval(() => ask.current(), everyMs);
     return () => clearInterval(timer);
-  }, [wanted, bookingId]);
+  }, [everyMs, bookingId]);
   return look.error;
 }
 
