@@ -353,6 +353,26 @@ describe('filling in and confirming', () => {
     ]);
   });
 
+  test('the gate code is told inside the hours of a confirmed ticket and at no other time', async () => {
+    const free = await aTicketType(server, lake, {
+      ...TICKET_TEMPLATES.stay24,
+      prices: [{ ...(TICKET_TEMPLATES.stay24.prices[0] ?? never()), pricePence: 0, extraRodPence: 0 }],
+    });
+    const ask = { ticketTypeId: free.id, lakeId: lake.id, day: SATURDAY, start: '12:00' };
+    const body = aHold(ask, [(await freshPeg()).id]);
+    await hold(sofia, body);
+    await sofia.put(`/bookings/${body.id}/details`).send(filledIn(1));
+    await sofia.post(`/bookings/${body.id}/confirm`);
+    const codeAt = async (now: string): Promise<string> => {
+      server.setNow(now);
+      return view((await sofia.get(`/bookings/${body.id}`)).body).gateCode;
+    };
+    expect(await codeAt('2027-07-17T10:59:59Z')).toBe('');
+    expect(await codeAt('2027-07-17T11:00:00Z')).toBe('4711');
+    expect(await codeAt('2027-07-18T11:00:00Z')).toBe('');
+    server.setNow(EVENING);
+  });
+
   test('what costs money is not confirmed unless it may be paid at the lodge', async () => {
     const body = noon([(await freshPeg()).id]);
     await hold(sofia, body);

@@ -19,6 +19,7 @@ export type BookingRow = {
   fisheryId: string;
   fisheryName: string;
   jurisdiction: Jurisdiction;
+  gateCode: string;
   zone: string;
   lakeId: string | null;
   lakeName: string | null;
@@ -49,7 +50,7 @@ export const REFUNDED = `
 /** To be followed by a WHERE over `b`. */
 export const BOOKING_ROWS = `
   SELECT b.id, b.code, b.fishery_id AS "fisheryId", f.name AS "fisheryName", f.zone, b.lake_id AS "lakeId",
-         f.details->>'jurisdiction' AS jurisdiction, l.name AS "lakeName", b.account_id AS "accountId",
+         f.details->>'jurisdiction' AS jurisdiction, coalesce(f.details->>'gateCode', '') AS "gateCode", l.name AS "lakeName", b.account_id AS "accountId",
          coalesce((SELECT jsonb_agg(jsonb_build_object('pegId', p.id, 'number', p.number, 'name', p.details->>'name')
                                     ORDER BY p.walking_order)
                      FROM peg_time t JOIN peg p ON p.id = t.peg_id WHERE t.booking_id = b.id), '[]') AS pegs,
@@ -85,7 +86,7 @@ export async function bookingView(ctx: Ctx, bookingId: string): Promise<BookingV
   const { payAtLodge } = await termsOf(tx, row.fisheryId);
   const { payments, refunds, receipts } = await moneyOf(tx, bookingId);
   const money = standing.money ? { payments, refunds, receipts } : NO_MONEY;
-  const { accountId, roving, jurisdiction, ...rest } = row;
+  const { accountId, roving, jurisdiction, gateCode, ...rest } = row;
   return {
     ...rest,
     ...money,
@@ -97,9 +98,14 @@ export async function bookingView(ctx: Ctx, bookingId: string): Promise<BookingV
     details: standing.contacts ? row.details : withoutContacts(row.details),
     notYet: yet?.words ?? [],
     rulesToRead: yet?.rules ?? false,
+    gateCode: opensGate(row, now) && !yet?.rules ? gateCode : '',
     may: mayOf({ row, standing, now, payAtLodge, takesCards: ctx.takesCards }),
   };
 }
+
+/** The gate is told inside the hours of a ticket that counts, and at no other time. */
+const opensGate = ({ status, from, until }: BookingRow, now: Date): boolean =>
+  (status === 'confirmed' || status === 'checked_in') && from <= now && now < until;
 
 const NO_MONEY = { payments: [], refunds: [], receipts: [] };
 

@@ -86,10 +86,13 @@ function Found({ code }: { code: string }) {
 function Check({ booking, onSeen }: { booking: BookingView; onSeen: () => void }) {
   const arrive = useBookingDeed(booking.id, 'check-in');
   const { details, notYet } = booking;
-  const good = (booking.status === 'confirmed' || booking.status === 'checked_in') && notYet.length === 0;
+  const good = (booking.status === 'confirmed' || booking.status === 'checked_in') && !booking.rulesToRead;
   return (
     <View style={{ gap: space.page }}>
-      <Note kind={good ? 'fine' : 'caution'} title={good ? 'A good ticket for its hours' : 'Look closer'}>
+      <Note
+        kind={good ? 'fine' : 'caution'}
+        title={good ? 'A good ticket for its hours' : 'Not a good ticket as it stands'}
+      >
         {notYet.map((words) => (
           <Text key={words}>{words}</Text>
         ))}

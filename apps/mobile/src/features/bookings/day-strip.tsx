@@ -66,7 +66,7 @@ export function DayStrip({ fishery, kind, choice, change, today }: Props) {
               onChoose={() => change({ day, pegId: null, party: [] })}
             />
           ))}
-          <Button label="Later…" kind="quiet" onPress={() => setChoosing(!choosing)} />
+          <Button label="Later" kind="quiet" onPress={() => setChoosing(!choosing)} />
         </View>
       </ScrollView>
       {choosing ? (

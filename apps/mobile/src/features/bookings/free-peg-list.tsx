@@ -14,6 +14,8 @@ import { money } from '@/lib/format';
 import { dayName } from '@/lib/format-time';
 
 const useStyles = themed((c) => ({
+  lakes: { flexDirection: 'row', flexWrap: 'wrap', alignItems: 'flex-start', gap: space.large },
+  lake: { flexGrow: 1, flexShrink: 1, flexBasis: 320, minWidth: 0 }, // side by side where there is room
   list: { borderTopWidth: 1, borderTopColor: c.rule },
   line: { borderBottomWidth: 1, borderBottomColor: c.rule },
   row: {
@@ -30,41 +32,40 @@ type Props = PickingProps & { free: FreePegs; freeOnly: boolean };
 
 /** The pegs in walking order, lake by lake. */
 export function FreePegList({ free, freeOnly, choice, change }: Props) {
+  const styles = useStyles();
   const shown = free.pegs.filter(({ state }) => !freeOnly || state === 'free');
-  return free.lakes.map((lake, i) => {
+  const lakes = free.lakes.map((lake) => {
     const pegs = shown.filter(({ lakeId }) => lakeId === lake.id);
     return (
-      <Section
-        key={lake.id}
-        title={lake.name}
-        bare={i === 0}
-        end={<Text tone="inkSoft">{`${String(lake.free)} free`}</Text>}
-      >
-        {lake.closed === null ? null : (
-          <Note kind="danger" title={`${lake.name} is closed`}>
-            {lake.closed}
-          </Note>
-        )}
-        {lake.whyNot === null ? null : <Note kind="caution">{lake.whyNot}</Note>}
-        {pegs.length === 0 && lake.whyNot === null && lake.closed === null ? (
-          <Text tone="inkSoft">
-            {freeOnly && lake.free === 0
-              ? 'No peg is free for these hours. Try another day above, or look at a taken peg to join its waiting list.'
-              : 'No peg here is as wanted. Loosen the filters to see the others.'}
-          </Text>
-        ) : (
-          <PegRows
-            label={`Pegs of ${lake.name}`}
-            pegs={pegs}
-            open={choice.pegId}
-            wanted={choice.party.map(({ pegId }) => pegId)}
-            currency={free.currency}
-            onOpen={(pegId) => change({ pegId })}
-          />
-        )}
-      </Section>
+      <View key={lake.id} style={styles.lake}>
+        <Section title={lake.name} bare end={<Text tone="inkSoft">{`${String(lake.free)} free`}</Text>}>
+          {lake.closed === null ? null : (
+            <Note kind="danger" title={`${lake.name} is closed`}>
+              {lake.closed}
+            </Note>
+          )}
+          {lake.whyNot === null ? null : <Note kind="caution">{lake.whyNot}</Note>}
+          {pegs.length === 0 && lake.whyNot === null && lake.closed === null ? (
+            <Text tone="inkSoft">
+              {freeOnly && lake.free === 0
+                ? 'No peg is free for these hours. Try another day above, or look at a taken peg to join its waiting list.'
+                : 'No peg here is as wanted. Loosen the filters to see the others.'}
+            </Text>
+          ) : (
+            <PegRows
+              label={`Pegs of ${lake.name}`}
+              pegs={pegs}
+              open={choice.pegId}
+              wanted={choice.party.map(({ pegId }) => pegId)}
+              currency={free.currency}
+              onOpen={(pegId) => change({ pegId })}
+            />
+          )}
+        </Section>
+      </View>
     );
   });
+  return <View style={styles.lakes}>{lakes}</View>;
 }
 
 type RowsProps = {

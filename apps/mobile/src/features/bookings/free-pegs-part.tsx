@@ -4,10 +4,8 @@ import type { FisheryView } from '@mereward/shared/fisheries/contract';
 import type { TicketTypeView } from '@mereward/shared/tickets/contract';
 import { View } from 'react-native';
 import { Button } from '@/components/button';
-import { Empty } from '@/components/empty';
 import { Loaded } from '@/components/loaded';
 import { Note } from '@/components/note';
-import { Section } from '@/components/section';
 import { Sheet } from '@/components/sheet';
 import { Text } from '@/components/text';
 import { Toggles } from '@/components/toggles';
@@ -22,7 +20,6 @@ import { PartyBar } from '@/features/bookings/party-bar';
 import { PegOffer } from '@/features/bookings/peg-offer';
 import { useBoardEvents } from '@/features/bookings/use-board-events';
 import { pegTitle } from '@mereward/shared/lakes/peg-facts';
-import { useWide } from '@/hooks/use-wide';
 
 export type PickingProps = FindProps & {
   fishery: FisheryView;
@@ -34,6 +31,7 @@ export type PickingProps = FindProps & {
 export function FreePegsPart(props: PickingProps) {
   const { fishery, choice, change } = props;
   const [filtering, setFiltering] = useState(false);
+  const [freeOnly, setFreeOnly] = useState(false);
   const free = useFreePegs(fishery.id, freeQuery(choice));
   useBoardEvents(fishery.id);
   const used = filterCount(choice.filters);
@@ -44,6 +42,14 @@ export function FreePegsPart(props: PickingProps) {
           label={used === 0 ? 'Filter pegs' : `Filters (${String(used)})`}
           onPress={() => setFiltering(true)}
         />
+        {props.kind.details.pegChoice === 'book_a_peg' ? (
+          <Toggles
+            label="What is shown"
+            toggles={[{ key: 'free', label: 'Free pegs only' }]}
+            isOn={() => freeOnly}
+            onToggle={() => setFreeOnly(!freeOnly)}
+          />
+        ) : null}
         {used === 0 ? null : (
           <Button label="Show every peg" kind="quiet" onPress={() => change({ filters: NO_FILTERS })} />
         )}
@@ -56,17 +62,15 @@ export function FreePegsPart(props: PickingProps) {
         onChange={(filters) => change({ filters })}
       />
       <Loaded query={free} waiting="Looking which pegs are free…">
-        {(pegs) => <Pegs {...props} free={pegs} />}
+        {(pegs) => <Pegs {...props} free={pegs} freeOnly={freeOnly} />}
       </Loaded>
       <PartyBar {...props} pegs={free.data?.pegs ?? []} />
     </View>
   );
 }
 
-function Pegs({ free, ...props }: PickingProps & { free: FreePegs }) {
+function Pegs({ free, freeOnly, ...props }: PickingProps & { free: FreePegs; freeOnly: boolean }) {
   const { kind, choice, change } = props;
-  const wide = useWide();
-  const [freeOnly, setFreeOnly] = useState(false);
   if (free.whyNot !== null)
     return (
       <Note kind="caution" title="Not for this day">
@@ -75,45 +79,17 @@ function Pegs({ free, ...props }: PickingProps & { free: FreePegs }) {
     );
   const open = free.pegs.find(({ pegId }) => pegId === choice.pegId);
   const close = (): void => change({ pegId: null });
-  const list = (
-    <>
+  return (
+    <View style={{ gap: space.medium }}>
       <Text tone="inkSoft">{free.words}</Text>
       {kind.details.pegChoice === 'book_a_peg' ? (
-        <>
-          <Toggles
-            label="What is shown"
-            toggles={[{ key: 'free', label: 'Free pegs only' }]}
-            isOn={() => freeOnly}
-            onToggle={() => setFreeOnly(!freeOnly)}
-          />
-          <FreePegList {...props} free={free} freeOnly={freeOnly} />
-        </>
+        <FreePegList {...props} free={free} freeOnly={freeOnly} />
       ) : (
         <LakeTicketList {...props} free={free} />
       )}
-    </>
-  );
-  if (!wide)
-    return (
-      <View style={{ gap: space.medium }}>
-        {list}
-        <Sheet open={open !== undefined} onClose={close} title={open ? pegTitle(open) : ''}>
-          {open ? <PegOffer {...props} key={open.pegId} free={free} peg={open} /> : null}
-        </Sheet>
-      </View>
-    );
-  return (
-    <View style={{ flexDirection: 'row', gap: space.wide, alignItems: 'flex-start' }}>
-      <View style={{ flexGrow: 3, flexBasis: 420, minWidth: 0, gap: space.medium }}>{list}</View>
-      <View style={{ flexGrow: 2, flexBasis: 340, minWidth: 0 }}>
-        {open ? (
-          <Section title={pegTitle(open)} bare end={<Button label="Close" kind="quiet" onPress={close} />}>
-            <PegOffer {...props} key={open.pegId} free={free} peg={open} />
-          </Section>
-        ) : (
-          <Empty title="Choose a peg">What it holds, the way to it and its price are shown here.</Empty>
-        )}
-      </View>
+      <Sheet open={open !== undefined} onClose={close} title={open ? pegTitle(open) : ''}>
+        {open ? <PegOffer {...props} key={open.pegId} free={free} peg={open} /> : null}
+      </Sheet>
     </View>
   );
 }

@@ -13,7 +13,7 @@ export function KindBar({ kinds, kind, choice, change }: Props) {
   const rods = Array.from({ length: kind.details.rodsMost }, (_, i) => String(i + 1));
   return (
     <View style={{ flexDirection: 'row', flexWrap: 'wrap', gap: space.medium, alignItems: 'flex-end' }}>
-      <View style={{ flexGrow: 3, flexBasis: 230, minWidth: 0 }}>
+      <View style={{ flexGrow: 3, flexBasis: 300, minWidth: 0 }}>
         <Select
           label="Kind of ticket"
           choices={kinds.map(({ id, details }) => ({ key: id, label: kindLine(details, choice.day ?? '') }))}

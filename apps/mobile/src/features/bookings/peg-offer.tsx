@@ -115,7 +115,7 @@ function Gone({ peg, free, change }: OfferProps) {
       ) : null}
       {next ? (
         <Button
-          label={`See it on ${dayName(next.day)}, when it is free`}
+          label={`Free on ${dayName(next.day)}: see it then`}
           onPress={() => change({ day: next.day, party: [] })}
         />
       ) : null}

@@ -1,5 +1,4 @@
 import type { BookingView } from '@mereward/shared/bookings/contract';
-import { licenceNeeded, licenceWarning } from '@mereward/shared/bookings/rod-licence';
 import type { Jurisdiction } from '@mereward/shared/fisheries/contract';
 import { Checkbox } from '@/components/checkbox';
 import { Note } from '@/components/note';
@@ -8,7 +7,6 @@ import { Section } from '@/components/section';
 import { Text } from '@/components/text';
 import { cleanTackle } from '@/features/bookings/clean-tackle';
 
-const ADULT = 30; // licences by age are asked while booking; here the strictest answer is the useful one
 const CLEANED_LINK = 'https://www.nonnativespecies.org/what-can-i-do/check-clean-dry/';
 
 type Props = { booking: BookingView; jurisdiction: Jurisdiction | undefined };
@@ -16,26 +14,8 @@ type Props = { booking: BookingView; jurisdiction: Jurisdiction | undefined };
 /** What holds on the bank, where it is read: beside the ticket. */
 export function TicketCautions({ booking, jurisdiction }: Props) {
   const cleaned = cleanTackle.use(booking.id);
-  const { details, until, zone } = booking;
-  const licence = jurisdiction === undefined ? null : licenceNeeded(jurisdiction, ADULT, details.day);
-  const said = details.licence
-    ? {
-        declared: details.licence.held,
-        lastSix: details.licence.lastSix,
-        expiresOn: details.licence.expiresOn,
-      }
-    : null;
-  const warning =
-    licence === null || (said === null && details.guardian !== null)
-      ? null
-      : licenceWarning(licence, said, { until: new Date(until), zone });
   return (
     <Section title="On the bank">
-      {warning === null ? null : (
-        <Note kind="caution" title={warning}>
-          {licence?.words}
-        </Note>
-      )}
       <Text>
         A ticket is permission to fish, not a rod licence. Byelaws and notices on the bank beat this page.
       </Text>

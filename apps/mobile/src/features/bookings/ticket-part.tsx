@@ -60,7 +60,7 @@ export function TicketPart({ booking }: { booking: BookingView }) {
   );
 }
 
-function NotYet({ booking: { notYet, status } }: { booking: BookingView }) {
+function NotYet({ booking: { notYet, status, rulesToRead } }: { booking: BookingView }) {
   if (status === 'choosing')
     return (
       <Note kind="caution" title="A closure lies over this ticket">
@@ -70,7 +70,7 @@ function NotYet({ booking: { notYet, status } }: { booking: BookingView }) {
     );
   if (notYet.length === 0) return null;
   return (
-    <Note kind="caution" title="Not good yet">
+    <Note kind="caution" title={rulesToRead ? 'Not good yet' : 'Before you fish'}>
       {notYet.map((words) => (
         <Text key={words}>{words}</Text>
       ))}
@@ -109,6 +109,7 @@ function ticketFacts(booking: BookingView, fishery: FisheryView | undefined) {
       fact: details.guardian ? `${details.guardian.name}, ${details.guardian.phone}` : null,
     },
     { term: 'Vehicle', fact: details.vehicle },
+    { term: 'Gate code', fact: booking.gateCode },
     { term: 'Fishery’s duty phone', fact: fishery?.details.dutyPhone ?? null },
   ];
 }
