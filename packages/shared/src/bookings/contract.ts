@@ -110,7 +110,7 @@ export const BookingView = z.object({
   /** Why the ticket doesn't count yet, in words: rules to be read, a licence to be declared. None: it is good. */
   notYet: z.array(z.string()),
   rulesToRead: z.boolean(),
-  gateCode: z.string(), // inside the hours of a good ticket; else ''
+  gateCode: z.string().default(''), // inside the hours of a good ticket; else ''
   version: z.int(),
   may: z.object({
     fillIn: z.boolean(),

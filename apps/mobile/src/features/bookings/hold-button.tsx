@@ -9,11 +9,22 @@ import { useHold, type Holding } from '@/features/bookings/use-hold';
 import { useSession } from '@/lib/session';
 
 type Props = { label: string; choice: FindChoice; holding: Holding };
+type Hold = ReturnType<typeof useHold>;
 
 /** The one main act of the search. Whoever is not signed in is sent there first, and back to the same choice. */
-export function HoldButton({ label, choice, holding }: Props) {
+export function HoldButton(props: Props) {
+  const hold = useHold(props.choice);
+  return (
+    <>
+      <HoldFault hold={hold} />
+      <HoldAct {...props} hold={hold} />
+    </>
+  );
+}
+
+/** The act alone, for whoever shows its outcome elsewhere: the peg may be gone, and the act with it. */
+export function HoldAct({ label, choice, holding, hold }: Props & { hold: Hold }) {
   const { account } = useSession();
-  const hold = useHold(choice);
   if (account === null)
     return (
       <>
@@ -25,20 +36,8 @@ export function HoldButton({ label, choice, holding }: Props) {
         />
       </>
     );
-  const taken = hold.error instanceof Problem && hold.error.kind === 'conflict' ? hold.error : null;
   return (
     <>
-      {taken ? (
-        <Note kind="caution" title={taken.title} live>
-          {[taken.detail ?? '', ...taken.errors.map(({ detail }) => detail)]
-            .filter((words, i, all) => words !== '' && all.indexOf(words) === i)
-            .map((words) => (
-              <Text key={words}>{words}</Text>
-            ))}
-        </Note>
-      ) : (
-        <ProblemNote problem={hold.error} />
-      )}
       <Button
         label={label}
         kind="main"
@@ -51,5 +50,20 @@ export function HoldButton({ label, choice, holding }: Props) {
         It is held for ten minutes while you fill in the rest. Nothing is paid yet.
       </Text>
     </>
+  );
+}
+
+/** Why the peg could not be held; that somebody was quicker is no fault of anybody's. */
+export function HoldFault({ hold: { error } }: { hold: Hold }) {
+  if (!(error instanceof Problem) || error.kind !== 'conflict') return <ProblemNote problem={error} />;
+  const words = [error.detail ?? '', ...error.errors.map(({ detail }) => detail)];
+  return (
+    <Note kind="caution" title={error.title} live>
+      {words
+        .filter((each, i) => each !== '' && words.indexOf(each) === i)
+        .map((each) => (
+          <Text key={each}>{each}</Text>
+        ))}
+    </Note>
   );
 }

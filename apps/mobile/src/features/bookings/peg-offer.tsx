@@ -7,26 +7,30 @@ import { Text } from '@/components/text';
 import { space } from '@/constants/layout';
 import { PegRows } from '@/features/bookings/free-peg-list';
 import type { OfferProps } from '@/features/bookings/free-pegs-part';
-import { HoldButton } from '@/features/bookings/hold-button';
+import { HoldAct, HoldFault } from '@/features/bookings/hold-button';
 import { aMember, withMember } from '@/features/bookings/party';
 import { groundWords, PEG_LOOKS, pegsLike, wayWords } from '@/features/bookings/peg-words';
 import { QuotePart } from '@/features/bookings/quote-part';
 import { JoinWaiting } from '@/features/bookings/join-waiting';
+import { useHold } from '@/features/bookings/use-hold';
 import { useUnits } from '@/hooks/use-units';
 import { dayName } from '@/lib/format-time';
 
 /** One peg: what it holds, the way there, its price, and the hold; when it is gone, what is like it. */
 export function PegOffer(props: OfferProps) {
   const { peg, kind, choice } = props;
+  const hold = useHold(choice);
+  const own = hold.isPending || hold.isSuccess; // it is taken by now, but by this reader
   const units = useUnits();
   const lake = props.free.lakes.find(({ id }) => id === peg.lakeId);
   return (
     <View style={{ gap: space.medium }}>
       <View style={{ flexDirection: 'row', flexWrap: 'wrap', gap: space.medium, alignItems: 'center' }}>
-        <StatusShape {...PEG_LOOKS[peg.state]} />
+        <StatusShape {...PEG_LOOKS[own ? 'free' : peg.state]} />
         <Text tone="inkSoft">{[lake?.name, props.free.words].filter(Boolean).join(' · ')}</Text>
       </View>
-      {peg.state === 'free' ? <Offered {...props} /> : <Gone {...props} />}
+      <HoldFault hold={hold} />
+      {peg.state === 'free' || own ? <Offered {...props} hold={hold} /> : <Gone {...props} />}
       <Facts
         facts={[
           { term: 'In front of it', fact: groundWords(peg.ground, units) },
@@ -37,7 +41,7 @@ export function PegOffer(props: OfferProps) {
         ]}
       />
       <LinkButton label="What lies in front of it" href={`/water/pegs/${peg.pegId}`} />
-      {peg.state === 'free' || choice.day === null ? null : (
+      {peg.state === 'free' || own || choice.day === null ? null : (
         <JoinWaiting
           lakeId={peg.lakeId}
           lakeName={lake?.name ?? ''}
@@ -58,7 +62,7 @@ const roomWords = ({ people, rods, placesLeft }: OfferProps['peg']): string => {
   return placesLeft === null ? room : `${room}; shared, ${counted(placesLeft, 'place')} left`;
 };
 
-function Offered({ peg, kind, choice, change }: OfferProps) {
+function Offered({ peg, kind, choice, change, hold }: OfferProps & { hold: ReturnType<typeof useHold> }) {
   const member = aMember({ pegId: peg.pegId, kind, rods: choice.rods ?? kind.details.rodsIncluded });
   const inParty = choice.party.some(({ pegId }) => pegId === peg.pegId);
   const alone = choice.party.length === 0;
@@ -75,9 +79,10 @@ function Offered({ peg, kind, choice, change }: OfferProps) {
         }}
       />
       {alone ? (
-        <HoldButton
+        <HoldAct
           label={`Hold peg ${peg.number}`}
           choice={choice}
+          hold={hold}
           holding={{ lakeId: peg.lakeId, party: [member] }}
         />
       ) : null}
