@@ -77,6 +77,13 @@ function FisheryOffice({ fishery }: { fishery: FisheryListItem }) {
               href={`/office/tickets?fisheryId=${fishery.id}`}
             />
           ) : null}
+          {sells ? (
+            <Row
+              title="Money"
+              note="Takings, receipts, refunds that wait, the ledger"
+              href={`/office/payments?fisheryId=${fishery.id}`}
+            />
+          ) : null}
           <Row title="Charts" note="Drafts, approval, published versions" href="/office/charts" />
           {sells ? (
             <Row
