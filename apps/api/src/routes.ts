@@ -22,6 +22,7 @@ import { waterRoutes } from './lakes/water-routes';
 import { closureRoutes } from './closures/routes';
 import { noticeRoutes } from './notices/routes';
 import { rulePaperRoutes } from './rules/paper-routes';
+import { paymentRoutes } from './payments/routes';
 import { ruleRoutes } from './rules/routes';
 import { bottomRoutes } from './surveys/bottom-routes';
 import { logRoutes } from './surveys/log-routes';
@@ -46,6 +47,7 @@ export const routes: readonly Route[] = [
   ...termsRoutes,
   ...bookingRoutes,
   ...moneyRoutes,
+  ...paymentRoutes,
   ...boardRoutes,
   ...waitingRoutes,
   ...lifeRoutes,

@@ -5,22 +5,28 @@ import {
   AskRefundAgain,
   DecideRefund,
   GiveByHand,
+  OfficeQueue,
   RefundList,
 } from '@mereward/shared/payments/refund-contract';
+import { DaysAsked } from '@mereward/shared/payments/takings-contract';
 import { Problem } from '@mereward/shared/problems/problem';
 import type { Request } from 'express';
-import { deed, raw, type Route } from '../http/route';
+import { parse } from '../http/parse';
+import { deed, raw, read, type Route } from '../http/route';
 import { idIn } from '../http/route-id';
 import { serverOf } from '../http/server';
 import { inTransaction, reading } from '../http/transaction';
 import { heardFrom } from '../payments/heard';
 import { providerOf, readMessage, type Provider } from '../payments/provider';
 import { bookingView } from './booking-view';
+import { bookingsFile } from './bookings-file';
 import { askAgain, askForRefund, decideRefund, giveByHand, seeRefund } from './give-back';
 import { hear } from './hear';
 import { byItself, lookAt } from './look';
 import { openPayment, pageOf } from './payment-page';
+import { officeQueue } from '../payments/office-queue';
 import { takeMoney } from './take-money';
+import { termsOf } from './terms';
 
 const signIn = 'needed';
 
@@ -33,6 +39,35 @@ async function providerHere(req: Request): Promise<Provider> {
 }
 
 export const moneyRoutes: Route[] = [
+  read(
+    {
+      method: 'get',
+      path: '/fisheries/:fisheryId/office-queue',
+      summary: 'What waits for somebody in the office',
+      signIn,
+      answer: OfficeQueue,
+    },
+    async (ctx, { id }) => {
+      const fisheryId = id('fisheryId');
+      const { officeRefundPence: limitPence } = await termsOf(ctx.tx, fisheryId);
+      return officeQueue(ctx, { fisheryId, limitPence });
+    },
+  ),
+  raw(
+    {
+      method: 'get',
+      path: '/fisheries/:fisheryId/bookings.csv',
+      summary: 'Bookings of some days, for a spreadsheet',
+      signIn,
+      query: DaysAsked,
+      answerType: 'text/csv',
+    },
+    async (req, res) => {
+      const days = parse(DaysAsked, req.query);
+      const text = await reading(req, (ctx) => bookingsFile(ctx, idIn(req, 'fisheryId'), days));
+      res.attachment(`bookings-${days.from}-to-${days.until}.csv`).type('text/csv').send(text);
+    },
+  ),
   raw(
     {
       method: 'post',
