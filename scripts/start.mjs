@@ -1,5 +1,6 @@
 import { readFileSync } from 'node:fs';
 import { buildApi, buildWeb } from './lib/build.mjs';
+import { startCardProvider } from './lib/card-provider.mjs';
 import { callBuilt, filesFolder, openDatabase, signingSecret, takePlace } from './lib/database.mjs';
 import { Halt } from './lib/halt.mjs';
 import { requireNode, requireWritableRoot } from './lib/machine.mjs';
@@ -38,7 +39,11 @@ async function start() {
   };
   await step('Migrations', () => callBuilt('migrate.js', 'migrate', settings));
   const demo = await step('Demo', (note) => openDemo(settings, note));
-  const server = startServer(port, { ...settings, DEMO: String(demo.shown) });
+  const cards = demo.shown
+    ? await step('Card page', () => startCardProvider({ folder: place.folder, serverPort: port }))
+    : null;
+  if (cards) started.push(cards.stop);
+  const server = startServer(port, { ...settings, ...cards?.settings, DEMO: String(demo.shown) });
   started.push(server.stop);
   await step('Server', () => server.ready);
   say('');

@@ -81,6 +81,7 @@ function apiEntries() {
     'packages/db/src/migrate.ts',
     'apps/api/src/demo/seed.ts',
     'apps/api/src/demo/room-for-demo.ts',
+    'apps/api/src/demo/card-provider/main.ts',
   ].map((path) => at(...path.split('/')));
   return [...named.filter((path) => existsSync(path)), ...workers];
 }

@@ -8,7 +8,7 @@ const firstPort = 4310;
  * @param {string} host
  * @returns {Promise<number | undefined>} the port, or undefined when something else has it
  */
-function tryPort(port, host) {
+export function tryPort(port, host) {
   return new Promise((resolve) => {
     const probe = createServer();
     probe.once('error', () => resolve(undefined));

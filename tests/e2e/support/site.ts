@@ -3,6 +3,7 @@ import { closeSync, cpSync, mkdirSync, mkdtempSync, openSync, rmSync, writeFileS
 import { tmpdir } from 'node:os';
 import { basename, join } from 'node:path';
 import { freePort } from '../../../scripts/lib/port.mjs';
+import { startCardProvider } from '../../../scripts/lib/card-provider.mjs';
 import { startServer } from '../../../scripts/lib/server.mjs';
 import { copyDatabase } from '../../support/test-cluster';
 import { readGround } from './ground';
@@ -44,7 +45,8 @@ async function openSite({ name, now }: Wish): Promise<Site> {
     ...(now ? { CLOCK_FILE: clockFile } : {}),
   };
   const port = await freePort();
-  const start = () => startServer(port, settings, { log });
+  const cards = await startCardProvider({ folder, serverPort: port, log });
+  const start = () => startServer(port, { ...settings, ...cards.settings }, { log });
   let server = start();
   await server.ready;
   return {
@@ -61,6 +63,7 @@ async function openSite({ name, now }: Wish): Promise<Site> {
     },
     async stop() {
       await server.stop();
+      await cards.stop();
       closeSync(log);
       await database.drop();
       rmSync(folder, { recursive: true, force: true });
