@@ -7,7 +7,7 @@ import { useChartUnits } from './use-chart-units';
 import { chartFile, type ChartFileKind } from './chart-file';
 import { shownLayers } from './chart-layers';
 import { sheetPapers, staffPapers } from './chart-papers';
-import { PaperButtons } from './paper-buttons';
+import { PaperButtons } from '@/components/paper-buttons';
 
 const kinds: readonly { kind: ChartFileKind; label: string; bw: boolean }[] = [
   { kind: 'png', label: 'Picture (PNG)', bw: false },

@@ -1,5 +1,5 @@
 import type { SurveyedBy } from '@mereward/shared/charts/chart-log-view';
-import type { Paper } from './paper-buttons';
+import type { Paper } from '@/components/paper-buttons';
 
 type Named = { id: string; lakeName: string; version: string | null };
 type Surveyed = Named & { surveyedBy?: SurveyedBy | undefined }; // absent until it is built

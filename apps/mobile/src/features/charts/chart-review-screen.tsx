@@ -15,7 +15,7 @@ import { chartName, surveyedWords } from '@/features/charts/chart-words';
 import { layersPaper, sheetPapers, staffPapers } from '@/features/charts/chart-papers';
 import { CheckList } from '@/features/charts/check-list';
 import { LeftOutSection } from '@/features/charts/left-out-section';
-import { PaperButtons } from '@/features/charts/paper-buttons';
+import { PaperButtons } from '@/components/paper-buttons';
 import { QualityReport } from '@/features/charts/quality-report';
 import { ReviewActions } from '@/features/charts/review-actions';
 import { ReviewMap } from '@/features/charts/review-map';

@@ -9,6 +9,7 @@ import { LinkButton } from '@/components/link-button';
 import { Loaded } from '@/components/loaded';
 import { Note } from '@/components/note';
 import { Page } from '@/components/page';
+import { PaperButtons } from '@/components/paper-buttons';
 import { ProblemNote } from '@/components/problem-note';
 import { Section } from '@/components/section';
 import { Text } from '@/components/text';
@@ -16,7 +17,7 @@ import { space } from '@/constants/layout';
 import { useAcknowledgeRules, useRules } from '@/features/rules/api';
 import { RuleChangesList } from '@/features/rules/rule-changes-list';
 import { RuleList } from '@/features/rules/rule-list';
-import { METHOD_WORDS, versionWords } from '@/features/rules/rule-words';
+import { METHOD_WORDS, sheetPapers, versionWords } from '@/features/rules/rule-words';
 import { clockHere } from '@/lib/format-time';
 
 /** The rules in force at a fishery, open to everybody and kept on the device. */
@@ -61,6 +62,7 @@ function Sheet({ view, sheet }: { view: RulesView; sheet: SheetView }) {
       </Section>
       {may.acknowledge ? <Acknowledge fisheryId={fisheryId} sheet={sheet} /> : null}
       <View style={{ flexDirection: 'row', flexWrap: 'wrap', gap: space.small }}>
+        <PaperButtons papers={sheetPapers(sheet)} />
         {may.versions ? (
           <LinkButton label="Earlier versions" href={`/water/rules/versions/${fisheryId}`} />
         ) : null}

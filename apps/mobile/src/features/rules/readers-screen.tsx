@@ -1,6 +1,7 @@
 import { Empty } from '@/components/empty';
 import { Loaded } from '@/components/loaded';
 import { Page } from '@/components/page';
+import { PaperButtons } from '@/components/paper-buttons';
 import { StatusShape } from '@/components/status-shape';
 import { Table } from '@/components/table';
 import { ChosenFishery, useChosenFishery } from '@/features/fisheries/chosen-fishery';
@@ -70,6 +71,23 @@ function Readers({ fisheryId }: { fisheryId: string }) {
               head: 'When',
               value: ({ reading }) => reading?.deviceAt ?? null,
               show: ({ reading, zone }) => (reading ? dayAndTime(reading.deviceAt, zone) : null),
+            },
+            {
+              key: 'proof',
+              head: 'On paper',
+              value: () => null,
+              show: ({ reading, code }) =>
+                reading ? (
+                  <PaperButtons
+                    papers={[
+                      {
+                        label: 'What was accepted',
+                        path: `/rule-readings/${reading.id}/proof.pdf`,
+                        name: `rules-accepted-${code}.pdf`,
+                      },
+                    ]}
+                  />
+                ) : null,
             },
           ]}
         />

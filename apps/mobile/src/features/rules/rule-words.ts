@@ -1,5 +1,6 @@
 import type { Rule, RuleCategory, SheetNumber } from '@mereward/shared/rules/contract';
 import { numberWords } from '@mereward/shared/rules/rule-changes';
+import type { Paper } from '@/components/paper-buttons';
 import type { ReadingView } from '@mereward/shared/rules/sheet-contract';
 
 export const CATEGORY_WORDS: Readonly<Record<RuleCategory, string>> = {
@@ -47,3 +48,12 @@ export const ruleNote = ({ category, basis, severity }: Rule): string =>
     BASIS_WORDS[basis],
     `Breaking it: ${SEVERITY_WORDS[severity].toLowerCase()}`,
   ].join(' · ');
+
+/** A version to print, plain and large. */
+export const sheetPapers = ({ id, ...number }: SheetNumber & { id: string }): Paper[] => {
+  const name = `rules-${numberWords(number)}`;
+  return [
+    { label: 'Print', path: `/rule-sheets/${id}/sheet.pdf`, name: `${name}.pdf` },
+    { label: 'Large print', path: `/rule-sheets/${id}/sheet.pdf?print=large`, name: `${name}-large.pdf` },
+  ];
+};

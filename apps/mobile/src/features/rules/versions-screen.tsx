@@ -3,13 +3,16 @@ import type { ChangeWeight } from '@mereward/shared/rules/contract';
 import { Disclosure } from '@/components/disclosure';
 import { Empty } from '@/components/empty';
 import { Loaded } from '@/components/loaded';
+import { View } from 'react-native';
 import { Page } from '@/components/page';
+import { PaperButtons } from '@/components/paper-buttons';
 import { Section } from '@/components/section';
 import { Text } from '@/components/text';
+import { space } from '@/constants/layout';
 import { useSheet, useSheets } from '@/features/rules/api';
 import { RuleChangesList } from '@/features/rules/rule-changes-list';
 import { RuleList } from '@/features/rules/rule-list';
-import { versionWords } from '@/features/rules/rule-words';
+import { sheetPapers, versionWords } from '@/features/rules/rule-words';
 import { clockHere } from '@/lib/format-time';
 
 const WEIGHT_WORDS: Readonly<Record<ChangeWeight, string>> = {
@@ -60,8 +63,11 @@ function OneSheet({ sheetId }: { sheetId: string }) {
   const sheet = useSheet(sheetId);
   return (
     <Loaded query={sheet} waiting="Reading the version…">
-      {({ changes, rules }) => (
+      {({ changes, rules, ...sheet }) => (
         <>
+          <View style={{ flexDirection: 'row', flexWrap: 'wrap', gap: space.small }}>
+            <PaperButtons papers={sheetPapers(sheet)} />
+          </View>
           {changes ? <RuleChangesList changes={changes} /> : null}
           <Disclosure title="All its rules" open={changes === null}>
             <RuleList rules={rules} />

@@ -1,7 +1,7 @@
 import { useState } from 'react';
 import { Button } from '@/components/button';
 import { ProblemNote } from '@/components/problem-note';
-import { savePaper } from './save-paper';
+import { savePaper } from '@/lib/save-paper';
 
 /** A file the server makes: what it is, where it is asked for, and what it is saved as. */
 export type Paper = { label: string; path: string; name: string };
