@@ -13,6 +13,7 @@ import { chartRoutes } from './charts/routes';
 import { tellingRoutes } from './charts/telling-routes';
 import { fisheryRoutes } from './fisheries/routes';
 import { fileRoutes } from './files/routes';
+import { calendarRoutes } from './bookings/calendar-routes';
 import { waitingRoutes } from './bookings/waiting-routes';
 import type { Route } from './http/route';
 import { pictureRoutes } from './lakes/picture-routes';
@@ -50,6 +51,7 @@ export const routes: readonly Route[] = [
   ...paymentRoutes,
   ...boardRoutes,
   ...waitingRoutes,
+  ...calendarRoutes,
   ...lifeRoutes,
   ...bankRoutes,
   ...surveyRoutes,

@@ -33,4 +33,4 @@ export function logRequests(logger: pino.Logger) {
 
 /** A mailed token stands in the path or the query of a link: neither may reach a log. */
 export const withoutSecrets = (url: string): string =>
-  (url.split('?')[0] ?? '').replace(/\/(invitations|choices|choose)\/[^/]{20,}/, '/$1/…');
+  (url.split('?')[0] ?? '').replace(/\/(invitations|choices|choose|calendars)\/[^/]{20,}/, '/$1/…');
