@@ -4,6 +4,7 @@ import { ChartList, PegPageView } from '@mereward/shared/charts/contract';
 import { LakeView } from '@mereward/shared/lakes/contract';
 import { VisitWithCasts } from '@mereward/shared/surveys/contract';
 import { LakePictureView } from '@mereward/shared/lakes/picture-contract';
+import { TICKET_TEMPLATES } from '@mereward/shared/tickets/ticket-templates';
 import { aPhoto } from '../../support/pictures';
 import { aFan } from '../../support/long-water';
 import { readdirSync } from 'node:fs';
@@ -35,6 +36,8 @@ const KINDS = [
   'logId',
   'pictureId',
   'placeId',
+  'ticketTypeId',
+  'bookingId',
 ] as const;
 export type Ids = Readonly<Record<(typeof KINDS)[number], string>>;
 
@@ -66,6 +69,7 @@ export async function demoIds(site: Site): Promise<Ids> {
     logId,
     pictureId: await aPicture(site, lakeId),
     placeId: lake.details.places?.[0]?.id ?? '',
+    ...(await aBooking(site, { fisheryId: fisheries[0]?.id ?? '', lakeId, pegId })),
   };
 }
 
@@ -78,6 +82,29 @@ const pointsAt = ([lon, lat]: readonly [number, number]): string =>
     `${lat + 1},${lon},2`,
     `${lat},x,2`,
   ].join('\n');
+
+const TOMORROW_MS = 86_400_000;
+
+/** A kind of ticket on sale, and Priya's booking of it for tomorrow, made at the lodge. */
+async function aBooking(site: Site, at: { fisheryId: string; lakeId: string; pegId: string }) {
+  const marian = await Asking.as('marian', site);
+  const [ticketTypeId, bookingId] = [randomUUID(), randomUUID()];
+  const { fisheryId, lakeId, pegId } = at;
+  const details = { ...TICKET_TEMPLATES.day, name: 'A looked-at day', lakeIds: [lakeId] };
+  await marian.do('POST', `/fisheries/${fisheryId}/ticket-types`, { id: ticketTypeId, details });
+  const angler = { name: 'Priya Nair', bornOn: null, kind: 'holder', rods: 2, people: 1 };
+  await marian.do('POST', `/fisheries/${fisheryId}/bookings`, {
+    id: bookingId,
+    lakeId,
+    day: new Date(Date.now() + TOMORROW_MS).toISOString().slice(0, 10),
+    start: null,
+    tickets: [{ ticketTypeId, pegId, ...angler }],
+    holder: { name: angler.name, email: 'priya@ostlemere.example' },
+    vehicle: '',
+    note: '',
+  });
+  return { ticketTypeId, bookingId };
+}
 
 /** A picture to trace the lake over, once it is ready. */
 async function aPicture(site: Site, lakeId: string): Promise<string> {

@@ -49,7 +49,11 @@ function Peg({ lake, now }: { lake: LakeView; now: PegView }) {
   return (
     <>
       <View style={{ flexDirection: 'row', flexWrap: 'wrap', gap: space.small }}>
-        <LinkButton label="Its tickets" href={`/office/lakes/${lake.id}/pegs/${now.id}/tickets`} />
+        <LinkButton label="On the board" href={`/office/board?lakeId=${lake.id}`} />
+        <LinkButton
+          label="Book for somebody"
+          href={`/office/bookings/new?lakeId=${lake.id}&pegId=${now.id}`}
+        />
         <LinkButton label="As visitors see it" href={`/water/pegs/${now.id}`} />
       </View>
       {lake.may.buildCharts ? <SpotsSection lakeId={lake.id} pegId={now.id} /> : null}

@@ -29,6 +29,13 @@ export function BankScreen() {
       >
         {() => (
           <>
+            <List label="Tickets">
+              <Row
+                title="Pegs and tickets"
+                note="Who is expected on which peg; is a ticket good"
+                href="/bank/tickets"
+              />
+            </List>
             <OpenVisits lakeIds={lakes.map(({ id }) => id)} />
             {lakes.map(({ id, fisheryId, name }) => (
               <BankLake key={id} lakeId={id} fisheryId={fisheryId} name={name} />

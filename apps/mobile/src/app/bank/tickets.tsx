@@ -1,0 +1,1 @@
+export { BankTicketsScreen as default } from '@/features/bookings/bank-tickets-screen';

@@ -1,1 +1,0 @@
-export { PegTicketsScreen as default } from '@/features/bookings/peg-tickets-screen';
