@@ -11,8 +11,11 @@ import { dayName } from '@/lib/format-time';
 const LEAST_CELL_PX = { day: 62, hours: 44 } as const;
 export const HEAD_PX = 78;
 
-/** "Sat 4 July" of "Sat 4 July 2026". */
-const shortDay = (day: string): string => dayName(day).split(' ').slice(0, 3).join(' ');
+/** "Sat 4 Jul" of "Sat 4 July 2026". */
+function shortDay(day: string): string {
+  const [weekday = '', date = '', month = ''] = dayName(day).split(' ');
+  return `${weekday} ${date} ${month.slice(0, 3)}`;
+}
 
 /** Pegs against time as a real table: head and pegs stay while it scrolls; the arrow keys move, Enter opens. */
 export function BoardTable(props: BoardTableProps) {
