@@ -1,6 +1,7 @@
 import { Problem } from '@mereward/shared/problems/problem';
 import { holdInChallenge } from '@mereward/shared/bookings/hold';
 import { STRANGER, type Ctx } from '../ctx';
+import { closePages } from '../payments/open-payments';
 import { freePegs } from './peg-calendar';
 import { lockStay, ranOut, step, type Stay } from './stay';
 import { termsOf } from './terms';
@@ -22,6 +23,7 @@ export async function letGoOfExpired(ctx: Ctx, lakeId: string): Promise<void> {
 async function expire(ctx: Ctx, stay: Stay): Promise<void> {
   await step({ ...ctx, actor: STRANGER }, stay, { to: 'expired', kind: 'expired' });
   await freePegs(ctx.tx, stay.id);
+  await closePages(ctx, stay.id);
 }
 
 /** Ends one hold if it has run out by now; answers whether it did. */
@@ -64,4 +66,5 @@ export async function letGoOfHold(ctx: Ctx, stay: Stay): Promise<void> {
     });
   await step(ctx, stay, { to: 'cancelled_by_angler', kind: 'hold-let-go' });
   await freePegs(ctx.tx, stay.id);
+  await closePages(ctx, stay.id);
 }

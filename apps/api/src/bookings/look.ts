@@ -7,9 +7,10 @@ import { ctxOf } from '../http/ctx-of';
 import { outOfDeadlock } from '../http/deadlock';
 import type { Server } from '../http/server';
 import { ofIntent, ofSession, type Heard } from '../payments/heard';
+import { isOpen, openPayments } from '../payments/open-payments';
 import { refusalOf, type Provider } from '../payments/provider';
 import { hear, keptEvents } from './hear';
-import { isOpen, openPayments, pageOf } from './payment-page';
+import { pageOf } from './payment-page';
 import { findStay, ranOut } from './stay';
 
 /** Does one deed by itself, in a transaction of its own. */
@@ -105,10 +106,4 @@ const heardEnd = (server: Server, payment: Payment, type: string): Promise<void>
 export async function closePage(server: Server, provider: Provider, paymentId: string): Promise<void> {
   const payment = await server.source.manager.findOneBy(Payment, { id: paymentId });
   if (payment && isOpen(payment)) await lookAtPayment(server, provider, payment);
-}
-
-/** Has the pages of a booking closed once this deed is committed. */
-export async function closePages({ tx, jobs }: Ctx, bookingId: string): Promise<void> {
-  for (const { id } of await openPayments(tx, { bookingId, most: 10 }))
-    await jobs.send(tx, 'payment.close', { paymentId: id });
 }

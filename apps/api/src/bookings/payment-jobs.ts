@@ -7,7 +7,7 @@ import { heardFrom } from '../payments/heard';
 import { providerOf, type Provider } from '../payments/provider';
 import { hear } from './hear';
 import { byItself, closePage, lookAtPayment } from './look';
-import { openPayments } from './payment-page';
+import { openPayments } from '../payments/open-payments';
 
 const CloseJob = z.strictObject({ paymentId: z.uuid() });
 

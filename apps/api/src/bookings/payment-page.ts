@@ -3,10 +3,10 @@ import { sumPence } from '@mereward/shared/money/money';
 import { Problem } from '@mereward/shared/problems/problem';
 import { randomUUID } from 'node:crypto';
 import type Stripe from 'stripe';
-import type { EntityManager } from 'typeorm';
 import { accountOf, type Ctx } from '../ctx';
 import { outOfDeadlock } from '../http/deadlock';
 import type { Server } from '../http/server';
+import { isOpen } from '../payments/open-payments';
 import { refusalOf, type Provider } from '../payments/provider';
 import { allow, lockBooking } from './access';
 import { refuseIncomplete, refuseOver } from './fill-in';
@@ -57,9 +57,6 @@ export async function openPayment(ctx: Ctx, bookingId: string): Promise<Payment>
   if (stay.status === 'hold') await step(ctx, stay, { to: 'pending_payment', kind: 'paying' });
   return payment;
 }
-
-export const isOpen = ({ method, status }: Payment): boolean =>
-  method === 'card_online' && status !== 'captured' && status !== 'cancelled';
 
 /** The provider closes a page by itself after an hour; we close it when the hold runs out. */
 const PAGE_OPEN_S = 60 * 60;
@@ -123,17 +120,3 @@ async function orInWords<T>(asked: Promise<T>): Promise<T> {
     });
   }
 }
-
-/** Payments of cards that have not ended, of one booking or of all; those longest not looked at first. */
-export const openPayments = (
-  tx: EntityManager,
-  { bookingId, most }: { bookingId: string | null; most: number },
-): Promise<Payment[]> =>
-  tx
-    .createQueryBuilder(Payment, 'p')
-    .where(`p.method = 'card_online' AND p.status NOT IN ('captured', 'cancelled')`)
-    .andWhere(bookingId === null ? 'TRUE' : 'p.bookingId = :bookingId', { bookingId })
-    .orderBy('p.lookedAt', 'ASC', 'NULLS FIRST')
-    .addOrderBy('p.madeAt')
-    .limit(most)
-    .getMany();

@@ -7,7 +7,7 @@ import { currencyOf } from '../payments/currency';
 import { MONEY_HANDLERS } from '../payments/policy';
 import { mustRepeat } from '../repeat';
 import { allow, lockBooking } from './access';
-import { closePages } from './look';
+import { closePages } from '../payments/open-payments';
 import { paid } from './paid';
 import { ranOut } from './stay';
 
