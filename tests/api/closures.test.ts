@@ -144,7 +144,7 @@ describe('closing water', () => {
     const list = ClosureList.parse((await aStranger(server).get(path())).body);
     expect(list.closures).toMatchObject([{ id, reasonWords: 'Low oxygen', tally: null, lift: null }]);
     const { notices } = NoticeList.parse((await aStranger(server).get(`/fisheries/${here.id}/notices`)).body);
-    expect(notices).toMatchObject([{ severity: 'closed', details: { title: 'Closed: low oxygen' } }]);
+    expect(notices).toMatchObject([{ severity: 'closed', details: { title: 'Ostle Pool: low oxygen' } }]);
   });
 });
 

@@ -50,7 +50,7 @@ test('Idris closes Far Ostle, Sofia settles her ticket from her letter without s
 
   const stranger = await pageOf();
   await stranger.goto('/water');
-  await expect(stranger.getByText('Closed. Closed: flood').first()).toBeVisible();
+  await expect(stranger.getByText('Closed. Far Ostle: flood').first()).toBeVisible();
   await expect(stranger.getByText('The banks are under water. Keep off them.').first()).toBeVisible();
 
   expect((await mine(sofiaAsks))?.status).toBe('choosing');

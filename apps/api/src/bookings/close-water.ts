@@ -1,10 +1,14 @@
 import { Closure as ClosureRow } from '@mereward/db/entities/closures/closure';
 import type { Fishery } from '@mereward/db/entities/fisheries/fishery';
 import { Lake } from '@mereward/db/entities/lakes/lake';
+import { Peg } from '@mereward/db/entities/lakes/peg';
 import { CLOSURE_REASON_WORDS, type Closure } from '@mereward/shared/closures/closure-effect';
 import type { CloseWater, ClosurePreview, PreviewClosure } from '@mereward/shared/closures/deeds-contract';
+import type { ClosureScope } from '@mereward/shared/closures/contract';
+import type { NoticeDetails } from '@mereward/shared/notices/contract';
 import { moneyWords, sumPence } from '@mereward/shared/money/money';
 import { Problem } from '@mereward/shared/problems/problem';
+import { In, type EntityManager } from 'typeorm';
 import { closureOf, rangeOf } from '../closures/closure-times';
 import { CLOSERS } from '../closures/policy';
 import { accountOf, type Ctx } from '../ctx';
@@ -38,7 +42,7 @@ export async function closeWater(ctx: Ctx, fisheryId: string, input: CloseWater)
     fisheryId,
     lakeIds: input.details.scope.kind === 'fishery' ? [] : ground.lakeIds,
     ...{ from: now < closure.from ? now.toISOString() : input.details.from, until: input.details.until },
-    details: noticeWords(closure, input),
+    details: await noticeWords(tx, closure, { ...input, lakeIds: ground.lakeIds }),
   });
   const range = rangeOf(closure.from, closure.until);
   const over = { fisheryId, closure, lakeIds: ground.lakeIds, zone: fishery.zone };
@@ -60,11 +64,35 @@ export async function closeWater(ctx: Ctx, fisheryId: string, input: CloseWater)
   });
 }
 
-const noticeWords = (closure: Closure, { details }: Pick<CloseWater, 'details'>) => ({
-  title: `${closure.scope.kind === 'method' ? METHOD_WORDS[closure.scope.method] : 'Closed'}: ${CLOSURE_REASON_WORDS[closure.reason].toLowerCase()}`,
-  text: details.publicWords,
-  audience: 'public' as const,
-});
+/** “Far Ostle: flood”, “Pegs FO1, FO2: works”, “No keepnets: low oxygen”; a notice says closed by itself. */
+async function noticeWords(
+  tx: EntityManager,
+  closure: Closure,
+  { details, lakeIds }: Pick<CloseWater, 'details'> & { lakeIds: string[] },
+): Promise<NoticeDetails> {
+  const reason = CLOSURE_REASON_WORDS[closure.reason].toLowerCase();
+  const title = `${await whatWords(tx, closure.scope, lakeIds)}: ${reason}`;
+  return { title: title.length > MOST_TITLE ? reason : title, text: details.publicWords, audience: 'public' };
+}
+
+const MOST_TITLE = 120;
+
+async function whatWords(tx: EntityManager, scope: ClosureScope, lakeIds: string[]): Promise<string> {
+  switch (scope.kind) {
+    case 'fishery':
+      return 'The whole fishery';
+    case 'method':
+      return METHOD_WORDS[scope.method];
+    case 'lakes': {
+      const lakes = await tx.find(Lake, { where: { id: In(lakeIds) }, order: { name: 'ASC' } });
+      return lakes.map(({ name }) => name).join(', ');
+    }
+    case 'pegs': {
+      const pegs = await tx.find(Peg, { where: { id: In(scope.pegIds) }, order: { walkingOrder: 'ASC' } });
+      return `${pegs.length === 1 ? 'Peg' : 'Pegs'} ${pegs.map(({ number }) => number).join(', ')}`;
+    }
+  }
+}
 
 const METHOD_WORDS = { keepnets: 'No keepnets', boats: 'No boats', night: 'No night fishing' } as const;
 
