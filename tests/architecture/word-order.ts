@@ -18,7 +18,7 @@ export const downhill: Record<string, string[]> = {
   notices: ['lakes'],
   tickets: ['lakes'],
   payments: ['fisheries'],
-  bookings: ['tickets', 'rules', 'closures', 'notices', 'payments', 'surveys'],
+  bookings: ['tickets', 'rules', 'closures', 'notices', 'payments', 'charts'],
   rounds: ['bookings'],
   works: ['bookings'],
   members: ['bookings'],
