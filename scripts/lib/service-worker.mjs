@@ -5,8 +5,9 @@ const SCRIPTS = '_expo/static/js/web/';
 
 /** Screens that must open where there is no signal, though they were never opened before. @param {string} route */
 const neededOnTheBank = (route) =>
-  /^\.\/(bank\/|water\/|index|emergency|waiting|me\/index|sign-in|\+not-found|_layout)/.test(route) ||
-  route.endsWith('/_layout.tsx');
+  /^\.\/(bank\/|water\/|tickets\/(bookings\/|mine)|index|emergency|waiting|me\/index|sign-in|\+not-found|_layout)/.test(
+    route,
+  ) || route.endsWith('/_layout.tsx');
 
 /** Pictures, and faces of other scripts, are fetched when they are wanted. @param {string} file */
 const ofTheShell = (file) =>

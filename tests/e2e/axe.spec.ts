@@ -6,7 +6,7 @@ import { expect } from './support/site';
 
 /** Who looks at which screens; `undefined` is a stranger. Each screen is in one place at least. */
 const LOOKS: readonly { place: string; who: Somebody | undefined; sees: RegExp }[] = [
-  { place: 'the water', who: undefined, sees: /^\/(water|tickets|emergency)/ },
+  { place: 'the water', who: undefined, sees: /^\/(water|tickets|emergency|choose|t\/)/ },
   {
     place: 'the doors',
     who: undefined,
@@ -17,7 +17,7 @@ const LOOKS: readonly { place: string; who: Somebody | undefined; sees: RegExp }
   {
     place: 'the tickets and the pegs they are written for',
     who: 'priya',
-    sees: /^\/(tickets|me|office\/lakes\/\[lakeId\]\/pegs\/\[pegId\]|water\/pegs)/,
+    sees: /^\/(tickets|t\/|me|office\/lakes\/\[lakeId\]\/pegs\/\[pegId\]|water\/pegs)/,
   },
 ];
 

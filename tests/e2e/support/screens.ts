@@ -11,6 +11,7 @@ import { readdirSync } from 'node:fs';
 import { fileURLToPath } from 'node:url';
 import { Asking } from './people';
 import { expect, type Site } from './site';
+import { bookingOf } from './ticket-sales';
 import { aLogRead, anOpenVisit, castMeanwhile } from './story-water';
 
 const APP = fileURLToPath(new URL('../../../apps/mobile/src/app', import.meta.url));
@@ -38,6 +39,8 @@ const KINDS = [
   'placeId',
   'ticketTypeId',
   'bookingId',
+  'code',
+  'token',
 ] as const;
 export type Ids = Readonly<Record<(typeof KINDS)[number], string>>;
 
@@ -68,6 +71,7 @@ export async function demoIds(site: Site): Promise<Ids> {
     visitId,
     logId,
     pictureId: await aPicture(site, lakeId),
+    token: 'a-letter-of-no-closure', // what its screen says to whoever has a wrong link
     placeId: lake.details.places?.[0]?.id ?? '',
     ...(await aBooking(site, { fisheryId: fisheries[0]?.id ?? '', lakeId, pegId })),
   };
@@ -103,7 +107,8 @@ async function aBooking(site: Site, at: { fisheryId: string; lakeId: string; peg
     vehicle: '',
     note: '',
   });
-  return { ticketTypeId, bookingId };
+  const { code } = await bookingOf(marian, bookingId);
+  return { ticketTypeId, bookingId, code };
 }
 
 /** A picture to trace the lake over, once it is ready. */
