@@ -4,7 +4,13 @@ import { Worker } from 'node:worker_threads';
 
 /** The entries that run beside the server; each is `<name>.worker.ts` in the source and `<name>.worker.js` in the bundle. */
 export type ThreadName =
-  'charts/build' | 'charts/part' | 'charts/papers/paper' | 'files/resize' | 'rules/sheet' | 'surveys/log';
+  | 'bookings/ticket'
+  | 'charts/build'
+  | 'charts/part'
+  | 'charts/papers/paper'
+  | 'files/resize'
+  | 'rules/sheet'
+  | 'surveys/log';
 
 const source = import.meta.url.endsWith('.ts');
 

@@ -12,7 +12,11 @@ export type CapturedMail = {
   text: string;
   html: string;
   links: readonly string[];
+  enclosed: readonly CapturedFile[];
 };
+
+/** A file that came with a mail. */
+export type CapturedFile = { filename: string; contentType: string; content: Buffer };
 
 export type Capture = {
   /** Where to send mail for it to be caught here. */
@@ -82,6 +86,11 @@ function caught(mail: ParsedMail): CapturedMail {
     text,
     html: mail.html || '',
     links: text.match(/https?:\/\/[^\s<>"]+/g) ?? [],
+    enclosed: mail.attachments.map(({ filename, contentType, content }) => ({
+      filename: filename ?? '',
+      contentType,
+      content,
+    })),
   };
 }
 
