@@ -101,9 +101,13 @@ describe('a card', () => {
     ]);
     await server.settle();
     const letters = server.mails.filter(({ to }) => to === sofia.email);
-    expect(letters).toHaveLength(1);
-    expect(letters[0]?.text).toContain('2027-000418');
-    expect(letters[0]?.text).toContain('£4.67');
+    expect(letters.map(({ subject }) => subject)).toEqual([
+      'Ostlemere Waters: the payment did not go through',
+      expect.stringMatching(/^Ostlemere Waters: ticket \w{3} \w{3} is confirmed$/),
+    ]);
+    expect(letters[0]?.text).toContain('declined. Nothing was taken');
+    expect(letters[1]?.text).toContain('2027-000418');
+    expect(letters[1]?.text).toContain('£4.67');
     await expectBooksToAgree();
   });
 

@@ -45,7 +45,9 @@ export type JobName =
   | 'refund.ask'
   | 'payment.close'
   | 'closure.settle'
-  | 'booking.expire';
+  | 'booking.expire'
+  | 'booking.warn'
+  | 'booking.eve';
 
 /** Everything a service gets: never a request. */
 export type Ctx = {

@@ -1,4 +1,6 @@
 import { expireHoldJob } from './bookings/jobs';
+import { tellTomorrowJob, warnHoldJob } from './bookings/tell-ahead';
+import { ticketEnclosed } from './bookings/ticket-files';
 import { settleChoicesJob } from './bookings/settle-choices';
 import { closePageJob } from './bookings/payment-jobs';
 import { buildChartJob } from './charts/jobs';
@@ -13,7 +15,11 @@ import { readLogJob } from './surveys/log-jobs';
 export const handlers: Handlers = {
   'booking.expire': expireHoldJob,
   'closure.settle': settleChoicesJob,
-  'mail.send': sendMail,
+  'booking.warn': warnHoldJob,
+  'booking.eve': tellTomorrowJob,
+  'mail.send': sendMail(({ source, config }, { id }) =>
+    ticketEnclosed({ tx: source.manager, publicUrl: config.publicUrl }, id),
+  ),
   'chart.build': buildChartJob,
   'photo.resize': resizePhoto,
   'log.read': readLogJob,

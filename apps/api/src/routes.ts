@@ -5,6 +5,7 @@ import { lifeRoutes } from './bookings/life-routes';
 import { closureDeedRoutes } from './bookings/closure-routes';
 import { moneyRoutes } from './bookings/money-routes';
 import { bookingRoutes } from './bookings/routes';
+import { ticketPaperRoutes } from './bookings/ticket-routes';
 import { termsRoutes } from './bookings/terms-routes';
 import { disagreementRoutes } from './charts/disagreement-routes';
 import { paperRoutes } from './charts/papers/paper-routes';
@@ -53,6 +54,7 @@ export const routes: readonly Route[] = [
   ...waitingRoutes,
   ...calendarRoutes,
   ...lifeRoutes,
+  ...ticketPaperRoutes,
   ...bankRoutes,
   ...surveyRoutes,
   ...bottomRoutes,

@@ -10,9 +10,11 @@ import { detailsOf, heldContent, insertBooking, place } from './hold';
 import { refuseUnlet } from './let-faults';
 import { letGoOfExpired } from './let-go';
 import { occasionOf } from './occasion';
+import { postConfirmed } from './post-ticket';
 import { TICKET_WRITERS } from './policy';
 import { refuseFaulty, sellFaults } from './sell-faults';
 import { tell } from './stay';
+import { tellTomorrowLater } from './tell-ahead';
 import { termsOf } from './terms';
 
 /**
@@ -54,6 +56,8 @@ export async function bookForSomebody(ctx: Ctx, fisheryId: string, input: BookFo
   }
   await place(ctx, occasion, { bookingId: input.id, state: 'taken' });
   await tell(ctx, input.id, { kind: 'confirmed', by: 'office' });
+  await tellTomorrowLater(ctx, input.id);
+  await postConfirmed(ctx, input.id);
 }
 
 async function isRepeat({ tx, actor }: Ctx, input: BookForSomebody): Promise<boolean> {

@@ -8,6 +8,7 @@ import { queueRefund } from '../payments/refunds';
 import { allow, lockBooking, reachBooking, type Reached } from './access';
 import { letGoOfHold } from './let-go';
 import { freePegs } from './peg-calendar';
+import { postCancelled } from './post-ticket';
 import { noStep, step, type Stay } from './stay';
 import { termsOf } from './terms';
 
@@ -62,16 +63,18 @@ export async function cancelBooking(ctx: Ctx, bookingId: string, asked: CancelAs
     cause === 'angler' && stay.status !== 'checked_in' ? 'cancelled_by_angler' : 'cancelled_by_fishery';
   const told = { cause, refundPence: refund.refundPence };
   await step(ctx, stay, { to, kind: 'cancelled', told });
+  const proposed = await needsManager(ctx, stay, {
+    refundPence: refund.refundPence,
+    byHolder: reached.standing.holder,
+  });
+  await postCancelled(ctx, bookingId, { ...refund, proposed, byHolder: reached.standing.holder });
   await freePegs(ctx.tx, bookingId);
   await queueRefund(ctx, {
     bookingId,
     amountPence: refund.refundPence,
     cause: 'cancellation',
     reason: refund.words,
-    proposed: await needsManager(ctx, stay, {
-      refundPence: refund.refundPence,
-      byHolder: reached.standing.holder,
-    }),
+    proposed,
   });
 }
 

@@ -2,7 +2,9 @@ import { Problem } from '@mereward/shared/problems/problem';
 import type { Ctx } from '../ctx';
 import { allow, lockBooking } from './access';
 import { refuseIncomplete, refuseOver } from './fill-in';
+import { postConfirmed } from './post-ticket';
 import { lockStay, step } from './stay';
+import { tellTomorrowLater } from './tell-ahead';
 import { termsOf } from './terms';
 
 /** Makes a hold a ticket where nothing is to be paid now. Done once, however often it is asked. */
@@ -18,6 +20,7 @@ export async function confirmFree(ctx: Ctx, bookingId: string): Promise<void> {
       detail: 'Pay by card on this page, or ask the fishery’s office.',
     });
   await confirmBooking(ctx, bookingId);
+  await postConfirmed(ctx, bookingId);
 }
 
 /**
@@ -30,5 +33,6 @@ export async function confirmBooking(ctx: Ctx, bookingId: string): Promise<'conf
   if (stay.status !== 'hold' && stay.status !== 'pending_payment') return 'too_late';
   await step(ctx, stay, { to: 'confirmed', kind: 'confirmed', change: { holdUntil: null } });
   await ctx.tx.query(`UPDATE peg_time SET state = 'taken' WHERE booking_id = $1`, [bookingId]);
+  await tellTomorrowLater(ctx, bookingId);
   return 'confirmed';
 }

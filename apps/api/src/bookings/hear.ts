@@ -12,6 +12,7 @@ import { aboutBooking, settleRefund } from '../payments/settle-refund';
 import { insertOnce } from '../repeat';
 import { extendHold } from './let-go';
 import { paid } from './paid';
+import { postPaymentFailed } from './post-ticket';
 import { lockStay, tell } from './stay';
 
 /**
@@ -91,8 +92,10 @@ async function settlePayment(ctx: Ctx, paymentId: string): Promise<void> {
   await tx.update(Payment, { id: paymentId }, change);
   if (state === 'captured') await paid(ctx, stay, { ...payment, ...change });
   else if (state === 'requires_action') await extendHold(ctx, bookingId);
-  else if (state === 'failed' && payment.status !== 'failed')
+  else if (state === 'failed' && payment.status !== 'failed') {
     await tell(ctx, bookingId, { kind: 'payment-failed', paymentId, fault: change.fault });
+    await postPaymentFailed(ctx, bookingId, change.fault);
+  }
 }
 
 const attemptOf = ({ event }: Kept): number => (event && 'attempt' in event ? event.attempt : 0);

@@ -4,6 +4,7 @@ import { STRANGER, type Ctx } from '../ctx';
 import { closePages } from '../payments/open-payments';
 import { freePegs } from './peg-calendar';
 import { lockStay, ranOut, step, type Stay } from './stay';
+import { warnLater } from './tell-ahead';
 import { termsOf } from './terms';
 
 /**
@@ -34,10 +35,11 @@ export async function expireHold(ctx: Ctx, bookingId: string): Promise<boolean> 
   return true;
 }
 
-/** Looks at a hold again once it must have run out. */
-export async function expireLater({ tx, jobs, now }: Ctx, bookingId: string, until: Date): Promise<void> {
-  const afterSeconds = (until.getTime() - now.getTime()) / 1000 + 1;
-  await jobs.later(tx, { name: 'booking.expire', payload: { bookingId }, afterSeconds });
+/** Looks at a hold again once it must have run out; its holder is told shortly before. */
+export async function expireLater(ctx: Ctx, bookingId: string, until: Date): Promise<void> {
+  const afterSeconds = (until.getTime() - ctx.now.getTime()) / 1000 + 1;
+  await ctx.jobs.later(ctx.tx, { name: 'booking.expire', payload: { bookingId }, afterSeconds });
+  await warnLater(ctx, bookingId, until);
 }
 
 /**

@@ -11,8 +11,12 @@ import { letGoOfExpired } from './let-go';
 import { occasionOf, type Wanted } from './occasion';
 import { freePegs } from './peg-calendar';
 import { placePegs } from './place-pegs';
+import { postMoved } from './post-ticket';
 import { refuseFaulty, sellFaults } from './sell-faults';
 import { step, type Stay } from './stay';
+import { tellTomorrowLater } from './tell-ahead';
+import { ticketPaper } from './ticket-paper';
+import { placeWords, zonedWords } from './ticket-words';
 
 /** The same tickets at another time or on other pegs. It keeps its id, its code and its price. */
 export async function moveBooking(ctx: Ctx, bookingId: string, input: MoveBooking): Promise<void> {
@@ -43,7 +47,14 @@ export async function moveBooking(ctx: Ctx, bookingId: string, input: MoveBookin
   const fault = whyNotMove(stay.details.cancellation, cause, { ...moved, now });
   if (fault)
     throw new Problem('conflict', fault, { detail: 'It stays as it is. You may cancel it instead.' });
+  const was = await ticketPaper(ctx, bookingId);
   await moveTo(ctx, stay, { wanted, cause, reason: input.reason });
+  await tellTomorrowLater(ctx, bookingId);
+  await postMoved(ctx, bookingId, {
+    was: `${placeWords(was)}, ${zonedWords(was.from, was.zone)}`,
+    reason: input.reason,
+    byHolder: standing.holder,
+  });
 }
 
 const isThere = ({ lakeId, details }: Stay, { lakeId: to, day, start, tickets }: Wanted): boolean =>

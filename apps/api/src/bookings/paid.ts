@@ -7,7 +7,8 @@ import { queueRefund } from '../payments/refunds';
 import { aboutBooking } from '../payments/settle-refund';
 import { currencyOf } from '../payments/currency';
 import { confirmBooking } from './confirm';
-import { postConfirmed, postTooLate } from './paid-letters';
+import { postTooLate } from './paid-letters';
+import { postConfirmed } from './post-ticket';
 import { saleWords } from './sale-words';
 import { tell, type Stay } from './stay';
 

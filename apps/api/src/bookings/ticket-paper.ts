@@ -17,6 +17,7 @@ export type TicketPaper = Pick<
   | 'fisheryName'
   | 'jurisdiction'
   | 'zone'
+  | 'accountId'
   | 'lakeId'
   | 'lakeName'
   | 'roving'

@@ -15,13 +15,14 @@ export type TicketSheet = {
   parts: readonly { title: string; lines: readonly string[] }[];
 };
 
-const MARGIN = 24;
+const MARGIN = 22;
 const WIDTH = 419.53 - 2 * MARGIN; // A5
 const BOTTOM = 595.28 - MARGIN;
-const QR = 120;
+const QR = 106;
 const QUIET = 12; // four modules of white round the square, by ISO/IEC 18004
 const TERM = 86;
 const INK = '#000000';
+const GAP = -1.4; // the face’s own lines stand wide for so small a sheet
 
 /** Draws a ticket on A5, black on white so that any printer will do; what is longer goes on to another page. */
 export async function drawTicket(sheet: TicketSheet): Promise<Buffer> {
@@ -62,8 +63,8 @@ function drawHead(doc: Doc, { fisheryName, title, code, qr }: TicketSheet): void
 }
 
 function drawNotYet(doc: Doc, lines: readonly string[]): void {
-  const words = `Still to do: ${lines.join(' ')}`;
-  doc.font('bold').fontSize(10);
+  const words = ['Still to do', ...lines].join('\n');
+  doc.font('bold').fontSize(10).lineGap(GAP);
   const height = doc.heightOfString(words, { width: WIDTH - 12 }) + 10;
   doc.lineWidth(1.2).strokeColor(INK).rect(MARGIN, doc.y, WIDTH, height).stroke();
   const top = doc.y;
@@ -78,7 +79,7 @@ function makeRoom(doc: Doc, height: number): void {
 }
 
 function drawFact(doc: Doc, [what, is]: Fact): void {
-  doc.font('regular').fontSize(10);
+  doc.font('regular').fontSize(10).lineGap(GAP);
   const width = WIDTH - TERM;
   const height = doc.heightOfString(is, { width });
   makeRoom(doc, height + 4);
@@ -91,7 +92,7 @@ function drawFact(doc: Doc, [what, is]: Fact): void {
 
 function drawPart(doc: Doc, { title, lines }: TicketSheet['parts'][number]): void {
   makeRoom(doc, 40);
-  doc.moveDown(0.4).font('bold').fontSize(10).text(title, MARGIN, doc.y, { width: WIDTH });
+  doc.moveDown(0.3).font('bold').fontSize(9.5).lineGap(GAP).text(title, MARGIN, doc.y, { width: WIDTH });
   doc.font('regular').fontSize(8.5);
   for (const line of lines) {
     makeRoom(doc, doc.heightOfString(line, { width: WIDTH }));

@@ -63,7 +63,7 @@ export function priceLines(paper: TicketPaper): string[] {
   const paid = paidPence > 0 ? [`Paid: ${money(paidPence)}`] : [];
   const open = due > 0 ? [`Still to be paid: ${money(due)}`] : [];
   const numbers = receipts.length > 0 ? [`Receipt: ${receipts.join(', ')}`] : [];
-  return [...lines, `Altogether: ${money(grossPence)}`, ...paid, ...open, ...numbers];
+  return [...lines, [`Altogether: ${money(grossPence)}`, ...paid, ...open, ...numbers].join('. ')];
 }
 
 const VAT_WORDS = { zero: ', VAT at 0 %', exempt: ', exempt from VAT', outside_scope: '' } as const;
@@ -75,7 +75,6 @@ export const cancellationLines = ({ details, from, soldAt, zone }: TicketPaper):
 /** Where to come in. The gate’s code is no part of a letter. */
 export const gateFacts = ({ fishery, fisheryName }: TicketPaper): Fact[] => [
   ...fact('Address', [fisheryName, fishery.address, fishery.postcode].filter(Boolean).join(', ')),
-  ...fact('Grid reference', fishery.gridReference),
   ...fact('Open', fishery.opening),
   ...fact('Office', fishery.officeContact),
 ];

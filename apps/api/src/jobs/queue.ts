@@ -14,6 +14,8 @@ const QUEUES: Record<JobName, { retryLimit: number; retryDelay: number; expireIn
   'refund.ask': { retryLimit: 13, retryDelay: 5, expireInSeconds: 120 },
   'payment.close': { retryLimit: 11, retryDelay: 5, expireInSeconds: 120 },
   'closure.settle': { retryLimit: 11, retryDelay: 5, expireInSeconds: 120 },
+  'booking.warn': { retryLimit: 5, retryDelay: 5, expireInSeconds: 60 },
+  'booking.eve': { retryLimit: 8, retryDelay: 5, expireInSeconds: 60 },
   'booking.expire': { retryLimit: 5, retryDelay: 5, expireInSeconds: 60 },
 };
 

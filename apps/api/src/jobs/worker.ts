@@ -25,6 +25,8 @@ const NAMES: readonly JobName[] = [
   'refund.ask',
   'payment.close',
   'booking.expire',
+  'booking.warn',
+  'booking.eve',
   'closure.settle',
 ];
 

@@ -2,7 +2,7 @@ import type { Refund } from '@mereward/db/entities/payments/refund';
 import { moneyWords } from '@mereward/shared/money/money';
 import type { Ctx } from '../ctx';
 import { letter } from '../mail/letter';
-import { post } from '../mail/send';
+import { postByDay } from '../mail/send';
 import { currencyOf } from './currency';
 
 type Reader = {
@@ -11,6 +11,7 @@ type Reader = {
   code: string;
   fishery: string;
   contact: string;
+  zone: string;
   currency: string;
 };
 
@@ -19,7 +20,7 @@ export async function postRefundLetter(ctx: Ctx, refund: Refund, end: 'done' | '
   const { tx, publicUrl } = ctx;
   const rows: Reader[] = await tx.query(
     `SELECT b.holder_name AS name, b.holder_email AS email, b.code, f.name AS fishery,
-            f.details->>'officeContact' AS contact, b.currency
+            f.details->>'officeContact' AS contact, f.zone, b.currency
        FROM booking b JOIN fishery f ON f.id = b.fishery_id WHERE b.id = $1`,
     [refund.bookingId],
   );
@@ -45,5 +46,5 @@ export async function postRefundLetter(ctx: Ctx, refund: Refund, end: 'done' | '
           ],
         };
   const link = { label: 'See the booking', url: `${publicUrl}/tickets/bookings/${refund.bookingId}` };
-  await post(ctx, letter(reader.email, { ...words, link }));
+  await postByDay(ctx, letter(reader.email, { ...words, link }), reader.zone);
 }
