@@ -117,9 +117,11 @@ function Board({ lakes }: { lakes: Lakes }) {
             {Object.values(SPAN_LOOKS).map((look) => (
               <StatusShape key={look.word} {...look} size="small" />
             ))}
-            <Text size="small" tone="inkSoft">
-              Shaded: sunset to sunrise.
-            </Text>
+            {wide ? (
+              <Text size="small" tone="inkSoft">
+                Shaded: sunset to sunrise.
+              </Text>
+            ) : null}
             <Age readAtMs={dataUpdatedAt} reading={isFetching} failed={error !== null} />
           </View>
           <Laid board={data} cells={cells} nowMs={nowMs} choice={choice} onChoose={setChoice} />
