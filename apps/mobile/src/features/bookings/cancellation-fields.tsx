@@ -72,7 +72,7 @@ export function CancellationFields() {
           <Button
             label="Take away"
             kind="quiet"
-            spoken={`Take step ${String(at + 1)} away`}
+            spoken={`Take away step ${String(at + 1)}`}
             onPress={() => remove(at)}
           />
         </View>

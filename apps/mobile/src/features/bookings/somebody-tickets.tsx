@@ -121,7 +121,7 @@ function Ticket({ at, kinds, free, onRemove }: TicketProps) {
           <Button
             label="Take this ticket away"
             kind="quiet"
-            spoken={`Take ticket ${String(at + 1)} away`}
+            spoken={`Take this ticket away: ${String(at + 1)}`}
             onPress={onRemove}
           />
         </View>

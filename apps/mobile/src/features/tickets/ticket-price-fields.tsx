@@ -95,7 +95,7 @@ function Price({ at, onRemove }: { at: number; onRemove?: () => void }) {
           <Button
             label="Take this price away"
             kind="quiet"
-            spoken={`Take price ${String(at + 1)} away`}
+            spoken={`Take this price away: ${String(at + 1)}`}
             onPress={onRemove}
           />
         </View>
