@@ -95,7 +95,7 @@ test('a mother books for her son: a junior’s ticket asks for his birth, a guar
   await page.goto(
     `/tickets?day=${sales.day}&kind=${sales.kindIds.junior}&peg=${sales.pegIds.get('SC2') ?? ''}`,
   );
-  await expect(page.getByText('£6.00').first()).toBeVisible();
+  await expect(page.getByRole('list', { name: 'Price' })).toContainText('£6.00');
   await page.getByRole('button', { name: 'Hold peg SC2' }).click();
   await readRules(page);
   const form = page.getByRole('form', { name: 'Your booking' });

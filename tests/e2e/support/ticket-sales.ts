@@ -43,7 +43,7 @@ export async function sellTickets(site: Site): Promise<Sales> {
 
 /** The address of the search for 24 hours from noon, with a peg's sheet open. */
 export const pegAddress = ({ kindIds, pegIds, day }: Sales, number: string): string =>
-  `/tickets?day=${day}&kind=${kindIds.stay24}&start=12%3A00&rods=2&peg=${pegIds.get(number) ?? ''}`;
+  `/tickets?day=${day}&kind=${kindIds.stay24}&start=12.00&rods=2&peg=${pegIds.get(number) ?? ''}`;
 
 /** A peg held by somebody for the day from noon; answers the booking's id. */
 export async function holdFor(who: Asking, sales: Sales, number: string): Promise<string> {

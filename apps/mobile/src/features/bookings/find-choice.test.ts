@@ -44,7 +44,8 @@ test('what an address says wrongly is left out', () => {
 });
 
 test('an address for after the sign-in is one our sign-in lets through', () => {
-  expect(findAddress(choice)).toMatch(/^\/tickets\?[\w\-/?=&%.~]*$/);
+  const once = decodeURIComponent(findAddress(choice)); // the router may decode it once more
+  expect(once).toMatch(/^\/tickets\?[\w\-/?=&%.~]*$/);
   expect(findAddress({ ...choiceOf({}) })).toBe('/tickets');
 });
 

@@ -58,13 +58,16 @@ function read<T>(schema: z.ZodType<T>, value: string | string[] | undefined): T 
   return typeof value === 'string' && value !== '' ? (schema.safeParse(value).data ?? null) : null;
 }
 
+const clockOf = (value: string | string[] | undefined) =>
+  typeof value === 'string' ? value.replace('.', ':') : value;
+
 export function choiceOf(params: Params): FindChoice {
   const text = params['party'];
   return {
     fisheryId: read(z.uuid(), params['fisheryId']),
     day: read(z.iso.date(), params['day']),
     kindId: read(z.uuid(), params['kind']),
-    start: read(Clock, params['start']),
+    start: read(Clock, clockOf(params['start'])),
     rods: read(Count, params['rods']),
     pegId: read(z.uuid(), params['peg']),
     party: typeof text === 'string' ? partyOf(text) : [],
@@ -109,7 +112,7 @@ export function paramsOf(choice: FindChoice): Record<string, string> {
     fisheryId: choice.fisheryId,
     day: choice.day,
     kind: choice.kindId,
-    start: choice.start,
+    start: choice.start?.replace(':', '.') ?? null, // our sign-in passes no colon on
     rods: choice.rods,
     peg: choice.pegId,
     party: partyText(choice.party),
