@@ -108,7 +108,7 @@ export const moneyRoutes: Route[] = [
       const provider = await providerHere(req);
       const body: unknown = req.body;
       const message = Buffer.isBuffer(body)
-        ? readMessage(provider, body, req.get('stripe-signature') ?? '')
+        ? readMessage(provider, { body, signature: req.get('stripe-signature') ?? '' })
         : null;
       if (!message)
         throw new Problem('invalid', 'This message is not signed as the card provider signs', {

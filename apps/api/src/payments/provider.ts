@@ -50,14 +50,15 @@ export function refusalOf(error: unknown): { code: string; words: string } | nul
   return parsed.success ? { code: parsed.data.code ?? '', words: parsed.data.message } : null;
 }
 
+type Sent = { body: Buffer; signature: string; receivedAtMs?: number };
+
 /** A message of the provider, once its signature is found good and not older than five minutes; null otherwise. */
 export function readMessage(
   { stripe, webhookSecret }: Provider,
-  body: Buffer,
-  signature: string,
+  { body, signature, receivedAtMs }: Sent,
 ): Stripe.Event | null {
   try {
-    return stripe.webhooks.constructEvent(body, signature, webhookSecret);
+    return stripe.webhooks.constructEvent(body, signature, webhookSecret, undefined, undefined, receivedAtMs);
   } catch {
     return null;
   }
