@@ -123,6 +123,24 @@ test('one report waits and one counts in the spring chart; a log was taken in wi
   expect(told?.found).toBeGreaterThan(150);
 });
 
+test('a year of tickets agrees with its money: takings, receipts and ledger', async () => {
+  const [told] = await rows<Record<string, number>>(
+    databases[0],
+    `SELECT (SELECT count(*) FROM booking)::int AS tickets,
+            (SELECT count(*) FROM booking WHERE lower(during) > '2026-12-01T12:00Z')::int AS ahead,
+            (SELECT sum(amount_pence) FROM payment WHERE status = 'captured')::int
+              - (SELECT coalesce(sum(amount_pence), 0) FROM refund)::int AS kept,
+            (SELECT sum(CASE kind WHEN 'receipt' THEN 1 ELSE -1 END * (told->>'grossPence')::int) FROM receipt)::int AS receipted,
+            (SELECT -sum(amount_pence) FROM ledger_posting WHERE account IN ('ticket_sales', 'vat_owed'))::int AS sold,
+            (SELECT sum(amount_pence) FROM ledger_posting)::int AS balance,
+            (SELECT count(*) FROM (SELECT year, max(number) - count(*) AS gap FROM receipt GROUP BY year) y WHERE gap <> 0)::int AS gaps,
+            (SELECT count(*) FROM rule_sheet WHERE status = 'published')::int AS sheets`,
+  );
+  expect(told?.tickets).toBeGreaterThan(700);
+  expect(told?.ahead).toBeGreaterThan(10);
+  expect(told).toMatchObject({ receipted: told?.kept, sold: told?.kept, balance: 0, gaps: 0, sheets: 2 });
+});
+
 test('two demos of one day are alike to the byte', async () => {
   const sql = `SELECT md5(string_agg(md5(c.depth) || md5(c.sigma) || md5(c.substrate) || md5(c.built::text), '' ORDER BY c.id)) AS sum,
                       (SELECT md5(string_agg(observation::text || reduced::text, '' ORDER BY id)) FROM survey_cast) AS casts

@@ -29,6 +29,10 @@ const SPRING_VISITS = ['FO 1', 'FO 2', 'FO 3'].map((key) => demoVisitId({ key })
  * Ostle Pool's chart left a draft. What is there already stays.
  */
 export async function seedCharts(source: DataSource, days: DemoDays): Promise<void> {
+  await Promise.all([farOstle(source, days), ostlePool(source, days)]); // two threads build at once
+}
+
+async function farOstle(source: DataSource, days: DemoDays): Promise<void> {
   await seedLog(source, days);
   await published(source, days.farOstleAutumnPublished, {
     id: FAR_OSTLE_AUTUMN_CHART,
@@ -44,13 +48,15 @@ export async function seedCharts(source: DataSource, days: DemoDays): Promise<vo
     visitIds: SPRING_VISITS,
     withSpots: true,
   });
-  await draftOnce(source, new Date(days.ostlePool.getTime() + 2 * DAY_MS), {
+}
+
+const ostlePool = (source: DataSource, days: DemoDays): Promise<void> =>
+  draftOnce(source, new Date(days.ostlePool.getTime() + 2 * DAY_MS), {
     id: OSTLE_POOL_CHART,
     lakeId: OSTLE_POOL_LAKE.id,
     title: 'First look',
     visitIds: [demoVisitId({ key: 'OP 1' })],
   });
-}
 
 /** Drafted and built, then published by two people, once. */
 async function published(source: DataSource, at: Date, draft: Draft): Promise<void> {

@@ -15,6 +15,7 @@ import { makePeg } from '../lakes/pegs';
 import { seedGrabs, seedSpotGrabs, seedLead, seedWeedCut, seedWorks } from './seed-bottom';
 import { seedAreas } from './seed-areas';
 import { seedCharts } from './seed-charts';
+import { seedLetting } from './seed-letting';
 import { seedPhotos } from './seed-photos';
 import { seedSurvey } from './seed-survey';
 import { seedWaiting } from './seed-reports';
@@ -70,6 +71,7 @@ async function fill(source: DataSource, { days, now, files }: Filling): Promise<
     await seedGround(tx, days);
     await seedAreas(demoCtx(tx, IDRIS, made));
     await seedTicket(demoCtx(tx, PRIYA, now));
+    await seedLetting(tx, now);
     if (files !== null) await seedPhotos(demoCtx(tx, JOAN, days.farOstleFirst), files);
   });
 }

@@ -1,12 +1,16 @@
+import { civilDay } from './civil-day';
+
+const DAY_FORMAT = new Intl.DateTimeFormat('en-GB', {
+  weekday: 'short',
+  day: 'numeric',
+  month: 'long',
+  year: 'numeric',
+  timeZone: 'UTC',
+});
+
 /** A civil day, YYYY-MM-DD: "Sat 4 July 2026". It has no zone: it is the same day everywhere. */
 export function dayName(day: string): string {
-  const parts = new Intl.DateTimeFormat('en-GB', {
-    weekday: 'short',
-    day: 'numeric',
-    month: 'long',
-    year: 'numeric',
-    timeZone: 'UTC',
-  }).formatToParts(new Date(`${day}T00:00:00Z`));
+  const parts = DAY_FORMAT.formatToParts(new Date(`${day}T00:00:00Z`));
   const part = (type: string): string => parts.find((one) => one.type === type)?.value ?? '';
   return `${part('weekday')} ${part('day')} ${part('month')} ${part('year')}`;
 }
@@ -25,10 +29,21 @@ export function dayRange(from: string, to: string): string {
 /** An instant's day and clock time in a zone: "Sat 4 July 2026, 07:00". */
 export function dayAndClock(at: string, zone: string): string {
   const instant = new Date(at);
-  const day = new Intl.DateTimeFormat('en-CA', { timeZone: zone }).format(instant);
-  return `${dayName(day)}, ${clockIn(zone).format(instant)}`;
+  return `${dayName(civilDay(instant, zone))}, ${clockIn(zone).format(instant)}`;
 }
 
-/** Writes an instant's clock time in a zone: "07:00". */
-export const clockIn = (zone: string): Intl.DateTimeFormat =>
-  new Intl.DateTimeFormat('en-GB', { hour: '2-digit', minute: '2-digit', hourCycle: 'h23', timeZone: zone });
+const clocks = new Map<string, Intl.DateTimeFormat>();
+
+/** Writes an instant's clock time in a zone: "07:00". Making one is slow, so each zone's is kept. */
+export function clockIn(zone: string): Intl.DateTimeFormat {
+  const known = clocks.get(zone);
+  if (known) return known;
+  const made = new Intl.DateTimeFormat('en-GB', {
+    hour: '2-digit',
+    minute: '2-digit',
+    hourCycle: 'h23',
+    timeZone: zone,
+  });
+  clocks.set(zone, made);
+  return made;
+}
