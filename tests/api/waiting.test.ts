@@ -1,7 +1,7 @@
 import { ctxOf } from '@mereward/api/http/ctx-of';
 import { expireHold } from '@mereward/api/bookings/let-go';
 import { freePegs } from '@mereward/api/bookings/peg-calendar';
-import { WaitingList, WaitingView } from '@mereward/shared/bookings/waiting-contract';
+import { WaitingList, type WaitingView } from '@mereward/shared/bookings/waiting-contract';
 import { TICKET_TEMPLATES } from '@mereward/shared/tickets/ticket-templates';
 import { randomUUID } from 'node:crypto';
 import { afterAll, beforeAll, beforeEach, describe, expect, test } from 'vitest';

@@ -1,4 +1,5 @@
 import { useEffect } from 'react';
+import { boardKeys } from '@/features/bookings/board-api';
 import { bookingKeys } from '@/features/bookings/booking-api';
 import { apiUrl } from '@/lib/api';
 import { watchStream } from '@/lib/event-stream';
@@ -15,7 +16,7 @@ export function useBoardEvents(fisheryId: string): void {
       clearTimeout(timer);
       timer = setTimeout(() => {
         void queryClient.invalidateQueries({ queryKey: bookingKeys.free(fisheryId) });
-        void queryClient.invalidateQueries({ queryKey: ['bookings', 'board'] });
+        void queryClient.invalidateQueries({ queryKey: boardKeys.all });
       }, SETTLE_MS);
     };
     const leave = watchStream(apiUrl(`/fisheries/${fisheryId}/board/events`), {
