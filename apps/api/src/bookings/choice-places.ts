@@ -1,8 +1,9 @@
-import { Lake } from '@mereward/db/entities/lakes/lake';
+import type { Lake } from '@mereward/db/entities/lakes/lake';
 import { Peg } from '@mereward/db/entities/lakes/peg';
 import { TicketType } from '@mereward/db/entities/tickets/ticket-type';
 import type { BookingDetails } from '@mereward/shared/bookings/contract';
 import type { PlaceOffered } from '@mereward/shared/bookings/choosing-contract';
+import { toldLine } from '@mereward/shared/lakes/lake-places';
 import { whyNotLet } from '@mereward/shared/lakes/peg-rules';
 import type { TicketType as TicketTypeDetails } from '@mereward/shared/tickets/contract';
 import { ticketInterval } from '@mereward/shared/tickets/ticket-interval';
@@ -75,10 +76,11 @@ async function pegsFor(tx: EntityManager, { lake, type, was }: Seeking): Promise
   const people = Math.max(1, ...was.map((each) => each.people));
   const rods = Math.max(0, ...was.map((each) => each.rods));
   const had = all.find(({ id }) => was.some(({ pegId }) => pegId === id));
+  const drawn = { places: lake.details.places, origin: originOfLake(lake) };
   const fit = all.filter(
     ({ id, details }) =>
       details.status !== 'closed' &&
-      whyNotLet(details) === null &&
+      whyNotLet({ overheadLine: toldLine(details, drawn) }) === null &&
       details.people >= people &&
       details.rods >= rods &&
       (type === null || type.pegIds === null || type.pegIds.includes(id)),

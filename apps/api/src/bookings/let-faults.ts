@@ -1,11 +1,13 @@
 import type { Lake } from '@mereward/db/entities/lakes/lake';
 import type { Peg } from '@mereward/db/entities/lakes/peg';
 import { affects, mayBookInSpite, CLOSURE_REASON_WORDS } from '@mereward/shared/closures/closure-effect';
+import { toldLine } from '@mereward/shared/lakes/lake-places';
 import { whyNotLet } from '@mereward/shared/lakes/peg-rules';
 import { Problem, type ProblemError } from '@mereward/shared/problems/problem';
 import { civilDay } from '@mereward/shared/time/civil-day';
 import type { Interval } from '@mereward/shared/time/interval';
 import type { Ctx } from '../ctx';
+import { originOfLake } from '../lakes/found';
 import { closuresOver } from './closures-over';
 
 /** Pegs and lake wanted for some hours; a peg is null where one is chosen on arrival. */
@@ -18,9 +20,12 @@ export type PegsAt = {
   pegs: readonly (Peg | null)[]; // one for each ticket
 };
 
-/** What of a peg itself stands against letting it for some hours, in words; null when nothing does. */
-export function pegFault({ number, details }: Peg, hours: Interval, zone: string): string | null {
-  const under = whyNotLet(details);
+type LetThen = Pick<PegsAt, 'lake' | 'hours' | 'zone'>;
+
+/** What of a peg, or of a line drawn near it, stands against letting it for some hours, in words; null when nothing does. */
+export function pegFault({ number, details }: Peg, { lake, hours, zone }: LetThen): string | null {
+  const drawn = { places: lake.details.places, origin: originOfLake(lake) };
+  const under = whyNotLet({ overheadLine: toldLine(details, drawn) });
   if (under) return under;
   const { status, statusUntil, statusReason } = details;
   const shut = status === 'closed' && (statusUntil === null || civilDay(hours.from, zone) <= statusUntil);
@@ -30,7 +35,7 @@ export function pegFault({ number, details }: Peg, hours: Interval, zone: string
 /** Refuses what the pegs themselves, or a closure over them, stand against. Room is the calendar's to say. */
 export async function refuseUnlet(ctx: Ctx, at: PegsAt): Promise<void> {
   const faults = at.pegs.flatMap((peg, index) => {
-    const words = peg && pegFault(peg, at.hours, at.zone);
+    const words = peg && pegFault(peg, at);
     return words ? [{ index, words }] : [];
   });
   refuse(faults, 'Nothing was kept. Choose another peg or another time.');

@@ -130,7 +130,7 @@ const listed = (words: readonly string[]): string =>
 
 /** Pegs of the lake free for the same hours and big enough, the nearest first. */
 async function freeNear({ tx, now }: Ctx, placing: Placing, like: Peg): Promise<Peg[]> {
-  const { lake, hours, zone, turnaroundMinutes, tickets } = placing;
+  const { lake, hours, turnaroundMinutes, tickets } = placing;
   const most = (count: (ticket: BookedTicket) => number): number =>
     Math.max(...tickets.map(({ ticket }) => count(ticket)));
   const ids = await freeIds(tx, { lake, hours, turnaroundMinutes, now });
@@ -143,7 +143,7 @@ async function freeNear({ tx, now }: Ctx, placing: Placing, like: Peg): Promise<
       (peg) =>
         ids.has(peg.id) &&
         !own.has(peg.id) &&
-        pegFault(peg, hours, zone) === null &&
+        pegFault(peg, placing) === null &&
         peg.details.people >= most(({ people }) => people) &&
         peg.details.rods >= most(({ rods }) => rods),
     )

@@ -2,7 +2,7 @@ import { Account } from '@mereward/db/entities/accounts/account';
 import { Fishery } from '@mereward/db/entities/fisheries/fishery';
 import type { Lake } from '@mereward/db/entities/lakes/lake';
 import type { Peg } from '@mereward/db/entities/lakes/peg';
-import { Booking } from '@mereward/db/entities/bookings/booking';
+import type { Booking } from '@mereward/db/entities/bookings/booking';
 import { USUAL_CANCELLATION } from '@mereward/shared/bookings/cancellation';
 import type { BookingDetails, WriteTicket } from '@mereward/shared/bookings/contract';
 import { toldLine } from '@mereward/shared/lakes/lake-places';
