@@ -107,7 +107,7 @@ function LakeSheet({ lake }: { lake: LakeView }) {
           main
         ) : (
           <>
-            {told}
+            <View style={{ paddingHorizontal: space.page, paddingBottom: space.medium }}>{told}</View>
             {main}
           </>
         )
