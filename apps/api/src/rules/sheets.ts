@@ -1,8 +1,8 @@
-import { RuleAcknowledgement } from '@mereward/db/entities/rules/rule-acknowledgement';
+import type { RuleAcknowledgement } from '@mereward/db/entities/rules/rule-acknowledgement';
 import { RuleSheet } from '@mereward/db/entities/rules/rule-sheet';
 import { changesWords } from '@mereward/shared/rules/rule-changes';
 import type { RulesView, SheetList, SheetView } from '@mereward/shared/rules/sheet-contract';
-import { holdsAny, type Actor, type Ctx } from '../ctx';
+import { holdsAny, type Ctx } from '../ctx';
 import { fisheryFound } from '../fisheries/found';
 import { notFound } from '../http/deny';
 import { isMember, isStaff } from '../lakes/policy';
