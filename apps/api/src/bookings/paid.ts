@@ -1,4 +1,4 @@
-import { Payment } from '@mereward/db/entities/payments/payment';
+import type { Payment } from '@mereward/db/entities/payments/payment';
 import { moneyWords, sumPence } from '@mereward/shared/money/money';
 import { saleLines } from '@mereward/shared/payments/line-parts';
 import type { Ctx } from '../ctx';

@@ -15,7 +15,7 @@ export type TicketSheet = {
   parts: readonly { title: string; lines: readonly string[] }[];
 };
 
-const MARGIN = 22;
+const MARGIN = 20;
 const WIDTH = 419.53 - 2 * MARGIN; // A5
 const BOTTOM = 595.28 - MARGIN;
 const QR = 106;
@@ -92,8 +92,8 @@ function drawFact(doc: Doc, [what, is]: Fact): void {
 
 function drawPart(doc: Doc, { title, lines }: TicketSheet['parts'][number]): void {
   makeRoom(doc, 40);
-  doc.moveDown(0.3).font('bold').fontSize(9.5).lineGap(GAP).text(title, MARGIN, doc.y, { width: WIDTH });
-  doc.font('regular').fontSize(8.5);
+  doc.moveDown(0.2).font('bold').fontSize(9.5).lineGap(GAP).text(title, MARGIN, doc.y, { width: WIDTH });
+  doc.font('regular').fontSize(8.2);
   for (const line of lines) {
     makeRoom(doc, doc.heightOfString(line, { width: WIDTH }));
     doc.text(line, MARGIN, doc.y, { width: WIDTH });
