@@ -1,4 +1,4 @@
-import { Payment } from '@mereward/db/entities/payments/payment';
+import type { Payment } from '@mereward/db/entities/payments/payment';
 import { partOfLines, type SaleLine } from '@mereward/shared/payments/line-parts';
 import type { Ctx } from '../ctx';
 import { partsByRate, writeDeed, type About } from './ledger';

@@ -1,4 +1,4 @@
-import express, { type ErrorRequestHandler, type Express, type RequestHandler, type Response } from 'express';
+import express, { type Express, type RequestHandler, type Response } from 'express';
 import { createServer } from 'node:http';
 import type { AddressInfo } from 'node:net';
 import { setTimeout as pause } from 'node:timers/promises';
@@ -101,16 +101,20 @@ function appOf(ground: deeds.Ground, faults: Faults, key: string): Express {
         .status(404)
         .json({ error: { type: 'invalid_request_error', message: 'Unrecognised address' } }),
   );
-  app.use(sayNo);
   return app;
 }
 
-const sayNo: ErrorRequestHandler = (error, _req, res, next) => {
-  if (!(error instanceof deeds.Refusal)) return next(error);
-  res
-    .status(error.status)
-    .json({ error: { type: 'invalid_request_error', code: error.code, message: error.message } });
-};
+/** Answers what a deed comes to, or how the provider says no. */
+function say(res: Response, deed: () => unknown): void {
+  try {
+    res.json(deed());
+  } catch (error) {
+    if (!(error instanceof deeds.Refusal)) throw error;
+    res
+      .status(error.status)
+      .json({ error: { type: 'invalid_request_error', code: error.code, message: error.message } });
+  }
+}
 
 const keyed =
   (key: string): RequestHandler =>
@@ -160,20 +164,21 @@ function api(ground: deeds.Ground): express.Router {
   const to = express.Router();
   const asked = (body: unknown): deeds.Asked =>
     typeof body === 'object' && body !== null ? { ...body } : {};
-  to.post('/checkout/sessions', (req, res) => void res.json(deeds.makeSession(ground, asked(req.body))));
+  to.post('/checkout/sessions', (req, res) => say(res, () => deeds.makeSession(ground, asked(req.body))));
   to.get('/checkout/sessions/:id', (req, res) => {
-    const session = deeds.sessionOf(ground, req.params.id);
-    const intent = session.payment_intent === null ? null : deeds.intentOf(ground, session.payment_intent);
     const expanded = JSON.stringify(req.query.expand ?? '').includes('payment_intent');
-    res.json(expanded ? { ...session, payment_intent: intent } : session);
+    say(res, () => {
+      const session = deeds.sessionOf(ground, req.params.id);
+      if (!expanded || session.payment_intent === null) return session;
+      return { ...session, payment_intent: deeds.intentOf(ground, session.payment_intent) };
+    });
   });
-  to.post(
-    '/checkout/sessions/:id/expire',
-    (req, res) => void res.json(deeds.expireSession(ground, req.params.id)),
+  to.post('/checkout/sessions/:id/expire', (req, res) =>
+    say(res, () => deeds.expireSession(ground, req.params.id)),
   );
-  to.get('/payment_intents/:id', (req, res) => void res.json(deeds.intentOf(ground, req.params.id)));
-  to.post('/refunds', (req, res) => void res.json(deeds.makeRefund(ground, asked(req.body))));
-  to.get('/refunds/:id', (req, res) => void res.json(deeds.refundOf(ground, req.params.id)));
+  to.get('/payment_intents/:id', (req, res) => say(res, () => deeds.intentOf(ground, req.params.id)));
+  to.post('/refunds', (req, res) => say(res, () => deeds.makeRefund(ground, asked(req.body))));
+  to.get('/refunds/:id', (req, res) => say(res, () => deeds.refundOf(ground, req.params.id)));
   to.get('/events', (req, res) => {
     const created = typeof req.query.created === 'object' ? asked(req.query.created) : {};
     const since = Number(created.gte ?? 0);
@@ -194,8 +199,8 @@ function controls(ground: deeds.Ground, faults: Faults): express.Router {
     Object.assign(faults, wish.data);
     res.json(faults);
   });
-  to.post('/refunds/:id/return', (req, res) => void res.json(deeds.returnRefund(ground, req.params.id)));
-  to.post('/disputes', (req, res) => void res.json(deeds.tellDispute(ground, { ...req.body })));
+  to.post('/refunds/:id/return', (req, res) => say(res, () => deeds.returnRefund(ground, req.params.id)));
+  to.post('/disputes', (req, res) => say(res, () => deeds.tellDispute(ground, { ...req.body })));
   return to;
 }
 

@@ -4,8 +4,8 @@ import { z } from 'zod';
 import { typedPence, typedPounds } from '@/lib/typed-money';
 import { typedNumber } from '@/lib/typed-schemas';
 
-const whole = (what: string, min: number, max: number, unit?: string) =>
-  typedNumber({ what, min, max, ...(unit === undefined ? {} : { unit }) }).pipe(z.int('A whole number.'));
+type Whole = { min: number; max: number; unit?: string };
+const whole = (what: string, range: Whole) => typedNumber({ what, ...range }).pipe(z.int('A whole number.'));
 
 const HOURS_OF = { hours: 1, days: 24 } as const;
 const MOST_NOTICE_HOURS = 8760;
@@ -35,14 +35,14 @@ export const TermsDraft = z
   .object({
     cancellation: z.object({
       tiers: z.array(TypedTier).max(8),
-      mostMoves: whole('Moves', 0, 20),
+      mostMoves: whole('Moves', { min: 0, max: 20 }),
       banRefundsUnused: z.boolean(),
-      coolingOffDays: whole('Days', 0, 60),
+      coolingOffDays: whole('Days', { min: 0, max: 60 }),
     }),
-    holdMinutes: whole('The hold', 5, 30, 'minutes'),
-    challengeMinutes: whole('The hold', 5, 60, 'minutes'),
-    noShowHours: whole('The wait', 1, 48, 'hours'),
-    claimMinutes: whole('The offer', 10, 240, 'minutes'),
+    holdMinutes: whole('The hold', { min: 5, max: 30, unit: 'minutes' }),
+    challengeMinutes: whole('The hold', { min: 5, max: 60, unit: 'minutes' }),
+    noShowHours: whole('The wait', { min: 1, max: 48, unit: 'hours' }),
+    claimMinutes: whole('The offer', { min: 10, max: 240, unit: 'minutes' }),
     officeRefund: typedPence('The limit'),
     rulesMode: LettingTerms.shape.rulesMode,
     juniorNights: z.boolean(),
