@@ -1,3 +1,4 @@
+import { BoardView, FreePegs } from '@mereward/shared/bookings/availability-contract';
 import { BookingView } from '@mereward/shared/bookings/contract';
 import { ProblemBody } from '@mereward/shared/problems/problem';
 import { TICKET_TEMPLATES } from '@mereward/shared/tickets/ticket-templates';
@@ -159,4 +160,12 @@ test('a peg by a line drawn on the lake is not let, whatever its own sheet says'
     kind: 'conflict',
     title: expect.stringContaining('no assessment is on file'),
   });
+  const noAssessment = expect.stringContaining('no assessment is on file');
+  const free = FreePegs.parse((await colin.get(`/fisheries/${lake.fisheryId}/free?day=2027-07-18`)).body);
+  expect(free.pegs.find(({ pegId }) => pegId === peg.id)).toMatchObject({
+    state: 'closed',
+    whyNot: noAssessment,
+  });
+  const board = BoardView.parse((await colin.get(`/lakes/${lake.id}/board?from=2027-07-18&days=1`)).body);
+  expect(board.pegs.find(({ pegId }) => pegId === peg.id)?.shut).toEqual(noAssessment);
 });

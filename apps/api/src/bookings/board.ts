@@ -1,12 +1,13 @@
 import type { BoardAsked, BoardPeg, BoardView } from '@mereward/shared/bookings/availability-contract';
 import type { PegDetails } from '@mereward/shared/lakes/contract';
+import { toldLine, type Drawn } from '@mereward/shared/lakes/lake-places';
 import { whyNotLet } from '@mereward/shared/lakes/peg-rules';
 import { civilDay } from '@mereward/shared/time/civil-day';
 import { addDays, startOfDay } from '@mereward/shared/time/zoned';
 import type { EntityManager } from 'typeorm';
 import { holdsAny, type Actor, type Ctx } from '../ctx';
 import { notFound } from '../http/deny';
-import { CLOSED_SPANS, OPEN_SPANS } from './peg-spans';
+import { DRAWN, CLOSED_SPANS, OPEN_SPANS } from './peg-spans';
 import { BOARD_READERS, PEG_BLOCKERS, TICKET_CHECKERS, TICKET_WRITERS } from './policy';
 
 const time = (of: string): string => `to_char((${of}) AT TIME ZONE 'UTC', 'YYYY-MM-DD"T"HH24:MI:SS.MS"Z"')`;
@@ -32,8 +33,9 @@ const AROUND = `
 export const BOARD_PEGS = `
   SELECT p.id, p.number, p.details->>'name' AS name, p.details->'overheadLine' AS "overheadLine",
          p.details->>'letting' AS letting, p.details->>'status' AS status,
-         p.details->>'statusUntil' AS "statusUntil", p.details->>'statusReason' AS "statusReason", spans.list AS spans
-    FROM peg p
+         p.details->>'statusUntil' AS "statusUntil", p.details->>'statusReason' AS "statusReason", spans.list AS spans,
+         p.details->'position' AS position, p.details->'origin' AS origin, ${DRAWN}
+    FROM peg p JOIN lake l ON l.id = p.lake_id
    CROSS JOIN LATERAL (SELECT coalesce(json_agg(s.span ORDER BY s.start)::text, '[]') AS list FROM (
      SELECT lower(t.during) AS start, ${SPAN} AS span FROM peg_time t ${AROUND} WHERE t.peg_id = p.id AND ${OPEN_SPANS}
      UNION ALL
@@ -50,10 +52,14 @@ const CHOOSING = `
 const LAKE = `SELECT l.id, l.name, f.id AS "fisheryId", f.zone FROM lake l JOIN fishery f ON f.id = l.fishery_id WHERE l.id = $1`;
 
 type LakeRow = { id: string; name: string; fisheryId: string; zone: string };
-type PegRow = Pick<PegDetails, 'name' | 'overheadLine' | 'status' | 'statusUntil' | 'statusReason'> & {
+type PegRow = Pick<
+  PegDetails,
+  'name' | 'overheadLine' | 'position' | 'origin' | 'status' | 'statusUntil' | 'statusReason'
+> & {
   id: string;
   number: string;
   letting: string | null;
+  drawn: Drawn;
   spans: string;
 };
 
@@ -98,7 +104,7 @@ function pegText(row: PegRow): string {
     pegId: row.id,
     number: row.number,
     name: row.name,
-    shut: whyNotLet(row) ?? closed,
+    shut: whyNotLet({ overheadLine: toldLine(row, row.drawn) }) ?? closed,
     shared: row.letting === 'by_place',
   };
   return withTexts(peg, { spans: row.spans });

@@ -1,4 +1,5 @@
 import type { PegSpan } from '@mereward/shared/bookings/peg-standing';
+import { toldLine, type Drawn } from '@mereward/shared/lakes/lake-places';
 import type { PegDetails } from '@mereward/shared/lakes/contract';
 import type { EntityManager } from 'typeorm';
 
@@ -17,8 +18,12 @@ export const CLOSED_SPANS = `t.state = 'closed' AND lower(t.during) < $3 AND coa
 const SPAN = `extract(epoch FROM lower(t.during))::float8 AS "fromS", extract(epoch FROM upper(t.during))::float8 AS "untilS",
   extract(epoch FROM t.turnaround)::float8 AS "turnS", t.state, t.people, t.rods`;
 
+/** The lake’s drawing as far as a line drawn near a peg stands against letting it. */
+export const DRAWN = `json_build_object('places', coalesce(l.details->'places', '[]'), 'origin', json_build_array(l.origin_lon, l.origin_lat)) AS drawn`;
+
 const PEGS = `
-  SELECT p.id, p.lake_id AS "lakeId", p.number, p.details, spans.list AS spans
+  SELECT p.id, p.lake_id AS "lakeId", p.number, p.details, spans.list AS spans,
+         ${DRAWN}
     FROM peg p JOIN lake l ON l.id = p.lake_id
    CROSS JOIN LATERAL (SELECT coalesce(json_agg(s), '[]') AS list FROM (
      SELECT ${SPAN}, '' AS words FROM peg_time t WHERE t.peg_id = p.id AND ${OPEN_SPANS}
@@ -56,6 +61,7 @@ const spanOf = ({ fromS, untilS, turnS, ...row }: Row): PegSpan => {
   };
 };
 
+/** A peg as it may be let: its overhead line is the worse of its own sheet’s and the lake’s drawing’s. */
 export type PegOfLake = {
   id: string;
   lakeId: string;
@@ -69,8 +75,15 @@ const values = ({ lakeIds, from, until, now }: Stretch) => [lakeIds, from, until
 
 /** Every peg of some lakes with what takes it in a stretch, in walking order, lake by lake. */
 export async function pegsWithSpans(tx: EntityManager, stretch: Stretch): Promise<PegOfLake[]> {
-  const rows: (Omit<PegOfLake, 'spans'> & { spans: Row[] })[] = await tx.query(PEGS, values(stretch));
-  return rows.map((row) => ({ ...row, spans: row.spans.map(spanOf) }));
+  const rows: (Omit<PegOfLake, 'spans'> & { spans: Row[]; drawn: Drawn })[] = await tx.query(
+    PEGS,
+    values(stretch),
+  );
+  return rows.map(({ drawn, details, ...row }) => ({
+    ...row,
+    details: { ...details, overheadLine: toldLine(details, drawn) },
+    spans: row.spans.map(spanOf),
+  }));
 }
 
 /** Whom some lakes have to find room for in a stretch, for those with a limit of people or rods. */

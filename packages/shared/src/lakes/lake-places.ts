@@ -60,7 +60,8 @@ export const placesInPlane = (places: readonly LakePlace[], origin: LonLat): Sho
     }),
   }));
 
-type Drawn = { places?: readonly LakePlace[] | undefined; origin: LonLat };
+/** What a lake’s drawing shows, and the origin of its plane. */
+export type Drawn = { places?: readonly LakePlace[] | undefined; origin: LonLat };
 type PegAt = { position: LonLat; origin: LonLat };
 
 /**
