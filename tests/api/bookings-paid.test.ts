@@ -3,6 +3,7 @@ import { signatureOf } from '@mereward/api/demo/card-provider/deliveries';
 import { Payment } from '@mereward/db/entities/payments/payment';
 import { BookingView } from '@mereward/shared/bookings/contract';
 import { ProblemBody } from '@mereward/shared/problems/problem';
+import { setTimeout as pause } from 'node:timers/promises';
 import { afterAll, afterEach, beforeAll, describe, expect, test } from 'vitest';
 import { aCardGround, answerBank, CARD_SECRET, tryCard, type CardGround } from '../support/cards';
 import { aPerson, aStranger, type Person } from '../support/people';
@@ -164,6 +165,7 @@ describe('a card', () => {
     await tryCard(page, 'insufficient');
     await ground.quiet();
     expect((await seen(sofia, held.id)).payments[0]?.fault).toContain('not enough money');
+    await pause(1100); // tries are told apart by the second of their message, as a person makes them
     await tryCard(page, 'challenge');
     await answerBank(page, false);
     await ground.quiet();

@@ -13,7 +13,7 @@ import { allowOnly, notFound } from '../http/deny';
 import { refundView } from '../payments/money-of';
 import { mayDecide, mayGiveAlone, MONEY_HANDLERS, REFUND_PROPOSERS } from '../payments/policy';
 import { putInPlace, queueRefund, setOff } from '../payments/refunds';
-import { askedByHand, settleRefund } from '../payments/settle-refund';
+import { askedByHand, holdBooking, settleRefund } from '../payments/settle-refund';
 import { allow, lockBooking } from './access';
 import { termsOf } from './terms';
 
@@ -48,6 +48,7 @@ async function reachRefund(ctx: Ctx, refundId: string): Promise<Reached> {
   const found = await tx.findOneBy(Refund, { id: refundId });
   if (!found) throw notFound('refund');
   allowOnly(actor, { fisheryId: found.fisheryId, what: 'refund' }, MONEY_HANDLERS);
+  await holdBooking(tx, found.bookingId);
   const lock = { mode: 'pessimistic_write' } as const;
   const payment = await tx.findOneOrFail(Payment, { where: { id: found.paymentId }, lock });
   const refund = await tx.findOneOrFail(Refund, { where: { id: refundId }, lock });

@@ -44,8 +44,8 @@ export async function lookAtPayment(server: Server, provider: Provider, payment:
   const session = await askedSession(provider, providerSession, !waits);
   const told = { ...ofSession(session), ...(await newsOf(source.manager, payment.id, session)) };
   await byItself(server, async (ctx) => {
+    if (told.event) await hear(ctx, lookedUp(payment, told, ctx.now)); // locks the booking before its payment
     await ctx.tx.update(Payment, { id: payment.id }, { lookedAt: ctx.now });
-    if (told.event) await hear(ctx, lookedUp(payment, told, ctx.now));
   });
 }
 

@@ -7,7 +7,7 @@ import type { EntityManager } from 'typeorm';
 import { z } from 'zod';
 import { accountOrNull, type Ctx } from '../ctx';
 import { currencyOf } from './currency';
-import { askedByHand, firstOf } from './settle-refund';
+import { askedByHand, firstOf, holdBooking } from './settle-refund';
 
 /** A refund asked of the provider, outside any transaction. */
 export const AskRefundJob = z.strictObject({ refundId: z.uuid() });
@@ -29,6 +29,7 @@ export type RefundWish = {
 export async function queueRefund(ctx: Ctx, wish: RefundWish): Promise<Refund[]> {
   const { tx } = ctx;
   if (wish.amountPence === 0) return [];
+  await holdBooking(tx, wish.bookingId);
   const payments = await lockPayments(tx, wish);
   const { bookingId, cause, paymentId } = wish;
   const before = await tx.findBy(Refund, {

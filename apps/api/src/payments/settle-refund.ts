@@ -30,6 +30,7 @@ export async function settleRefund(ctx: Ctx, refundId: string, outcome: RefundOu
   const { tx } = ctx;
   const found = await tx.findOneBy(Refund, { id: refundId });
   if (!found) return;
+  await holdBooking(tx, found.bookingId);
   const payment = await tx.findOneOrFail(Payment, {
     where: { id: found.paymentId },
     lock: { mode: 'pessimistic_write' },
@@ -93,6 +94,14 @@ async function owedAgain(ctx: Ctx, { id, bookingId, amountPence }: Refund, payme
 async function isCredited(tx: EntityManager, refundId: string): Promise<boolean> {
   const rows: unknown[] = await tx.query('SELECT 1 FROM receipt WHERE refund_id = $1', [refundId]);
   return rows.length > 0;
+}
+
+/**
+ * Holds a booking for this deed before its payments and refunds: whoever writes about its money locks in that order,
+ * for each row written refers to the booking, and two orders would wait for each other.
+ */
+export async function holdBooking(tx: EntityManager, bookingId: string): Promise<void> {
+  await tx.query('SELECT 1 FROM booking WHERE id = $1 FOR UPDATE', [bookingId]);
 }
 
 /** What of a booking stands on its postings. */
