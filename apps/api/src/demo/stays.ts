@@ -126,7 +126,7 @@ function stayOn({ lake, peg, types, day, now, random }: Drawn): DemoStay | null 
     holder:
       member && random() < 0.4
         ? COLIN
-        : random() < 0.02
+        : random() < 0.02 && hours.until <= now
           ? SOFIA
           : { id: null, name: `${first} ${last}`, email: null },
     day,
