@@ -90,4 +90,4 @@ test('a server killed while money is told leaves nobody charged without a ticket
   const given = Object.values(ground.provider.kept.refunds).filter(({ amount }) => amount === 1000);
   expect(given).toHaveLength(1);
   expect((await seen(first)).receipts.filter(({ kind }) => kind === 'credit_note')).toHaveLength(1);
-});
+}, 240_000);
