@@ -207,7 +207,7 @@ function paymentRow(stay: DemoStay) {
     currency: type.details.currency,
     status: 'captured',
     provider_session: online ? `demo_session_${id}` : null,
-    provider_intent: online ? `demo_intent_${id}` : null,
+    provider_intent: online ? `pi_past_${id}` : null,
     made_by: online ? holder.id : PRIYA.id,
     made_at: bookedAt,
     taken_at: bookedAt,
