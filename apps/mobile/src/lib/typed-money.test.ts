@@ -1,4 +1,4 @@
-import fc from 'fast-check';
+import { assert, integer, property } from 'fast-check';
 import { expect, test } from 'vitest';
 import { penceTyped, typedPence, typedPounds } from './typed-money';
 
@@ -13,8 +13,8 @@ test('what is no amount is refused, never rounded', () => {
 });
 
 test('what is written is read back', () => {
-  fc.assert(
-    fc.property(fc.integer({ min: 0, max: 1_000_000_000 }), (pence) => {
+  assert(
+    property(integer({ min: 0, max: 1_000_000_000 }), (pence) => {
       expect(penceTyped(typedPounds(pence))).toBe(pence);
     }),
   );
